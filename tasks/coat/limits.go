@@ -1,0 +1,118 @@
+package coat
+
+import (
+	"fmt"
+	"math"
+)
+
+// The usual limits where a paint says nothing.
+const (
+	usualSpread = 3.0  // K above the dew point: FHWA-RD-98-084, ISO 8502-4
+	limitSlack  = 1e-9 // a reading at the limit is within it
+)
+
+// usualWind is the wind in m/s above which a method stops: spray about 15 mph, brush and roller
+// about 10 m/s. From memory: the published guides seen give no number.
+var usualWind = map[string]float64{Brush: 10, Roller: 10, Airless: 6.7, AirSpray: 6.7}
+
+// WindLimit gives the wind in m/s above which the paint may not be applied by a method; 0 for
+// a method that is not known.
+func (p Paint) WindLimit(method string) float64 {
+	m, err := choose("method", method, "", Methods())
+	if err != nil {
+		return 0
+	}
+	for _, k := range sorted(p.WindMax) {
+		if word(k) == m {
+			return p.WindMax[k]
+		}
+	}
+	return usualWind[m]
+}
+
+// MayApply says whether a paint may be applied in the air and on the steel of one moment, and if not
+// gives every reason with both numbers. air and steel are C, rh a share, wind m/s. With an empty
+// method the wind is not judged: that is the question for the hours after application, in which the
+// film must stay above its least temperature and off the dew point. Rain is not judged here.
+//
+// A reading that is not a number closes the hour: what is not known is not open.
+func MayApply(p Paint, air, steel, rh, wind float64, method string) (ok bool, reasons []string) {
+	closed := func(format string, args ...any) { reasons = append(reasons, fmt.Sprintf(format, args...)) }
+	dew := DewPoint(air, rh)
+	for _, v := range []struct {
+		name string
+		bad  bool
+	}{{"air temperature", !(air >= coldestAir && air <= hottest)}, {"steel temperature", !(steel >= coldestAir && steel <= highCelsius)},
+		{"humidity", !(rh > 0 && rh <= 1)}, {"wind", word(method) != "" && !(wind >= 0 && wind < 200)}} {
+		if v.bad {
+			closed("%s is not known", v.name)
+		}
+	}
+	if len(reasons) > 0 {
+		return false, reasons
+	}
+	if short := p.ApplyMin - steel; short > limitSlack {
+		closed("steel %.1f C is below the least %.1f C (%.1f K short)", steel, p.ApplyMin, short)
+	}
+	if short := p.ApplyMin - air; short > limitSlack {
+		closed("air %.1f C is below the least %.1f C (%.1f K short)", air, p.ApplyMin, short)
+	}
+	if over := steel - p.ApplyMax; over > limitSlack {
+		closed("steel %.1f C is above the greatest %.1f C (%.1f K over)", steel, p.ApplyMax, over)
+	}
+	reasons = append(reasons, dampReasons(p, air, steel, rh, dew)...)
+	if word(method) != "" {
+		reasons = append(reasons, windReasons(p, wind, method)...)
+	}
+	return len(reasons) == 0, reasons
+}
+
+// dampReasons judges dew, frost and humidity.
+func dampReasons(p Paint, air, steel, rh, dew float64) (reasons []string) {
+	closed := func(format string, args ...any) { reasons = append(reasons, fmt.Sprintf(format, args...)) }
+	spread, point := p.DewSpread, "dew point"
+	if spread == 0 {
+		spread = usualSpread
+	}
+	if dew < 0 && steel < spread { // frost settles sooner than dew would
+		dew, point = frostPoint(dew), "frost point"
+	}
+	if have := steel - dew; have < spread-limitSlack {
+		if have < 0 {
+			closed("steel %.1f C is below the %s %.1f C: it is wet; %.1f K above are wanted", steel, point, dew, spread)
+		} else {
+			closed("steel %.1f C is only %.1f K above the %s %.1f C; %.1f K are wanted", steel, have, point, dew, spread)
+		}
+	}
+	if p.RHMax > 0 && rh > p.RHMax+limitSlack {
+		closed("humidity %.0f %% is above the greatest %.0f %%", math.Ceil(rh*100-1e-6), p.RHMax*100)
+	}
+	if at := SteelHumidity(air, rh, steel); p.RHMin > 0 && at < p.RHMin-limitSlack {
+		closed("humidity at the steel %.0f %% is below the %.0f %% that this paint cures with (air %.0f %%)", math.Floor(at*100+1e-6), p.RHMin*100, rh*100)
+	}
+	return reasons
+}
+
+func windReasons(p Paint, wind float64, method string) []string {
+	m, err := choose("method", method, "", Methods())
+	if err != nil {
+		return []string{err.Error() + "; write " + oneOf(Methods())}
+	}
+	if most := p.WindLimit(m); wind > most+limitSlack {
+		return []string{fmt.Sprintf("wind %.1f m/s is above the greatest %.1f m/s for %s", wind, most, m)}
+	}
+	return nil
+}
+
+// MayHold says whether prepared steel keeps its grade in this air: at least 3 K above the dew point
+// (the criterion for holding a blast), with an advice where the surface humidity is above the 55 %
+// up to which rust bloom stays slow (NACE 6A192/SSPC-TR 3). air and steel are C, rh a share.
+func MayHold(air, steel, rh float64) (ok bool, reasons []string) {
+	ok, reasons = MayApply(Paint{ApplyMin: coldestAir, ApplyMax: highCelsius}, air, steel, rh, 0, "")
+	if at := SteelHumidity(air, rh, steel); ok && at > slowBloom {
+		reasons = append(reasons, fmt.Sprintf("humidity at the steel is %.0f %%: rust bloom speeds up above %.0f %%, prime soon", at*100, slowBloom*100))
+	}
+	return ok, reasons
+}
+
+const slowBloom = 0.55 // share; NACE 6A192/SSPC-TR 3 gives 40 to 55 %
