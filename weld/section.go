@@ -1,0 +1,216 @@
+package weld
+
+import (
+	"math"
+
+	"sailby/tasks/origin"
+)
+
+const (
+	steelDensity = 7850.0 // kg/m3
+	capWiden     = 3.0    // the cap is this much wider than the groove's opening, mm (house judgement)
+	overLeg      = 1.0    // a fillet's legs are laid this much over the drawing, mm (house judgement)
+)
+
+// Section is the cross-section of a weld: what is laid and what is drawn, in square millimetres,
+// all sides together, without a back run.
+type Section struct {
+	Area, Drawn float64
+	Width       float64 // across the face, mm
+	Height      float64 // throat of a fillet, thickness with caps of a butt, mm
+	Size        float64 // the a or s that waiting times go by: throat, depth or thickness, mm
+	Sides       int     // how many sides are welded: runs are counted for each
+	Why         origin.Figure
+}
+
+// Section gives the cross-section of j in a position. With overweld, fillets are laid 1 mm over
+// the drawn leg and butts get a cap of 1.5 mm unless Cap says otherwise.
+//
+// Errors: a *Error for a missing or impossible size.
+func (j Joint) Section(pos Position, overweld bool) (Section, error) {
+	f, err := j.filled(usualPosition(j.Type, pos), overweld)
+	if err != nil {
+		return Section{}, err
+	}
+	return f.section(usualPosition(j.Type, pos), overweld)
+}
+
+// usualPosition gives the position meant where none is given, and puts fillets into fillet
+// positions: PC is PB for them, PE is PD.
+func usualPosition(t JointType, pos Position) Position {
+	legs := t == Fillet || t == Lap
+	switch {
+	case pos == 0 && legs, legs && pos == PC:
+		return PB
+	case pos == 0:
+		return PA
+	case legs && pos == PE:
+		return PD
+	}
+	return pos
+}
+
+// section wants a filled joint.
+func (j Joint) section(pos Position, overweld bool) (Section, error) {
+	switch {
+	case j.Type == Fillet || j.Type == Lap || j.Type == Corner:
+		return j.fillet(overweld), nil
+	case j.Type == Plug || j.Type == Slot:
+		return j.hole(), nil
+	}
+	return j.butt(pos)
+}
+
+func (j Joint) drawn(name string, v float64, unit string) origin.Figure {
+	return origin.Written(name, v, unit, j.Origin)
+}
+
+// fillet is the triangle z1 z2 / 2, both legs grown by fit-up gap and overweld. A corner is the
+// open triangle of two edges, with a cap.
+func (j Joint) fillet(overweld bool) Section {
+	extra := 0.0
+	if overweld && j.Type != Corner {
+		extra = overLeg
+	}
+	n := float64(j.faces())
+	over := origin.House("overweld", extra, "mm", "laid over the drawn leg; 0 where overweld is off")
+	gap := j.drawn("fit-up gap", j.Gap, "mm")
+	z1, z2 := j.Leg+j.Gap+extra, j.Leg2+j.Gap+extra
+	a := origin.Worked("leg laid", z1, "mm", "leg drawn + fit-up gap + overweld", j.drawn("leg drawn", j.Leg, "mm"), gap, over)
+	b := origin.Worked("second leg laid", z2, "mm", "second leg drawn + fit-up gap + overweld", j.drawn("second leg drawn", j.Leg2, "mm"), gap, over)
+	width := math.Hypot(z1, z2)
+	s := Section{
+		Drawn: n * j.Leg * j.Leg2 / 2, Width: width, Height: z1 * z2 / width, Sides: j.faces(),
+		Size: j.Leg * j.Leg2 / math.Hypot(j.Leg, j.Leg2),
+	}
+	capArea := 2.0 / 3 * width * j.Cap
+	s.Area = n * (z1*z2/2 + capArea)
+	sides := j.drawn("sides", n, "")
+	if j.Cap == 0 {
+		s.Why = origin.Worked("area laid", s.Area, "mm2", "leg laid x second leg laid / 2 x sides", a, b, sides)
+		return s
+	}
+	s.Height += j.Cap
+	s.Why = origin.Worked("area laid", s.Area, "mm2", "(leg laid x second leg laid / 2 + cap area) x sides", a, b, capFigure(width, j.Cap), sides)
+	return s
+}
+
+func capFigure(width, height float64) origin.Figure {
+	return origin.Worked("cap area", 2.0/3*width*height, "mm2", "2 / 3 x cap width x cap height",
+		origin.House("cap width", width, "mm", "opening of the groove and 3 mm"),
+		origin.House("cap height", height, "mm", "1.5 mm where overweld is on"))
+}
+
+// hole is the volume of a plug or slot over its length, so that area x length is the volume.
+func (j Joint) hole() Section {
+	w, t := j.Diameter, j.Thickness
+	long := math.Max(j.Bead, w)
+	if j.Type == Plug {
+		long = w
+	}
+	s := Section{Width: w, Height: t, Size: t, Sides: 1}
+	s.Area = (math.Pi*w*w/4 + w*(long-w)) * t / long
+	s.Drawn = s.Area
+	s.Why = origin.Worked("area laid", s.Area, "mm2", "(pi x diameter^2 / 4 + diameter x (hole length - diameter)) x thickness / hole length",
+		j.drawn("diameter", w, "mm"), j.drawn("hole length", long, "mm"), j.drawn("thickness", t, "mm"))
+	return s
+}
+
+// butt is gap, faces and caps: A = g d + faces, where each prepared face adds h^2 tan(angle) as
+// its shape has it; times what the position adds to the metal.
+func (j Joint) butt(pos Position) (Section, error) {
+	deep := j.PartialDepth
+	rootFace := j.RootFace
+	if deep < j.Thickness {
+		rootFace = 0 // the depth is that of the preparation
+	}
+	gap := j.RootGap + j.Gap
+	sides := 1
+	if j.Type.twoSided() || j.faces() == 2 {
+		sides = 2
+	}
+	h := deep - rootFace
+	if j.Type.twoSided() {
+		h /= 2
+	}
+	prep, open, err := j.prepared(h)
+	if err != nil {
+		return Section{}, err
+	}
+	width := gap + open + capWiden
+	body := gap*deep + prep.Value
+	capArea := 2.0 / 3 * width * j.Cap
+	fac := depositFactor(j.Type, pos, deep, j.Angle)
+	s := Section{Drawn: body, Width: width, Height: deep + float64(sides)*j.Cap, Size: deep, Sides: sides}
+	s.Area = body*fac.Value + float64(sides)*capArea
+	s.Why = origin.Worked("area laid", s.Area, "mm2", "(root gap x depth + faces) x position factor on metal + cap area x sides",
+		j.drawn("root gap", gap, "mm"), j.drawn("depth", deep, "mm"), prep, fac, capFigure(width, j.Cap), j.drawn("sides", float64(sides), ""))
+	return s, nil
+}
+
+// prepared gives the area of the bevelled or gouged faces of height h (each side of a double
+// joint) and how much wider than the gap the groove opens.
+func (j Joint) prepared(h float64) (area origin.Figure, open float64, err error) {
+	const name = "faces"
+	H := j.drawn("height of the preparation", h, "mm")
+	a1, a2 := j.drawn("included angle", j.Angle, "deg"), j.drawn("second angle", j.Angle2, "deg")
+	t1, t2 := tanDeg(j.Angle/2), tanDeg(j.Angle2/2)
+	switch j.Type {
+	case SingleV:
+		return origin.Worked(name, h*h*t1, "mm2", "height of the preparation^2 x tan(included angle / 2)", H, a1), 2 * h * t1, nil
+	case DoubleV:
+		return origin.Worked(name, h*h*(t1+t2), "mm2", "height of the preparation^2 x (tan(included angle / 2) + tan(second angle / 2))", H, a1, a2), 2 * h * t1, nil
+	case SingleBevel:
+		t := tanDeg(j.Angle)
+		return origin.Worked(name, h*h*t/2, "mm2", "height of the preparation^2 x tan(included angle) / 2", H, a1), h * t, nil
+	case DoubleBevel:
+		t, u := tanDeg(j.Angle), tanDeg(j.Angle2)
+		return origin.Worked(name, h*h*(t+u)/2, "mm2", "height of the preparation^2 x (tan(included angle) + tan(second angle)) / 2", H, a1, a2), h * t, nil
+	case SingleU, DoubleU, SingleJ, DoubleJ:
+		return j.rounded(h)
+	}
+	return origin.Worked(name, 0, "mm2", "0"), 0, nil // square
+}
+
+// rounded is a U or J: a quarter (J) or two (U) of a round root of radius R with faces leaning
+// by beta. Round part up to the tangent point R(1 - sin beta): R^2/2 (pi/2 - beta - sin beta cos
+// beta); above it a face that starts R cos beta out and leans by tan beta.
+func (j Joint) rounded(h float64) (origin.Figure, float64, error) {
+	halves := 2.0
+	lean := j.Angle / 2
+	if j.Type == SingleJ || j.Type == DoubleJ {
+		halves, lean = 1, j.Angle
+	}
+	times := halves
+	if j.Type.twoSided() {
+		times *= 2
+	}
+	if lean >= 45 {
+		return origin.Figure{}, 0, fault("angle", "a U leans by about 8 degrees a side, a J by 10 to 20", "an angle of %.4g deg is no %s", j.Angle, j.Type)
+	}
+	b := lean * math.Pi / 180
+	R := j.Radius
+	foot := R * (1 - math.Sin(b))
+	if h <= foot {
+		return origin.Figure{}, 0, fault("radius", "make the radius or the root face smaller, or choose a V", "a root radius of %.4g mm does not go into a preparation %.4g mm high", R, h)
+	}
+	round := R * R / 2 * (math.Pi/2 - b - math.Sin(b)*math.Cos(b))
+	up := h - foot
+	v := times * (round + up*R*math.Cos(b) + up*up*math.Tan(b)/2)
+	f := origin.Worked("faces", v, "mm2",
+		"halves x (radius^2 / 2 x (pi / 2 - lean x pi / 180 - sin(lean) x cos(lean)) + face height x radius x cos(lean) + face height^2 x tan(lean) / 2)",
+		j.drawn("halves", times, ""), j.drawn("radius", R, "mm"), j.drawn("lean", lean, "deg"),
+		j.drawn("face height", up, "mm"))
+	return f, halves * (R*math.Cos(b) + up*math.Tan(b)), nil
+}
+
+func tanDeg(d float64) float64 { return math.Tan(d * math.Pi / 180) }
+
+// Metal gives the mass of length mm of an area of mm2, kilograms, at a density in kg/m3 (0 is
+// steel, 7850).
+func Metal(area, length, density float64) float64 {
+	if density == 0 {
+		density = steelDensity
+	}
+	return area * length * density / 1e9
+}
