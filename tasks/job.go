@@ -57,6 +57,7 @@ type Job struct {
 	Paints     []*Paint
 	Assemblies []*Assembly
 	Tasks      []*Task // file order, repeated blocks written out
+	Begin      *Moment // home work may begin; nil: two weeks before leaving
 	Orders     []Order
 	Clashes    []Clash // added to the default ones
 	NoClash    []Clash // defaults switched off
@@ -108,8 +109,10 @@ type Place struct {
 
 // Climate is the weather that a place is planned with.
 type Climate struct {
-	Pos    Pos
-	Hourly *site.Series // steel and air by hour; nil where only the Steel figure stands
+	Pos     Pos
+	Hourly  *site.Series // steel and air by hour; nil where only the Steel figure stands
+	Month   time.Month   // that the figures are of; 0 is not said
+	WetDays int          // days with rain in that month; 0 is not said
 }
 
 // Workface is a part of a place.
@@ -120,6 +123,7 @@ type Workface struct {
 	People                int // room for so many at work at once; 0 is no limit
 	NextTo                []string
 	Level                 Amount // m on the tide table's datum; Pos.Given tells whether there is one
+	CoversAt              Amount // m on the same datum: work ends at this height of tide; Level where not given
 	WayOff                Amount // minutes clear of the water before it covers
 	Reach                 []Slot // given intervals in which it can be reached; nil: always
 	ReachPos              Pos
@@ -226,6 +230,7 @@ type Ticket struct {
 // Need is so many people with a ticket, or a named person.
 type Need struct {
 	Ticket Ticket   // Name "" is anybody
+	Also   []Ticket // further tickets that the same person must hold
 	Who    []string // one of these by name; nil: anybody with the ticket
 	Count  int
 	Watch  bool // watches hot work: may watch several works in one workface
