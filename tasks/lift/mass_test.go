@@ -178,7 +178,7 @@ func TestMassLaws(t *testing.T) {
 		for i := range parts {
 			place := rapid.Float64Range(-5000, 5000)
 			parts[i] = Part{Name: "p", Length: rapid.Float64Range(10, 6000).Draw(t, "length"), Count: rapid.IntRange(1, 5).Draw(t, "count"),
-				At: [3]float64{place.Draw(t, "x"), place.Draw(t, "y"), place.Draw(t, "z")},
+				At:    [3]float64{place.Draw(t, "x"), place.Draw(t, "y"), place.Draw(t, "z")},
 				Along: [3]float64{rapid.Float64Range(.1, 1).Draw(t, "u"), rapid.Float64Range(-1, 1).Draw(t, "v"), rapid.Float64Range(-1, 1).Draw(t, "w")}}
 			parts[i].Shape.Section, _ = ParseSection(rapid.SampledFrom(words).Draw(t, "section"))
 		}

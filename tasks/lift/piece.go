@@ -129,7 +129,7 @@ func (p Part) plate(density origin.Figure) (piece, error) {
 }
 
 // bolts works out a hexagon bolt, its nut and two washers by proportions of the thread d:
-// head 0.625 d high, nut 0.9 d, both 1.5 d across flats; washers 2 d wide and 0.17 d thick.
+// head 0.625 d high, nut 0.9 d, both 1.5 d across flats; washers 1.85 d wide and 0.15 d thick.
 func (p Part) bolts(density origin.Figure) (piece, error) {
 	d := p.Shape.Thread
 	if (d <= 0 || p.Length <= 0) && p.Stated == 0 {
@@ -137,7 +137,7 @@ func (p Part) bolts(density origin.Figure) (piece, error) {
 	}
 	hex := math.Sqrt(3) / 2 * 1.5 * d * 1.5 * d
 	shank := math.Pi / 4 * d * d
-	volume := shank*p.Length + hex*0.625*d + (hex-shank)*0.9*d + 2*(math.Pi/4*4*d*d-shank)*0.17*d
+	volume := shank*p.Length + hex*0.625*d + (hex-shank)*0.9*d + 2*(math.Pi/4*1.85*1.85*d*d-shank)*0.15*d
 	m := volume * 1e-9 * density.Value
 	return piece{centred: true, mass: origin.Worked("mass of "+p.Name, m, "kg", "shank, head, nut and two washers by proportions of the thread",
 		p.written("thread", d, "mm"), p.written("length", p.Length, "mm"),
