@@ -130,7 +130,7 @@ func choose(what, name, usual string, from []string) (string, error) {
 			return f, nil
 		}
 	}
-	return "", fault("write "+oneOf(from), "%q is not a %s that is known here", name, what)
+	return "", fault("write "+oneOf(from), "%q is no %s that is known here", name, what)
 }
 
 // volume sets the litres, and gives the low and high ends for the range.

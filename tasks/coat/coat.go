@@ -104,7 +104,11 @@ func (p Paint) Next(q Paint) (Recoat, error) {
 	for _, key := range []string{q.Name, q.Kind, "any"} {
 		for _, k := range sorted(p.NextCoat) {
 			if key != "" && kindName(k) == kindName(key) {
-				return p.NextCoat[k], nil
+				r := p.NextCoat[k]
+				if len(r.Max) == 0 { // the points may carry their max beside their min
+					r.Max = r.Min.Maxima()
+				}
+				return r, nil
 			}
 		}
 	}

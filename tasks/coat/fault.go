@@ -45,9 +45,10 @@ func amount(v float64, unit string) string {
 
 // word brings a name to the form in which names are compared: lower case, single spaces, no hyphens.
 func word(s string) string {
-	s = strings.NewReplacer("-", " ", "_", " ", "½", " 1/2").Replace(strings.ToLower(s))
-	return strings.Join(strings.Fields(s), " ")
+	return strings.Join(strings.Fields(spacing.Replace(strings.ToLower(s))), " ")
 }
+
+var spacing = strings.NewReplacer("-", " ", "_", " ", "½", " 1/2")
 
 // oneOf writes a list of names as people say it: "brush, roller or airless".
 func oneOf(names []string) string {

@@ -9,15 +9,15 @@ import (
 
 // House judgement on mixing and tools.
 const (
-	potShare     = 0.8  // of the pot life that is used: the last fifth drags and will not level
-	leastUse     = 10.0 // minutes: a mix that lasts less is no use
-	leastMix     = 0.1  // L: less cannot be measured by volume on site
-	faceSite     = 0.7  // share of the hour at the face, as in the plan's default for a site
-	faceShop     = 0.85 // and in the shop
-	mixTwoPack   = 10.0 // minutes to stir both parts, put together, stir and pour
-	stirOnePack  = 3.0  // minutes a tin
-	mostBatches  = 10000
-	onePackBatch = 20.0 // L stirred at a time where tins are not known
+	potShare    = 0.8  // of the pot life that is used: the last fifth drags and will not level
+	leastUse    = 10.0 // minutes: a mix that lasts less is no use
+	leastMix    = 0.1  // L: less cannot be measured by volume on site
+	faceSite    = 0.7  // share of the hour at the face, as in the plan's default for a site
+	faceShop    = 0.85 // and in the shop
+	mixTwoPack  = 10.0 // minutes to stir both parts, put together, stir and pour
+	stirOnePack = 3.0  // minutes a tin
+	stirAtOnce  = 5.0  // L in one tin
+	mostBatches = 10000
 )
 
 // onePass is the wet film in um that a method usually leaves in one pass; house judgement.
@@ -138,21 +138,14 @@ func (j Job) hours(a *Application, work pace) {
 // mixing reckons the minutes to mix or stir all paint of the coat.
 func (j Job) mixing(a Application) origin.Figure {
 	if j.Paint.TwoPack() {
-		life, fig, _ := j.Paint.Pot(j.Celsius)
-		n := origin.Worked("mixes", float64(a.Batches), "", "clock time of applying / usable pot life, rounded up", fig,
+		_, life, _ := j.Paint.Pot(j.Celsius)
+		n := origin.Worked("mixes", float64(a.Batches), "", "clock time of applying / usable pot life, rounded up", life,
 			origin.House("usable share of the pot life", potShare, "", "the last fifth drags"),
 			j.Paint.fig("induction", j.Paint.Induction, "min"))
-		_ = life
 		return origin.Worked("mixing", mixTwoPack*float64(a.Batches), "min", "mixes x minutes a mix", n,
 			origin.House("one mix", mixTwoPack, "min", "stir both parts, put together, stir, pour"))
 	}
-	n := 0
-	for _, t := range a.Tins {
-		n += t.Count
-	}
-	if n == 0 {
-		n = int(math.Ceil(a.Litres / onePackBatch))
-	}
-	return origin.Worked("stirring", stirOnePack*float64(n), "min", "tins x minutes a tin",
-		origin.Worked("tins", float64(n), "", "from the litres"), origin.House("one tin", stirOnePack, "min", "stir to the bottom"))
+	n := math.Ceil(a.Litres/stirAtOnce - 1e-9)
+	return origin.Worked("stirring", stirOnePack*n, "min", "tins x minutes a tin",
+		origin.Worked("tins", n, "", "litres / 5 L, rounded up"), origin.House("one tin", stirOnePack, "min", "stir to the bottom"))
 }
