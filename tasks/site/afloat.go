@@ -48,7 +48,6 @@ func (t *TideTable) Neaped(level float64, from, to Minute) (Getaway, error) {
 	if len(open) > 0 && open[0].From == from {
 		g.Grounds = open[0].To
 	}
-	best := t.greatest(g.Grounds, to)
 	for _, s := range open {
 		if s.From > g.Grounds {
 			_, hi := t.extremes(s.From, s.To)
@@ -68,8 +67,12 @@ func (t *TideTable) Neaped(level float64, from, to Minute) (Getaway, error) {
 		return g, nil
 	}
 	g.Neaped = true
-	g.Why = fmt.Sprintf("neaped: %.2f m needed to get off, the highest water before %s is %.2f m (%.2f m short)",
-		level, moment(to), best, level-best)
+	if best, rises := t.rise(g.Grounds, to); rises {
+		g.Why = fmt.Sprintf("neaped: %.2f m needed to get off, the highest water before %s is %.2f m (%.2f m short)",
+			level, moment(to), best, level-best)
+	} else {
+		g.Why = fmt.Sprintf("neaped: %.2f m needed to get off, the water only falls before %s", level, moment(to))
+	}
 	for _, w := range t.Waters[t.after(to):] {
 		if w.High && w.Metres >= level {
 			g.Next = w
@@ -80,19 +83,15 @@ func (t *TideTable) Neaped(level float64, from, to Minute) (Getaway, error) {
 	return g, nil
 }
 
-// greatest gives the greatest height between from, when the water is falling, and to, leaving
-// out the fall from the first high water.
-func (t *TideTable) greatest(from, to Minute) float64 {
-	i := t.after(from)
-	for i < len(t.Waters) && t.Waters[i].High {
-		i++
+// rise gives the greatest height between the next low water after from and to, if there is one.
+func (t *TideTable) rise(from, to Minute) (highest float64, ok bool) {
+	for _, w := range t.Between(from, to) {
+		if !w.High {
+			_, hi := t.extremes(w.At, to)
+			return hi, true
+		}
 	}
-	if i == len(t.Waters) || t.Waters[i].At >= to {
-		h, _ := t.Height(to)
-		return h
-	}
-	_, hi := t.extremes(t.Waters[i].At, to)
-	return hi
+	return 0, false
 }
 
 // Allowance is what the water may stand above or below the predicted height. Air pressure and

@@ -29,7 +29,7 @@ func TestNeaped(t *testing.T) {
 		{"never aground", 0.7, "2026-04-14 23:00", "2026-04-15 20:00", false, "stays afloat: water never below 0.79 m, 0.70 m needed"},
 		{"just the height again", 4.468, "2026-04-18 02:02", "2026-04-19 12:00", false, "just the 4.47 m needed"},
 		{"window ends on the rise", 3.0, "2026-04-13 10:32", "2026-04-13 22:00", false, "gets off at 2026-04-13 22:00 UTC"},
-		{"window ends before low water", 3.0, "2026-04-13 10:32", "2026-04-13 14:00", true, "highest water before 2026-04-13 14:00 UTC is 2.4"},
+		{"window ends before low water", 3.0, "2026-04-13 10:32", "2026-04-13 14:00", true, "the water only falls before 2026-04-13 14:00 UTC; the next that would do is high water 3.90 m"},
 	} {
 		g, err := tt.Neaped(c.level, utc(t, c.from), utc(t, c.to))
 		if err != nil {
