@@ -34,11 +34,12 @@ type Basis struct {
 // Work is a job written out for one basis: what plan/problem compiles and what plan/check
 // judges a plan against.
 type Work struct {
-	Job    *tasks.Job
-	Basis  Basis
-	Trip   *tasks.Trip // nil for a plain window
-	Window Window
-	Span   hours.Span // the minutes planned over: first possible work at home to well past the window
+	Job     *tasks.Job
+	Basis   Basis
+	Trip    *tasks.Trip // nil for a plain window
+	Window  Window
+	Span    hours.Span // the minutes planned over: first possible work at home to well past the window
+	Carried bool       // stays at the site are carried on past the window's close (R18)
 
 	Steps     []*Step
 	Links     []Link

@@ -1,0 +1,228 @@
+package problem
+
+import (
+	"math"
+
+	"sailby/tasks"
+	"sailby/tasks/expand"
+	"sailby/tasks/hours"
+)
+
+// Compile makes the problem of a job written out. It costs O(steps x modes x openings).
+func Compile(w *expand.Work) *Problem {
+	g := newGround(w)
+	p := &Problem{Work: w, Base: w.Span.From, End: w.Span.Len(),
+		Open: int(w.Window.Opens - w.Span.From), Close: int(w.Window.Closes - w.Span.From)}
+	p.People = g.people()
+	maker := newCrewMaker(g, p.People)
+	for _, s := range w.Steps {
+		p.Acts = append(p.Acts, p.act(s, maker))
+	}
+	for i := range w.Links {
+		p.Links = append(p.Links, p.link(&w.Links[i], g))
+	}
+	p.resources()
+	p.pairs()
+	p.orders()
+	for i := range p.People { // from here on all minutes count from Base
+		p.People[i].Hours = moved(p.People[i].Hours, -p.Base)
+		for place, set := range p.People[i].Shifts {
+			p.People[i].Shifts[place] = moved(set, -p.Base)
+		}
+	}
+	return p
+}
+
+func (p *Problem) act(s *expand.Step, maker *crewMaker) Act {
+	a := Act{Name: s.Key(), Step: s, Site: s.Site, Home: s.Place != p.Work.Window.Place, From: 0, By: Inf}
+	if s.NotBefore > hours.Never {
+		a.From = max(0, int(s.NotBefore-p.Base))
+	}
+	if s.Deadline < hours.Far {
+		a.By = int(s.Deadline - p.Base)
+	}
+	switch {
+	case s.Absent || s.Class == expand.Hands && s.Working == 0 || s.Class == expand.Clock && s.Clock == 0 && len(s.Needs) == 0:
+		a.Modes = []Mode{{Keeper: -1, Time: Fixed(0)}}
+	case s.Class == expand.Hands || len(s.Needs) > 0:
+		a.Modes, a.Hopeless = maker.modes(s)
+	case s.Class == expand.Clock:
+		a.Modes = []Mode{{Keeper: -1, Time: Fixed(s.Clock)}}
+	default:
+		rate := make([]float64, p.End)
+		for t := range rate {
+			rate[t] = s.Rate(p.Base + hours.Minute(t))
+		}
+		a.Modes = []Mode{{Keeper: -1, Time: Curing(rate)}}
+	}
+	return a
+}
+
+func (p *Problem) link(l *expand.Link, g *ground) Link {
+	out := Link{From: -1, To: l.To.Index, FromEnd: l.FromEnd, ToEnd: l.ToEnd, Min: l.Min, Max: l.Max, Step: l}
+	if l.From != nil {
+		out.From = l.From.Index
+	}
+	if l.Working {
+		out.Count = moved(g.face[l.To.Place], -p.Base)
+	}
+	if l.MaxWorking {
+		out.MaxCount = moved(g.face[l.To.Place], -p.Base)
+	}
+	if l.MaxCure != nil {
+		last := l.MaxCure.Last
+		out.Last = func(t int) int { return int(last(p.Base+hours.Minute(t)) - p.Base) }
+	}
+	return out
+}
+
+// resources makes the kit, the room of workfaces and the power of places into resources.
+func (p *Problem) resources() {
+	w := p.Work
+	add := func(r Resource, amount func(s *expand.Step) (int, bool)) {
+		index, used := len(p.Res), false
+		for i, s := range w.Steps {
+			if s.Absent {
+				continue
+			}
+			if n, stays := amount(s); n > 0 {
+				p.Acts[i].Uses = append(p.Acts[i].Uses, Use{index, n, stays})
+				used = true
+			}
+		}
+		if used {
+			p.Res = append(p.Res, r)
+		}
+	}
+	for _, k := range w.Job.Kit {
+		add(Resource{Name: k.Name, Kind: Kit, Capacity: k.Count, Pos: k.Pos}, func(s *expand.Step) (int, bool) {
+			for _, u := range s.Kit {
+				if u.Kit == k {
+					return u.Count, u.Stays
+				}
+			}
+			return 0, false
+		})
+	}
+	for _, place := range w.Job.Places {
+		for _, f := range place.Workfaces {
+			if f.People > 0 {
+				add(Resource{Name: place.Name + "/" + f.Name, Kind: Room, Capacity: f.People, Pos: f.Pos}, func(s *expand.Step) (int, bool) {
+					if s.Face == f {
+						return s.Room, false
+					}
+					return 0, false
+				})
+			}
+		}
+		if kva, limited := Supply(w, place); limited {
+			add(Resource{Name: "power at " + place.Name, Kind: Power, Capacity: int(math.Floor(kva*10 + 1e-6)), Pos: place.Pos}, func(s *expand.Step) (int, bool) {
+				if s.Place == place {
+					return int(math.Ceil(s.Power*10 - 1e-6)), false
+				}
+				return 0, false
+			})
+		}
+	}
+}
+
+// Supply gives the power there is at a place and whether anything limits it: its mains where
+// the job file states them, and the generators that are there.
+func Supply(w *expand.Work, place *tasks.Place) (kVA float64, limited bool) {
+	kVA = place.Mains.Value
+	limited = place.Mains.Pos.Given()
+	for _, k := range w.Job.Kit {
+		if k.Gives <= 0 || k.At != nil && k.At != place {
+			continue
+		}
+		if k.At == nil && place != w.Window.Place && !limited {
+			continue // a home place with its own unlimited supply
+		}
+		kVA += k.Gives * float64(max(k.Count, 1))
+		limited = true
+	}
+	return kVA, limited
+}
+
+// pairs finds the activities that must not overlap: clashing states in one workface or in
+// neighbours (R12), and lifts or moves of what others work on (R7).
+func (p *Problem) pairs() {
+	steps := p.Work.Steps
+	clash := p.Work.Job.ClashTable()
+	for i, a := range steps {
+		if a.Absent {
+			continue
+		}
+		for j := i + 1; j < len(steps); j++ {
+			b := steps[j]
+			if b.Absent || a.Task == b.Task {
+				continue
+			}
+			if touching(a.Face, b.Face) {
+				for _, sa := range a.States {
+					for _, sb := range b.States {
+						if clash.Has(sa.Name, sb.Name) {
+							p.Pairs = append(p.Pairs, Pair{A: i, B: j, TailA: p.tail(sa), TailB: p.tail(sb),
+								Why: sa.Name + " and " + sb.Name + " at " + a.Face.Place.Name + "/" + a.Face.Name})
+						}
+					}
+				}
+			}
+			if shared := movesWhat(a, b); shared != "" {
+				p.Pairs = append(p.Pairs, Pair{A: i, B: j, TailA: p.softTail(a), TailB: p.softTail(b),
+					Why: shared + " is moved", Kind: Moving})
+			}
+		}
+	}
+}
+
+func touching(a, b *tasks.Workface) bool {
+	if a == nil || b == nil || a.Place != b.Place {
+		return false
+	}
+	return a == b || contains(a.NextTo, b.Name) || contains(b.NextTo, a.Name)
+}
+
+func movesWhat(a, b *expand.Step) string {
+	if a.Moves != "" && (contains(b.Works, a.Moves) || b.Moves == a.Moves) {
+		return a.Moves
+	}
+	if b.Moves != "" && contains(a.Works, b.Moves) {
+		return b.Moves
+	}
+	return ""
+}
+
+func (p *Problem) tail(s expand.State) func(int) int {
+	if s.Tail == nil {
+		return nil
+	}
+	return func(f int) int { return int(s.Tail(p.Base+hours.Minute(f)) - p.Base) }
+}
+
+// softTail gives the tail of a coat until its film is hard dry: until then what it is on is not
+// moved (R11).
+func (p *Problem) softTail(s *expand.Step) func(int) int {
+	for _, st := range s.States {
+		if st.Name == tasks.SoftFilm {
+			return p.tail(st)
+		}
+	}
+	return nil
+}
+
+func (p *Problem) orders() {
+	for _, o := range p.Work.Orders {
+		out := Order{Text: o.Text, Pos: o.Pos}
+		for _, c := range o.Choices {
+			var all []Before
+			for _, x := range c.First {
+				for _, y := range c.Then {
+					all = append(all, Before{x.Index, y.Index})
+				}
+			}
+			out.Choices = append(out.Choices, all)
+		}
+		p.Orders = append(p.Orders, out)
+	}
+}

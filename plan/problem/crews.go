@@ -1,0 +1,331 @@
+package problem
+
+import (
+	"fmt"
+	"sort"
+	"strings"
+
+	"sailby/tasks"
+	"sailby/tasks/expand"
+	"sailby/tasks/hours"
+)
+
+// MaxModes bounds the choices of people kept for one step; they are taken in the order of the
+// job file.
+const MaxModes = 600
+
+// crewMaker makes the modes of steps.
+type crewMaker struct {
+	g      *ground
+	people []Person
+	class  []int // people with the same shifts at every place share a class
+	cache  map[string]*Timing
+}
+
+func newCrewMaker(g *ground, people []Person) *crewMaker {
+	m := &crewMaker{g: g, people: people, cache: map[string]*Timing{}}
+	seen := map[string]int{}
+	for i := range people {
+		var b strings.Builder
+		fmt.Fprint(&b, people[i].Outside)
+		for _, place := range g.work.Job.Places {
+			fmt.Fprint(&b, place.Name, people[i].Shifts[place])
+		}
+		if _, ok := seen[b.String()]; !ok {
+			seen[b.String()] = len(seen)
+		}
+		m.class = append(m.class, seen[b.String()])
+	}
+	return m
+}
+
+// slot is one place in a crew: who may fill it.
+type slot struct {
+	who   []int
+	watch bool
+	need  *tasks.Need
+}
+
+// slots lists the places to fill of a step, and says which need nobody can fill.
+func (m *crewMaker) slots(s *expand.Step) (out []slot, hopeless string) {
+	for i := range s.Needs {
+		n := &s.Needs[i]
+		var who []int
+		for j, p := range m.g.work.Job.People {
+			if CanFill(p, n) && len(m.people[j].Shifts[s.Place]) > 0 {
+				who = append(who, j)
+			}
+		}
+		if len(who) < n.Count {
+			return nil, fmt.Sprintf("it needs %d x %s at %s and %d can be there", n.Count, NeedName(n), s.Place.Name, len(who))
+		}
+		for k := 0; k < n.Count; k++ {
+			out = append(out, slot{who, n.Watch, n})
+		}
+	}
+	return out, ""
+}
+
+// CanFill says whether person p may fill the need.
+func CanFill(p *tasks.Person, n *tasks.Need) bool {
+	if n.Who != nil {
+		if !contains(n.Who, p.Name) {
+			return false
+		}
+		if n.Ticket.Name == "" {
+			return true
+		}
+	}
+	return p.Holds(n.Ticket) && p.HoldsAll(n.Also)
+}
+
+// NeedName writes a need as the sheets do: "Ines", "weld 136 PF", "anybody".
+func NeedName(n *tasks.Need) string {
+	if n.Who != nil {
+		return strings.Join(n.Who, " or ")
+	}
+	if n.Ticket.Name == "" {
+		return "anybody"
+	}
+	return n.Ticket.String()
+}
+
+// modes gives the choices of people of a hands-on step, and a reason where there is none.
+func (m *crewMaker) modes(s *expand.Step) ([]Mode, string) {
+	slots, hopeless := m.slots(s)
+	if hopeless != "" {
+		return nil, hopeless
+	}
+	teams := m.teams(slots)
+	if len(teams) == 0 {
+		return nil, "its needs are for different people, and there are too few of them"
+	}
+	access := m.g.access(s)
+	base := m.g.face[s.Place].And(access)
+	var out []Mode
+	room := false
+	for _, t := range teams {
+		for _, keeper := range m.keepers(s, t) {
+			mode := Mode{Crew: t.crew, Watch: t.watch, Keeper: keeper}
+			mode.Time = m.timing(s, t.crew, nil, keeper, base, access, &mode)
+			room = room || mode.Time.cal != nil && len(mode.Time.cal.spans) > 0
+			if mode.Time.Start(0) < Inf {
+				out = append(out, mode)
+			}
+		}
+	}
+	if s.ChangeHands {
+		out = append(out, m.relays(s, teams, base, access)...)
+	}
+	if len(out) == 0 {
+		return nil, m.noOpening(s, base, room)
+	}
+	return out, ""
+}
+
+// noOpening says why no start is possible for anybody.
+func (m *crewMaker) noOpening(s *expand.Step, base hours.Set, room bool) string {
+	longest := 0
+	for _, b := range base.Joined(Meal, nil) {
+		longest = max(longest, base.Count(b))
+	}
+	need := s.Working + s.SetUp
+	switch {
+	case len(base) == 0:
+		return "there is no open hour for it"
+	case s.InOneGo && longest < need:
+		return fmt.Sprintf("it goes in one go and needs %d min; the longest opening has %d min", need, longest)
+	case !room:
+		return "nobody who can do it is on shift in its open hours"
+	}
+	return fmt.Sprintf("its %d min do not fit into the open hours of those who can do it", need)
+}
+
+type team struct {
+	crew  []int
+	watch []bool
+	key   string
+}
+
+// teams lists the distinct ways to fill the slots with different people, at most MaxModes,
+// people in the order of the job file first.
+func (m *crewMaker) teams(slots []slot) []team {
+	var out []team
+	seen := map[string]bool{}
+	crew := make([]int, 0, len(slots))
+	watch := make([]bool, len(slots))
+	for i := range slots {
+		watch[i] = slots[i].watch
+	}
+	tries := 0
+	var fill func(k int)
+	fill = func(k int) {
+		tries++
+		if len(out) >= MaxModes || tries > 200*MaxModes {
+			return
+		}
+		if k == len(slots) {
+			t := team{crew: append([]int(nil), crew...), watch: watch}
+			t.key = crewKey(t.crew, watch)
+			if !seen[t.key] {
+				seen[t.key] = true
+				out = append(out, t)
+			}
+			return
+		}
+		for _, p := range slots[k].who {
+			if has(crew, p) {
+				continue
+			}
+			if k > 0 && slots[k].need == slots[k-1].need && p < crew[k-1] {
+				continue // the places of one need are alike: rising order only
+			}
+			crew = append(crew, p)
+			fill(k + 1)
+			crew = crew[:k]
+		}
+	}
+	fill(0)
+	return out
+}
+
+func crewKey(crew []int, watch []bool) string {
+	tags := make([]string, len(crew))
+	for i, c := range crew {
+		tags[i] = fmt.Sprint(c, watch[i])
+	}
+	sort.Strings(tags)
+	return strings.Join(tags, ",")
+}
+
+// keepers lists who of a team may keep the fire watch after stops: -1 where there is no watch.
+func (m *crewMaker) keepers(s *expand.Step, t team) []int {
+	if s.Watch == 0 {
+		return []int{-1}
+	}
+	var out []int
+	for _, p := range t.crew {
+		if !m.people[p].Outside {
+			out = append(out, p)
+		}
+	}
+	return out
+}
+
+// timing gives the timing of a team (with relief, of two that take turns) for a step.
+func (m *crewMaker) timing(s *expand.Step, crew, relief []int, keeper int, base, access hours.Set, mode *Mode) *Timing {
+	key := fmt.Sprint(s.Index, "|", m.classes(crew), "|", m.classes(relief), "|", keeper >= 0 && true, m.classOf(keeper))
+	if relief == nil {
+		if t, ok := m.cache[key]; ok {
+			return t
+		}
+	}
+	spans := m.together(s, crew, base)
+	if relief != nil {
+		first := spans
+		spans = first.Or(m.together(s, relief, base))
+		mode.First = m.shift(first)
+	}
+	joined := spans.Joined(Meal, access)
+	if s.Watch > 0 && keeper >= 0 {
+		spans = m.watched(s, spans, joined, keeper)
+		joined = spans.Joined(Meal, access)
+	}
+	t := Worked(m.shift(spans), m.shift(joined), Rules{Work: s.Working, SetUp: s.SetUp, Least: s.LeastPiece, Safe: s.SafeStop,
+		InOneGo: s.InOneGo, OverMeals: s.OverMeals})
+	t.watch = s.Watch
+	if relief == nil {
+		m.cache[key] = t
+	}
+	return t
+}
+
+// together gives the open minutes in which all of the crew are on shift, in company where the
+// work may not be done alone.
+func (m *crewMaker) together(s *expand.Step, crew []int, base hours.Set) hours.Set {
+	set := base
+	for _, p := range crew {
+		set = set.And(m.people[p].Shifts[s.Place])
+	}
+	if s.Lone {
+		if others := company(m.people, crew, s.Place); others != nil {
+			set = set.And(others)
+		}
+	}
+	return set
+}
+
+// watched takes off each opening the minutes after which its keeper could not stay the watch
+// out: on shift to its end, meals apart, with the workface in reach (R13).
+func (m *crewMaker) watched(s *expand.Step, spans, joined hours.Set, keeper int) hours.Set {
+	stay := m.people[keeper].Shifts[s.Place].Joined(Meal, nil)
+	if r, limited := m.g.reach[s.Face]; limited && s.Face != nil {
+		stay = stay.And(r)
+	}
+	var keep []hours.Span
+	for _, b := range joined {
+		for _, k := range stay {
+			// within k, the piece may end at any x with x+watch <= k.To
+			keep = append(keep, hours.Span{From: max(b.From, k.From), To: min(b.To, k.To-hours.Minute(s.Watch))})
+		}
+	}
+	return spans.And(hours.NewSet(keep...))
+}
+
+// relays lists the modes in which two teams without a common member take turns.
+func (m *crewMaker) relays(s *expand.Step, teams []team, base, access hours.Set) []Mode {
+	var out []Mode
+	for i, a := range teams {
+		for j, b := range teams {
+			if i == j || common(a.crew, b.crew) || len(out) >= MaxModes || m.classes(a.crew) == m.classes(b.crew) {
+				continue
+			}
+			keeper := -1
+			if s.Watch > 0 {
+				keeper = a.crew[len(a.crew)-1]
+			}
+			mode := Mode{Crew: a.crew, Watch: a.watch, Relief: b.crew, Keeper: keeper}
+			mode.Time = m.timing(s, a.crew, b.crew, -1, base, access, &mode)
+			if s.Watch == 0 && mode.Time.Start(0) < Inf {
+				out = append(out, mode)
+			}
+		}
+	}
+	return out
+}
+
+func common(a, b []int) bool {
+	for _, x := range a {
+		if has(b, x) {
+			return true
+		}
+	}
+	return false
+}
+
+// shift moves a set from UTC minutes to minutes from the problem's base.
+func (m *crewMaker) shift(set hours.Set) hours.Set { return moved(set, -m.g.span.From) }
+
+func moved(set hours.Set, by hours.Minute) hours.Set {
+	out := make(hours.Set, len(set))
+	for i, s := range set {
+		out[i] = hours.Span{From: s.From + by, To: s.To + by}
+	}
+	return out
+}
+
+func (m *crewMaker) classes(crew []int) string {
+	cs := make([]int, len(crew))
+	for i, p := range crew {
+		cs[i] = m.class[p]
+	}
+	sort.Ints(cs)
+	return fmt.Sprint(cs)
+}
+
+func (m *crewMaker) classOf(p int) int {
+	if p < 0 {
+		return -1
+	}
+	return m.class[p]
+}

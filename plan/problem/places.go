@@ -1,0 +1,144 @@
+package problem
+
+import (
+	"sailby/tasks"
+	"sailby/tasks/expand"
+	"sailby/tasks/hours"
+	"sailby/tasks/site"
+)
+
+// Meal is the longest pause, in minutes, that counts as a meal (R6).
+const Meal = 120
+
+// ground is what is known about open hours, all in UTC minutes, before anybody works.
+type ground struct {
+	work  *expand.Work
+	span  hours.Span
+	open  map[*tasks.Place]hours.Set // opening hours, opening up and clearing up included
+	face  map[*tasks.Place]hours.Set // the same less opening up and clearing up (R5)
+	reach map[*tasks.Workface]hours.Set
+	noise map[*tasks.Place]hours.Set
+	light map[*tasks.Place]hours.Set
+	valid map[*tasks.Place]map[string]hours.Set // by permit name
+	hire  map[*tasks.Kit]hours.Set
+}
+
+func newGround(w *expand.Work) *ground {
+	g := &ground{work: w, span: w.Span,
+		open: map[*tasks.Place]hours.Set{}, face: map[*tasks.Place]hours.Set{},
+		reach: map[*tasks.Workface]hours.Set{}, noise: map[*tasks.Place]hours.Set{},
+		light: map[*tasks.Place]hours.Set{}, valid: map[*tasks.Place]map[string]hours.Set{},
+		hire: map[*tasks.Kit]hours.Set{}}
+	for _, p := range w.Job.Places {
+		g.place(p)
+	}
+	for _, k := range w.Job.Kit {
+		if k.Slots != nil {
+			g.hire[k] = w.Window.Slots(k.Slots)
+		}
+	}
+	return g
+}
+
+// place lays out the hours of one place.
+func (g *ground) place(p *tasks.Place) {
+	closed := func(d hours.Date) bool { _, no := p.Closed[d]; return no }
+	wide := hours.Span{From: g.span.From - 2*1440, To: g.span.To + 2*1440}
+	open := p.Open.Spans(p.Zone, wide, closed).Or(g.work.Window.Slots(p.AlsoOpen))
+	g.open[p] = open.Within(g.span)
+	g.face[p] = trimmed(open, open.Joined(Meal, nil), minutes(p.OpeningUp), minutes(p.ClearingUp)).Within(g.span)
+	if p.Noisy != nil {
+		g.noise[p] = p.Noisy.Spans(p.Zone, g.span, nil)
+	}
+	if p.HasAt {
+		g.light[p] = daylight(p, g.span)
+	}
+	g.valid[p] = map[string]hours.Set{}
+	for _, pm := range p.Permits {
+		all := pm.Valid.Spans(p.Zone, wide, closed)
+		g.valid[p][pm.Name] = trimmed(all, all, minutes(pm.Issue), 0).Within(g.span)
+	}
+	for _, f := range p.Workfaces {
+		if set, limited := g.face2(f); limited {
+			g.reach[f] = set
+		}
+	}
+}
+
+// face2 gives the minutes in which a workface can be worked, and whether anything limits it.
+func (g *ground) face2(f *tasks.Workface) (hours.Set, bool) {
+	set, limited := hours.Set{g.span}, false
+	if f.Reach != nil {
+		set, limited = g.work.Window.Slots(f.Reach), true
+	} else if f.Level.Pos.Given() && f.Place.Tide != nil {
+		if spans, err := f.Place.Tide.Reach(true, f.Level.Value, int64(g.span.From), int64(g.span.To)); err == nil {
+			set, limited = fromSite(spans), true
+		}
+	}
+	if limited {
+		set = trimmed(set, set, minutes(f.OpeningUp), max(minutes(f.WayOff), minutes(f.ClearingUp)))
+	}
+	if f.Dry != nil {
+		set, limited = set.And(g.work.Window.Slots(f.Dry)), true
+	}
+	return set.Within(g.span), limited
+}
+
+func fromSite(spans []site.Span) hours.Set {
+	out := make([]hours.Span, len(spans))
+	for i, s := range spans {
+		out[i] = hours.Span{From: hours.Minute(s.From), To: hours.Minute(s.To)}
+	}
+	return hours.NewSet(out...)
+}
+
+func daylight(p *tasks.Place, span hours.Span) hours.Set {
+	spans, err := site.Daylight(p.Lat, p.Lon, int64(span.From), int64(span.To), true)
+	if err != nil {
+		return nil
+	}
+	return fromSite(spans)
+}
+
+// trimmed takes the first head and the last tail minutes off each of the openings in joined,
+// and gives the minutes of set that are left.
+func trimmed(set, joined hours.Set, head, tail int) hours.Set {
+	if head == 0 && tail == 0 {
+		return set
+	}
+	var keep []hours.Span
+	for _, s := range joined {
+		keep = append(keep, hours.Span{From: s.From + hours.Minute(head), To: s.To - hours.Minute(tail)})
+	}
+	return set.And(hours.NewSet(keep...))
+}
+
+func minutes(a tasks.Amount) int { return int(a.Value) }
+
+// access gives the minutes in which everything but the opening hours and the shifts allows the
+// step to be worked: reach, conditions, hire, noise, light, permits (R5, R6).
+func (g *ground) access(s *expand.Step) hours.Set {
+	set := hours.Set{g.span}
+	if r, limited := g.reach[s.Face]; limited && s.Face != nil {
+		set = set.And(r)
+	}
+	if s.Noisy {
+		if n, limited := g.noise[s.Place]; limited {
+			set = set.And(n)
+		}
+	}
+	if s.Light || s.Face != nil && s.Face.Light {
+		set = set.And(g.light[s.Place])
+	}
+	for _, u := range s.Kit {
+		if slots, hired := g.hire[u.Kit]; hired {
+			set = set.And(slots)
+		}
+	}
+	for _, name := range s.Wants {
+		if v, ok := g.valid[s.Place][name]; ok {
+			set = set.And(v)
+		}
+	}
+	return set
+}

@@ -1,0 +1,231 @@
+package expand
+
+import (
+	"fmt"
+
+	"sailby/tasks"
+	"sailby/tasks/hours"
+	"sailby/weld"
+)
+
+// How far ahead of leaving home work may begin where the job file does not say, and how far
+// past the window the hours are laid out for a plan that is late, in days.
+const (
+	HomeDays = 14
+	PastDays = 21
+)
+
+// Expand writes a job out for one basis. The faults are those that only estimates and the
+// choice of a window show; with any, the work is nil.
+func Expand(job *tasks.Job, b Basis) (*Work, tasks.Faults) {
+	w := &Work{Job: job, Basis: b}
+	if f := w.choose(b.Trip); f != nil {
+		return nil, tasks.Faults{*f}
+	}
+	w.lay()
+	x := &expander{w: w, first: map[*tasks.Task][]*Step{}, absent: map[*tasks.Task]bool{}, states: map[string]*Step{}, welded: map[*tasks.Task]weld.Estimate{}}
+	x.maybes()
+	for _, t := range job.Tasks {
+		x.task(t)
+	}
+	x.links()
+	x.homeward()
+	x.orders()
+	x.deadlines()
+	if len(x.faults) > 0 {
+		return nil, x.faults.Sorted()
+	}
+	for i, s := range w.Steps {
+		s.Index = i
+	}
+	return w, nil
+}
+
+// expander holds what is needed while tasks become steps.
+type expander struct {
+	w      *Work
+	faults tasks.Faults
+	first  map[*tasks.Task][]*Step // all steps of a task, in order
+	absent map[*tasks.Task]bool
+	states map[string]*Step // "task / state" to the step whose finish is that state
+	byName map[string]*tasks.Task
+	welded map[*tasks.Task]weld.Estimate
+}
+
+func (x *expander) fault(pos tasks.Pos, hint, format string, args ...any) {
+	x.faults = append(x.faults, tasks.Fault{Pos: pos, Text: fmt.Sprintf(format, args...), Hint: hint})
+}
+
+// choose picks the window (R2).
+func (w *Work) choose(name string) *tasks.Fault {
+	job := w.Job
+	if job.Window != nil {
+		if name != "" {
+			return &tasks.Fault{Pos: job.Window.Pos, Text: fmt.Sprintf("trip %q: the job has a plain window and no trips", name), Hint: "leave the trip's name out"}
+		}
+		w.Window = Window{Place: job.Window.Place, Opens: job.Window.Opens, Closes: job.Window.Closes, Pos: job.Window.Pos}
+		return nil
+	}
+	var pick *tasks.Trip
+	var names string
+	for _, t := range job.Trips {
+		names += fmt.Sprintf(" %q", t.Name)
+		if name == t.Name || name == "" && (pick == nil || t.Booked && !pick.Booked) {
+			pick = t
+		}
+	}
+	if pick == nil {
+		return &tasks.Fault{Pos: job.Pos, Text: fmt.Sprintf("there is no trip %q", name), Hint: "the trips are:" + names}
+	}
+	w.Trip = pick
+	w.Window = Window{Place: pick.Place, Opens: pick.Opens, Closes: pick.Closes, Pos: pick.Pos}
+	return nil
+}
+
+// lay sets the span planned over, and who is where (R1).
+func (w *Work) lay() {
+	leaves := w.Window.Opens
+	if w.Trip != nil {
+		leaves = w.Trip.Leaves
+	}
+	begin, _ := hours.Instant(hours.DateOf(leaves.In(w.Job.Zone)).Add(-HomeDays), 0, w.Job.Zone)
+	if w.Job.Begin != nil {
+		if at, _, ok := w.Window.At(*w.Job.Begin); ok {
+			begin = min(at, leaves)
+		}
+	}
+	end := w.Window.Closes
+	if w.Trip != nil {
+		end = w.Trip.Home
+	}
+	w.Span = hours.Span{From: begin, To: end + PastDays*1440}
+	w.Presence, w.Travel = map[string][]Stay{}, map[string][]hours.Span{}
+	for _, p := range w.Job.People {
+		if !p.Outside {
+			w.stays(p)
+		}
+	}
+}
+
+// stays lays out where one person is (R1).
+func (w *Work) stays(p *tasks.Person) {
+	there := w.Span
+	if p.From != nil {
+		if at, _, ok := w.Window.At(*p.From); ok {
+			there.From = max(there.From, at)
+		}
+	}
+	if p.Until != nil {
+		if at, _, ok := w.Window.At(*p.Until); ok {
+			there.To = min(there.To, at)
+		}
+	}
+	site := w.Window.Place.Name
+	goes := len(p.Places) == 0 || has(p.Places, site)
+	add := func(from, to hours.Minute, atSite bool) {
+		from, to = max(from, there.From), min(to, there.To)
+		if from < to {
+			w.Presence[p.Name] = append(w.Presence[p.Name], Stay{hours.Span{From: from, To: to}, atSite})
+		}
+	}
+	closes := w.Window.Closes
+	if w.Carried {
+		closes = w.Span.To
+	}
+	switch t := w.Trip; {
+	case t == nil && goes:
+		add(w.Span.From, w.Window.Opens, false)
+		add(w.Window.Opens, closes, true)
+		add(closes, w.Span.To, false)
+	case t == nil || !goes || t.People != nil && !has(t.People, p.Name):
+		add(w.Span.From, w.Span.To, false)
+	default:
+		own := there.From >= t.Arrives // comes by their own means
+		if !own {
+			add(w.Span.From, t.Leaves, false)
+		}
+		add(w.Window.Opens, closes, true)
+		if !w.Carried {
+			add(t.Home, w.Span.To, false)
+		}
+		if !own {
+			w.legs(p.Name, t.Out)
+		}
+		if there.To > t.Departs {
+			w.legs(p.Name, t.Back)
+		}
+	}
+}
+
+func (w *Work) legs(name string, legs []tasks.Leg) {
+	for _, l := range legs {
+		w.Travel[name] = append(w.Travel[name], hours.Span{From: l.From, To: l.To})
+	}
+}
+
+// Carry gives the same work with everybody's stay at the site carried on past the window, for
+// the plan that is shown where deadlines cannot be met (R18).
+func (w *Work) Carry() *Work {
+	c := *w
+	c.Carried = true
+	c.Presence, c.Travel = map[string][]Stay{}, map[string][]hours.Span{}
+	for _, p := range c.Job.People {
+		if !p.Outside {
+			c.stays(p)
+		}
+	}
+	return &c
+}
+
+func has(list []string, word string) bool {
+	for _, v := range list {
+		if v == word {
+			return true
+		}
+	}
+	return false
+}
+
+// maybes settles which tasks do not happen (R16).
+func (x *expander) maybes() {
+	x.byName = map[string]*tasks.Task{}
+	groups := map[string]*tasks.Task{}
+	for _, t := range x.w.Job.Tasks {
+		x.byName[t.Name] = t
+		if t.Group != "" {
+			best := groups[t.Group]
+			better := best == nil || t.Chance > best.Chance
+			if x.w.Basis.Maybes && best != nil {
+				better = x.roughly(t) > x.roughly(best)
+			}
+			if better {
+				groups[t.Group] = t
+			}
+		}
+	}
+	for _, t := range x.w.Job.Tasks {
+		switch {
+		case t.Group != "":
+			x.absent[t] = groups[t.Group] != t
+		case t.Maybe():
+			x.absent[t] = !x.w.Basis.Maybes
+		}
+	}
+}
+
+// roughly gives the hands-on minutes that a task takes, to find the longest of a group.
+func (x *expander) roughly(t *tasks.Task) float64 {
+	e := x.estimate(t)
+	return e.likely() + x.pick(t.Standing)
+}
+
+// pick takes the basis's value out of a range, in minutes.
+func (x *expander) pick(r tasks.Range) float64 {
+	switch x.w.Basis.End {
+	case Low:
+		return r.Low
+	case High:
+		return r.High
+	}
+	return r.Likely
+}

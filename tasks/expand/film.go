@@ -1,0 +1,267 @@
+package expand
+
+import (
+	"fmt"
+	"math"
+	"sort"
+
+	"sailby/tasks"
+	"sailby/tasks/coat"
+	"sailby/tasks/hours"
+	"sailby/tasks/origin"
+)
+
+// coatSteps makes the steps of a coat task: coat 1, dry 1, coat 2, ...
+func (x *expander) coatSteps(t *tasks.Task) {
+	var before *Step
+	var last *tasks.Paint
+	for k, name := range t.Coats {
+		p := x.paint(name)
+		if p == nil {
+			x.fault(t.Pos, "declare it under paints", "task %q: there is no paint %q", t.Name, name)
+			return
+		}
+		h := x.coatHours(t, p, k)
+		if n := len(t.Coats); n > 1 && t.Hours.Pos.Given() || t.ManHours.Pos.Given() {
+			h.minutes = h.minutes.Scale(1 / float64(n)) // the hours given are for all coats
+			h.est.Figure = origin.Worked("hands-on time", h.minutes.Likely, "min", "hours given over the coats", h.est.Figure)
+		}
+		s := x.handsStep(t, fmt.Sprintf("coat %d", k+1), h)
+		x.filmStates(t, s, p)
+		if before != nil {
+			x.recoat(t, before, s, last, p, k)
+		}
+		before, last = s, p
+	}
+	if len(t.Coats) == 0 {
+		x.fault(t.Pos, "write for instance coats: [primer]", "task %q: it has no coats", t.Name)
+		x.step(t, "coat 1")
+	}
+}
+
+func (x *expander) paint(name string) *tasks.Paint {
+	for _, p := range x.w.Job.Paints {
+		if p.Name == name {
+			return p
+		}
+	}
+	return nil
+}
+
+// film is one curing time of a paint at one place.
+type film struct {
+	x     *expander
+	curve coat.Curve
+	min   float64
+	place *tasks.Place
+	sum   []float64 // cure gathered since the span's start, by minute; nil for steady steel
+	rate  float64
+}
+
+func (x *expander) film(curve coat.Curve, p *tasks.Paint, place *tasks.Place) *film {
+	f := &film{x: x, curve: curve, min: p.ApplyMin, place: place}
+	if place.Climate == nil || place.Climate.Hourly == nil {
+		f.rate = f.at(x.steel(place))
+		return f
+	}
+	f.rate = math.NaN()
+	f.sum = make([]float64, x.w.Span.Len()+1)
+	hour, r := int64(math.MinInt64), 0.0
+	for i := range f.sum[1:] {
+		m := x.w.Span.From + hours.Minute(i)
+		if h := int64(m) / 60; h != hour {
+			hour, r = h, f.at(x.steelAt(place, m))
+		}
+		f.sum[i+1] = f.sum[i] + r
+	}
+	return f
+}
+
+// at gives the rate at a steel temperature, 0 below the paint's least.
+func (f *film) at(celsius float64) float64 {
+	if celsius < f.min {
+		return 0
+	}
+	return f.curve.Rate(celsius)
+}
+
+// steelAt gives the steel temperature of a place at a minute.
+func (x *expander) steelAt(p *tasks.Place, m hours.Minute) float64 {
+	if p.Climate != nil && p.Climate.Hourly != nil {
+		if w, ok := p.Climate.Hourly.At(int64(m)); ok {
+			return w.Steel
+		}
+	}
+	return x.steel(p)
+}
+
+// Rate gives the share of the cure that the minute beginning at m adds.
+func (f *film) Rate(m hours.Minute) float64 {
+	if f.sum == nil {
+		return f.rate
+	}
+	return f.at(f.x.steelAt(f.place, m))
+}
+
+// finish gives the first minute by which a film begun at m is cured (R11), hours.Far if never.
+func (f *film) finish(m hours.Minute) hours.Minute {
+	if f.sum == nil {
+		if f.rate <= 0 {
+			return hours.Far
+		}
+		return m + hours.Minute(math.Ceil(1/f.rate-1e-6))
+	}
+	i := int(m - f.x.w.Span.From)
+	if i < 0 || i >= len(f.sum) {
+		return hours.Far
+	}
+	want := f.sum[i] + 1 - 1e-9
+	n := sort.Search(len(f.sum)-i, func(k int) bool { return f.sum[i+k] >= want })
+	if i+n >= len(f.sum) {
+		return hours.Far
+	}
+	return m + hours.Minute(n)
+}
+
+// filmStates puts the film's states and tails on a coat step (R12).
+func (x *expander) filmStates(t *tasks.Task, s *Step, p *tasks.Paint) {
+	for _, st := range []struct {
+		state, film string
+	}{{tasks.WetFilm, "touch dry"}, {tasks.SoftFilm, "hard dry"}, {tasks.Solvent, "solvent gone"}} {
+		curve, ok := p.State(st.film)
+		if !ok {
+			if curve, ok = p.State("hard dry"); !ok {
+				continue
+			}
+		}
+		f := x.film(curve, p, t.Place)
+		s.States = append(s.States, State{Name: st.state, Tail: f.finish,
+			What: fmt.Sprintf("%s at %s", st.film, temperature(x.steel(t.Place)))})
+	}
+}
+
+func temperature(c float64) string { return origin.Trim(c) + " °C" }
+
+// dry adds a drying step after a coat step: the film reaches the state of the curve.
+func (x *expander) dry(t *tasks.Task, after *Step, name string, curve coat.Curve, p *tasks.Paint) *Step {
+	s := x.step(t, name)
+	s.Class = Cure
+	f := x.film(curve, p, t.Place)
+	s.Rate = f.Rate
+	minutes, fig, err := curve.Time(x.steel(t.Place))
+	if err == nil {
+		s.Estimate.Figure = fig
+		s.Estimate.Range = [3]int{whole(minutes), whole(minutes), whole(minutes)}
+	}
+	if f.sum == nil && f.rate <= 0 {
+		x.fault(t.Pos, "warm the place, or take a paint that cures in the cold",
+			"task %q: paint %q does not cure at %s", t.Name, p.Name, temperature(x.steel(t.Place)))
+	}
+	x.tie(after, s, name+" of "+p.Name)
+	return s
+}
+
+// recoat adds the drying between two coats, and the longest wait.
+func (x *expander) recoat(t *tasks.Task, a, b *Step, p, q *tasks.Paint, k int) {
+	window, err := p.Next(q.Paint)
+	if err != nil {
+		x.fault(t.Pos, fmt.Sprintf("add next coat: {%s: {10 C: {min: 16 h}}} to the paint", q.Name), "task %q: %v", t.Name, err)
+		return
+	}
+	s := x.dry(t, a, fmt.Sprintf("dry %d", k), window.Min, p)
+	// steps are kept in the order coat, dry, coat
+	x.swapLast(t, s, b)
+	x.w.Links = append(x.w.Links, Link{From: s, To: b, Min: 0, Max: NoMax, Pos: t.Pos, ToEnd: tasks.Start, Why: "recoat of " + p.Name})
+	if len(window.Max) > 0 {
+		x.longest(t, a, b, p, window.Max)
+	}
+}
+
+// swapLast puts step s before step b in the task's order; both are its last two.
+func (x *expander) swapLast(t *tasks.Task, s, b *Step) {
+	for _, list := range []*[]*Step{&x.w.Steps} {
+		l := *list
+		n := len(l)
+		if n >= 2 && l[n-1] == s && l[n-2] == b {
+			l[n-1], l[n-2] = b, s
+			b.Index, s.Index = n-1, n-2
+		}
+	}
+	l := x.first[t]
+	if n := len(l); n >= 2 && l[n-1] == s && l[n-2] == b {
+		l[n-1], l[n-2] = b, s
+	}
+}
+
+// longest adds the longest wait for the next coat, from start to start and from finish to
+// finish (R10), shortening with heat (R11).
+func (x *expander) longest(t *tasks.Task, a, b *Step, p *tasks.Paint, max coat.Curve) {
+	last := func(m hours.Minute) hours.Minute {
+		temp := func(minute int) float64 { return x.steelAt(t.Place, hours.Minute(minute)) }
+		return hours.Minute(coat.LastRecoat(int(m), max, temp, int(x.w.Span.To)))
+	}
+	if t.Place.Climate == nil || t.Place.Climate.Hourly == nil {
+		cap, _, err := max.Life(x.steel(t.Place))
+		if err != nil {
+			return
+		}
+		for _, end := range []tasks.LinkEnd{tasks.Start, tasks.Finish} {
+			x.w.Links = append(x.w.Links, Link{From: a, To: b, FromEnd: end, ToEnd: end, Min: NoMin, Max: int(cap), Pos: p.Pos, Why: "longest recoat of " + p.Name})
+		}
+		return
+	}
+	for _, end := range []tasks.LinkEnd{tasks.Start, tasks.Finish} {
+		x.w.Links = append(x.w.Links, Link{From: a, To: b, FromEnd: end, ToEnd: end, Min: NoMin, Max: NoMax,
+			MaxCure: &MaxCure{Last: last}, Pos: p.Pos, Why: "longest recoat of " + p.Name})
+	}
+}
+
+// filmState gives the step whose finish is a film state of a coat task, made when first asked for.
+func (x *expander) filmState(t *tasks.Task, state string, next *tasks.Paint) (*Step, error) {
+	key := t.Name + " / " + state
+	if next != nil {
+		key += " for " + next.Name
+	}
+	if s, ok := x.states[key]; ok {
+		return s, nil
+	}
+	coats := x.handsOf(t)
+	p := x.paint(t.Coats[len(t.Coats)-1])
+	if p == nil || len(coats) == 0 {
+		return nil, fmt.Errorf("task %q has no coat", t.Name)
+	}
+	after := coats[len(coats)-1]
+	name := state
+	var curve coat.Curve
+	switch {
+	case state == "applied":
+		x.states[key] = after
+		return after, nil
+	case next != nil:
+		window, err := p.Next(next.Paint)
+		if err != nil {
+			return nil, err
+		}
+		curve, name = window.Min, "recoat"
+	default:
+		word := state
+		if word == "cured" {
+			word = "service"
+		}
+		if word == "immersion" {
+			word = "immersion min"
+		}
+		c, ok := p.State(word)
+		if !ok {
+			return nil, fmt.Errorf("paint %q does not say when it is %s", p.Name, state)
+		}
+		curve = c
+	}
+	s := x.dry(t, after, name, curve, p)
+	if state == "cured" || state == "service" {
+		s.Deadline = hours.Far
+		s.Site = false
+	}
+	x.states[key] = s
+	return s, nil
+}

@@ -1,0 +1,109 @@
+package expand
+
+import (
+	"sailby/tasks"
+)
+
+// needs lists who a task's hands-on step needs, fire watch left out (R9): what the job file asks
+// for, else the kind's default; then anybody, up to the number of people.
+func (x *expander) needs(t *tasks.Task, h hands) []tasks.Need {
+	var out []tasks.Need
+	count := 0
+	add := func(n tasks.Need) {
+		if n.Count > 0 {
+			out = append(out, n)
+			count += n.Count
+		}
+	}
+	switch {
+	case len(t.Needs) > 0:
+		for _, n := range t.Needs {
+			add(n)
+		}
+	case t.Kind == tasks.Weld && len(t.Seams) > 0:
+		first, also := x.welders(t)
+		n := tasks.Need{Ticket: first, Also: also, Count: max(1, h.people, len(t.Who)), Pos: t.Pos}
+		if t.Who != nil {
+			n.Who = t.Who
+		}
+		add(n)
+		return out
+	case t.Who == nil:
+		add(x.usual(t))
+	}
+	for _, who := range t.Who {
+		add(tasks.Need{Who: []string{who}, Count: 1, Pos: t.Pos})
+	}
+	if rest := h.people - count; rest > 0 {
+		add(tasks.Need{Count: rest, Pos: t.Pos})
+	}
+	return out
+}
+
+// welders gives the tickets that one welder must hold for all seams of a task.
+func (x *expander) welders(t *tasks.Task) (first tasks.Ticket, also []tasks.Ticket) {
+	e := x.welded[t]
+	for i, s := range t.Seams {
+		n := tasks.Ticket{Name: tasks.WeldTicket, ThickFrom: s.Joint.Thickness, ThickTo: s.Joint.Thickness}
+		if i < len(e.Seams) {
+			n.Positions = []string{e.Seams[i].Position.String()}
+		}
+		if p := s.Seam.Procedure; p != nil && p.Process != 0 {
+			n.Process = process(int(p.Process))
+		}
+		n.Joints = []string{jointGroup(s)}
+		if i == 0 {
+			first = n
+		} else {
+			also = append(also, n)
+		}
+	}
+	return first, also
+}
+
+func process(n int) string {
+	digits := ""
+	for ; n > 0; n /= 10 {
+		digits = string(rune('0'+n%10)) + digits
+	}
+	return digits
+}
+
+// jointGroup says which of the two qualification groups a joint belongs to: fillet or butt.
+func jointGroup(s tasks.Seam) string {
+	switch s.Joint.Type.String() {
+	case "fillet", "lap", "corner", "plug", "slot":
+		return "fillet"
+	}
+	return "butt"
+}
+
+// usual gives the need of a kind when the job file does not say: somebody with the ticket that
+// goes with it where anybody on the job holds that ticket, else anybody.
+func (x *expander) usual(t *tasks.Task) tasks.Need {
+	ticket := ""
+	switch t.Kind {
+	case tasks.Cut:
+		ticket = t.By + " cutting"
+	case tasks.Coat:
+		ticket = "painter"
+	case tasks.FitUp:
+		ticket = "fitter"
+	case tasks.Test:
+		if t.By != "" && t.By != "visual" {
+			ticket = "NDT"
+		}
+	case tasks.Lift:
+		if t.By != "hands" && t.By != "by hand" {
+			return tasks.Need{Ticket: tasks.Ticket{Name: tasks.SlingerTicket}, Count: 1, Pos: t.Pos}
+		}
+	}
+	n := tasks.Need{Count: 1, Pos: t.Pos}
+	want := tasks.Ticket{Name: ticket}
+	for _, p := range x.w.Job.People {
+		if ticket != "" && p.Holds(want) {
+			n.Ticket = want
+		}
+	}
+	return n
+}

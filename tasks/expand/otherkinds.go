@@ -1,0 +1,296 @@
+package expand
+
+import (
+	"errors"
+	"fmt"
+	"math"
+	"strings"
+
+	"sailby/tasks"
+	"sailby/tasks/coat"
+	"sailby/tasks/lift"
+	"sailby/tasks/origin"
+)
+
+// area gives the surface of a prep or coat task in m2: its own area, else that of what it is on.
+func (x *expander) area(t *tasks.Task) (origin.Figure, error) {
+	if t.Area.Pos.Given() {
+		return origin.Written("area", t.Area.Value, "m2", t.Area.Pos.Origin("area")), nil
+	}
+	var from []origin.Figure
+	sum := 0.0
+	for _, name := range t.Surface {
+		m, err := x.massOf(name)
+		if err != nil {
+			return origin.Figure{}, err
+		}
+		if m.Surface <= 0 {
+			return origin.Figure{}, fmt.Errorf("nothing says how large the surface of %q is", name)
+		}
+		from = append(from, origin.Worked("surface of "+name, m.Surface, "m2", "outside surface of its parts"))
+		sum += m.Surface
+	}
+	if len(from) == 0 {
+		return origin.Figure{}, errors.New("it has no surface, no area and no hours")
+	}
+	return origin.Worked("area", sum, "m2", "sum of the surfaces", from...), nil
+}
+
+// massOf weighs an assembly or one of its parts ("frame", "frame/base").
+func (x *expander) massOf(name string) (lift.Total, error) {
+	asm, part, single := strings.Cut(name, "/")
+	for _, a := range x.w.Job.Assemblies {
+		if a.Name != asm {
+			continue
+		}
+		var parts []lift.Part
+		for _, p := range a.Parts {
+			if !single || p.Name == part {
+				parts = append(parts, p.Part)
+			}
+		}
+		if !single && a.Mass.Pos.Given() && len(parts) == 0 {
+			return lift.Total{Mass: a.Mass.Value, Heavy: a.Mass.Value, Figure: origin.Written("mass", a.Mass.Value, "kg", a.Mass.Pos.Origin("mass"))}, nil
+		}
+		total, err := lift.Mass(parts)
+		if err == nil && !single && a.Mass.Pos.Given() {
+			total.Mass, total.Heavy = a.Mass.Value, math.Max(a.Mass.Value, a.Mass.Value*1)
+			total.Figure = origin.Written("mass", a.Mass.Value, "kg", a.Mass.Pos.Origin("mass, "+a.How))
+		}
+		return total, err
+	}
+	return lift.Total{}, fmt.Errorf("there is no assembly %q", name)
+}
+
+// prep estimates surface preparation.
+func (x *expander) prep(t *tasks.Task) hands {
+	h := hands{people: 1, noisy: true, grit: true}
+	area, err := x.area(t)
+	if err != nil {
+		h.fault, h.hint = err, "name its surface (an assembly), or give area: 4 m2 or hours"
+		return h
+	}
+	grade := t.Grade
+	if grade == "" {
+		grade = "St 3"
+	}
+	p, err := coat.Prepare(coat.Prep{Area: area.Value, Grade: grade, Method: t.Method, Site: x.atSite(t)})
+	if err != nil {
+		h.fault, h.hint = err, "write for instance grade: St 3, method: power tool"
+		return h
+	}
+	people := float64(max(1, t.People, x.crewSize(t)))
+	h.people = int(people)
+	h.minutes = p.Range.Scale(1 / people)
+	h.noisy, h.grit = p.Noise, p.Dust
+	h.least = 15
+	h.est.Figure, h.est.Notes = p.Hours, p.Warnings
+	h.est.Facts = append(h.est.Facts, area)
+	if p.Abrasive > 0 {
+		h.est.Facts = append(h.est.Facts, p.Kilos)
+		h.est.Consumables = append(h.est.Consumables, Consumable{What: "abrasive", Amount: p.Abrasive, Unit: "kg", Spare: math.Ceil(p.Abrasive * 0.1)})
+	}
+	if p.MaxWait > 0 {
+		h.est.Facts = append(h.est.Facts, p.Wait)
+	}
+	return h
+}
+
+// lift estimates a lift or a move: rig, lift, land.
+func (x *expander) lift(t *tasks.Task) hands {
+	h := hands{people: 2}
+	mass := origin.Figure{}
+	switch {
+	case t.Mass.Pos.Given():
+		mass = origin.Written("mass", t.Mass.Value, "kg", t.Mass.Pos.Origin("mass"))
+	case t.Lifts != "":
+		m, err := x.massOf(t.Lifts)
+		if err != nil {
+			h.fault, h.hint = err, "give its parts, or mass: 410 kg on the task"
+			return h
+		}
+		mass = m.Figure
+		mass.Name = "mass of " + t.Lifts
+		if mass.Value == 0 {
+			mass.Value = m.Mass
+		}
+	default:
+		h.fault, h.hint = fmt.Errorf("nothing says what it lifts"), "write lifts: frame, or mass: 410 kg, or hours"
+		return h
+	}
+	h.est.Facts = append(h.est.Facts, mass)
+	way, kit := lift.ByChainHoist, (*tasks.Kit)(nil)
+	for _, u := range t.Kit {
+		if u.Kit.HasKind || u.Kit.Chart != nil {
+			kit = u.Kit
+		}
+	}
+	switch {
+	case t.By == "hands" || t.By == "by hand":
+		way = lift.ByHands
+	case kit != nil && kit.HasKind:
+		way = kit.Kind
+	case kit != nil:
+		way = lift.ByLoaderCrane
+	default:
+		if w, err := lift.ParseWay(t.By); err == nil && t.By != "" {
+			way = w
+		}
+	}
+	height := t.Height.Value
+	if !t.Height.Pos.Given() {
+		height = 1500
+		h.est.Facts = append(h.est.Facts, origin.House("hook travel", height, "mm", "not given: 1.5 m"))
+	}
+	people := max(2, t.People, x.crewSize(t))
+	m := lift.Move{Mass: mass.Value, Height: height, Travel: t.Travel.Value, By: way, People: people, First: t.Round <= 1, Site: x.atSite(t)}
+	if kit != nil && kit.Speed.Value > 0 {
+		m.Speed = kit.Speed.Value
+	}
+	e, err := lift.Times(m)
+	if err != nil {
+		h.fault, h.hint = err, "give hours, or another way to lift"
+		return h
+	}
+	h.people = people
+	h.minutes = spread(float64(e.HandsOn))
+	h.est.Figure = e.Hours
+	return h
+}
+
+// fitUp estimates fitting parts together after the method of Farkas and Jarmai.
+func (x *expander) fitUp(t *tasks.Task) hands {
+	h := hands{people: 2}
+	if t.People > 0 {
+		h.people = t.People
+	}
+	count, kg := 0, 0.0
+	for _, name := range t.Parts {
+		m, err := x.massOf(name)
+		if err != nil {
+			h.fault = err
+			return h
+		}
+		kg += m.Mass
+		for _, p := range m.Parts {
+			count += max(1, p.Count)
+		}
+	}
+	if count < 2 || kg <= 0 {
+		h.fault = fmt.Errorf("nothing says how long fitting takes")
+		h.hint = "give hours or man-hours, or part: [assemblies] with parts of known mass"
+		return h
+	}
+	difficulty := 2.0
+	if x.atSite(t) {
+		difficulty = 3
+	}
+	man := difficulty * math.Sqrt(float64(count)*kg)
+	n := float64(max(h.people, x.crewSize(t)))
+	h.minutes = spread(man / n)
+	h.est.Figure = origin.Worked("hands-on time", man/n, "min", "difficulty x root of (parts x mass), over the people",
+		origin.Recalled("method", 1, "", "Farkas and Jarmai: T = C x difficulty x sqrt(parts x kg) min, C = 1"),
+		origin.House("difficulty", difficulty, "", "1 easy to 4 hard: 2 in the shop, 3 on site"),
+		origin.Worked("parts", float64(count), "", "count of the parts named"),
+		origin.Worked("mass", kg, "kg", "mass of the parts named"),
+		origin.Written("people", n, "", t.Pos.Origin("people")))
+	return h
+}
+
+// testMinutes are house estimates for a test: minutes fixed and a metre of seam.
+var testMinutes = map[string]struct {
+	fixed, perMetre float64
+	source          origin.Origin
+}{
+	"visual":            {15, 4, origin.Origin{Kind: origin.Judgement, Source: "visual: 15 min and 4 min a metre"}},
+	"dye penetrant":     {30, 10, origin.Origin{Kind: origin.Judgement, Source: "dye penetrant: about 30 min a round, 10 min a metre more"}},
+	"magnetic particle": {30, 8, origin.Origin{Kind: origin.Judgement, Source: "magnetic particle: 30 min and 8 min a metre"}},
+	"ultrasonic":        {45, 20, origin.Origin{Kind: origin.Judgement, Source: "ultrasonic: 45 min and 20 min a metre"}},
+	"leak":              {60, 5, origin.Origin{Kind: origin.Judgement, Source: "leak test: 60 min and 5 min a metre"}},
+	"load":              {90, 0, origin.Origin{Kind: origin.Judgement, Source: "load test: 90 min"}},
+}
+
+// TestMethods names the test methods that have hours of their own.
+func TestMethods() []string {
+	return []string{"visual", "dye penetrant", "magnetic particle", "ultrasonic", "leak", "load"}
+}
+
+// test estimates a test from its method and the length of the seams it follows.
+func (x *expander) test(t *tasks.Task) hands {
+	h := hands{people: 1}
+	by := t.By
+	if by == "" {
+		by = t.Method
+	}
+	if by == "" {
+		by = "visual"
+	}
+	m, ok := testMinutes[by]
+	if !ok {
+		h.fault = fmt.Errorf("a test by %q has no hours of its own", by)
+		h.hint = "give hours, or test by one of: " + strings.Join(TestMethods(), ", ")
+		return h
+	}
+	metres := 0.0
+	for _, l := range t.Links {
+		if w := x.byName[l.Task]; w != nil && w.Kind == tasks.Weld {
+			for _, s := range w.Seams {
+				metres += s.Joint.Length / 1000
+			}
+		}
+	}
+	if t.Length.Pos.Given() {
+		metres = t.Length.Value / 1000
+	}
+	total := m.fixed + metres*m.perMetre
+	h.minutes = spread(total)
+	h.est.Figure = origin.Worked("hands-on time", total, "min", "fixed + seam x rate",
+		origin.Figure{Name: "fixed", Value: m.fixed, Unit: "min", Origin: m.source},
+		origin.Figure{Name: "rate", Value: m.perMetre, Unit: "min/m", Origin: m.source},
+		origin.Worked("seam tested", metres, "m", "length of the seams it follows"))
+	return h
+}
+
+// coatHours estimates coat number k of a coat task.
+func (x *expander) coatHours(t *tasks.Task, p *tasks.Paint, k int) hands {
+	h := hands{people: 1}
+	people := float64(max(1, t.People, x.crewSize(t)))
+	h.people = int(people)
+	area, err := x.area(t)
+	if err != nil {
+		h.fault, h.hint = err, "name its surface (an assembly), or give area: 4 m2 or hours"
+		x.overrule(t, &h)
+		return h
+	}
+	method := t.Method
+	if method == "" {
+		method = coat.Brush
+	}
+	a, err := coat.Apply(coat.Job{Paint: p.Paint, Area: area.Value, Method: method, Surface: coat.Sections,
+		Celsius: x.steel(t.Place), Site: x.atSite(t)})
+	if err != nil {
+		h.fault, h.hint = err, "give hours, or complete the paint"
+		x.overrule(t, &h)
+		return h
+	}
+	h.minutes = a.Range.Scale(1 / people)
+	h.est.Figure, h.est.Notes = a.Hours, a.Warnings
+	h.est.Facts = append(h.est.Facts, area, a.Volume)
+	h.est.Consumables = append(h.est.Consumables, Consumable{What: "paint " + p.Name, Amount: a.Litres, Unit: "L", Spare: math.Ceil(a.Litres * 0.1)})
+	if a.Thinner+a.Cleaner > 0 {
+		h.est.Consumables = append(h.est.Consumables, Consumable{What: "thinner for " + p.Name, Amount: a.Thinner + a.Cleaner, Unit: "L"})
+	}
+	x.overrule(t, &h)
+	return h
+}
+
+// steel gives the steel temperature that a place is planned with, °C.
+func (x *expander) steel(p *tasks.Place) float64 {
+	if p.Steel.Pos.Given() {
+		return p.Steel.Value
+	}
+	return DefaultSteel
+}
+
+// DefaultSteel is the steel temperature, °C, where a place does not give one.
+const DefaultSteel = 10

@@ -1,0 +1,413 @@
+package expand
+
+import (
+	"strings"
+
+	"sailby/tasks"
+	"sailby/tasks/hours"
+	"sailby/tasks/origin"
+)
+
+// kindRule is what a kind of task does at closing time (R6).
+type kindRule struct{ oneGo, overMeals bool }
+
+var kindRules = map[tasks.Kind]kindRule{
+	tasks.Weld: {false, true}, tasks.Cut: {false, true}, tasks.Prep: {false, true},
+	tasks.Coat: {true, false}, tasks.Lift: {true, false}, tasks.FitUp: {false, true},
+	tasks.Test: {true, true}, tasks.Move: {true, false}, tasks.SignOff: {true, false}, tasks.Plain: {false, true},
+}
+
+// task makes the steps of one task, in order.
+func (x *expander) task(t *tasks.Task) {
+	if x.absent[t] {
+		s := x.step(t, string(t.Kind))
+		s.Absent = true
+		return
+	}
+	switch {
+	case t.Kind == tasks.Coat:
+		x.coatSteps(t)
+	case t.Standing.Pos.Given() && !t.Hours.Pos.Given() && !t.ManHours.Pos.Given() && (t.Kind == tasks.Plain || t.Kind == tasks.Test || t.Kind == tasks.SignOff):
+		x.standing(t, nil)
+	default:
+		main := x.handsStep(t, string(t.Kind), x.estimate(t))
+		if t.Kind == tasks.Weld {
+			x.afterWeld(t, main)
+		}
+		if t.Standing.Pos.Given() {
+			x.standing(t, main)
+		}
+	}
+}
+
+// step adds an empty step to the work.
+func (x *expander) step(t *tasks.Task, name string) *Step {
+	s := &Step{Task: t, Name: name, Place: t.Place, Face: t.Face, Site: x.atSite(t),
+		NotBefore: hours.Never, Deadline: hours.Far}
+	x.w.Steps = append(x.w.Steps, s)
+	x.first[t] = append(x.first[t], s)
+	s.Index = len(x.w.Steps) - 1
+	if s.Site {
+		s.NotBefore, s.Deadline = x.w.Window.Opens, x.w.Window.Closes
+	}
+	return s
+}
+
+// handsStep makes a hands-on step from an estimate.
+func (x *expander) handsStep(t *tasks.Task, name string, h hands) *Step {
+	s := x.step(t, name)
+	s.Class = Hands
+	if h.fault != nil {
+		x.fault(t.Pos, h.hint, "task %q: %v", t.Name, h.fault)
+		return s
+	}
+	factor := x.faceFactor(t.Place)
+	face := func(m float64) int { return whole(m / factor.Value) }
+	s.HandsOn = x.value(h.minutes)
+	s.Working = face(float64(s.HandsOn))
+	s.Estimate = h.est
+	s.Estimate.Figure = origin.Worked("working time", float64(s.Working), "min", "hands-on time over face factor, rounded up",
+		h.est.Figure, factor)
+	if s.HandsOn == 0 {
+		return s
+	}
+	x.stopping(t, s, h, face)
+	x.nature(t, s, h)
+	s.Needs = x.needs(t, h)
+	x.hotWork(t, s)
+	for _, n := range s.Needs {
+		s.Room += n.Count
+	}
+	x.kit(t, s, h)
+	x.statesOf(t, s, h)
+	if t.NotBefore != nil {
+		s.NotBefore = max(s.NotBefore, x.moment(*t.NotBefore))
+	}
+	return s
+}
+
+// stopping sets what the step does at closing time (R6, R8).
+func (x *expander) stopping(t *tasks.Task, s *Step, h hands, face func(float64) int) {
+	rule := kindRules[t.Kind]
+	s.InOneGo, s.OverMeals = rule.oneGo, rule.overMeals
+	if t.InOneGo != nil {
+		s.InOneGo = *t.InOneGo
+	}
+	if t.OverMeals != nil {
+		s.OverMeals = *t.OverMeals
+	}
+	s.ChangeHands = t.MayChangeHands
+	own := func(a tasks.Amount, estimated float64) int {
+		if a.Pos.Given() {
+			return face(a.Value)
+		}
+		return face(estimated)
+	}
+	s.SetUp = own(t.SetUp, h.setUp)
+	s.SafeStop = min(own(t.SafeStop, h.safe), s.Working)
+	s.LeastPiece = min(own(t.LeastPiece, h.least), s.Working)
+}
+
+// nature sets what kind of work the step is: hot, noisy, in need of light or of company.
+func (x *expander) nature(t *tasks.Task, s *Step, h hands) {
+	s.Hot, s.Noisy, s.Light = h.hot, h.noisy, t.Light
+	if t.HotWork != nil {
+		s.Hot = *t.HotWork
+	}
+	if t.Noisy != nil {
+		s.Noisy = *t.Noisy
+	}
+	f := t.Face
+	s.Lone = s.Hot || t.Kind == tasks.Lift || f != nil && (f.Closed || f.Water || f.Tidal || f.Level.Pos.Given())
+	if t.Lone != nil && !*t.Lone {
+		s.Lone = false
+	}
+	if t.Kind == tasks.Lift || t.Kind == tasks.Move {
+		s.Moves = asm(t.Lifts)
+	}
+	for _, list := range [][]string{t.Parts, t.Surface} {
+		for _, p := range list {
+			s.Works = append(s.Works, asm(p))
+		}
+	}
+	for _, p := range t.Place.Permits {
+		if permitFor(p.For, t, s) {
+			s.Wants = append(s.Wants, p.Name)
+		}
+	}
+}
+
+func asm(name string) string {
+	a, _, _ := strings.Cut(name, "/")
+	return a
+}
+
+func permitFor(what string, t *tasks.Task, s *Step) bool {
+	switch what {
+	case tasks.HotWorkState:
+		return s.Hot
+	case "closed space":
+		return t.Face != nil && t.Face.Closed
+	case tasks.LoadOverhead:
+		return t.Kind == tasks.Lift
+	case "all", "":
+		return true
+	}
+	return what == string(t.Kind)
+}
+
+// hotWork adds the fire watch (R13).
+func (x *expander) hotWork(t *tasks.Task, s *Step) {
+	if !s.Hot {
+		return
+	}
+	watch := t.Place.FireWatch
+	if !watch.Pos.Given() && x.atSite(t) {
+		watch.Value = DefaultWatch
+	}
+	if t.FireWatch.Pos.Given() {
+		watch = t.FireWatch
+	}
+	s.Watch = whole(watch.Value)
+	if s.Watch == 0 {
+		return
+	}
+	ticket := tasks.Ticket{Name: tasks.FireWatchTicket}
+	s.Needs = append(s.Needs, tasks.Need{Ticket: ticket, Count: 1, Watch: true, Pos: t.Pos})
+	s.Watcher = &tasks.Need{Ticket: ticket, Count: 1, Watch: true, Pos: t.Pos}
+}
+
+// DefaultWatch is the fire watch after hot work on site, minutes (common practice; UK Joint
+// Code of Practice: at least 1 h).
+const DefaultWatch = 60
+
+// kit sets what the step uses, and the power it draws.
+func (x *expander) kit(t *tasks.Task, s *Step, h hands) {
+	use := append([]tasks.Use(nil), t.Kit...)
+	for _, seam := range t.Seams {
+		for _, p := range x.w.Job.Procedures {
+			if p.Name == seam.Procedure && p.Kit != "" {
+				if k := x.kitNamed(p.Kit); k != nil && !uses(use, k) {
+					use = append(use, tasks.Use{Kit: k, Count: max(1, h.people), Pos: p.Pos})
+				}
+			}
+		}
+	}
+	if k := x.kitNamed(t.By); k != nil && !uses(use, k) {
+		use = append(use, tasks.Use{Kit: k, Count: 1, Pos: t.Pos})
+	}
+	drawn := false
+	for _, u := range use {
+		s.Kit = append(s.Kit, Use{Kit: u.Kit, Count: u.Count, Stays: u.Kit.Stays})
+		s.Power += u.Kit.Draws * float64(u.Count)
+		drawn = drawn || u.Kit.Draws > 0
+	}
+	if !drawn {
+		s.Power = h.power
+	}
+}
+
+func (x *expander) kitNamed(name string) *tasks.Kit {
+	for _, k := range x.w.Job.Kit {
+		if k.Name == name && name != "" {
+			return k
+		}
+	}
+	return nil
+}
+
+func uses(list []tasks.Use, k *tasks.Kit) bool {
+	for _, u := range list {
+		if u.Kit == k {
+			return true
+		}
+	}
+	return false
+}
+
+// statesOf sets the states of the step's kind (R12).
+func (x *expander) statesOf(t *tasks.Task, s *Step, h hands) {
+	if s.Hot {
+		s.States = append(s.States, State{Name: tasks.HotWorkState})
+	}
+	if h.grit && t.Kind == tasks.Prep {
+		s.States = append(s.States, State{Name: tasks.Grit})
+	}
+	if t.Kind == tasks.Lift {
+		s.States = append(s.States, State{Name: tasks.LoadOverhead})
+	} else {
+		s.States = append(s.States, State{Name: tasks.PeopleState})
+	}
+	for _, name := range t.States {
+		s.States = append(s.States, State{Name: name})
+	}
+}
+
+// standing adds the clock time that a task keeps: alone, or after its hands-on part.
+func (x *expander) standing(t *tasks.Task, after *Step) *Step {
+	name := t.Why
+	if name == "" {
+		name = "standing"
+	}
+	minutes := whole(x.pick(t.Standing))
+	s := x.clock(t, name, minutes, origin.Written("standing time", x.pick(t.Standing), "min", t.Standing.Pos.Origin("standing")))
+	s.Estimate.Range = [3]int{whole(t.Standing.Low), whole(t.Standing.Likely), whole(t.Standing.High)}
+	s.Needs = append(s.Needs, t.Keeps...)
+	if len(s.Needs) > 0 {
+		s.InOneGo, s.OverMeals, s.Working = true, false, minutes
+		s.Class = Hands
+		s.HandsOn, s.Clock = minutes, 0
+		for _, n := range s.Needs {
+			s.Room += n.Count
+		}
+	}
+	if after != nil {
+		x.tie(after, s, s.Name)
+	} else if t.NotBefore != nil {
+		s.NotBefore = max(s.NotBefore, x.moment(*t.NotBefore))
+	}
+	return s
+}
+
+// clock makes a standing step of so many minutes.
+func (x *expander) clock(t *tasks.Task, name string, minutes int, f origin.Figure) *Step {
+	s := x.step(t, name)
+	s.Class, s.Clock = Clock, minutes
+	s.Estimate.Figure = f
+	s.Estimate.Range = [3]int{minutes, minutes, minutes}
+	return s
+}
+
+// tie makes a step start exactly when another finishes (R10).
+func (x *expander) tie(from, to *Step, why string) {
+	x.w.Links = append(x.w.Links, Link{From: from, To: to, FromEnd: tasks.Finish, ToEnd: tasks.Start,
+		Min: 0, Max: 0, Pos: to.Task.Pos, Why: why})
+}
+
+// afterWeld adds cooling, and the hold before NDT where a test waits for it.
+func (x *expander) afterWeld(t *tasks.Task, main *Step) {
+	e, ok := x.welded[t]
+	if !ok || main.HandsOn == 0 {
+		return
+	}
+	name := t.Name
+	x.states[name+" / cooled"], x.states[name+" / ready for NDT"] = main, main
+	if e.Cooling > 0 {
+		s := x.clock(t, "cooling", e.Cooling.Whole(), e.Why.Cooling)
+		x.tie(main, s, "cooling")
+		x.states[name+" / cooled"], x.states[name+" / ready for NDT"] = s, s
+	}
+	if e.BeforeNDT > e.Cooling && x.tested(t) {
+		s := x.clock(t, "hold before NDT", e.BeforeNDT.Whole(), e.Why.BeforeNDT)
+		x.tie(main, s, "hold before NDT")
+		x.states[name+" / ready for NDT"] = s
+	}
+}
+
+func (x *expander) tested(t *tasks.Task) bool {
+	for _, u := range x.w.Job.Tasks {
+		if u.Kind != tasks.Test {
+			continue
+		}
+		for _, l := range u.Links {
+			if l.Task == t.Name {
+				return true
+			}
+		}
+	}
+	return false
+}
+
+// moment resolves a moment and reports one that cannot be.
+func (x *expander) moment(m tasks.Moment) hours.Minute {
+	at, clock, ok := x.w.Window.At(m)
+	if !ok {
+		why := "that weekday does not fall just once in the window"
+		if clock == hours.Gap {
+			why = "the clocks go forward over it"
+		}
+		x.fault(m.Pos, "write the date, for instance "+x.w.Window.DayOne().String()+" 10:15", "time %q: %s", m.Text, why)
+	}
+	return at
+}
+
+// deadlines collects the deadlines and puts them on the steps (R18).
+func (x *expander) deadlines() {
+	w := x.w
+	w.Deadlines = append(w.Deadlines, Deadline{By: w.Window.Closes, Pos: w.Window.Pos})
+	for _, t := range w.Job.Tasks {
+		if t.Deadline == nil || x.absent[t] {
+			continue
+		}
+		by := x.moment(*t.Deadline)
+		step := x.lastHands(t)
+		step.Deadline = min(step.Deadline, by)
+		w.Deadlines = append(w.Deadlines, Deadline{Task: t, Step: step, By: by, Pos: t.Deadline.Pos})
+	}
+}
+
+// lastHands gives the last step of t that people work on, or its last step.
+func (x *expander) lastHands(t *tasks.Task) *Step {
+	steps := x.first[t]
+	for i := len(steps) - 1; i >= 0; i-- {
+		if steps[i].Class == Hands {
+			return steps[i]
+		}
+	}
+	return steps[len(steps)-1]
+}
+
+// homeward holds home work on a travelled assembly to the time of leaving (R1).
+func (x *expander) homeward() {
+	w := x.w
+	leaves := w.Window.Opens
+	if w.Trip != nil {
+		leaves = w.Trip.Leaves
+	}
+	travels := map[string]bool{}
+	for _, s := range w.Steps {
+		if s.Site {
+			for _, a := range append(s.Works, s.Moves) {
+				travels[a] = a != ""
+			}
+		}
+	}
+	for _, s := range w.Steps {
+		if s.Site {
+			continue
+		}
+		for _, a := range append(s.Works, s.Moves) {
+			if travels[a] {
+				s.Deadline = min(s.Deadline, leaves)
+			}
+		}
+	}
+}
+
+// orders resolves the order rules (R17).
+func (x *expander) orders() {
+	for _, o := range x.w.Job.Orders {
+		out := Order{Pos: o.Pos, Text: o.Text}
+		for _, c := range o.Choices {
+			a, b := x.byName[c.First], x.byName[c.Then]
+			if a == nil || b == nil || x.absent[a] || x.absent[b] {
+				out.Choices = nil
+				break
+			}
+			out.Choices = append(out.Choices, Before{First: x.handsOf(a), Then: x.handsOf(b)})
+		}
+		if len(out.Choices) > 0 {
+			x.w.Orders = append(x.w.Orders, out)
+		}
+	}
+}
+
+func (x *expander) handsOf(t *tasks.Task) []*Step {
+	var out []*Step
+	for _, s := range x.first[t] {
+		if s.Class == Hands {
+			out = append(out, s)
+		}
+	}
+	return out
+}
