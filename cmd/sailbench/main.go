@@ -1,0 +1,66 @@
+// Command sailbench solves open scheduling instances under a time limit and says how well:
+// proved, gap to the best known finish, time to the first plan, to the best and to the proof.
+package main
+
+import (
+	"context"
+	"flag"
+	"fmt"
+	"io"
+	"os"
+	"os/signal"
+	"time"
+)
+
+func main() {
+	ctx, stop := signal.NotifyContext(context.Background(), os.Interrupt)
+	err := run(ctx, os.Args[1:], os.Stdout, os.Stderr)
+	stop()
+	if err != nil {
+		fmt.Fprintln(os.Stderr, "sailbench:", err)
+		os.Exit(1)
+	}
+}
+
+// settings are the flags.
+type settings struct {
+	limit   time.Duration
+	workers int
+	csv     string
+	every   int
+	offset  int
+	verbose bool
+}
+
+// run reads the flags, solves the instances and prints the rows and the summary. A wrong answer
+// is an error.
+func run(ctx context.Context, args []string, out, talk io.Writer) error {
+	var o settings
+	fl := flag.NewFlagSet("sailbench", flag.ContinueOnError)
+	fl.SetOutput(talk)
+	fl.Usage = func() {
+		fmt.Fprintln(talk, "usage: sailbench [flags] PATH...    files or folders of .sm, .sch or .rcp instances")
+		fl.PrintDefaults()
+	}
+	fl.DurationVar(&o.limit, "limit", 30*time.Second, "most time for one instance")
+	fl.IntVar(&o.workers, "workers", 1, "instances solved at the same time")
+	fl.StringVar(&o.csv, "csv", "", "write the rows to this file")
+	fl.IntVar(&o.every, "every", 1, "take one in so many instances of each folder")
+	fl.IntVar(&o.offset, "from", 0, "the first one taken, counted from 0")
+	fl.BoolVar(&o.verbose, "v", false, "print each row when it is done")
+	if err := fl.Parse(args); err != nil {
+		return err
+	}
+	if fl.NArg() == 0 {
+		fl.Usage()
+		return fmt.Errorf("no instances given")
+	}
+	if o.limit <= 0 || o.workers < 1 || o.every < 1 || o.offset < 0 {
+		return fmt.Errorf("-limit, -workers and -every must be above 0, -from at least 0")
+	}
+	folders, err := gather(fl.Args(), o)
+	if err != nil {
+		return err
+	}
+	return bench(ctx, folders, o, out, talk)
+}

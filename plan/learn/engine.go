@@ -1,0 +1,161 @@
+package learn
+
+// engine is the search at work: bounds, clauses, arcs and propagators, brought to a fixpoint
+// after each decision.
+type engine struct {
+	trail
+	store
+	arcs  arcs
+	atoms atoms
+
+	rules    []rule
+	watching [][]int32 // by side: the rules that look at it
+	dirty    []bool
+	queue    []int32
+	done     int // trail entries propagated
+
+	clash []fact // facts that cannot hold together, after a failed raise
+	ticks int64
+
+	// scratch of the conflict analysis
+	need     []int32 // by side: the value asked for
+	needAt   []int32 // the entry that reached it, -1 if nothing is asked
+	asked    []side  // sides asked for, some no longer
+	listed   []bool
+	learnt   []fact
+	scratch  []fact
+	proven   map[int64]int8
+	stamp    []int64 // by level
+	stampNow int64
+
+	conflicts int64
+	dead      bool // no solution at all under the root facts
+}
+
+// rule is a propagator: it raises sides from the bounds of several variables, and can say why.
+// With explain, out gets facts that held before entry idx and lead to f; note is what run gave
+// in the reason.
+type rule interface {
+	run(e *engine) bool
+	explain(e *engine, f fact, note, idx int32, out []fact) []fact
+}
+
+func newEngine() *engine {
+	return &engine{atoms: newAtoms(), store: store{bump: 1}, proven: map[int64]int8{}}
+}
+
+// variable makes a variable and the lists that go by its sides.
+func (e *engine) variable(lo, hi int32) side {
+	s := e.add(lo, hi)
+	for k := 0; k < 2; k++ {
+		e.watch = append(e.watch, nil)
+		e.arcs.plain = append(e.arcs.plain, nil)
+		e.arcs.other = append(e.arcs.other, nil)
+		e.arcs.wakes = append(e.arcs.wakes, nil)
+		e.watching = append(e.watching, nil)
+		e.need = append(e.need, 0)
+		e.needAt = append(e.needAt, -1)
+		e.listed = append(e.listed, false)
+	}
+	return s
+}
+
+// attach adds a rule that is woken by raises of the sides.
+func (e *engine) attach(r rule, sides []side) {
+	id := int32(len(e.rules))
+	e.rules = append(e.rules, r)
+	e.dirty = append(e.dirty, true)
+	e.queue = append(e.queue, id)
+	for _, s := range sides {
+		e.watching[s] = append(e.watching[s], id)
+	}
+}
+
+// raise sets side s to at least v. If that is impossible it fills the clash and gives false.
+func (e *engine) raise(s side, v int32, w why) bool {
+	if e.now[s] >= v {
+		return true
+	}
+	if e.now[s^1] >= 1-v {
+		least := 1 - e.now[s^1] // the least value that is impossible
+		e.clash = e.reason(fact{s, least}, w, int32(len(e.list)), e.clash[:0])
+		e.clash = append(e.clash, fact{s ^ 1, 1 - least})
+		return false
+	}
+	e.push(s, v, w)
+	return true
+}
+
+// reason gives the facts behind f, raised for w at entry idx.
+func (e *engine) reason(f fact, w why, idx int32, out []fact) []fact {
+	switch w.kind {
+	case whyClause:
+		for _, g := range e.clause(w.id) {
+			if g.s != f.s {
+				out = append(out, g.not())
+			}
+		}
+	case whyArc:
+		return e.arcReason(w.id, f, out)
+	case whyOff:
+		return e.offReason(w.id, idx, out)
+	case whyRule:
+		return e.rules[w.id].explain(e, f, w.at, idx, out)
+	}
+	return out
+}
+
+// settle propagates to a fixpoint: arcs and clauses first, then the rules in turn. It gives
+// false with the clash filled in if the bounds contradict each other.
+func (e *engine) settle() bool {
+	for {
+		for e.done < len(e.list) {
+			r := &e.list[e.done]
+			s := r.s
+			latest := e.top[s] == int32(e.done)
+			e.done++
+			if !latest {
+				continue
+			}
+			for _, id := range e.watching[s] {
+				if !e.dirty[id] {
+					e.dirty[id] = true
+					e.queue = append(e.queue, id)
+				}
+			}
+			if !e.follow(s) || !e.visit(s) {
+				return false
+			}
+		}
+		if len(e.queue) == 0 {
+			return true
+		}
+		id := e.queue[0]
+		e.queue = append(e.queue[:0], e.queue[1:]...)
+		e.dirty[id] = false
+		if !e.rules[id].run(e) {
+			return false
+		}
+	}
+}
+
+// retreat takes back all levels above k.
+func (e *engine) retreat(k int32) {
+	if e.level() > k {
+		e.cut(e.head[k])
+	}
+	e.done = min(e.done, len(e.list))
+	for _, id := range e.queue {
+		e.dirty[id] = false
+	}
+	e.queue = e.queue[:0]
+	e.atoms.back(k)
+}
+
+// decide takes a decision: f begins a new level.
+func (e *engine) decide(f fact) {
+	e.head = append(e.head, int32(len(e.list)))
+	if !e.holds(f) {
+		e.push(f.s, f.v, why{kind: whyChoice})
+	}
+}

@@ -1,0 +1,287 @@
+package learn
+
+import "sort"
+
+// A user is an activity as a resource sees it: it holds amount from its start to its finish.
+type user struct {
+	start  side
+	finish side  // the finish is the lower side of this, plus length
+	length int32 // where finish is start: the fixed length; else 0
+	amount int32
+}
+
+// timetable is a resource with a capacity at every minute, by compulsory parts: whatever the
+// rest of the plan, an activity runs from its latest start to its earliest finish if these are in
+// that order. The sum of these parts is the profile; where it is above the capacity there is no
+// plan, and an activity cannot start where the profile leaves it too little.
+//
+// Explanation, by points (Schutt, Feydy, Stuckey and Wallace 2011): that activities o cover t is
+// [start o <= t] and [finish o >= t+1] for each; if they leave less than j needs at t, then
+// [finish j >= t+1] gives [start j >= t+1], and [start j <= t] gives [finish j <= t].
+//
+// Cost of a run: O(n) where the orders by latest start and earliest finish have changed little,
+// and O(n x segments) for the activities that the highest part keeps from starting.
+type timetable struct {
+	id       int32
+	capacity int32
+	users    []user
+	byStart  []int32 // users by latest start
+	byFinish []int32 // users by earliest finish
+	from     []int32 // segments of the profile: where they begin
+	level    []int32 // and how much is used
+	key      []int32
+	cover    []covering
+}
+
+// covering is an activity that covers a point, with the later entry of its two facts.
+type covering struct{ user, amount, last int32 }
+
+func newTimetable(e *engine, capacity int32, users []user) {
+	c := &timetable{id: int32(len(e.rules)), capacity: capacity, users: users, key: make([]int32, len(users))}
+	var sides []side
+	for i, u := range users {
+		c.byStart = append(c.byStart, int32(i))
+		c.byFinish = append(c.byFinish, int32(i))
+		sides = append(sides, u.start, u.start^1)
+		if u.finish != u.start {
+			sides = append(sides, u.finish, u.finish^1)
+		}
+	}
+	e.attach(c, sides)
+}
+
+func (e *engine) latestStart(u *user) int32    { return -e.now[u.start^1] }
+func (e *engine) earliestFinish(u *user) int32 { return e.now[u.finish] + u.length }
+func (e *engine) latestFinish(u *user) int32   { return u.length - e.now[u.finish^1] }
+
+// startBy and finishFrom are the facts that the user starts at t or before, and that it finishes
+// at t or later.
+func (u *user) startBy(t int32) fact    { return fact{u.start ^ 1, -t} }
+func (u *user) startFrom(t int32) fact  { return fact{u.start, t} }
+func (u *user) finishFrom(t int32) fact { return fact{u.finish, t - u.length} }
+func (u *user) finishBy(t int32) fact   { return fact{u.finish ^ 1, u.length - t} }
+
+// order sorts ids by key; they are nearly in order already.
+func order(ids, key []int32) {
+	for i := 1; i < len(ids); i++ {
+		x := ids[i]
+		k := key[x]
+		j := i
+		for ; j > 0 && key[ids[j-1]] > k; j-- {
+			ids[j] = ids[j-1]
+		}
+		ids[j] = x
+	}
+}
+
+// build makes the profile and gives its greatest level.
+func (c *timetable) build(e *engine) int32 {
+	for i := range c.users {
+		c.key[i] = e.latestStart(&c.users[i])
+	}
+	order(c.byStart, c.key)
+	for i := range c.users {
+		c.key[i] = e.earliestFinish(&c.users[i])
+	}
+	order(c.byFinish, c.key)
+	e.ticks += int64(len(c.users))
+	c.from, c.level = c.from[:0], c.level[:0]
+	used, most := int32(0), int32(0)
+	i, j, n := 0, 0, len(c.users)
+	for i < n || j < n {
+		for i < n && !c.compulsory(e, c.byStart[i]) {
+			i++
+		}
+		for j < n && !c.compulsory(e, c.byFinish[j]) {
+			j++
+		}
+		if j == n {
+			break
+		}
+		t := e.earliestFinish(&c.users[c.byFinish[j]])
+		if i < n {
+			t = min(t, e.latestStart(&c.users[c.byStart[i]]))
+		}
+		for i < n {
+			u := &c.users[c.byStart[i]]
+			if c.compulsory(e, c.byStart[i]) {
+				if e.latestStart(u) != t {
+					break
+				}
+				used += u.amount
+			}
+			i++
+		}
+		for j < n {
+			u := &c.users[c.byFinish[j]]
+			if c.compulsory(e, c.byFinish[j]) {
+				if e.earliestFinish(u) != t {
+					break
+				}
+				used -= u.amount
+			}
+			j++
+		}
+		most = max(most, used)
+		c.from = append(c.from, t)
+		c.level = append(c.level, used)
+	}
+	return most
+}
+
+func (c *timetable) compulsory(e *engine, i int32) bool {
+	u := &c.users[i]
+	return e.latestStart(u) < e.earliestFinish(u)
+}
+
+// run checks the profile and pushes activities out of where it leaves them too little.
+func (c *timetable) run(e *engine) bool {
+	most := c.build(e)
+	if most > c.capacity {
+		k := 0
+		for c.level[k] <= c.capacity {
+			k++
+		}
+		t := c.from[k] + (c.from[k+1]-c.from[k])/2
+		e.clash = c.covers(e, t, -1, int32(len(e.list)), e.clash[:0])
+		return false
+	}
+	for i := range c.users {
+		u := &c.users[i]
+		if u.amount+most <= c.capacity || e.fixed(u.start) && e.fixed(u.finish) {
+			continue
+		}
+		if !c.later(e, int32(i)) || !c.earlier(e, int32(i)) {
+			return false
+		}
+	}
+	return true
+}
+
+// at gives the segment that holds t, -1 if t is before the first.
+func (c *timetable) at(t int32) int {
+	lo, hi := 0, len(c.from)
+	for lo < hi {
+		if m := (lo + hi) / 2; c.from[m] <= t {
+			lo = m + 1
+		} else {
+			hi = m
+		}
+	}
+	return lo - 1
+}
+
+// later raises the earliest start of user i over the segments that leave it too little.
+func (c *timetable) later(e *engine, i int32) bool {
+	u := &c.users[i]
+	lst := e.latestStart(u)
+	own := lst < e.earliestFinish(u)
+	for k := max(0, c.at(e.now[u.start])); k < len(c.from)-1; k++ {
+		e.ticks++
+		if c.from[k] >= e.earliestFinish(u) || own && c.from[k] >= lst {
+			return true // free so far, or in its own part of the profile
+		}
+		if c.level[k]+u.amount <= c.capacity {
+			continue
+		}
+		for e.now[u.start] < c.from[k+1] {
+			t := min(c.from[k+1], e.earliestFinish(u)) - 1
+			if t < c.from[k] || t < e.now[u.start] {
+				break
+			}
+			if !e.raise(u.start, t+1, why{whyRule, c.id, t}) {
+				return false
+			}
+		}
+	}
+	return true
+}
+
+// earlier lowers the latest finish of user i over the segments that leave it too little.
+func (c *timetable) earlier(e *engine, i int32) bool {
+	u := &c.users[i]
+	ect := e.earliestFinish(u)
+	own := e.latestStart(u) < ect
+	for k := min(len(c.from)-2, c.at(e.latestFinish(u)-1)); k >= 0; k-- {
+		e.ticks++
+		if c.from[k+1] <= e.latestStart(u) || own && c.from[k+1] <= ect {
+			return true
+		}
+		if c.level[k]+u.amount <= c.capacity {
+			continue
+		}
+		for e.latestFinish(u) > c.from[k] {
+			t := max(c.from[k], e.latestStart(u))
+			if t >= c.from[k+1] || t >= e.latestFinish(u) {
+				break
+			}
+			f := u.finishBy(t)
+			if !e.raise(f.s, f.v, why{whyRule, c.id, t}) {
+				return false
+			}
+		}
+	}
+	return true
+}
+
+// explain gives the activities that leave the user of f too little at a point, and that the
+// user would be there. A point that is just enough for f is tried before the one of the run.
+func (c *timetable) explain(e *engine, f fact, t, idx int32, out []fact) []fact {
+	var u *user
+	i := int32(-1)
+	for k := range c.users {
+		if u = &c.users[k]; u.start == f.s || u.finish^1 == f.s {
+			i = int32(k)
+			break
+		}
+	}
+	base := len(out)
+	if f.s == u.start {
+		out = append(out, u.finishFrom(f.v))
+		if out = c.covers(e, f.v-1, i, idx, out); len(out) > base+1 {
+			return out
+		}
+		out = append(out[:base], u.finishFrom(t+1))
+		return c.covers(e, t, i, idx, out)
+	}
+	point := u.length - f.v // [finish <= point]
+	out = append(out, u.startBy(point))
+	if out = c.covers(e, point, i, idx, out); len(out) > base+1 {
+		return out
+	}
+	out = append(out[:base], u.startBy(t))
+	return c.covers(e, t, i, idx, out)
+}
+
+// covers adds the facts by which activities other than skip cover t so far that they leave too
+// little for skip (for nobody, if skip is -1), as things were before entry idx. Of those that could
+// be left out the ones that came last go. It adds nothing if they leave enough.
+func (c *timetable) covers(e *engine, t, skip, idx int32, out []fact) []fact {
+	spare := -c.capacity - 1
+	if skip >= 0 {
+		spare += c.users[skip].amount
+	}
+	c.cover = c.cover[:0]
+	for k := range c.users {
+		u := &c.users[k]
+		a, b := u.startBy(t), u.finishFrom(t+1)
+		if int32(k) == skip || e.before(a.s, idx) < a.v || e.before(b.s, idx) < b.v {
+			continue
+		}
+		spare += u.amount
+		c.cover = append(c.cover, covering{int32(k), u.amount, max(e.entry(a), e.entry(b))})
+	}
+	if spare < 0 {
+		return out
+	}
+	sort.SliceStable(c.cover, func(i, j int) bool { return c.cover[i].last > c.cover[j].last })
+	for _, k := range c.cover {
+		if k.amount <= spare && e.list[k.last].level > 0 {
+			spare -= k.amount
+			continue
+		}
+		u := &c.users[k.user]
+		out = append(out, u.startBy(t), u.finishFrom(t+1))
+	}
+	return out
+}
