@@ -17,6 +17,7 @@ type Job struct {
 	Celsius float64 // temperature of paint and steel, C
 	Site    bool    // out of doors: wind takes spray, and less of the hour is at the face
 	Stripe  float64 // m of edges and welds to stripe by brush beforehand; 0 is none
+	Mask    float64 // m of edge to tape, for instance of bare strips left for welds; 0 is none
 	Profile float64 // blast profile Rz in um that this coat must fill, 0 to 150; 0 over another coat
 	Rate    float64 // own rate in m2 an hour of one painter; 0 is the table's
 	Loss    float64 // own loss, share of the paint; 0 is the table's
@@ -25,7 +26,7 @@ type Job struct {
 // Application is what one coat takes. Minutes are one painter's hands-on minutes without face
 // factor; waiting and drying are not in them.
 type Application struct {
-	Minutes     quantity.HandsOn // likely: setting up, mixing, applying, cleaning
+	Minutes     quantity.HandsOn // likely: setting up, masking, mixing, applying, cleaning
 	Range       quantity.Range   // minutes: low, likely, high
 	Wet         float64          // um, to be measured at once with a comb
 	Spreading   float64          // theoretical, m2/L
@@ -109,6 +110,7 @@ func (j Job) checked() (Job, error) {
 		within("the area", j.Area, 0.01, 1e5, "m2", "add up the faces to be coated"),
 		within("the temperature", j.Celsius, lowCelsius, highCelsius, "C", "give the temperature of steel and paint"),
 		within("the stripe coat", j.Stripe, 0, 1e5, "m", "give the length of edges and welds"),
+		within("the masking", j.Mask, 0, 1e5, "m", "give the length of edge to tape"),
 		within("the profile", j.Profile, 0, 150, "um", "give Rz in um, for instance 60 um; 0 over another coat"),
 		within("the rate", j.Rate, 0, 1000, "m2/h", "give one painter's own rate"),
 		share("the loss", j.Loss, 0, 0.9, "give the share of paint that is lost, for instance 30 %"),
@@ -194,9 +196,9 @@ func (j Job) warnings(a Application, low, high float64) []string {
 	if j.Celsius > p.ApplyMax {
 		add("%s is hotter than the paint's greatest %s: it may not go on", amount(j.Celsius, "C"), amount(p.ApplyMax, "C"))
 	}
-	if n := passes(j.Method, a.Wet); n > 1 {
-		add("a wet film of %s is more than %s usually leaves in one pass (%s): %d passes are counted, drying between them is not",
-			amount(math.Round(a.Wet), "um"), j.Method, amount(onePass[j.Method], "um"), n)
+	if load(j.Method, a.Wet) > 1 {
+		add("a wet film of %s is more than %s usually leaves in one pass (%s): the work is counted in proportion, a further coat and its drying are not",
+			amount(math.Round(a.Wet), "um"), j.Method, amount(onePass[j.Method], "um"))
 	}
 	if high > low*1.25 {
 		add("losses may be anything from %s to %s of paint: take the tins for %s", amount(low, "L"), amount(high, "L"), amount(high, "L"))

@@ -21,7 +21,7 @@ func primer() Paint {
 	}
 }
 
-// sum adds up a formula whose inputs are added: the tree must give its own value.
+// child finds a figure in a tree by its name.
 func child(f origin.Figure, name string) origin.Figure {
 	var out origin.Figure
 	f.Walk(func(g origin.Figure, _ int) {
@@ -81,18 +81,13 @@ func TestBatchesByPotLife(t *testing.T) {
 		celsius float64
 		site    bool
 		life    float64
-		batches float64
-	}{
-		{21, false, 240, 240 / (2 * 9.3 * 0.5) * 60 / 0.85},
-		{31, false, 120, 240 / (2 * 9.3 * 0.5) * 60 / 0.85},
-		{31, true, 120, 240 / (2 * 9.3 * 0.5) * 60 / 0.7},
-	} {
+	}{{21, false, 240}, {31, false, 120}, {31, true, 120}, {11, false, 480}} {
 		a, err := Apply(Job{Paint: p, Area: 120, Method: Brush, Surface: Sections, Celsius: c.celsius, Site: c.site})
 		if err != nil {
 			t.Fatal(err)
 		}
-		passes := 2.0 // 125 um wet by brush
-		elapsed := 120 * passes / (9.3 * 0.5) * 60 / map[bool]float64{true: 0.7, false: 0.85}[c.site]
+		thick := 125.0 / 120 // wet film over one pass by brush
+		elapsed := 120 * thick / (9.3 * 0.5) * 60 / map[bool]float64{true: 0.7, false: 0.85}[c.site]
 		want := int(math.Ceil(elapsed / (c.life * 0.8)))
 		if a.Batches != want {
 			t.Errorf("%v C: %d mixes, want %d", c.celsius, a.Batches, want)
@@ -133,6 +128,21 @@ func TestLossesAddUp(t *testing.T) {
 	near(t, "own loss", apply(Job{Method: Airless, Loss: 0.2, Site: true}).Loss, 0.2, 1e-9)
 	near(t, "lattice by airless, from memory 40-60 %", apply(Job{Method: Airless, Surface: Lattice}).Loss, 0.5, 1e-9)
 	near(t, "a profile of 60 um takes 0.04 L/m2 of dry film", apply(Job{Method: Brush, Profile: 60}).Litres-apply(Job{Method: Brush}).Litres, 30*0.04/0.53/0.875, 1e-9)
+	p.Thinner = 0.25
+	thin := apply(Job{Method: Airless, Surface: Flat})
+	near(t, "thinner", thin.Thinner, thin.Litres*0.25, 1e-9)
+	near(t, "wet film of thinned paint", thin.Wet, 55*1.25/0.53, 1e-9)
+	p.Thinner = 0
+	near(t, "paint without thinner is the same", apply(Job{Method: Airless, Surface: Flat}).Litres, thin.Litres, 1e-9)
+	near(t, "cleaner for one mix", thin.Cleaner, 5, 1e-9)
+	p.PotLife = at(hour, 20, 2)
+	many := apply(Job{Method: Brush, Surface: Lattice})
+	near(t, "cleaner for each further mix", many.Cleaner, 0.5+0.25*float64(many.Batches-1), 1e-9)
+	if many.Batches < 2 {
+		t.Errorf("%d mixes of a quick paint", many.Batches)
+	}
+	p.PotLife = zincPhosphatePot
+	near(t, "masking 20 m", float64(apply(Job{Method: Brush, Mask: 20}).Minutes-apply(Job{Method: Brush}).Minutes), 30, 1e-9)
 	near(t, "own rate", apply(Job{Method: Brush, Rate: 15}).Range.Low, 20+10+120, 1e-9)
 }
 
@@ -165,7 +175,7 @@ func TestApplyWarns(t *testing.T) {
 	}{
 		{Job{Paint: primer(), Celsius: 2}, "2 C is colder than the paint's least 5 C"},
 		{Job{Paint: primer(), Celsius: 41}, "41 C is hotter than the paint's greatest 40 C"},
-		{Job{Paint: thick, Celsius: 20, Method: Roller}, "a wet film of 377 um is more than roller usually leaves in one pass (120 um): 4 passes"},
+		{Job{Paint: thick, Celsius: 20, Method: Roller}, "a wet film of 377 um is more than roller usually leaves in one pass (120 um)"},
 		{Job{Paint: primer(), Celsius: 20, Method: Airless, Surface: Lattice}, "losses may be anything"},
 		{Job{Paint: pu, Celsius: 20, Method: AirSpray}, "isocyanate"},
 		{Job{Paint: primer(), Celsius: 20, Method: Airless}, "under the skin"},

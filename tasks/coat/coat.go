@@ -11,6 +11,7 @@ import (
 	"sort"
 
 	"sailby/tasks/origin"
+	"sailby/tasks/quantity"
 )
 
 // The ways to apply paint.
@@ -60,8 +61,11 @@ type Paint struct {
 	Induction          float64            // minutes the mix must stand before use
 	Thinner            float64            // share of the paint's volume
 	Isocyanate         bool
-	Origin             origin.Origin            // where the figures come from
-	Sources            map[string]origin.Origin // where single figures come from, by the names of State, "next coat", "volume solids" and so on
+	Origin             origin.Origin // where the figures come from
+	// Sources tells where single figures come from, by name: those of States, "volume solids", "dft",
+	// "pot life", "induction", "next coat", "next coat max", "apply", "humidity", "dew spread",
+	// "wind" and "dry hours". What is not in it comes from Origin.
+	Sources map[string]origin.Origin
 }
 
 // States lists the names of a film's states in the order in which they come.
@@ -78,17 +82,26 @@ func (p Paint) State(name string) (Curve, bool) {
 
 // Wait gives the minutes until a state at a steady steel temperature, with where they come from;
 // "immersion max" gives the longest time allowed. Errors: an unknown state, one that the paint does
-// not state, those of Curve.Time.
+// not state, ErrCold below ApplyMin, those of Curve.Time.
 func (p Paint) Wait(state string, celsius float64) (minutes float64, figure origin.Figure, err error) {
 	c, ok := p.State(state)
 	if !ok {
 		return 0, figure, fault("give its points by temperature; the states are "+oneOf(States()), "paint %q does not say when it is %q", p.Name, state)
 	}
-	s := toWait
 	if word(state) == "immersion max" {
-		s = toLive
+		return c.figure(word(state), celsius, toLive, p.source(word(state)))
 	}
-	return c.figure(word(state), celsius, s, p.source(word(state)))
+	if celsius < p.ApplyMin {
+		return 0, figure, p.coldFault(celsius)
+	}
+	return c.figure(word(state), celsius, toWait, p.source(word(state)))
+}
+
+func (p Paint) coldFault(celsius float64) error {
+	return &coldFault{quantity.Error{
+		Problem: fmt.Sprintf("paint %s does not cure at %s, its own least is %s", called(p), amount(celsius, "C"), amount(p.ApplyMin, "C")),
+		Hint:    "keep the steel warm, wait for warmer hours, or take a paint with a winter hardener",
+	}}
 }
 
 // Next gives the window for coat q over this one: by q's name, else its kind, else "any".
@@ -117,12 +130,15 @@ func (p Paint) Next(q Paint) (Recoat, error) {
 }
 
 // Window gives the least and the longest wait in minutes for coat q over this one at a steady steel
-// temperature; most has the text "none" where there is no longest wait. Errors: those of Next and
-// of Curve.Time.
+// temperature; most has the text "none" where there is no longest wait. Errors: those of Next,
+// ErrCold below ApplyMin, those of Curve.Time.
 func (p Paint) Window(q Paint, celsius float64) (least, most origin.Figure, err error) {
 	r, err := p.Next(q)
 	if err != nil {
 		return least, most, err
+	}
+	if celsius < p.ApplyMin {
+		return least, most, p.coldFault(celsius)
 	}
 	if _, least, err = r.Min.figure("least wait", celsius, toWait, p.source("next coat")); err != nil {
 		return least, most, err

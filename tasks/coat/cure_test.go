@@ -51,6 +51,9 @@ func TestColdNightCountsForNothing(t *testing.T) {
 	if !ok || finish != (16+10)*60 {
 		t.Errorf("finish %d min (%v), want 26 h", finish, ok)
 	}
+	if finish, ok := Cure(0, zincPhosphateDry, 5, steady(5), 1e6); !ok || finish <= 24*60 {
+		t.Errorf("at the least temperature itself: %d %v, want cure, later than at 10 C", finish, ok)
+	}
 	if end, ok := Cure(0, zincPhosphateDry, 5, steady(4), 5000); ok || end != 5000 {
 		t.Errorf("cured at 4 C: %d %v", end, ok)
 	}
@@ -238,6 +241,21 @@ func TestWarmerSteel(t *testing.T) {
 		}
 		if ok != (sum >= 1-cureSlack) {
 			t.Fatalf("the rates sum to %v at %d, ok is %v", sum, a, ok)
+		}
+	})
+}
+
+// At any steady temperature the cure ends when Curve.Time says, rounded up to a minute.
+func TestSteadyCureIsTheTime(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		c, celsius := aCurve(t), rapid.Float64Range(-30, 60).Draw(t, "celsius")
+		finish, ok := Cure(0, c, -100, steady(celsius), 1e6)
+		minutes, _, err := c.Time(celsius)
+		if ok != (err == nil) {
+			t.Fatalf("cure %v, time %v", ok, err)
+		}
+		if ok && (float64(finish) < minutes-1e-5 || float64(finish) > minutes+1+1e-5) {
+			t.Fatalf("cured at %d, time %v", finish, minutes)
 		}
 	})
 }

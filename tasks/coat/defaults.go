@@ -97,10 +97,10 @@ func Defaults(kind string) (Paint, bool) {
 			p.Sources = map[string]origin.Origin{}
 		}
 		p.DewSpread = usualSpread
-		p.Sources["dew spread"] = origin.Origin{Kind: origin.Table, Source: "FHWA-RD-98-084: 3 C above the dew point"}
+		p.Sources["dew spread"] = table(spreadSource)
 		if p.RHMax == 0 {
 			p.RHMax = 0.85
-			p.Sources["humidity"] = origin.Origin{Kind: origin.Table, Source: "85 %: US federal specification and ISO 12944-7"}
+			p.Sources["humidity"] = table("85 %: US federal specification and ISO 12944-7")
 		}
 		p.ApplyMax = 40
 		p.WindMax = map[string]float64{}

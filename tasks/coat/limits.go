@@ -3,6 +3,8 @@ package coat
 import (
 	"fmt"
 	"math"
+
+	"sailby/tasks/origin"
 )
 
 // The usual limits where a paint says nothing.
@@ -22,12 +24,20 @@ func (p Paint) WindLimit(method string) float64 {
 	if err != nil {
 		return 0
 	}
+	if own := p.ownWind(m); own > 0 {
+		return own
+	}
+	return usualWind[m]
+}
+
+// ownWind is the paint's own limit for a method as Methods lists it; 0 is none.
+func (p Paint) ownWind(method string) float64 {
 	for _, k := range sorted(p.WindMax) {
-		if word(k) == m {
+		if word(k) == method {
 			return p.WindMax[k]
 		}
 	}
-	return usualWind[m]
+	return 0
 }
 
 // MayApply says whether a paint may be applied in the air and on the steel of one moment, and if not
@@ -103,6 +113,39 @@ func windReasons(p Paint, wind float64, method string) []string {
 	}
 	return nil
 }
+
+// Limits lists the paint's limits with where they come from, to be printed beside the boxes of the
+// paint log: steel, humidity, dew point, wind for the method, hours that must stay dry.
+func (p Paint) Limits(method string) []origin.Figure {
+	out := []origin.Figure{p.fig("steel at least", p.ApplyMin, "C"), p.fig("steel at most", p.ApplyMax, "C")}
+	for i := range out {
+		out[i].Origin = p.source("apply")
+	}
+	add := func(source, name string, v float64, unit string) {
+		if v > 0 {
+			out = append(out, origin.Figure{Name: name, Value: v, Unit: unit, Origin: p.source(source)})
+		}
+	}
+	if p.DewSpread > 0 {
+		add("dew spread", "steel above the dew point at least", p.DewSpread, "K")
+	} else {
+		out = append(out, origin.Published("steel above the dew point at least", usualSpread, "K", spreadSource))
+	}
+	add("humidity", "humidity at most", p.RHMax*100, "%")
+	add("humidity", "humidity at the steel at least", p.RHMin*100, "%")
+	if m, err := choose("method", method, "", Methods()); err == nil && m != "" {
+		name := "wind at most by " + m
+		if p.ownWind(m) > 0 {
+			add("wind", name, p.ownWind(m), "m/s")
+		} else {
+			out = append(out, origin.Recalled(name, usualWind[m], "m/s", "usual limit; the published guides give no number"))
+		}
+	}
+	add("dry hours", "dry and warm after it for", p.DryHours, "h")
+	return out
+}
+
+const spreadSource = "FHWA-RD-98-084: 3 C above the dew point, checked before the start and every 4 h"
 
 // MayHold says whether prepared steel keeps its grade in this air: at least 3 K above the dew point
 // (the criterion for holding a blast), with an advice where the surface humidity is above the 55 %

@@ -6,6 +6,8 @@ import (
 	"testing"
 
 	"pgregory.net/rapid"
+
+	"sailby/tasks/origin"
 )
 
 // plain is a paint with the published limits: 3 C above the dew point (FHWA-RD-98-084), 85 % (US federal
@@ -84,6 +86,51 @@ func TestWindLimit(t *testing.T) {
 	p := Paint{WindMax: map[string]float64{"Air-Spray": 5}}
 	if p.WindLimit(AirSpray) != 5 || p.WindLimit(Airless) != usualWind[Airless] || p.WindLimit("mop") != 0 {
 		t.Errorf("limits %v %v %v", p.WindLimit(AirSpray), p.WindLimit(Airless), p.WindLimit("mop"))
+	}
+}
+
+// An antifouling label: 10 to 32 C, humidity below 85 %, 10 C for 8 h after it, not late in the afternoon.
+func TestAntifoulingLabel(t *testing.T) {
+	p, _ := Defaults("self-polishing antifouling")
+	p.ApplyMin, p.ApplyMax = 10, 32
+	for _, c := range []struct {
+		what           string
+		air, steel, rh float64
+		open           bool
+	}{
+		{"a spring noon", 14, 15, 0.65, true},
+		{"late afternoon: the steel cools to the dew point", 11, 10, 0.84, false},
+		{"cold", 9.5, 12, 0.5, false},
+		{"sun on a dark hull", 25, 33, 0.5, false},
+		{"damp", 16, 20, 0.86, false},
+	} {
+		if ok, reasons := MayApply(p, c.air, c.steel, c.rh, 1, Roller); ok != c.open {
+			t.Errorf("%s: open %v %q", c.what, ok, reasons)
+		}
+	}
+	if p.DryHours != 8 {
+		t.Errorf("%v h to stay dry, the label says 8", p.DryHours)
+	}
+}
+
+func TestLimits(t *testing.T) {
+	p, _ := Defaults("zinc ethyl silicate")
+	byName := map[string]origin.Figure{}
+	for _, f := range p.Limits("airless") {
+		byName[f.Name] = f
+	}
+	for name, want := range map[string]string{"steel at least": "5 C", "steel at most": "40 C", "steel above the dew point at least": "3 K",
+		"humidity at most": "95 %", "humidity at the steel at least": "50 %", "wind at most by airless": "6.7 m/s", "dry and warm after it for": "8 h"} {
+		if got := byName[name].Amount(); got != want || byName[name].Origin.String() == "" {
+			t.Errorf("%s: %q from %v, want %q", name, got, byName[name].Origin, want)
+		}
+	}
+	bare := Paint{ApplyMin: 4, ApplyMax: 52}.Limits("brush")
+	if len(bare) != 4 || bare[2].Origin.Kind != origin.Table || bare[3].Origin.Kind != origin.Memory {
+		t.Errorf("a paint without limits of its own: %+v", bare)
+	}
+	if n := len(plain.Limits("mop")); n != 4 {
+		t.Errorf("%d limits for no method, want 4", n)
 	}
 }
 

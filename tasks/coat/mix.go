@@ -18,12 +18,14 @@ const (
 	stirOnePack = 3.0  // minutes a tin
 	stirAtOnce  = 5.0  // L in one tin
 	mostBatches = 10000
+	maskRate    = 40.0 // m of edge in an hour, tape on and off
 )
 
 // onePass is the wet film in um that a method usually leaves in one pass; house judgement.
 var onePass = map[string]float64{Brush: 120, Roller: 120, AirSpray: 150, Airless: 400}
 
-func passes(method string, wet float64) int { return max(1, int(math.Ceil(wet/onePass[method]-1e-9))) }
+// load is how much more work a thick film is than one pass: its share over one pass, at least 1.
+func load(method string, wet float64) float64 { return math.Max(1, wet/onePass[method]) }
 
 // speed is one painter's rate on large flat areas in m2 an hour: from, likely, to. Recalled as
 // m2 in a day of 8 h; the low end for a brush is a published base case for ordinary plant.
@@ -53,7 +55,7 @@ func (p pace) likely() float64 { return (p.fast + p.slow) / 2 }
 
 // pace reckons the minutes to apply the coat.
 func (j Job) pace(wet float64) pace {
-	n := float64(passes(j.Method, wet))
+	n := load(j.Method, wet)
 	if j.Rate > 0 {
 		m := j.Area / j.Rate * 60
 		return pace{m, m, origin.Worked("applying", m, "min", "area / own rate", given("area", j.Area, "m2"), given("rate", j.Rate, "m2/h"))}
@@ -71,9 +73,10 @@ func (j Job) pace(wet float64) pace {
 		from = append(from, origin.House("share left on open steelwork", k, "", "worse than half"))
 	}
 	if n > 1 {
-		from = append(from, origin.House("passes", n, "", "wet film over what one pass leaves"))
+		from = append(from, origin.Worked("thick film", n, "", "wet film / what one pass leaves", origin.Worked("wet film", wet, "um", "dft (1 + thinner) / volume solids"),
+			origin.House("wet film of one pass", onePass[j.Method], "um", "what "+j.Method+" usually leaves")))
 	}
-	p.figure = origin.Worked("applying", p.likely(), "min", "area x passes / rate, middle of slow and quick", from...)
+	p.figure = origin.Worked("applying", p.likely(), "min", "area x thick film / rate, middle of slow and quick", from...)
 	return p
 }
 
@@ -127,10 +130,16 @@ func (p Paint) Pot(celsius float64) (minutes float64, figure origin.Figure, err 
 func (j Job) hours(a *Application, work pace) {
 	tools := toolMinutes(j.Method)
 	mixing := j.mixing(*a)
+	from := []origin.Figure{work.figure, mixing, tools}
 	fixed := tools.Value + mixing.Value
+	if j.Mask > 0 {
+		rate := origin.House("masking", maskRate, "m/h", "tape on and off")
+		mask := origin.Worked("masking", j.Mask/maskRate*60, "min", "length / rate", given("length", j.Mask, "m"), rate)
+		from, fixed = append(from, mask), fixed+mask.Value
+	}
 	a.Range = quantity.Range{Low: fixed + work.fast, Likely: fixed + work.likely(), High: fixed + work.slow}
 	a.Minutes = quantity.HandsOn(a.Range.Likely)
-	a.Hours = origin.Worked("hands-on", a.Range.Likely, "min", "applying + mixing + tools", work.figure, mixing, tools)
+	a.Hours = origin.Worked("hands-on", a.Range.Likely, "min", "sum of the parts", from...)
 	c := cleaner[j.Method]
 	a.Cleaner = c[0] + c[1]*float64(max(0, a.Batches-1))
 }

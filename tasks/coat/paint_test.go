@@ -112,6 +112,13 @@ func TestStates(t *testing.T) {
 	if _, _, err := p.Wait("hard dry", -6); !errors.Is(err, ErrCold) {
 		t.Errorf("hard dry at -6 C: %v, want ErrCold", err)
 	}
+	// Below its own least temperature no cure at all, although the points reach further.
+	if _, _, err := p.Wait("hard dry", 4); !errors.Is(err, ErrCold) || !strings.Contains(err.Error(), "its own least is 5 C") || hint(err) == "" {
+		t.Errorf("hard dry at 4 C: %v, want ErrCold", err)
+	}
+	if _, _, err := p.Window(p, 4); !errors.Is(err, ErrCold) {
+		t.Errorf("recoat at 4 C: %v, want ErrCold", err)
+	}
 	e, _ := Defaults("epoxy")
 	hard, _, _ := e.Wait("hard dry", 10)
 	gone, fig, err := e.Wait("solvent gone", 10)

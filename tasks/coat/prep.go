@@ -28,6 +28,8 @@ type Preparation struct {
 	Grade    string         // ISO 8501-1 name with its SSPC twin
 	Method   string
 	Abrasive float64        // kg, 0 without blasting
+	People   int            // hands needed at once: blasting needs one at the nozzle and one at the pot
+	Dry      quantity.Clock // clock minutes to dry after washing or wiping; 0 for the others
 	Dust     bool           // grit and dust: no wet film and no open bearings in the workface and beside it
 	Noise    bool           // noisy work hours bind it
 	Sparks   bool           // keep it 6 m from spraying, and treat it as hot work near solvent
@@ -63,7 +65,7 @@ func Prepare(p Prep) (Preparation, error) {
 			return Preparation{}, err
 		}
 	}
-	out := Preparation{Grade: g.name, Method: p.Method}
+	out := Preparation{Grade: g.name, Method: p.Method, People: 1, Dry: drying[g.name]}
 	if g.twin != "" {
 		out.Grade += " (" + g.twin + ")"
 	}
@@ -79,6 +81,9 @@ func Prepare(p Prep) (Preparation, error) {
 	p.wait(g, &out)
 	return out, nil
 }
+
+// drying is clock time until the surface is dry again after water or solvent; house judgement.
+var drying = map[string]quantity.Clock{"fresh-water wash": 120, "solvent clean": 15}
 
 func contains(list []string, s string) bool {
 	for _, l := range list {

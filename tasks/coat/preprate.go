@@ -55,7 +55,7 @@ func (p Prep) blast(g grade, out *Preparation) error {
 	use := origin.Published("use of "+name, a.use, "kg/m2", abrasiveTable)
 	out.Abrasive = p.Area * a.use / (g.blast * states[i].blast * shape.Value)
 	out.Kilos = origin.Worked("abrasive", out.Abrasive, "kg", "area x use / (grade x state x surface)", given("area", p.Area, "m2"), use, effort, state, shape)
-	out.Dust, out.Noise, out.Sparks = true, true, true
+	out.Dust, out.Noise, out.Sparks, out.People = true, true, true, 2
 	if a.silica {
 		out.Warnings = append(out.Warnings, name+" holds free silica, and its dust kills slowly: dry blasting with it is forbidden in many countries; take another abrasive")
 	}
