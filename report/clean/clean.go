@@ -5,6 +5,7 @@
 package clean
 
 import (
+	"regexp"
 	"strings"
 	"unicode"
 	"unicode/utf8"
@@ -16,14 +17,19 @@ import (
 // than three; towers of them cover the lines above.
 const maxMarks = 3
 
+// sequence is a terminal's control sequence (ECMA-48): CSI with its parameters, or a string
+// command with its text and end.
+var sequence = regexp.MustCompile("(\x1b\\[|\u009b)[0-?]*[ -/]*[@-~]|\x1b[\\]P^_X][^\x07\x1b]*(\x07|\x1b\\\\)")
+
 // Line gives s as one line for a terminal: bad UTF-8 as "?", line breaks and tabs as a blank,
-// runs of blanks as one, without control characters (so without escape sequences' effect),
-// direction controls, invisible characters and towers of marks.
+// runs of blanks as one, without control sequences and control characters, direction
+// controls, invisible characters and towers of marks.
 func Line(s string) string {
 	var b strings.Builder
 	b.Grow(len(s))
 	marks, blank := 0, true // true drops blanks at the start
-	for _, r := range valid(s) {
+	s = sequence.ReplaceAllString(valid(s), "")
+	for _, r := range s {
 		switch {
 		case r == '\n' || r == '\r' || r == '\t' || r == '\v' || r == '\f' || r == '\u0085' || unicode.Is(unicode.Zs, r) || r == '\u2028' || r == '\u2029':
 			if !blank {

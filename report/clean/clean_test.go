@@ -11,8 +11,11 @@ func TestLine(t *testing.T) {
 	for _, c := range []struct{ what, in, want string }{
 		{"plain", "weld lugs", "weld lugs"},
 		{"accents stay", "Séamus Ó Dónaill, Łódź", "Séamus Ó Dónaill, Łódź"},
-		{"escape sequence", "\x1b[31mred\x1b[0m", "[31mred[0m"},
-		{"C1 control introducer", "a\u009b2Jb", "a2Jb"},
+		{"escape sequence", "\x1b[31mred\x1b[0m", "red"},
+		{"window title", "a\x1b]0;pwned\x07b", "ab"},
+		{"sequence in a sequence", "\x1b\x1b[1m[31mx", "[31mx"},
+		{"sequence not ended", "\x1b]0;x", "]0;x"},
+		{"C1 control introducer", "a\u009b2Jb", "ab"},
 		{"right-to-left override", "cut \u202egul", "cut gul"},
 		{"isolates", "\u2066x\u2069", "x"},
 		{"zero width", "a\u200bb\ufeffc\u00add", "abcd"},

@@ -1,0 +1,199 @@
+package agenda
+
+import (
+	"cmp"
+	"slices"
+
+	"sailby/report/clean"
+	"sailby/tasks"
+	"sailby/tasks/expand"
+	"sailby/tasks/hours"
+	"sailby/tasks/site"
+)
+
+// Gate is something that is open for part of a shift: reach of a workface, a hire, a permit.
+type Gate struct {
+	Name string
+	Open hours.Set // inside the shift
+}
+
+// Reach gives when each workface worked in can be reached during the shift, where that is
+// limited: by given access times or by tide and level, less the way off; opening up and clearing
+// up are not taken off.
+func Reach(w *expand.Work, s *Shift) []Gate {
+	var out []Gate
+	seen := map[*tasks.Workface]bool{}
+	for _, e := range s.Entries {
+		f := e.Step.Face
+		if f == nil || seen[f] {
+			continue
+		}
+		seen[f] = true
+		if set, limited := faceReach(w, f, s.Span); limited {
+			out = append(out, Gate{clean.Line(f.Name), set})
+		}
+	}
+	return out
+}
+
+func faceReach(w *expand.Work, f *tasks.Workface, in hours.Span) (hours.Set, bool) {
+	switch {
+	case f.Reach != nil:
+		var open []hours.Span
+		for _, s := range w.Window.Slots(f.Reach) {
+			s.To -= hours.Minute(f.WayOff.Value)
+			open = append(open, s)
+		}
+		return hours.NewSet(open...).Within(in), true
+	case f.Level.Pos.Given() && f.Place != nil && f.Place.Tide != nil:
+		// Asked a day wide, so that the way off is taken from the tide's end and not from the shift's.
+		wide := hours.Span{From: in.From - 1440, To: in.To + 1440}
+		spans, err := f.Place.Tide.Reach(true, f.Level.Value, int64(wide.From), int64(wide.To))
+		if err != nil {
+			return nil, false // the table does not reach so far; the plan says so where it matters
+		}
+		var open []hours.Span
+		for _, s := range site.WayOff(spans, int64(f.WayOff.Value), int64(wide.To)) {
+			open = append(open, hours.Span{From: hours.Minute(s.From), To: hours.Minute(s.To)})
+		}
+		return hours.NewSet(open...).Within(in), true
+	}
+	return nil, false
+}
+
+// Hire gives the hired kit that is there during the shift, and hired kit that a task of the
+// shift uses.
+func Hire(w *expand.Work, s *Shift) []Gate {
+	var out []Gate
+	for _, k := range w.Job.Kit {
+		if k.Slots == nil || !s.Site && k.At == nil || k.At != nil && (k.At == w.Window.Place) != s.Site {
+			continue
+		}
+		open := w.Window.Slots(k.Slots).Within(s.Span)
+		used := slices.ContainsFunc(s.Entries, func(e Entry) bool {
+			return slices.ContainsFunc(e.Step.Kit, func(u expand.Use) bool { return u.Kit == k })
+		})
+		if open.Total() > 0 || used {
+			out = append(out, Gate{clean.Line(k.Name), open})
+		}
+	}
+	return out
+}
+
+// Permits gives the permits that work of the shift wants, with their valid hours.
+func Permits(w *expand.Work, s *Shift) []Gate {
+	var out []Gate
+	for _, p := range s.placesOf() {
+		for _, m := range p.Permits {
+			wanted := slices.ContainsFunc(s.Entries, func(e Entry) bool {
+				return e.Step.Place == p && slices.Contains(e.Step.Wants, m.Name)
+			})
+			if wanted {
+				out = append(out, Gate{clean.Line(m.Name), m.Valid.Spans(s.Zone, s.Span, nil)})
+			}
+		}
+	}
+	return out
+}
+
+func (s *Shift) placesOf() []*tasks.Place {
+	var out []*tasks.Place
+	for _, e := range s.Entries {
+		if !slices.Contains(out, e.Step.Place) {
+			out = append(out, e.Step.Place)
+		}
+	}
+	return out
+}
+
+// Sun gives sunrise and sunset at the shift's place on its day as "06:31" and "20:02"; ok is
+// false where the job file gives no position or the sun does not rise or set.
+func Sun(s *Shift) (rise, set string, ok bool) {
+	if s.Place == nil || !s.Place.HasAt {
+		return "", "", false
+	}
+	midnight, _ := hours.Instant(s.Date, 0, s.Zone)
+	d, err := site.Sun(s.Place.Lat, s.Place.Lon, int64(midnight))
+	if err != nil || !d.HasRise || !d.HasSet {
+		return "", "", false
+	}
+	return Clock(hours.Minute(d.Rise), s.Zone), Clock(hours.Minute(d.Set), s.Zone), true
+}
+
+// Spare lists steps that could be worked in the shift if it has to stop: planned for later, at
+// the same place, by a ticket of somebody in the shift, with everything that comes before them
+// finished before the shift begins. At most max are given, the earliest planned first.
+func Spare(w *expand.Work, plan []Entry, s *Shift, max int) []*expand.Step {
+	done := map[int]hours.Minute{}
+	start := map[int]hours.Minute{}
+	for _, e := range plan {
+		if e.Watch {
+			continue
+		}
+		done[e.Step.Index] = e.Planned.Finish
+		start[e.Step.Index] = e.Planned.Start
+	}
+	var out []*expand.Step
+	for _, st := range w.Steps {
+		at, planned := start[st.Index]
+		if !planned || at < s.To || st.Class != expand.Hands || !slices.Contains(s.placesOf(), st.Place) ||
+			st.NotBefore > s.From || hiredOnly(st) || !s.canDo(w.Job, st) || !ready(w, st, done, s.From, 0) {
+			continue
+		}
+		out = append(out, st)
+	}
+	slices.SortStableFunc(out, func(x, y *expand.Step) int { return cmp.Compare(start[x.Index], start[y.Index]) })
+	return out[:min(len(out), max)]
+}
+
+// ready says whether all that the step waits for is finished, its waits passed, at moment t.
+func ready(w *expand.Work, s *expand.Step, done map[int]hours.Minute, t hours.Minute, depth int) bool {
+	for _, l := range w.Links {
+		if l.To != s || l.From == nil {
+			continue
+		}
+		if l.From.Absent || l.From.Class != expand.Hands { // look through it
+			if depth > len(w.Steps) || !ready(w, l.From, done, t-hours.Minute(max(l.From.Minutes(), 0)), depth+1) || l.From.Class == expand.Cure && !l.From.Absent {
+				return false
+			}
+			continue
+		}
+		at, ok := done[l.From.Index]
+		if !ok || at+hours.Minute(max(l.Min, 0)) > t {
+			return false
+		}
+	}
+	return true
+}
+
+func hiredOnly(s *expand.Step) bool {
+	return slices.ContainsFunc(s.Kit, func(u expand.Use) bool { return u.Kit != nil && u.Kit.Slots != nil })
+}
+
+// canDo says whether for each need of the step somebody in the shift has the ticket by name.
+func (s *Shift) canDo(job *tasks.Job, st *expand.Step) bool {
+	for _, n := range st.Needs {
+		n := n
+		if !slices.ContainsFunc(s.People, func(p Person) bool { return holds(job, p.Name, n) }) {
+			return false
+		}
+	}
+	return true
+}
+
+func holds(job *tasks.Job, name string, n tasks.Need) bool {
+	if n.Who != nil {
+		return slices.Contains(n.Who, name)
+	}
+	if n.Ticket.Name == "" {
+		return true
+	}
+	for _, p := range job.People {
+		if p.Name == name {
+			return slices.ContainsFunc(p.Tickets, func(t tasks.Ticket) bool {
+				return t.Name == n.Ticket.Name && (t.Process == "" || n.Ticket.Process == "" || t.Process == n.Ticket.Process)
+			})
+		}
+	}
+	return false
+}

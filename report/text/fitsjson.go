@@ -1,0 +1,89 @@
+package text
+
+import (
+	"io"
+
+	"sailby/plan"
+	"sailby/report/agenda"
+	"sailby/report/clean"
+	"sailby/tasks/expand"
+)
+
+// answerForm is one answer for machines. finish and in_hand_min are null without a plan.
+type answerForm struct {
+	Verdict   string         `json:"verdict"`
+	Basis     string         `json:"basis"`
+	Says      string         `json:"says"`
+	Window    windowForm     `json:"window"`
+	Finish    moment         `json:"finish"`
+	Earliest  moment         `json:"earliest_possible"`
+	Why       string         `json:"earliest_possible_why,omitempty"`
+	Best      bool           `json:"best"`
+	Late      bool           `json:"late"`
+	InHand    *int           `json:"in_hand_min"`
+	Gap       *int           `json:"gap_min"`
+	Deadlines []deadlineForm `json:"deadlines"`
+	Governing []causeForm    `json:"governing"`
+	Proof     *proofForm     `json:"proof"`
+	CutShort  bool           `json:"cut_short"`
+}
+
+type fitsForm struct {
+	Job  string `json:"job"`
+	File string `json:"file"`
+	answerForm
+	Maybes answerForm `json:"with_maybes"`
+	High   answerForm `json:"high_hours"`
+	Notes  []noteForm `json:"notes"`
+	Care   string     `json:"care"`
+}
+
+// FitsJSON writes what Fits prints for machines: the answer on likely hours, with the same
+// fields again under with_maybes and high_hours.
+func FitsJSON(w io.Writer, r *plan.Report) error {
+	maybes, high := r.Maybes, r.High
+	if maybes == nil {
+		maybes = r.Likely
+	}
+	if high == nil {
+		high = r.Likely
+	}
+	f := fitsForm{Job: clean.Line(r.Job.Name), File: r.Job.File, answerForm: answerOf(r.Likely, "likely", r.LowToo),
+		Maybes: answerOf(maybes, "with-maybes", false), High: answerOf(high, "high", false), Notes: []noteForm{}, Care: agenda.Care}
+	for _, n := range r.Job.Notes {
+		f.Notes = append(f.Notes, noteForm{clean.Line(n.Text), at(n.Pos)})
+	}
+	return writeJSON(w, f)
+}
+
+func answerOf(a *plan.Answer, basis string, low bool) answerForm {
+	f := answerForm{
+		Verdict: a.Verdict.String(), Basis: basis, Says: agenda.Sentence(a, low), Window: windowOf(a),
+		Earliest: siteMoment(a, a.Bound), Why: clean.Line(a.BoundWhy), Best: a.Best, Late: a.Late, InHand: count(a, a.InHand),
+		Deadlines: deadlinesOf(a), Governing: causesOf(a, a.Governing), Proof: proofOf(a, low), CutShort: a.CutShort,
+	}
+	if a.Plan != nil {
+		f.Finish = siteMoment(a, a.Finish)
+		if gap(a) != "-" {
+			n := max(int(a.Finish-a.Bound), 0)
+			if a.Best {
+				n = 0
+			}
+			f.Gap = &n
+		}
+	}
+	return f
+}
+
+// basisName names the basis of an answer in JSON.
+func basisName(b expand.Basis) string {
+	switch {
+	case b.Maybes:
+		return "with-maybes"
+	case b.End == expand.High:
+		return "high"
+	case b.End == expand.Low:
+		return "low"
+	}
+	return "likely"
+}
