@@ -78,7 +78,8 @@ func (a *Access) add(s *sheet, r row, ends [2]Minute) {
 		span.Why = r.cells[2].text
 	}
 	if n := len(a.Open); n > 0 && from < a.Open[n-1].To {
-		s.fault(r.line, r.cells[0].col, "sort the rows by time and join times that overlap", "%s is before the end of the access before it, %s later",
+		s.fault(r.line, r.cells[0].col, "sort the rows by time and join times that overlap",
+			"%s is before the end of the access before it, %s later",
 			short(r.cells[0].text), quantity.Span(int(a.Open[n-1].To-from)))
 		return
 	}

@@ -57,7 +57,8 @@ func (t *TideTable) Neaped(level float64, from, to Minute) (Getaway, error) {
 	}
 	for _, w := range t.Between(g.Grounds+1, to) { // one that just reaches the level is enough, and has no length
 		if w.High && w.Metres == level {
-			g.Off = append(g.Off, Span{w.At, w.At + 1, fmt.Sprintf("water up to %.2f m, just the %.2f m needed", w.Metres, level)})
+			g.Off = append(g.Off, Span{w.At, w.At + 1, fmt.Sprintf("water up to %.2f m, just the %.2f m needed",
+				w.Metres, level)})
 		}
 	}
 	slices.SortFunc(g.Off, func(a, b Span) int { return cmp.Compare(a.From, b.From) })
@@ -120,11 +121,13 @@ func (a Allowance) Level(below bool, level float64) (origin.Figure, error) {
 	}
 	for _, p := range []float64{a.LeastPressure, a.GreatestPressure} {
 		if p != 0 && !(p >= 870 && p <= 1085) {
-			return origin.Figure{}, advice("give hectopascals at sea level, for instance 985", "air pressure %v hPa is not between 870 and 1085", p)
+			return origin.Figure{}, advice("give hectopascals at sea level, for instance 985",
+				"air pressure %v hPa is not between 870 and 1085", p)
 		}
 	}
 	if a.LeastPressure != 0 && a.GreatestPressure != 0 && a.LeastPressure > a.GreatestPressure {
-		return origin.Figure{}, advice("write the lower one first", "least pressure %v hPa is above the greatest, %v hPa", a.LeastPressure, a.GreatestPressure)
+		return origin.Figure{}, advice("write the lower one first",
+			"least pressure %v hPa is above the greatest, %v hPa", a.LeastPressure, a.GreatestPressure)
 	}
 	if !(a.Surge >= 0 && a.Surge <= 5) {
 		return origin.Figure{}, advice("give metres, 0 to 5", "surge %v m is out of range", a.Surge)
@@ -145,12 +148,14 @@ func (a Allowance) part(below bool) origin.Figure {
 		press, off = a.GreatestPressure, a.GreatestPressure-meanPressure
 	}
 	if press == 0 && a.Surge == 0 {
-		return origin.Recalled("allowance for pressure and surge", defaultAllowance, "m", "keep 0.3 m at least where no pressure or surge is known")
+		return origin.Recalled("allowance for pressure and surge", defaultAllowance, "m",
+			"keep 0.3 m at least where no pressure or surge is known")
 	}
 	if press == 0 {
 		off = 0
 	}
-	rate := origin.Recalled("water for each hPa from 1013", metresPerHPa, "m", "inverse barometer: about 1 cm for each hectopascal")
+	rate := origin.Recalled("water for each hPa from 1013", metresPerHPa, "m",
+		"inverse barometer: about 1 cm for each hectopascal")
 	p := origin.Worked("pressure", max(off, 0)*metresPerHPa, "m", "(pressure - 1013) x rate, only the careful way",
 		origin.Written("air pressure", press, "hPa", origin.Origin{}), rate)
 	surge := origin.Written("surge", a.Surge, "m", origin.Origin{})

@@ -61,14 +61,18 @@ func (c Climate) windFactor() float64 { return math.Sqrt(-4 / math.Pi * math.Log
 
 // Figures lists what the outlook assumes beyond the monthly normals.
 func (c Climate) Figures() []origin.Figure {
-	poor := origin.House("chance that a day is worse than the poor day", c.poor(), "", "one day in five is planned for, not the average")
-	spread := origin.House("day-to-day spread of air temperature", c.spread(), "K", "standard deviation about the monthly normal; inland winters have more")
+	poor := origin.House("chance that a day is worse than the poor day", c.poor(), "",
+		"one day in five is planned for, not the average")
+	spread := origin.House("day-to-day spread of air temperature", c.spread(), "K",
+		"standard deviation about the monthly normal; inland winters have more")
 	return append([]origin.Figure{poor, spread,
-		origin.Worked("poor day's air below normal", c.sigmas()*c.spread(), "K", "normal quantile x spread; the dew point stays as it is", poor, spread),
+		origin.Worked("poor day's air below normal", c.sigmas()*c.spread(), "K",
+			"normal quantile x spread; the dew point stays as it is", poor, spread),
 		origin.Worked("poor day's wind over the mean", c.windFactor(), "", "Rayleigh distribution of wind speeds", poor),
 		origin.House("gusts over mean wind", gustFactor, "", "open ground; more in the lee of buildings"),
 		origin.House("hottest after the sun's highest", hottestAfter, "min", "coldest at sunrise; half a cosine between"),
-		origin.Published("persistence of wet days", persistence, "", "Tel Aviv in December, data of Gabriel and Neumann (1962): 213 of 326 wet after wet, 117 of 511 wet after dry"),
+		origin.Published("persistence of wet days", persistence, "",
+			"Tel Aviv in December, data of Gabriel and Neumann (1962): 213 of 326 wet after wet, 117 of 511 wet after dry"),
 	}, c.Steel.rule().figures()...)
 }
 
@@ -109,7 +113,8 @@ func (c Climate) Hourly(from, to Minute, lat, lon float64) (Outlook, error) {
 		for m := start - day; m < to; m += 60 {
 			i, d := dayOf(days, m+30)
 			a := dayAir(days, i, float64(m)+30) + air
-			w := Weather{Air: a, Steel: steel.hour(a, sunAltitude(lat, lon, float64(m)+30)), Dew: d.dew, Wind: d.wind * wind,
+			w := Weather{Air: a, Steel: steel.hour(a, sunAltitude(lat, lon, float64(m)+30)), Dew: d.dew,
+				Wind: d.wind * wind,
 				Gust: d.wind * wind * gustFactor, Wet: evenly(min(max(i-first, 0), n-1), wet, n), Basis: basis}
 			if m >= start {
 				s.add(w)
@@ -148,16 +153,19 @@ func (c Climate) check(from, to Minute, lat, lon float64) error {
 		return err
 	}
 	if to-from > 366*day {
-		return advice("ask for one window at a time", "the time from %s to %s is longer than a year", moment(from), moment(to))
+		return advice("ask for one window at a time", "the time from %s to %s is longer than a year",
+			moment(from), moment(to))
 	}
 	if err := checkPlace(lat, lon); err != nil {
 		return err
 	}
 	if !(c.poor() >= 0.001 && c.poor() <= 0.5) {
-		return advice("write 0.2 for one day in five", "chance %v of a day worse than planned is not between 0.001 and 0.5", c.Poor)
+		return advice("write 0.2 for one day in five",
+			"chance %v of a day worse than planned is not between 0.001 and 0.5", c.Poor)
 	}
 	if !(c.spread() > 0 && c.spread() <= 15) {
-		return advice("2 to 3 K by the sea, 4 to 6 K inland in winter", "day-to-day spread %v K is not between 0 and 15", c.Spread)
+		return advice("2 to 3 K by the sea, 4 to 6 K inland in winter",
+			"day-to-day spread %v K is not between 0 and 15", c.Spread)
 	}
 	if err := c.Steel.rule().check(); err != nil {
 		return err
@@ -175,9 +183,11 @@ func (c Climate) check(from, to Minute, lat, lon float64) error {
 func (n Normal) check(m time.Month) error {
 	switch {
 	case !(n.AirLeast >= -45 && n.AirGreatest <= 60 && n.AirLeast <= n.AirGreatest):
-		return advice("give the mean least and greatest air of a day in C", "%s: air from %v to %v C is out of range or upside down", m, n.AirLeast, n.AirGreatest)
+		return advice("give the mean least and greatest air of a day in C",
+			"%s: air from %v to %v C is out of range or upside down", m, n.AirLeast, n.AirGreatest)
 	case !(n.Dew >= -60 && n.Dew <= n.AirGreatest):
-		return advice("give the mean dew point in C", "%s: dew point %v C is not between -60 and the greatest air, %v C", m, n.Dew, n.AirGreatest)
+		return advice("give the mean dew point in C",
+			"%s: dew point %v C is not between -60 and the greatest air, %v C", m, n.Dew, n.AirGreatest)
 	case !(n.Wind >= 0 && n.Wind <= 40):
 		return advice("give the mean wind in m/s (1 kn is 0.51 m/s)", "%s: wind %v m/s is not between 0 and 40", m, n.Wind)
 	case !(n.WetDays >= 0 && n.WetDays <= 31):

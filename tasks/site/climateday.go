@@ -71,7 +71,8 @@ func (c Climate) normal(m Minute) (Normal, error) {
 	t := time.Unix(m*60, 0).UTC()
 	here, ok := c.Months[t.Month()]
 	if !ok {
-		return Normal{}, advice("give its normals, or end the window before it", "the climate says nothing of %s", t.Month())
+		return Normal{}, advice("give its normals, or end the window before it",
+			"the climate says nothing of %s", t.Month())
 	}
 	here.WetDays /= daysIn(t)
 	at := float64(t.Day()) - 0.5 - daysIn(t)/2 // days after mid-month

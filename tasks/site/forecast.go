@@ -83,6 +83,7 @@ func (f *Forecast) at(m Minute) (observation, bool) {
 		}
 		return a + (b-a)*x
 	}
-	return observation{m, mix(a.air, b.air), mix(a.dew, b.dew), mix(a.steel, b.steel), mix(a.wind, b.wind), mix(a.gust, b.gust),
+	return observation{m, mix(a.air, b.air), mix(a.dew, b.dew), mix(a.steel, b.steel), mix(a.wind, b.wind),
+		mix(a.gust, b.gust),
 		a.wet || b.wet, a.wetKnown && b.wetKnown || a.wet || b.wet}, true
 }

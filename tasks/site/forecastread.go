@@ -111,7 +111,8 @@ func (s *sheet) weatherColumns(r row) ([]column, bool) {
 				}
 			}
 			if col.name == "" {
-				s.fault(r.line, c.col, columnHint, "column %s has to be in %s", short(c.text), strings.Join(k.units, " or "))
+				s.fault(r.line, c.col, columnHint, "column %s has to be in %s", short(c.text), strings.Join(k.units,
+					" or "))
 			}
 		}
 		switch {
@@ -144,7 +145,8 @@ func (s *sheet) observation(r row, cols []column, z zone) (o observation, note s
 	nan := math.NaN()
 	o = observation{air: nan, dew: nan, steel: nan, wind: nan, gust: nan}
 	rh, airCol, ok := nan, 1, true
-	into := map[string]*float64{"air": &o.air, "dew": &o.dew, "steel": &o.steel, "wind": &o.wind, "gust": &o.gust, "rh": &rh}
+	into := map[string]*float64{"air": &o.air, "dew": &o.dew, "steel": &o.steel, "wind": &o.wind,
+		"gust": &o.gust, "rh": &rh}
 	for i, c := range r.cells {
 		col := cols[i]
 		switch col.name {
@@ -201,11 +203,13 @@ func (s *sheet) amount(line int, c cell, col column) (float64, bool) {
 	}
 	v, err := quantity.Parse(c.text+" "+col.unit, col.dim)
 	if !plain(c.text) || err != nil {
-		s.fault(line, c.col, fmt.Sprintf("write a number in %s, or leave the field blank", col.unit), "%s %s is not a number", col.name, short(c.text))
+		s.fault(line, c.col, fmt.Sprintf("write a number in %s, or leave the field blank", col.unit),
+			"%s %s is not a number", col.name, short(c.text))
 		return 0, false
 	}
 	if !(v >= col.lo-slack && v <= col.hi+slack) {
-		s.fault(line, c.col, "check the number and the column's unit", "%s %s %s is out of range", col.name, short(c.text), col.unit)
+		s.fault(line, c.col, "check the number and the column's unit", "%s %s %s is out of range", col.name,
+			short(c.text), col.unit)
 		return 0, false
 	}
 	return v, true

@@ -46,22 +46,24 @@ const (
 	lunar1               // O1 and its kin
 	k1
 	k2
+	l2 // also with the moon's perigee
 )
 
 // orbit is the moon's orbit against the equator for one place of its node: inclination I, right ascension nu
 // and longitude xi of the crossing, radians.
-type orbit struct{ i, nu, xi float64 }
+// P is the moon's perigee counted from that crossing.
+type orbit struct{ i, nu, xi, p float64 }
 
-// orbitAt follows Schureman, formulas of sections 20 to 24, from memory: cos I = 0.91370 - 0.03569 cos N,
+// orbitAt follows Schureman, from memory: cos I = 0.91370 - 0.03569 cos N,
 // tan((N-xi+nu)/2) = 1.01883 tan(N/2), tan((N-xi-nu)/2) = 0.64412 tan(N/2).
-func orbitAt(n float64) orbit {
-	n = rad(math.Remainder(n, 360))
+func orbitAt(l longitudes) orbit {
+	n := rad(math.Remainder(l.n, 360))
 	a, b := math.Atan(1.01883*math.Tan(n/2)), math.Atan(0.64412*math.Tan(n/2))
-	return orbit{math.Acos(0.91370 - 0.03569*math.Cos(n)), a - b, n - a - b}
+	xi := n - a - b
+	return orbit{math.Acos(0.91370 - 0.03569*math.Cos(n)), a - b, xi, rad(l.p) - xi}
 }
 
-// node gives the factor f and the shift u in degrees of a family: Schureman, formulas 73 to 78 and 215
-// to 235, from memory.
+// node gives the factor f and the shift u in degrees of a family: Schureman, from memory.
 func (k family) node(o orbit) (f, u float64) {
 	s, c, s2 := math.Sin(o.i), math.Cos(o.i/2), math.Sin(2*o.i)
 	switch k {
@@ -75,6 +77,10 @@ func (k family) node(o orbit) (f, u float64) {
 	case k2:
 		return math.Sqrt(19.0444*math.Pow(s, 4) + 2.7702*s*s*math.Cos(2*o.nu) + 0.0981),
 			-deg(math.Atan2(s*s*math.Sin(2*o.nu), s*s*math.Cos(2*o.nu)+0.0727))
+	case l2:
+		f, u = moon2.node(o)
+		x := 6 * math.Pow(math.Tan(o.i/2), 2)
+		return f * math.Sqrt(1-2*x*math.Cos(2*o.p)+x*x), u - deg(math.Atan2(x*math.Sin(2*o.p), 1-x*math.Cos(2*o.p)))
 	}
 	return 1, 0
 }
@@ -95,9 +101,10 @@ var arguments = map[string]argument{
 	"Q1": {1, -3, 1, 1, 0, -90, lunar1, 1}, "K2": {2, 0, 2, 0, 0, 0, k2, 1},
 	"M4": {4, -4, 4, 0, 0, 0, moon2, 2}, "MS4": {4, -2, 2, 0, 0, 0, moon2, 1},
 	"NU2": {2, -3, 4, -1, 0, 0, moon2, 1}, "MU2": {2, -4, 4, 0, 0, 0, moon2, 1}, "2N2": {2, -4, 2, 2, 0, 0, moon2, 1},
-	"L2": {2, -1, 2, -1, 0, 180, moon2, 1}, "LAM2": {2, -1, 0, 1, 0, 180, moon2, 1}, "T2": {2, 0, -1, 0, 1, 0, steady, 0},
-	"M3": {3, -3, 3, 0, 0, 180, moon2, 1}, "MN4": {4, -5, 4, 1, 0, 0, moon2, 2}, "M6": {6, -6, 6, 0, 0, 0, moon2, 3},
-	"S4": {4, 0, 0, 0, 0, 0, steady, 0}, "2MS6": {6, -4, 4, 0, 0, 0, moon2, 2}, "SA": {0, 0, 1, 0, 0, 0, steady, 0}, "SSA": {0, 0, 2, 0, 0, 0, steady, 0},
+	"L2": {2, -1, 2, -1, 0, 180, l2, 1}, "LAM2": {2, -1, 0, 1, 0, 180, moon2, 1}, "T2": {2, 0, -1, 0, 1, 0, steady, 0},
+	"MN4": {4, -5, 4, 1, 0, 0, moon2, 2}, "M6": {6, -6, 6, 0, 0, 0, moon2, 3},
+	"S4": {4, 0, 0, 0, 0, 0, steady, 0}, "2MS6": {6, -4, 4, 0, 0, 0, moon2, 2}, "SA": {0, 0, 1, 0, 0, 0,
+		steady, 0}, "SSA": {0, 0, 2, 0, 0, 0, steady, 0},
 }
 
 // ConstituentNames lists the constituents known here, in alphabetical order.
@@ -137,13 +144,15 @@ func (h Harmonic) check() error {
 		_, ok := arguments[c.Name]
 		switch {
 		case !ok:
-			return advice(fmt.Sprintf("leave it out if it is small; known are %v", ConstituentNames()), "%s: constituent %s is not known here", h.Name, short(c.Name))
+			return advice(fmt.Sprintf("leave it out if it is small; known are %v", ConstituentNames()),
+				"%s: constituent %s is not known here", h.Name, short(c.Name))
 		case seen[c.Name]:
 			return advice("leave one of them out", "%s: constituent %s is there twice", h.Name, c.Name)
 		case !(c.Amplitude >= 0 && c.Amplitude <= 10):
 			return advice("give metres", "%s: amplitude %v m of %s is not between 0 and 10", h.Name, c.Amplitude, c.Name)
 		case !(math.Abs(c.Phase) <= 720):
-			return advice("give degrees on Greenwich", "%s: phase %v of %s is not an angle in degrees", h.Name, c.Phase, c.Name)
+			return advice("give degrees on Greenwich", "%s: phase %v of %s is not an angle in degrees", h.Name,
+				c.Phase, c.Name)
 		}
 		seen[c.Name] = true
 	}
@@ -161,7 +170,7 @@ func (h Harmonic) Height(m Minute) float64 {
 
 func (h Harmonic) height(m float64) float64 {
 	l := longitudesAt(m)
-	o := orbitAt(l.n)
+	o := orbitAt(l)
 	sum := h.Mean
 	for _, c := range h.Constituents {
 		a := arguments[c.Name]

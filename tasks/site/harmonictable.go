@@ -21,7 +21,8 @@ func (h Harmonic) Table(from, to Minute) (*TideTable, error) {
 		return nil, err
 	}
 	if to-from > 2*366*day {
-		return nil, advice("ask for one window at a time", "the time from %s to %s is longer than two years", moment(from), moment(to))
+		return nil, advice("ask for one window at a time", "the time from %s to %s is longer than two years",
+			moment(from), moment(to))
 	}
 	waters := h.waters(from-2*day, to+2*day)
 	first, last := 0, len(waters)
@@ -33,7 +34,8 @@ func (h Harmonic) Table(from, to Minute) (*TideTable, error) {
 	}
 	waters = waters[first:last]
 	if len(waters) < 2 || waters[0].At > from || waters[len(waters)-1].At < to {
-		return nil, advice("check the amplitudes", "%s has no tide to speak of from %s to %s", h.Name, moment(from), moment(to))
+		return nil, advice("check the amplitudes", "%s has no tide to speak of from %s to %s", h.Name,
+			moment(from), moment(to))
 	}
 	return &TideTable{Name: h.Name, Datum: h.Datum, Zone: "UTC", Waters: waters, NotForSafety: true,
 		Notes: []string{h.Name + ": tide predicted from constants, not for safety"}}, nil
@@ -56,14 +58,13 @@ func (h Harmonic) waters(from, to Minute) []Water {
 
 // turning finds the highest (or lowest) whole minute between two.
 func (h Harmonic) turning(from, to Minute, high bool) Water {
-	best := Water{High: high}
-	for m := from; m <= to; m++ {
-		v := math.Round(h.height(float64(m))*1000) / 1000
-		if exact := h.height(float64(m)); m == from || high && exact > h.height(float64(best.At)) || !high && exact < h.height(float64(best.At)) {
-			best.At, best.Metres = m, v
+	best, at := h.height(float64(from)), from
+	for m := from + 1; m <= to; m++ {
+		if v := h.height(float64(m)); v != best && (v > best) == high {
+			best, at = v, m
 		}
 	}
-	return best
+	return Water{At: at, Metres: math.Round(best*1000) / 1000, High: high}
 }
 
 // addWater appends a water; one that goes on where the last went, or hardly turns, replaces it.
@@ -79,8 +80,8 @@ func addWater(out []Water, w Water) []Water {
 			out[n-1] = w
 		}
 		return out
-	case math.Abs(w.Metres-last.Metres) < leastRise && n > 1:
-		return out[:n-1] // neither: the tide before goes on
+	case math.Abs(w.Metres-last.Metres) < leastRise && n > 1: // the tide before goes on
+		return addWater(out[:n-1], w)
 	}
 	return append(out, w)
 }

@@ -42,7 +42,8 @@ type measure struct {
 var measures = []measure{
 	{func(l Limits) Band { return l.Air }, func(w Weather) float64 { return w.Air }, "air", "C", 1},
 	{func(l Limits) Band { return l.Steel }, func(w Weather) float64 { return w.Steel }, "steel", "C", 1},
-	{func(l Limits) Band { return l.Spread }, func(w Weather) float64 { return w.Steel - w.Dew }, "steel above dew point", "K", 1},
+	{func(l Limits) Band { return l.Spread }, func(w Weather) float64 { return w.Steel - w.Dew },
+		"steel above dew point", "K", 1},
 	{func(l Limits) Band { return l.RH }, func(w Weather) float64 { return w.RH }, "humidity", "%", 100},
 	{func(l Limits) Band { return l.Wind }, func(w Weather) float64 { return w.Wind }, "wind", "m/s", 1},
 	{func(l Limits) Band { return l.Gust }, func(w Weather) float64 { return w.Gust }, "gusts", "m/s", 1},

@@ -87,7 +87,8 @@ func (s *sheet) err() error {
 	})
 	if n := len(s.faults); n > maxFaults {
 		s.faults = s.faults[:maxFaults]
-		s.fault(s.faults[maxFaults-1].Line, 1, "mend these first; perhaps it is another kind of file", "and %d more faults", n-maxFaults)
+		s.fault(s.faults[maxFaults-1].Line, 1, "mend these first; perhaps it is another kind of file",
+			"and %d more faults", n-maxFaults)
 	}
 	return s.faults
 }

@@ -3,8 +3,8 @@
 //
 // Times are UTC minutes since 1970-01-01 00:00; spans are half-open. Heights are metres above the
 // datum that the tide table names, temperatures degrees Celsius, differences of temperature
-// kelvin, wind metres a second, relative humidity per cent, latitudes and longitudes degrees,
-// north and east positive.
+// kelvin, wind metres a second, relative humidity a share from 0 to 1, latitudes and longitudes
+// degrees, north and east positive.
 //
 // Sources: the sun is the NOAA long form after Meeus, Astronomical Algorithms; the tide between
 // high and low water is the cosine; harmonic tides follow Schureman, Manual of Harmonic Analysis
@@ -43,11 +43,13 @@ func moment(m Minute) string { return time.Unix(m*60, 0).UTC().Format("2006-01-0
 func checkSpan(from, to Minute) error {
 	switch {
 	case from < firstMinute || to > lastMinute:
-		return advice("give dates between 1900 and 2200", "the time from minute %d to %d is out of all proportion", from, to)
+		return advice("give dates between 1900 and 2200",
+			"the time from minute %d to %d is out of all proportion", from, to)
 	case from >= to:
 		return advice("give the earlier time first", "the time from %s to %s has no length", moment(from), moment(to))
 	case to-from > longestSpan:
-		return advice("ask for a few years at a time", "the time from %s to %s is longer than %d years", moment(from), moment(to), longestSpan/(366*day))
+		return advice("ask for a few years at a time", "the time from %s to %s is longer than %d years",
+			moment(from), moment(to), longestSpan/(366*day))
 	}
 	return nil
 }

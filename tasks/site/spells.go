@@ -20,7 +20,8 @@ const persistence = 213.0/326 - 117.0/511
 // Errors: a share that is not from 0 to 1.
 func SpellsOf(wet float64) (Spells, error) {
 	if !(wet >= 0 && wet <= 1) {
-		return Spells{}, advice("divide the wet days by the days of the month", "share of wet days %v is not between 0 and 1", wet)
+		return Spells{}, advice("divide the wet days by the days of the month",
+			"share of wet days %v is not between 0 and 1", wet)
 	}
 	return Spells{wet + persistence*(1-wet), wet * (1 - persistence)}, nil
 }

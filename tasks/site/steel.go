@@ -39,9 +39,12 @@ func (r SteelRule) figures() []origin.Figure {
 	return []origin.Figure{
 		figure("steel below air, clear night", r.NightPoor, "K", night, usualSteel.NightPoor, true),
 		figure("steel below air, average night", r.NightAverage, "K", night, usualSteel.NightAverage, true),
-		figure("steel above air in the sun, average day", r.SunAverage, "K", "times the sine of the sun's altitude; none on the poor day", usualSteel.SunAverage, false),
-		figure("steel above air in the sun, warm day", r.SunWarm, "K", "dark steel square to the sun may have more", usualSteel.SunWarm, false),
-		figure("time in which the steel follows the air", r.Lag, "h", "plate of some 10 to 20 mm; thin sheet less, castings more", usualSteel.Lag, false),
+		figure("steel above air in the sun, average day", r.SunAverage, "K",
+			"times the sine of the sun's altitude; none on the poor day", usualSteel.SunAverage, false),
+		figure("steel above air in the sun, warm day", r.SunWarm, "K",
+			"dark steel square to the sun may have more", usualSteel.SunWarm, false),
+		figure("time in which the steel follows the air", r.Lag, "h",
+			"plate of some 10 to 20 mm; thin sheet less, castings more", usualSteel.Lag, false),
 	}
 }
 
@@ -49,8 +52,10 @@ func (r SteelRule) check() error {
 	for _, v := range []struct {
 		name     string
 		is, most float64
-	}{{"steel below air on the poor night (K)", r.NightPoor, 15}, {"steel below air on the average night (K)", r.NightAverage, 15},
-		{"steel above air in the sun (K)", r.SunAverage, 60}, {"steel above air on the warm day (K)", r.SunWarm, 60}, {"the steel's lag (h)", r.Lag, 48}} {
+	}{{"steel below air on the poor night (K)", r.NightPoor,
+		15}, {"steel below air on the average night (K)", r.NightAverage, 15},
+		{"steel above air in the sun (K)", r.SunAverage, 60}, {"steel above air on the warm day (K)",
+			r.SunWarm, 60}, {"the steel's lag (h)", r.Lag, 48}} {
 		if !(v.is >= 0 && v.is <= v.most) {
 			return advice("leave it out for the usual value", "%s %v is not between 0 and %v", v.name, v.is, v.most)
 		}

@@ -2,6 +2,10 @@ package site
 
 import "math"
 
+// SunSource says where sun times come from, for outputs.
+const SunSource = "NOAA solar calculation, long form, after Meeus, Astronomical Algorithms; " +
+	"zenith 90.833 degrees, civil twilight 96"
+
 // Altitudes of the sun's centre, degrees, without refraction.
 const (
 	riseAltitude  = -0.833 // upper limb on a sea horizon: 34' refraction, 16' half the disc (NOAA, zenith 90.833)
@@ -35,7 +39,8 @@ func Sun(latDeg, lonDeg float64, dayStartUTC Minute) (SunDay, error) {
 		return SunDay{}, err
 	}
 	if dayStartUTC < firstMinute || dayStartUTC > lastMinute {
-		return SunDay{}, advice("give dates between 1900 and 2200", "day start at minute %d is out of all proportion", dayStartUTC)
+		return SunDay{}, advice("give dates between 1900 and 2200",
+			"day start at minute %d is out of all proportion", dayStartUTC)
 	}
 	noon := transit(lonDeg, dayStartUTC+day/2)
 	d := SunDay{Noon: noon}

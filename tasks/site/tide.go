@@ -84,7 +84,8 @@ func (t *TideTable) Figure(at Minute) (origin.Figure, error) {
 	if t.Waters[i].At > at {
 		from = append([]origin.Figure{t.waterFigure(t.Waters[i-1])}, from...)
 	}
-	return origin.Worked("water at "+moment(at), h, "m above "+t.Datum, "half a cosine between high and low water", from...), nil
+	return origin.Worked("water at "+moment(at), h, "m above "+t.Datum,
+		"half a cosine between high and low water", from...), nil
 }
 
 func (t *TideTable) waterFigure(w Water) origin.Figure {
@@ -203,6 +204,7 @@ func (t *TideTable) uncovered(at Minute) error {
 		return advice("add the waters that are missing", "tide table %s says nothing of %s: no water between %s and %s",
 			t.Name, moment(at), moment(t.Waters[i-1].At), moment(t.Waters[i].At))
 	}
-	return advice("add the waters before and after the time asked for", "tide table %s says nothing of %s: it runs from %s to %s",
+	return advice("add the waters before and after the time asked for",
+		"tide table %s says nothing of %s: it runs from %s to %s",
 		t.Name, moment(at), moment(t.Waters[0].At), moment(t.Waters[n-1].At))
 }

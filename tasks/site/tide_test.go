@@ -8,6 +8,8 @@ import (
 	"testing"
 
 	"pgregory.net/rapid"
+
+	"sailby/tasks/quantity"
 )
 
 // boston is NOAA tide tables, Table 1, Boston, 19 April 2004, as printed: EST, feet above MLLW.
@@ -270,6 +272,13 @@ func TestTideFaults(t *testing.T) {
 	if fs, ok := err.(Faults); !ok || len(fs) != 4 || fs[3].Line != 3 || fs[1].Hint != zoneHint {
 		t.Errorf("want four faults in order of line, have %v", err)
 	}
+	if fs := err.(Faults); quantity.Hint(fs[1]) != zoneHint {
+		t.Errorf("no way out in %v", fs[1])
+	}
+	_, err = ReadTideTable("p", strings.NewReader("# zone: UTC\n# datum: x\n"+strings.Repeat("long ", 1000)+",1,HW\n"))
+	if s := err.Error(); len(s) > 200 || !strings.Contains(s, `long ..."`) {
+		t.Errorf("a long word is not cut: %s", s)
+	}
 	_, err = ReadTideTable("p", strings.NewReader(strings.Repeat("x\n", 100)))
 	if fs := err.(Faults); len(fs) != maxFaults+1 || fs[maxFaults].Problem != "and 82 more faults" {
 		t.Errorf("want the faults cut, have %d, last %v", len(fs), fs[len(fs)-1])
@@ -291,6 +300,7 @@ func TestTideZones(t *testing.T) {
 		{"Europe/London", "2026-10-25 01:30", "2026-10-25 00:30"}, // happens twice: the earlier
 		{"Europe/London", "2026-03-29 00:59", "2026-03-29 00:59"},
 		{"Pacific/Auckland", "2026-04-13 04:34", "2026-04-12 16:34"},
+		{"Africa/Monrovia", "1950-01-01 00:00", "1950-01-01 00:44"}, // then 44 min 30 s behind
 	} {
 		text := "# zone: " + c.zone + "\n# datum: chart\n" + c.local + ",1.8,LW\n2026-12-01 04:00,2,HW\n"
 		tt := table(t, text)

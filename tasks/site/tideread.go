@@ -68,7 +68,8 @@ func (s *sheet) tideColumns() (rows []row, unit string) {
 		case "height ft":
 			unit = "ft"
 		default:
-			s.fault(head.line, c.col, "call the columns time,height m,water or time,height ft,water", "column %s is not height m", short(c.text))
+			s.fault(head.line, c.col, "call the columns time,height m,water or time,height ft,water",
+				"column %s is not height m", short(c.text))
 		}
 		switch c := head.cells[2]; strings.ToLower(c.text) {
 		case "water", "hw|lw", "hw/lw":
@@ -93,7 +94,8 @@ func (s *sheet) water(r row, z zone, unit string) (w Water, note string, ok bool
 	h, good := s.metres(r.line, r.cells[1], unit)
 	high := strings.EqualFold(r.cells[2].text, "HW")
 	if !high && !strings.EqualFold(r.cells[2].text, "LW") {
-		s.fault(r.line, r.cells[2].col, "write HW for high water, LW for low water", "%s is neither HW nor LW", short(r.cells[2].text))
+		s.fault(r.line, r.cells[2].col, "write HW for high water, LW for low water", "%s is neither HW nor LW",
+			short(r.cells[2].text))
 		ok = false
 	}
 	return Water{At: at, Metres: h, High: high, Line: r.line}, note, ok && good
@@ -136,7 +138,8 @@ func (s *sheet) follows(r row, last, w Water) bool {
 	}
 	switch rise := w.Metres - last.Metres; {
 	case w.At <= last.At:
-		s.fault(r.line, r.cells[0].col, "sort the rows by time; is the year or month right?", "%s is not after the water before it (line %d)",
+		s.fault(r.line, r.cells[0].col, "sort the rows by time; is the year or month right?",
+			"%s is not after the water before it (line %d)",
 			short(r.cells[0].text), last.Line)
 	case w.At-last.At > longestTide:
 		return true // a hole: what came before does not matter
@@ -144,7 +147,8 @@ func (s *sheet) follows(r row, last, w Water) bool {
 		s.fault(r.line, r.cells[2].col, fmt.Sprintf("add the %s between them", word(!w.High)), "%s follows %s (line %d)",
 			word(w.High), word(last.High), last.Line)
 	case w.High && rise < leastTide/2 || !w.High && rise > -leastTide/2:
-		s.fault(r.line, r.cells[1].col, "check both heights and which is HW", "%s of %.3f m does not fit the %s of %.3f m before it (line %d)",
+		s.fault(r.line, r.cells[1].col, "check both heights and which is HW",
+			"%s of %.3f m does not fit the %s of %.3f m before it (line %d)",
 			word(w.High), w.Metres, word(last.High), last.Metres, last.Line)
 	default:
 		return true

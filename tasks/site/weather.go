@@ -66,7 +66,8 @@ func (s *Series) add(w Weather) {
 	w.Dew = min(w.Dew, w.Air)
 	w.RH = coat.RelativeHumidity(w.Air, w.Dew)
 	s.Air, s.Steel, s.Dew, s.RH = append(s.Air, w.Air), append(s.Steel, w.Steel), append(s.Dew, w.Dew), append(s.RH, w.RH)
-	s.Wind, s.Gust, s.Wet, s.Basis = append(s.Wind, w.Wind), append(s.Gust, w.Gust), append(s.Wet, w.Wet), append(s.Basis, w.Basis)
+	s.Wind, s.Gust, s.Wet, s.Basis = append(s.Wind, w.Wind), append(s.Gust, w.Gust), append(s.Wet,
+		w.Wet), append(s.Basis, w.Basis)
 }
 
 // With gives a copy in which the forecast or the readings stand in place of every hour that they cover.
