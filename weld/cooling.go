@@ -14,10 +14,10 @@ const (
 	bandWidth   = 75.0
 	heatHeld    = 0.49
 	givenOff    = 50.0
-	interpassAt = 250.0 // C, where the procedure does not say (house judgement)
-	handWarm    = 50.0  // C at which a weld is looked at and handled
-	shortCool   = 15.0  // min of cooling that pass while leads are cleared: counted as none
-	burner      = 6.0   // kW that a preheating torch leaves in the plate (house judgement)
+	interpassAt = 250.0  // C, where the procedure does not say (house judgement)
+	handWarm    = 50.0   // C at which a weld is looked at and handled
+	shortCool   = 15.0   // min of cooling that pass while leads are cleared: counted as none
+	burner      = 6.0    // kW that a preheating torch leaves in the plate (house judgement)
 	heatedAtOne = 1000.0 // mm heated before the first arc, again after every stop
 )
 
@@ -31,14 +31,9 @@ func slackness(thick, density float64) float64 {
 
 // heating works out current, heat input, t8/5 and preheat.
 func (e *seamWork) heating(c Circumstances) error {
-	p, d := e.proc, e.data
-	e.current = p.current(d, e.size.Value)
-	e.volts = p.volts(d, e.current)
+	p := e.proc
 	e.power = p.power(e.volts, e.current)
-	k := d.heat
-	if p.HeatEfficiency > 0 {
-		k = p.given("heat efficiency", p.HeatEfficiency, "")
-	}
+	k := e.heatEfficiency()
 	e.travel = p.travelOf(e.rate, e.runs.area, c.Steel.density())
 	e.heat = heatInput(k, e.volts, e.current, e.travel)
 	if p.MaxHeatInput > 0 && e.heat.Value > p.MaxHeatInput*1.0001 {
@@ -72,7 +67,7 @@ func (e *seamWork) preheating(c Circumstances) (along origin.Figure, ok bool) {
 	perMetre := origin.Worked("heating a metre", bandMass(t, c.Steel.density())*1000*heatHeld*rise/burner/60, "min",
 		"band mass x 0.49 x (preheat - ambient) / torch / 60",
 		origin.Worked("band mass", bandMass(t, c.Steel.density())*1000, "kg", "2 x 75 x thickness x density / 1000000",
-			origin.Written("thickness", t, "mm", e.joint.Origin), origin.Published("density", c.Steel.density(), "kg/m3", "7850 for steel unless given")),
+			origin.Written("thickness", t, "mm", e.joint.Origin), densityFigure(c.Steel.density())),
 		e.heatTo, origin.Written("ambient", c.Ambient, "C", origin.Origin{Source: "circumstances"}),
 		origin.House("torch", burner, "kW", "what a preheating torch leaves in the plate"))
 	one := math.Min(1, e.joint.Length/heatedAtOne)

@@ -27,17 +27,17 @@ var curves = []curve{
 	{111, 3.2, 120, []point{{120, 1.17}, {140, 1.24}, {160, 1.36}}},
 	{111, 4.0, 150, []point{{140, 1.41}, {160, 1.71}}},
 	{111, 4.8, 220, []point{{200, 2.20}, {250, 2.45}}},
-	{114, 1.8, 200, []point{{150, 1.5}, {250, 3.0}}},
+	{114, 1.8, 180, []point{{150, 1.5}, {250, 3.0}}},
 	{121, 2.4, 400, []point{{400, 4.3}, {500, 5.9}, {600, 7.8}}},
 	{121, 3.2, 500, []point{{500, 5.2}, {600, 6.8}}},
 	{121, 4.0, 600, []point{{600, 6.6}, {700, 8.3}, {800, 10.0}}},
 	{131, 1.2, 200, []point{{150, 0.8}, {200, 1.2}, {250, 1.6}}},
 	{135, 0.8, 110, []point{{80, 0.9}, {130, 1.5}, {160, 2.2}, {180, 2.6}}},
 	{135, 1.0, 150, []point{{100, 1.1}, {150, 1.9}, {200, 3.0}, {240, 4.2}}},
-	{135, 1.2, 230, []point{{125, 1.32}, {150, 1.68}, {200, 2.5}, {250, 3.36}, {300, 4.7}, {350, 6.3}}},
+	{135, 1.2, 200, []point{{125, 1.32}, {150, 1.68}, {200, 2.5}, {250, 3.36}, {300, 4.7}, {350, 6.3}}},
 	{136, 1.2, 180, []point{{150, 1.8}, {180, 2.4}, {200, 2.7}, {240, 3.6}, {280, 4.8}}},
 	{136, 1.6, 250, []point{{180, 2.2}, {250, 3.6}, {300, 4.63}}},
-	{138, 1.2, 230, []point{{150, 1.8}, {200, 2.7}, {250, 3.6}, {300, 5.0}}},
+	{138, 1.2, 200, []point{{150, 1.8}, {200, 2.7}, {250, 3.6}, {300, 5.0}}},
 	{141, 2.4, 140, []point{{80, 0.3}, {140, 0.6}, {220, 1.0}}},
 }
 
@@ -154,7 +154,7 @@ func (p Procedure) fed(d process, size origin.Figure, density float64) origin.Fi
 	v := p.WireFeed * 60 * math.Pi * size.Value * size.Value / 4 * density / 1e6 * fill.Value * eff.Value
 	return origin.Worked("deposition rate", v, "kg/h",
 		"wire feed x 60 x pi x "+size.Name+"^2 / 4 x density / 1000000 x fill of the wire x "+eff.Name,
-		p.given("wire feed", p.WireFeed, "m/min"), size, origin.Published("density", density, "kg/m3", "7850 for steel unless given"), fill, eff)
+		p.given("wire feed", p.WireFeed, "m/min"), size, densityFigure(density), fill, eff)
 }
 
 // WireMetres gives how many metres of solid wire of a diameter in mm weigh a kilogram, at a

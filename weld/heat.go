@@ -35,7 +35,7 @@ func (p Procedure) travelOf(rate origin.Figure, area, density float64) origin.Fi
 		return p.given("travel", p.Travel, "mm/min")
 	}
 	return origin.Worked("travel", rate.Value*1e9/60/density/area, "mm/min", "deposition rate x 1000000000 / 60 / density / area of the largest run",
-		rate, origin.Published("density", density, "kg/m3", "7850 for steel unless given"),
+		rate, densityFigure(density),
 		origin.Written("area of the largest run", area, "mm2", origin.Origin{Source: "runs"}))
 }
 

@@ -24,19 +24,16 @@ func HoldBeforeNDT(size, heat, yield float64) (origin.Figure, error) {
 		row = 1
 	case size <= 12 || heat <= 3:
 		row = 2
-		if size > 12 {
-			row = 3
-		}
 	default:
-		row = 4
+		row = 3
 	}
-	// rows: to 6; 6-12 to 3 kJ/mm; 6-12 above; above 12 to 3 kJ/mm; above 12 above 3
-	hours := [5][2]float64{{0, 24}, {8, 24}, {16, 40}, {16, 40}, {40, 48}}[row]
+	// rows: to 6 mm; to 12 and to 3 kJ/mm; to 12 above 3, and above 12 to 3; above both
+	hours := [4][2]float64{{0, 24}, {8, 24}, {16, 40}, {40, 48}}[row]
 	col, steel := 0, "S235 to S420"
 	if yield > 420 {
 		col, steel = 1, "S460 and above"
 	}
-	f := origin.Published("time before NDT", hours[col], "h", fmt.Sprintf("EN 1090-2:2008 Table 23, %s", steel))
+	f := origin.Published("time before NDT", hours[col], "h", fmt.Sprintf("EN 1090-2:2008 Table 23, %s (the 2018 edition keeps it, from memory)", steel))
 	f.From = []origin.Figure{origin.Written("size", size, "mm", origin.Origin{}), origin.Written("heat input", heat, "kJ/mm", origin.Origin{})}
 	return f, nil
 }

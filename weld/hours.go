@@ -11,7 +11,7 @@ import (
 type Rates struct {
 	OperatingFactor float64 // arc over hands-on welding time, for procedures without their own
 	FitUp           float64 // min a metre: pulling up, tacks; default 12 on site, 3 in the shop
-	Moving          float64 // min a metre and side: leads, feeder, staging, wind shelter; default site 5 (111, 114), 18 gas-shielded; shop 1
+	Moving          float64 // min a metre and side: leads, feeder, staging, wind shelter; default site 5 (111), 12 (with a feeder), 18 (gas-shielded); shop 1
 	Cleaning        float64 // min a metre and run, by parts; default by process
 	ElectrodeChange float64 // s each, by parts; default 15
 	Starting        float64 // min a metre and run, by parts: getting to the seam, hood, looking; default 4 on site, 2 in the shop
@@ -88,10 +88,13 @@ func (e *seamWork) times(c Circumstances) {
 		parts = append(parts, e.fitUp)
 	}
 	moves := bySite(c.Site, 5, 1)
-	if c.Site && e.data.gasShielded() {
+	switch {
+	case c.Site && e.data.gasShielded():
 		moves = 18
+	case c.Site && !e.data.stick:
+		moves = 12
 	}
-	per := r.pick("moving", r.Moving, moves, "min/m", "leads and staging; feeder, hoses and wind shelter with gas-shielded arcs on site")
+	per := r.pick("moving", r.Moving, moves, "min/m", "leads and staging; on site also the feeder, and with gas-shielded arcs the wind shelter")
 	parts = append(parts, origin.Worked("leads and staging", per.Value*metres.Value*sides.Value, "min", "moving x metres of seam x sides", per, metres, sides))
 	if e.joint.BackGouge {
 		rate := r.pick("gouging", r.Gouging, 3, "m/h", "back-gouge and grind clean, all in: 2 to 4 m/h")
@@ -127,10 +130,13 @@ func (e *seamWork) weldingTime(c Circumstances) {
 	}
 	of := e.factor(c)
 	e.share = origin.Worked("arc share", math.Min(of.Value, duty.Value), "", "min(operating factor, duty cycle at this current)", of, duty)
+	if e.proc.Set.RatedCurrent == 0 {
+		e.share = renamed(of, "operating factor")
+	}
 	if duty.Value < of.Value {
 		e.warnf("the welding set governs: at %.0f A it holds %.0f %% of ten minutes, the welder would weld %.0f %% of them", e.current.Value, duty.Value*100, of.Value*100)
 	}
-	e.welding = origin.Worked("welding", e.arc.Value/e.share.Value*slow.Value, "min", "arc time / arc share x access", e.arc, e.share, slow)
+	e.welding = origin.Worked("welding", e.arc.Value/e.share.Value*slow.Value, "min", "arc time / "+e.share.Name+" x access", e.arc, e.share, slow)
 }
 
 func (e *seamWork) byParts(c Circumstances, duty, slow origin.Figure) {

@@ -59,81 +59,6 @@ func (t JointType) twoSided() bool {
 	return t == DoubleV || t == DoubleBevel || t == DoubleU || t == DoubleJ
 }
 
-// filled gives j with every default in place, for position pos.
-func (j Joint) filled(pos Position, overweld bool) (Joint, error) {
-	if err := j.check(); err != nil {
-		return j, err
-	}
-	or := func(field *float64, v float64) {
-		switch *field {
-		case 0:
-			*field = v
-		case None:
-			*field = 0
-		}
-	}
-	switch {
-	case j.Type == Fillet && j.Leg == 0 && j.Throat > 0:
-		j.Leg = j.Throat * math.Sqrt2
-	case j.Type == Lap && j.Leg == 0 && j.Throat == 0:
-		j.Leg = lapLeg(j.Thickness)
-	case j.Type == Corner && j.Leg == 0 && j.Throat == 0:
-		j.Leg, j.Leg2 = j.Thickness, j.Thickness2
-	case j.Leg == 0:
-		j.Leg = j.Throat * math.Sqrt2
-	}
-	or(&j.Leg2, j.Leg)
-	or(&j.Thickness, j.Leg/0.7)
-	or(&j.Thickness2, j.Thickness)
-	or(&j.PartialDepth, j.Thickness)
-	or(&j.Gap, 0)
-	or(&j.RootGap, j.usualGap())
-	face, radius := 0.0, 0.0
-	switch j.Type {
-	case SingleU, DoubleU:
-		face, radius = 3, 6
-	case SingleJ, DoubleJ:
-		face, radius = 3, 8
-	}
-	or(&j.RootFace, face)
-	or(&j.Radius, radius)
-	or(&j.Angle, usualAngle(j.Type, pos))
-	or(&j.Angle2, j.Angle)
-	usualCap := 0.0
-	if overweld && (j.Type.groove() || j.Type == Corner) {
-		usualCap = 1.5
-	}
-	or(&j.Cap, usualCap)
-	if j.Count == 0 {
-		j.Count = 1
-	}
-	return j.measured()
-}
-
-// measured works out the length where it follows from the shape, and checks that shapes fit.
-func (j Joint) measured() (Joint, error) {
-	switch j.Type {
-	case Plug:
-		j.Length = j.Diameter * float64(j.Count)
-	case Slot:
-		j.Length = j.Bead * float64(j.Count)
-	default:
-		if j.Length == 0 {
-			j.Length = math.Pi * j.Diameter * float64(j.Count)
-		}
-	}
-	if j.Length <= 0 {
-		return j, fault("length", "give the length in all, or the diameter of the tube", "the %s has no length", j.Type)
-	}
-	if j.PartialDepth > j.Thickness {
-		return j, fault("depth", "give a depth up to the thickness", "partial penetration of %.4g mm is more than the thickness %.4g mm", j.PartialDepth, j.Thickness)
-	}
-	if j.Type.groove() && j.PartialDepth == j.Thickness && j.RootFace >= j.Thickness && j.Type != Square {
-		return j, fault("root face", "give a root face below the thickness", "root face %.4g mm leaves nothing of %.4g mm to weld", j.RootFace, j.Thickness)
-	}
-	return j, nil
-}
-
 // check refuses what cannot be a joint.
 func (j Joint) check() error {
 	if j.Type == 0 || j.Type > lastJoint {
@@ -191,55 +116,6 @@ func (j Joint) checkNeeds() error {
 		return fault("pitch", "pitch is from the start of one weld to the start of the next", "welds of %.4g mm do not fit a pitch of %.4g mm", j.Bead, j.Pitch)
 	}
 	return nil
-}
-
-// usualGap is the root gap where none is given (single V: the preparation of the published
-// metal table; square, backing: from memory of ISO 9692-1 and common practice).
-func (j Joint) usualGap() float64 {
-	switch {
-	case !j.Type.groove() || j.Type.groove() && j.PartialDepth < j.Thickness:
-		return 0
-	case j.Backing:
-		return 6
-	case j.Type == Square:
-		return math.Min(j.Thickness/2, 3)
-	case j.Thickness <= 6:
-		return 1
-	case j.Thickness < 10:
-		return 1.5
-	}
-	return 2
-}
-
-// usualAngle is the included angle where none is given: the V by position from the published
-// metal table, the others from memory of ISO 9692-1.
-func usualAngle(t JointType, pos Position) float64 {
-	switch t {
-	case SingleV, DoubleV:
-		switch pos {
-		case PF, PG, PH, PJ, HL045:
-			return 70
-		case PE, PD:
-			return 80
-		}
-		return 60
-	case SingleBevel, DoubleBevel:
-		return 50
-	case SingleU, DoubleU:
-		return 16
-	case SingleJ, DoubleJ:
-		return 15
-	}
-	return 0
-}
-
-// lapLeg is the leg of a lap whose size is not given: the edge, less 2 mm above 6 mm so that the
-// edge still shows (from memory: AWS D1.1).
-func lapLeg(t float64) float64 {
-	if t > 6 {
-		return t - 2
-	}
-	return t
 }
 
 // share is the welded part of the length: 1, or bead over pitch.

@@ -105,7 +105,7 @@ type runs struct {
 
 // bead gives the area of one run: as given, from rate over travel, else usual for process, size
 // and position, and not above what the most heat input allows.
-func (p Procedure) bead(d process, pos Position, size, rate origin.Figure, density float64) origin.Figure {
+func (p Procedure) bead(d process, pos Position, size, rate, hottest origin.Figure, density float64) origin.Figure {
 	const name = "area of a run"
 	switch {
 	case p.BeadArea > 0:
@@ -114,7 +114,7 @@ func (p Procedure) bead(d process, pos Position, size, rate origin.Figure, densi
 		return f
 	case p.Travel > 0:
 		return origin.Worked(name, rate.Value*1e9/60/density/p.Travel, "mm2", "deposition rate x 1000000000 / 60 / density / travel",
-			rate, origin.Published("density", density, "kg/m3", "7850 for steel unless given"), p.given("travel", p.Travel, "mm/min"))
+			rate, densityFigure(density), p.given("travel", p.Travel, "mm/min"))
 	}
 	best, gap := 20.0, math.Inf(1)
 	for _, b := range beads {
@@ -122,14 +122,19 @@ func (p Procedure) bead(d process, pos Position, size, rate origin.Figure, densi
 			best, gap = b.area, g
 		}
 	}
-	return origin.Worked(name, best*beadFactor(pos), "mm2", "usual bead x position factor on bead",
+	f := origin.Worked(name, best*beadFactor(pos), "mm2", "usual bead x position factor on bead",
 		origin.House("usual bead", best, "mm2", d.name+" of "+size.Amount()),
 		origin.House("position factor on bead", beadFactor(pos), "", pos.String()))
+	if hottest.Name == "" || hottest.Value >= f.Value {
+		return f
+	}
+	hottest.Name = name
+	return hottest
 }
 
 // runsFor fills a section. Butts: a root run of its own, then runs of the bead. Fillets within
 // the usual single-run leg, with no bead or travel given: one. Everything else: area over bead.
-func (p Procedure) runsFor(j Joint, s Section, d process, pos Position, bead origin.Figure) runs {
+func (p Procedure) runsFor(j Joint, s Section, d process, pos Position, bead, hottest origin.Figure) runs {
 	n := float64(s.Sides)
 	each := s.Area / n
 	legs := j.Type == Fillet || j.Type == Lap
@@ -137,7 +142,7 @@ func (p Procedure) runsFor(j Joint, s Section, d process, pos Position, bead ori
 	sides := origin.Written("sides", n, "", j.Origin)
 	var r runs
 	switch {
-	case legs && p.BeadArea == 0 && p.Travel == 0 && leg <= singleLeg(d.number, pos):
+	case legs && p.BeadArea == 0 && p.Travel == 0 && leg <= singleLeg(d.number, pos) && (hottest.Name == "" || each <= hottest.Value):
 		r.count, r.area = s.Sides, each
 		most := origin.House("largest leg in one run", singleLeg(d.number, pos), "mm", d.name+" in "+pos.String())
 		if pos == PB {

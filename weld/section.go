@@ -51,7 +51,7 @@ func usualPosition(t JointType, pos Position) Position {
 }
 
 // section wants a filled joint.
-func (j Joint) section(pos Position, overweld bool) (Section, error) {
+func (j shape) section(pos Position, overweld bool) (Section, error) {
 	switch {
 	case j.Type == Fillet || j.Type == Lap || j.Type == Corner:
 		return j.fillet(overweld), nil
@@ -61,13 +61,9 @@ func (j Joint) section(pos Position, overweld bool) (Section, error) {
 	return j.butt(pos)
 }
 
-func (j Joint) drawn(name string, v float64, unit string) origin.Figure {
-	return origin.Written(name, v, unit, j.Origin)
-}
-
 // fillet is the triangle z1 z2 / 2, both legs grown by fit-up gap and overweld. A corner is the
 // open triangle of two edges, with a cap.
-func (j Joint) fillet(overweld bool) Section {
+func (j shape) fillet(overweld bool) Section {
 	extra := 0.0
 	if overweld && j.Type != Corner {
 		extra = overLeg
@@ -76,7 +72,11 @@ func (j Joint) fillet(overweld bool) Section {
 	over := origin.House("overweld", extra, "mm", "laid over the drawn leg; 0 where overweld is off")
 	gap := j.drawn("fit-up gap", j.Gap, "mm")
 	z1, z2 := j.Leg+j.Gap+extra, j.Leg2+j.Gap+extra
-	a := origin.Worked("leg laid", z1, "mm", "leg drawn + fit-up gap + overweld", j.drawn("leg drawn", j.Leg, "mm"), gap, over)
+	leg := j.drawn("leg drawn", j.Leg, "mm")
+	if leg.Origin.Kind == origin.Formula {
+		leg.From = []origin.Figure{origin.Written("throat", j.Throat, "mm", j.Origin), origin.Written("thickness", j.Thickness, "mm", j.Origin)}
+	}
+	a := origin.Worked("leg laid", z1, "mm", "leg drawn + fit-up gap + overweld", leg, gap, over)
 	b := origin.Worked("second leg laid", z2, "mm", "second leg drawn + fit-up gap + overweld", j.drawn("second leg drawn", j.Leg2, "mm"), gap, over)
 	width := math.Hypot(z1, z2)
 	s := Section{
@@ -91,18 +91,17 @@ func (j Joint) fillet(overweld bool) Section {
 		return s
 	}
 	s.Height += j.Cap
-	s.Why = origin.Worked("area laid", s.Area, "mm2", "(leg laid x second leg laid / 2 + cap area) x sides", a, b, capFigure(width, j.Cap), sides)
+	s.Why = origin.Worked("area laid", s.Area, "mm2", "(leg laid x second leg laid / 2 + cap area) x sides", a, b, j.capFigure(width), sides)
 	return s
 }
 
-func capFigure(width, height float64) origin.Figure {
-	return origin.Worked("cap area", 2.0/3*width*height, "mm2", "2 / 3 x cap width x cap height",
-		origin.House("cap width", width, "mm", "opening of the groove and 3 mm"),
-		origin.House("cap height", height, "mm", "1.5 mm where overweld is on"))
+func (j shape) capFigure(width float64) origin.Figure {
+	return origin.Worked("cap area", 2.0/3*width*j.Cap, "mm2", "2 / 3 x cap width x cap height",
+		origin.House("cap width", width, "mm", "opening of the groove and 3 mm; face of a corner"), j.drawn("cap height", j.Cap, "mm"))
 }
 
 // hole is the volume of a plug or slot over its length, so that area x length is the volume.
-func (j Joint) hole() Section {
+func (j shape) hole() Section {
 	w, t := j.Diameter, j.Thickness
 	long := math.Max(j.Bead, w)
 	if j.Type == Plug {
@@ -118,41 +117,53 @@ func (j Joint) hole() Section {
 
 // butt is gap, faces and caps: A = g d + faces, where each prepared face adds h^2 tan(angle) as
 // its shape has it; times what the position adds to the metal.
-func (j Joint) butt(pos Position) (Section, error) {
+func (j shape) butt(pos Position) (Section, error) {
 	deep := j.PartialDepth
-	rootFace := j.RootFace
-	if deep < j.Thickness {
-		rootFace = 0 // the depth is that of the preparation
+	d := j.drawn("depth", deep, "mm")
+	if d.Origin.Kind == origin.Formula {
+		d.From = []origin.Figure{j.drawn("thickness", j.Thickness, "mm")}
 	}
-	gap := j.RootGap + j.Gap
-	sides := 1
+	gap := j.drawn("root gap", j.RootGap, "mm")
+	if j.Gap > 0 {
+		gap = origin.Worked("root gap as fitted", j.RootGap+j.Gap, "mm", "root gap + fit-up gap", gap, j.drawn("fit-up gap", j.Gap, "mm"))
+	}
+	sides := 1.0
 	if j.Type.twoSided() || j.faces() == 2 {
 		sides = 2
 	}
-	h := deep - rootFace
-	if j.Type.twoSided() {
-		h /= 2
-	}
-	prep, open, err := j.prepared(h)
+	prep, open, err := j.prepared(j.height(d))
 	if err != nil {
 		return Section{}, err
 	}
-	width := gap + open + capWiden
-	body := gap*deep + prep.Value
-	capArea := 2.0 / 3 * width * j.Cap
+	width := gap.Value + open + capWiden
+	body := gap.Value*deep + prep.Value
 	fac := depositFactor(j.Type, pos, deep, j.Angle)
-	s := Section{Drawn: body, Width: width, Height: deep + float64(sides)*j.Cap, Size: deep, Sides: sides}
-	s.Area = body*fac.Value + float64(sides)*capArea
-	s.Why = origin.Worked("area laid", s.Area, "mm2", "(root gap x depth + faces) x position factor on metal + cap area x sides",
-		j.drawn("root gap", gap, "mm"), j.drawn("depth", deep, "mm"), prep, fac, capFigure(width, j.Cap), j.drawn("sides", float64(sides), ""))
+	s := Section{Drawn: body, Width: width, Height: deep + sides*j.Cap, Size: deep, Sides: int(sides)}
+	s.Area = body*fac.Value + sides*2/3*width*j.Cap
+	s.Why = origin.Worked("area laid", s.Area, "mm2", "("+gap.Name+" x depth + faces) x position factor on metal + cap area x sides",
+		gap, d, prep, fac, j.capFigure(width), j.drawn("sides", sides, ""))
 	return s, nil
 }
 
-// prepared gives the area of the bevelled or gouged faces of height h (each side of a double
+// height is that of the preparation on one side: depth less root face, halved where both faces
+// are prepared. A given depth is the preparation's own.
+func (j shape) height(d origin.Figure) origin.Figure {
+	const name = "height of the preparation"
+	how, h := "depth - root face", d.Value-j.RootFace
+	if d.Value < j.Thickness {
+		how, h = "depth", d.Value
+	}
+	if j.Type.twoSided() {
+		how, h = "("+how+") / 2", h/2
+	}
+	return origin.Worked(name, h, "mm", how, d, j.drawn("root face", j.RootFace, "mm"))
+}
+
+// prepared gives the area of the bevelled or gouged faces of height H (each side of a double
 // joint) and how much wider than the gap the groove opens.
-func (j Joint) prepared(h float64) (area origin.Figure, open float64, err error) {
+func (j shape) prepared(H origin.Figure) (area origin.Figure, open float64, err error) {
 	const name = "faces"
-	H := j.drawn("height of the preparation", h, "mm")
+	h := H.Value
 	a1, a2 := j.drawn("included angle", j.Angle, "deg"), j.drawn("second angle", j.Angle2, "deg")
 	t1, t2 := tanDeg(j.Angle/2), tanDeg(j.Angle2/2)
 	switch j.Type {
@@ -167,19 +178,19 @@ func (j Joint) prepared(h float64) (area origin.Figure, open float64, err error)
 		t, u := tanDeg(j.Angle), tanDeg(j.Angle2)
 		return origin.Worked(name, h*h*(t+u)/2, "mm2", "height of the preparation^2 x (tan(included angle) + tan(second angle)) / 2", H, a1, a2), h * t, nil
 	case SingleU, DoubleU, SingleJ, DoubleJ:
-		return j.rounded(h)
+		return j.rounded(H, a1)
 	}
 	return origin.Worked(name, 0, "mm2", "0"), 0, nil // square
 }
 
-// rounded is a U or J: a quarter (J) or two (U) of a round root of radius R with faces leaning
-// by beta. Round part up to the tangent point R(1 - sin beta): R^2/2 (pi/2 - beta - sin beta cos
-// beta); above it a face that starts R cos beta out and leans by tan beta.
-func (j Joint) rounded(h float64) (origin.Figure, float64, error) {
-	halves := 2.0
+// rounded is a J or, doubled, a U: a round root of radius R with a face that leans by beta. Round
+// part up to the tangent point R(1 - sin beta): R^2/2 (pi/2 - beta - sin beta cos beta); above it
+// a face that starts R cos beta out and leans by tan beta.
+func (j shape) rounded(H, angle origin.Figure) (origin.Figure, float64, error) {
+	halves, how := 2.0, "included angle / 2"
 	lean := j.Angle / 2
 	if j.Type == SingleJ || j.Type == DoubleJ {
-		halves, lean = 1, j.Angle
+		halves, how, lean = 1, "included angle", j.Angle
 	}
 	times := halves
 	if j.Type.twoSided() {
@@ -191,16 +202,16 @@ func (j Joint) rounded(h float64) (origin.Figure, float64, error) {
 	b := lean * math.Pi / 180
 	R := j.Radius
 	foot := R * (1 - math.Sin(b))
-	if h <= foot {
-		return origin.Figure{}, 0, fault("radius", "make the radius or the root face smaller, or choose a V", "a root radius of %.4g mm does not go into a preparation %.4g mm high", R, h)
+	if H.Value <= foot {
+		return origin.Figure{}, 0, fault("radius", "make the radius or the root face smaller, or choose a V", "a root radius of %.4g mm does not go into a preparation %.4g mm high", R, H.Value)
 	}
 	round := R * R / 2 * (math.Pi/2 - b - math.Sin(b)*math.Cos(b))
-	up := h - foot
+	up := H.Value - foot
 	v := times * (round + up*R*math.Cos(b) + up*up*math.Tan(b)/2)
+	r, l := j.drawn("radius", R, "mm"), origin.Worked("lean", lean, "deg", how, angle)
 	f := origin.Worked("faces", v, "mm2",
 		"halves x (radius^2 / 2 x (pi / 2 - lean x pi / 180 - sin(lean) x cos(lean)) + face height x radius x cos(lean) + face height^2 x tan(lean) / 2)",
-		j.drawn("halves", times, ""), j.drawn("radius", R, "mm"), j.drawn("lean", lean, "deg"),
-		j.drawn("face height", up, "mm"))
+		j.drawn("halves", times, ""), r, l, origin.Worked("face height", up, "mm", "height of the preparation - radius x (1 - sin(lean))", H, r, l))
 	return f, halves * (R*math.Cos(b) + up*math.Tan(b)), nil
 }
 

@@ -47,6 +47,9 @@ func (s Set) CurrentAt(share float64) float64 {
 
 // share is Share as a figure.
 func (p Procedure) share(current origin.Figure) origin.Figure {
+	if p.Set.RatedCurrent == 0 {
+		return origin.House("duty cycle at this current", 1, "", "no rating given: the set is taken to hold it")
+	}
 	return origin.Worked("duty cycle at this current", p.Set.Share(current.Value), "", "min(1, duty cycle x (rated current / current)^2)",
 		p.given("duty cycle", p.Set.DutyCycle, ""), p.given("rated current", p.Set.RatedCurrent, "A"), current)
 }
@@ -101,12 +104,12 @@ func (p Procedure) power(volts, current origin.Figure) origin.Figure {
 		"volts x current / 1000 / set efficiency / power factor", volts, current, eff, pf)
 }
 
-// GeneratorMargin is the generator's kVA over the largest kVA of the sets on it (set makers'
+// generatorMargin is the generator's kVA over the largest kVA of the sets on it (set makers'
 // manuals: 1.35, and never below the set's own).
-const GeneratorMargin = 1.35
+const generatorMargin = 1.35
 
-// Generator gives the kVA of a generator that starts and carries sets drawing kVA at most.
-func Generator(kVA float64) float64 { return GeneratorMargin * kVA }
+// Generator gives the kVA of a generator that starts and carries sets drawing kVA at most: 1.35 times it.
+func Generator(kVA float64) float64 { return generatorMargin * kVA }
 
 // VoltageDrop gives the volts lost there and back in a copper cable of metres length and mm2
 // section at a current: 2 l I rho / A; for three phases the root of three instead of two.

@@ -43,6 +43,13 @@ func (s Steel) density() float64 {
 	return steelDensity
 }
 
+func densityFigure(v float64) origin.Figure {
+	if v == steelDensity {
+		return origin.Published("density", v, "kg/m3", "weld volume and weight notes: 7.85 g/cm3 for steel")
+	}
+	return origin.Written("density", v, "kg/m3", origin.Origin{Source: "steel"})
+}
+
 // yield gives the yield strength that the grade's name promises.
 func (s Steel) yield() float64 {
 	if s.Yield > 0 {

@@ -126,3 +126,21 @@ func warnings(parts []*seamWork) []string {
 	}
 	return list
 }
+
+// Steps gives every figure of the estimate that applies, in the order in which they are worked
+// out: metal, runs, arc, hands-on, set-up, safe stop, heat, preheat, cooling, testing, power,
+// consumables.
+func (e Estimate) Steps() []origin.Figure {
+	w := e.Why
+	all := []origin.Figure{w.Metal, w.Passes, w.Arc, e.Hours, w.SetUp, w.SafeStop, w.HeatInput, w.CE, w.CET, w.Preheat, w.T85, w.Cooling, w.BeforeNDT, w.Power}
+	for _, c := range e.Consumables {
+		all = append(all, renamed(c.Why, c.Name))
+	}
+	var steps []origin.Figure
+	for _, f := range all {
+		if f.Name != "" {
+			steps = append(steps, f)
+		}
+	}
+	return steps
+}

@@ -3,7 +3,6 @@ package weld
 import (
 	"fmt"
 	"math"
-	"strings"
 
 	"sailby/tasks/origin"
 	"sailby/tasks/quantity"
@@ -129,7 +128,7 @@ func (c Circumstances) check() error {
 // seamWork is one seam on its way to an estimate.
 type seamWork struct {
 	seam    Seam
-	joint   Joint // filled
+	joint   shape
 	proc    Procedure
 	data    process
 	pos     Position
@@ -184,12 +183,25 @@ func workSeam(s Seam, c Circumstances) (*seamWork, error) {
 	if e.section, err = e.joint.section(e.pos, !c.NoOverweld); err != nil {
 		return nil, err
 	}
+	e.data.size = usualSize(e.data, e.joint.Thickness)
 	e.deposit(c)
 	if err := e.heating(c); err != nil {
 		return nil, err
 	}
 	e.times(c)
 	return e, nil
+}
+
+// usualSize is the wire or electrode where none is given: the process's own, smaller in sheet
+// and thin plate (house judgement).
+func usualSize(d process, thick float64) float64 {
+	switch {
+	case d.stick && thick < 6:
+		return 3.2
+	case d.number == 135 && thick < 3:
+		return 0.8
+	}
+	return d.size
 }
 
 func spaced(s string) string {
@@ -214,61 +226,3 @@ func (e *seamWork) title() string {
 }
 
 func round(v, step float64) float64 { return math.Round(v/step) * step }
-
-// deposit works out metal, rate, runs and arc time.
-func (e *seamWork) deposit(c Circumstances) {
-	density := c.Steel.density()
-	j, p := e.joint, e.proc
-	e.size = p.size(e.data)
-	rate, warn := p.rate(e.data, e.pos, density)
-	e.rate, e.warn = rate, append(e.warn, warn...)
-	e.bead = p.bead(e.data, e.pos, e.size, e.rate, density)
-	e.runs = p.runsFor(j, e.section, e.data, e.pos, e.bead)
-	e.warn = append(e.warn, e.runs.warn...)
-	e.length = j.Length * j.share()
-
-	length := origin.Written("length", j.Length, "mm", j.Origin)
-	if j.Pitch > 0 {
-		length = origin.Worked("length welded", e.length, "mm", "length x bead / pitch", length,
-			origin.Written("bead", j.Bead, "mm", j.Origin), origin.Written("pitch", j.Pitch, "mm", j.Origin))
-	}
-	rho := origin.Published("density", density, "kg/m3", "7850 for steel unless given")
-	kg := Metal(e.section.Area, e.length, density)
-	expr := "area laid x " + length.Name + " x density / 1000000000"
-	from := []origin.Figure{e.section.Why, length, rho}
-	if j.BackGouge {
-		back := backRun(e.pos, j.Thickness)
-		kg += back.Value * e.length / 1000
-		expr += " + backing run x " + length.Name + " / 1000"
-		from = append(from, back)
-	}
-	e.metal = origin.Worked("weld metal", kg, "kg", expr, from...)
-	e.arcTime()
-	if strings.HasPrefix(c.Execution, "AWS") && (j.Type == Fillet) && j.Leg < MinFillet(math.Max(j.Thickness, j.Thickness2))-0.05 && s0(e) {
-		e.warnf("a leg of %.3g mm is below the %.0f mm that AWS D1.1:2020 wants on %.3g mm", j.Leg, MinFillet(math.Max(j.Thickness, j.Thickness2)), math.Max(j.Thickness, j.Thickness2))
-	}
-}
-
-// s0 says whether the thickness was given, not assumed from the leg.
-func s0(e *seamWork) bool { return e.seam.Joint.Thickness > 0 }
-
-// arcTime is metal over rate; where a fillet's travel speed is given, length over travel as
-// well, and the longer of both, with a warning where they disagree by more than routesApart.
-func (e *seamWork) arcTime() {
-	byMetal := origin.Worked("arc time by metal", e.metal.Value/e.rate.Value*60, "min", "weld metal / deposition rate x 60", e.metal, e.rate)
-	if !e.runs.travel {
-		e.arc = byMetal
-		e.arc.Name = "arc time"
-		return
-	}
-	v := e.proc.given("travel", e.proc.Travel, "mm/min")
-	byTravel := origin.Worked("arc time by travel", float64(e.runs.count)*e.length/v.Value, "min", "runs x length welded / travel",
-		e.runs.why, origin.Written("length welded", e.length, "mm", e.joint.Origin), v)
-	e.arc = origin.Worked("arc time", math.Max(byMetal.Value, byTravel.Value), "min", "max(arc time by metal, arc time by travel)", byMetal, byTravel)
-	if r := byTravel.Value / byMetal.Value; r > 1+routesApart || r < 1/(1+routesApart) {
-		leg := math.Sqrt(2 * e.bead.Value)
-		e.warnf("travel and metal disagree: %.3g min by travel, %.3g min by metal; at %.0f mm/min a run has %.3g mm2, a leg of %.2g mm: check travel against deposition, or what is really laid", byTravel.Value, byMetal.Value, v.Value, e.bead.Value, leg)
-	}
-}
-
-const routesApart = 0.15 // between the travel and the metal route: what setting a speed by hand is good for

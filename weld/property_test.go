@@ -1,0 +1,252 @@
+package weld
+
+import (
+	"fmt"
+	"math"
+	"reflect"
+	"testing"
+
+	"pgregory.net/rapid"
+
+	"sailby/tasks/origin"
+)
+
+func drawNumber(t *rapid.T, name string, lo, hi float64) float64 {
+	return math.Round(rapid.Float64Range(lo, hi).Draw(t, name)*8) / 8
+}
+
+// drawJoint gives any joint that can be welded.
+func drawJoint(t *rapid.T) Joint {
+	j := Joint{Type: JointType(rapid.IntRange(int(Fillet), int(lastJoint)).Draw(t, "type")), Length: drawNumber(t, "length", 50, 20000)}
+	j.Thickness = drawNumber(t, "thickness", 12, 60)
+	switch j.Type {
+	case Fillet, Lap:
+		j.Leg = drawNumber(t, "leg", 3, 25)
+		j.BothSides = rapid.Bool().Draw(t, "both sides")
+		if rapid.Bool().Draw(t, "intermittent") {
+			j.Bead = drawNumber(t, "bead", 20, 100)
+			j.Pitch = j.Bead + drawNumber(t, "between", 0, 200)
+		}
+	case Plug, Slot:
+		j.Diameter = drawNumber(t, "diameter", 10, 40)
+		j.Bead = j.Diameter + drawNumber(t, "slot", 0, 100)
+		j.Count = rapid.IntRange(1, 20).Draw(t, "count")
+	case DoubleU, DoubleJ:
+		j.Thickness += 20
+	}
+	if rapid.Bool().Draw(t, "gap") {
+		j.Gap = drawNumber(t, "fit-up gap", 0.5, 3)
+	}
+	if j.Type.groove() {
+		j.BackGouge = rapid.Bool().Draw(t, "back-gouge")
+		if j.Type != Square && j.Type < SingleU && rapid.Bool().Draw(t, "partial") {
+			j.PartialDepth = j.Thickness / 2
+		}
+		if rapid.Bool().Draw(t, "flush") {
+			j.Cap = None
+		}
+	}
+	return j
+}
+
+func drawSeam(t *rapid.T) Seam {
+	s := Seam{Joint: drawJoint(t), Position: Position(rapid.IntRange(0, int(lastPosition)).Draw(t, "position"))}
+	p := Procedure{Process: processes[rapid.IntRange(0, len(processes)-1).Draw(t, "process")].number}
+	switch rapid.IntRange(0, 4).Draw(t, "how") {
+	case 0:
+		p.Current = drawNumber(t, "current", 90, 300)
+	case 1:
+		p.Deposition = drawNumber(t, "deposition", 0.5, 6)
+		p.Position = s.Position
+	case 2:
+		p.WireFeed, p.Travel = drawNumber(t, "wire feed", 3, 12), drawNumber(t, "travel", 100, 600)
+	case 3:
+		p.Set, p.Current = Set{RatedCurrent: 200, DutyCycle: 0.25}, 200
+		p.MaxHeatInput = 1.5
+	}
+	s.Procedure = &p
+	s.Turns = rapid.IntRange(0, 2).Draw(t, "turns")
+	return s
+}
+
+func drawCircumstances(t *rapid.T) Circumstances {
+	return Circumstances{
+		Site: rapid.Bool().Draw(t, "site"), NoOverweld: rapid.Bool().Draw(t, "no overweld"), ByParts: rapid.Bool().Draw(t, "by parts"),
+		Ambient:         drawNumber(t, "ambient", -20, 35),
+		Execution:       rapid.SampledFrom([]string{"", "EN 1090-2", "AWS D1.1"}).Draw(t, "execution"),
+		PreheatStandard: rapid.SampledFrom([]string{"", "EN 1011-2 A", "EN 1011-2 B", "AWS D1.1"}).Draw(t, "preheat"),
+		Steel:           Steel{Grade: rapid.SampledFrom([]string{"", "S355", "S690Q", "A514"}).Draw(t, "grade"), C: 0.17, Mn: 1.45, Cr: 0.05},
+	}
+}
+
+// TestEveryFigureRecomputes: each formula printed gives the value printed beside it, and the
+// plain fields are the figures' values.
+func TestEveryFigureRecomputes(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		seams := rapid.SliceOfN(rapid.Custom(drawSeam), 1, 3).Draw(t, "seams")
+		e, err := Work(seams, drawCircumstances(t))
+		if err != nil {
+			t.Fatal(err)
+		}
+		for _, f := range e.Steps() {
+			checkTree(t, f)
+		}
+		for _, f := range []struct{ plain, figure float64 }{
+			{e.Metal, e.Why.Metal.Value}, {float64(e.Arc), e.Why.Arc.Value}, {float64(e.HandsOn), e.Hours.Value}, {e.HeatInput, e.Why.HeatInput.Value},
+			{float64(e.SetUp), e.Why.SetUp.Value}, {float64(e.SafeStop), e.Why.SafeStop.Value}, {e.Power, e.Why.Power.Value}} {
+			if f.plain != f.figure {
+				t.Errorf("field %v and figure %v differ", f.plain, f.figure)
+			}
+		}
+		if float64(e.Arc) > float64(e.HandsOn) || e.SafeStop > e.HandsOn || !(e.Arc > 0) {
+			t.Errorf("arc %v, safe stop %v, hands-on %v", e.Arc, e.SafeStop, e.HandsOn)
+		}
+	})
+}
+
+// fixed is a rate that no position changes.
+func fixed(pos Position) *Procedure { return &Procedure{Process: 136, Position: pos, Deposition: 2} }
+
+func mustWork(t interface{ Fatal(...any) }, c Circumstances, seams ...Seam) Estimate {
+	e, err := Work(seams, c)
+	if err != nil {
+		t.Fatal(err)
+	}
+	return e
+}
+
+// less says whether a is no more than b but for rounding.
+func less(a, b float64) bool { return a <= b*(1+1e-9) }
+
+func TestGrowsWithLengthAndSplits(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		s, c := drawSeam(t), drawCircumstances(t)
+		if s.Joint.Type == Plug || s.Joint.Type == Slot {
+			s.Joint.Type, s.Joint.Leg, s.Joint.Bead = Fillet, 6, 0
+		}
+		whole := mustWork(t, c, s)
+		twice, half := s, s
+		twice.Joint.Length *= 2
+		half.Joint.Length /= 2
+		e2, parts := mustWork(t, c, twice), mustWork(t, c, half, half)
+		if !near9(e2.Metal, 2*whole.Metal) || !near9(float64(e2.Arc), 2*float64(whole.Arc)) {
+			t.Errorf("twice the length: %v kg %v min, once %v kg %v min", e2.Metal, e2.Arc, whole.Metal, whole.Arc)
+		}
+		if !near9(parts.Metal, whole.Metal) || !near9(float64(parts.Arc), float64(whole.Arc)) {
+			t.Errorf("two halves: %v kg, whole %v kg", parts.Metal, whole.Metal)
+		}
+	})
+}
+
+func near9(a, b float64) bool { return math.Abs(a-b) <= 1e-9*math.Max(math.Abs(a), math.Abs(b)) }
+
+func TestGrowsWithSize(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		s, c := drawSeam(t), Circumstances{NoOverweld: rapid.Bool().Draw(t, "no overweld")}
+		s.Procedure, s.Joint.PartialDepth = fixed(s.Position), 0
+		more := s
+		step := drawNumber(t, "step", 0.25, 10)
+		if s.Joint.Type == Fillet || s.Joint.Type == Lap {
+			more.Joint.Leg += step
+		} else {
+			more.Joint.Thickness += step
+		}
+		a, b := mustWork(t, c, s), mustWork(t, c, more)
+		if !less(a.Metal, b.Metal) || !less(float64(a.Arc), float64(b.Arc)) || a.Passes > b.Passes {
+			t.Errorf("%s: %v kg, %v min, %d runs; %v larger %v kg, %v min, %d runs", s.Joint.Type, a.Metal, a.Arc, a.Passes, step, b.Metal, b.Arc, b.Passes)
+		}
+	})
+}
+
+func TestTwoSidesAreTwice(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		s := Seam{Joint: Joint{Type: Fillet, Leg: drawNumber(t, "leg", 3, 25), Length: drawNumber(t, "length", 50, 9000)}, Procedure: fixed(PB)}
+		both := s
+		both.Joint.BothSides = true
+		a, b := mustWork(t, Circumstances{}, s), mustWork(t, Circumstances{}, both)
+		if !near9(b.Metal, 2*a.Metal) || !near9(float64(b.Arc), 2*float64(a.Arc)) || b.Passes != 2*a.Passes {
+			t.Errorf("both sides %v kg %d runs, one %v kg %d runs", b.Metal, b.Passes, a.Metal, a.Passes)
+		}
+	})
+}
+
+// TestUpwardsIsNeverLess: at a fixed rate and equal preparation, PF takes at least the metal and
+// the arc time of PA.
+func TestUpwardsIsNeverLess(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		s := drawSeam(t)
+		s.Joint.Angle = drawNumber(t, "angle", 16, 70)
+		at := func(pos Position) Estimate {
+			s.Position, s.Procedure = pos, fixed(pos)
+			if s.Joint.Type == SingleJ || s.Joint.Type == DoubleJ {
+				s.Joint.Angle = 15
+			}
+			return mustWork(t, Circumstances{}, s)
+		}
+		a, f := at(PA), at(PF)
+		if !less(a.Metal, f.Metal) || !less(float64(a.Arc), float64(f.Arc)) {
+			t.Errorf("%s: PA %v kg, PF %v kg", s.Joint.Type, a.Metal, f.Metal)
+		}
+	})
+}
+
+func TestSameAgain(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		s, c := drawSeam(t), drawCircumstances(t)
+		if a, b := mustWork(t, c, s, s), mustWork(t, c, s, s); !reflect.DeepEqual(a, b) {
+			t.Error("equal seams gave two estimates")
+		}
+	})
+}
+
+// TestNothingPanics: any numbers at all give an estimate of finite numbers or a *Error with a
+// way out.
+func TestNothingPanics(t *testing.T) {
+	odd := rapid.OneOf(rapid.Float64(), rapid.SampledFrom([]float64{0, None, math.NaN(), math.Inf(1), math.Inf(-1), -1, 1, 10, 1e-12, 1e12}))
+	rapid.Check(t, func(t *rapid.T) {
+		s, c := drawSeam(t), drawCircumstances(t)
+		for _, v := range []any{&s.Joint, s.Procedure, &s.Procedure.Set, &c.Steel, &c.Rates, &c} {
+			r := reflect.ValueOf(v).Elem()
+			for i := range r.NumField() {
+				if f := r.Field(i); f.Kind() == reflect.Float64 && rapid.IntRange(0, 12).Draw(t, "upset") == 0 {
+					f.SetFloat(odd.Draw(t, r.Type().Field(i).Name))
+				}
+			}
+		}
+		e, err := Work([]Seam{s}, c)
+		if err != nil {
+			if w, ok := err.(*Error); !ok || w.Field == "" || w.Hint == "" || w.Problem == "" {
+				t.Errorf("an error without field, problem or way out: %#v", err)
+			}
+			return
+		}
+		for _, f := range e.Steps() {
+			f.Walk(func(f origin.Figure, _ int) {
+				if math.IsNaN(f.Value) || math.IsInf(f.Value, 0) {
+					t.Errorf("%s is %v", f.Name, f.Value)
+				}
+			})
+		}
+	})
+}
+
+func ExampleWork() {
+	seam := Seam{
+		Joint:    Joint{Type: Fillet, Leg: 6, Length: 9600},
+		Position: PB, Procedure: &Procedure{Process: 136, WireDiameter: 1.2, Current: 210, Volts: 25},
+	}
+	e, err := Work([]Seam{seam}, Circumstances{Site: true})
+	if err != nil {
+		fmt.Println(err)
+		return
+	}
+	fmt.Printf("%.2f kg in %d run, arc %.0f min, hands-on %d min, stop not before %d min\n", e.Metal, e.Passes, float64(e.Arc), e.HandsOn.Whole(), e.SafeStop.Whole())
+	for _, c := range e.Consumables {
+		fmt.Printf("%s: %.1f %s, spare %.1f\n", c.Name, c.Amount, c.Unit, c.Spare)
+	}
+	// Output:
+	// 1.85 kg in 1 run, arc 38 min, hands-on 478 min, stop not before 179 min
+	// flux-cored wire 1.2 mm: 2.1 kg, spare 0.3
+	// shielding gas for flux-cored: 781.1 L, spare 117.2
+	// grinding discs 125 mm: 1.0 pieces, spare 1.0
+}
