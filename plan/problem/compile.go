@@ -55,6 +55,7 @@ func (p *Problem) act(s *expand.Step, maker *crewMaker) Act {
 		}
 		a.Modes = []Mode{{Keeper: -1, Time: Curing(rate)}}
 	}
+	a.Timings()
 	return a
 }
 

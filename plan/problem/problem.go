@@ -29,6 +29,7 @@ type Act struct {
 	Name     string
 	Step     *expand.Step // nil for an open instance
 	Modes    []Mode       // at least one, unless Hopeless says why there is none
+	Times    []*Timing    // the distinct timings of Modes
 	Hopeless string       // why no mode exists: "no opening is long enough", "nobody has the ticket"
 	Uses     []Use
 	From     int  // not before
@@ -119,6 +120,20 @@ type Order struct {
 
 // Before says that activity First is finished before activity Then starts.
 type Before struct{ First, Then int }
+
+// Timings gives the distinct timings of the activity's modes.
+func (a *Act) Timings() []*Timing {
+	if a.Times == nil {
+		seen := map[*Timing]bool{}
+		for _, m := range a.Modes {
+			if !seen[m.Time] {
+				seen[m.Time] = true
+				a.Times = append(a.Times, m.Time)
+			}
+		}
+	}
+	return a.Times
+}
 
 // Earliest gives the earliest minute at which the later end of l may be, given the earlier end at t.
 func (l *Link) Earliest(t int) int {

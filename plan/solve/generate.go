@@ -1,0 +1,352 @@
+package solve
+
+import (
+	"slices"
+
+	"sailby/plan/problem"
+	"sailby/tasks"
+	"sailby/tasks/expand"
+)
+
+// generator makes schedules from priority lists: serial generation, with unscheduling where a
+// maximum wait is missed. Cost: O(acts x modes x conflicts) for a schedule.
+type generator struct {
+	*state
+	into, from [][]int // links by later and by earlier activity
+	lo         []int   // lower bounds that unscheduling has raised, for this schedule
+	weight     []int   // by person: how much they are wanted elsewhere
+	choice     []int   // by order rule: which of its choices holds
+	rank       []int   // by activity: place in the list
+	order      []int   // activities by rank
+	standing   []bool  // activities that nothing but links holds
+}
+
+func newGenerator(p *problem.Problem) *generator {
+	n := len(p.Acts)
+	g := &generator{state: newState(p), into: make([][]int, n), from: make([][]int, n), lo: make([]int, n),
+		weight: make([]int, len(p.People)), choice: make([]int, len(p.Orders)), rank: make([]int, n), order: make([]int, n), standing: make([]bool, n)}
+	for k, l := range p.Links {
+		g.into[l.To] = append(g.into[l.To], k)
+		if l.From >= 0 {
+			g.from[l.From] = append(g.from[l.From], k)
+		}
+	}
+	for i := range p.Acts {
+		a := &p.Acts[i]
+		g.standing[i] = len(a.Modes) == 1 && len(a.Modes[0].Crew) == 0 && len(a.Uses) == 0
+		share := map[int]bool{}
+		for _, m := range a.Modes {
+			for _, c := range m.Crew {
+				share[c] = true
+			}
+		}
+		for c := range share {
+			g.weight[c] += a.Modes[0].Time.Length() * len(a.Modes[0].Crew) / len(share)
+		}
+	}
+	return g
+}
+
+// run makes the schedule of a list; false where an activity finds no place or maximum waits
+// cannot be met within a bounded number of attempts.
+func (g *generator) run(order []int) bool {
+	g.reset()
+	for i, a := range order {
+		g.rank[a] = i
+	}
+	for i := range g.lo {
+		g.lo[i] = g.p.Acts[i].From
+	}
+	tries := 40 + 20*len(order)
+	for left := len(order); left > 0; {
+		i := g.next(order)
+		if i < 0 || !g.place(i) {
+			return false
+		}
+		left--
+		undone, ok := g.repair(i)
+		if !ok {
+			return false
+		}
+		left += undone
+		if tries--; tries < 0 {
+			return false
+		}
+	}
+	return true
+}
+
+// next gives the unplaced activity that comes first in the list among those whose earlier
+// activities are placed. What must follow within a maximum wait goes first of all.
+func (g *generator) next(order []int) int {
+	best := -1
+	for _, i := range order {
+		if g.placed[i] || !g.ready(i) {
+			continue
+		}
+		if g.standing[i] || g.urgent(i) {
+			return i
+		}
+		if best < 0 {
+			best = i
+		}
+	}
+	return best
+}
+
+func (g *generator) ready(i int) bool {
+	for _, k := range g.into[i] {
+		if l := &g.p.Links[k]; l.From >= 0 && l.Min > expand.NoMin && !g.placed[l.From] {
+			return false
+		}
+	}
+	for o, c := range g.choice {
+		for _, b := range g.p.Orders[o].Choices[c] {
+			if b.Then == i && !g.placed[b.First] {
+				return false
+			}
+		}
+	}
+	return true
+}
+
+func (g *generator) urgent(i int) bool {
+	for _, k := range g.into[i] {
+		l := &g.p.Links[k]
+		if l.From >= 0 && g.placed[l.From] && (l.Max < expand.NoMax || l.Last != nil) {
+			return true
+		}
+	}
+	return false
+}
+
+// lower gives the earliest start that links, order rules and earlier attempts leave.
+func (g *generator) lower(i int, skip *linkSkip) int {
+	lo := g.lo[i]
+	if skip.from(i) {
+		lo = 0
+	}
+	for _, k := range g.into[i] {
+		l := &g.p.Links[k]
+		if l.From >= 0 && !g.placed[l.From] || skip.link(k) {
+			continue
+		}
+		t := l.Earliest(g.end(l.From, l.FromEnd))
+		if l.ToEnd == tasks.Finish {
+			t = g.startFor(i, t, lo)
+		}
+		lo = max(lo, t)
+	}
+	for _, k := range g.from[i] { // a maximum from i to something placed already
+		l := &g.p.Links[k]
+		if !g.placed[l.To] || skip.link(k) || l.Max >= expand.NoMax && l.Last == nil {
+			continue
+		}
+		lo = max(lo, g.pulled(l, i, lo))
+	}
+	for o, c := range g.choice {
+		if skip.order(o) {
+			continue
+		}
+		for _, b := range g.p.Orders[o].Choices[c] {
+			if b.Then == i && g.placed[b.First] {
+				lo = max(lo, g.finish[b.First])
+			}
+		}
+	}
+	return lo
+}
+
+// end gives a placed activity's start or finish; activity -1 is the base.
+func (g *generator) end(i int, e tasks.LinkEnd) int {
+	switch {
+	case i < 0:
+		return 0
+	case e == tasks.Start:
+		return g.start[i]
+	}
+	return g.finish[i]
+}
+
+// startFor gives the least start of i, over its timings, with a finish of at least f.
+func (g *generator) startFor(i, f, lo int) int {
+	best := problem.Inf
+	for _, w := range g.p.Acts[i].Timings() {
+		a, b := lo, max(lo, f)
+		for a < b {
+			mid := (a + b) / 2
+			if s := w.Start(mid); s < problem.Inf && w.Finish(s) < f {
+				a = mid + 1
+			} else {
+				b = mid
+			}
+		}
+		best = min(best, a)
+	}
+	return best
+}
+
+// pulled gives the least start of i from which the maximum of l reaches the placed later end.
+func (g *generator) pulled(l *problem.Link, i, lo int) int {
+	end := g.end(l.To, l.ToEnd)
+	a, b := lo, max(lo, end)
+	if l.FromEnd == tasks.Finish {
+		a = 0
+	}
+	for a < b {
+		mid := (a + b) / 2
+		if l.LastAt(mid) >= end {
+			b = mid
+		} else {
+			a = mid + 1
+		}
+	}
+	if l.FromEnd == tasks.Finish {
+		return g.startFor(i, a, lo)
+	}
+	return a
+}
+
+// place puts activity i at its earliest finish over all modes.
+func (g *generator) place(i int) bool {
+	lo := g.lower(i, nil)
+	m, at := g.best(i, lo, nil)
+	if m < 0 {
+		return false
+	}
+	g.put(i, m, at)
+	return true
+}
+
+// best finds the mode and start with the earliest finish; equal ones go to the people least
+// wanted elsewhere.
+func (g *generator) best(i, lo int, skip *skipper) (mode, at int) {
+	a := &g.p.Acts[i]
+	mode = -1
+	bestFin, bestWeight := problem.Inf, 0
+	for m := range a.Modes {
+		w := a.Modes[m].Time
+		s := w.Start(lo)
+		if s >= problem.Inf {
+			continue
+		}
+		weight := 0
+		for _, c := range a.Modes[m].Crew {
+			weight += g.weight[c]
+		}
+		if f := w.Finish(s); f > bestFin || f == bestFin && weight >= bestWeight {
+			continue
+		}
+		s = g.earliest(i, m, s, bestFin, skip)
+		if s >= problem.Inf {
+			continue
+		}
+		if f := w.Finish(s); mode < 0 || f < bestFin || f == bestFin && weight < bestWeight {
+			mode, at, bestFin, bestWeight = m, s, f, weight
+		}
+	}
+	return mode, at
+}
+
+// earliest gives the first start of i at or after s in mode m that fits what is placed, giving
+// up where the finish passes limit.
+func (g *generator) earliest(i, m, s, limit int, skip *skipper) int {
+	w := g.p.Acts[i].Modes[m].Time
+	for s < problem.Inf {
+		if w.Finish(s) > limit {
+			return problem.Inf
+		}
+		b := g.fits(i, m, s, skip)
+		if b.kind == free {
+			return s
+		}
+		s = w.Start(max(b.next, s+1))
+	}
+	return problem.Inf
+}
+
+// repair looks for maximum waits that the placing of i has broken. For each, the earlier
+// activity's lower bound is raised and it is unscheduled with all that hangs on it. It gives the number
+// of activities unscheduled.
+func (g *generator) repair(i int) (undone int, ok bool) {
+	for _, k := range g.into[i] {
+		l := &g.p.Links[k]
+		if l.From < 0 || !g.placed[i] || !g.placed[l.From] {
+			continue
+		}
+		if g.end(i, l.ToEnd) <= l.LastAt(g.end(l.From, l.FromEnd)) {
+			continue
+		}
+		lo := g.pulled(l, l.From, g.start[l.From])
+		if lo <= g.start[l.From] {
+			lo = g.start[l.From] + 1
+		}
+		if lo >= g.p.End {
+			return undone, false
+		}
+		from := l.From
+		undone += g.drop(from)
+		g.lo[from] = max(g.lo[from], lo)
+	}
+	for _, k := range g.from[i] { // something placed already comes too early after i
+		l := &g.p.Links[k]
+		if !g.placed[i] || !g.placed[l.To] || l.Min <= expand.NoMin {
+			continue
+		}
+		if g.end(l.To, l.ToEnd) < l.Earliest(g.end(i, l.FromEnd)) {
+			undone += g.drop(l.To)
+		}
+	}
+	return undone, true
+}
+
+// drop unschedules activity i and everything placed that comes after it by links.
+func (g *generator) drop(i int) int {
+	if !g.placed[i] {
+		return 0
+	}
+	g.take(i)
+	n := 1
+	for _, k := range g.from[i] {
+		if l := &g.p.Links[k]; l.Min > expand.NoMin {
+			n += g.drop(l.To)
+		}
+	}
+	for o, c := range g.choice {
+		for _, b := range g.p.Orders[o].Choices[c] {
+			if b.First == i {
+				n += g.drop(b.Then)
+			}
+		}
+	}
+	return n
+}
+
+// list gives the placed activities by start, then by rank.
+func (g *generator) list() []int {
+	out := make([]int, len(g.placed))
+	for i := range out {
+		out[i] = i
+	}
+	slices.SortStableFunc(out, func(a, b int) int {
+		if g.start[a] != g.start[b] {
+			return g.start[a] - g.start[b]
+		}
+		if g.finish[a] != g.finish[b] {
+			return g.finish[a] - g.finish[b]
+		}
+		return g.rank[a] - g.rank[b]
+	})
+	return out
+}
+
+// linkSkip leaves out links, not-before times and order rules; nil leaves nothing out.
+type linkSkip struct {
+	links  map[int]bool
+	begin  bool
+	orders map[int]bool
+}
+
+func (k *linkSkip) link(i int) bool  { return k != nil && k.links[i] }
+func (k *linkSkip) from(int) bool    { return k != nil && k.begin }
+func (k *linkSkip) order(i int) bool { return k != nil && k.orders[i] }

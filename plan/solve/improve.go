@@ -1,0 +1,350 @@
+package solve
+
+import (
+	"math/rand/v2"
+	"slices"
+
+	"sailby/plan/network"
+	"sailby/plan/problem"
+	"sailby/tasks"
+	"sailby/tasks/expand"
+)
+
+// Schedule is a complete schedule: a start, a finish and a mode for every activity.
+type Schedule struct {
+	Start, Finish, Mode []int
+	Choice              []int // by order rule
+	Score               Score
+}
+
+// Options bound a search.
+type Options struct {
+	Ticks int64       // starts tried before it ends; 0 is no limit
+	Stop  func() bool // asked often; true ends the search
+	Seed  uint64
+	Good  func(Score) bool // true ends the search: nothing better is wanted
+}
+
+// Result is what a search found.
+type Result struct {
+	Best  *Schedule // nil if no schedule was found
+	Ticks int64
+	Cut   bool // ended by Stop or Ticks, not by Good or by having nothing left to try
+}
+
+// Find looks for the best schedule: priority rules first, then forward-backward improvement
+// and local search on the list, until a limit. The same seed and ticks give the same schedule.
+//
+// Source of the methods: serial generation and priority rules after Kolisch (EJOR 1996),
+// unscheduling for maximum waits after Franck, Neumann and Schwindt (OR Spektrum 2001),
+// forward-backward improvement (justification) after Valls, Ballestin and Quintanilla (EJOR 2005).
+func Find(p *problem.Problem, b network.Bounds, o Options) Result {
+	f := &finder{g: newGenerator(p), p: p, b: b, o: o, rng: rand.New(rand.NewPCG(o.Seed, 0x5a11b7))}
+	f.rules()
+	if f.best != nil {
+		f.justify()
+	}
+	f.climb()
+	return Result{Best: f.best, Ticks: f.g.ticks, Cut: f.cut}
+}
+
+type finder struct {
+	g    *generator
+	p    *problem.Problem
+	b    network.Bounds
+	o    Options
+	rng  *rand.Rand
+	best *Schedule
+	list []int // the list that made best
+	cut  bool
+}
+
+// over says whether the search must end.
+func (f *finder) over() bool {
+	if f.best != nil && f.o.Good != nil && f.o.Good(f.best.Score) {
+		return true
+	}
+	if f.o.Ticks > 0 && f.g.ticks >= f.o.Ticks || f.o.Stop != nil && f.o.Stop() {
+		f.cut = true
+		return true
+	}
+	return false
+}
+
+// try makes the schedule of a list and keeps it if it is the best so far. It says whether it
+// was made, and its score.
+func (f *finder) try(order []int) (Score, bool) {
+	if !f.g.run(order) {
+		return Score{}, false
+	}
+	sc := f.g.score()
+	if f.best == nil || sc.Compare(f.best.Score, false) < 0 {
+		f.best = f.g.snapshot(sc)
+		f.list = append(f.list[:0], order...)
+	}
+	return sc, true
+}
+
+func (g *generator) snapshot(sc Score) *Schedule {
+	return &Schedule{Start: slices.Clone(g.start), Finish: slices.Clone(g.finish), Mode: slices.Clone(g.mode),
+		Choice: slices.Clone(g.choice), Score: sc}
+}
+
+// rules tries the priority rules: least latest start, least latest finish, most work after,
+// least earliest start, file order; for every order rule each of its choices.
+func (f *finder) rules() {
+	after := f.workAfter()
+	n := len(f.p.Acts)
+	keys := []func(i int) int{
+		func(i int) int { return f.b.LastStart[i] },
+		func(i int) int { return f.b.Last[i] },
+		func(i int) int { return -after[i] },
+		func(i int) int { return f.b.Start[i] },
+		func(i int) int { return i },
+	}
+	for c := 0; c < f.choices(); c++ {
+		f.setChoice(c)
+		for _, key := range keys {
+			order := make([]int, n)
+			for i := range order {
+				order[i] = i
+			}
+			slices.SortStableFunc(order, func(a, b int) int { return key(a) - key(b) })
+			f.try(order)
+			if f.over() {
+				return
+			}
+		}
+	}
+	if f.best != nil {
+		copy(f.g.choice, f.best.Choice)
+	}
+}
+
+// choices counts the combinations of order choices that are tried by the rules.
+func (f *finder) choices() int {
+	n := 1
+	for _, o := range f.p.Orders {
+		if n *= len(o.Choices); n > 32 {
+			return 32
+		}
+	}
+	return n
+}
+
+func (f *finder) setChoice(c int) {
+	for i, o := range f.p.Orders {
+		f.g.choice[i] = c % len(o.Choices)
+		c /= len(o.Choices)
+	}
+}
+
+// workAfter gives the longest chain of working minutes from each activity on.
+func (f *finder) workAfter() []int {
+	memo := make([]int, len(f.p.Acts))
+	for i := range memo {
+		memo[i] = -1
+	}
+	var walk func(i int) int
+	walk = func(i int) int {
+		if memo[i] >= 0 {
+			return memo[i]
+		}
+		memo[i] = 0
+		best := 0
+		for _, k := range f.g.from[i] {
+			if l := &f.p.Links[k]; l.Min > expand.NoMin {
+				best = max(best, walk(l.To)+max(0, l.Min))
+			}
+		}
+		length := 0
+		if len(f.p.Acts[i].Modes) > 0 {
+			length = f.p.Acts[i].Modes[0].Time.Length()
+		}
+		memo[i] = best + length
+		return memo[i]
+	}
+	for i := range memo {
+		walk(i)
+	}
+	return memo
+}
+
+// justify shifts the best schedule right, then makes it again by the starts that gives, as long
+// as that helps.
+func (f *finder) justify() {
+	for round := 0; round < 6 && !f.over(); round++ {
+		before := f.best.Score
+		order := f.rightList()
+		f.try(order)
+		if f.best.Score.Compare(before, false) >= 0 {
+			return
+		}
+	}
+}
+
+// rightList gives the activities by the start each has when all are pushed as late as the
+// finish allows, last first.
+func (f *finder) rightList() []int {
+	g, p, best := f.g, f.p, f.best
+	g.reset()
+	byFinish := make([]int, len(p.Acts))
+	for i := range byFinish {
+		byFinish[i] = i
+	}
+	slices.SortStableFunc(byFinish, func(a, b int) int {
+		if best.Finish[a] != best.Finish[b] {
+			return best.Finish[b] - best.Finish[a]
+		}
+		return best.Start[b] - best.Start[a]
+	})
+	for _, i := range byFinish {
+		at := g.latest(i, best)
+		g.put(i, best.Mode[i], at)
+	}
+	starts := slices.Clone(g.start)
+	order := make([]int, len(p.Acts))
+	for i := range order {
+		order[i] = i
+	}
+	slices.SortStableFunc(order, func(a, b int) int {
+		if starts[a] != starts[b] {
+			return starts[a] - starts[b]
+		}
+		return best.Start[a] - best.Start[b]
+	})
+	return order
+}
+
+// latest gives the latest start of i, in its mode of best, with what is placed; its own start
+// where no later one is found.
+func (g *generator) latest(i int, best *Schedule) int {
+	w := g.p.Acts[i].Modes[best.Mode[i]].Time
+	hi := best.Score.Finish
+	if !g.p.Acts[i].Site {
+		hi = max(hi, best.Finish[i])
+	}
+	for _, k := range g.from[i] {
+		l := &g.p.Links[k]
+		if !g.placed[l.To] || l.Min <= expand.NoMin || l.Count != nil {
+			if g.placed[l.To] && l.Count != nil {
+				hi = min(hi, best.Finish[i])
+			}
+			continue
+		}
+		t := g.end(l.To, l.ToEnd) - l.Min
+		if l.FromEnd == tasks.Start {
+			t += max(0, w.Finish(best.Start[i])-best.Start[i])
+		}
+		hi = min(hi, t)
+	}
+	for tries := 0; tries < 200 && hi > best.Finish[i]; tries++ {
+		s := w.Latest(hi, best.Start[i])
+		if s <= best.Start[i] {
+			break
+		}
+		b := g.fits(i, best.Mode[i], s, nil)
+		if b.kind == free {
+			return s
+		}
+		hi = min(w.Finish(s)-1, max(b.before, 0))
+	}
+	return best.Start[i]
+}
+
+// climb changes the list at random and keeps what is not worse than lately, until a limit or
+// until a long stretch has brought nothing.
+func (f *finder) climb() {
+	if f.best == nil && !f.scramble() {
+		return
+	}
+	n := len(f.p.Acts)
+	if n < 2 {
+		return
+	}
+	list := append([]int(nil), f.list...)
+	cur := f.best.Score
+	trial := make([]int, n)
+	choice := slices.Clone(f.best.Choice)
+	weight := slices.Clone(f.g.weight)
+	for step, stale := 0, 0; !f.over(); step++ {
+		copy(trial, list)
+		copy(f.g.choice, choice)
+		f.mutate(trial)
+		for i := range weight {
+			f.g.weight[i] = weight[i]
+			if f.rng.IntN(4) == 0 {
+				f.g.weight[i] = int(float64(weight[i]) * (0.5 + f.rng.Float64()))
+			}
+		}
+		before := f.best.Score
+		sc, ok := f.try(trial)
+		switch {
+		case ok && sc.Compare(cur, false) <= 0:
+			copy(list, trial)
+			copy(choice, f.g.choice)
+			cur = sc
+		case f.rng.IntN(400) == 0: // from the best again
+			copy(list, f.list)
+			copy(choice, f.best.Choice)
+			cur = f.best.Score
+		}
+		if stale++; f.best.Score.Compare(before, false) < 0 {
+			stale = 0
+			if step%3 == 0 {
+				f.justify()
+			}
+		}
+		if f.o.Ticks == 0 && f.o.Stop == nil && stale > 50*n {
+			return
+		}
+	}
+}
+
+// scramble looks for a first schedule among random lists.
+func (f *finder) scramble() bool {
+	n := len(f.p.Acts)
+	order := make([]int, n)
+	for i := range order {
+		order[i] = i
+	}
+	for tries := 0; tries < 2000 && !f.over(); tries++ {
+		f.rng.Shuffle(n, func(a, b int) { order[a], order[b] = order[b], order[a] })
+		for o := range f.p.Orders {
+			f.g.choice[o] = f.rng.IntN(len(f.p.Orders[o].Choices))
+		}
+		if _, ok := f.try(order); ok {
+			return true
+		}
+	}
+	return f.best != nil
+}
+
+// mutate changes a list a little: an activity moves, two change places, or a stretch is shuffled.
+func (f *finder) mutate(list []int) {
+	n := len(list)
+	for k := 1 + f.rng.IntN(3); k > 0; k-- {
+		switch f.rng.IntN(4) {
+		case 0, 1:
+			from, to := f.rng.IntN(n), f.rng.IntN(n)
+			v := list[from]
+			if from < to {
+				copy(list[from:to], list[from+1:to+1])
+			} else {
+				copy(list[to+1:from+1], list[to:from])
+			}
+			list[to] = v
+		case 2:
+			a, b := f.rng.IntN(n), f.rng.IntN(n)
+			list[a], list[b] = list[b], list[a]
+		default:
+			a := f.rng.IntN(n)
+			b := min(n, a+2+f.rng.IntN(6))
+			f.rng.Shuffle(b-a, func(i, j int) { list[a+i], list[a+j] = list[a+j], list[a+i] })
+		}
+	}
+	if len(f.p.Orders) > 0 && f.rng.IntN(5) == 0 {
+		o := f.rng.IntN(len(f.p.Orders))
+		f.g.choice[o] = f.rng.IntN(len(f.p.Orders[o].Choices))
+	}
+}

@@ -1,0 +1,387 @@
+// Package solve finds plans and bounds for a problem: serial generation with unscheduling for
+// maximum waits, forward-backward improvement and local search for plans; work content against
+// open hours for bounds. Minutes count from the problem's base.
+package solve
+
+import (
+	"sort"
+
+	"sailby/plan/problem"
+	"sailby/tasks"
+)
+
+// busy is a stretch in which a person works or keeps a watch. Watches in one workface may
+// overlap for one person (R13).
+type busy struct {
+	from, to int
+	act      int
+	watch    *tasks.Workface // nil: work of their own, which nothing may overlap
+}
+
+// level is a step of a resource's use: amount from minute at on.
+type level struct{ at, amount int }
+
+// state is a partial schedule.
+type state struct {
+	p      *problem.Problem
+	start  []int
+	finish []int
+	mode   []int
+	placed []bool
+	people [][]busy  // by person, sorted by from
+	use    [][]level // by resource, sorted by at
+	pairs  [][]int   // by activity: indices into Problem.Pairs
+	ticks  int64     // starts tried, the measure of work done
+}
+
+func newState(p *problem.Problem) *state {
+	n := len(p.Acts)
+	s := &state{p: p, start: make([]int, n), finish: make([]int, n), mode: make([]int, n), placed: make([]bool, n),
+		people: make([][]busy, len(p.People)), use: make([][]level, len(p.Res)), pairs: make([][]int, n)}
+	for i, pr := range p.Pairs {
+		s.pairs[pr.A] = append(s.pairs[pr.A], i)
+		s.pairs[pr.B] = append(s.pairs[pr.B], i)
+	}
+	return s
+}
+
+// reset empties the schedule.
+func (s *state) reset() {
+	for i := range s.placed {
+		s.placed[i] = false
+	}
+	for i := range s.people {
+		s.people[i] = s.people[i][:0]
+	}
+	for i := range s.use {
+		s.use[i] = s.use[i][:0]
+	}
+}
+
+// block is what stands in the way of a start.
+type block struct {
+	next   int // no earlier start than this can do
+	before int // no later finish than this can do (for schedules made backward)
+	kind   blockKind
+	who    int // person, resource or pair
+	other  int // the activity in the way, -1 if none in particular
+}
+
+type blockKind uint8
+
+const (
+	free blockKind = iota
+	byPerson
+	byResource
+	byPair
+)
+
+// fits says whether activity i can start at s in mode m, and if not what is in the way. skip
+// leaves out one thing: see skipper.
+func (s *state) fits(i, m, at int, skip *skipper) block {
+	s.ticks++
+	a := &s.p.Acts[i]
+	md := &a.Modes[m]
+	fin := md.Time.Finish(at)
+	for _, k := range s.pairs[i] {
+		if b := s.pairBlock(k, i, at, fin, skip); b.kind != free {
+			return b
+		}
+	}
+	for _, u := range a.Uses {
+		if u.Stays && !skip.resource(u.Res) {
+			if b := s.useBlock(u, at, fin); b.kind != free {
+				return b
+			}
+		}
+	}
+	var hit block
+	md.Time.Pieces(at, func(from, to int) {
+		if hit.kind == free {
+			hit = s.pieceBlock(a, md, from, to, skip)
+		}
+	})
+	if hit.kind == free && md.Keeper >= 0 && md.Time.Watch() > 0 {
+		hit = s.watchBlock(a, md, at, fin, skip)
+	}
+	return hit
+}
+
+// pieceBlock looks for what is in the way of one hands-on piece.
+func (s *state) pieceBlock(a *problem.Act, md *problem.Mode, from, to int, skip *skipper) block {
+	for _, u := range a.Uses {
+		if !u.Stays && !skip.resource(u.Res) {
+			if b := s.useBlock(u, from, to); b.kind != free {
+				return b
+			}
+		}
+	}
+	if md.Relief == nil {
+		return s.crewBlock(a, md.Crew, md.Watch, from, to, skip)
+	}
+	var hit block
+	turns(md, from, to, func(from, to int, second bool) {
+		crew := md.Crew
+		if second {
+			crew = md.Relief
+		}
+		if hit.kind == free {
+			hit = s.crewBlock(a, crew, md.Watch, from, to, skip)
+		}
+	})
+	return hit
+}
+
+// turns cuts a piece where the teams of a mode change over.
+func turns(md *problem.Mode, from, to int, emit func(from, to int, second bool)) {
+	at := from
+	for _, f := range md.First {
+		lo, hi := max(at, int(f.From)), min(to, int(f.To))
+		if lo >= hi {
+			continue
+		}
+		if at < lo {
+			emit(at, lo, true)
+		}
+		emit(lo, hi, false)
+		at = hi
+	}
+	if at < to {
+		emit(at, to, true)
+	}
+}
+
+func (s *state) crewBlock(a *problem.Act, crew []int, watch []bool, from, to int, skip *skipper) block {
+	for k, p := range crew {
+		if skip.person(p) {
+			continue
+		}
+		var face *tasks.Workface
+		if watch[k] && a.Step != nil {
+			face = a.Step.Face
+		}
+		if b := s.personBlock(p, from, to, face); b.kind != free {
+			return b
+		}
+	}
+	return block{}
+}
+
+// personBlock looks for work of person p that overlaps [from, to).
+func (s *state) personBlock(p, from, to int, face *tasks.Workface) block {
+	list := s.people[p]
+	i := sort.Search(len(list), func(i int) bool { return list[i].from >= to })
+	for i--; i >= 0; i-- { // entries overlap only where watches are shared: look a few back
+		b := list[i]
+		if b.to > from && (face == nil || b.watch != face) {
+			return block{next: min(b.to, to), before: max(b.from, from), kind: byPerson, who: p, other: b.act}
+		}
+		if b.watch == nil && b.to <= from {
+			break
+		}
+	}
+	return block{}
+}
+
+// useBlock looks for a minute in [from, to) at which a resource has too little left.
+func (s *state) useBlock(u problem.Use, from, to int) block {
+	list, room := s.use[u.Res], s.p.Res[u.Res].Capacity-u.Amount
+	i := sort.Search(len(list), func(i int) bool { return list[i].at > from }) - 1
+	if i < 0 {
+		i = 0
+	}
+	for ; i < len(list) && list[i].at < to; i++ {
+		if list[i].amount <= room {
+			continue
+		}
+		end := problem.Inf
+		if i+1 < len(list) {
+			end = list[i+1].at
+		}
+		if end > from {
+			return block{next: min(end, to), before: max(list[i].at, from), kind: byResource, who: u.Res, other: -1}
+		}
+	}
+	if room < 0 {
+		return block{next: problem.Inf, before: -problem.Inf, kind: byResource, who: u.Res, other: -1}
+	}
+	return block{}
+}
+
+// pairBlock looks whether pair k keeps i from running from at to fin.
+func (s *state) pairBlock(k, i, at, fin int, skip *skipper) block {
+	pr := &s.p.Pairs[k]
+	j, tailI, tailJ := pr.B, pr.TailA, pr.TailB
+	if j == i {
+		j, tailI, tailJ = pr.A, pr.TailB, pr.TailA
+	}
+	if !s.placed[j] || skip.pair(k) || at == fin || s.start[j] == s.finish[j] {
+		return block{}
+	}
+	endI, endJ := fin, s.finish[j]
+	if tailI != nil {
+		endI = tailI(fin)
+	}
+	if tailJ != nil {
+		endJ = tailJ(endJ)
+	}
+	if at < endJ && s.start[j] < endI {
+		return block{next: endJ, before: s.start[j], kind: byPair, who: k, other: j}
+	}
+	return block{}
+}
+
+// watchBlock looks whether the keeper of the fire watch is free after every stop.
+func (s *state) watchBlock(a *problem.Act, md *problem.Mode, at, fin int, skip *skipper) block {
+	if skip.person(md.Keeper) {
+		return block{}
+	}
+	for _, e := range md.Time.Stops(at) {
+		b := s.personBlock(md.Keeper, e, e+md.Time.Watch(), a.Step.Face)
+		if b.kind == free {
+			continue
+		}
+		b.next = e
+		if e == fin {
+			b.next = at + 1
+		}
+		b.before = min(b.before-md.Time.Watch(), e-1)
+		return b
+	}
+	return block{}
+}
+
+// put places activity i.
+func (s *state) put(i, m, at int) {
+	a := &s.p.Acts[i]
+	md := &a.Modes[m]
+	fin := md.Time.Finish(at)
+	s.placed[i], s.start[i], s.finish[i], s.mode[i] = true, at, fin, m
+	for _, u := range a.Uses {
+		if u.Stays {
+			s.occupy(u, at, fin)
+		}
+	}
+	md.Time.Pieces(at, func(from, to int) {
+		for _, u := range a.Uses {
+			if !u.Stays {
+				s.occupy(u, from, to)
+			}
+		}
+		if md.Relief == nil {
+			s.engage(i, md.Crew, md.Watch, from, to)
+			return
+		}
+		turns(md, from, to, func(from, to int, second bool) {
+			if second {
+				s.engage(i, md.Relief, md.Watch, from, to)
+			} else {
+				s.engage(i, md.Crew, md.Watch, from, to)
+			}
+		})
+	})
+	if md.Keeper >= 0 && md.Time.Watch() > 0 {
+		for _, e := range md.Time.Stops(at) {
+			s.insert(md.Keeper, busy{e, e + md.Time.Watch(), i, a.Step.Face})
+		}
+	}
+}
+
+func (s *state) engage(i int, crew []int, watch []bool, from, to int) {
+	for k, p := range crew {
+		b := busy{from: from, to: to, act: i}
+		if watch[k] && s.p.Acts[i].Step != nil {
+			b.watch = s.p.Acts[i].Step.Face
+		}
+		s.insert(p, b)
+	}
+}
+
+func (s *state) insert(p int, b busy) {
+	list := s.people[p]
+	k := sort.Search(len(list), func(i int) bool { return list[i].from > b.from })
+	list = append(list, busy{})
+	copy(list[k+1:], list[k:])
+	list[k] = b
+	s.people[p] = list
+}
+
+// occupy adds amount to a resource's use in [from, to).
+func (s *state) occupy(u problem.Use, from, to int) {
+	if from >= to {
+		return
+	}
+	s.change(u.Res, from, to, u.Amount)
+}
+
+func (s *state) change(res, from, to, by int) {
+	list := s.use[res]
+	list = split(list, from)
+	list = split(list, to)
+	for i := range list {
+		if list[i].at >= from && list[i].at < to {
+			list[i].amount += by
+		}
+	}
+	s.use[res] = list
+}
+
+// split makes sure that a step of the use begins at minute at.
+func split(list []level, at int) []level {
+	k := sort.Search(len(list), func(i int) bool { return list[i].at >= at })
+	if k < len(list) && list[k].at == at {
+		return list
+	}
+	amount := 0
+	if k > 0 {
+		amount = list[k-1].amount
+	}
+	list = append(list, level{})
+	copy(list[k+1:], list[k:])
+	list[k] = level{at, amount}
+	return list
+}
+
+// take removes activity i.
+func (s *state) take(i int) {
+	if !s.placed[i] {
+		return
+	}
+	a := &s.p.Acts[i]
+	md := &a.Modes[s.mode[i]]
+	for _, u := range a.Uses {
+		if u.Stays && s.start[i] < s.finish[i] {
+			s.change(u.Res, s.start[i], s.finish[i], -u.Amount)
+		}
+	}
+	md.Time.Pieces(s.start[i], func(from, to int) {
+		for _, u := range a.Uses {
+			if !u.Stays {
+				s.change(u.Res, from, to, -u.Amount)
+			}
+		}
+	})
+	people := append(append([]int(nil), md.Crew...), md.Relief...)
+	for _, p := range people {
+		keep := s.people[p][:0]
+		for _, b := range s.people[p] {
+			if b.act != i {
+				keep = append(keep, b)
+			}
+		}
+		s.people[p] = keep
+	}
+	s.placed[i] = false
+}
+
+// skipper leaves one thing out of what stands in the way, to see whether it sets a date. The
+// nil skipper leaves nothing out.
+type skipper struct {
+	persons   map[int]bool
+	resources map[int]bool
+	pairs     map[int]bool
+}
+
+func (k *skipper) person(p int) bool   { return k != nil && k.persons[p] }
+func (k *skipper) resource(r int) bool { return k != nil && k.resources[r] }
+func (k *skipper) pair(i int) bool     { return k != nil && k.pairs[i] }
