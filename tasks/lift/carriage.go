@@ -133,7 +133,7 @@ func Driving(d Duty, rules []DutyRule) []string {
 		}
 		flag := func(what string, v, limit float64, over bool) {
 			if over {
-				out = append(out, fmt.Sprintf("%s: %s %s %s min against %s%s", r.Name, d.Driver, what, num(v), num(limit), tail))
+				out = append(out, fmt.Sprintf("%s: %s %s %s min against %s min%s", r.Name, d.Driver, what, num(v), num(limit), tail))
 			}
 		}
 		flag("drives", d.Drive, r.Drive, r.Drive > 0 && d.Drive > r.Drive)
