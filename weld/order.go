@@ -3,7 +3,6 @@ package weld
 import (
 	"fmt"
 	"math"
-	"math/bits"
 )
 
 // Placed is a seam at a known place in an assembly, for the order of welding.
@@ -68,35 +67,40 @@ func running(seams []Placed, order []int) (each []float64, peak float64) {
 	return each, peak
 }
 
-// bestOrder finds, for every subset welded, the least peak with which it can be reached.
+// bestOrder finds, for every subset welded, the least peak with which the rest can follow, and
+// then goes from the empty set by the least of them.
 func bestOrder(seams []Placed) []int {
 	n := len(seams)
 	size := 1 << n
-	peak, last, moment := make([]float64, size), make([]int8, size), make([]float64, size)
-	for set := 1; set < size; set++ {
+	ahead, moment := make([]float64, size), make([]float64, size)
+	for set := size - 1; set >= 0; set-- {
 		var y, z float64
+		ahead[set] = math.Inf(1)
 		for i := range seams {
 			if set&(1<<i) != 0 {
 				y += seams[i].Area * seams[i].Y
 				z += seams[i].Area * seams[i].Z
-			}
-		}
-		moment[set] = math.Hypot(y, z)
-		peak[set], last[set] = math.Inf(1), -1
-		for i := n - 1; i >= 0; i-- { // later seams stay late on a tie
-			if set&(1<<i) == 0 {
 				continue
 			}
-			if p := math.Max(peak[set&^(1<<i)], moment[set]); p < peak[set] {
-				peak[set], last[set] = p, int8(i)
-			}
+			next := set | 1<<i
+			ahead[set] = math.Min(ahead[set], math.Max(moment[next], ahead[next]))
+		}
+		moment[set] = math.Hypot(y, z)
+		if set == size-1 {
+			ahead[set] = 0
 		}
 	}
-	order := make([]int, n)
-	for set := size - 1; set != 0; {
-		i := int(last[set])
-		order[bits.OnesCount(uint(set))-1] = i
-		set &^= 1 << i
+	var order []int
+	for set := 0; set != size-1; {
+		best, least := -1, math.Inf(1)
+		for i := range seams {
+			next := set | 1<<i
+			if m := math.Max(moment[next], ahead[next]); next != set && m < least {
+				best, least = i, m
+			}
+		}
+		order = append(order, best)
+		set |= 1 << best
 	}
 	return order
 }
