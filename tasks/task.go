@@ -80,6 +80,8 @@ type Task struct {
 	Area      Amount   // m2: overrules the surface
 	Grade     string   // surface prep, coat
 	Method    string   // surface prep, coat: how
+	Shape     string   // surface prep, coat: flat, sections or lattice; "" is sections
+	Condition string   // surface prep: new, light rust, heavy rust or painted; "" is new
 	Coats     []string // coat: paints in order
 	Lifts     string   // lift, move: assembly (or assembly/part)
 	Mass      Amount   // kg: stated

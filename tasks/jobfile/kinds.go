@@ -1,0 +1,265 @@
+package jobfile
+
+import (
+	"fmt"
+	"slices"
+	"strings"
+
+	"sailby/tasks"
+	"sailby/tasks/coat"
+	"sailby/tasks/quantity"
+)
+
+var stateNames = []string{tasks.HotWorkState, tasks.Grit, tasks.WetFilm, tasks.SoftFilm, tasks.Solvent, tasks.LoadOverhead, tasks.PeopleState}
+
+var (
+	byKey      = key{name: "by", takes: aText}
+	lengthKey  = key{name: "length", takes: anAmount, dim: quantity.Length, low: 0, high: 1e7, example: "1.9 m"}
+	surfaceKey = key{name: "surface", takes: names, example: "frame", says: "assemblies, or parts as frame/base"}
+	areaKey    = key{name: "area", takes: anAmount, dim: quantity.Area, low: 0.01, high: 1e5, usual: "that of the surface", example: "4 m2", says: "overrules that of the surface"}
+	gradeKey   = key{name: "grade", takes: aText, example: "Sa 2 1/2", says: "grade of preparation: Sa 1 to Sa 3, St 2, St 3, an SSPC name, bare metal, solvent clean, fresh-water wash"}
+	shapeKey   = key{name: "shape", takes: aWord, words: coat.Surfaces(), usual: "sections", example: "lattice", says: "how the surface slows the work"}
+	partKey    = key{name: "part", takes: names, example: "frame/base", says: "assembly or part it works on"}
+	liftsKey   = key{name: "lifts", takes: aName, example: "frame", says: "assembly or part"}
+	massKey    = key{name: "mass", takes: anAmount, dim: quantity.Mass, low: 0.1, high: 1e6, usual: "that of the assembly", example: "410 kg", says: "stated mass"}
+)
+
+func with(k key, example, says string) key {
+	k.example, k.says = example, says
+	return k
+}
+
+// The keys that only some kinds of task have.
+var (
+	weldKeys = section{name: "Weld", where: "tasks / NAME of kind weld", host: "tasks/weld lugs", says: "a weld", more: &taskSection, keys: []key{
+		{name: "joints", takes: listOf, sub: &seamSection, example: "[{fillet: {leg: 6 mm}, length: 9.6 m in all, position: PB}]", says: "the seams"},
+		with(partKey, "[frame/base, frame/posts]", "assembly or parts it joins"),
+	}}
+	cutKeys = section{name: "Cut", where: "tasks / NAME of kind cut", host: "tasks/cut lugs", says: "a cut", more: &taskSection, keys: []key{
+		with(byKey, "oxy-fuel", "plasma, oxy-fuel, disc, saw, or another way with hours"),
+		with(lengthKey, "1.9 m", "length of cut"),
+		{name: "thickness", takes: anAmount, dim: quantity.Length, low: 0.1, high: 500, example: "16 mm", says: "thickness cut"},
+		partKey,
+	}}
+	prepKeys = section{name: "Surface prep", where: "tasks / NAME of kind surface prep", host: "tasks/blast", says: "a surface prep", more: &taskSection, keys: []key{
+		surfaceKey, areaKey, gradeKey, shapeKey,
+		{name: "method", takes: aWord, words: []string{"blast", "power tool", "hand tool", "needle gun", "solvent wipe", "wash"}, usual: "that of the grade", example: "blast", says: "how"},
+		{name: "condition", takes: aWord, words: []string{"new", "light rust", "heavy rust", "painted"}, usual: "new", example: "light rust", says: "the steel before"},
+	}}
+	coatKeys = section{name: "Coat", where: "tasks / NAME of kind coat", host: "tasks/prime", says: "a coat", more: &taskSection, keys: []key{
+		surfaceKey, areaKey, gradeKey, shapeKey,
+		{name: "method", takes: aWord, words: coat.Methods(), usual: "brush", example: "airless", says: "how"},
+		{name: "coats", takes: names, need: true, example: "[primer, primer]", says: "paints in order"},
+	}}
+	liftKeys = section{name: "Lift", where: "tasks / NAME of kind lift", host: "tasks/load", says: "a lift", more: &taskSection, keys: []key{
+		liftsKey, massKey, with(byKey, "chain hoist", "a kit, or hands"),
+		{name: "height", takes: anAmount, dim: quantity.Length, low: 0, high: 2e5, usual: "1.5 m", example: "1.2 m", says: "hook travel"},
+		{name: "travel", takes: anAmount, dim: quantity.Length, low: 0, high: 1e6, usual: "0 m", example: "3 m", says: "on the level"},
+		{name: "radius", takes: anAmount, dim: quantity.Length, low: 0, high: 2e5, example: "4 m", says: "of a crane"},
+	}}
+	fitKeys = section{name: "Fit-up", where: "tasks / NAME of kind fit-up", host: "tasks/fit frame", says: "a fit-up", more: &taskSection, keys: []key{
+		partKey,
+		{name: "joints", takes: aCount, low: 0, high: 10000, example: "8", says: "how many joints"},
+	}}
+	testKeys = section{name: "Test", where: "tasks / NAME of kind test", host: "tasks/MT", says: "a test", more: &taskSection, keys: []key{
+		with(byKey, "magnetic particle", "visual, dye penetrant, magnetic particle, ultrasonic, leak, load, or another method with hours"),
+		with(lengthKey, "1.9 m", "length of seam tested"), partKey,
+	}}
+	moveKeys = section{name: "Move", where: "tasks / NAME of kind move", host: "tasks/to the gate", says: "a move", more: &taskSection, keys: []key{
+		liftsKey, massKey, with(byKey, "trolley", "a kit, or hands"),
+		{name: "to", takes: aName, example: "pier", says: "the place it goes to"},
+		{name: "travel", takes: anAmount, dim: quantity.Length, low: 0, high: 1e6, example: "30 m", says: "on the level"},
+		{name: "height", takes: anAmount, dim: quantity.Length, low: 0, high: 2e5, usual: "1.5 m", example: "1 m", says: "up or down"},
+	}}
+	signKeys  = section{name: "Sign-off", where: "tasks / NAME of kind sign-off", host: "tasks/open again", says: "a sign-off", more: &taskSection}
+	plainKeys = section{name: "Plain", where: "tasks / NAME of kind plain", host: "tasks/resin", says: "a plain task", more: &taskSection}
+)
+
+// kindSections lists the sections of the kinds in the order of the manual.
+func kindSections() []*section {
+	return []*section{&weldKeys, &cutKeys, &prepKeys, &coatKeys, &liftKeys, &fitKeys, &testKeys, &moveKeys, &signKeys, &plainKeys}
+}
+
+func kindSection(k tasks.Kind) *section {
+	return kindSections()[slices.Index(tasks.Kinds(), k)]
+}
+
+// byKind reads the keys of the task's kind.
+func (r *reader) byKind(t *tasks.Task, f *fields) {
+	has := func(name string) bool { return f.sec.find(name) != nil }
+	timed := f.tried("hours") || f.tried("man-hours")
+	if has("by") {
+		t.By = f.line("by")
+	}
+	if has("length") {
+		t.Length = f.amount("length", 0)
+	}
+	if has("part") {
+		t.Parts = r.partNames(f, "part")
+	}
+	if has("surface") {
+		t.Surface = r.partNames(f, "surface")
+		t.Area, t.Grade, t.Shape = f.amount("area", 0), f.line("grade"), f.choice("shape", "")
+		t.Method = f.choice("method", "")
+		r.grade(t, f)
+		if !f.tried("surface") && !f.tried("area") && !timed {
+			f.fault("", "add `surface: frame` (an assembly), `area: 4 m2`, or `hours`", "nothing says how large the surface is")
+		}
+	}
+	if has("lifts") {
+		t.Lifts = strings.Join(r.partNames(f, "lifts"), "")
+		t.Mass, t.Height, t.Travel = f.amount("mass", 0), f.amount("height", 0), f.amount("travel", 0)
+		if !f.tried("lifts") && !f.tried("mass") && !timed {
+			f.fault("", "add `lifts: frame` (an assembly), `mass: 410 kg`, or `hours`", "nothing says what it %ss", t.Kind)
+		}
+		r.liftedBy(t, f)
+	}
+	switch t.Kind {
+	case tasks.Weld:
+		t.Seams = r.seams(f)
+		if !f.tried("joints") && !timed {
+			f.fault("", "add `joints: [{fillet: {leg: 6 mm}, length: 2 m, position: PB}]`, or `hours`", "it has neither joints nor hours")
+		}
+	case tasks.Cut:
+		t.Thickness = f.amount("thickness", 0)
+		if !timed && !f.tried("part") && !(f.tried("length") && f.tried("thickness")) {
+			f.fault("", "add `length: 1.9 m` and `thickness: 16 mm`, `part: frame/base`, or `hours`", "nothing says how much is cut")
+		}
+	case tasks.Prep:
+		t.Condition = f.choice("condition", "")
+	case tasks.Coat:
+		r.coats(t, f)
+	case tasks.Lift:
+		t.Radius = f.amount("radius", 0)
+	case tasks.FitUp:
+		t.Joints = f.count("joints", 0)
+	case tasks.Move:
+		t.To = f.place("to")
+	}
+}
+
+// grade checks a grade of preparation against those known.
+func (r *reader) grade(t *tasks.Task, f *fields) {
+	if t.Grade == "" {
+		return
+	}
+	p := coat.Prep{Area: 1, Grade: t.Grade}
+	if t.Kind == tasks.Prep {
+		p.Method = t.Method
+	}
+	if _, err := coat.Prepare(p); err != nil {
+		r.advice(f.vals["grade"], f.lead("grade"), err, "write for instance Sa 2 1/2 or St 3")
+	}
+}
+
+// coats checks the paints, and that each may follow the one before it.
+func (r *reader) coats(t *tasks.Task, f *fields) {
+	var last *tasks.Paint
+	for _, ref := range f.names("coats") {
+		i := slices.IndexFunc(r.job.Paints, func(p *tasks.Paint) bool { return p.Name == ref.text })
+		if i < 0 {
+			var all []string
+			for _, p := range r.job.Paints {
+				all = append(all, p.Name)
+			}
+			r.unknown(ref.pos, f.lead("coats"), "paint", ref.text, all)
+			last = nil
+			continue
+		}
+		p := r.job.Paints[i]
+		if last != nil && len(p.NextCoat)+len(last.NextCoat) > 0 {
+			if _, err := last.Next(p.Paint); err != nil {
+				hint := quantity.Hint(err)
+				r.faultAt(ref.pos, hint, "%s%v", f.lead("coats"), err)
+			}
+		}
+		last = p
+		t.Coats = append(t.Coats, ref.text)
+	}
+}
+
+// liftedBy adds the kit named under `by`, if it is one, and checks what it may lift.
+func (r *reader) liftedBy(t *tasks.Task, f *fields) {
+	k := r.kitOf[t.By]
+	if k == nil {
+		if t.By != "" && t.By != "hands" && t.By != "by hand" && !f.tried("hours") && !f.tried("man-hours") && !slices.Contains(kitWays, t.By) {
+			r.faultAt(f.pos("by"), r.among(t.By, append(r.kitNames(), "hands"), "declare it under `kit`, or write by: hands"), "%sno kit is called %s", f.lead("by"), short(t.By))
+		}
+		return
+	}
+	if !slices.ContainsFunc(t.Kit, func(u tasks.Use) bool { return u.Kit == k }) {
+		t.Kit = append(t.Kit, tasks.Use{Kit: k, Count: 1, Pos: f.pos("by")})
+	}
+	if t.Mass.Pos.Given() && k.Rated.Pos.Given() && t.Mass.Value > k.Rated.Value*float64(k.Count) {
+		f.fault("mass", "take stronger gear, or lift it in parts", "%s kg is more than %q is rated for, %s kg", trim(t.Mass.Value), k.Name, trim(k.Rated.Value*float64(k.Count)))
+	}
+}
+
+// partNames reads names of assemblies, or of their parts as frame/base.
+func (r *reader) partNames(f *fields, name string) []string {
+	var out []string
+	for _, ref := range f.names(name) {
+		asm, part, single := strings.Cut(ref.text, "/")
+		i := slices.IndexFunc(r.job.Assemblies, func(a *tasks.Assembly) bool { return a.Name == asm })
+		if i < 0 {
+			var all []string
+			for _, a := range r.job.Assemblies {
+				all = append(all, a.Name)
+			}
+			r.unknown(ref.pos, f.lead(name), "assembly", asm, all)
+			continue
+		}
+		if a := r.job.Assemblies[i]; single {
+			var all []string
+			for _, p := range a.Parts {
+				all = append(all, p.Name)
+			}
+			if !slices.Contains(all, part) {
+				r.faultAt(ref.pos, r.among(part, all, "declare it under `parts`"), "%sassembly %q has no part %s", f.lead(name), asm, short(part))
+				continue
+			}
+		}
+		out = append(out, ref.text)
+	}
+	return out
+}
+
+// look finds the place and workface of "pier" or "pier/hinge"; nil place if there is none.
+func (r *reader) look(text string) (*tasks.Place, *tasks.Workface) {
+	place, face, single := strings.Cut(text, "/")
+	p := r.placeOf[place]
+	if p == nil || !single {
+		return p, nil
+	}
+	for _, w := range p.Workfaces {
+		if w.Name == face {
+			return p, w
+		}
+	}
+	return p, nil
+}
+
+// where is look with faults.
+func (r *reader) where(ref ref, lead string) (*tasks.Place, *tasks.Workface) {
+	p, w := r.look(ref.text)
+	place, face, single := strings.Cut(ref.text, "/")
+	switch {
+	case p == nil:
+		hint := r.among(place, r.placeNames(), "declare it under `places`")
+		for _, q := range r.job.Places {
+			for _, w := range q.Workfaces {
+				if w.Name == ref.text {
+					hint = fmt.Sprintf("write %s/%s", q.Name, w.Name)
+				}
+			}
+		}
+		r.faultAt(ref.pos, hint, "%sno place is called %s", lead, short(place))
+	case single && w == nil:
+		var all []string
+		for _, x := range p.Workfaces {
+			all = append(all, x.Name)
+		}
+		r.faultAt(ref.pos, r.among(face, all, "declare it under `workfaces` of the place"), "%splace %q has no workface %s", lead, place, short(face))
+	}
+	return p, w
+}
