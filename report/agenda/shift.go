@@ -223,7 +223,7 @@ func (b *builder) finish(s *Shift) {
 	s.place()
 	begin := s.From.In(s.Zone)
 	s.Date = hours.DateOf(begin)
-	s.Night = hours.DateOf((s.To-1).In(s.Zone)) != s.Date
+	s.Night = hours.DateOf((s.To - 1).In(s.Zone)) != s.Date
 	for i, ps := range b.a.Plan.Steps {
 		st := w.Steps[i]
 		span := hours.Span{From: ps.Start, To: ps.Finish}

@@ -1,0 +1,130 @@
+package sheets
+
+import (
+	"fmt"
+
+	"sailby/plan"
+	"sailby/report/agenda"
+	"sailby/tasks/hours"
+	"sailby/tasks/quantity"
+)
+
+// cover prints the verdicts, the window, the deadlines, what sets the finish, what to watch and
+// whom to call.
+func (k *pack) cover() {
+	p, a := k.p, k.a
+	p.begin("Cover", "cover", false)
+	p.big(k.job.Name)
+	if s := joined(", ", prefixed("for ", k.job.Client), prefixed("drawing ", k.job.Drawing), prefixed("to ", k.job.Execution)); s != "" {
+		p.para(s, body, false)
+	}
+	k.verdicts()
+	k.windowBlock()
+	k.deadlines()
+	k.watchList()
+	k.emergency()
+	k.governing()
+	p.skip(3)
+	p.para(agenda.Care, body, true)
+	if a.Late {
+		p.para("This plan is late. It is printed to show what is missing, not to work to.", body, true)
+	}
+}
+
+func prefixed(lead, s string) string {
+	if s == "" {
+		return ""
+	}
+	return lead + s
+}
+
+func (k *pack) verdicts() {
+	p := k.p
+	p.skip(2)
+	p.para(agenda.Sentence(k.report.Likely, k.report.LowToo), strong, true)
+	side := func(a *plan.Answer, none string) {
+		if a == nil {
+			p.para(none, body, false)
+			return
+		}
+		p.para(agenda.Sentence(a, false), body, false)
+	}
+	side(k.report.Maybes, "With every maybe: the same, there are none.")
+	side(k.report.High, "At the high end of the hours: the same, no hours are given as a range.")
+	if k.a != k.report.Likely {
+		p.para("These sheets are for the plan "+agenda.BasisWords(k.a.Work.Basis)+".", body, true)
+	}
+}
+
+func (k *pack) windowBlock() {
+	p, win := k.p, k.work.Window
+	zone := agenda.Zone(k.work, win.Place)
+	p.heading("The window", 30)
+	s := fmt.Sprintf("%s: %s to %s (%s).", agenda.PlaceLabel(win.Place), agenda.When(win.Opens, zone), agenda.When(win.Closes, zone),
+		quantity.Span(int(win.Closes-win.Opens)))
+	if k.work.Trip != nil {
+		s = "Trip " + k.work.Trip.Name + ". " + s
+	}
+	p.para(s, body, false)
+	p.y++
+	var spans []hours.Span
+	for _, e := range k.worked {
+		if e.Step.Site {
+			spans = append(spans, e.Span)
+		}
+	}
+	p.windowStrip(hours.Span{From: win.Opens, To: win.Closes}, k.a.Finish, hours.NewSet(spans...), zone)
+	p.para(fmt.Sprintf("Dark: work. Heavy line: planned finish %s, %s.", agenda.Finish(k.a), handWords(k.a, k.a.InHand)), body, false)
+}
+
+func handWords(a *plan.Answer, n int) string {
+	if n < 0 {
+		return agenda.InHand(a, n)
+	}
+	return agenda.InHand(a, n) + " in hand"
+}
+
+func (k *pack) deadlines() {
+	if len(k.a.Deadlines) == 0 {
+		return
+	}
+	p := k.p
+	p.heading("Deadlines", 25)
+	t := p.table(column{"What", 27}, column{"Must be done by", 18}, column{"Planned", 18}, column{"In hand", 14}, column{"Last start that still makes it", 23})
+	for _, d := range k.a.Deadlines {
+		last := "-"
+		if d.LastStart < hours.Far {
+			last = agenda.Moment(k.a, d.LastStart)
+		}
+		t.row(say(agenda.DeadlineName(d)), loud(agenda.Moment(k.a, d.By)), say(agenda.Moment(k.a, d.Finish)), say(agenda.InHand(k.a, d.InHand)), loud(last))
+	}
+	t.end()
+}
+
+func (k *pack) governing() {
+	if len(k.a.Governing) == 0 {
+		return
+	}
+	p := k.p
+	p.heading("What sets the finish, the last first", 2*lineHeight(body))
+	for i, c := range k.a.Governing {
+		s := agenda.CauseText(k.work, c)
+		if c.Step >= 0 && c.Step < len(k.a.Plan.Steps) && c.Step < len(k.work.Steps) {
+			st := k.work.Steps[c.Step]
+			s = fmt.Sprintf("%s starts %s: %s", agenda.StepLabel(k.work, st), agenda.When(k.a.Plan.Steps[c.Step].Start, agenda.Zone(k.work, st.Place)), s)
+		}
+		p.point(fmt.Sprint(i+1), s, false)
+	}
+}
+
+// emergency prints whom to call and where; what the job file leaves open has a box.
+func (k *pack) emergency() {
+	e := k.job.Emergency
+	k.p.heading("If something happens", 2*(boxHeight+lineHeight(body)))
+	grid := e.GridRef
+	if pl := k.work.Window.Place; grid == "" && pl != nil && pl.HasAt {
+		grid = fmt.Sprintf("%.4f, %.4f", pl.Lat, pl.Lon)
+	}
+	k.p.fields(3, field{label: "We are at (grid or position)", value: grid}, field{label: "Telephone", value: e.Phone}, field{label: "Radio", value: e.Radio},
+		field{label: "Nearest emergency department", value: e.Hospital}, field{label: "Muster point", value: e.Muster}, field{label: "Boat or rescue cover", value: e.Boat})
+}

@@ -1,0 +1,169 @@
+package sheets
+
+import (
+	"fmt"
+	"strings"
+
+	"sailby/report/agenda"
+	"sailby/tasks"
+	"sailby/tasks/expand"
+	"sailby/tasks/origin"
+	"sailby/weld"
+)
+
+// handover is one page to give the work over: to the next crew, or to the client.
+func (k *pack) handover() {
+	p := k.p
+	p.begin("Handover", "handover", true)
+	p.big("Handover")
+	p.para("Filled in by who goes, gone through face to face, checked at the work by who comes. Copy it for every handover.", body, false)
+	p.skip(2)
+	p.fields(4, field{label: "Date, time"}, field{label: "Place", value: agenda.PlaceLabel(k.work.Window.Place), units: 2}, field{label: "Shift ended"})
+	const big = 22.0
+	for _, s := range []string{"Done", "Open, and how far", "Permits and isolations still live", "Temporary works and lifting gear left in place",
+		"Wet film, cure and standing time running, until when", "Condition of machines, gas, fuel, paint left", "What the next must know, and what others near by are doing"} {
+		p.room(big + lineHeight(body) + 1)
+		p.run(p.left, p.y+ascent*body*mmPerPoint, paper(s), body, false)
+		p.y += lineHeight(body)
+		p.put(Item{Kind: Blank, X: p.left, Y: p.y, W: p.wide() - gutter, H: big, Stroke: thin})
+		p.y += big + 1
+	}
+	p.fields(2, field{label: "Handed over by, name and signature"}, field{label: "Taken over by, name and signature"})
+}
+
+// weldList has a row for each joint with the planned values and boxes for what was done.
+func (k *pack) weldList() {
+	steps := k.taskSteps(tasks.Weld)
+	if len(steps) == 0 {
+		return
+	}
+	p := k.p
+	p.begin("Weld list", "weld list", true)
+	p.big("Weld list")
+	p.para(joined(", ", prefixed("drawing ", k.job.Drawing), prefixed("execution ", k.job.Execution), prefixed("steel ", k.job.Steel))+".", body, false)
+	done := map[*tasks.Task]bool{}
+	for _, s := range steps {
+		if done[s.Task] {
+			continue
+		}
+		done[s.Task] = true
+		p.heading(agenda.TaskLabel(s.Task), 45)
+		ps := k.planned(s)
+		p.para(joined("; ", agenda.Where(s), k.span(s), "planned: "+strings.Join(names(ps.People, ps.Relief), ", "),
+			prefixed("drawing ", or(s.Task.Drawing, k.job.Drawing)), holdWords(k.work, s)), body, false)
+		t := p.table(column{"Joint", 42}, column{"Welder", 22}, column{"Batch", 24}, column{"Heat no.", 24}, column{"Visual", 20}, column{"NDT", 20}, column{"Repair", 21})
+		for i, seam := range s.Task.Seams {
+			t.row(k.joint(i, seam), write(), write(), write(), write(), write(), write())
+		}
+		if len(s.Task.Seams) == 0 {
+			t.row(loud("all joints", agenda.HandsOn(s)), write(), write(), write(), write(), write(), write())
+		}
+		t.end()
+	}
+	p.skip(3)
+	p.fields(3, field{label: "Inspected by, name and signature", units: 2}, field{label: "Date"})
+}
+
+func or(s, other string) string {
+	if s != "" {
+		return s
+	}
+	return other
+}
+
+// joint gives a seam's number, what it is and its procedure.
+func (k *pack) joint(i int, s tasks.Seam) cell {
+	c := loud(or(s.Name, fmt.Sprintf("joint %d", i+1)), agenda.SeamWords(s))
+	for _, q := range k.job.Procedures {
+		if q.Name != s.Procedure {
+			continue
+		}
+		c.lines = append(c.lines, line{text: "procedure " + q.Name})
+		c.lines = append(c.lines, line{text: joined(", ", processWords(q.Process), preheat(q.Preheat))})
+		return c
+	}
+	if s.Procedure != "" {
+		c.lines = append(c.lines, line{text: "procedure " + s.Procedure})
+	}
+	return c
+}
+
+func processWords(p weld.Process) string {
+	if p == 0 {
+		return ""
+	}
+	return p.String()
+}
+
+func preheat(c float64) string {
+	if c <= 0 {
+		return ""
+	}
+	return "preheat " + origin.Trim(c) + " °C"
+}
+
+// holdWords says how long to wait before testing, where the plan keeps such a time.
+func holdWords(w *expand.Work, s *expand.Step) string {
+	for _, o := range w.Steps {
+		if o.Task == s.Task && strings.Contains(o.Name, "NDT") && o.Class == expand.Clock && o.Clock > 0 {
+			return o.Name + " " + agenda.HandsOn(o)
+		}
+	}
+	return ""
+}
+
+// paintLog has a block of boxes for each coat, with the planned values filled in.
+func (k *pack) paintLog() {
+	var coats []*expand.Step
+	for _, s := range k.taskSteps(tasks.Coat) {
+		if agenda.CoatNumber(s) > 0 {
+			coats = append(coats, s)
+		}
+	}
+	if len(coats) == 0 {
+		return
+	}
+	p := k.p
+	p.begin("Paint log", "paint log", true)
+	p.big("Paint log")
+	p.para("Take the four readings before starting and again every four hours, or when the weather turns.", body, false)
+	for _, s := range coats {
+		k.coatBlock(s)
+	}
+}
+
+func (k *pack) coatBlock(s *expand.Step) {
+	p := k.p
+	n := agenda.CoatNumber(s)
+	name := ""
+	if n <= len(s.Task.Coats) {
+		name = s.Task.Coats[n-1]
+	}
+	p.heading(agenda.StepLabel(k.work, s), 95)
+	p.para(joined("; ", agenda.Where(s), k.span(s), "planned: "+strings.Join(names(k.planned(s).People), ", "), agenda.Amount(s), prefixed("surface ", s.Task.Grade)), body, false)
+	film := ""
+	for _, q := range k.job.Paints {
+		if q.Name != name {
+			continue
+		}
+		film = origin.Trim(q.DFT) + " um"
+		var limits []string
+		for _, f := range q.Limits(s.Task.Method) {
+			limits = append(limits, f.Name+" "+f.Amount())
+		}
+		if len(limits) > 0 {
+			p.para("Limits: "+strings.Join(limits, "; ")+".", body, false)
+		}
+	}
+	for _, f := range s.Estimate.Facts {
+		if strings.Contains(strings.ToLower(f.Name), "wet film") || strings.Contains(strings.ToLower(f.Name), "pot life") {
+			p.para(upper(f.Name)+" "+f.Amount()+".", body, false)
+		}
+	}
+	p.fields(4, field{label: "Paint", value: name}, field{label: "Base, batch no."}, field{label: "Hardener, batch no."}, field{label: "Thinner, %"},
+		field{label: "Air °C"}, field{label: "Humidity %"}, field{label: "Dew point °C"}, field{label: "Steel °C"},
+		field{label: "Second reading, air °C"}, field{label: "Humidity %"}, field{label: "Dew point °C"}, field{label: "Steel °C"},
+		field{label: "Cleanliness, profile"}, field{label: "Hours since cleaning"}, field{label: "Mixed at"}, field{label: "Stripe coat"},
+		field{label: "Started"}, field{label: "Finished"}, field{label: "Hours since last coat"}, field{label: "Wet film, um"},
+		field{label: "Dry film wanted", value: film}, field{label: "Dry film, least"}, field{label: "Dry film, mean"}, field{label: "Painter, signature"})
+}

@@ -1,0 +1,127 @@
+package sheets
+
+import (
+	"fmt"
+	"strings"
+
+	"sailby/report/agenda"
+	"sailby/tasks"
+	"sailby/tasks/expand"
+	"sailby/tasks/origin"
+)
+
+// liftSheets has one sheet for each lift: the plan's figures as facts, boxes for what the
+// competent person decides.
+func (k *pack) liftSheets() {
+	for _, s := range k.taskSteps(tasks.Lift) {
+		k.liftSheet(s)
+	}
+}
+
+func (k *pack) liftSheet(s *expand.Step) {
+	p, t := k.p, s.Task
+	p.begin("Lift sheet", "lift "+paper(t.Name), true)
+	p.big("Lift sheet")
+	p.para(agenda.TaskLabel(t), strong, true)
+	p.para(joined("; ", agenda.Where(s), k.span(s), "planned: "+strings.Join(names(k.planned(s).People), ", ")), body, false)
+	for _, g := range hireOf(k.work, s) {
+		p.para(g, body, false)
+	}
+	p.heading("What the plan counted with", 3*lineHeight(body))
+	k.liftFacts(s)
+	for _, n := range s.Estimate.Notes {
+		p.point("!", n, true)
+	}
+	p.heading("Decided by the competent person", 60)
+	mass := ""
+	if f, ok := agenda.Fact(s, "mass"); ok {
+		mass = f.Amount()
+	} else if t.Mass.Value > 0 {
+		mass = origin.Trim(t.Mass.Value) + " kg"
+	}
+	p.fields(3, field{label: "Load", value: t.Lifts}, field{label: "Weight planned with", value: mass}, field{label: "Weight, how known"},
+		field{label: "Lifting points seen by"}, field{label: "Centre of gravity, trial lift"}, field{label: "Slings, shackles, angle"},
+		field{label: "Machine or hoist, no.", value: ""}, field{label: "Radius and chart there"}, field{label: "Share of the chart, %"},
+		field{label: "Ground, outriggers, hang point"}, field{label: "Overhead lines, obstructions"}, field{label: "Nobody inside the line of"},
+		field{label: "Wind limit", value: gust(s)}, field{label: "Wind measured by, where"}, field{label: "Tag lines, hands"},
+		field{label: "Signaller, and how"}, field{label: "Landing place ready, seen by"}, field{label: "Certificates seen, dates"})
+	p.heading("Before the load leaves the ground", 2*(boxHeight+lineHeight(body)))
+	p.fields(2, field{label: "Planned by a competent person, name and signature"}, field{label: "Lift supervisor, name and signature"},
+		field{label: "Stop if (rule agreed)"}, field{label: "Lifted at, landed at"})
+}
+
+// liftFacts lists the figures of the lift with where they come from.
+func (k *pack) liftFacts(s *expand.Step) {
+	p, t := k.p, s.Task
+	type fact struct{ what, value, from string }
+	var facts []fact
+	add := func(what, value, from string) {
+		if value != "" {
+			facts = append(facts, fact{what, value, from})
+		}
+	}
+	add("load", t.Lifts, "job file")
+	add("by", t.By, "job file")
+	for _, f := range s.Estimate.Facts {
+		add(f.Name, f.Amount(), soft(f.Origin))
+		for _, g := range f.From {
+			add("of which "+g.Name, g.Amount(), soft(g.Origin))
+		}
+	}
+	add("hook travel", amountOf(t.Height, "m", 1000), "job file")
+	add("travel on the level", amountOf(t.Travel, "m", 1000), "job file")
+	add("radius", amountOf(t.Radius, "m", 1000), "job file")
+	for _, u := range s.Kit {
+		if u.Kit == nil {
+			continue
+		}
+		add(paper(u.Kit.Name)+" rated", amountOf(u.Kit.Rated, "kg", 1), "job file")
+		for _, c := range u.Kit.Chart {
+			add(paper(u.Kit.Name)+" chart", fmt.Sprintf("%s kg at %s m", origin.Trim(c.Mass), origin.Trim(c.Radius)), "job file")
+		}
+	}
+	tb := p.table(column{"What", 60}, column{"Figure", 45}, column{"From", 78})
+	for _, f := range facts {
+		tb.row(say(f.what), loud(f.value), say(f.from))
+	}
+	tb.end()
+}
+
+// soft says where a figure comes from, and marks defaults that nothing stands behind.
+func soft(o origin.Origin) string {
+	if o.Soft() {
+		return o.String() + " (default: check it)"
+	}
+	return o.String()
+}
+
+func amountOf(a tasks.Amount, unit string, per float64) string {
+	if a.Value == 0 {
+		return ""
+	}
+	return origin.Trim(a.Value/per) + " " + unit
+}
+
+// gust gives the wind limit of the lift's kit; "" leaves a box.
+func gust(s *expand.Step) string {
+	for _, u := range s.Kit {
+		if u.Kit != nil && u.Kit.Gust.Value > 0 {
+			return origin.Trim(u.Kit.Gust.Value) + " m/s gust"
+		}
+	}
+	return ""
+}
+
+func hireOf(w *expand.Work, s *expand.Step) []string {
+	var out []string
+	zone := agenda.Zone(w, s.Place)
+	for _, u := range s.Kit {
+		if u.Kit == nil || u.Kit.Slots == nil {
+			continue
+		}
+		for _, slot := range w.Window.Slots(u.Kit.Slots) {
+			out = append(out, fmt.Sprintf("Hired %s: %s %s.", paper(u.Kit.Name), agenda.ShortDay(slot.From, zone), agenda.Between(slot, zone)))
+		}
+	}
+	return out
+}

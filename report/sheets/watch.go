@@ -1,0 +1,132 @@
+package sheets
+
+import (
+	"cmp"
+	"fmt"
+	"slices"
+	"strings"
+
+	"sailby/plan"
+	"sailby/report/agenda"
+	"sailby/tasks/expand"
+	"sailby/tasks/hours"
+	"sailby/tasks/quantity"
+)
+
+// tight is the leeway in minutes below which a task is named on the cover.
+const tight = 60
+
+// watchList prints what can spoil the plan, worst first.
+func (k *pack) watchList() {
+	list := slices.Concat(k.lateSides(), k.tightTasks(), k.slots(), k.onlyOnes(), k.maybes())
+	if len(list) == 0 {
+		return
+	}
+	k.p.heading("What to watch", 2*lineHeight(body))
+	for _, s := range list {
+		k.p.point("-", s, false)
+	}
+}
+
+// lateSides names the other two answers where they do not fit.
+func (k *pack) lateSides() []string {
+	var out []string
+	for _, a := range []*plan.Answer{k.report.Maybes, k.report.High} {
+		if a != nil && a != k.a && a.Verdict != plan.Fits {
+			out = append(out, fmt.Sprintf("%s it %s: agree now what is left out or left for later.", upper(agenda.BasisWords(a.Work.Basis)),
+				map[plan.Verdict]string{plan.CannotFit: "cannot fit", plan.Unsettled: "was not shown to fit"}[a.Verdict]))
+		}
+	}
+	return out
+}
+
+func upper(s string) string {
+	if s == "" {
+		return s
+	}
+	return strings.ToUpper(s[:1]) + s[1:]
+}
+
+// tightTasks names the tasks at the site with least leeway, at most four.
+func (k *pack) tightTasks() []string {
+	var list []int
+	for i, s := range k.work.Steps {
+		if i < len(k.a.Rows) && s.Site && !s.Absent && s.Class == expand.Hands && k.a.Rows[i].Leeway < tight {
+			list = append(list, i)
+		}
+	}
+	slices.SortStableFunc(list, func(x, y int) int { return cmp.Compare(k.a.Rows[x].Leeway, k.a.Rows[y].Leeway) })
+	var out []string
+	for _, i := range list[:min(len(list), 4)] {
+		s := k.work.Steps[i]
+		word := "no leeway"
+		if n := k.a.Rows[i].Leeway; n > 0 {
+			word = "only " + quantity.Hours(n) + " of leeway"
+		}
+		out = append(out, fmt.Sprintf("%s has %s: finished by %s or a deadline falls.", agenda.StepLabel(k.work, s), word,
+			agenda.When(k.a.Rows[i].Latest, agenda.Zone(k.work, s.Place))))
+	}
+	return out
+}
+
+// slots names the hire and outside people that come only when booked.
+func (k *pack) slots() []string {
+	var out []string
+	zone := agenda.Zone(k.work, k.work.Window.Place)
+	say := func(who string, set hours.Set) {
+		var parts []string
+		for _, s := range set {
+			parts = append(parts, agenda.ShortDay(s.From, zone)+" "+agenda.Between(s, zone))
+		}
+		if len(parts) > 0 {
+			out = append(out, fmt.Sprintf("%s comes %s: confirm the day before.", who, strings.Join(parts, " and ")))
+		}
+	}
+	for _, kit := range k.job.Kit {
+		if kit.Slots != nil {
+			say(paper(kit.Name), k.work.Window.Slots(kit.Slots))
+		}
+	}
+	for _, q := range k.job.People {
+		if q.Outside {
+			say(paper(q.Name), k.work.Window.Slots(q.Booked))
+		}
+	}
+	return out
+}
+
+// onlyOnes names tickets that one person alone holds and the work at the site needs.
+func (k *pack) onlyOnes() []string {
+	holders := map[string][]string{}
+	for _, q := range k.job.People {
+		seen := map[string]bool{}
+		for _, t := range q.Tickets {
+			if !seen[t.Name] {
+				holders[t.Name] = append(holders[t.Name], q.Name)
+			}
+			seen[t.Name] = true
+		}
+	}
+	var out []string
+	seen := map[string]bool{}
+	for _, s := range k.work.Steps {
+		for _, n := range s.Needs {
+			if t := n.Ticket.Name; s.Site && !s.Absent && t != "" && len(holders[t]) == 1 && !seen[t] {
+				seen[t] = true
+				out = append(out, fmt.Sprintf("Only %s holds the ticket %s.", paper(holders[t][0]), paper(t)))
+			}
+		}
+	}
+	return out
+}
+
+// maybes names the tasks that happen only with a chance.
+func (k *pack) maybes() []string {
+	var out []string
+	for _, t := range k.job.Tasks {
+		if t.Maybe() {
+			out = append(out, fmt.Sprintf("%s may come (chance %.0f %%): look for it as early as you can.", agenda.TaskLabel(t), t.Chance*100))
+		}
+	}
+	return out
+}
