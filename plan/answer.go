@@ -68,12 +68,13 @@ const (
 
 // Cause is one thing that sets the start of a step.
 type Cause struct {
-	Kind  CauseKind
-	Step  int    // the step it sets, index in Work.Steps
-	Other int    // the step it comes from, -1 if none
-	Name  string // the person, kit, workface, calendar
-	Text  string // in the job's words
-	Pos   tasks.Pos
+	Kind     CauseKind
+	Step     int    // the step it sets, index in Work.Steps
+	Other    int    // the step it comes from, -1 if none
+	Name     string // the person, kit, workface, calendar
+	Text     string // in the job's words
+	Pos      tasks.Pos
+	Together bool // sets the start only together with the others of its list
 }
 
 // ProofKind says what kind of argument proves that no plan fits.

@@ -13,6 +13,7 @@ func Compile(w *expand.Work) *Problem {
 	g := newGround(w)
 	p := &Problem{Work: w, Base: w.Span.From, End: w.Span.Len(),
 		Open: int(w.Window.Opens - w.Span.From), Close: int(w.Window.Closes - w.Span.From)}
+	p.ground = g
 	p.People = g.people()
 	maker := newCrewMaker(g, p.People)
 	for _, s := range w.Steps {

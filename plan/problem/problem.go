@@ -22,6 +22,8 @@ type Problem struct {
 	People []Person
 	Pairs  []Pair
 	Orders []Order
+
+	ground *ground // open hours by cause, for explanations; nil for an open instance
 }
 
 // Act is one activity.
@@ -191,4 +193,20 @@ func afterLast(set hours.Set, t, n int) int {
 		}
 	}
 	return Inf
+}
+
+// Label names the activity's task as it is printed.
+func (a *Act) Label() string {
+	if a.Step == nil {
+		return a.Name
+	}
+	return a.Step.Task.Label()
+}
+
+// Pos is the place in the job file of the activity's task.
+func (a *Act) Pos() tasks.Pos {
+	if a.Step == nil {
+		return tasks.Pos{}
+	}
+	return a.Step.Task.Pos
 }

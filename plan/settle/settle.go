@@ -7,21 +7,71 @@ import (
 
 	"sailby/plan"
 	"sailby/tasks"
+	"sailby/tasks/expand"
 )
 
 // Options bound the work. The zero value uses the defaults.
 type Options struct {
-	Trip  string                // a trip by name; "" is the booked one, else the first
-	Seed  uint64                // for the search; equal seeds and ticks give equal answers
-	Ticks int64                 // starts tried for each basis; 0 is the default of 400,000
-	Only  bool                  // likely hours only: no maybes, no high end (for what-if)
-	Progress func(text string)  // called now and then with what is being done; may be nil
+	Trip     string            // a trip by name; "" is the booked one, else the first
+	Seed     uint64            // for the search; equal seeds and ticks give equal answers
+	Ticks    int64             // starts tried for each basis; 0 is DefaultTicks
+	Only     bool              // likely hours only: no maybes, no high end (for what-if)
+	Progress func(text string) // called now and then with what is being done; may be nil
 }
+
+// DefaultTicks is the work done for each basis before the search rests, in starts tried.
+const DefaultTicks = 400_000
 
 // Ask settles a job for one window: likely hours, with every maybe, and at the high end.
 //
 // Errors: tasks.Faults where estimates or the choice of the window show faults in the job file.
 // A cancelled context or a deadline gives the best answer so far, marked as cut short, and no error.
 func Ask(ctx context.Context, job *tasks.Job, o Options) (*plan.Report, error) {
-	return nil, nil
+	if o.Ticks <= 0 {
+		o.Ticks = DefaultTicks
+	}
+	rep := &plan.Report{Job: job}
+	likely := expand.Basis{Trip: o.Trip}
+	var err error
+	if rep.Likely, err = answer(ctx, job, likely, o, true); err != nil {
+		return nil, err
+	}
+	if rep.Likely.Verdict == plan.CannotFit {
+		rep.LowToo = cannot(ctx, job, expand.Basis{Trip: o.Trip, End: expand.Low}, o)
+		if rep.Likely.Proof != nil {
+			rep.Likely.Proof.Even = rep.LowToo
+		}
+	}
+	if o.Only {
+		return rep, nil
+	}
+	if hasMaybes(job) {
+		if rep.Maybes, err = answer(ctx, job, expand.Basis{Trip: o.Trip, Maybes: true}, o, false); err != nil {
+			return nil, err
+		}
+	}
+	if hasRanges(rep.Likely.Work) {
+		if rep.High, err = answer(ctx, job, expand.Basis{Trip: o.Trip, End: expand.High}, o, false); err != nil {
+			return nil, err
+		}
+	}
+	return rep, nil
+}
+
+func hasMaybes(job *tasks.Job) bool {
+	for _, t := range job.Tasks {
+		if t.Maybe() || t.Group != "" {
+			return true
+		}
+	}
+	return false
+}
+
+func hasRanges(w *expand.Work) bool {
+	for _, s := range w.Steps {
+		if s.Estimate.Range[2] > s.Estimate.Range[1] {
+			return true
+		}
+	}
+	return false
 }

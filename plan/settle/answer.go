@@ -1,0 +1,220 @@
+package settle
+
+import (
+	"context"
+	"errors"
+	"fmt"
+
+	"sailby/plan"
+	"sailby/plan/check"
+	"sailby/plan/network"
+	"sailby/plan/problem"
+	"sailby/plan/solve"
+	"sailby/tasks"
+	"sailby/tasks/expand"
+	"sailby/tasks/hours"
+)
+
+// ErrChecker is a plan that the independent checker refused: a fault of this program, never of
+// the job file. The plan is not shown.
+var ErrChecker = errors.New("the independent checker refused the plan")
+
+// asked is one basis being settled.
+type asked struct {
+	ctx    context.Context
+	o      Options
+	work   *expand.Work
+	p      *problem.Problem // with the window as it is
+	carry  *problem.Problem // with hours carried on past the window
+	bounds network.Bounds
+	out    *plan.Answer
+}
+
+// answer settles one basis. explain adds leeway and what sets every start.
+func answer(ctx context.Context, job *tasks.Job, b expand.Basis, o Options, explain bool) (*plan.Answer, error) {
+	a, err := ask(ctx, job, b, o)
+	if err != nil {
+		return nil, err
+	}
+	a.prove()
+	if err := a.find(explain); err != nil {
+		return nil, err
+	}
+	a.verdict()
+	return a.out, nil
+}
+
+// cannot says whether a basis is proved impossible without a search.
+func cannot(ctx context.Context, job *tasks.Job, b expand.Basis, o Options) bool {
+	a, err := ask(ctx, job, b, o)
+	if err != nil {
+		return false
+	}
+	a.prove()
+	return a.out.Proof != nil
+}
+
+func ask(ctx context.Context, job *tasks.Job, b expand.Basis, o Options) (*asked, error) {
+	w, faults := expand.Expand(job, b)
+	if len(faults) > 0 {
+		return nil, faults
+	}
+	return &asked{ctx: ctx, o: o, work: w, p: problem.Compile(w), out: &plan.Answer{Work: w}}, nil
+}
+
+func (a *asked) stop() bool { return a.ctx.Err() != nil }
+
+func (a *asked) say(format string, args ...any) {
+	if a.o.Progress != nil {
+		a.o.Progress(fmt.Sprintf(format, args...))
+	}
+}
+
+func (a *asked) at(t int) hours.Minute { return a.p.Base + hours.Minute(t) }
+
+// prove looks for a proof that nothing fits, cheapest first, and for a bound.
+func (a *asked) prove() {
+	a.say("links, hours and deadlines")
+	for i := range a.p.Acts {
+		if len(a.p.Acts[i].Modes) == 0 {
+			a.out.Proof = a.noOpening(i)
+			return
+		}
+	}
+	b, conflict := network.Propagate(a.p, network.Off{})
+	a.bounds = b
+	if conflict != nil {
+		a.out.Proof = a.chain(conflict)
+		return
+	}
+	a.say("work against open hours")
+	loads := solve.Loads(a.p)
+	if over := solve.FindOverload(loads, b); over != nil {
+		a.out.Proof = a.overload(over)
+		return
+	}
+	a.bound(loads)
+}
+
+// bound sets the earliest possible site finish.
+func (a *asked) bound(loads []*solve.Load) {
+	best, last := 0, -1
+	for i := range a.p.Acts {
+		if act := &a.p.Acts[i]; act.Site {
+			end := a.bounds.Finish[i]
+			if w := act.Modes[0].Time.Watch(); act.Step != nil && !act.Step.Absent && act.Modes[0].Time.Length() > 0 {
+				end += w
+			}
+			if end > best {
+				best, last = end, i
+			}
+		}
+	}
+	if last >= 0 {
+		a.out.BoundWhy = fmt.Sprintf("the chain to %q, however many people there are", a.p.Acts[last].Label())
+	}
+	if t, why := solve.ContentBound(a.p, loads, a.bounds); t > best && why != nil {
+		best = t
+		a.out.BoundWhy = fmt.Sprintf("%s of work for %s%s from %s", span(why.Total), why.Load.Who, scope(why.Load.Scope), a.clock(why.From))
+	}
+	a.out.Bound = a.at(best)
+}
+
+// find searches for a plan and has it checked.
+func (a *asked) find(explain bool) error {
+	a.say("plans")
+	a.carry = problem.Compile(a.work.Carry())
+	for i := range a.carry.Acts {
+		if len(a.carry.Acts[i].Modes) == 0 {
+			return nil // cannot even be done late
+		}
+	}
+	free := network.Off{By: map[int]bool{}}
+	for i := range a.carry.Acts {
+		free.By[i] = true
+	}
+	b, conflict := network.Propagate(a.carry, free)
+	if conflict != nil {
+		return nil
+	}
+	bound := int(a.out.Bound - a.p.Base)
+	res := solve.Find(a.carry, b, solve.Options{Ticks: a.o.Ticks, Stop: a.stop, Seed: a.o.Seed, Good: func(s solve.Score) bool {
+		return a.out.Proof == nil && s.Late == 0 && s.Finish <= bound && s.Hand == 0 && s.Stops == 0
+	}})
+	a.out.Steps, a.out.CutShort = res.Ticks, a.stop()
+	if res.Best == nil {
+		return nil
+	}
+	return a.keep(solve.Compact(a.carry, res.Best), explain)
+}
+
+// keep has a schedule checked and fills the answer from it.
+func (a *asked) keep(s *solve.Schedule, explain bool) error {
+	p := solve.Plan(a.carry, s)
+	late := s.Score.Late > 0
+	work := a.work
+	if late {
+		work = a.carry.Work
+	}
+	for _, br := range check.Plan(work, p) {
+		if late && br.Late {
+			continue
+		}
+		return fmt.Errorf("%w: %s", ErrChecker, br.String())
+	}
+	a.out.Plan, a.out.Late = p, late
+	a.out.Finish = a.at(s.Score.Finish)
+	a.out.InHand = int(a.work.Window.Closes - a.out.Finish)
+	a.deadlines(s)
+	if explain {
+		a.out.Rows = solve.Rows(a.carry, s, a.stop)
+		a.out.Governing = solve.Governing(a.carry, s, a.out.Rows)
+		a.lastStarts()
+	} else {
+		a.out.Rows = make([]plan.Row, len(p.Steps))
+		for i := range a.out.Rows {
+			a.out.Rows[i] = plan.Row{Leeway: -1, Latest: p.Steps[i].Finish}
+		}
+	}
+	return nil
+}
+
+// deadlines sets what the plan makes of each deadline.
+func (a *asked) deadlines(s *solve.Schedule) {
+	for _, d := range a.work.Deadlines {
+		r := plan.DeadlineResult{Deadline: d, Name: "window at " + a.work.Window.Place.Name, Finish: a.out.Finish, LastStart: hours.Far}
+		if d.Step != nil {
+			r.Name = d.Task.Label()
+			r.Finish = a.at(s.Finish[d.Step.Index])
+		}
+		r.InHand = int(d.By - r.Finish)
+		a.out.Deadlines = append(a.out.Deadlines, r)
+	}
+}
+
+// lastStarts sets the last start of each deadline's task that still makes it.
+func (a *asked) lastStarts() {
+	for k := range a.out.Deadlines {
+		d := &a.out.Deadlines[k]
+		if d.Step == nil || a.out.Rows[d.Step.Index].Leeway < 0 {
+			continue
+		}
+		d.LastStart = a.out.Plan.Steps[d.Step.Index].Start + hours.Minute(a.out.Rows[d.Step.Index].Leeway)
+	}
+}
+
+// verdict says what all of it comes to.
+func (a *asked) verdict() {
+	switch {
+	case a.out.Plan != nil && !a.out.Late:
+		a.out.Verdict = plan.Fits
+		a.out.Best = a.out.Finish <= a.out.Bound
+		if a.out.Proof != nil { // cannot be: a checked plan and a proof against it
+			a.out.Proof = nil
+		}
+	case a.out.Proof != nil:
+		a.out.Verdict = plan.CannotFit
+	default:
+		a.out.Verdict = plan.Unsettled
+	}
+}

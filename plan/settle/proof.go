@@ -1,0 +1,213 @@
+package settle
+
+import (
+	"fmt"
+
+	"sailby/plan"
+	"sailby/plan/network"
+	"sailby/plan/problem"
+	"sailby/plan/solve"
+	"sailby/tasks"
+	"sailby/tasks/expand"
+	"sailby/tasks/quantity"
+)
+
+func span(minutes int) string { return quantity.Hours(minutes) }
+
+// clock writes a minute of the problem as the window's place reads it.
+func (a *asked) clock(t int) string { return a.clockAt(t, a.work.Window.Place) }
+
+func (a *asked) clockAt(t int, p *tasks.Place) string {
+	return a.at(t).In(p.Zone).Format("Mon 2 Jan 15:04")
+}
+
+func scope(s string) string {
+	if s == "" {
+		return ""
+	}
+	return " " + s
+}
+
+// noOpening proves that one step fits no opening at all.
+func (a *asked) noOpening(i int) *plan.Proof {
+	act := &a.p.Acts[i]
+	s := act.Step
+	return &plan.Proof{Kind: plan.ByNoOpening,
+		Summary: fmt.Sprintf("%q cannot be done at all: %s", s.Task.Label(), act.Hopeless),
+		Lines: []plan.ProofLine{
+			{Text: fmt.Sprintf("%q at %s: %s of working time", s.Task.Label(), s.Task.Where(), span(s.Working+s.SetUp)), Minutes: s.Working + s.SetUp, Pos: s.Task.Pos, Needed: true},
+			{Text: act.Hopeless, Pos: s.Place.OpenPos, Needed: true},
+		}}
+}
+
+// shrinkLimit bounds the links for which every one is tried out when a proof is made small.
+const shrinkLimit = 1500
+
+// chain proves that a chain of links is too long for the hours, whoever does the work: the
+// links that the contradiction needs, each of which, left out, lets the others hold.
+func (a *asked) chain(c *network.Conflict) *plan.Proof {
+	off := network.Off{Link: map[int]bool{}, By: map[int]bool{}, From: map[int]bool{}, Calendar: map[int]bool{}}
+	path := map[int]bool{}
+	for _, k := range c.Path {
+		path[k] = true
+	}
+	for k := range a.p.Links {
+		off.Link[k] = !path[k]
+	}
+	still := func() *network.Conflict { _, c := network.Propagate(a.p, off); return c }
+	if still() == nil { // the trace missed something: begin with every link
+		for k := range a.p.Links {
+			off.Link[k] = false
+		}
+	}
+	if len(a.p.Links) <= shrinkLimit {
+		for k := range a.p.Links {
+			if !off.Link[k] && a.p.Links[k].From >= 0 {
+				off.Link[k] = true
+				if still() == nil {
+					off.Link[k] = false
+				}
+			}
+		}
+		for i := range a.p.Acts {
+			if a.p.Acts[i].By < problem.Inf && !off.By[i] {
+				off.By[i] = true
+				if still() == nil {
+					off.By[i] = false
+				}
+			}
+		}
+	}
+	return a.chainText(off, still())
+}
+
+// chainText writes the proof of a chain that off has made small.
+func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
+	b, _ := network.Propagate(a.p, network.Off{Link: off.Link, By: allActs(a.p), From: off.From})
+	last := &a.p.Acts[c.Act]
+	by := a.work.Window.Closes
+	end := c.Act
+	for i := range a.p.Acts {
+		if a.p.Acts[i].By < problem.Inf && !off.By[i] && b.Finish[i] > a.p.Acts[i].By {
+			end, last = i, &a.p.Acts[i]
+		}
+	}
+	if last.By < problem.Inf {
+		by = a.at(last.By)
+	}
+	p := &plan.Proof{Kind: plan.ByChain}
+	involved := []int{}
+	seen := map[int]bool{}
+	note := func(i int) {
+		if i >= 0 && !seen[i] {
+			seen[i] = true
+			involved = append(involved, i)
+		}
+	}
+	var links []*problem.Link
+	for k := range a.p.Links {
+		if !off.Link[k] {
+			l := &a.p.Links[k]
+			note(l.From)
+			note(l.To)
+			links = append(links, l)
+		}
+	}
+	note(end)
+	sortBy(involved, b.Start)
+	for _, i := range involved {
+		act := &a.p.Acts[i]
+		text := fmt.Sprintf("%s: %s, not before %s, so not finished before %s", stepName(act.Step), a.length(act), a.clockAt(b.Start[i], act.Step.Place), a.clockAt(b.Finish[i], act.Step.Place))
+		p.Lines = append(p.Lines, plan.ProofLine{Text: text, Minutes: act.Modes[0].Time.Length(), Pos: act.Pos(), Needed: a.needed(off, i)})
+	}
+	for _, l := range links {
+		if l.Max < expand.NoMax && l.Max > 0 {
+			p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s: at most %s", l.Step.Why, span(l.Max)), Minutes: l.Max, Pos: l.Step.Pos, Needed: true})
+		}
+	}
+	p.Over = c.Late
+	if b.Finish[end] > last.By {
+		p.Over = b.Finish[end] - last.By
+	}
+	what := "must be finished by"
+	p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s %s %s", stepName(last.Step), what, by.In(last.Step.Place.Zone).Format("Mon 2 Jan 15:04")), Pos: a.byPos(last), Needed: true})
+	if p.Over >= problem.Inf || p.Over < 0 {
+		p.Over = 0
+	}
+	p.Summary = fmt.Sprintf("the chain that ends in %s is too long, even with unlimited people", stepName(last.Step))
+	if p.Over > 0 {
+		p.Summary += fmt.Sprintf(": %s over", span(p.Over))
+	}
+	return p
+}
+
+func allActs(p *problem.Problem) map[int]bool {
+	m := map[int]bool{}
+	for i := range p.Acts {
+		m[i] = true
+	}
+	return m
+}
+
+func sortBy(list, key []int) {
+	for i := 1; i < len(list); i++ {
+		for j := i; j > 0 && key[list[j]] < key[list[j-1]]; j-- {
+			list[j], list[j-1] = list[j-1], list[j]
+		}
+	}
+}
+
+// needed says whether the contradiction goes away when the step takes no time at all.
+func (a *asked) needed(off network.Off, i int) bool {
+	act := &a.p.Acts[i]
+	keep, times := act.Modes, act.Times
+	act.Modes, act.Times = []problem.Mode{{Keeper: -1, Time: problem.Fixed(0)}}, nil
+	_, c := network.Propagate(a.p, off)
+	act.Modes, act.Times = keep, times
+	return c == nil
+}
+
+func (a *asked) length(act *problem.Act) string {
+	s := act.Step
+	switch s.Class {
+	case expand.Hands:
+		return span(s.Working+s.SetUp) + " of working time"
+	case expand.Clock:
+		return span(s.Clock) + " standing"
+	}
+	return span(s.Estimate.Range[1]) + " drying"
+}
+
+func stepName(s *expand.Step) string {
+	if s.Name == string(s.Task.Kind) {
+		return fmt.Sprintf("%q", s.Task.Label())
+	}
+	return fmt.Sprintf("%q (%s)", s.Task.Label(), s.Name)
+}
+
+// byPos is where the limit on a step's finish stands: its own deadline, else the window.
+func (a *asked) byPos(act *problem.Act) tasks.Pos {
+	for _, d := range a.work.Deadlines {
+		if d.Step == act.Step {
+			return d.Pos
+		}
+	}
+	return a.work.Window.Pos
+}
+
+// overload proves that there is more work than hours.
+func (a *asked) overload(o *solve.Overload) *plan.Proof {
+	p := &plan.Proof{Kind: plan.ByWork, Over: o.Total - o.Have}
+	place := a.p.Acts[o.Acts[0]].Step.Place
+	from, to := a.clockAt(o.From, place), a.clockAt(o.To, place)
+	p.Summary = fmt.Sprintf("%s%s: %s of work between %s and %s, and %s open for it; %s over",
+		o.Load.Who, scope(o.Load.Scope), span(o.Total), from, to, span(o.Have), span(p.Over))
+	for k, i := range o.Acts {
+		act := &a.p.Acts[i]
+		p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s: %s", stepName(act.Step), span(o.Need[k])), Minutes: o.Need[k], Pos: act.Pos(), Needed: true})
+	}
+	p.Lines = append(p.Lines, plan.ProofLine{
+		Text:    fmt.Sprintf("open for %s%s from %s to %s: %s", o.Load.Who, scope(o.Load.Scope), from, to, span(o.Have)),
+		Minutes: o.Have, Pos: a.work.Window.Pos, Needed: true})
+	return p
+}
