@@ -39,7 +39,7 @@ var jointSection = section{name: "Joint", where: "tasks / NAME / joints / item /
 	mmOrNone("gap", "1 mm", "none", "fit-up gap beyond the drawing"),
 	{name: "both sides", takes: yesNo, usual: "no", example: "yes", says: "the same again on the other side (fillet, square, lap)"},
 	mm("bead", 5, 1e7, "50 mm", "", "intermittent: each weld; slot: its length"),
-	mm("pitch", 5, 1e7, "150 mm", "", "intermittent: start to start"),
+	{name: "pitch", takes: anAmount, dim: quantity.Length, low: 5, high: 1e7, example: "150 mm", beside: "bead: 50 mm", says: "intermittent: start to start"},
 	mm("diameter", 3, 1e5, "48.3 mm", "", "of a tube, a plug's hole, a slot's width"),
 }}
 
@@ -57,8 +57,10 @@ func init() { // a key for each type of joint
 	for _, name := range weld.JointTypes() {
 		seamSection.keys = append(seamSection.keys, key{name: name, takes: keysOf, sub: &jointSection, example: "{thickness: 12 mm}", without: "*joint", says: "the joint"})
 	}
-	f := seamSection.find("fillet")
-	f.example = "{leg: 6 mm}"
+	for name, example := range map[string]string{"fillet": "{leg: 6 mm}", "double U": "{thickness: 40 mm}", "double J": "{thickness: 40 mm}",
+		"plug": "{thickness: 10 mm, diameter: 20 mm}", "slot": "{thickness: 10 mm, diameter: 20 mm, bead: 60 mm}"} {
+		seamSection.find(name).example = example
+	}
 }
 
 const maxSeams = 500

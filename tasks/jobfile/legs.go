@@ -1,6 +1,8 @@
 package jobfile
 
 import (
+	"slices"
+
 	"sailby/tasks"
 	"sailby/tasks/hours"
 	"sailby/tasks/quantity"
@@ -43,8 +45,12 @@ func (r *reader) legs(f *fields, t *tasks.Trip) {
 	out := r.open(f.node("out"), &outSection, f.what+": out")
 	back := r.open(f.node("back"), &backSection, f.what+": back")
 	site := t.Place.Zone
-	ok1, crossing := r.wayOut(t, out, out.legsZone("sail zone", r.home), out.legsZone("land zone", site))
-	ok2 := r.wayBack(t, back, out, back.legsZone("sail zone", site), back.legsZone("land zone", r.home), crossing)
+	zones := [4]zoneOf{out.legsZone("sail zone", r.home), out.legsZone("land zone", site), back.legsZone("sail zone", site), back.legsZone("land zone", r.home)}
+	if slices.Contains(zones[:], nil) {
+		return // reported
+	}
+	ok1, crossing := r.wayOut(t, out, zones[0], zones[1])
+	ok2 := r.wayBack(t, back, out, zones[2], zones[3], crossing)
 	if ok1 && ok2 && t.Departs < t.Arrives {
 		r.fault(back.at, "look at the dates", "%sleaves the site %s, before it arrives there %s", back.lead(""),
 			t.Departs.In(site).Format("2006-01-02 15:04"), t.Arrives.In(site).Format("2006-01-02 15:04"))

@@ -24,7 +24,7 @@ var linkKeys = []struct {
 	{"starts with", tasks.Start, tasks.Start},
 }
 
-var linkSection = section{name: "Link", where: "tasks / NAME / after / NAME", host: "tasks/rot found/after/cut lugs", says: "A wait between two tasks (R10).", keys: []key{
+var linkSection = section{name: "Link", where: "tasks / NAME / after / NAME", host: "tasks/MT/after/weld lugs", says: "A wait between two tasks (R10).", keys: []key{
 	{name: "min", takes: itsOwn, form: "time, or `4 working h`", shape: anyText, usual: "0 min", example: "4 h", says: "least wait; working hours are those of this task's place"},
 	{name: "max", takes: itsOwn, form: "time, or `4 working h`", shape: anyText, usual: "none", example: "48 h", says: "longest wait"},
 	{name: "state", takes: itsOwn, form: "state of the other task", shape: anyText, usual: "by kind (R10)", example: "cooled", without: "min max", says: "what it waits for: of a coat applied, touch dry, hard dry, solvent gone, cured; of a weld cooled, ready for NDT"},

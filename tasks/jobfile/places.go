@@ -31,7 +31,7 @@ var placeSection = section{name: "Place", where: "places / NAME", host: "places/
 	{name: "mains", takes: anAmount, dim: quantity.Power, low: 0, high: 1000, usual: "no limit", example: "15 kVA", says: "fixed supply that everything in use there shares"},
 	{name: "climate", takes: keysOf, sub: &climateSection, example: "{month: April, wet days: 14}", says: "the weather that is usual"},
 	{name: "tide", takes: keysOf, sub: &tideSection, example: "{table: tide.csv}", says: "the tide there"},
-	{name: "workfaces", takes: namedOf, sub: &faceSection, example: "{deck: {people: 4}}", says: "parts of the place with room and limits of their own"},
+	{name: "workfaces", takes: namedOf, sub: &faceSection, example: "{hinge: {people: 2, level: 1.1 m}, deck: {people: 4}}", says: "parts of the place with room and limits of their own"},
 }}
 
 var permitSection = section{name: "Permit", where: "places / NAME / permits / NAME", host: "places/pier/permits/hot work", says: "A daily permit (R23).", keys: []key{

@@ -11,7 +11,7 @@ import (
 )
 
 var orderSection = section{name: "Order", where: "orders / item", host: "orders/1", says: "A rule on the order itself (R17): `either`, or `not both` with `before`. The tasks must exist.", keys: []key{
-	{name: "either", takes: itsOwn, form: "list of `x before y`", shape: textOrList, example: "[weld lugs before prime deck, load before prime deck]", without: "not_both before", says: "at least one of these holds"},
+	{name: "either", takes: itsOwn, form: "list of `x before y`", shape: textOrList, example: "[weld lugs before resin, load before resin]", without: "not_both before", says: "at least one of these holds"},
 	{name: "not both", takes: names, example: "[weld lugs, MT]", beside: "before: load", without: "either", says: "not all of these are finished before the task under `before` starts"},
 	{name: "before", takes: aName, example: "load", beside: "not both: [weld lugs, MT]", without: "either", says: "the task that `not both` is about"},
 	{name: "why", takes: aText, example: "the frame is lifted before it is closed", says: "printed with the rule"},
@@ -109,8 +109,11 @@ func (r *reader) single(name ref, lead string) (string, bool) {
 // notBoth says that at least one of the tasks comes after the one under before.
 func (r *reader) notBoth(f *fields) []tasks.Before {
 	refs := f.names("not both")
-	at, _ := f.name("before")
-	pivot, ok := r.single(at, f.lead("before"))
+	at, ok := f.name("before")
+	pivot := ""
+	if ok {
+		pivot, ok = r.single(at, f.lead("before"))
+	}
 	if len(refs) < 2 {
 		f.fault("not both", "name two tasks, or use a link", "it takes two tasks or more")
 	}

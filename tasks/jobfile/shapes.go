@@ -18,6 +18,6 @@ const (
 	linkShape    = `{"anyOf":[{"type":"string"},{"type":"array","items":{"type":"string"},"minItems":1},{"type":"object","additionalProperties":{"anyOf":[{"type":"string"},{"type":"object","properties":{"min":{"type":"string"},"max":{"type":"string"},"state":{"type":"string"}},"additionalProperties":false}]}}]}`
 	pairsShape   = `{"type":"array","items":{"type":"array","items":{"type":"string"},"minItems":2,"maxItems":2}}`
 	setShape     = `{"type":"object","minProperties":1}`
-	ticketShape  = `{"anyOf":[{"type":"string"},{"$ref":"#/$defs/Weld ticket"}]}`
+	ticketShape  = `{"anyOf":[{"type":"string"},{"$ref":"#/$defs/Weld-ticket"}]}`
 	ticketsShape = `{"anyOf":[` + ticketShape + `,{"type":"array","items":` + ticketShape + `,"minItems":1}]}`
 )

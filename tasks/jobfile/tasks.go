@@ -26,9 +26,9 @@ var taskSection = section{name: "Task", where: "tasks / NAME", host: "tasks/rot 
 	{name: "drawing", takes: aText, example: "RH-04 rev B", says: "joint or drawing number"},
 	{name: "note", takes: aNote, example: "keep the old pin", says: "printed on the sheet"},
 	link("after", "starts after the finish of these (R10 says which finish)"),
-	link("after start of", "starts after the start of these"),
+	startLink("after start of", "starts after the start of these"),
 	link("finish after", "finishes after the finish of these"),
-	link("finish after start of", "finishes after the start of these"),
+	startLink("finish after start of", "finishes after the start of these"),
 	{name: "starts with", takes: names, example: "cut lugs", says: "starts at the same minute as these"},
 	{name: "hours", takes: hourly, dim: quantity.Time, low: 0, high: longestTask, usual: "the estimate", example: "3 to 6 h", says: "hours with the people named; overrules the estimate; a bare number is hours"},
 	{name: "man-hours", takes: hourly, dim: quantity.Time, low: 0, high: longestTask, usual: "the estimate", example: "6", without: "hours", says: "divided by the people; a bare number is hours"},
@@ -39,7 +39,7 @@ var taskSection = section{name: "Task", where: "tasks / NAME", host: "tasks/rot 
 	{name: "standing", takes: aRange, dim: quantity.Time, low: 0, high: longestWait, example: "12 h", says: "clock time that the plan keeps: alone, or after the hands-on part"},
 	{name: "why", takes: aText, example: "resin sets", beside: "standing: 12 h", says: "what the standing time is"},
 	{name: "keeps", takes: itsOwn, form: "{ticket: how many}", shape: needsShape, example: "{fire watch: 1}", beside: "standing: 1 h", says: "people that the standing time keeps"},
-	{name: "in one go", takes: yesNo, usual: "by kind (R6)", example: "yes", says: "no stop between its start and its finish"},
+	{name: "in one go", takes: yesNo, usual: "by kind (R6)", example: "yes", without: "may_stop", says: "no stop between its start and its finish"},
 	{name: "may pause over meals", takes: yesNo, usual: "by kind (R6)", example: "yes", says: "though it goes in one go"},
 	{name: "may stop", takes: keysOf, sub: &stopSection, example: "{not before: 90 min, least piece: 30 min}", says: "when it may be left and taken up again (R8)"},
 	{name: "set-up", takes: anAmount, dim: quantity.Time, low: 0, high: aDay, usual: "the estimate", example: "30 min", says: "spent at every start (R8)"},
@@ -58,6 +58,12 @@ var taskSection = section{name: "Task", where: "tasks / NAME", host: "tasks/rot 
 
 func link(name, says string) key {
 	return key{name: name, takes: itsOwn, form: linkForms, shape: linkShape, example: linkExample, says: says}
+}
+
+func startLink(name, says string) key {
+	k := link(name, says)
+	k.form, k.example = "name, list, or {name: {min, max}}", "{weld frame: {min: 30 min}}"
+	return k
 }
 
 var stopSection = section{name: "Stop", where: "tasks / NAME / may stop", host: "tasks/rot found/may stop", says: "When a task may be left and taken up again.", keys: []key{

@@ -19,7 +19,7 @@ var tripSection = section{name: "Trip", where: "trips / item", host: "trips/1", 
 	{name: "name", takes: aText, need: true, example: "nine days", says: "its name"},
 	{name: "place", takes: aName, need: true, example: "pier", says: "where it goes: the window's place"},
 	{name: "booked", takes: yesNo, usual: "no", example: "yes", says: "this one is booked and is judged"},
-	{name: "out", takes: keysOf, sub: &outSection, need: true, example: "{leave: 2027-04-05 06:00, drive: 3.5 h, unload: 1 h}", says: "the way there"},
+	{name: "out", takes: keysOf, sub: &outSection, need: true, example: "{drive: 3.5 h, check in: 45 min, sail: 2027-04-05 10:15, land: 2027-04-05 13:05, unload: 1 h}", says: "the way there"},
 	{name: "back", takes: keysOf, sub: &backSection, need: true, example: "{load: 1.5 h, leave: 2027-04-14 12:00, drive: 3.5 h}", says: "the way home"},
 	{name: "people", takes: names, usual: "everybody who is not tied to another place", example: "[Ines, Tom]", says: "who goes"},
 	{name: "price", takes: itsOwn, form: "{what: amount with its currency}", shape: moneyShape, example: "{vehicle: 412 GBP, person: 38 GBP}", says: "what it costs"},
@@ -58,7 +58,7 @@ var backSection = section{name: "Way back", where: "trips / item / back", host: 
 	{name: "land zone", takes: itsOwn, form: "time zone", shape: anyText, usual: "the job's zone", example: "Europe/London", says: "zone of `land`"},
 }}
 
-var windowSection = section{name: "Window", where: "window", host: "window", says: "A plain window, in place of trips.", keys: []key{
+var windowSection = section{name: "Window", where: "window", host: "closure:window", says: "A plain window, in place of trips.", keys: []key{
 	{name: "place", takes: aName, need: true, example: "bridge", says: "where"},
 	{name: "opens", takes: aMoment, need: true, example: "2027-06-04 21:00", says: "local to the place"},
 	{name: "closes", takes: aMoment, need: true, example: "2027-06-07 01:00", says: "local to the place"},

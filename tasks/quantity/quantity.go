@@ -116,6 +116,15 @@ func (d Dim) UnitList() string {
 	return strings.Join(names[:len(names)-1], ", ") + " or " + names[len(names)-1]
 }
 
+// Units lists every spelling of the units that d may be written in.
+func (d Dim) Units() []string {
+	var names []string
+	for _, u := range units[d] {
+		names = append(names, u.name)
+	}
+	return names
+}
+
 // Error is what was wrong with a written amount. Problem is one sentence; Hint a way out.
 type Error struct{ Problem, Hint string }
 
