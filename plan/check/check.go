@@ -31,8 +31,11 @@ func (b Breach) String() string {
 		s += b.Step + ": "
 	}
 	s += b.Text
-	if b.Need != "" || b.Have != "" {
+	switch {
+	case b.Need != "" && b.Have != "":
 		s += fmt.Sprintf(" (needs %s, has %s)", b.Need, b.Have)
+	case b.Need+b.Have != "":
+		s += " (" + b.Need + b.Have + ")"
 	}
 	return s
 }

@@ -2,6 +2,11 @@ package check
 
 import (
 	"fmt"
+	"go/ast"
+	"go/parser"
+	"go/token"
+	"path/filepath"
+	"slices"
 	"strings"
 	"testing"
 
@@ -182,6 +187,34 @@ func TestBreachSays(t *testing.T) {
 	}
 	if s := all[0].String(); s != "R10: second / fit-up: test: comes too early (needs at least 90 min, has 2027-04-06 09:00 to 2027-04-06 10:00)" {
 		t.Errorf("written %q", s)
+	}
+}
+
+// TestStandsAlone: the checker shares nothing with the solver.
+func TestStandsAlone(t *testing.T) {
+	files, err := filepath.Glob("*.go")
+	if err != nil || len(files) == 0 {
+		t.Fatal(err)
+	}
+	for _, name := range files {
+		if strings.HasSuffix(name, "_test.go") {
+			continue
+		}
+		f, err := parser.ParseFile(token.NewFileSet(), name, nil, 0)
+		if err != nil {
+			t.Fatal(err)
+		}
+		for _, i := range f.Imports {
+			if path := strings.Trim(i.Path.Value, `"`); strings.HasPrefix(path, "sailby/plan/") {
+				t.Errorf("%s imports %s", name, path)
+			}
+		}
+		ast.Inspect(f, func(n ast.Node) bool {
+			if s, ok := n.(*ast.SelectorExpr); ok && slices.Contains([]string{"Presence", "Travel", "NewSet", "Spans", "Joined", "ClashTable", "Holds", "HoldsAll"}, s.Sel.Name) {
+				t.Errorf("%s takes %s from elsewhere", name, s.Sel.Name)
+			}
+			return true
+		})
 	}
 }
 
