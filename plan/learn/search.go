@@ -6,98 +6,220 @@ import "sailby/plan/problem"
 type search struct {
 	*model
 	opt    Options
-	best   []int32 // starts of the best plan, nil if none
-	value  int32   // its finish
-	bound  int32
+	best   []int32 // value of each variable in the best plan or the hint, nil if none
+	starts []int   // the best plan found, nil if none
+	value  int32   // only finishes before this are looked for
 	polled int64
-	first  bool // branch on starts, in the order of time
+	kept   int64 // clauses allowed
+}
+
+// outcome is how a run ended.
+type outcome uint8
+
+const (
+	tired   outcome = iota // as many conflicts as it was allowed
+	found                  // a better plan
+	refused                // nothing under the assumptions
+	over                   // nothing at all: the search is finished
+	stopped
+)
+
+// How the search shares its effort. Restarts begin short and grow by a tenth; one run in four
+// tries to refute finishes just above the bound (destructive bounds: Klein and Scholl 1999).
+const (
+	firstRun   = 100
+	growth     = 10
+	lowEvery   = 4
+	firstKept  = 2000
+	keptStep   = 300
+	atomFade   = 1 / 0.95
+	clauseFade = 1 / 0.999
+)
+
+// run searches until one of the outcomes; it begins and ends at level 0. With early it branches
+// on the starts in the order of time, else on the atoms of the learnt clauses.
+func (s *search) run(assume []fact, limit int64, early bool) outcome {
+	from := s.conflicts
+	for {
+		if !s.settle() {
+			if !s.learn() {
+				return over
+			}
+			s.atoms.bump *= atomFade
+			s.bump *= clauseFade
+			continue
+		}
+		if s.stopped() {
+			s.retreat(0)
+			return stopped
+		}
+		if s.conflicts-from >= limit {
+			s.retreat(0)
+			return tired
+		}
+		if k := int(s.level()); k < len(assume) {
+			if s.fails(assume[k]) {
+				s.retreat(0)
+				return refused
+			}
+			s.decide(assume[k])
+			continue
+		}
+		f, ok := s.choose(early)
+		if ok {
+			s.decide(f)
+			continue
+		}
+		if !s.take() {
+			return over
+		}
+		return found
+	}
+}
+
+// take notes the plan that the bounds have come down to, and asks for a better one from now on.
+func (s *search) take() bool {
+	s.value = s.now[s.end]
+	s.best = s.best[:0]
+	for x := 0; x < len(s.now); x += 2 {
+		s.best = append(s.best, s.now[x])
+	}
+	s.starts = s.starts[:0]
+	for _, x := range s.start {
+		s.starts = append(s.starts, int(s.now[x]))
+	}
+	if s.opt.Found != nil {
+		s.opt.Found(append([]int(nil), s.starts...), int(s.value))
+	}
+	s.retreat(0)
+	return s.tighten()
+}
+
+// breed makes schedules until so many have been made since the last improvement; false if the
+// search is at its end.
+func (s *search) breed(b *breeder, patience int) bool {
+	for k := 0; k < patience; k++ {
+		s.ticks += int64(b.n) * 4
+		better := b.step()
+		if b.best.end < s.value {
+			if !s.adopt(b.best) {
+				return false
+			}
+		}
+		if better {
+			k = 0
+		}
+		if b.best.end <= s.now[s.end] || s.stopped() {
+			break
+		}
+	}
+	return true
+}
+
+// adopt notes a schedule found outside the engine.
+func (s *search) adopt(x *beast) bool {
+	s.value = x.end
+	for len(s.best) < int(s.end/2)+1 {
+		s.best = append(s.best, 0)
+	}
+	s.starts = s.starts[:0]
+	for i, side := range s.start {
+		s.best[side/2] = x.start[i]
+		s.starts = append(s.starts, int(x.start[i]))
+	}
+	if s.opt.Found != nil {
+		s.opt.Found(append([]int(nil), s.starts...), int(s.value))
+	}
+	return s.tighten() && s.ok()
+}
+
+// ok settles the root.
+func (s *search) ok() bool {
+	if !s.settle() {
+		s.dead = true
+	}
+	return !s.dead
+}
+
+// tighten asks for finishes before value; false if there are none.
+func (s *search) tighten() bool {
+	if !s.raise(s.end^1, 1-s.value, why{kind: whyRoot}) {
+		s.dead = true
+	}
+	return !s.dead
 }
 
 // minimise is the search for the best plan.
 func (s *search) minimise() Result {
 	s.value = int32(s.p.End) + 1
-	if s.opt.Hint != nil {
-		for _, v := range s.opt.Hint {
-			s.best = append(s.best, int32(v))
+	for i, v := range s.opt.Hint {
+		for len(s.best) < int(s.start[i]/2) {
+			s.best = append(s.best, 0)
 		}
+		s.best = append(s.best, int32(v))
 	}
-	found := false
 	if s.opt.Best > 0 && s.opt.Best <= s.p.End {
 		s.value = int32(s.opt.Best)
 	}
-	status := Unknown
-	restart, limit := int64(0), int64(100)
-	first := true
-	kept := int64(2000)
-	for {
-		if !s.settle() {
-			if !s.learn() {
-				break
+	if !s.tighten() || !s.settle() {
+		s.dead = true
+		return s.result()
+	}
+	s.kept = firstKept
+	if h := newShop(s.model); h != nil && !s.breed(newBreeder(h, s.opt.Seed), 2000) {
+		return s.result()
+	}
+	limit, step, low := int64(firstRun), int32(1), int64(firstRun)
+	for round := 0; ; round++ {
+		var o outcome
+		target := s.now[s.end] + step - 1
+		if round%lowEvery == lowEvery-1 && target < s.value-1 {
+			o = s.run([]fact{{s.end ^ 1, -target}}, low, false)
+			switch o {
+			case refused:
+				step = min(2*step, 1<<20)
+				round--
+			case tired:
+				if step == 1 {
+					low += low / growth
+				}
+				step = max(1, step/2)
 			}
-			s.atoms.bump *= 1 / 0.95
-			s.bump *= 1 / 0.999
-			restart++
-			continue
-		}
-		if s.stopped() {
-			status = Feasible
-			break
-		}
-		if s.level() == 0 {
-			s.bound = s.now[s.end]
-		}
-		if restart >= limit {
-			restart, limit = 0, limit*11/10
-			first = !first
-			s.retreat(0)
-			if int64(len(s.refs)) > kept {
-				s.reduce()
-				kept += 300
+		} else {
+			o = s.run(nil, limit, round%2 == 0)
+			if o == tired {
+				limit += limit / growth
 			}
-			continue
 		}
-		f, ok := s.choose(first)
-		if ok {
-			s.decide(f)
-			continue
+		if o == over || o == stopped {
+			return s.result()
 		}
-		s.value = s.now[s.end]
-		found = true
-		s.best = s.best[:0]
-		for _, x := range s.start {
-			s.best = append(s.best, s.now[x])
-		}
-		if s.opt.Found != nil {
-			s.opt.Found(ints(s.best), int(s.value))
-		}
-		s.retreat(0)
-		if !s.raise(s.end^1, 1-s.value, why{kind: whyRoot}) {
-			break
+		if int64(len(s.refs)) > s.kept {
+			s.reduce()
+			s.kept += keptStep
 		}
 	}
-	r := Result{Status: status, Finish: problem.Inf, Bound: int(s.bound), Ticks: s.ticks, Conflicts: s.conflicts}
-	if found {
-		r.Starts, r.Finish = ints(s.best), int(s.value)
+}
+
+// result says what has been found out.
+func (s *search) result() Result {
+	r := Result{Finish: problem.Inf, Bound: problem.Inf, Ticks: s.ticks, Conflicts: s.conflicts}
+	if !s.dead {
+		r.Bound = int(s.now[s.end])
 	}
-	switch {
-	case status == Feasible && !found:
-		r.Status = Unknown
-	case status != Feasible && found:
-		r.Status, r.Bound = Optimal, r.Finish
-	case status != Feasible:
-		r.Status, r.Bound = Infeasible, problem.Inf
+	if s.starts != nil {
+		r.Starts, r.Finish = s.starts, int(s.value)
+		r.Status, r.Bound = Feasible, min(r.Bound, r.Finish)
+		if s.dead {
+			r.Status = Optimal
+		}
+	} else if s.dead {
+		r.Status = Infeasible
 	}
 	return r
 }
 
-func ints(a []int32) []int {
-	out := make([]int, len(a))
-	for i, v := range a {
-		out[i] = int(v)
-	}
-	return out
-}
-
+// stopped asks, not too often, whether to go on.
 func (s *search) stopped() bool {
 	if s.opt.Ticks > 0 && s.ticks >= s.opt.Ticks {
 		return true
@@ -109,9 +231,10 @@ func (s *search) stopped() bool {
 	return false
 }
 
-// choose gives the next decision, false if every start is settled.
-func (s *search) choose(first bool) (fact, bool) {
-	for !first {
+// choose gives the next decision, false if every start is settled. Where the best plan known has
+// a say it is followed; else things are done early.
+func (s *search) choose(early bool) (fact, bool) {
+	for !early {
 		f, ok := s.atoms.take(s.level())
 		if !ok {
 			break
@@ -119,11 +242,8 @@ func (s *search) choose(first bool) (fact, bool) {
 		if s.holds(f) || s.fails(f) {
 			continue
 		}
-		if s.best != nil && int(f.s/2) < len(s.best) {
-			if s.best[f.s/2] >= f.v {
-				return f, true
-			}
-			return f.not(), true
+		if x := int(f.s / 2); x < len(s.best) && s.best[x] >= f.v {
+			return f, true
 		}
 		return f.not(), true
 	}
@@ -133,12 +253,11 @@ func (s *search) choose(first bool) (fact, bool) {
 			pick = x
 		}
 	}
-	if pick < 0 {
-		// the finish of the whole is as early as the starts allow
-		if !s.fixed(s.end) {
-			return fact{s.end ^ 1, -s.now[s.end]}, true
-		}
-		return fact{}, false
+	if pick >= 0 {
+		return fact{pick ^ 1, -s.now[pick]}, true
 	}
-	return fact{pick ^ 1, -s.now[pick]}, true
+	if !s.fixed(s.end) { // the finish of the whole is as early as the starts allow
+		return fact{s.end ^ 1, -s.now[s.end]}, true
+	}
+	return fact{}, false
 }
