@@ -132,7 +132,7 @@ func TestRepair(t *testing.T) {
 	}{{false, false, 0.015}, {true, false, 0.04}, {true, true, 0.10}} {
 		at := Circumstances{Site: c.site, Execution: "EN 1090-2"}
 		e := mustWork(t, at, s)
-		r := RepairOf(e, at, c.bad)
+		r := e.Repair(at, c.bad)
 		near(t, "share", r.Share, c.share, 1e-12)
 		near(t, "expected length", r.Length*r.Chance, c.share*10000, 1e-6)
 		near(t, "effort", float64(r.HandsOn), 4*float64(e.Seams[0].Welding)*r.Length/10000, 1e-6)
@@ -141,7 +141,7 @@ func TestRepair(t *testing.T) {
 		}
 		checkTree(t, r.Hours)
 	}
-	if r := RepairOf(Estimate{}, Circumstances{}, false); r.HandsOn != 0 || math.IsNaN(r.Chance) {
+	if r := (Estimate{}).Repair(Circumstances{}, false); r.HandsOn != 0 || math.IsNaN(r.Chance) {
 		t.Errorf("a repair of nothing: %+v", r)
 	}
 }

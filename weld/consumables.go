@@ -95,6 +95,9 @@ func (e *seamWork) consumables(c Circumstances) []Consumable {
 		flux := origin.Worked("flux", b.Value, "kg", "filler bought x flux to wire", b, origin.House("flux to wire", 1, "", "about as much flux as wire"))
 		list = append(list, Consumable{Name: "flux", Amount: flux.Value, Unit: "kg", Why: flux})
 	}
+	if f, ok := e.propane(c); ok {
+		list = append(list, Consumable{Name: "propane for preheat", Amount: f.Value, Unit: "kg", Why: f})
+	}
 	m := float64(e.runs.count) * e.length / 1000
 	if e.joint.BackGouge {
 		m += 5 * e.length / 1000 // grinding the gouge clean wears a disc as five runs do
@@ -173,3 +176,20 @@ func (n *Consumable) spares() {
 // GasPerKilogram gives litres of shielding gas for a kilogram of metal: 60 x flow / rate, for a
 // flow in L/min and a deposition rate in kg/h.
 func GasPerKilogram(flow, rate float64) float64 { return 60 * flow / rate }
+
+// propane is the gas that preheats the seam once: the band's heat over what a torch leaves in the
+// plate, at 46 MJ/kg.
+func (e *seamWork) propane(c Circumstances) (origin.Figure, bool) {
+	rise := e.heatTo.Value - c.Ambient
+	if e.heatTo.Name == "" || rise <= 0 {
+		return origin.Figure{}, false
+	}
+	t := e.thicker().Value
+	kg := bandMass(t, c.Steel.density()) * e.joint.Length
+	kept := origin.House("kept in the plate", 0.3, "", "of the flame's heat")
+	burns := origin.House("heat of propane", 46000, "kJ/kg", "heating value")
+	return origin.Worked("propane", kg*heatHeld*rise/kept.Value/burns.Value, "kg", "band mass x 0.49 x (preheat - ambient) / kept in the plate / heat of propane",
+		origin.Worked("band mass", kg, "kg", "2 x 75 x thickness x density x length / 1000000000", e.thicker(),
+			densityFigure(c.Steel.density()), origin.Written("length", e.joint.Length, "mm", e.joint.Origin)),
+		e.heatTo, origin.Written("ambient", c.Ambient, "C", origin.Origin{Source: "circumstances"}), kept, burns), true
+}

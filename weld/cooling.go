@@ -50,6 +50,8 @@ func (e *seamWork) heating(c Circumstances) error {
 		if e.cooling, err = Cool(e.heat.Value, e.joint.Thickness, from, f2, f3); err != nil {
 			return err
 		}
+		plate := origin.Written("plate temperature", from, "C", origin.Origin{Source: "preheat or ambient"})
+		e.cooling.Why = e.cooling.why(e.heat, plate, e.joint.drawn("thickness", e.joint.Thickness, "mm"), f2, f3)
 	}
 	return nil
 }
@@ -63,24 +65,33 @@ func (e *seamWork) preheating(c Circumstances) (along origin.Figure, ok bool) {
 	if e.heatTo.Name == "" || rise <= 0 {
 		return along, false
 	}
-	t := math.Max(e.joint.Thickness, e.joint.Thickness2)
+	t := e.thicker().Value
 	perMetre := origin.Worked("heating a metre", bandMass(t, c.Steel.density())*1000*heatHeld*rise/burner/60, "min",
 		"band mass x 0.49 x (preheat - ambient) / torch / 60",
 		origin.Worked("band mass", bandMass(t, c.Steel.density())*1000, "kg", "2 x 75 x thickness x density / 1000000",
-			origin.Written("thickness", t, "mm", e.joint.Origin), densityFigure(c.Steel.density())),
+			e.thicker(), densityFigure(c.Steel.density())),
 		e.heatTo, origin.Written("ambient", c.Ambient, "C", origin.Origin{Source: "circumstances"}),
 		origin.House("torch", burner, "kW", "what a preheating torch leaves in the plate"))
 	one := math.Min(1, e.joint.Length/heatedAtOne)
 	first := origin.Written("metres heated first", one, "m", e.joint.Origin)
 	e.setUp = origin.Worked("set-up", ready.Value+perMetre.Value*one, "min", "set-up of the leads + heating a metre x metres heated first",
 		renamed(ready, "set-up of the leads"), perMetre, first)
-	e.soak = origin.Worked("soak", 2*math.Max(1, t/25), "min", "2 x max(1, thickness / 25)", origin.Written("thickness", t, "mm", e.joint.Origin))
+	e.soak = origin.Worked("soak", 2*math.Max(1, t/25), "min", "2 x max(1, thickness / 25)", e.thicker())
 	rest := e.joint.Length/1000 - one
 	if rest <= 0 {
 		return along, false
 	}
 	return origin.Worked("preheat along the seam", perMetre.Value*rest, "min", "heating a metre x metres heated later", perMetre,
 		origin.Written("metres heated later", rest, "m", e.joint.Origin)), true
+}
+
+// thicker is the thicker part of the joint, which preheat goes by.
+func (e *seamWork) thicker() origin.Figure {
+	j := e.joint
+	if j.Thickness2 > j.Thickness {
+		return renamed(j.drawn("second thickness", j.Thickness2, "mm"), "thickness")
+	}
+	return j.drawn("thickness", j.Thickness, "mm")
 }
 
 func renamed(f origin.Figure, name string) origin.Figure {

@@ -50,7 +50,7 @@ const (
 	pierceMin = 0.33  // min: 5 to 30 s each (from memory)
 )
 
-// Speed gives the cutting speed in mm/min as a figure.
+// speed gives the cutting speed in mm/min as a figure.
 //
 // Errors: a *Error for an unknown method, and for plate that the set or torch does not cut: a
 // 40 A plasma set ends at 25 mm (and is slow above about 12), larger sets in proportion to

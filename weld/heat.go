@@ -72,15 +72,18 @@ func Cool(heat, thickness, temperature, f2, f3 float64) (CoolingTime, error) {
 		ThreeD:     three * heat * (a - b) * f3,
 		Transition: math.Sqrt(two / three * 1e5 * heat * (a + b)),
 	}
-	q := origin.Written("heat input", heat, "kJ/mm", origin.Origin{})
-	T := origin.Written("plate temperature", temperature, "C", origin.Origin{})
-	d := origin.Written("thickness", thickness, "mm", origin.Origin{})
-	F2, F3 := origin.Recalled("shape factor F2", f2, "", "EN 1011-2 Annex D"), origin.Recalled("shape factor F3", f3, "", "EN 1011-2 Annex D")
 	c.Seconds = math.Max(c.TwoD, c.ThreeD)
-	c.Why = origin.Worked("t8/5", c.Seconds, "s", "max(2D time, 3D time)",
+	c.Why = c.why(origin.Written("heat input", heat, "kJ/mm", origin.Origin{}), origin.Written("plate temperature", temperature, "C", origin.Origin{}),
+		origin.Written("thickness", thickness, "mm", origin.Origin{}), f2, f3)
+	return c, nil
+}
+
+// why is the tree of the time, from the figures it was made from.
+func (c CoolingTime) why(q, T, d origin.Figure, f2, f3 float64) origin.Figure {
+	F2, F3 := origin.Recalled("shape factor F2", f2, "", "EN 1011-2 Annex D"), origin.Recalled("shape factor F3", f3, "", "EN 1011-2 Annex D")
+	return origin.Worked("t8/5", c.Seconds, "s", "max(2D time, 3D time)",
 		origin.Worked("2D time", c.TwoD, "s", "(4300 - 4.3 x plate temperature) x 100000 x (heat input / thickness)^2 x (1 / (500 - plate temperature)^2 - 1 / (800 - plate temperature)^2) x shape factor F2", T, q, d, F2),
 		origin.Worked("3D time", c.ThreeD, "s", "(6700 - 5 x plate temperature) x heat input x (1 / (500 - plate temperature) - 1 / (800 - plate temperature)) x shape factor F3", T, q, F3))
-	return c, nil
 }
 
 // shapeFactors are F2 and F3 for a joint (from memory of EN 1011-2 Annex D).

@@ -2,6 +2,7 @@ package weld
 
 import (
 	"fmt"
+	"math"
 	"strings"
 
 	"sailby/tasks/origin"
@@ -48,7 +49,8 @@ func (e *seamWork) holding(c Circumstances) {
 	case c.Hold > 0:
 		f = origin.Written("time before NDT", c.Hold, "h", c.Origins["hold"])
 	case strings.HasPrefix(std, "EN1090"):
-		f, _ = HoldBeforeNDT(e.section.Size, e.heat.Value, c.Steel.yield())
+		f, _ = HoldBeforeNDT(e.section.Size, math.Min(math.Max(e.heat.Value, 0.05), 20), c.Steel.yield())
+		f.From = []origin.Figure{origin.Written("size", e.section.Size, "mm", e.joint.Origin), e.heat}
 	case strings.HasPrefix(std, "AWSD1.1") && c.Steel.quenched():
 		f = origin.Recalled("time before NDT", 48, "h", "AWS D1.1: quenched and tempered plate, at least 48 h")
 	}

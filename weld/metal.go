@@ -42,10 +42,15 @@ func (e *seamWork) deposit(c Circumstances) {
 	}
 	e.metal = origin.Worked("weld metal", kg, "kg", expr, from...)
 	e.arcTime()
+	if j.Gap > wideGap {
+		e.warnf("a fit-up gap of %.3g mm is above %.0f mm: ask before welding it up", j.Gap, wideGap)
+	}
 	if strings.HasPrefix(c.Execution, "AWS") && j.Type == Fillet && e.seam.Joint.Thickness > 0 && j.Leg < MinFillet(math.Max(j.Thickness, j.Thickness2))-0.05 {
 		e.warnf("a leg of %.3g mm is below the %.0f mm that AWS D1.1:2020 wants on %.3g mm", j.Leg, MinFillet(math.Max(j.Thickness, j.Thickness2)), math.Max(j.Thickness, j.Thickness2))
 	}
 }
+
+const wideGap = 5.0 // mm a fillet's parts may stand apart (from memory: AWS D1.1)
 
 // arcTime is metal over rate; where a fillet's travel speed is given, length over travel as
 // well, and the longer of both, with a warning where they disagree by more than routesApart.

@@ -56,7 +56,7 @@ func TestRunsByLeg(t *testing.T) {
 			t.Errorf("%v mm: %d runs, want %v", leg, e.Passes, want)
 		}
 	}
-	for thick, want := range map[float64][2]int{6: {2, 2}, 10: {3, 4}, 12: {4, 6}, 16: {6, 8}} {
+	for thick, want := range map[float64][2]int{6: {2, 2}, 10: {3, 4}, 12: {4, 6}, 16: {5, 9}} {
 		e := mustWork(t, Circumstances{}, Seam{Joint: Joint{Type: SingleV, Thickness: thick, Length: 1000}, Procedure: &Procedure{Process: 111}})
 		if e.Passes < want[0] || e.Passes > want[1] {
 			t.Errorf("V %v mm: %d runs, want %v", thick, e.Passes, want)

@@ -75,12 +75,12 @@ func (j Joint) CombinedThickness() float64 {
 
 // preheat decides the preheat: the procedure's governs; else the standard that the job names.
 func (e *seamWork) preheat(c Circumstances) {
-	p, j := e.proc, e.joint
+	p := e.proc
 	std := c.PreheatStandard
 	if std == "" && strings.HasPrefix(c.Execution, "AWS") {
 		std = "AWS D1.1"
 	}
-	thick := math.Max(j.Thickness, j.Thickness2)
+	thick := e.thicker().Value
 	var rule origin.Figure
 	switch strings.ToLower(strings.TrimSpace(std)) {
 	case "":
@@ -139,8 +139,11 @@ func (e *seamWork) preheatB(c Circumstances, thick float64) origin.Figure {
 	if thick < 10 || f.Value < 20 {
 		return origin.Figure{}
 	}
-	f.From[0].From = cet.From
-	f.From[0].Origin = cet.Origin
+	for i, made := range []origin.Figure{cet, e.thicker(), c.Steel.hydrogen(e.data.number), e.heat} {
+		if f.From[i].Value == made.Value { // not brought into the method's range
+			f.From[i] = made
+		}
+	}
 	return f
 }
 
@@ -148,7 +151,7 @@ func (e *seamWork) preheatB(c Circumstances, thick float64) origin.Figure {
 func (e *seamWork) preheatA(c Circumstances) {
 	h := c.Steel.hydrogen(e.data.number).Value
 	e.warnf("EN 1011-2 method A is read from the standard's charts: enter with CE %s, combined thickness %.0f mm, hydrogen scale %s, %.2f kJ/mm, and write the reading as the procedure's preheat; method B stands in where the CET is known",
-		shown(c.Steel.CE().Value), e.joint.CombinedThickness(), HydrogenScale(h), e.heat.Value)
+		shown(c.Steel.CE().Value), e.joint.CombinedThickness(), hydrogenScale(h), e.heat.Value)
 }
 
 func shown(v float64) string {

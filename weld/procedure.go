@@ -134,12 +134,12 @@ func (p Procedure) used(d process, size float64) origin.Figure {
 		return eff
 	}
 	length, stub := p.electrode(size)
-	return StubLoss(eff, length, stub)
+	return stubLoss(eff, length, stub)
 }
 
-// StubLoss corrects a deposition efficiency that leaves stubs out: efficiency x (length - stub)
+// stubLoss corrects a deposition efficiency that leaves stubs out: efficiency x (length - stub)
 // / length (published with its table of 12 to 18 inch electrodes).
-func StubLoss(efficiency, length, stub origin.Figure) origin.Figure {
+func stubLoss(efficiency, length, stub origin.Figure) origin.Figure {
 	return origin.Worked("efficiency with stubs", efficiency.Value*(length.Value-stub.Value)/length.Value, "",
 		"deposition efficiency x (electrode length - stub) / electrode length", efficiency, length, stub)
 }

@@ -166,11 +166,11 @@ func TestAWSLimits(t *testing.T) {
 		{136, PA, Limits{12, 10, 6, 3.2}}, {136, PB, Limits{10, 8, 6, 3.2}}, {135, PF, Limits{12, 12, 6, 2.4}}, {136, PD, Limits{8, 8, 6, 2}},
 		{121, PA, Limits{Fillet: inf, Fill: 6}}, {121, PB, Limits{Fillet: 8, Fill: 6}},
 	} {
-		if got, ok := AWSLimits(c.p, c.pos); !ok || got != c.want {
+		if got, ok := c.p.Limits(c.pos); !ok || got != c.want {
 			t.Errorf("%v %v: %+v, want %+v", c.p, c.pos, got, c.want)
 		}
 	}
-	if _, ok := AWSLimits(121, PE); ok {
+	if _, ok := Process(121).Limits(PE); ok {
 		t.Error("submerged arc overhead has limits")
 	}
 	// Minimum fillet size table (inch form printed): 1/8, 3/16, 1/4, 5/16 in.

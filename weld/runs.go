@@ -16,8 +16,8 @@ type Limits struct {
 	Electrode float64 // electrode or wire diameter, for a fillet
 }
 
-// AWSLimits gives the limits for a process in a position; ok is false where the table has none.
-func AWSLimits(p Process, pos Position) (Limits, bool) {
+// Limits gives the limits of AWS D1.1:2020 Table 5.1 for a process in a position; ok is false where the table has none.
+func (p Process) Limits(pos Position) (Limits, bool) {
 	col := 0
 	switch pos {
 	case PA:
@@ -172,7 +172,7 @@ func (p Procedure) runsFor(j Joint, s Section, d process, pos Position, bead, ho
 
 // ceilings warns where the given bead is above what AWS D1.1 allows, and where the electrode is.
 func ceilings(p Procedure, j Joint, s Section, d process, pos Position, bead origin.Figure, r runs) []string {
-	lim, ok := AWSLimits(d.number, pos)
+	lim, ok := d.number.Limits(pos)
 	if !ok {
 		return nil
 	}

@@ -74,7 +74,10 @@ func (j shape) fillet(overweld bool) Section {
 	z1, z2 := j.Leg+j.Gap+extra, j.Leg2+j.Gap+extra
 	leg := j.drawn("leg drawn", j.Leg, "mm")
 	if leg.Origin.Kind == origin.Formula {
-		leg.From = []origin.Figure{origin.Written("throat", j.Throat, "mm", j.Origin), origin.Written("thickness", j.Thickness, "mm", j.Origin)}
+		leg.From = []origin.Figure{j.drawn("thickness", j.Thickness, "mm")}
+		if j.Throat > 0 {
+			leg.From[0] = origin.Written("throat", j.Throat, "mm", j.Origin)
+		}
 	}
 	a := origin.Worked("leg laid", z1, "mm", "leg drawn + fit-up gap + overweld", leg, gap, over)
 	b := origin.Worked("second leg laid", z2, "mm", "second leg drawn + fit-up gap + overweld", j.drawn("second leg drawn", j.Leg2, "mm"), gap, over)
@@ -137,7 +140,7 @@ func (j shape) butt(pos Position) (Section, error) {
 	}
 	width := gap.Value + open + capWiden
 	body := gap.Value*deep + prep.Value
-	fac := depositFactor(j.Type, pos, deep, j.Angle)
+	fac := j.depositFactor(pos)
 	s := Section{Drawn: body, Width: width, Height: deep + sides*j.Cap, Size: deep, Sides: int(sides)}
 	s.Area = body*fac.Value + sides*2/3*width*j.Cap
 	s.Why = origin.Worked("area laid", s.Area, "mm2", "("+gap.Name+" x depth + faces) x position factor on metal + cap area x sides",

@@ -121,9 +121,9 @@ func (s Steel) hydrogen(p Process) origin.Figure {
 	return origin.House("hydrogen", 10, "ml/100 g", "dry low-hydrogen electrodes or cored wire, top of scale C")
 }
 
-// HydrogenScale gives the scale A to E of EN 1011-2 for ml of diffusible hydrogen in 100 g of
+// hydrogenScale gives the scale A to E of EN 1011-2 for ml of diffusible hydrogen in 100 g of
 // weld metal: A above 15, B to 15, C to 10, D to 5, E to 3 (from memory).
-func HydrogenScale(ml float64) string {
+func hydrogenScale(ml float64) string {
 	switch {
 	case ml > 15:
 		return "A"

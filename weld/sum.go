@@ -48,9 +48,6 @@ func sum(parts []*seamWork, c Circumstances) Estimate {
 	est.SetUp = quantity.HandsOn(w.SetUp.Value)
 	est.SafeStop = quantity.HandsOn(w.SafeStop.Value)
 	est.Cooling, est.BeforeNDT = quantity.Clock(w.Cooling.Value), quantity.Clock(w.BeforeNDT.Value)
-	if est.BeforeNDT > 0 && est.BeforeNDT < est.Cooling {
-		est.BeforeNDT = est.Cooling
-	}
 	for _, e := range parts {
 		est.Interpass += quantity.Clock(e.standBy.Value)
 		est.Soak = max(est.Soak, quantity.Clock(e.soak.Value))

@@ -124,11 +124,11 @@ const (
 	repairLength = 150.0 // mm of a usual repair (house judgement)
 )
 
-// RepairOf gives the repair to allow for after an estimate. The share of the length is published
+// Repair gives the repair to allow for after an estimate. The share of the length is published
 // for structures (survey of 2011: other structures 1.0 %, mild steel 1.5 %); on site 4 %, in
 // bad access 10 % (house judgement, practice 3 to 5 and 10). Submerged arc and TIG need half.
 // The chance is that of a Poisson count of repairs of usual length with that share.
-func RepairOf(e Estimate, c Circumstances, badAccess bool) Repair {
+func (e Estimate) Repair(c Circumstances, badAccess bool) Repair {
 	var length, share, per float64
 	for _, s := range e.Seams {
 		length += s.Length * float64(max(1, s.Section.Sides))

@@ -47,21 +47,25 @@ func (r vRow) deposit(pos Position, angle float64) float64 {
 	case PE, PD:
 		return r.shrink(r.over, 80)
 	}
-	a, b := r.shrink(r.flat50, 50), r.shrink(r.flat60, 60)
-	w := math.Min(math.Max((angle-50)/10, 0), 1)
-	return a + (b-a)*w
+	if angle < 55 {
+		return r.shrink(r.flat50, 50)
+	}
+	return r.shrink(r.flat60, 60)
 }
 
-// depositFactor is deposited over drawn metal: for a single V from the table, straight between
-// its rows and flat beyond; for other grooves 1 flat and 1.05 elsewhere, which the V's rows lie
-// near; for fillets 1.
-func depositFactor(t JointType, pos Position, thick, angle float64) origin.Figure {
+// depositFactor is deposited over drawn metal of a butt. A single V of the table's preparation
+// (no root face, its gap and angle, flush) has the table's, straight between its rows and flat
+// beyond; other grooves have 1 flat and 1.05 elsewhere, which the table's rows lie near.
+func (j shape) depositFactor(pos Position) origin.Figure {
 	const name = "position factor on metal"
+	gap, _, _ := j.usualGap()
+	angle, _, _ := usualAngle(SingleV, pos)
+	same := math.Abs(j.Angle-angle) < 0.01 || angle == 60 && pos != PC && math.Abs(j.Angle-50) < 0.01
 	switch {
-	case t == SingleV:
-		return origin.Published(name, vFactor(pos, thick, angle), "", vSource)
-	case t.groove() && pos != PA && pos != PB:
-		return origin.House(name, 1.05, "", "as for the single V out of the flat position")
+	case j.Type == SingleV && same && j.RootGap == gap && j.RootFace == 0 && j.Gap == 0 && j.Cap == 0 && j.PartialDepth == j.Thickness && !j.Backing:
+		return origin.Published(name, vFactor(pos, j.Thickness, j.Angle), "", vSource)
+	case pos != PA && pos != PB:
+		return origin.House(name, 1.05, "", "as the V table has it near, out of the flat position")
 	}
 	return origin.House(name, 1, "", "drawn metal")
 }
