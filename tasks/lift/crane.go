@@ -86,8 +86,8 @@ func (c CraneLift) rows() ([]ChartRow, error) {
 	}
 	if err := checkAll(check{"the radius", c.Radius, tiny, 1e6, "mm"}, check{"the hook height", c.HookAt, 0, 1e6, "mm"},
 		check{"the lifting point's height", c.Raise, 0, 1e6, "mm"}, check{"the slings' height", c.Rigging, 0, 1e6, "mm"},
-		check{"the boom's clearance", c.BoomClear, 0, 1e6, "mm"}, check{"the pad", c.Pad, 0, 1000, "m2"},
-		check{"the outrigger load", c.PadLoad, 0, maxMass, "kg"}, check{"what the ground may carry", c.Ground, 0, 1e5, "kN/m2"}); err != nil {
+		check{"the boom's clearance", c.BoomClear, 0, 1e6, "mm"}, optional("the pad", c.Pad, 1e-4, 1000, "m2"),
+		check{"the outrigger load", c.PadLoad, 0, maxMass, "kg"}, optional("what the ground may carry", c.Ground, 0.01, 1e5, "kN/m2")); err != nil {
 		return nil, err
 	}
 	rows := append([]ChartRow(nil), c.Chart...)

@@ -13,7 +13,7 @@ func Bearing(l Load, area, capacity float64) (Result, error) {
 	if err := l.valid(); err != nil {
 		return Result{}, err
 	}
-	if err := checkAll(check{"the area under it", area, 1e-6, 1e5, "m2"}, check{"what the floor may carry", capacity, 0, 1e5, "kN/m2"}); err != nil {
+	if err := checkAll(check{"the area under it", area, 1e-6, 1e5, "m2"}, optional("what the floor may carry", capacity, 0.01, 1e5, "kN/m2")); err != nil {
 		return Result{}, err
 	}
 	heavy := l.Heavy()

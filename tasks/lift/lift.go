@@ -79,6 +79,14 @@ type check struct {
 	unit      string
 }
 
+// optional is a check of a number that may be left out as 0, and is within low and high otherwise.
+func optional(what string, v, low, high float64, unit string) check {
+	if v == 0 {
+		low = 0
+	}
+	return check{what, v, low, high, unit}
+}
+
 func checkAll(list ...check) error {
 	for _, c := range list {
 		if err := ranged(c.what, c.v, c.low, c.high, c.unit); err != nil {

@@ -100,7 +100,7 @@ func checkBed(goods []Goods, v Vehicle, t Trip, add func(string, ...any)) {
 // checkTrains judges each vehicle with its trailers.
 func checkTrains(vehicles []Vehicle, mass map[[2]int]float64, add func(string, ...any)) {
 	for i, v := range vehicles {
-		if v.Train == 0 {
+		if v.Train == 0 || v.TowedBy != "" { // the train weight is the puller's
 			continue
 		}
 		for n := 1; n <= maxTrips; n++ {

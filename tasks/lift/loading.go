@@ -158,7 +158,7 @@ func validLoads(goods []Goods, vehicles []Vehicle) error {
 			check{"the empty mass" + n, v.Empty, 0, maxMass, "kg"}, check{"the crew" + n, float64(v.Crew), 0, 50, "people"}, check{"the fuel" + n, v.Fuel, 0, 5000, "L"},
 			check{"the standing tools" + n, v.Standing, 0, maxMass, "kg"}, check{"the bed's length" + n, v.Length, 1, 1e5, "mm"}, check{"the bed's width" + n, v.Width, 1, 1e5, "mm"},
 			check{"the bed's height" + n, v.Height, 0, 1e5, "mm"}, check{"the overhang" + n, v.Overhang, 0, 1e4, "mm"}, check{"the trips" + n, float64(v.Trips), 0, maxTrips, ""},
-			check{"the train weight" + n, v.Train, 0, maxMass, "kg"}, check{"the axle" + n, v.Axle, 0, 1e5, "mm"}, check{"the hitch" + n, v.Hitch, 0, 1e5, "mm"},
+			check{"the train weight" + n, v.Train, 0, maxMass, "kg"}, optional("the axle"+n, v.Axle, 1, 1e5, "mm"), check{"the hitch" + n, v.Hitch, 0, 1e5, "mm"},
 			check{"the least nose weight" + n, v.NoseLeast, 0, maxMass, "kg"}, check{"the greatest nose weight" + n, v.NoseGreatest, 0, maxMass, "kg"}); err != nil {
 			return err
 		}
@@ -170,7 +170,14 @@ func validLoads(goods []Goods, vehicles []Vehicle) error {
 		}
 		names[v.Name] = true
 	}
+	towed := map[string]bool{}
 	for _, v := range vehicles {
+		towed[v.Name] = v.TowedBy != ""
+	}
+	for _, v := range vehicles {
+		if v.TowedBy != "" && towed[v.TowedBy] && v.TowedBy != v.Name {
+			return fault("name the vehicle in front", "the trailer %q is pulled by the trailer %q", v.Name, v.TowedBy)
+		}
 		if v.TowedBy != "" && !names[v.TowedBy] {
 			return fault("list the vehicle that pulls it", "the trailer %q is pulled by %q, which is not listed", v.Name, v.TowedBy)
 		}

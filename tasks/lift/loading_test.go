@@ -119,7 +119,8 @@ func TestLoadFaults(t *testing.T) {
 	}{
 		{nil, []Vehicle{van}, "0 things"}, {g, nil, "0 vehicles"}, {[]Goods{{Mass: math.NaN()}}, []Vehicle{van}, "not a number"}, {[]Goods{{Mass: 1, Length: -1}}, []Vehicle{van}, "outside"},
 		{g, []Vehicle{{Name: "x", Length: 1, Width: 1}}, "no payload"}, {g, []Vehicle{van, van}, "two vehicles"}, {g, []Vehicle{{Name: "t", Payload: 1, Length: 1, Width: 1, TowedBy: "y"}}, "not listed"},
-		{g, []Vehicle{{Name: "t", Payload: 1, Length: 1, Width: 1, TowedBy: "t"}}, "pulls itself"}, {make([]Goods, 401), []Vehicle{van}, "401 things"},
+		{g, []Vehicle{{Name: "t", Payload: 1, Length: 1, Width: 1, TowedBy: "t"}}, "pulls itself"},
+		{g, []Vehicle{van, {Name: "t", Payload: 1, Length: 1, Width: 1, TowedBy: "van"}, {Name: "u", Payload: 1, Length: 1, Width: 1, TowedBy: "t"}}, "pulled by the trailer"}, {make([]Goods, 401), []Vehicle{van}, "401 things"},
 	} {
 		if p, err := LoadVehicles(c.goods, c.vehicles); err == nil || !strings.Contains(err.Error(), c.want) || quantity.Hint(err) == "" || p.OK {
 			t.Errorf("%s: %v", c.want, err)

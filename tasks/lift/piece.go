@@ -86,7 +86,7 @@ func (p Part) bar(density origin.Figure) (piece, error) {
 	}
 	m := s.LineMass * p.Length / 1000
 	how := "kg/m x length"
-	from := []origin.Figure{s.Figure, p.written("length", p.Length, "mm")}
+	from := []origin.Figure{s.figure(s.LineMass, "kg/m"), p.written("length", p.Length, "mm")}
 	if density.Value != steelDensity {
 		m *= density.Value / steelDensity
 		how += " x density / 7850"
@@ -107,7 +107,7 @@ func (p Part) plate(density origin.Figure) (piece, error) {
 	if s.Section.AreaMass > 0 { // a floor plate, or a plate by name
 		t = s.Section.High
 		perArea = s.Section.AreaMass * density.Value / steelDensity
-		from = append(from, s.Section.Figure)
+		from = append(from, s.Section.figure(s.Section.AreaMass, "kg/m2"))
 	} else {
 		from = append(from, p.written("thickness", t, "mm"))
 	}

@@ -25,10 +25,22 @@ type Section struct {
 
 const steelDensity = 7850.0 // kg/m3, steel section tables, general notes
 
+// figure gives the section's own figure, or one made of v where a caller gave numbers alone.
+func (s Section) figure(v float64, unit string) origin.Figure {
+	if s.Figure.Name == "" {
+		return given("mass of section "+s.Name, v, unit)
+	}
+	return s.Figure
+}
+
 // lineMass turns an area in mm2 into kg/m of steel.
 func lineMass(area float64) float64 { return area * 1e-6 * steelDensity }
 
+// given is a figure that comes from the caller.
 func given(name string, v float64, unit string) origin.Figure {
+	if name == "" {
+		name = "unnamed"
+	}
 	return origin.Figure{Name: name, Value: v, Unit: unit, Origin: origin.Origin{Kind: origin.Given}}
 }
 

@@ -98,7 +98,7 @@ const (
 func Times(m Move) (Estimate, error) {
 	if err := checkAll(check{"the mass to move", m.Mass, tiny, maxMass, "kg"}, check{"the height", m.Height, 0, 1e6, "mm"},
 		check{"the travel", m.Travel, 0, maxLength, "mm"}, check{"the people", float64(m.People), 0, 20, "people"},
-		check{"the hoist's speed", m.Speed, 0, 1e6, "mm/min"}); err != nil {
+		optional("the hoist's speed", m.Speed, 1, 1e6, "mm/min")); err != nil {
 		return Estimate{}, err
 	}
 	h, ok := handlings[m.By]
