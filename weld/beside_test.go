@@ -87,7 +87,7 @@ func TestPrepare(t *testing.T) {
 	}
 }
 
-// TestTests: penetrant doubles its dwell from 5 to 10 C (inspection manual) and is refused in the
+// TestTests: penetrant doubles its dwell from 5 to 10 C (T.O. 33B-1-1) and is refused in the
 // cold; hose at least 0.2 MPa (class rules); air with limits (common practice, 0.15 bar).
 func TestTests(t *testing.T) {
 	for _, c := range []struct {
@@ -122,7 +122,7 @@ func TestTests(t *testing.T) {
 	}
 }
 
-// TestRepair: expected length is the share of the survey (1.5 %) or the site's 4 and 10 %, and
+// TestRepair: expected length is the share of the TWI survey 2011 (1.5 %) or the site's 4 and 10 %, and
 // takes four times the first welding a metre.
 func TestRepair(t *testing.T) {
 	s := Seam{Joint: Joint{Type: SingleV, Thickness: 16, Length: 10000}}

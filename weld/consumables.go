@@ -51,7 +51,7 @@ func (e *seamWork) flow(c Circumstances) origin.Figure {
 		return e.proc.given("gas flow", e.proc.GasFlow, "L/min")
 	}
 	v := e.data.flow
-	src := "filler metal handbook p. 8-7: 25 to 30 cfh solid wire, 35 cfh cored wire to 1.6 mm"
+	src := "ESAB Filler Metal Handbook p. 8-7: 25 to 30 cfh solid wire, 35 cfh cored wire to 1.6 mm"
 	if e.data.number == 136 && e.size.Value >= 2 {
 		v = 20
 	}
@@ -174,7 +174,7 @@ func (n *Consumable) spares() {
 }
 
 // GasPerKilogram gives litres of shielding gas for a kilogram of metal: 60 x flow / rate, for a
-// flow in L/min and a deposition rate in kg/h.
+// flow in L/min and a deposition rate in kg/h. Special case: a rate of 0 gives +Inf.
 func GasPerKilogram(flow, rate float64) float64 { return 60 * flow / rate }
 
 // propane is the gas that preheats the seam once: the band's heat over what a torch leaves in the

@@ -38,7 +38,7 @@ var plasma40 = []struct{ thick, most, clean float64 }{
 	{12, 450, 310}, {15, 280, 180}, {20, 110, 70}, {25, 60, 50},
 }
 
-// oxyFuel is hand cutting, low ends of the ranges, mm/min (from memory: welding handbook).
+// oxyFuel is hand cutting, low ends of the ranges, mm/min (from memory: AWS Welding Handbook).
 var oxyFuel = []struct{ thick, speed float64 }{
 	{6, 400}, {10, 380}, {12, 300}, {20, 300}, {25, 230}, {38, 150}, {50, 150}, {75, 100}, {100, 100},
 }
@@ -70,7 +70,7 @@ func (c Cut) speed() (origin.Figure, []string, error) {
 		if way > 100 {
 			return origin.Figure{}, nil, fault("thickness", "give the speed of your own torch, or cut by other means", "oxy-fuel speeds here end at 100 mm, the cut goes through %.4g mm", way)
 		}
-		f := origin.Recalled("cutting speed", between(way, len(oxyFuel), func(i int) (float64, float64) { return oxyFuel[i].thick, oxyFuel[i].speed }), "mm/min", "hand oxy-fuel cutting, low end, welding handbook")
+		f := origin.Recalled("cutting speed", between(way, len(oxyFuel), func(i int) (float64, float64) { return oxyFuel[i].thick, oxyFuel[i].speed }), "mm/min", "hand oxy-fuel cutting, low end, AWS Welding Handbook")
 		f.From = []origin.Figure{through}
 		return c.given(f), nil, nil
 	case "disc":

@@ -18,7 +18,7 @@ type curve struct {
 	points  []point
 }
 
-const depositionMemory = "deposition tables of the filler metal handbooks, lb/h converted"
+const depositionMemory = "ESAB filler metal deposition tables, lb/h converted"
 
 // curves from memory but for 111 4.8 mm 250 A and 136 1.6 mm 300 A, which are published in a
 // cost worksheet (5.4 and 10.2 lb/h).
@@ -134,7 +134,7 @@ func (p Procedure) rate(d process, pos Position, density float64) (origin.Figure
 	v := c.at(amps.Value)
 	read := origin.Recalled("rate from the table", v, "kg/h", fmt.Sprintf("%s, %s %.3g mm", depositionMemory, d.number, c.size))
 	if d.number == 111 && c.size == 4.8 && amps.Value == 250 || d.number == 136 && c.size == 1.6 && amps.Value == 300 {
-		read.Origin = origin.Origin{Kind: origin.Table, Source: "filler metal handbook, cost worksheet p. 8"}
+		read.Origin = origin.Origin{Kind: origin.Table, Source: "ESAB Filler Metal Handbook, cost worksheet p. 8"}
 	}
 	read.From = []origin.Figure{amps, size}
 	if p.Current > 0 {
@@ -158,7 +158,7 @@ func (p Procedure) fed(d process, size origin.Figure, density float64) origin.Fi
 }
 
 // WireMetres gives how many metres of solid wire of a diameter in mm weigh a kilogram, at a
-// density in kg/m3 (0 is steel).
+// density in kg/m3 (0 is steel). Special case: a diameter of 0 gives +Inf.
 func WireMetres(diameter, density float64) float64 {
 	if density == 0 {
 		density = steelDensity

@@ -43,7 +43,7 @@
 //
 // # Sources
 //
-// Figures marked as published are from TWI job knowledge sheets, makers' filler metal handbooks
-// and lessons, AWS D1.1, EN 1011-1 and 1011-2, EN 1090-2, IEC 60974-1 and the papers named with
+// Figures marked as published are from TWI Job Knowledge, ESAB and CIGWELD handbooks and lessons,
+// AWS D1.1, EN 1011-1 and 1011-2, EN 1090-2, IEC 60974-1 and the papers named with
 // them. Figures from memory and of house judgement are defaults: every one can be given.
 package weld

@@ -212,3 +212,23 @@ func TestErrorsShowAWayOut(t *testing.T) {
 		t.Error("no seams gave an estimate")
 	}
 }
+
+func ExampleSiteDay() {
+	for _, p := range []Process{111, 136} {
+		six, _ := SiteDay(p, 6)
+		eight, _ := SiteDay(p, 8)
+		fmt.Printf("%v: %.1f m of 6 mm or %.1f m of 8 mm fillet\n", p, six.Value, eight.Value)
+	}
+	// Output:
+	// 111 stick: 7.5 m of 6 mm or 5.2 m of 8 mm fillet
+	// 136 flux-cored: 7.6 m of 6 mm or 5.8 m of 8 mm fillet
+}
+
+func ExampleJoint_Section() {
+	s, _ := Joint{Type: SingleV, Thickness: 12, RootGap: 3, RootFace: 2, Angle: 60, Length: 1000}.Section(PA, true)
+	fmt.Printf("drawn %.0f mm2, laid %.0f mm2, %.2f kg/m, face %.1f mm wide\n", s.Drawn, s.Area, Metal(s.Area, 1000, 0), s.Width)
+	fmt.Println(s.Why.Origin.Source)
+	// Output:
+	// drawn 94 mm2, laid 111 mm2, 0.87 kg/m, face 17.5 mm wide
+	// (root gap x depth + faces) x position factor on metal + cap area x sides
+}

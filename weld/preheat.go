@@ -14,7 +14,8 @@ const preheatB = "697 x CET + 160 x tanh(thickness / 35) + 62 x hydrogen^0.35 + 
 // PreheatB gives the preheat of EN 1011-2 method B in C for CET in percent, thickness in mm,
 // hydrogen in ml/100 g and heat input in kJ/mm. Below 0 nothing is wanted. in is false outside
 // the method's range: CET 0.2 to 0.5, 10 to 90 mm, 1 to 20 ml/100 g, 0.5 to 4.0 kJ/mm; the value
-// is then the formula's at the nearest end and proves nothing.
+// is then the formula's at the nearest end and proves nothing. Where the weld metal's CET plus
+// 0.03 is above the plate's, that is the CET to give (SSAB Welding Handbook p. 23).
 func PreheatB(cet, thickness, hydrogen, heat float64) (f origin.Figure, in bool) {
 	in = true
 	clip := func(name string, v, lo, hi float64, unit string) origin.Figure {

@@ -138,7 +138,7 @@ func (p Procedure) used(d process, size float64) origin.Figure {
 }
 
 // stubLoss corrects a deposition efficiency that leaves stubs out: efficiency x (length - stub)
-// / length (published with its table of 12 to 18 inch electrodes).
+// / length (ESAB AWTC Lesson 9, figure 5).
 func stubLoss(efficiency, length, stub origin.Figure) origin.Figure {
 	return origin.Worked("efficiency with stubs", efficiency.Value*(length.Value-stub.Value)/length.Value, "",
 		"deposition efficiency x (electrode length - stub) / electrode length", efficiency, length, stub)

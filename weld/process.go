@@ -22,7 +22,7 @@ type process struct {
 const (
 	en1011    = "EN 1011-1 Table 1"
 	houseOF   = "arc over hands-on welding time; holds slag, electrode changes, moving along, looking; never fit-up, tacks, preheat, gouging, moving leads or staging"
-	handbook  = "deposition efficiency, filler metal handbook p. 8-3 (row label from memory)"
+	handbook  = "ESAB Filler Metal Handbook p. 8-3 (row label from memory)"
 	tungstenK = 0.6
 )
 

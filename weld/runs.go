@@ -146,7 +146,7 @@ func (p Procedure) runsFor(j Joint, s Section, d process, pos Position, bead, ho
 		r.count, r.area = s.Sides, each
 		most := origin.House("largest leg in one run", singleLeg(d.number, pos), "mm", d.name+" in "+pos.String())
 		if pos == PB {
-			most.Origin = origin.Origin{Kind: origin.Table, Source: "steel interchange: 8 mm (5/16 in) is the largest usual single-run horizontal fillet"}
+			most.Origin = origin.Origin{Kind: origin.Table, Source: "AISC Steel Interchange: 8 mm (5/16 in) is the largest usual single-run horizontal fillet"}
 		}
 		r.why = origin.Worked("runs", n, "", "sides", sides, most)
 	case legs && p.Travel > 0 && p.BeadArea == 0: // the leg drawn must come out; a tenth short is within the hand

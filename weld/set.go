@@ -40,7 +40,7 @@ func (s Set) Share(current float64) float64 {
 }
 
 // CurrentAt gives the current that the set holds for a share of ten minutes: rated current x
-// the root of rated share over share.
+// the root of rated share over share. Special case: a share of 0 gives +Inf.
 func (s Set) CurrentAt(share float64) float64 {
 	return s.RatedCurrent * math.Sqrt(s.DutyCycle/share)
 }

@@ -45,7 +45,7 @@ func (s Steel) density() float64 {
 
 func densityFigure(v float64) origin.Figure {
 	if v == steelDensity {
-		return origin.Published("density", v, "kg/m3", "weld volume and weight notes: 7.85 g/cm3 for steel")
+		return origin.Published("density", v, "kg/m3", "TWI Job Knowledge 95: 7.85 g/cm3 for steel")
 	}
 	return origin.Written("density", v, "kg/m3", origin.Origin{Source: "steel"})
 }

@@ -71,7 +71,7 @@ func (t Test) Work() (Labour, error) {
 		}
 		cold := origin.House("cold factor", 1, "", "doubled from 5 to 10 C")
 		if t.Temperature < penetrantCool {
-			cold = origin.Published("cold factor", 2, "", "inspection manual: double the dwell from about 4 to 15 C")
+			cold = origin.Published("cold factor", 2, "", "T.O. 33B-1-1: double the dwell from about 4 to 15 C")
 		}
 		wait = origin.Worked("dwell", 20*cold.Value, "min", "(penetrant + developer) x cold factor",
 			origin.Published("penetrant", 10, "min", "ASME V: at least 10 min"), origin.Published("developer", 10, "min", "10 to 30 min"), cold)
@@ -125,7 +125,7 @@ const (
 )
 
 // Repair gives the repair to allow for after an estimate. The share of the length is published
-// for structures (survey of 2011: other structures 1.0 %, mild steel 1.5 %); on site 4 %, in
+// for structures (TWI survey 2011: other structures 1.0 %, mild steel 1.5 %); on site 4 %, in
 // bad access 10 % (house judgement, practice 3 to 5 and 10). Submerged arc and TIG need half.
 // The chance is that of a Poisson count of repairs of usual length with that share.
 func (e Estimate) Repair(c Circumstances, badAccess bool) Repair {
@@ -137,7 +137,7 @@ func (e Estimate) Repair(c Circumstances, badAccess bool) Repair {
 	if length <= 0 {
 		return Repair{}
 	}
-	rate := origin.Published("repair share", 0.015, "", "survey of repair rates 2011: mild steel, other structures, by length")
+	rate := origin.Published("repair share", 0.015, "", "TWI survey of repair rates 2011: mild steel, other structures, by length")
 	switch {
 	case badAccess:
 		rate = origin.House("repair share", 0.10, "", "bad access: 10 % of the length")

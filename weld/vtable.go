@@ -8,9 +8,9 @@ import (
 )
 
 // The single V as really deposited, kilograms a metre without cap, by thickness and position,
-// transverse shrinkage included: electrode consumption table of a maker's handbook for butt
-// joints. Rows whose printed cells are misprints (5 mm in PF, 14 mm in PC) are left out.
-const vSource = "electrode consumption table, V joints (deposited metal by position, shrinkage included)"
+// transverse shrinkage included: ESAB electrode consumption table for butt joints. Rows whose
+// printed cells are misprints (5 mm in PF, 14 mm in PC) are left out.
+const vSource = "ESAB electrode consumption table, V joints (deposited metal by position, shrinkage included)"
 
 type vRow struct {
 	thick, gap                   float64
