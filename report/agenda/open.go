@@ -4,6 +4,7 @@ import (
 	"cmp"
 	"slices"
 
+	"sailby/plan"
 	"sailby/report/clean"
 	"sailby/tasks"
 	"sailby/tasks/expand"
@@ -120,50 +121,47 @@ func Sun(s *Shift) (rise, set string, ok bool) {
 	return Clock(hours.Minute(d.Rise), s.Zone), Clock(hours.Minute(d.Set), s.Zone), true
 }
 
-// Spare lists steps that could be worked in the shift if it has to stop: planned for later, at
-// the same place, by a ticket of somebody in the shift, with everything that comes before them
-// finished before the shift begins. At most max are given, the earliest planned first.
-func Spare(w *expand.Work, plan []Entry, s *Shift, max int) []*expand.Step {
-	done := map[int]hours.Minute{}
-	start := map[int]hours.Minute{}
-	for _, e := range plan {
-		if e.Watch {
-			continue
-		}
-		done[e.Step.Index] = e.Planned.Finish
-		start[e.Step.Index] = e.Planned.Start
-	}
-	var out []*expand.Step
-	for _, st := range w.Steps {
-		at, planned := start[st.Index]
-		if !planned || at < s.To || st.Class != expand.Hands || !slices.Contains(s.placesOf(), st.Place) ||
-			st.NotBefore > s.From || hiredOnly(st) || !s.canDo(w.Job, st) || !ready(w, st, done, s.From, 0) {
-			continue
-		}
-		out = append(out, st)
-	}
-	slices.SortStableFunc(out, func(x, y *expand.Step) int { return cmp.Compare(start[x.Index], start[y.Index]) })
-	return out[:min(len(out), max)]
+// Ready is a step that could be worked in a shift before its time, from a moment on.
+type Ready struct {
+	Step *expand.Step
+	From hours.Minute
 }
 
-// ready says whether all that the step waits for is finished, its waits passed, at moment t.
-func ready(w *expand.Work, s *expand.Step, done map[int]hours.Minute, t hours.Minute, depth int) bool {
-	for _, l := range w.Links {
-		if l.To != s || l.From == nil {
+// Spare lists steps that could be worked in the shift if it has to stop: planned for later, at
+// the shift's places, with tickets that people in the shift hold, and with all that they wait for
+// finished, by the plan, an hour before the shift ends. At most that many are given, those ready first
+// at the front. Reach and states are not asked: people on the spot see them.
+func Spare(a *plan.Answer, s *Shift, most int) []Ready {
+	w := a.Work
+	var out []Ready
+	for i, st := range w.Steps {
+		if i >= len(a.Plan.Steps) {
+			break
+		}
+		if st.Absent || st.Class != expand.Hands || a.Plan.Steps[i].Start < s.To || !slices.Contains(s.placesOf(), st.Place) ||
+			hiredOnly(st) || !s.canDo(w.Job, st) {
 			continue
 		}
-		if l.From.Absent || l.From.Class != expand.Hands { // look through it
-			if depth > len(w.Steps) || !ready(w, l.From, done, t-hours.Minute(max(l.From.Minutes(), 0)), depth+1) || l.From.Class == expand.Cure && !l.From.Absent {
-				return false
+		from := max(s.From, st.NotBefore)
+		for _, l := range w.Links {
+			if l.To != st || l.From == nil || l.From.Index >= len(a.Plan.Steps) {
+				continue
 			}
-			continue
+			at := a.Plan.Steps[l.From.Index].Finish
+			if l.FromEnd == tasks.Start {
+				at = a.Plan.Steps[l.From.Index].Start
+			}
+			if l.Min > 0 {
+				at += hours.Minute(l.Min)
+			}
+			from = max(from, at)
 		}
-		at, ok := done[l.From.Index]
-		if !ok || at+hours.Minute(max(l.Min, 0)) > t {
-			return false
+		if from+60 <= s.To {
+			out = append(out, Ready{st, from})
 		}
 	}
-	return true
+	slices.SortStableFunc(out, func(x, y Ready) int { return cmp.Compare(x.From, y.From) })
+	return out[:min(len(out), most)]
 }
 
 func hiredOnly(s *expand.Step) bool {
@@ -173,7 +171,6 @@ func hiredOnly(s *expand.Step) bool {
 // canDo says whether for each need of the step somebody in the shift has the ticket by name.
 func (s *Shift) canDo(job *tasks.Job, st *expand.Step) bool {
 	for _, n := range st.Needs {
-		n := n
 		if !slices.ContainsFunc(s.People, func(p Person) bool { return holds(job, p.Name, n) }) {
 			return false
 		}

@@ -19,7 +19,7 @@ type Entry struct {
 	Row         plan.Row
 	People      []string
 	Watch       bool // a fire watch after the step's work
-	Piece       int  // from 0
+	Piece       int  // from 0, watches counted apart
 	Last        bool // the last piece of the step
 	From0, Goes bool // the step began in an earlier shift; it goes on in a later one
 }
@@ -109,8 +109,8 @@ func Worked(a *plan.Answer) []Entry {
 			}
 			out = append(out, Entry{Span: piece, Step: s, Planned: ps, Row: row, People: team, Piece: k, Last: k == len(ps.Pieces)-1})
 		}
-		for _, wt := range ps.Watches {
-			out = append(out, Entry{Span: wt.Span, Step: s, Planned: ps, Row: row, People: []string{wt.Person}, Watch: true, Last: true})
+		for k, wt := range ps.Watches {
+			out = append(out, Entry{Span: wt.Span, Step: s, Planned: ps, Row: row, People: []string{wt.Person}, Watch: true, Piece: k, Last: true})
 		}
 	}
 	return out

@@ -86,7 +86,7 @@ func lineHeight(size float64) float64 { return leading * size * mmPerPoint }
 func wrapText(s string, size float64, bold bool, w float64) []string {
 	var out []string
 	line := ""
-	for _, word := range strings.Fields(paper(s)) {
+	for _, word := range clean.Words(paper(s)) {
 		if line != "" && width(line+" "+word, size, bold) > w {
 			out = append(out, line)
 			line = ""

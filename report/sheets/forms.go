@@ -139,7 +139,7 @@ func (k *pack) coatBlock(s *expand.Step) {
 	if n <= len(s.Task.Coats) {
 		name = s.Task.Coats[n-1]
 	}
-	p.heading(agenda.StepLabel(k.work, s), 95)
+	p.heading(agenda.StepLabel(k.work, s), 105)
 	p.para(joined("; ", agenda.Where(s), k.span(s), "planned: "+strings.Join(names(k.planned(s).People), ", "), agenda.Amount(s), prefixed("surface ", s.Task.Grade)), body, false)
 	film := ""
 	for _, q := range k.job.Paints {
@@ -160,10 +160,9 @@ func (k *pack) coatBlock(s *expand.Step) {
 			p.para(upper(f.Name)+" "+f.Amount()+".", body, false)
 		}
 	}
-	p.fields(4, field{label: "Paint", value: name}, field{label: "Base, batch no."}, field{label: "Hardener, batch no."}, field{label: "Thinner, %"},
-		field{label: "Air °C"}, field{label: "Humidity %"}, field{label: "Dew point °C"}, field{label: "Steel °C"},
-		field{label: "Second reading, air °C"}, field{label: "Humidity %"}, field{label: "Dew point °C"}, field{label: "Steel °C"},
-		field{label: "Cleanliness, profile"}, field{label: "Hours since cleaning"}, field{label: "Mixed at"}, field{label: "Stripe coat"},
-		field{label: "Started"}, field{label: "Finished"}, field{label: "Hours since last coat"}, field{label: "Wet film, um"},
-		field{label: "Dry film wanted", value: film}, field{label: "Dry film, least"}, field{label: "Dry film, mean"}, field{label: "Painter, signature"})
+	p.fields(5, field{label: "Paint", value: name}, field{label: "Base batch"}, field{label: "Hardener batch"}, field{label: "Thinner %"}, field{label: "Mixed at"},
+		field{label: "First read at"}, field{label: "Air °C"}, field{label: "Humidity %"}, field{label: "Dew point °C"}, field{label: "Steel °C"},
+		field{label: "Then read at"}, field{label: "Air °C"}, field{label: "Humidity %"}, field{label: "Dew point °C"}, field{label: "Steel °C"},
+		field{label: "Grade and profile"}, field{label: "Since cleaning, h"}, field{label: "Since last coat, h"}, field{label: "Started"}, field{label: "Finished"},
+		field{label: "Wet film, um"}, field{label: "Dry film wanted", value: film}, field{label: "Dry film, least"}, field{label: "Dry film, mean"}, field{label: "Painter signs"})
 }

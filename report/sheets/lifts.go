@@ -2,6 +2,7 @@ package sheets
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 
 	"sailby/report/agenda"
@@ -56,7 +57,8 @@ func (k *pack) liftFacts(s *expand.Step) {
 	type fact struct{ what, value, from string }
 	var facts []fact
 	add := func(what, value, from string) {
-		if value != "" {
+		known := slices.ContainsFunc(facts, func(f fact) bool { return f.what == what && f.value == value })
+		if value != "" && !known {
 			facts = append(facts, fact{what, value, from})
 		}
 	}

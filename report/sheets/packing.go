@@ -20,7 +20,7 @@ type thing struct {
 	forWhat []string
 	day     hours.Minute // first needed
 	mass    float64      // kg, 0 is not known
-	stops   string       // why the job stops without it; "" if it does not
+	stops   bool         // the job stops without it
 }
 
 // packing lists what the site work needs, merged over the tasks, with boxes for out and back.
@@ -37,8 +37,8 @@ func (k *pack) packing() {
 	mass := 0.0
 	for _, th := range things {
 		c := loud(th.what, "for "+strings.Join(th.forWhat, ", "))
-		if th.stops != "" {
-			c.lines = append(c.lines, line{"Job stops without it: " + th.stops + ".", true})
+		if th.stops {
+			c.lines = append(c.lines, line{"Job stops without it.", true})
 		}
 		amount := say(th.amount)
 		if th.mass > 0 {
@@ -91,9 +91,7 @@ func (th *thing) with(k *pack, s *expand.Step) {
 	if start := k.planned(s).Start; th.day == 0 || start < th.day {
 		th.day = start
 	}
-	if k.chain(s) && th.stops == "" {
-		th.stops = "it is on the chain that sets the finish"
-	}
+	th.stops = th.stops || k.chain(s)
 }
 
 // gear is the kit that goes along.
@@ -122,9 +120,7 @@ func (k *pack) gear() []thing {
 		if len(th.forWhat) == 0 {
 			continue
 		}
-		if kit.Count <= 1 && th.stops == "" {
-			th.stops = "there is only one"
-		}
+		th.stops = th.stops || kit.Count <= 1
 		out = append(out, th)
 	}
 	return out

@@ -22,10 +22,11 @@ func (k *pack) shift(s *agenda.Shift) {
 	p.begin(joined(", ", day, agenda.DayOf(k.work, s)), "shift "+s.Date.String(), true)
 	p.big(day)
 	p.para(joined(", ", agenda.PlaceLabel(s.Place), agenda.DayOf(k.work, s), agenda.Between(s.Span, s.Zone)), strong, true)
-	p.para(agenda.Facts(k.work, s)+".", body, false)
+	p.para(upper(agenda.Facts(k.work, s))+".", body, false)
 	k.running(s)
 	steps := stepsOf(s.Entries)
 	k.dayStrip(s, steps)
+	k.begun(s)
 	k.dayTasks(s, steps)
 	k.stopped(s, steps)
 	if list := cautionsOf(k.work, steps); len(list) > 0 {
@@ -34,7 +35,6 @@ func (k *pack) shift(s *agenda.Shift) {
 			p.point("-", c.short, false)
 		}
 	}
-	k.begun(s)
 	k.closing()
 }
 
@@ -61,7 +61,7 @@ func (k *pack) dayStrip(s *agenda.Shift, steps []*expand.Step) {
 	}
 	k.p.skip(2)
 	k.p.strip(s.Span, s.Zone, lanes)
-	legend := "Grey: there or on shift. Numbers: the tasks below."
+	legend := "Grey: there or on shift. Numbers: the tasks below. At the latest: done by then, or a deadline falls."
 	if slices.ContainsFunc(s.Entries, func(e agenda.Entry) bool { return e.Watch }) {
 		legend += " w: fire watch after that task."
 	}
@@ -88,67 +88,68 @@ func (k *pack) dayTasks(s *agenda.Shift, steps []*expand.Step) {
 // taskCell says what the task is, where, who, how much of what, and by when.
 func (k *pack) taskCell(s *agenda.Shift, st *expand.Step) cell {
 	c := loud(agenda.StepLabel(k.work, st))
-	add := func(bold bool, parts ...string) {
-		if text := strings.Join(parts, ""); text != "" {
+	add := func(bold bool, text string) {
+		if text != "" {
 			c.lines = append(c.lines, line{text, bold})
 		}
 	}
-	add(false, agenda.Where(st))
 	ps := k.planned(st)
-	add(false, strings.Join(names(ps.People, ps.Relief), ", "))
-	add(false, agenda.Amount(st))
-	add(false, prefixed("drawing ", st.Task.Drawing))
-	add(false, prefixed("with ", kitWords(st)))
+	add(false, joined(": ", where(s, st), strings.Join(names(ps.People, ps.Relief), ", ")))
+	add(false, joined("; ", agenda.Amount(st), prefixed("drawing ", st.Task.Drawing), prefixed("with ", kitWords(st))))
 	for _, n := range clean.Lines(st.Task.Note) {
 		add(false, n)
 	}
 	for _, n := range st.Estimate.Notes {
 		add(false, n)
 	}
-	worked, only := false, true
-	for _, e := range s.Entries {
-		if e.Step != st {
-			continue
-		}
-		if e.Watch {
-			add(true, fmt.Sprintf("Fire watch %s: %s", agenda.Between(e.Span, s.Zone), strings.Join(e.People, ", ")))
-			continue
-		}
-		worked = true
-		if e.Goes && e.Piece == lastEntry(s, st).Piece {
-			add(false, "goes on "+agenda.NextPiece(k.work, e)+hoursLeft(st, e))
-		}
-		only = only && e.Last
-	}
-	if !worked || !only && st.Class != expand.Hands {
-		return c
-	}
-	if st.InOneGo && st.Class == expand.Hands {
-		add(false, "in one go")
+	ways := []string{}
+	if st.InOneGo {
+		ways = append(ways, "in one go")
 	}
 	if st.Lone {
-		add(false, "never alone")
+		ways = append(ways, "never alone")
 	}
+	for _, e := range s.Entries {
+		switch {
+		case e.Step != st:
+		case e.Watch:
+			add(true, fmt.Sprintf("Fire watch %s: %s", agenda.Between(e.Span, s.Zone), strings.Join(names(e.People), ", ")))
+		case e.Goes && e.Piece == lastEntry(s, st).Piece:
+			ways = append(ways, "goes on "+agenda.NextPiece(k.work, e)+hoursLeft(e))
+		}
+	}
+	add(false, upper(strings.Join(ways, "; ")))
 	k.byWhen(st, s, add)
 	return c
 }
 
 // byWhen adds the deadline, and the latest finish that keeps every deadline.
-func (k *pack) byWhen(st *expand.Step, s *agenda.Shift, add func(bool, ...string)) {
+func (k *pack) byWhen(st *expand.Step, s *agenda.Shift, add func(bool, string)) {
 	if st.Task.Deadline != nil && st.Deadline < hours.Far {
-		add(true, "Must be done by "+agenda.When(st.Deadline, s.Zone))
+		add(true, "Must be done by "+onDay(st.Deadline, s))
 	}
-	if st.Index < len(k.a.Rows) {
-		if m := k.a.Rows[st.Index].Latest; m > 0 && m < hours.Far && m > k.planned(st).Finish {
-			add(false, "at the latest "+agenda.When(m, s.Zone))
-		} else if m > 0 && m < hours.Far {
-			add(true, "no leeway: at the latest "+agenda.When(m, s.Zone))
-		}
+	if st.Index >= len(k.a.Rows) {
+		return
+	}
+	switch m := k.a.Rows[st.Index].Latest; {
+	case m <= 0 || m >= hours.Far:
+	case m > k.planned(st).Finish:
+		add(false, "At the latest "+onDay(m, s))
+	default:
+		add(true, "No leeway: at the latest "+onDay(m, s))
 	}
 }
 
+// onDay writes a time, without its day where that is the shift's own.
+func onDay(m hours.Minute, s *agenda.Shift) string {
+	if hours.DateOf(m.In(s.Zone)) == s.Date {
+		return agenda.Clock(m, s.Zone)
+	}
+	return agenda.When(m, s.Zone)
+}
+
 // hoursLeft says what working time the plan leaves for later shifts.
-func hoursLeft(st *expand.Step, e agenda.Entry) string {
+func hoursLeft(e agenda.Entry) string {
 	n := 0
 	for _, p := range e.Planned.Pieces {
 		if p.From >= e.To {
@@ -213,7 +214,7 @@ func (k *pack) running(s *agenda.Shift) {
 // stopped prints what else could be done if the work has to stop.
 func (k *pack) stopped(s *agenda.Shift, steps []*expand.Step) {
 	p := k.p
-	spare := agenda.Spare(k.work, k.worked, s, 4)
+	spare := agenda.Spare(k.a, s, 4)
 	p.heading("If you have to stop", 2*lineHeight(body))
 	for i, st := range steps {
 		if st.InOneGo {
@@ -226,10 +227,25 @@ func (k *pack) stopped(s *agenda.Shift, steps []*expand.Step) {
 		p.para("Nothing planned for later is ready to be brought forward.", body, false)
 		return
 	}
-	p.para("Ready to be brought forward (what comes before it is finished):", body, false)
-	for _, st := range spare {
-		p.point("-", fmt.Sprintf("%s, %s, %s", agenda.StepLabel(k.work, st), agenda.Where(st), quantity.Hours(st.Working)), false)
+	p.para("Work planned for later that is ready; look first at reach, hire and who is free:", body, false)
+	for _, sp := range spare {
+		when := ""
+		if sp.From > s.From {
+			when = "from " + agenda.Clock(sp.From, s.Zone) + " on"
+		}
+		p.point("-", joined(", ", agenda.StepLabel(k.work, sp.Step), where(s, sp.Step), quantity.Hours(sp.Step.Working), when), false)
 	}
+}
+
+// where names the step's place, the workface alone at the shift's own place.
+func where(s *agenda.Shift, st *expand.Step) string {
+	switch {
+	case st.Place != s.Place:
+		return agenda.Where(st)
+	case st.Face != nil:
+		return clean.Line(st.Face.Name)
+	}
+	return ""
 }
 
 // begun has the boxes to fill in before work begins: permits first.
@@ -242,15 +258,15 @@ func (k *pack) begun(s *agenda.Shift) {
 	p.fields(4, field{label: "Brief held, initials"}, field{label: "Tools and gear seen"}, field{label: "Forecast, wind"}, field{label: "Gas, tests"})
 }
 
-// closing has the boxes for the end of the shift.
+// closing has the boxes for the end of the shift; the largest takes what is left of the page.
 func (k *pack) closing() {
+	const least, most = 12.0, 80.0
 	p := k.p
-	p.heading("At the end", 30)
-	p.y += 0.5
+	below := 1 + lineHeight(body) + boxHeight + 1.6
+	p.heading("At the end", lineHeight(body)+least+below)
 	p.run(p.left, p.y+ascent*body*mmPerPoint, "Found, changed, stopped, and why", body, false)
 	p.y += lineHeight(body)
-	h := min(max(p.bottom-p.y-boxHeight-lineHeight(body)-3, 16), 40)
-	p.room(h + boxHeight + lineHeight(body) + 2)
+	h := min(max(p.bottom-p.y-below, least), most)
 	p.put(Item{Kind: Blank, X: p.left, Y: p.y, W: p.wide() - gutter, H: h, Stroke: thin})
 	p.y += h + 1
 	p.fields(4, field{label: "Lead hand, name and signature", units: 2}, field{label: "Time"}, field{label: "Last fire watch ended"})

@@ -25,6 +25,7 @@ const (
 	laneLabel = 38.0 // mm for the names
 	barHeight = 6.4
 	tickRoom  = 12.5 // least distance of clock labels, mm
+	axisEnd   = 6.0  // mm kept free for half of the last label
 )
 
 // strip draws lanes over a time axis with a tick for each hour. A strip longer than a page goes
@@ -34,7 +35,7 @@ func (p *pen) strip(span hours.Span, zone *time.Location, lanes []lane) {
 		return
 	}
 	from, to := wholeHours(span, zone)
-	scale := (p.wide() - laneLabel) / float64(to-from)
+	scale := (p.wide() - laneLabel - axisEnd) / float64(to-from)
 	x := func(m hours.Minute) float64 {
 		return p.left + laneLabel + float64(min(max(m, from), to)-from)*scale
 	}
@@ -43,15 +44,17 @@ func (p *pen) strip(span hours.Span, zone *time.Location, lanes []lane) {
 		for float64(step)*scale < tickRoom {
 			step *= 2
 		}
-		base := p.y + ascent*body*mmPerPoint
+		base, free := p.y+ascent*body*mmPerPoint, p.left
 		for m := from; m <= to; m += 60 {
 			on := (m-from)%step == 0
 			short := 1.2
 			if on {
 				s := agenda.Clock(m, zone)
 				w := width(s, body, false)
-				left := min(max(x(m)-w/2, p.left+laneLabel-w/2), p.right-w)
-				p.run(left, base, s, body, false)
+				if left := x(m) - w/2; left >= free && left+w <= p.right {
+					p.run(left, base, s, body, false)
+					free = left + w + 1
+				}
 				short = 2
 			}
 			if float64(60)*scale >= 2 || on {
@@ -59,7 +62,7 @@ func (p *pen) strip(span hours.Span, zone *time.Location, lanes []lane) {
 			}
 		}
 		p.y += lineHeight(body) + 2
-		p.put(Item{Kind: Rule, X: p.left + laneLabel, Y: p.y, W: p.wide() - laneLabel, Stroke: thin})
+		p.put(Item{Kind: Rule, X: p.left + laneLabel, Y: p.y, W: p.wide() - laneLabel - axisEnd, Stroke: thin})
 	}
 	p.room(lineHeight(body) + 2 + 2*(barHeight+2.4))
 	axis()
@@ -101,7 +104,7 @@ func (p *pen) lane(l lane, x func(hours.Minute) float64) {
 		}
 	}
 	p.y += h
-	p.put(Item{Kind: Rule, X: p.left + laneLabel, Y: p.y, W: p.wide() - laneLabel, Stroke: 0.1})
+	p.put(Item{Kind: Rule, X: p.left + laneLabel, Y: p.y, W: p.wide() - laneLabel - axisEnd, Stroke: 0.1})
 }
 
 // wholeHours widens a span to whole hours of the wall clock.

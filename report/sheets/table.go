@@ -44,7 +44,10 @@ type table struct {
 	least float64 // least height of a row
 }
 
-const pad = 1.2 // mm between text and the rules around it
+const (
+	pad     = 1.2  // mm between text and the rules around it
+	tallest = 16.0 // mm: more than this no box in a row needs
+)
 
 // table draws the heads of a table and gives it for its rows; the heads come again on every
 // continued page.
@@ -92,7 +95,10 @@ func (t *table) heads() {
 }
 
 // end closes the table: pages after it do not repeat its heads.
-func (t *table) end() { t.p.repeat = nil }
+func (t *table) end() {
+	t.p.repeat = nil
+	t.p.y += 1.5
+}
 
 type wrappedLine struct {
 	text string
@@ -124,7 +130,7 @@ func (t *table) row(cells ...cell) {
 		p.room(h)
 		for i, c := range cells {
 			if c.blank && from == 0 {
-				p.put(Item{Kind: Blank, X: t.x[i] + 0.6, Y: p.y + 0.8, W: t.w[i] - 1.2, H: h - 1.6, Stroke: thin})
+				p.put(Item{Kind: Blank, X: t.x[i] + 0.6, Y: p.y + 0.8, W: t.w[i] - 1.2, H: min(h-1.6, tallest), Stroke: thin})
 			}
 			for k := from; k < min(from+n, len(wrapped[i])); k++ {
 				l := wrapped[i][k]

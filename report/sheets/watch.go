@@ -113,11 +113,14 @@ func (k *pack) onlyOnes() []string {
 		for _, n := range s.Needs {
 			if t := n.Ticket.Name; s.Site && !s.Absent && t != "" && len(holders[t]) == 1 && !seen[t] {
 				seen[t] = true
-				out = append(out, fmt.Sprintf("Only %s holds the ticket %s.", paper(holders[t][0]), paper(t)))
+				out = append(out, fmt.Sprintf("%s (%s)", paper(t), paper(holders[t][0])))
 			}
 		}
 	}
-	return out
+	if len(out) == 0 {
+		return nil
+	}
+	return []string{"Tickets that only one person holds: " + strings.Join(out, ", ") + "."}
 }
 
 // maybes names the tasks that happen only with a chance.

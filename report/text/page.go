@@ -103,7 +103,7 @@ func wrap(text string, width int) []string {
 	text = clean.Line(text)
 	var out []string
 	line, used := "", 0
-	for _, word := range words(text) {
+	for _, word := range clean.Words(text) {
 		n := uniseg.StringWidth(word)
 		if line != "" && used+1+n > width {
 			out = append(out, line)
@@ -126,23 +126,6 @@ func wrap(text string, width int) []string {
 	}
 	if line != "" || len(out) == 0 {
 		out = append(out, line)
-	}
-	return out
-}
-
-var units = map[string]bool{"h": true, "min": true, "d": true, "mm": true, "m": true, "kg": true, "%": true, "°C": true, "L": true, "m2": true, "kVA": true, "t": true}
-
-// words splits text at blanks, but keeps a number with the unit behind it.
-func words(text string) []string {
-	var out []string
-	for _, w := range strings.Fields(text) {
-		if n := len(out); n > 0 && units[strings.TrimRight(w, ".,;:)]")] {
-			if last := out[n-1]; last[len(last)-1] >= '0' && last[len(last)-1] <= '9' {
-				out[n-1] += " " + w
-				continue
-			}
-		}
-		out = append(out, w)
 	}
 	return out
 }
