@@ -23,6 +23,28 @@ func TestDynamic(t *testing.T) {
 	}
 }
 
+// The same table, in air: inshore 1.07 + 0.05 sqrt(100/t) and offshore 1 + 0.25 sqrt(100/t), for 4 t
+// 1.32 and 2.25; items below 3 t as 3 t (its note 1).
+func TestDynamicOnTheWater(t *testing.T) {
+	for _, c := range []struct {
+		mass  float64
+		where Water
+		want  float64
+	}{{4000, Inshore, 1.32}, {4000, Offshore, 2.25}, {100e3, Inshore, 1.12}, {100e3, Offshore, 1.25}, {500, Inshore, 1.07 + .05*math.Sqrt(100.0/3)}, {3000, Offshore, 1 + .25*math.Sqrt(100.0/3)}, {4000, Onshore, 1.10}} {
+		if f, err := DynamicFactor(c.mass, c.where); err != nil || !near1(f.Value, c.want, 1e-9) {
+			t.Errorf("%.0f kg, %d: %v (%v)", c.mass, c.where, f.Value, err)
+		}
+	}
+	for _, c := range []struct {
+		mass  float64
+		where Water
+	}{{0, Inshore}, {101e3, Offshore}, {1000, 9}, {math.NaN(), Onshore}} {
+		if _, err := DynamicFactor(c.mass, c.where); err == nil || quantity.Hint(err) == "" {
+			t.Errorf("%v: %v", c, err)
+		}
+	}
+}
+
 // A mass that nobody said how it is known counts as guessed; best estimate, allowance and dynamic
 // factor stay apart.
 func TestLoadFactors(t *testing.T) {

@@ -155,21 +155,6 @@ func (l Load) Hook() origin.Figure {
 	return origin.Worked("load on the hook", h.Value*d.Value, "kg", "mass with allowance x dynamic factor", h, d)
 }
 
-const marineGuide = "Guidelines for Marine Lifting and Lowering Operations 0027/ND Rev 11, Table 5-1, onshore in air"
-
-// dynamic gives the factor for starting and stopping of a load of m kg on shore.
-func dynamic(m float64) origin.Figure {
-	switch t := m / 1000; {
-	case t <= 3:
-		return origin.House("dynamic factor", 1.10, "", "below 3 t as for 3 to 100 t in "+marineGuide)
-	case t <= 100:
-		return origin.Published("dynamic factor", 1.10, "", marineGuide)
-	case t <= 1000:
-		return origin.Published("dynamic factor", 1.05, "", marineGuide)
-	}
-	return origin.Published("dynamic factor", 1.03, "", marineGuide)
-}
-
 // judge is one check on the way to a Result: Need must not exceed Have.
 type judge struct {
 	what       string // "the heaviest leg"
