@@ -70,11 +70,15 @@ const (
 )
 
 // Instant gives the UTC minute of local time d at minute of day (0 to 1440 and beyond: minutes
-// after midnight on the wall clock) in loc. In a repeated hour the earlier instant is meant; in
+// after midnight on the wall clock, negative ones before it) in loc. In a repeated hour the earlier instant is meant; in
 // a gap the first instant after the gap is given, with Gap.
 func Instant(d Date, minute int, loc *time.Location) (Minute, Clock) {
-	d = d.Add(minute / 1440)
-	minute %= 1440
+	days := minute / 1440
+	if minute < 0 {
+		days = (minute - 1439) / 1440
+	}
+	d = d.Add(days)
+	minute -= days * 1440
 	wall := time.Date(d.Year, d.Month, d.Day, 0, minute, 0, 0, time.UTC)
 	// Candidates: the wall time read with the offsets in force a day before and a day after.
 	var found []Minute

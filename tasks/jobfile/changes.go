@@ -85,8 +85,10 @@ func (r *reader) change(root *yaml.Node, sets []tasks.Setting) {
 		if !r.tidy(r.setPos(s).File, value, 0) {
 			continue
 		}
-		if problem := put(root, strings.Join(s.Path, "/"), value); problem != "" {
-			r.faultAt(r.setPos(s), "write the keys down to the value, for instance tasks/resin/standing", "%s", problem)
+		if reached, rest := put(root, strings.Join(s.Path, "/"), value); reached != nil {
+			word, _, _ := strings.Cut(rest, "/")
+			r.faultAt(r.setPos(s), r.among(word, keysAt(reached), "write the keys down to the value, for instance tasks/resin/standing"),
+				"the job has nothing under %s (looked for %s)", short(strings.Join(s.Path, "/")), short(word))
 		}
 	}
 }
@@ -121,23 +123,32 @@ func place(n *yaml.Node, line, col, depth int) {
 	}
 }
 
-// put sets the value under a path; the last key may be new. It gives what is wrong, or "".
-func put(at *yaml.Node, path string, value *yaml.Node) string {
-	whole := path
+// keysAt lists what a path may go on with.
+func keysAt(n *yaml.Node) []string {
+	var out []string
+	for i := 0; n.Kind == yaml.MappingNode && i+1 < len(n.Content); i += 2 {
+		out = append(out, n.Content[i].Value)
+	}
+	return out
+}
+
+// put sets the value under a path; the last key may be new. Where the path leads nowhere it gives
+// the node that it reached and the rest.
+func put(at *yaml.Node, path string, value *yaml.Node) (reached *yaml.Node, rest string) {
 	for {
 		i, rest, found := step(at, path)
 		switch {
 		case found && rest == "":
 			at.Content[i] = value
-			return ""
+			return nil, ""
 		case found:
 			at, path = at.Content[i], rest
 		case at.Kind == yaml.MappingNode && path != "" && !strings.Contains(path, "/"):
 			key := &yaml.Node{Kind: yaml.ScalarNode, Value: path, Line: value.Line, Column: value.Column}
 			at.Content = append(at.Content, key, value)
-			return ""
+			return nil, ""
 		default:
-			return fmt.Sprintf("the job has nothing under %s (looked for %s)", short(whole), short(path))
+			return at, path
 		}
 	}
 }

@@ -22,7 +22,8 @@ type fields struct {
 func (r *reader) open(n *yaml.Node, sec *section, what string) *fields {
 	f := &fields{r: r, sec: sec, what: what, at: n, vals: map[string]*yaml.Node{}}
 	if n.Kind != yaml.MappingNode {
-		r.fault(n, fmt.Sprintf("write keys and values, for instance {%s: %s}", sec.keys[0].name, sec.keys[0].example),
+		k := sec.first()
+		r.fault(n, fmt.Sprintf("write keys and values, for instance {%s: %s}", k.name, k.example),
 			"%sexpected keys with values, found %s", f.lead(""), kindOf(n))
 		return f
 	}

@@ -59,6 +59,16 @@ func regionCodes() []string {
 	return out
 }
 
+// amongRegions makes the hint for an unknown code: those of the same country, else all.
+func (r *reader) amongRegions(code string) string {
+	all := regionCodes()
+	same := slices.DeleteFunc(slices.Clone(all), func(c string) bool { return len(code) < 2 || !strings.HasPrefix(c, code[:2]) })
+	if len(same) > 0 {
+		return "known here: " + list(same, 12)
+	}
+	return "known here: " + list(all, 40)
+}
+
 // readHolidays closes the places that keep public holidays on those of the regions named, in the
 // years of the windows. Both the day itself and the day that stands in for it are closed.
 func (r *reader) readHolidays(f *fields) {
@@ -67,7 +77,7 @@ func (r *reader) readHolidays(f *fields) {
 		if code := strings.ToLower(ref.text); regions[code] != nil {
 			codes = append(codes, code)
 		} else {
-			r.faultAt(ref.pos, r.among(code, regionCodes(), ""), "holidays: %s is not a region whose holidays are known here", short(ref.text))
+			r.faultAt(ref.pos, r.amongRegions(code), "holidays: %s is not a region whose holidays are known here", short(ref.text))
 		}
 	}
 	if len(codes) == 0 && len(r.onHolidays) > 0 && !f.tried("holidays") {

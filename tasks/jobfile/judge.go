@@ -37,7 +37,7 @@ func (r *reader) judgeDeadlines() {
 			if m.moment == nil {
 				continue
 			}
-			inside := false
+			inside := slices.ContainsFunc(r.windows, func(w window) bool { _, _, times := w.at(m.moment); return times != 1 }) // reported
 			for _, w := range r.windows {
 				at, _, times := w.at(m.moment)
 				inside = inside || times == 1 && at > w.opens && at <= w.closes || m.key == "not before" && at <= w.opens

@@ -80,6 +80,21 @@ func (s *section) names() []string {
 	return out
 }
 
+// first gives the key to show as an example: one that must be given, else the first.
+func (s *section) first() *key {
+	var out *key
+	for at := s; at != nil; at = at.more {
+		for i := range at.keys {
+			if k := &at.keys[i]; k.need {
+				return k
+			} else if out == nil {
+				out = k
+			}
+		}
+	}
+	return out
+}
+
 // limits gives the least and the greatest value of the key.
 func (k *key) limits() (low, high float64) {
 	if k.low == 0 && k.high == 0 {

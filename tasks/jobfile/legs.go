@@ -50,8 +50,11 @@ func (r *reader) legs(f *fields, t *tasks.Trip) {
 		return // reported
 	}
 	ok1, crossing := r.wayOut(t, out, zones[0], zones[1])
+	if !ok1 {
+		return
+	}
 	ok2 := r.wayBack(t, back, out, zones[2], zones[3], crossing)
-	if ok1 && ok2 && t.Departs < t.Arrives {
+	if ok2 && t.Departs < t.Arrives {
 		r.fault(back.at, "look at the dates", "%sleaves the site %s, before it arrives there %s", back.lead(""),
 			t.Departs.In(site).Format("2006-01-02 15:04"), t.Arrives.In(site).Format("2006-01-02 15:04"))
 	}

@@ -113,9 +113,9 @@ func (r *reader) judgeNeeds() {
 		case holders == 0:
 			r.faultAt(n.need.Pos, "look at the process, positions, joints and thickness of the tickets, or ask for less", "%s: nobody's ticket covers %q", what, word)
 		case here < n.need.Count && here < holders:
-			r.faultAt(n.need.Pos, "ask for fewer, or let somebody go there", "%s: %d with %q are asked for, %d may be at %s", what, n.need.Count, word, here, place.Name)
+			r.faultAt(n.need.Pos, "ask for fewer, or let somebody go there", "%s: %d with %q are asked for, only %d may be at %s", what, n.need.Count, word, here, place.Name)
 		case holders < n.need.Count:
-			r.faultAt(n.need.Pos, "ask for fewer, or give somebody else the ticket", "%s: %d with %q are asked for, there are %d", what, n.need.Count, word, holders)
+			r.faultAt(n.need.Pos, "ask for fewer, or give somebody else the ticket", "%s: %d with %q are asked for, only %d there", what, n.need.Count, word, holders)
 		}
 	}
 }

@@ -167,9 +167,10 @@ func (f *fields) position(name string) (lat, lon float64, ok bool) {
 		f.fault(name, "write for instance [57.6 N, 7.2 W]", "a position is a latitude and a longitude")
 		return 0, 0, false
 	}
-	lat, ok1 := f.degrees(name, list[0], "N", "S", 90)
-	lon, ok2 := f.degrees(name, list[1], "E", "W", 180)
-	return lat, lon, ok1 && ok2
+	if lat, ok = f.degrees(name, list[0], "N", "S", 90); ok {
+		lon, ok = f.degrees(name, list[1], "E", "W", 180)
+	}
+	return lat, lon, ok
 }
 
 func (f *fields) degrees(name string, n *yaml.Node, plus, minus string, most float64) (float64, bool) {

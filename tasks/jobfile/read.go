@@ -130,7 +130,7 @@ func (r *reader) settleHome(f *fields) {
 		r.home = r.site.Zone
 	}
 	r.job.Zone = r.home
-	if f.has("trips") && r.site != nil && atHome == 0 && len(r.job.Places) > 0 {
+	if f.has("trips") && r.site != nil && atHome == 0 && len(f.pairs("places")) == len(r.job.Places) {
 		f.fault("places", "declare the shop: {shop: {open: Mon-Fri 07:30-17:30}}", "there is no home place: trips go to %q, and no other place is declared", r.site.Name)
 	}
 	for _, p := range r.job.Places {

@@ -192,6 +192,14 @@ func show(v float64, d quantity.Dim) string {
 		return origin.Trim(v) + " min"
 	case quantity.Percent:
 		return origin.Trim(v*100) + " %"
+	case quantity.Length:
+		if math.Abs(v) >= 1000 {
+			return origin.Trim(v/1000) + " m"
+		}
+	case quantity.Area:
+		if v != 0 && math.Abs(v) < 1e-3 {
+			return origin.Trim(v*1e6) + " mm2"
+		}
 	}
 	return strings.TrimSpace(origin.Trim(v) + " " + d.Base())
 }

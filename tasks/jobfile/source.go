@@ -40,11 +40,15 @@ func (r *reader) parse(file string, data []byte) *yaml.Node {
 	}
 	doc, line, err := decode(data)
 	if err != nil {
+		col := 1
+		if m := aliasName.FindStringSubmatch(err.Error()); m != nil {
+			line, col = findAlias(data, m[1])
+		}
 		if tab := tabLine(data); tab > 0 && (line == 0 || line >= tab) {
 			return at(tab, 1, "indent with spaces", "the line begins with a tab")
 		}
 		hint, text := plainSyntax(err.Error())
-		return at(max(line, 1), 1, hint, "%s", text)
+		return at(max(line, 1), max(col, 1), hint, "%s", text)
 	}
 	if doc == nil || len(doc.Content) == 0 || doc.Content[0].Kind == yaml.ScalarNode && doc.Content[0].Tag == "!!null" {
 		return at(1, 1, "begin with `job: ` and its name", "the file is empty")
@@ -69,13 +73,13 @@ func decode(data []byte) (doc *yaml.Node, line int, err error) {
 	case errors.Is(err, io.EOF):
 		return nil, 0, nil
 	case err != nil:
-		return nil, errorLine(err, data), err
+		return nil, errorLine(err), err
 	}
 	switch err := dec.Decode(&second); {
 	case errors.Is(err, io.EOF):
 		return &first, 0, nil
 	case err != nil:
-		return nil, errorLine(err, data), err
+		return nil, errorLine(err), err
 	}
 	return nil, max(second.Line, 1), errors.New("second document")
 }
@@ -85,17 +89,22 @@ var (
 	aliasName  = regexp.MustCompile(`^yaml: unknown anchor '([^']*)'`)
 )
 
-func errorLine(err error, data []byte) int {
+func errorLine(err error) int {
 	if m := lineNumber.FindStringSubmatch(err.Error()); m != nil {
 		n, _ := strconv.Atoi(m[1])
 		return n
 	}
-	if m := aliasName.FindStringSubmatch(err.Error()); m != nil {
-		if i := bytes.Index(data, []byte("*"+m[1])); i >= 0 {
-			return bytes.Count(data[:i], []byte("\n")) + 1
-		}
-	}
 	return 0
+}
+
+// findAlias gives the place of an alias without its anchor, whose line the scanner does not tell.
+func findAlias(data []byte, name string) (line, col int) {
+	i := bytes.Index(data, []byte("*"+name))
+	if i < 0 {
+		return 0, 0
+	}
+	start := bytes.LastIndexByte(data[:i], '\n') + 1
+	return bytes.Count(data[:i], []byte("\n")) + 1, utf8.RuneCount(data[start:i]) + 1
 }
 
 // plainSyntax puts the scanner's complaint into plain words with a way out.

@@ -240,7 +240,7 @@ func (r *reader) uses(f *fields) []tasks.Use {
 			return
 		}
 		if count > k.Count {
-			r.fault(n, fmt.Sprintf("ask for fewer, or add `count: %d` to %s", count, s), "%s%d of %q are asked for, there is %d", f.lead("kit"), count, s, k.Count)
+			r.fault(n, fmt.Sprintf("ask for fewer, or add `count: %d` to %s", count, s), "%s%d of %q asked for, only %d there", f.lead("kit"), count, s, k.Count)
 		}
 		if k.At != nil && f.r.placeOfTask(f) != nil && f.r.placeOfTask(f) != k.At {
 			r.fault(n, "use kit that goes along, or leave `at` out of the kit", "%s%q stays at %s", f.lead("kit"), s, k.At.Name)

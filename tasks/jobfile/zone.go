@@ -1,6 +1,7 @@
 package jobfile
 
 import (
+	"fmt"
 	"strings"
 	"time"
 	_ "time/tzdata" // laptops without a zone database
@@ -24,12 +25,16 @@ func (f *fields) zone(name string) *time.Location {
 		return nil
 	}
 	if s != "UTC" && !strings.Contains(s, "/") || strings.HasPrefix(s, "Etc/") {
-		f.fault(name, f.r.among(s, usualZones, ""), "%s is not a zone by region and city: short names and offsets do not tell when clocks change", short(s))
+		f.fault(name, "write region and city, for instance Europe/London", "%s is not a zone by region and city: short names and offsets do not tell when clocks change", short(s))
 		return nil
 	}
 	loc, err := time.LoadLocation(s)
 	if err != nil {
-		f.fault(name, f.r.among(s, usualZones, ""), "the time zone %s is not known", short(s))
+		hint := "write region and city, for instance Europe/London"
+		if z, ok := f.r.nearest(s, usualZones); ok {
+			hint = fmt.Sprintf("did you mean %q?", z)
+		}
+		f.fault(name, hint, "the time zone %s is not known", short(s))
 		return nil
 	}
 	return loc

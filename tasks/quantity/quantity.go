@@ -169,7 +169,7 @@ const maxMagnitude = 1e12 // beyond any amount on a job; keeps products finite
 //
 // Errors: no unit, unknown unit, decimal comma, not a number; each names what was expected.
 func Parse(text string, d Dim) (float64, error) {
-	s := strings.TrimSpace(text)
+	s := strings.TrimSpace(strings.NewReplacer("\u00a0", " ", "\u202f", " ", "\u2009", " ").Replace(text))
 	if s == "" {
 		return 0, fault(ErrNoUnit, example(d), "expected %s, found nothing", d)
 	}
@@ -214,20 +214,19 @@ func takeUnit(s string, d Dim) (v float64, rest string, ok bool) {
 func timeSum(s string) (float64, bool) {
 	total, last, parts := 0.0, math.Inf(1), 0
 	for s != "" {
-		n, rest, ok := takeNumber(s)
+		n, _, ok := takeNumber(s)
 		if !ok {
 			return 0, false
 		}
-		v, rest2, ok := takeUnit(s, Time)
-		if !ok || n < 0 || n == 0 && parts == 0 && rest2 == "" {
+		v, rest, ok := takeUnit(s, Time)
+		if !ok || n < 0 {
 			return 0, false
 		}
-		_ = rest
 		scale := unitScale(s, n, v)
 		if scale >= last {
 			return 0, false
 		}
-		last, total, s = scale, total+v, rest2
+		last, total, s = scale, total+v, rest
 		parts++
 	}
 	return total, parts > 1
@@ -311,8 +310,12 @@ func example(d Dim) string {
 
 // explain says what is wrong with s as an amount of dimension d.
 func explain(s string, d Dim) error {
-	if looksComma(s) {
-		return fault(ErrComma, fmt.Sprintf("write %s", strings.Replace(s, ",", ".", 1)), "%q has a decimal comma", s)
+	if i, thousands := comma(s); i > 0 {
+		hint := "write " + s[:i] + "." + s[i+1:]
+		if thousands {
+			hint = fmt.Sprintf("write %s, or %s if a decimal is meant", s[:i]+s[i+1:], s[:i]+"."+s[i+1:])
+		}
+		return fault(ErrComma, hint, "%q has a decimal comma", s)
 	}
 	n, rest, ok := takeNumber(s)
 	if !ok {
@@ -328,10 +331,49 @@ func explain(s string, d Dim) error {
 	if d == Number {
 		return fault(ErrUnit, "write a number alone", "expected a plain number, found %q", s)
 	}
+	if r := strings.TrimLeft(rest, "-–—"); r != rest && r != "" && numberEnd(strings.TrimSpace(r)) > 0 {
+		return fault(ErrUnit, fmt.Sprintf("write a range with the word to: %s to %s", strings.TrimSpace(s[:len(s)-len(rest)]), strings.TrimSpace(r)), "%q has a dash between two numbers", s)
+	}
+	if u, ok := likeUnit(rest, d); ok {
+		return fault(ErrUnit, fmt.Sprintf("did you mean %s?", strings.TrimSpace(s[:len(s)-len(rest)])+" "+u), "%q is not a unit for %s; expected %s", rest, d, d.UnitList())
+	}
 	return fault(ErrUnit, example(d), "%q is not a unit for %s; expected %s", rest, d, d.UnitList())
 }
 
-func looksComma(s string) bool {
-	i := strings.IndexByte(s, ',')
-	return i > 0 && i+1 < len(s) && s[i-1] >= '0' && s[i-1] <= '9' && s[i+1] >= '0' && s[i+1] <= '9'
+// comma finds the first comma between digits, 0 if there is none. Three digits and no more behind it
+// may be thousands.
+func comma(s string) (at int, thousands bool) {
+	digit := func(i int) bool { return i >= 0 && i < len(s) && s[i] >= '0' && s[i] <= '9' }
+	for i := range len(s) {
+		if s[i] == ',' && digit(i-1) && digit(i+1) {
+			return i, digit(i+2) && digit(i+3) && !digit(i+4)
+		}
+	}
+	return 0, false
+}
+
+// otherWords are what people write for a unit.
+var otherWords = map[string]string{
+	"hr": "h", "hrs": "h", "mins": "min", "minute": "min", "sec": "s", "metre": "m", "metres": "m", "meter": "m", "meters": "m",
+	"kgs": "kg", "kilo": "kg", "kilos": "kg", "ton": "t", "tons": "t", "tonne": "t", "tonnes": "t", "inch": "in", "inches": "in",
+	"\"": "in", "'": "ft", "feet": "ft", "foot": "ft", "lbs": "lb", "micron": "um", "microns": "um", "percent": "%", "amp": "A", "amps": "A",
+	"volts": "V", "kW": "kVA", "sqm": "m2", "sq m": "m2", "m^2": "m2", "litres": "L", "litre": "L", "degC": "C", "deg C": "C", "knots": "kn",
+	"degrees": "deg",
+}
+
+// likeUnit gives the unit of d that word is likely meant to be.
+func likeUnit(word string, d Dim) (string, bool) {
+	if u, ok := otherWords[word]; ok {
+		for _, x := range units[d] {
+			if x.name == u {
+				return u, true
+			}
+		}
+	}
+	for _, x := range units[d] {
+		if strings.EqualFold(x.name, word) {
+			return x.name, true
+		}
+	}
+	return "", false
 }

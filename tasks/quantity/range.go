@@ -37,10 +37,14 @@ func ParseRange(text string, d Dim) (Range, error) {
 	lo = strings.TrimSpace(lo)
 	a, err := Parse(lo, d)
 	if err != nil {
-		if n, rest, ok := takeNumber(lo); ok && rest == "" { // the unit stands after the second number
-			_ = n
-			_, unit, _ := takeNumber(strings.TrimSpace(hi))
-			a, err = Parse(lo+" "+strings.TrimSpace(unit), d)
+		hi = strings.TrimSpace(hi)
+		if _, rest, ok := takeNumber(lo); ok && rest == "" { // the unit stands after the second number
+			if _, more, ok := takeUnit(hi, d); ok && more == "" {
+				_, unit, _ := takeNumber(hi)
+				a, err = Parse(lo+" "+strings.TrimSpace(unit), d)
+			} else { // "1 to 1 h 30 min": of which unit the first is cannot be told
+				err = fault(ErrNoUnit, "give both ends their units", "%q has no unit", lo)
+			}
 		}
 		if err != nil {
 			return Range{}, err
