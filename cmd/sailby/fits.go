@@ -1,0 +1,53 @@
+package main
+
+import (
+	"context"
+	"io"
+
+	"github.com/spf13/cobra"
+
+	"sailby/plan"
+	"sailby/report/text"
+)
+
+type fitsOptions struct {
+	*globals
+	json bool
+}
+
+func newFits(g *globals, st streams) *cobra.Command {
+	o := &fitsOptions{globals: g}
+	c := &cobra.Command{
+		Use:               "fits JOB",
+		Short:             "Whether the work fits the window, by how much, and what governs that",
+		Long:              "Says whether the work fits: on likely hours, with every maybe, and at the high end of the hours. The exit\nstatus is 0 if it fits on likely hours, and 3 if that was not shown.",
+		Example:           "  sailby fits slip/job.yaml\n  sailby fits pier/job.yaml --trip \"five days\"",
+		Args:              takes(false, "JOB"),
+		ValidArgsFunction: jobFiles,
+		RunE:              func(c *cobra.Command, args []string) error { return runFits(c.Context(), o, st, args) },
+	}
+	c.Flags().BoolVar(&o.json, "json", false, "print for machines")
+	return c
+}
+
+func runFits(ctx context.Context, o *fitsOptions, st streams, args []string) error {
+	job, err := o.read(args[0])
+	if err != nil {
+		return err
+	}
+	r, err := o.ask(ctx, st, job)
+	if err != nil {
+		return err
+	}
+	write := func(w io.Writer) error { return text.Fits(w, r, text.Options{Width: st.width}) }
+	if o.json {
+		write = func(w io.Writer) error { return text.FitsJSON(w, r) }
+	}
+	if err := st.print(write); err != nil {
+		return err
+	}
+	if r.Likely.Verdict != plan.Fits {
+		return errNotShown
+	}
+	return nil
+}
