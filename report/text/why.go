@@ -93,12 +93,12 @@ func distance(a, b string) int {
 // lines and the sources. The task is named as in the job file, or by a word that only its name
 // holds. The error is an *UnknownTask or that of writing.
 func Why(w io.Writer, r *plan.Report, task string, o Options) error {
-	t, err := find(r.Job, task)
+	a := o.pick(r)
+	t, err := find(a.Work.Job, task)
 	if err != nil {
 		return err
 	}
 	p := newPage(w, o)
-	a := o.pick(r)
 	p.para("", fmt.Sprintf("%s: %s at %s%s", agenda.TaskLabel(t), t.Kind, t.Where(), inFile(at(t.Pos))))
 	if t.Title != "" && t.Title != t.Name {
 		p.para("", "In the job file: "+t.Name)
@@ -254,11 +254,11 @@ type whyForm struct {
 // WhyJSON writes what Why prints for machines: the task as in DaysJSON, each step with the tree
 // of its hours.
 func WhyJSON(w io.Writer, r *plan.Report, task string, o Options) error {
-	t, err := find(r.Job, task)
+	a := o.pick(r)
+	t, err := find(a.Work.Job, task)
 	if err != nil {
 		return err
 	}
-	a := o.pick(r)
 	f := whyForm{Chance: t.Chance, At: at(t.Pos), Basis: basisName(a.Work.Basis), Care: agenda.Care}
 	if a.Plan != nil {
 		f.taskForm, f.Happens = taskOf(a, t, true)
