@@ -19,6 +19,7 @@ func (r *reader) judge() {
 	r.judgeStates()
 	r.judgeCycles()
 	r.judgeDeadlines()
+	r.judgeStays()
 	r.judgeTides()
 	r.judgeTasks()
 }
@@ -58,6 +59,37 @@ func (r *reader) judgeDeadlines() {
 					r.faultAt(t.Deadline.Pos, "look at both dates", "%sit may not start before %s, %s later", d.f.lead("must be done by"), short(t.NotBefore.Text), quantity.Span(int(a-b)))
 					break
 				}
+			}
+		}
+	}
+}
+
+// judgeStays reports people who are named for work where they never are, and who leave before
+// they come.
+func (r *reader) judgeStays() {
+	byName := map[string]*tasks.Person{}
+	for _, p := range r.job.People {
+		byName[p.Name] = p
+		for _, w := range r.windows {
+			if p.From == nil || p.Until == nil || p.From.Zone == nil {
+				break
+			}
+			a, _, n1 := w.at(p.From)
+			b, _, n2 := w.at(p.Until)
+			if n1 == 1 && n2 == 1 && b <= a {
+				r.faultAt(p.Until.Pos, "look at both dates", "person %q: until: they are there until %s, before they come %s", p.Name, p.Until.Text, p.From.Text)
+				break
+			}
+		}
+	}
+	for _, d := range r.drafts {
+		if d.t.Place == nil {
+			continue
+		}
+		for _, ref := range d.f.names("who") {
+			p := byName[ref.text]
+			if p != nil && p.Places != nil && !slices.Contains(p.Places, d.t.Place.Name) {
+				r.faultAt(ref.pos, "name somebody else, or add the place to their `places`", "%s%s works only at %s, not at %s", d.f.lead("who"), p.Name, list(p.Places, 6), d.t.Place.Name)
 			}
 		}
 	}

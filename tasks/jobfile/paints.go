@@ -85,7 +85,7 @@ func (r *reader) paint(name string, at *yaml.Node, f *fields) *tasks.Paint {
 		}
 	}
 	set("volume solids", &p.VolumeSolids, "volume solids")
-	set("dft", &p.DFT, "dry film")
+	set("dft", &p.DFT, "dft")
 	set("induction", &p.Induction, "induction")
 	set("thinner", &p.Thinner, "thinner")
 	if set("stays dry", &p.DryHours, "dry hours"); f.has("stays dry") {
@@ -202,7 +202,7 @@ func (f *fields) nextCoats(p *tasks.Paint) {
 			p.NextCoat = map[string]coat.Recoat{}
 		}
 		p.NextCoat[kv[0].Value] = rc
-		p.Sources["next coat"] = f.pos("next coat").Origin("")
+		p.Sources["next coat"], p.Sources["next coat max"] = f.pos("next coat").Origin(""), f.pos("next coat").Origin("")
 	}
 	for _, kv := range f.pairs("never") {
 		if why, ok := f.r.text(kv[1], f.lead("never"), "its solvents lift it"); ok {

@@ -92,11 +92,16 @@ func (r *reader) procedure(name string, at *yaml.Node, f *fields) *tasks.Procedu
 	for name := range f.vals {
 		p.Origins[name] = f.pos(name).Origin("")
 	}
+	if f.has("heat input") {
+		p.Origins["least heat input"], p.Origins["most heat input"] = p.Origins["heat input"], p.Origins["heat input"]
+	}
 	if f.has("set") {
 		g := r.open(f.node("set"), &setSection, f.what+": set")
 		p.Set = weld.Set{RatedCurrent: g.value("rated"), DutyCycle: g.value("duty cycle"), MaxCurrent: g.value("most"), Efficiency: g.value("efficiency"), PowerFactor: g.value("power factor")}
-		for name := range g.vals {
-			p.Origins[name] = g.pos(name).Origin("")
+		for name, word := range map[string]string{"rated": "rated current", "duty cycle": "duty cycle", "most": "most current", "efficiency": "set efficiency", "power factor": "power factor"} {
+			if g.has(name) {
+				p.Origins[word] = g.pos(name).Origin("")
+			}
 		}
 		if (p.Set.RatedCurrent > 0) != (p.Set.DutyCycle > 0) {
 			f.fault("set", "the rating plate has both, for instance {rated: 200 A, duty cycle: 35 %}", "rated current and duty cycle go together")
