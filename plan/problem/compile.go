@@ -111,6 +111,9 @@ func (p *Problem) resources() {
 			if f.People > 0 {
 				add(Resource{Name: place.Name + "/" + f.Name, Kind: Room, Capacity: f.People, Pos: f.Pos}, func(s *expand.Step) (int, bool) {
 					if s.Face == f {
+						if s.Watch > 0 && s.Room > 0 {
+							p.Acts[s.Index].WatchRoom = len(p.Res) + 1
+						}
 						return s.Room, false
 					}
 					return 0, false
@@ -129,25 +132,23 @@ func (p *Problem) resources() {
 }
 
 // Supply gives the power there is at a place and whether anything limits it: its mains where
-// the job file states them, and the generators that are there.
+// the job file states them, and the generators that are there. What goes along counts at the
+// window's place only.
 func Supply(w *expand.Work, place *tasks.Place) (kVA float64, limited bool) {
 	kVA = place.Mains.Value
 	limited = place.Mains.Pos.Given()
 	for _, k := range w.Job.Kit {
-		if k.Gives <= 0 || k.At != nil && k.At != place {
-			continue
+		if k.Gives > 0 && (k.At == place || k.At == nil && place == w.Window.Place) {
+			kVA += k.Gives * float64(max(k.Count, 1))
+			limited = true
 		}
-		if k.At == nil && place != w.Window.Place && !limited {
-			continue // a home place with its own unlimited supply
-		}
-		kVA += k.Gives * float64(max(k.Count, 1))
-		limited = true
 	}
 	return kVA, limited
 }
 
 // pairs finds the activities that must not overlap: clashing states in one workface or in
-// neighbours (R12), and lifts or moves of what others work on (R7).
+// neighbours (R12), and lifts or moves of what others work on (R7). Two activities have one
+// pair, with the longest of their tails: whichever comes first must be clear of all of them.
 func (p *Problem) pairs() {
 	steps := p.Work.Steps
 	clash := p.Work.Job.ClashTable()
@@ -160,21 +161,60 @@ func (p *Problem) pairs() {
 			if b.Absent || a.Task == b.Task {
 				continue
 			}
-			if touching(a.Face, b.Face) {
-				for _, sa := range a.States {
-					for _, sb := range b.States {
-						if clash.Has(sa.Name, sb.Name) {
-							p.Pairs = append(p.Pairs, Pair{A: i, B: j, TailA: p.tail(sa), TailB: p.tail(sb),
-								Why: sa.Name + " and " + sb.Name + " at " + a.Face.Place.Name + "/" + a.Face.Name})
-						}
-					}
-				}
-			}
-			if shared := movesWhat(a, b); shared != "" {
-				p.Pairs = append(p.Pairs, Pair{A: i, B: j, TailA: p.softTail(a), TailB: p.softTail(b),
-					Why: shared + " is moved", Kind: Moving})
+			if pr, apart := p.pair(a, b, clash); apart {
+				p.Pairs = append(p.Pairs, pr)
 			}
 		}
+	}
+}
+
+// pair says whether two steps must not overlap, and why.
+func (p *Problem) pair(a, b *expand.Step, clash tasks.ClashTable) (Pair, bool) {
+	pr := Pair{A: a.Index, B: b.Index}
+	var tailsA, tailsB []func(int) int
+	if touching(a.Face, b.Face) {
+		for _, sa := range a.States {
+			for _, sb := range b.States {
+				if !clash.Has(sa.Name, sb.Name) {
+					continue
+				}
+				if pr.Why == "" {
+					pr.Why = sa.Name + " and " + sb.Name + " at " + a.Face.Place.Name + "/" + a.Face.Name
+				}
+				tailsA, tailsB = append(tailsA, p.tail(sa)), append(tailsB, p.tail(sb))
+			}
+		}
+	}
+	if shared := movesWhat(a, b); shared != "" {
+		if pr.Why == "" {
+			pr.Why, pr.Kind = shared+" is moved", Moving
+		}
+		tailsA, tailsB = append(tailsA, p.softTail(a)), append(tailsB, p.softTail(b))
+	}
+	pr.TailA, pr.TailB = longest(tailsA), longest(tailsB)
+	return pr, pr.Why != ""
+}
+
+// longest joins tails: the latest end of all; nil if none has one.
+func longest(tails []func(int) int) func(int) int {
+	var real []func(int) int
+	for _, t := range tails {
+		if t != nil {
+			real = append(real, t)
+		}
+	}
+	switch len(real) {
+	case 0:
+		return nil
+	case 1:
+		return real[0]
+	}
+	return func(f int) int {
+		end := f
+		for _, t := range real {
+			end = max(end, t(f))
+		}
+		return end
 	}
 }
 

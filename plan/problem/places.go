@@ -70,10 +70,9 @@ func (g *ground) face2(f *tasks.Workface) (hours.Set, bool) {
 	set, limited := hours.Set{g.span}, false
 	if f.Reach != nil {
 		set, limited = g.work.Window.Slots(f.Reach), true
-	} else if f.Level.Pos.Given() && f.Place.Tide != nil {
-		if spans, err := f.Place.Tide.Reach(true, f.Level.Value, int64(g.span.From), int64(g.span.To)); err == nil {
-			set, limited = fromSite(spans), true
-		}
+	}
+	if f.Level.Pos.Given() && f.Place.Tide != nil {
+		set, limited = set.And(g.tide(f)), true
 	}
 	if limited {
 		set = trimmed(set, set, minutes(f.OpeningUp), max(minutes(f.WayOff), minutes(f.ClearingUp)))
@@ -82,6 +81,28 @@ func (g *ground) face2(f *tasks.Workface) (hours.Set, bool) {
 		set, limited = set.And(g.work.Window.Slots(f.Dry)), true
 	}
 	return set.Within(g.span), limited
+}
+
+// tide gives the minutes in which the water is below the workface's level. Where the table says
+// nothing the workface counts as covered.
+func (g *ground) tide(f *tasks.Workface) hours.Set {
+	waters := f.Place.Tide.Waters
+	if len(waters) < 2 {
+		return nil
+	}
+	level := f.Level.Value
+	var out []hours.Span
+	for k := 1; k < len(waters); k++ { // piece by piece: the table may have holes
+		from, to := max(int64(g.span.From), waters[k-1].At), min(int64(g.span.To), waters[k].At)
+		if from >= to {
+			continue
+		}
+		spans, err := f.Place.Tide.Reach(true, level, from, to)
+		if err == nil {
+			out = append(out, fromSite(spans)...)
+		}
+	}
+	return hours.NewSet(out...)
 }
 
 func fromSite(spans []site.Span) hours.Set {
@@ -135,10 +156,26 @@ func (g *ground) access(s *expand.Step) hours.Set {
 			set = set.And(slots)
 		}
 	}
+	if !s.Site {
+		for _, u := range s.Kit {
+			if u.Kit.At == nil && u.Kit.Slots == nil { // it goes along
+				set = set.Less(hours.Set{g.away()})
+				break
+			}
+		}
+	}
 	for _, name := range s.Wants {
 		if v, ok := g.valid[s.Place][name]; ok {
 			set = set.And(v)
 		}
 	}
 	return set
+}
+
+// away is when the things that go along are not at home (R1).
+func (g *ground) away() hours.Span {
+	if t := g.work.Trip; t != nil {
+		return hours.Span{From: t.Leaves, To: t.Home}
+	}
+	return hours.Span{From: g.work.Window.Opens, To: g.work.Window.Closes}
 }

@@ -28,16 +28,17 @@ type Problem struct {
 
 // Act is one activity.
 type Act struct {
-	Name     string
-	Step     *expand.Step // nil for an open instance
-	Modes    []Mode       // at least one, unless Hopeless says why there is none
-	Times    []*Timing    // the distinct timings of Modes
-	Hopeless string       // why no mode exists: "no opening is long enough", "nobody has the ticket"
-	Uses     []Use
-	From     int  // not before
-	By       int  // latest finish, Inf if free
-	Site     bool // counts for the site finish
-	Home     bool // at a home place
+	Name      string
+	Step      *expand.Step // nil for an open instance
+	Modes     []Mode       // at least one, unless Hopeless says why there is none
+	Times     []*Timing    // the distinct timings of Modes
+	Hopeless  string       // why no mode exists: "no opening is long enough", "nobody has the ticket"
+	Uses      []Use
+	WatchRoom int  // 1 + the resource that is the room of its workface, where a fire watch takes a place in it; 0 none
+	From      int  // not before
+	By        int  // latest finish, Inf if free
+	Site      bool // counts for the site finish
+	Home      bool // at a home place
 }
 
 // Mode is one choice of people for an activity, with the calendar that follows from it.

@@ -138,9 +138,19 @@ func (a *asked) find(explain bool) error {
 		return nil
 	}
 	bound := int(a.out.Bound - a.p.Base)
-	res := solve.Find(a.carry, b, solve.Options{Ticks: a.o.Ticks, Stop: a.stop, Seed: a.o.Seed, Good: func(s solve.Score) bool {
+	o := solve.Options{Ticks: a.o.ticks(len(a.carry.Acts)), Stop: a.stop, Seed: a.o.Seed, Good: func(s solve.Score) bool {
 		return a.out.Proof == nil && s.Late == 0 && s.Finish <= bound && s.Hand == 0 && s.Stops == 0
-	}})
+	}}
+	res := solve.Find(a.carry, b, o)
+	if a.out.Proof == nil && a.o.Ticks == 0 && (res.Best == nil || res.Best.Score.Late > 0) && !a.stop() {
+		a.say("plans, for longer")
+		o.Ticks, o.Seed = longer*o.Ticks, o.Seed+1
+		o.Good = func(s solve.Score) bool { return s.Late == 0 }
+		if again := solve.Find(a.carry, b, o); res.Best == nil || again.Best != nil && again.Best.Score.Compare(res.Best.Score, true) < 0 {
+			again.Ticks += res.Ticks
+			res = again
+		}
+	}
 	a.out.Steps, a.out.CutShort = res.Ticks, a.stop()
 	if res.Best == nil {
 		return nil
@@ -156,11 +166,13 @@ func (a *asked) keep(s *solve.Schedule, explain bool) error {
 	if late {
 		work = a.carry.Work
 	}
-	for _, br := range check.Plan(work, p) {
-		if late && br.Late {
-			continue
+	if breaches := check.Plan(work, p); len(breaches) > 0 && !(late && check.Late(breaches)) {
+		for _, br := range breaches {
+			if !br.Late {
+				return fmt.Errorf("%w: %s", ErrChecker, br.String())
+			}
 		}
-		return fmt.Errorf("%w: %s", ErrChecker, br.String())
+		return fmt.Errorf("%w: %s", ErrChecker, breaches[0].String())
 	}
 	a.out.Plan, a.out.Late = p, late
 	a.out.Finish = a.at(s.Score.Finish)

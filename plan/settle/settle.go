@@ -14,22 +14,37 @@ import (
 type Options struct {
 	Trip     string            // a trip by name; "" is the booked one, else the first
 	Seed     uint64            // for the search; equal seeds and ticks give equal answers
-	Ticks    int64             // starts tried for each basis; 0 is DefaultTicks
+	Ticks    int64             // starts tried for each basis; 0 is by the size of the job
 	Only     bool              // likely hours only: no maybes, no high end (for what-if)
 	Progress func(text string) // called now and then with what is being done; may be nil
 }
 
-// DefaultTicks is the work done for each basis before the search rests, in starts tried.
-const DefaultTicks = 400_000
+// The work done for each basis before the search rests, in starts tried: a small job has its
+// verdict within a second, a large one gets more. Where no fitting plan and no proof is found, the
+// search goes on for longer.
+const (
+	leastTicks = 250_000
+	ticksEach  = 15_000 // for each step
+	mostTicks  = 4_000_000
+	longer     = 4
+)
+
+// ticks gives the work done for n steps.
+func (o Options) ticks(n int) int64 {
+	switch {
+	case o.Ticks > 0:
+		return o.Ticks
+	case n <= 120:
+		return leastTicks
+	}
+	return min(mostTicks, ticksEach*int64(n))
+}
 
 // Ask settles a job for one window: likely hours, with every maybe, and at the high end.
 //
 // Errors: tasks.Faults where estimates or the choice of the window show faults in the job file.
 // A cancelled context or a deadline gives the best answer so far, marked as cut short, and no error.
 func Ask(ctx context.Context, job *tasks.Job, o Options) (*plan.Report, error) {
-	if o.Ticks <= 0 {
-		o.Ticks = DefaultTicks
-	}
 	rep := &plan.Report{Job: job}
 	likely := expand.Basis{Trip: o.Trip}
 	var err error

@@ -1,6 +1,7 @@
 package solve
 
 import (
+	"container/heap"
 	"slices"
 
 	"sailby/plan/problem"
@@ -19,12 +20,15 @@ type generator struct {
 	rank       []int   // by activity: place in the list
 	order      []int   // activities by rank
 	standing   []bool  // activities that nothing but links holds
+	pending    []int   // by activity: unplaced activities that it waits for
+	queue      queue
+	trace      func(block) // told of what stands in the way; nil for none
 }
 
 func newGenerator(p *problem.Problem) *generator {
 	n := len(p.Acts)
 	g := &generator{state: newState(p), into: make([][]int, n), from: make([][]int, n), lo: make([]int, n),
-		weight: make([]int, len(p.People)), choice: make([]int, len(p.Orders)), rank: make([]int, n), order: make([]int, n), standing: make([]bool, n)}
+		weight: make([]int, len(p.People)), choice: make([]int, len(p.Orders)), rank: make([]int, n), order: make([]int, n), standing: make([]bool, n), pending: make([]int, n)}
 	for k, l := range p.Links {
 		g.into[l.To] = append(g.into[l.To], k)
 		if l.From >= 0 {
@@ -54,16 +58,15 @@ func (g *generator) run(order []int) bool {
 	for i, a := range order {
 		g.rank[a] = i
 	}
-	for i := range g.lo {
-		g.lo[i] = g.p.Acts[i].From
-	}
+	g.prepare()
 	tries := 40 + 20*len(order)
 	for left := len(order); left > 0; {
-		i := g.next(order)
+		i := g.next()
 		if i < 0 || !g.place(i) {
 			return false
 		}
 		left--
+		g.release(i)
 		undone, ok := g.repair(i)
 		if !ok {
 			return false
@@ -76,38 +79,83 @@ func (g *generator) run(order []int) bool {
 	return true
 }
 
-// next gives the unplaced activity that comes first in the list among those whose earlier
-// activities are placed. What must follow within a maximum wait goes first of all.
-func (g *generator) next(order []int) int {
-	best := -1
-	for _, i := range order {
-		if g.placed[i] || !g.ready(i) {
-			continue
-		}
-		if g.standing[i] || g.urgent(i) {
-			return i
-		}
-		if best < 0 {
-			best = i
+// prepare counts what every activity waits for, and queues those that wait for nothing.
+func (g *generator) prepare() {
+	clear(g.pending)
+	g.queue = g.queue[:0]
+	for i := range g.lo {
+		g.lo[i] = g.p.Acts[i].From
+		g.after(i, func(j int) { g.pending[j]++ })
+	}
+	for i := range g.pending {
+		if g.pending[i] == 0 {
+			g.push(i)
 		}
 	}
-	return best
 }
 
-func (g *generator) ready(i int) bool {
-	for _, k := range g.into[i] {
-		if l := &g.p.Links[k]; l.From >= 0 && l.Min > expand.NoMin && !g.placed[l.From] {
-			return false
+// after calls visit for every activity that waits for i by a link or an order rule, once for each.
+func (g *generator) after(i int, visit func(j int)) {
+	for _, k := range g.from[i] {
+		if l := &g.p.Links[k]; l.Min > expand.NoMin {
+			visit(l.To)
 		}
 	}
 	for o, c := range g.choice {
 		for _, b := range g.p.Orders[o].Choices[c] {
-			if b.Then == i && !g.placed[b.First] {
-				return false
+			if b.First == i {
+				visit(b.Then)
 			}
 		}
 	}
-	return true
+}
+
+// release tells those that wait for i that it is placed.
+func (g *generator) release(i int) {
+	g.after(i, func(j int) {
+		if g.pending[j]--; g.pending[j] == 0 {
+			g.push(j)
+		}
+	})
+}
+
+// push queues an activity that waits for nothing more.
+func (g *generator) push(i int) {
+	key := g.rank[i]
+	if g.standing[i] || g.urgent(i) {
+		key -= len(g.p.Acts)
+	}
+	heap.Push(&g.queue, entry{key, i})
+}
+
+// next gives the unplaced activity that comes first in the list among those whose earlier
+// activities are placed. Standing time, and what must follow within a maximum wait, go first of all.
+func (g *generator) next() int {
+	for len(g.queue) > 0 {
+		e := heap.Pop(&g.queue).(entry)
+		if !g.placed[e.act] && g.pending[e.act] == 0 {
+			return e.act
+		}
+	}
+	return -1
+}
+
+// entry is an activity in the queue; queue is a heap of them, least key first.
+type entry struct{ key, act int }
+
+type queue []entry
+
+func (q queue) Len() int { return len(q) }
+func (q queue) Less(a, b int) bool {
+	return q[a].key < q[b].key || q[a].key == q[b].key && q[a].act < q[b].act
+}
+func (q queue) Swap(a, b int) { q[a], q[b] = q[b], q[a] }
+func (q *queue) Push(x any)   { *q = append(*q, x.(entry)) }
+func (q *queue) Pop() any {
+	old := *q
+	x := old[len(old)-1]
+	*q = old[:len(old)-1]
+	return x
 }
 
 func (g *generator) urgent(i int) bool {
@@ -260,6 +308,9 @@ func (g *generator) earliest(i, m, s, limit int, skip *skipper) int {
 		if b.kind == free {
 			return s
 		}
+		if g.trace != nil {
+			g.trace(b)
+		}
 		s = w.Start(max(b.next, s+1))
 	}
 	return problem.Inf
@@ -300,25 +351,25 @@ func (g *generator) repair(i int) (undone int, ok bool) {
 	return undone, true
 }
 
-// drop unschedules activity i and everything placed that comes after it by links.
+// drop unschedules activity i and everything placed that comes after it, and queues i again.
 func (g *generator) drop(i int) int {
+	n := g.undo(i)
+	if n > 0 && g.pending[i] == 0 {
+		g.push(i)
+	}
+	return n
+}
+
+func (g *generator) undo(i int) int {
 	if !g.placed[i] {
 		return 0
 	}
 	g.take(i)
 	n := 1
-	for _, k := range g.from[i] {
-		if l := &g.p.Links[k]; l.Min > expand.NoMin {
-			n += g.drop(l.To)
-		}
-	}
-	for o, c := range g.choice {
-		for _, b := range g.p.Orders[o].Choices[c] {
-			if b.First == i {
-				n += g.drop(b.Then)
-			}
-		}
-	}
+	g.after(i, func(j int) {
+		n += g.undo(j)
+		g.pending[j]++
+	})
 	return n
 }
 

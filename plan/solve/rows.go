@@ -60,41 +60,82 @@ func (r *rower) setBy(i int) []plan.Cause {
 	r.g.take(i)
 	defer r.g.put(i, r.s.Mode[i], r.s.Start[i])
 	limits := r.limits(i)
+	met := map[blockKind]map[int]bool{}
+	r.meet(i, nil, met)
 	var single []plan.Cause
 	for k := range limits {
-		if r.earliest(i, limits[k:k+1]) < r.s.Start[i] {
+		if limits[k].met(met) && r.earliest(i, limits[k:k+1]) < r.s.Start[i] {
 			single = append(single, limits[k].cause)
 		}
 	}
 	if len(single) > 0 {
 		return r.ordered(i, single)
 	}
-	if r.earliest(i, limits) >= r.s.Start[i] {
-		return []plan.Cause{{Kind: plan.ByStart, Step: i, Other: -1, Text: "work may begin", Pos: a.Pos()}}
-	}
-	if joint := r.joint(i, limits); joint != nil {
+	if joint := r.joint(i, limits, met); joint != nil {
 		return joint
 	}
 	return []plan.Cause{{Kind: plan.ByStart, Step: i, Other: -1, Text: "work may begin", Pos: a.Pos()}}
 }
 
+// meet notes what stands in the way of starts before the planned one, with limits left out.
+// What is not met on the way cannot, left out alone, make a difference.
+func (r *rower) meet(i int, limits []limit, met map[blockKind]map[int]bool) int {
+	r.g.trace = func(b block) {
+		if met[b.kind] == nil {
+			met[b.kind] = map[int]bool{}
+		}
+		met[b.kind][b.who] = true
+	}
+	defer func() { r.g.trace = nil }()
+	return r.earliest(i, limits)
+}
+
+// met says whether a limit was met; links, dates and calendars count as met always.
+func (l *limit) met(met map[blockKind]map[int]bool) bool {
+	for p := range l.skip.persons {
+		return met[byPerson][p]
+	}
+	for p := range l.skip.resources {
+		return met[byResource][p]
+	}
+	for p := range l.skip.pairs {
+		return met[byPair][p]
+	}
+	return true
+}
+
 // joint finds things that set the start of i together: all that comes from one other activity,
 // if that is enough, else a least set of limits, opening hours only if need be.
-func (r *rower) joint(i int, limits []limit) []plan.Cause {
+func (r *rower) joint(i int, limits []limit, met map[blockKind]map[int]bool) []plan.Cause {
+	var set []limit
+	for round := 0; ; round++ { // widen until leaving all of it out lets i start earlier
+		n := len(set)
+		set = set[:0]
+		for _, l := range limits {
+			if l.met(met) && !(l.clock && round < 8) {
+				set = append(set, l)
+			}
+		}
+		if r.meet(i, set, met) < r.s.Start[i] {
+			break
+		}
+		if len(set) == n && round >= 8 {
+			return nil
+		}
+	}
 	byOther := map[int][]limit{}
-	for _, l := range limits {
+	for _, l := range set {
 		if l.cause.Other >= 0 {
 			byOther[l.cause.Other] = append(byOther[l.cause.Other], l)
 		}
 	}
-	set := limits
-	for _, l := range limits { // in order, so that equal input gives equal output
+	for _, l := range set { // in order, so that equal input gives equal output
 		if group := byOther[l.cause.Other]; l.cause.Other >= 0 && r.earliest(i, group) < r.s.Start[i] {
 			set = group
 			break
 		}
 	}
-	for k := len(set) - 1; k >= 0; k-- { // the calendar stands last and goes first
+	for k := len(set) - 1; k >= 0; k-- {
 		less := append(append([]limit(nil), set[:k]...), set[k+1:]...)
 		if r.earliest(i, less) < r.s.Start[i] {
 			set = less

@@ -31,13 +31,15 @@ type state struct {
 	people [][]busy  // by person, sorted by from
 	use    [][]level // by resource, sorted by at
 	pairs  [][]int   // by activity: indices into Problem.Pairs
+	ends   [][2]int  // by pair: when its placed A and B are clear, tails included
 	ticks  int64     // starts tried, the measure of work done
 }
 
 func newState(p *problem.Problem) *state {
 	n := len(p.Acts)
 	s := &state{p: p, start: make([]int, n), finish: make([]int, n), mode: make([]int, n), placed: make([]bool, n),
-		people: make([][]busy, len(p.People)), use: make([][]level, len(p.Res)), pairs: make([][]int, n)}
+		people: make([][]busy, len(p.People)), use: make([][]level, len(p.Res)), pairs: make([][]int, n),
+		ends: make([][2]int, len(p.Pairs))}
 	for i, pr := range p.Pairs {
 		s.pairs[pr.A] = append(s.pairs[pr.A], i)
 		s.pairs[pr.B] = append(s.pairs[pr.B], i)
@@ -211,39 +213,41 @@ func (s *state) useBlock(u problem.Use, from, to int) block {
 // pairBlock looks whether pair k keeps i from running from at to fin.
 func (s *state) pairBlock(k, i, at, fin int, skip *skipper) block {
 	pr := &s.p.Pairs[k]
-	j, tailI, tailJ := pr.B, pr.TailA, pr.TailB
+	j, tailI, endJ := pr.B, pr.TailA, s.ends[k][1]
 	if j == i {
-		j, tailI, tailJ = pr.A, pr.TailB, pr.TailA
+		j, tailI, endJ = pr.A, pr.TailB, s.ends[k][0]
 	}
-	if !s.placed[j] || skip.pair(k) || at == fin || s.start[j] == s.finish[j] {
+	if !s.placed[j] || at >= endJ || at == fin || s.start[j] == s.finish[j] || skip.pair(k) {
 		return block{}
 	}
-	endI, endJ := fin, s.finish[j]
-	if tailI != nil {
+	endI := fin
+	if tailI != nil && s.start[j] >= fin {
 		endI = tailI(fin)
 	}
-	if tailJ != nil {
-		endJ = tailJ(endJ)
-	}
-	if at < endJ && s.start[j] < endI {
+	if s.start[j] < endI {
 		return block{next: endJ, before: s.start[j], kind: byPair, who: k, other: j}
 	}
 	return block{}
 }
 
-// watchBlock looks whether the keeper of the fire watch is free after every stop.
+// watchBlock looks whether the keeper of the fire watch is free after every stop, and whether
+// the workface has room for the watch.
 func (s *state) watchBlock(a *problem.Act, md *problem.Mode, at, fin int, skip *skipper) block {
-	if skip.person(md.Keeper) {
-		return block{}
-	}
 	for _, e := range md.Time.Stops(at) {
-		b := s.personBlock(md.Keeper, e, e+md.Time.Watch(), a.Step.Face)
+		var b block
+		if !skip.person(md.Keeper) {
+			b = s.personBlock(md.Keeper, e, e+md.Time.Watch(), a.Step.Face)
+		}
+		if b.kind == free && a.WatchRoom > 0 && !skip.resource(a.WatchRoom-1) {
+			b = s.useBlock(problem.Use{Res: a.WatchRoom - 1, Amount: 1}, e, e+md.Time.Watch())
+		}
 		if b.kind == free {
 			continue
 		}
-		b.next = e
 		if e == fin {
-			b.next = at + 1
+			b.next = firstFinishing(md.Time, b.next, at+1)
+		} else {
+			b.next = e
 		}
 		b.before = min(b.before-md.Time.Watch(), e-1)
 		return b
@@ -257,6 +261,16 @@ func (s *state) put(i, m, at int) {
 	md := &a.Modes[m]
 	fin := md.Time.Finish(at)
 	s.placed[i], s.start[i], s.finish[i], s.mode[i] = true, at, fin, m
+	for _, k := range s.pairs[i] {
+		side, tail := 0, s.p.Pairs[k].TailA
+		if s.p.Pairs[k].B == i {
+			side, tail = 1, s.p.Pairs[k].TailB
+		}
+		s.ends[k][side] = fin
+		if tail != nil {
+			s.ends[k][side] = tail(fin)
+		}
+	}
 	for _, u := range a.Uses {
 		if u.Stays {
 			s.occupy(u, at, fin)
@@ -283,6 +297,9 @@ func (s *state) put(i, m, at int) {
 	if md.Keeper >= 0 && md.Time.Watch() > 0 {
 		for _, e := range md.Time.Stops(at) {
 			s.insert(md.Keeper, busy{e, e + md.Time.Watch(), i, a.Step.Face})
+			if a.WatchRoom > 0 {
+				s.change(a.WatchRoom-1, e, e+md.Time.Watch(), 1)
+			}
 		}
 	}
 }
@@ -361,6 +378,11 @@ func (s *state) take(i int) {
 			}
 		}
 	})
+	if md.Keeper >= 0 && md.Time.Watch() > 0 && a.WatchRoom > 0 {
+		for _, e := range md.Time.Stops(s.start[i]) {
+			s.change(a.WatchRoom-1, e, e+md.Time.Watch(), -1)
+		}
+	}
 	people := append(append([]int(nil), md.Crew...), md.Relief...)
 	for _, p := range people {
 		keep := s.people[p][:0]

@@ -9,7 +9,8 @@ import (
 )
 
 // How far ahead of leaving home work may begin where the job file does not say, and how far
-// past the window the hours are laid out for a plan that is late, in days.
+// past the window the hours are laid out for a plan that is late, in days (a longer window is
+// laid out twice over).
 const (
 	HomeDays = 14
 	PastDays = 21
@@ -98,7 +99,8 @@ func (w *Work) lay() {
 	if w.Trip != nil {
 		end = w.Trip.Home
 	}
-	w.Span = hours.Span{From: begin, To: end + PastDays*1440}
+	past := max(PastDays*1440, w.Window.Closes-w.Window.Opens)
+	w.Span = hours.Span{From: begin, To: end + past}
 	w.Presence, w.Travel = map[string][]Stay{}, map[string][]hours.Span{}
 	for _, p := range w.Job.People {
 		if !p.Outside {

@@ -10,6 +10,7 @@ import (
 	"sailby/tasks/coat"
 	"sailby/tasks/lift"
 	"sailby/tasks/origin"
+	"sailby/weld"
 )
 
 // area gives the surface of a prep or coat task in m2: its own area, else that of what it is on.
@@ -197,27 +198,21 @@ func (x *expander) fitUp(t *tasks.Task) hands {
 	return h
 }
 
-// testMinutes are house estimates for a test: minutes fixed and a metre of seam.
-var testMinutes = map[string]struct {
-	fixed, perMetre float64
-	source          origin.Origin
-}{
-	"visual":            {15, 4, origin.Origin{Kind: origin.Judgement, Source: "visual: 15 min and 4 min a metre"}},
-	"dye penetrant":     {30, 10, origin.Origin{Kind: origin.Judgement, Source: "dye penetrant: about 30 min a round, 10 min a metre more"}},
-	"magnetic particle": {30, 8, origin.Origin{Kind: origin.Judgement, Source: "magnetic particle: 30 min and 8 min a metre"}},
-	"ultrasonic":        {45, 20, origin.Origin{Kind: origin.Judgement, Source: "ultrasonic: 45 min and 20 min a metre"}},
-	"leak":              {60, 5, origin.Origin{Kind: origin.Judgement, Source: "leak test: 60 min and 5 min a metre"}},
-	"load":              {90, 0, origin.Origin{Kind: origin.Judgement, Source: "load test: 90 min"}},
-}
+// testWords are the test methods that have hours of their own, by the words of the job file.
+var testWords = [][2]string{{"visual", "visual"}, {"dye penetrant", "penetrant"}, {"penetrant", "penetrant"}, {"magnetic particle", "magnetic"},
+	{"magnetic", "magnetic"}, {"vacuum box", "vacuum box"}, {"air", "air"}, {"hose", "hose"}}
 
 // TestMethods names the test methods that have hours of their own.
 func TestMethods() []string {
-	return []string{"visual", "dye penetrant", "magnetic particle", "ultrasonic", "leak", "load"}
+	return []string{"visual", "dye penetrant", "magnetic particle", "vacuum box", "air", "hose"}
 }
 
 // test estimates a test from its method and the length of the seams it follows.
 func (x *expander) test(t *tasks.Task) hands {
 	h := hands{people: 1}
+	if t.Hours.Pos.Given() || t.ManHours.Pos.Given() {
+		return h
+	}
 	by := t.By
 	if by == "" {
 		by = t.Method
@@ -225,29 +220,44 @@ func (x *expander) test(t *tasks.Task) hands {
 	if by == "" {
 		by = "visual"
 	}
-	m, ok := testMinutes[by]
-	if !ok {
+	method := ""
+	for _, w := range testWords {
+		if w[0] == by {
+			method = w[1]
+		}
+	}
+	if method == "" {
 		h.fault = fmt.Errorf("a test by %q has no hours of its own", by)
 		h.hint = "give hours, or test by one of: " + strings.Join(TestMethods(), ", ")
 		return h
 	}
-	metres := 0.0
+	length := 0.0
 	for _, l := range t.Links {
 		if w := x.byName[l.Task]; w != nil && w.Kind == tasks.Weld {
 			for _, s := range w.Seams {
-				metres += s.Joint.Length / 1000
+				length += s.Joint.Length
 			}
 		}
 	}
 	if t.Length.Pos.Given() {
-		metres = t.Length.Value / 1000
+		length = t.Length.Value
 	}
-	total := m.fixed + metres*m.perMetre
+	if length <= 0 {
+		h.fault = fmt.Errorf("nothing says what length of seam it tests")
+		h.hint = "put it after a weld with joints, or give length: 2 m, or hours"
+		return h
+	}
+	l, err := weld.Test{Method: method, Length: length, Temperature: x.steel(t.Place), Site: x.atSite(t), Origin: t.Length.Pos.Origin("")}.Work()
+	if err != nil {
+		return h.failed(err)
+	}
+	// The dwell is waited out at the work: it is part of the test's hands-on time.
+	total := float64(l.HandsOn) + float64(l.Standing)
 	h.minutes = spread(total)
-	h.est.Figure = origin.Worked("hands-on time", total, "min", "fixed + seam x rate",
-		origin.Figure{Name: "fixed", Value: m.fixed, Unit: "min", Origin: m.source},
-		origin.Figure{Name: "rate", Value: m.perMetre, Unit: "min/m", Origin: m.source},
-		origin.Worked("seam tested", metres, "m", "length of the seams it follows"))
+	h.est.Figure, h.est.Notes = l.Hours, l.Warnings
+	if l.Standing > 0 {
+		h.est.Figure = origin.Worked("hands-on time", total, "min", "work + dwell, waited out at the work", l.Hours, l.Wait)
+	}
 	return h
 }
 

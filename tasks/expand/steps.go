@@ -80,6 +80,7 @@ func (x *expander) handsStep(t *tasks.Task, name string, h hands) *Step {
 	}
 	x.kit(t, s, h)
 	x.statesOf(t, s, h)
+	x.permits(t, s)
 	if t.NotBefore != nil {
 		s.NotBefore = max(s.NotBefore, x.moment(*t.NotBefore))
 	}
@@ -130,6 +131,10 @@ func (x *expander) nature(t *tasks.Task, s *Step, h hands) {
 			s.Works = append(s.Works, asm(p))
 		}
 	}
+}
+
+// permits lists the permits that the step wants (R23).
+func (x *expander) permits(t *tasks.Task, s *Step) {
 	for _, p := range t.Place.Permits {
 		if permitFor(p.For, t, s) {
 			s.Wants = append(s.Wants, p.Name)
@@ -143,17 +148,23 @@ func asm(name string) string {
 }
 
 func permitFor(what string, t *tasks.Task, s *Step) bool {
+	f := t.Face
 	switch what {
-	case tasks.HotWorkState:
-		return s.Hot
-	case "closed space":
-		return t.Face != nil && t.Face.Closed
-	case tasks.LoadOverhead:
-		return t.Kind == tasks.Lift
-	case "all", "":
+	case "all", "", string(t.Kind):
 		return true
+	case "closed space":
+		return f != nil && f.Closed
+	case "over water":
+		return f != nil && f.Water
+	case "between tides":
+		return f != nil && (f.Tidal || f.Level.Pos.Given())
 	}
-	return what == string(t.Kind)
+	for _, st := range s.States {
+		if st.Name == what {
+			return true
+		}
+	}
+	return what == tasks.HotWorkState && s.Hot
 }
 
 // hotWork adds the fire watch (R13).
@@ -198,6 +209,9 @@ func (x *expander) kit(t *tasks.Task, s *Step, h hands) {
 	}
 	drawn := false
 	for _, u := range use {
+		if u.Kit.At != nil && u.Kit.At != t.Place {
+			x.fault(t.Pos, "leave out its `at`, or use other kit", "task %q: kit %q stays at %s and the task is at %s", t.Name, u.Kit.Name, u.Kit.At.Name, t.Place.Name)
+		}
 		s.Kit = append(s.Kit, Use{Kit: u.Kit, Count: u.Count, Stays: u.Kit.Stays})
 		s.Power += u.Kit.Draws * float64(u.Count)
 		drawn = drawn || u.Kit.Draws > 0
@@ -257,6 +271,7 @@ func (x *expander) standing(t *tasks.Task, after *Step) *Step {
 		s.InOneGo, s.OverMeals, s.Working = true, false, minutes
 		s.Class = Hands
 		s.HandsOn, s.Clock = minutes, 0
+		s.States = append(s.States, State{Name: tasks.PeopleState})
 		for _, n := range s.Needs {
 			s.Room += n.Count
 		}
@@ -297,7 +312,7 @@ func (x *expander) afterWeld(t *tasks.Task, main *Step) {
 		x.tie(main, s, "cooling")
 		x.states[name+" / cooled"], x.states[name+" / ready for NDT"] = s, s
 	}
-	if e.BeforeNDT > e.Cooling && x.tested(t) {
+	if e.BeforeNDT > e.Cooling && x.tested(t) { // the longer of the two is waited for
 		s := x.clock(t, "hold before NDT", e.BeforeNDT.Whole(), e.Why.BeforeNDT)
 		x.tie(main, s, "hold before NDT")
 		x.states[name+" / ready for NDT"] = s
@@ -372,13 +387,19 @@ func (x *expander) homeward() {
 			}
 		}
 	}
-	for _, s := range w.Steps {
-		if s.Site {
+	for _, s := range append([]*Step(nil), w.Steps...) {
+		if s.Site || s.Absent {
 			continue
 		}
 		for _, a := range append(s.Works, s.Moves) {
-			if travels[a] {
-				s.Deadline = min(s.Deadline, leaves)
+			if !travels[a] {
+				continue
+			}
+			s.Deadline = min(s.Deadline, leaves)
+			if s.Task.Kind == tasks.Coat && s == x.lastHands(s.Task) { // what travels is dry to handle (R11)
+				if dry, err := x.filmState(s.Task, "hard dry", nil); err == nil {
+					dry.Deadline = min(dry.Deadline, leaves)
+				}
 			}
 		}
 	}

@@ -1,6 +1,7 @@
 package expand
 
 import (
+	"errors"
 	"fmt"
 
 	"sailby/tasks"
@@ -28,11 +29,7 @@ func (x *expander) weld(t *tasks.Task) hands {
 		Steel: weld.Steel{Grade: x.w.Job.Steel}, FittedUp: x.fittedUp(t),
 	})
 	if err != nil {
-		h.fault = err
-		if we, ok := err.(*weld.Error); ok {
-			h.hint = we.Hint
-		}
-		return h
+		return h.failed(err)
 	}
 	n := float64(h.people)
 	h.minutes = spread(float64(e.HandsOn) / n)
@@ -85,98 +82,58 @@ func (x *expander) fittedUp(t *tasks.Task) bool {
 	return false
 }
 
-// cutter is a way to cut: how fast, how hot, how loud.
-type cutter struct {
-	hot, noisy bool
-	speed      func(thickness float64) origin.Figure // mm/min
-	pierce     float64                               // s for each start
-}
+// Cutters names the ways to cut that have hours of their own; only a disc among them is noisy
+// without being a torch.
+func Cutters() []string { return []string{"plasma", "oxy-fuel", "disc"} }
 
-// plasmaPoints are the quality speeds of a 40 A hand plasma on carbon steel.
-var plasmaPoints = [][2]float64{{3, 3150}, {4, 1900}, {6, 1050}, {8, 650}, {10, 390}, {12, 310}, {15, 180}, {20, 70}, {25, 50}}
-
-// oxyPoints are low (hand) speeds of oxy-fuel cutting.
-var oxyPoints = [][2]float64{{6, 400}, {10, 380}, {12, 300}, {20, 300}, {25, 230}, {38, 150}, {50, 150}, {75, 100}}
-
-func cutters() map[string]cutter {
-	return map[string]cutter{
-		"plasma": {hot: true, noisy: true, speed: func(t float64) origin.Figure {
-			return origin.Published("cutting speed", between(plasmaPoints, t), "mm/min", "40 A hand plasma, maker's manual, quality cut")
-		}, pierce: 3},
-		"oxy-fuel": {hot: true, speed: func(t float64) origin.Figure {
-			return origin.Recalled("cutting speed", between(oxyPoints, t), "mm/min", "AWS Welding Handbook, hand cutting, low end")
-		}, pierce: 20},
-		"disc": {hot: true, noisy: true, speed: func(t float64) origin.Figure {
-			return origin.House("cutting speed", 600/t, "mm/min", "cut-off disc: 600 mm2 of section a minute")
-		}},
-		"saw": {noisy: true, speed: func(t float64) origin.Figure {
-			return origin.House("cutting speed", 800/t, "mm/min", "saw: 800 mm2 of section a minute")
-		}},
+// nature of a way to cut: whether it throws sparks, and whether it is loud.
+func cutNature(by string) (hot, noisy bool) {
+	switch by {
+	case "saw", "shear", "drill", "water jet":
+		return false, true
+	case "oxy-fuel":
+		return true, false
 	}
+	return true, true
 }
-
-// Cutters names the ways to cut that have a speed of their own.
-func Cutters() []string { return []string{"plasma", "oxy-fuel", "disc", "saw"} }
-
-// between interpolates linearly, and keeps to the nearest end outside.
-func between(points [][2]float64, at float64) float64 {
-	if at <= points[0][0] {
-		return points[0][1]
-	}
-	for i := 1; i < len(points); i++ {
-		a, b := points[i-1], points[i]
-		if at <= b[0] {
-			return a[1] + (b[1]-a[1])*(at-a[0])/(b[0]-a[0])
-		}
-	}
-	return points[len(points)-1][1]
-}
-
-// The house's own minutes around a cut: marking out and setting up a guide, and dressing the edge.
-const (
-	markOut  = 6.0 // min a metre
-	dressing = 4.0 // min a metre
-	cutReady = 10. // min for each task
-)
 
 // cut estimates a cutting task from its length and thickness.
 func (x *expander) cut(t *tasks.Task) hands {
-	h := hands{people: 1}
+	h := hands{people: 1, least: 10}
 	by := t.By
 	if by == "" {
 		by = "disc"
 	}
-	c, known := cutters()[by]
-	if !known {
-		c = cutters()["disc"]
-		c.hot, c.noisy = by != "drill" && by != "shear", true
+	h.hot, h.noisy = cutNature(by)
+	if t.Hours.Pos.Given() || t.ManHours.Pos.Given() {
+		return h
 	}
-	h.hot, h.noisy = c.hot, c.noisy
-	length, thick := t.Length, t.Thickness
-	if !thick.Pos.Given() || !length.Pos.Given() {
+	if !t.Thickness.Pos.Given() || !t.Length.Pos.Given() {
 		h.fault = fmt.Errorf("it needs length and thickness, or hours")
 		h.hint = "write for instance length: 1.9 m, thickness: 16 mm, by: oxy-fuel"
 		return h
 	}
-	if !known && !t.Hours.Pos.Given() && !t.ManHours.Pos.Given() {
-		h.fault = fmt.Errorf("cutting by %q has no speed of its own", by)
-		h.hint = "give hours, or cut by plasma, oxy-fuel, disc or saw"
+	if !has(Cutters(), by) {
+		h.fault = fmt.Errorf("cutting by %q has no hours of its own", by)
+		h.hint = "give hours, or cut by plasma, oxy-fuel or disc"
 		return h
 	}
-	metres := length.Value / 1000
-	speed := c.speed(thick.Value)
-	arc := length.Value / speed.Value
-	l := origin.Written("length", length.Value, "mm", length.Pos.Origin("length"))
-	cutting := origin.Worked("cutting", arc, "min", "length over speed", l, speed,
-		origin.Written("thickness", thick.Value, "mm", thick.Pos.Origin("thickness")))
-	around := origin.Worked("marking, guide, dressing", cutReady+metres*(markOut+dressing), "min", "fixed part + length x rate", l,
-		origin.House("make ready", cutReady, "min", "leads, gas, guide"),
-		origin.House("mark out", markOut, "min/m", "mark out and set a guide"),
-		origin.House("dress", dressing, "min/m", "take off slag, dress the edge"),
-		origin.House("pierce", c.pierce, "s", "each start"))
-	total := arc + around.Value + c.pierce/60
-	h.minutes = spread(total)
-	h.least = 10
-	h.est.Figure = origin.Worked("hands-on time", total, "min", "cutting + what is around it", cutting, around)
+	l, err := weld.Cut{Method: by, Thickness: t.Thickness.Value, Length: t.Length.Value, Site: x.atSite(t),
+		Origin: t.Length.Pos.Origin("")}.Work()
+	if err != nil {
+		return h.failed(err)
+	}
+	h.minutes = spread(float64(l.HandsOn))
+	h.est.Figure, h.est.Notes = l.Hours, l.Warnings
+	return h
+}
+
+// failed puts an error of the weld package, with its way out, on an estimate.
+func (h hands) failed(err error) hands {
+	h.fault, h.hint = err, "give hours"
+	var we *weld.Error
+	if errors.As(err, &we) && we.Hint != "" {
+		h.hint = we.Hint
+	}
 	return h
 }
