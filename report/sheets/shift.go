@@ -3,10 +3,8 @@ package sheets
 import (
 	"fmt"
 	"slices"
-	"strings"
 
 	"sailby/report/agenda"
-	"sailby/report/clean"
 	"sailby/tasks/expand"
 	"sailby/tasks/hours"
 	"sailby/tasks/quantity"
@@ -30,7 +28,7 @@ func (k *pack) shift(s *agenda.Shift) {
 	k.dayTasks(s, steps)
 	k.stopped(s, steps)
 	if list := cautionsOf(k.work, steps); len(list) > 0 {
-		p.heading("Take care", lineHeight(body))
+		p.heading("Take care", float64(min(len(list), 10))*lineHeight(body))
 		for _, c := range list {
 			p.point("-", c.short, false)
 		}
@@ -85,121 +83,6 @@ func (k *pack) dayTasks(s *agenda.Shift, steps []*expand.Step) {
 	t.end()
 }
 
-// taskCell says what the task is, where, who, how much of what, and by when.
-func (k *pack) taskCell(s *agenda.Shift, st *expand.Step) cell {
-	c := loud(agenda.StepLabel(k.work, st))
-	add := func(bold bool, text string) {
-		if text != "" {
-			c.lines = append(c.lines, line{text, bold})
-		}
-	}
-	ps := k.planned(st)
-	add(false, joined(": ", where(s, st), strings.Join(names(ps.People, ps.Relief), ", ")))
-	add(false, joined("; ", agenda.Amount(st), prefixed("drawing ", st.Task.Drawing), prefixed("with ", kitWords(st))))
-	for _, n := range clean.Lines(st.Task.Note) {
-		add(false, n)
-	}
-	for _, n := range st.Estimate.Notes {
-		add(false, n)
-	}
-	ways := []string{}
-	if st.InOneGo {
-		ways = append(ways, "in one go")
-	}
-	if st.Lone {
-		ways = append(ways, "never alone")
-	}
-	for _, e := range s.Entries {
-		switch {
-		case e.Step != st:
-		case e.Watch:
-			add(true, fmt.Sprintf("Fire watch %s: %s", agenda.Between(e.Span, s.Zone), strings.Join(names(e.People), ", ")))
-		case e.Goes && e.Piece == lastEntry(s, st).Piece:
-			ways = append(ways, "goes on "+agenda.NextPiece(k.work, e)+hoursLeft(e))
-		}
-	}
-	add(false, upper(strings.Join(ways, "; ")))
-	k.byWhen(st, s, add)
-	return c
-}
-
-// byWhen adds the deadline, and the latest finish that keeps every deadline.
-func (k *pack) byWhen(st *expand.Step, s *agenda.Shift, add func(bool, string)) {
-	if st.Task.Deadline != nil && st.Deadline < hours.Far {
-		add(true, "Must be done by "+onDay(st.Deadline, s))
-	}
-	if st.Index >= len(k.a.Rows) {
-		return
-	}
-	switch m := k.a.Rows[st.Index].Latest; {
-	case m <= 0 || m >= hours.Far:
-	case m > k.planned(st).Finish:
-		add(false, "At the latest "+onDay(m, s))
-	default:
-		add(true, "No leeway: at the latest "+onDay(m, s))
-	}
-}
-
-// onDay writes a time, without its day where that is the shift's own.
-func onDay(m hours.Minute, s *agenda.Shift) string {
-	if hours.DateOf(m.In(s.Zone)) == s.Date {
-		return agenda.Clock(m, s.Zone)
-	}
-	return agenda.When(m, s.Zone)
-}
-
-// hoursLeft says what working time the plan leaves for later shifts.
-func hoursLeft(e agenda.Entry) string {
-	n := 0
-	for _, p := range e.Planned.Pieces {
-		if p.From >= e.To {
-			n += p.Len()
-		}
-	}
-	if n == 0 {
-		return ""
-	}
-	return ", " + quantity.Hours(n) + " of it then"
-}
-
-// lastEntry is the last piece of a step in a shift.
-func lastEntry(s *agenda.Shift, st *expand.Step) agenda.Entry {
-	var last agenda.Entry
-	for _, e := range s.Entries {
-		if e.Step == st && !e.Watch {
-			last = e
-		}
-	}
-	return last
-}
-
-func names(lists ...[]string) []string {
-	var out []string
-	for _, l := range lists {
-		for _, n := range l {
-			if n = paper(n); !slices.Contains(out, n) {
-				out = append(out, n)
-			}
-		}
-	}
-	return out
-}
-
-func kitWords(st *expand.Step) string {
-	var out []string
-	for _, u := range st.Kit {
-		if u.Kit == nil {
-			continue
-		}
-		n := paper(u.Kit.Name)
-		if u.Count > 1 {
-			n = fmt.Sprintf("%d %s", u.Count, n)
-		}
-		out = append(out, n)
-	}
-	return strings.Join(out, ", ")
-}
-
 // running prints what nobody works on but the clock does.
 func (k *pack) running(s *agenda.Shift) {
 	for _, st := range s.Standing {
@@ -235,17 +118,6 @@ func (k *pack) stopped(s *agenda.Shift, steps []*expand.Step) {
 		}
 		p.point("-", joined(", ", agenda.StepLabel(k.work, sp.Step), where(s, sp.Step), quantity.Hours(sp.Step.Working), when), false)
 	}
-}
-
-// where names the step's place, the workface alone at the shift's own place.
-func where(s *agenda.Shift, st *expand.Step) string {
-	switch {
-	case st.Place != s.Place:
-		return agenda.Where(st)
-	case st.Face != nil:
-		return clean.Line(st.Face.Name)
-	}
-	return ""
 }
 
 // begun has the boxes to fill in before work begins: permits first.

@@ -1,0 +1,186 @@
+package agenda
+
+import (
+	"cmp"
+	"slices"
+
+	"sailby/plan"
+	"sailby/tasks"
+	"sailby/tasks/expand"
+	"sailby/tasks/hours"
+)
+
+// with is the furthest that two people's shifts may start apart and still be one sheet, minutes.
+const with = 4 * 60
+
+// Shifts sorts the plan's pieces into shifts, in order of time. It gives nil without a plan.
+func Shifts(a *plan.Answer) []*Shift {
+	if a == nil || a.Plan == nil || a.Work == nil {
+		return nil
+	}
+	b := builder{a: a, duty: map[string][]hours.Span{}}
+	for _, p := range a.Work.Job.People {
+		b.duty[p.Name] = Duty(a.Work, p)
+	}
+	b.collect()
+	b.group()
+	for _, s := range b.shifts {
+		b.finish(s)
+	}
+	return b.shifts
+}
+
+// turn is one person's piece with the duty it falls into; nobody's pieces have no name.
+type turn struct {
+	who   string
+	on    hours.Span
+	entry Entry
+}
+
+type builder struct {
+	a      *plan.Answer
+	duty   map[string][]hours.Span
+	turns  []turn
+	shifts []*Shift
+}
+
+func (b *builder) collect() {
+	for _, e := range Worked(b.a) {
+		if len(e.People) == 0 {
+			b.turns = append(b.turns, turn{on: e.Span, entry: e})
+		}
+		for _, who := range e.People {
+			t := turn{who: who, on: e.Span, entry: e}
+			for _, d := range b.duty[who] {
+				if d.Has(e.From) {
+					t.on = d
+				}
+			}
+			b.turns = append(b.turns, t)
+		}
+	}
+	slices.SortStableFunc(b.turns, func(x, y turn) int {
+		return cmp.Or(cmp.Compare(boolInt(x.who == ""), boolInt(y.who == "")), cmp.Compare(x.on.From, y.on.From), cmp.Compare(x.entry.From, y.entry.From))
+	})
+}
+
+func boolInt(v bool) int {
+	if v {
+		return 1
+	}
+	return 0
+}
+
+func (b *builder) group() {
+	for _, t := range b.turns {
+		site := t.entry.Step.Place == b.a.Work.Window.Place
+		zone := Zone(b.a.Work, t.entry.Step.Place)
+		var home *Shift
+		for _, s := range b.shifts {
+			near := t.on.From >= s.From && t.on.From-s.From <= with
+			if t.who == "" || t.on == t.entry.Span { // no duty known: wherever it lies inside
+				near = s.From <= t.entry.From && t.entry.From < s.To || near
+			}
+			if near && s.Site == site && s.Zone.String() == zone.String() {
+				home = s
+				break
+			}
+		}
+		if home == nil {
+			home = &Shift{Span: t.on, Site: site, Zone: zone}
+			b.shifts = append(b.shifts, home)
+		}
+		home.To = max(home.To, t.on.To)
+		home.add(t)
+	}
+	slices.SortStableFunc(b.shifts, func(x, y *Shift) int {
+		return cmp.Or(cmp.Compare(x.From, y.From), cmp.Compare(boolInt(x.Site), boolInt(y.Site)))
+	})
+}
+
+func (s *Shift) add(t turn) {
+	if t.who != "" {
+		i := slices.IndexFunc(s.People, func(p Person) bool { return p.Name == t.who })
+		if i < 0 {
+			i = len(s.People)
+			s.People = append(s.People, Person{Name: t.who, On: t.on})
+		}
+		s.People[i].On.To = max(s.People[i].On.To, t.on.To)
+		s.People[i].Entries = append(s.People[i].Entries, t.entry)
+	}
+	for _, e := range s.Entries {
+		if e.Step == t.entry.Step && e.Span == t.entry.Span && e.Watch == t.entry.Watch && slices.Equal(e.People, t.entry.People) {
+			return
+		}
+	}
+	s.Entries = append(s.Entries, t.entry)
+}
+
+// finish sorts a shift, marks what runs over its ends, adds people who are on shift without
+// work, and the standing time.
+func (b *builder) finish(s *Shift) {
+	w := b.a.Work
+	byTime := func(x, y Entry) int {
+		return cmp.Or(cmp.Compare(x.From, y.From), cmp.Compare(x.Step.Index, y.Step.Index), cmp.Compare(boolInt(x.Watch), boolInt(y.Watch)))
+	}
+	slices.SortStableFunc(s.Entries, byTime)
+	for i := range s.Entries {
+		e := &s.Entries[i]
+		e.From0 = !e.Watch && e.Planned.Start < s.From
+		e.Goes = !e.Watch && e.Planned.Finish > s.To
+	}
+	if s.Site {
+		for _, p := range w.Job.People {
+			for _, d := range b.duty[p.Name] {
+				if d.From-s.From > with || s.From-d.From > with || !b.at(p, d, true) || slices.ContainsFunc(s.People, func(q Person) bool { return q.Name == p.Name }) {
+					continue
+				}
+				s.People = append(s.People, Person{Name: p.Name, On: d})
+				s.From, s.To = min(s.From, d.From), max(s.To, d.To)
+			}
+		}
+	}
+	order := map[string]int{}
+	for i, p := range w.Job.People {
+		order[p.Name] = i
+	}
+	slices.SortStableFunc(s.People, func(x, y Person) int { return cmp.Compare(order[x.Name], order[y.Name]) })
+	for i := range s.People {
+		slices.SortStableFunc(s.People[i].Entries, byTime)
+	}
+	s.place()
+	begin := s.From.In(s.Zone)
+	s.Date = hours.DateOf(begin)
+	s.Night = hours.DateOf((s.To - 1).In(s.Zone)) != s.Date
+	for i, ps := range b.a.Plan.Steps {
+		st := w.Steps[i]
+		span := hours.Span{From: ps.Start, To: ps.Finish}
+		if st.Absent || st.Class == expand.Hands || (st.Place == w.Window.Place) != s.Site || !span.Overlaps(s.Span) {
+			continue
+		}
+		s.Standing = append(s.Standing, Standing{span, st})
+	}
+}
+
+// at says whether the person is at the site for the start of d.
+func (b *builder) at(p *tasks.Person, d hours.Span, site bool) bool {
+	for _, stay := range b.a.Work.Presence[p.Name] {
+		if stay.Site == site && stay.Overlaps(d) && stay.From <= d.From {
+			return true
+		}
+	}
+	return false
+}
+
+// place picks the place with most of the shift's minutes, the first of equals.
+func (s *Shift) place() {
+	minutes := map[*tasks.Place]int{}
+	for _, e := range s.Entries {
+		minutes[e.Step.Place] += e.Len()
+	}
+	for _, e := range s.Entries {
+		if s.Place == nil || minutes[e.Step.Place] > minutes[s.Place] {
+			s.Place = e.Step.Place
+		}
+	}
+}
