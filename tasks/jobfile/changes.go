@@ -109,7 +109,7 @@ func parseValue(s tasks.Setting) (*yaml.Node, error) {
 	if doc == nil || len(doc.Content) == 0 {
 		return nil, errors.New("no value")
 	}
-	place(doc.Content[0], max(s.Pos.Line, 1), max(s.Pos.Col, 1), 0)
+	place(doc.Content[0], s.Pos.Line, s.Pos.Col, 0)
 	return doc.Content[0], nil
 }
 
@@ -132,18 +132,25 @@ func keysAt(n *yaml.Node) []string {
 	return out
 }
 
-// put sets the value under a path; the last key may be new. Where the path leads nowhere it gives
+// put sets the value under a path; the last key may be new. A value that stands nowhere (line 0)
+// takes the place of what it replaces, or of the mapping that it is added to. Where the path leads nowhere it gives
 // the node that it reached and the rest.
 func put(at *yaml.Node, path string, value *yaml.Node) (reached *yaml.Node, rest string) {
 	for {
 		i, rest, found := step(at, path)
 		switch {
 		case found && rest == "":
+			if value.Line == 0 {
+				place(value, at.Content[i].Line, at.Content[i].Column, 0)
+			}
 			at.Content[i] = value
 			return nil, ""
 		case found:
 			at, path = at.Content[i], rest
 		case at.Kind == yaml.MappingNode && path != "" && !strings.Contains(path, "/"):
+			if value.Line == 0 {
+				place(value, at.Line, at.Column, 0)
+			}
 			key := &yaml.Node{Kind: yaml.ScalarNode, Value: path, Line: value.Line, Column: value.Column}
 			at.Content = append(at.Content, key, value)
 			return nil, ""

@@ -118,14 +118,14 @@ func (r *reader) judgeTides() {
 func (r *reader) judgeTasks() {
 	groups := map[string]int{}
 	for _, d := range r.drafts {
-		if d.t.Group != "" {
+		if d.t.Group != "" && d.t.Chance > 0 {
 			groups[d.t.Group]++
 		}
 	}
 	sums := map[string]float64{}
 	for _, d := range r.drafts {
 		g := d.t.Group
-		if g == "" {
+		if g == "" || d.t.Chance == 0 {
 			continue
 		}
 		sums[g] += d.t.Chance

@@ -107,7 +107,7 @@ func (r *reader) paint(name string, at *yaml.Node, f *fields) *tasks.Paint {
 	}
 	f.nextCoats(p)
 	f.mixing(p)
-	if len(r.faults) == faults {
+	if len(r.faults) == faults && p.Kind != "" {
 		if err := p.Paint.Validate(); err != nil {
 			r.advice(at, "", err, "look at the paint's sheet")
 		}

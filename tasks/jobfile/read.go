@@ -25,7 +25,8 @@ func Read(path string) (*tasks.Job, error) {
 }
 
 // ReadChanged reads a job file with some of its values replaced, for what-if. Positions are those of
-// the file as it is; a replaced value stands where its setting is written. Errors as for Read.
+// the file as it is; a replaced value stands where its setting is written, or, where the setting
+// has no place, where the value stood before. Errors as for Read.
 func ReadChanged(path string, changes []tasks.Setting) (*tasks.Job, error) {
 	return withFolder(path, func(data []byte, fsys fs.FS) (*tasks.Job, error) {
 		return ReadBytesChanged(path, data, fsys, changes)

@@ -1,6 +1,7 @@
 package jobfile
 
 import (
+	"errors"
 	"fmt"
 	"math"
 	"slices"
@@ -162,6 +163,9 @@ func (r *reader) amount(n *yaml.Node, lead string, k *key) (float64, bool) {
 // measure reads s as an amount of dimension d within the limits of k.
 func (r *reader) measure(n *yaml.Node, lead, s string, k *key, d quantity.Dim) (float64, bool) {
 	v, err := quantity.Parse(s, d)
+	if err != nil && k.takes == hourly && errors.Is(err, quantity.ErrNoUnit) {
+		v, err = quantity.Parse(s+" h", d)
+	}
 	if err != nil {
 		r.advice(n, lead, err, "write for instance "+k.example)
 		return 0, false

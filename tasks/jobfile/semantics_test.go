@@ -353,6 +353,9 @@ func TestApplyAndReadChanged(t *testing.T) {
 			t.Error("a change is not taken over")
 		}
 	}
+	if got, want := task(t, b, "resin").Standing.Pos, task(t, read(t, data), "resin").Standing.Pos; got != want {
+		t.Errorf("the changed value stands at %v, want %v", got, want)
+	}
 	if got, want := task(t, b, "prime deck").Pos, task(t, read(t, data), "prime deck").Pos; got != want {
 		t.Errorf("a change moved a task from %v to %v", want, got)
 	}

@@ -207,6 +207,9 @@ func takeUnit(s string, d Dim) (v float64, rest string, ok bool) {
 		return 0, s, false
 	}
 	u := units[d][best]
+	if d == Percent { // 35/100 is nearer to 0.35 than 35 x 0.01
+		return n / 100, strings.TrimLeft(rest[len(u.name):], " "), true
+	}
 	return n*u.scale + u.shift, strings.TrimLeft(rest[len(u.name):], " "), true
 }
 
