@@ -244,3 +244,35 @@ func TestSpareWork(t *testing.T) {
 		t.Errorf("%s is ready, and nobody has the ticket", list[0].Step.Task.Name)
 	}
 }
+
+// TestOutsidePeopleJoinTheCrew: an inspector booked for the afternoon stands on the crew's sheet.
+func TestOutsidePeopleJoinTheCrew(t *testing.T) {
+	r := fixture.Report()
+	before := len(agenda.Shifts(r.Likely))
+	slot := &r.Job.People[4].Booked[0]
+	slot.From.Minute = 14*60 + 30
+	shifts := agenda.Shifts(r.Likely)
+	if len(shifts) != before {
+		t.Fatalf("%d shifts, want %d", len(shifts), before)
+	}
+	for _, s := range shifts {
+		for _, p := range s.People {
+			if p.Name == fixture.Inspector && (len(p.Entries) != 2 || agenda.LongDay(s.Date) != "Thursday 8 April 2027") {
+				t.Errorf("the inspector has %d pieces on %s", len(p.Entries), agenda.LongDay(s.Date))
+			}
+		}
+	}
+}
+
+func TestStepLabels(t *testing.T) {
+	w := fixture.Report().Likely.Work
+	var got []string
+	for _, s := range w.Steps {
+		if s.Task.Name == "test lugs" || s.Task.Name == "coat lugs" {
+			got = append(got, agenda.StepLabel(w, s))
+		}
+	}
+	if g, want := strings.Join(got, "|"), "test lugs: cool|test lugs|coat lugs: coat 1|coat lugs: dry 1|coat lugs: coat 2|coat lugs: hard dry"; g != want {
+		t.Errorf("got %s, want %s", g, want)
+	}
+}

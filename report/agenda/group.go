@@ -18,8 +18,9 @@ func Shifts(a *plan.Answer) []*Shift {
 	if a == nil || a.Plan == nil || a.Work == nil {
 		return nil
 	}
-	b := builder{a: a, duty: map[string][]hours.Span{}}
+	b := builder{a: a, duty: map[string][]hours.Span{}, outside: map[string]bool{"": true}}
 	for _, p := range a.Work.Job.People {
+		b.outside[p.Name] = p.Outside
 		b.duty[p.Name] = Duty(a.Work, p)
 	}
 	b.collect()
@@ -38,10 +39,11 @@ type turn struct {
 }
 
 type builder struct {
-	a      *plan.Answer
-	duty   map[string][]hours.Span
-	turns  []turn
-	shifts []*Shift
+	a       *plan.Answer
+	duty    map[string][]hours.Span
+	outside map[string]bool // people who come when booked, and nobody: they join the crew's shift
+	turns   []turn
+	shifts  []*Shift
 }
 
 func (b *builder) collect() {
@@ -60,7 +62,7 @@ func (b *builder) collect() {
 		}
 	}
 	slices.SortStableFunc(b.turns, func(x, y turn) int {
-		return cmp.Or(cmp.Compare(boolInt(x.who == ""), boolInt(y.who == "")), cmp.Compare(x.on.From, y.on.From), cmp.Compare(x.entry.From, y.entry.From))
+		return cmp.Or(cmp.Compare(boolInt(b.outside[x.who]), boolInt(b.outside[y.who])), cmp.Compare(x.on.From, y.on.From), cmp.Compare(x.entry.From, y.entry.From))
 	})
 }
 
@@ -78,8 +80,8 @@ func (b *builder) group() {
 		var home *Shift
 		for _, s := range b.shifts {
 			near := t.on.From >= s.From && t.on.From-s.From <= with
-			if t.who == "" || t.on == t.entry.Span { // no duty known: wherever it lies inside
-				near = s.From <= t.entry.From && t.entry.From < s.To || near
+			if b.outside[t.who] || t.on == t.entry.Span { // no shift of their own: wherever it lies inside
+				near = s.From <= t.entry.From && t.entry.From < s.To || near || s.From > t.on.From && s.From-t.on.From <= with
 			}
 			if near && s.Site == site && s.Zone.String() == zone.String() {
 				home = s
@@ -90,7 +92,7 @@ func (b *builder) group() {
 			home = &Shift{Span: t.on, Site: site, Zone: zone}
 			b.shifts = append(b.shifts, home)
 		}
-		home.To = max(home.To, t.on.To)
+		home.From, home.To = min(home.From, t.on.From), max(home.To, t.on.To)
 		home.add(t)
 	}
 	slices.SortStableFunc(b.shifts, func(x, y *Shift) int {

@@ -99,15 +99,19 @@ func PlaceLabel(p *tasks.Place) string {
 	return clean.Line(p.Name)
 }
 
-// StepLabel is the task's printed name, with the step's where the task has several steps.
+// StepLabel is the task's printed name, with the step's where it would not be clear which step of
+// the task is meant: the only one that people work on goes by the task's name alone.
 func StepLabel(w *expand.Work, s *expand.Step) string {
-	n := 0
+	all, hands := 0, 0
 	for _, o := range w.Steps {
 		if o.Task == s.Task && !o.Absent {
-			n++
+			all++
+			if o.Class == expand.Hands {
+				hands++
+			}
 		}
 	}
-	if n < 2 {
+	if all < 2 || hands == 1 && s.Class == expand.Hands {
 		return TaskLabel(s.Task)
 	}
 	return TaskLabel(s.Task) + ": " + clean.Line(s.Name)

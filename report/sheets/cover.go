@@ -2,6 +2,7 @@ package sheets
 
 import (
 	"fmt"
+	"math"
 
 	"sailby/plan"
 	"sailby/report/agenda"
@@ -21,8 +22,8 @@ func (k *pack) cover() {
 	k.verdicts()
 	k.windowBlock()
 	k.deadlines()
-	k.watchList()
 	k.emergency()
+	k.watchList()
 	k.governing()
 	p.skip(3)
 	p.para(agenda.Care, body, true)
@@ -90,7 +91,7 @@ func (k *pack) deadlines() {
 	}
 	p := k.p
 	p.heading("Deadlines", 25)
-	t := p.table(column{"What", 27}, column{"Must be done by", 18}, column{"Planned", 18}, column{"In hand", 14}, column{"Last start that still makes it", 23})
+	t := p.table(column{"What", 24}, column{"Must be done by", 21}, column{"Planned", 20}, column{"In hand", 14}, column{"Last start that still makes it", 21})
 	for _, d := range k.a.Deadlines {
 		last := "-"
 		if d.LastStart < hours.Far {
@@ -117,13 +118,20 @@ func (k *pack) governing() {
 	}
 }
 
+func side(v float64, plus, minus string) string {
+	if v < 0 {
+		return minus
+	}
+	return plus
+}
+
 // emergency prints whom to call and where; what the job file leaves open has a box.
 func (k *pack) emergency() {
 	e := k.job.Emergency
 	k.p.heading("If something happens", 2*(boxHeight+lineHeight(body)))
 	grid := e.GridRef
 	if pl := k.work.Window.Place; grid == "" && pl != nil && pl.HasAt {
-		grid = fmt.Sprintf("%.4f, %.4f", pl.Lat, pl.Lon)
+		grid = fmt.Sprintf("%.4f %s, %.4f %s", math.Abs(pl.Lat), side(pl.Lat, "N", "S"), math.Abs(pl.Lon), side(pl.Lon, "E", "W"))
 	}
 	k.p.fields(3, field{label: "We are at (grid or position)", value: grid}, field{label: "Telephone", value: e.Phone}, field{label: "Radio", value: e.Radio},
 		field{label: "Nearest emergency department", value: e.Hospital}, field{label: "Muster point", value: e.Muster}, field{label: "Boat or rescue cover", value: e.Boat})

@@ -8,6 +8,7 @@ import (
 	"sailby/report/agenda"
 	"sailby/tasks"
 	"sailby/tasks/expand"
+	"sailby/tasks/hours"
 	"sailby/tasks/origin"
 )
 
@@ -24,8 +25,8 @@ func (k *pack) liftSheet(s *expand.Step) {
 	p.begin("Lift sheet", "lift "+paper(t.Name), true)
 	p.big("Lift sheet")
 	p.para(agenda.TaskLabel(t), strong, true)
-	p.para(joined("; ", agenda.Where(s), k.span(s), "planned: "+strings.Join(names(k.planned(s).People), ", ")), body, false)
-	for _, g := range hireOf(k.work, s) {
+	p.para(joined("; ", t.Lifts, prefixed("by ", t.By), agenda.Where(s), k.span(s), "planned: "+strings.Join(names(k.planned(s).People), ", ")), body, false)
+	for _, g := range k.hireOf(s) {
 		p.para(g, body, false)
 	}
 	p.heading("What the plan counted with", 3*lineHeight(body))
@@ -47,7 +48,7 @@ func (k *pack) liftSheet(s *expand.Step) {
 		field{label: "Wind limit", value: gust(s)}, field{label: "Wind measured by, where"}, field{label: "Tag lines, hands"},
 		field{label: "Signaller, and how"}, field{label: "Landing place ready, seen by"}, field{label: "Certificates seen, dates"})
 	p.heading("Before the load leaves the ground", 2*(boxHeight+lineHeight(body)))
-	p.fields(2, field{label: "Planned by a competent person, name and signature"}, field{label: "Lift supervisor, name and signature"},
+	p.fields(2, field{label: "Planned by a competent person, signature"}, field{label: "Lift supervisor, signature"},
 		field{label: "Stop if (rule agreed)"}, field{label: "Lifted at, landed at"})
 }
 
@@ -62,11 +63,12 @@ func (k *pack) liftFacts(s *expand.Step) {
 			facts = append(facts, fact{what, value, from})
 		}
 	}
-	add("load", t.Lifts, "job file")
-	add("by", t.By, "job file")
 	for _, f := range s.Estimate.Facts {
 		add(f.Name, f.Amount(), soft(f.Origin))
 		for _, g := range f.From {
+			if len(f.From) > 3 {
+				break // the parts of a sum: `sailby why` lists them
+			}
 			add("of which "+g.Name, g.Amount(), soft(g.Origin))
 		}
 	}
@@ -114,15 +116,19 @@ func gust(s *expand.Step) string {
 	return ""
 }
 
-func hireOf(w *expand.Work, s *expand.Step) []string {
+// hireOf gives the slots of the step's hired kit on the day of the lift.
+func (k *pack) hireOf(s *expand.Step) []string {
 	var out []string
-	zone := agenda.Zone(w, s.Place)
+	zone := agenda.Zone(k.work, s.Place)
+	day := hours.DateOf(k.planned(s).Start.In(zone))
 	for _, u := range s.Kit {
 		if u.Kit == nil || u.Kit.Slots == nil {
 			continue
 		}
-		for _, slot := range w.Window.Slots(u.Kit.Slots) {
-			out = append(out, fmt.Sprintf("Hired %s: %s %s.", paper(u.Kit.Name), agenda.ShortDay(slot.From, zone), agenda.Between(slot, zone)))
+		for _, slot := range k.work.Window.Slots(u.Kit.Slots) {
+			if hours.DateOf(slot.From.In(zone)) == day {
+				out = append(out, fmt.Sprintf("Hired %s: %s %s.", paper(u.Kit.Name), agenda.ShortDay(slot.From, zone), agenda.Between(slot, zone)))
+			}
 		}
 	}
 	return out

@@ -126,13 +126,14 @@ func (k *pack) gear() []thing {
 	return out
 }
 
-// loads are the assemblies that are lifted, moved or worked on at the site.
+// loads are the assemblies that are lifted or moved at the site and were worked on at home: what
+// is only ever at the site is not packed.
 func (k *pack) loads() []thing {
 	var out []thing
 	index := map[string]int{}
 	for _, s := range k.siteSteps() {
 		name := s.Moves
-		if name == "" {
+		if name == "" || !k.fromHome(name) {
 			continue
 		}
 		i, ok := index[name]
@@ -152,6 +153,13 @@ func (k *pack) loads() []thing {
 		out[i].with(k, s)
 	}
 	return out
+}
+
+// fromHome says whether some step away from the site works on the assembly or moves it.
+func (k *pack) fromHome(name string) bool {
+	return slices.ContainsFunc(k.work.Steps, func(s *expand.Step) bool {
+		return !s.Absent && s.Place != k.work.Window.Place && (s.Moves == name || slices.Contains(s.Works, name))
+	})
 }
 
 // consumables adds up what the site steps use up, with the spare.

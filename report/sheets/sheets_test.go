@@ -236,7 +236,7 @@ func TestSheetsSay(t *testing.T) {
 		{"paint log", "steel above the dew point at least 3 K"},
 		{"lift hang frame", "451 kg"},
 		{"lift hang frame", "9.8 m/s gust"},
-		{"lift hang frame", "Planned by a competent person, name and signature"},
+		{"lift hang frame", "Planned by a competent person, signature"},
 		{"packing", "flux-cored wire 1.2 mm"},
 		{"packing", "1.1 kg and 0.3 kg spare"}, // the wire of the shop's weld is not taken along
 		{"packing", "Job stops without it."},

@@ -3,6 +3,7 @@ package sheets
 import (
 	"fmt"
 	"slices"
+	"strings"
 
 	"sailby/report/agenda"
 	"sailby/tasks/expand"
@@ -17,7 +18,11 @@ func (k *pack) shift(s *agenda.Shift) {
 	if s.Night {
 		day += ", night"
 	}
-	p.begin(joined(", ", day, agenda.DayOf(k.work, s)), "shift "+s.Date.String(), true)
+	head := day
+	if s.Site {
+		head += ", " + agenda.DayOf(k.work, s)
+	}
+	p.begin(head, "shift "+s.Date.String(), true)
 	p.big(day)
 	p.para(joined(", ", agenda.PlaceLabel(s.Place), agenda.DayOf(k.work, s), agenda.Between(s.Span, s.Zone)), strong, true)
 	p.para(upper(agenda.Facts(k.work, s))+".", body, false)
@@ -99,12 +104,16 @@ func (k *pack) stopped(s *agenda.Shift, steps []*expand.Step) {
 	p := k.p
 	spare := agenda.Spare(k.a, s, 4)
 	p.heading("If you have to stop", 2*lineHeight(body))
+	var whole []string
 	for i, st := range steps {
 		if st.InOneGo {
-			p.point(fmt.Sprint(i+1), "goes in one go: do not begin it unless it can be finished.", false)
+			whole = append(whole, fmt.Sprint(i+1))
 		} else if st.SafeStop > 0 {
 			p.point(fmt.Sprint(i+1), fmt.Sprintf("is not stopped before %s of it is done; starting again takes %s.", quantity.Hours(st.SafeStop), quantity.Hours(st.SetUp)), false)
 		}
+	}
+	if len(whole) > 0 {
+		p.para("In one go, not to be begun unless it can be finished: "+strings.Join(whole, ", ")+".", body, false)
 	}
 	if len(spare) == 0 {
 		p.para("Nothing planned for later is ready to be brought forward.", body, false)

@@ -24,7 +24,7 @@ type lane struct {
 const (
 	laneLabel = 38.0 // mm for the names
 	barHeight = 6.4
-	tickRoom  = 12.5 // least distance of clock labels, mm
+	tickRoom  = 11.5 // least distance of clock labels, mm
 	axisEnd   = 6.0  // mm kept free for half of the last label
 )
 

@@ -3,6 +3,7 @@ package text
 import (
 	"fmt"
 	"io"
+	"strings"
 
 	"sailby/plan"
 	"sailby/report/agenda"
@@ -157,8 +158,8 @@ func (p *page) proof(a *plan.Answer, low bool) {
 	}
 	for _, l := range pr.Lines {
 		s := l.Text
-		if l.Minutes != 0 {
-			s += ", " + quantity.Hours(l.Minutes)
+		if n := quantity.Hours(l.Minutes); l.Minutes != 0 && !strings.Contains(s, n) {
+			s += ", " + n
 		}
 		s += inFile(agenda.At(l.Pos))
 		if !l.Needed {
