@@ -154,7 +154,7 @@ func (b *builder) finish(s *Shift) {
 	begin := s.From.In(s.Zone)
 	s.Date = hours.DateOf(begin)
 	s.Night = hours.DateOf((s.To - 1).In(s.Zone)) != s.Date
-	for i, ps := range b.a.Plan.Steps {
+	for i, ps := range b.a.Plan.Steps[:min(len(b.a.Plan.Steps), len(w.Steps))] {
 		st := w.Steps[i]
 		span := hours.Span{From: ps.Start, To: ps.Finish}
 		if st.Absent || st.Class == expand.Hands || (st.Place == w.Window.Place) != s.Site || !span.Overlaps(s.Span) {

@@ -141,7 +141,8 @@ func (p *page) step(a *plan.Answer, i int, s *expand.Step) bool {
 	} else {
 		p.para(label, quantityOf(s))
 	}
-	if s.Class == expand.Hands && s.Place != nil && s.Working != s.HandsOn {
+	_, told := agenda.Fact(s, "face factor") // the tree of the hours may hold it
+	if !told && s.Class == expand.Hands && s.Place != nil && s.Working != s.HandsOn {
 		f := s.Place.FaceFactor
 		p.para("            ", fmt.Sprintf("working time is hands-on time / face factor %s [%s]%s", origin.Trim(f.Value),
 			f.Pos.Origin("share of the hours at the face").String(), mark(!f.Pos.Given())))
@@ -153,7 +154,7 @@ func (p *page) step(a *plan.Answer, i int, s *expand.Step) bool {
 	for _, f := range s.Estimate.Facts {
 		p.para("    also: ", f.Name+" "+f.Amount()+" ["+f.Origin.String()+"]"+mark(f.Origin.Soft()))
 	}
-	return soft || s.Class == expand.Hands && s.Working != s.HandsOn && s.Place != nil && !s.Place.FaceFactor.Pos.Given()
+	return soft || !told && s.Class == expand.Hands && s.Working != s.HandsOn && s.Place != nil && !s.Place.FaceFactor.Pos.Given()
 }
 
 func mark(soft bool) string {
