@@ -30,8 +30,8 @@ func (c *checker) shut(r *row, team []*person, t hours.Minute) (rule, who, why s
 	if r.alone && !c.company(r, team, t) {
 		return "R14", "nobody else", "is on shift there"
 	}
-	if k := r.keeper(t); k != "" && !c.canWatch(r, c.people[k], hours.Span{From: t + 1, To: t + 1 + hours.Minute(r.watch)}) {
-		return "R13", k, "cannot stay the fire watch out after it"
+	if r.watch > 0 && !c.anyWatch(r, hours.Span{From: t + 1, To: t + 1 + hours.Minute(r.watch)}) {
+		return "R13", "nobody", "could stay the fire watch out after it"
 	}
 	return "", "", ""
 }

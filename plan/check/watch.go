@@ -8,19 +8,15 @@ import (
 	"sailby/tasks/hours"
 )
 
-// keeper names who keeps the fire watch that follows minute t in the plan: hot work goes on only
-// while its watch can still be stayed out. "" where there is none to keep.
-func (r *row) keeper(t hours.Minute) string {
-	name := ""
-	for _, w := range r.p.Watches {
-		if name = w.Person; w.From > t {
-			break
+// anyWatch says whether anybody who may keep the step's fire watch could stay it out: hot work
+// goes on only while that is so.
+func (c *checker) anyWatch(r *row, watch hours.Span) bool {
+	for _, p := range c.w.Job.People {
+		if !p.Outside && r.mayWatch(c.people[p.Name], plan.Watch{Span: watch, Person: p.Name}) && c.canWatch(r, c.people[p.Name], watch) {
+			return true
 		}
 	}
-	if r.watch == 0 {
-		return ""
-	}
-	return name
+	return false
 }
 
 // canWatch says whether somebody is on shift at the place through a watch, meals apart, with the

@@ -47,7 +47,7 @@ func (in *Instance) Problem() *problem.Problem {
 	for i, d := range in.Length {
 		a := problem.Act{
 			Name:  fmt.Sprintf("%d", i),
-			Modes: []problem.Mode{{Keeper: -1, Time: problem.Fixed(d)}},
+			Modes: []problem.Mode{{Time: problem.Fixed(d)}},
 			By:    end,
 			Site:  true,
 		}

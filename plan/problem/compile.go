@@ -44,17 +44,17 @@ func (p *Problem) act(s *expand.Step, maker *crewMaker) Act {
 	}
 	switch {
 	case s.Absent || s.Class == expand.Hands && s.Working == 0 || s.Class == expand.Clock && s.Clock == 0 && len(s.Needs) == 0:
-		a.Modes = []Mode{{Keeper: -1, Time: Fixed(0)}}
+		a.Modes = []Mode{{Time: Fixed(0)}}
 	case s.Class == expand.Hands || len(s.Needs) > 0:
 		a.Modes, a.Hopeless = maker.modes(s)
 	case s.Class == expand.Clock:
-		a.Modes = []Mode{{Keeper: -1, Time: Fixed(s.Clock)}}
+		a.Modes = []Mode{{Time: Fixed(s.Clock)}}
 	default:
 		rate := make([]float64, p.End)
 		for t := range rate {
 			rate[t] = s.Rate(p.Base + hours.Minute(t))
 		}
-		a.Modes = []Mode{{Keeper: -1, Time: Curing(rate)}}
+		a.Modes = []Mode{{Time: Curing(rate)}}
 	}
 	a.Timings()
 	return a

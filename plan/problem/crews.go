@@ -105,13 +105,12 @@ func (m *crewMaker) modes(s *expand.Step) ([]Mode, string) {
 	var out []Mode
 	room := false
 	for _, t := range teams {
-		for _, keeper := range m.keepers(s, t) {
-			mode := Mode{Crew: t.crew, Watch: t.watch, Keeper: keeper}
-			mode.Time = m.timing(s, t.crew, nil, keeper, base, access, &mode)
-			room = room || mode.Time.cal != nil && len(mode.Time.cal.spans) > 0
-			if mode.Time.Start(0) < Inf {
-				out = append(out, mode)
-			}
+		mode := Mode{Crew: t.crew, Watch: t.watch}
+		mode.Keepers, mode.Stay = m.keepers(s, t.crew)
+		mode.Time = m.timing(s, base, access, &mode)
+		room = room || mode.Time.cal != nil && len(mode.Time.cal.spans) > 0
+		if mode.Time.Start(0) < Inf {
+			out = append(out, mode)
 		}
 	}
 	if s.ChangeHands {
@@ -198,43 +197,50 @@ func crewKey(crew []int, watch []bool) string {
 	return strings.Join(tags, ",")
 }
 
-// keepers lists who of a team may keep the fire watch after stops: -1 where there is no watch.
-func (m *crewMaker) keepers(s *expand.Step, t team) []int {
+// keepers lists who may keep the fire watch after stops (R13): the step's own people first, those
+// who watched during the work ahead of the others, then everybody with the ticket.
+func (m *crewMaker) keepers(s *expand.Step, crew []int) (out []int, stay []hours.Set) {
 	if s.Watch == 0 {
-		return []int{-1}
+		return nil, nil
 	}
-	var out []int
-	for _, p := range t.crew {
-		if !m.people[p].Outside {
+	add := func(p int) {
+		if !m.people[p].Outside && !has(out, p) && len(m.people[p].Shifts[s.Place]) > 0 {
 			out = append(out, p)
+			stay = append(stay, m.shift(m.canStay(s, p)))
 		}
 	}
-	return out
+	for k := len(crew) - 1; k >= 0; k-- {
+		add(crew[k])
+	}
+	for j, p := range m.g.work.Job.People {
+		if s.Watcher != nil && p.Holds(s.Watcher.Ticket) {
+			add(j)
+		}
+	}
+	return out, stay
 }
 
 // timing gives the timing of a team (with relief, of two that take turns) for a step.
-func (m *crewMaker) timing(s *expand.Step, crew, relief []int, keeper int, base, access hours.Set, mode *Mode) *Timing {
-	key := fmt.Sprint(s.Index, "|", m.classes(crew), "|", m.classes(relief), "|", keeper >= 0 && true, m.classOf(keeper))
-	if relief == nil {
+func (m *crewMaker) timing(s *expand.Step, base, access hours.Set, mode *Mode) *Timing {
+	key := fmt.Sprint(s.Index, "|", m.classes(mode.Crew), "|", m.classes(mode.Keepers))
+	if mode.Relief == nil {
 		if t, ok := m.cache[key]; ok {
 			return t
 		}
 	}
-	spans := m.together(s, crew, base)
-	if relief != nil {
-		first := spans
-		spans = first.Or(m.together(s, relief, base))
-		mode.First = m.shift(first)
+	spans := m.together(s, mode.Crew, base)
+	if mode.Relief != nil {
+		mode.First = m.shift(spans)
+		spans = spans.Or(m.together(s, mode.Relief, base))
+	}
+	if s.Watch > 0 {
+		spans = m.watched(s, spans, mode.Keepers)
 	}
 	joined := spans.Joined(Meal, access)
-	if s.Watch > 0 && keeper >= 0 {
-		spans = m.watched(s, spans, joined, keeper)
-		joined = spans.Joined(Meal, access)
-	}
 	t := Worked(m.shift(spans), m.shift(joined), Rules{Work: s.Working, SetUp: s.SetUp, Least: s.LeastPiece, Safe: s.SafeStop,
 		InOneGo: s.InOneGo, OverMeals: s.OverMeals})
 	t.watch = s.Watch
-	if relief == nil {
+	if mode.Relief == nil {
 		m.cache[key] = t
 	}
 	return t
@@ -255,52 +261,45 @@ func (m *crewMaker) together(s *expand.Step, crew []int, base hours.Set) hours.S
 	return set
 }
 
-// watched takes off each opening the minutes after which its keeper could not stay the watch
-// out: on shift to its end, meals apart, with the workface in reach (R13).
-func (m *crewMaker) watched(s *expand.Step, spans, joined hours.Set, keeper int) hours.Set {
-	stay := m.people[keeper].Shifts[s.Place].Joined(Meal, nil)
-	if r, limited := m.g.reach[s.Face]; limited && s.Face != nil {
-		stay = stay.And(r)
-	}
+// watched takes off the minutes after which none of the keepers could stay the watch out: on
+// shift to its end, meals apart, with the workface in reach (R13).
+func (m *crewMaker) watched(s *expand.Step, spans hours.Set, keepers []int) hours.Set {
 	var keep []hours.Span
-	for _, b := range joined {
-		for _, k := range stay {
-			// within k, the piece may end at any x with x+watch <= k.To
-			keep = append(keep, hours.Span{From: max(b.From, k.From), To: min(b.To, k.To-hours.Minute(s.Watch))})
+	for _, p := range keepers {
+		for _, k := range m.canStay(s, p) {
+			keep = append(keep, hours.Span{From: k.From, To: k.To - hours.Minute(s.Watch)})
 		}
 	}
 	return spans.And(hours.NewSet(keep...))
 }
 
-// relays lists the modes in which two teams without a common member take turns.
+// canStay gives the minutes in which a person can keep a watch at a step's workface: on shift,
+// meals included, and in reach.
+func (m *crewMaker) canStay(s *expand.Step, p int) hours.Set {
+	stay := m.people[p].Shifts[s.Place].Joined(Meal, nil)
+	if r, limited := m.g.reach[s.Face]; limited && s.Face != nil {
+		stay = stay.And(r)
+	}
+	return stay
+}
+
+// relays lists the modes in which two teams take turns; they may have members in common.
 func (m *crewMaker) relays(s *expand.Step, teams []team, base, access hours.Set) []Mode {
 	var out []Mode
 	for i, a := range teams {
 		for j, b := range teams {
-			if i == j || common(a.crew, b.crew) || len(out) >= MaxModes || m.classes(a.crew) == m.classes(b.crew) {
+			if i == j || len(out) >= MaxModes || m.classes(a.crew) == m.classes(b.crew) {
 				continue
 			}
-			keeper := -1
-			if s.Watch > 0 {
-				keeper = a.crew[len(a.crew)-1]
-			}
-			mode := Mode{Crew: a.crew, Watch: a.watch, Relief: b.crew, Keeper: keeper}
-			mode.Time = m.timing(s, a.crew, b.crew, -1, base, access, &mode)
-			if s.Watch == 0 && mode.Time.Start(0) < Inf {
+			mode := Mode{Crew: a.crew, Watch: a.watch, Relief: b.crew}
+			mode.Keepers, mode.Stay = m.keepers(s, append(append([]int(nil), a.crew...), b.crew...))
+			mode.Time = m.timing(s, base, access, &mode)
+			if mode.Time.Start(0) < Inf {
 				out = append(out, mode)
 			}
 		}
 	}
 	return out
-}
-
-func common(a, b []int) bool {
-	for _, x := range a {
-		if has(b, x) {
-			return true
-		}
-	}
-	return false
 }
 
 // shift moves a set from UTC minutes to minutes from the problem's base.
@@ -321,11 +320,4 @@ func (m *crewMaker) classes(crew []int) string {
 	}
 	sort.Ints(cs)
 	return fmt.Sprint(cs)
-}
-
-func (m *crewMaker) classOf(p int) int {
-	if p < 0 {
-		return -1
-	}
-	return m.class[p]
 }

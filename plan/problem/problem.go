@@ -43,12 +43,13 @@ type Act struct {
 
 // Mode is one choice of people for an activity, with the calendar that follows from it.
 type Mode struct {
-	Crew   []int     // people in the order of the step's needs; nil for standing time
-	Watch  []bool    // by place in Crew: only watches hot work
-	Relief []int     // a second team that takes turns, nil for most
-	First  hours.Set // with Relief: when the first team is at work
-	Keeper int       // who keeps the fire watch after stops, -1 if none
-	Time   *Timing
+	Crew    []int       // people in the order of the step's needs; nil for standing time
+	Watch   []bool      // by place in Crew: only watches hot work
+	Relief  []int       // a second team that takes turns, nil for most
+	First   hours.Set   // with Relief: when the first team is at work
+	Keepers []int       // who may keep the fire watch after stops, own people first; nil if there is none
+	Stay    []hours.Set // by keeper: when they can keep it, on shift (meals included) with the workface in reach
+	Time    *Timing
 }
 
 // Use is an amount of a resource. A use that stays is held from start to finish, another only

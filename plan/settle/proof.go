@@ -161,7 +161,7 @@ func sortBy(list, key []int) {
 func (a *asked) needed(off network.Off, i int) bool {
 	act := &a.p.Acts[i]
 	keep, times := act.Modes, act.Times
-	act.Modes, act.Times = []problem.Mode{{Keeper: -1, Time: problem.Fixed(0)}}, nil
+	act.Modes, act.Times = []problem.Mode{{Time: problem.Fixed(0)}}, nil
 	_, c := network.Propagate(a.p, off)
 	act.Modes, act.Times = keep, times
 	return c == nil

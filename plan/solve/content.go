@@ -208,9 +208,9 @@ func (b *loadBuilder) resources() {
 		for i := range b.p.Acts {
 			a := &b.p.Acts[i]
 			for _, u := range a.Uses {
-				if u.Res == r && a.Modes[0].Time.Calendar() != nil {
+				if amount := u.Amount - sharers(a, res.Kind); u.Res == r && amount > 0 && a.Modes[0].Time.Calendar() != nil {
 					l.acts = append(l.acts, i)
-					l.need = append(l.need, u.Amount*(a.Step.Working+a.Step.SetUp))
+					l.need = append(l.need, amount*(a.Step.Working+a.Step.SetUp))
 				}
 			}
 		}
@@ -221,6 +221,19 @@ func (b *loadBuilder) resources() {
 		l.count(b.p.End)
 		b.loads = append(b.loads, l)
 	}
+}
+
+// sharers counts the places of an activity in a workface's room that it may share: its fire watch.
+func sharers(a *problem.Act, kind problem.ResourceKind) int {
+	n := 0
+	if kind == problem.Room {
+		for _, need := range a.Step.Needs {
+			if need.Watch {
+				n += need.Count
+			}
+		}
+	}
+	return n
 }
 
 // count sums up the minutes available.

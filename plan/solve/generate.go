@@ -15,7 +15,6 @@ type generator struct {
 	*state
 	into, from [][]int // links by later and by earlier activity
 	lo         []int   // lower bounds that unscheduling has raised, for this schedule
-	weight     []int   // by person: how much they are wanted elsewhere
 	choice     []int   // by order rule: which of its choices holds
 	rank       []int   // by activity: place in the list
 	order      []int   // activities by rank
@@ -28,7 +27,7 @@ type generator struct {
 func newGenerator(p *problem.Problem) *generator {
 	n := len(p.Acts)
 	g := &generator{state: newState(p), into: make([][]int, n), from: make([][]int, n), lo: make([]int, n),
-		weight: make([]int, len(p.People)), choice: make([]int, len(p.Orders)), rank: make([]int, n), order: make([]int, n), standing: make([]bool, n), pending: make([]int, n)}
+		choice: make([]int, len(p.Orders)), rank: make([]int, n), order: make([]int, n), standing: make([]bool, n), pending: make([]int, n)}
 	for k, l := range p.Links {
 		g.into[l.To] = append(g.into[l.To], k)
 		if l.From >= 0 {

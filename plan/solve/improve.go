@@ -13,9 +13,13 @@ import (
 // Schedule is a complete schedule: a start, a finish and a mode for every activity.
 type Schedule struct {
 	Start, Finish, Mode []int
-	Choice              []int // by order rule
+	Watches             [][]Watch // by activity: who keeps its fire watches
+	Choice              []int     // by order rule
 	Score               Score
 }
+
+// Watch is a fire watch kept by person Who.
+type Watch struct{ From, To, Who int }
 
 // Options bound a search.
 type Options struct {
@@ -86,7 +90,15 @@ func (f *finder) try(order []int) (Score, bool) {
 }
 
 func (g *generator) snapshot(sc Score) *Schedule {
-	return &Schedule{Start: slices.Clone(g.start), Finish: slices.Clone(g.finish), Mode: slices.Clone(g.mode),
+	watches := make([][]Watch, len(g.watches))
+	for i, list := range g.watches {
+		for _, w := range list {
+			if g.start[i] < g.finish[i] {
+				watches[i] = append(watches[i], Watch{w.from, w.to, w.act})
+			}
+		}
+	}
+	return &Schedule{Watches: watches, Start: slices.Clone(g.start), Finish: slices.Clone(g.finish), Mode: slices.Clone(g.mode),
 		Choice: slices.Clone(g.choice), Score: sc}
 }
 

@@ -50,6 +50,7 @@ func Compact(p *problem.Problem, s *Schedule) *Schedule {
 // load puts a whole schedule into the state.
 func (g *generator) load(s *Schedule) {
 	g.reset()
+	g.kept = s.Watches
 	copy(g.choice, s.Choice)
 	for i := range s.Start {
 		g.put(i, s.Mode[i], s.Start[i])
@@ -117,10 +118,8 @@ func Plan(p *problem.Problem, s *Schedule) *plan.Plan {
 		})
 		if s.Start[i] < s.Finish[i] {
 			st.People, st.Relief = names(p, md.Crew), names(p, md.Relief)
-			if md.Keeper >= 0 && md.Time.Watch() > 0 {
-				for _, e := range md.Time.Stops(s.Start[i]) {
-					st.Watches = append(st.Watches, plan.Watch{Span: hours.Span{From: at(e), To: at(e + md.Time.Watch())}, Person: p.People[md.Keeper].Name})
-				}
+			for _, w := range s.Watches[i] {
+				st.Watches = append(st.Watches, plan.Watch{Span: hours.Span{From: at(w.From), To: at(w.To)}, Person: p.People[w.Who].Name})
 			}
 		}
 		out.Steps = append(out.Steps, st)

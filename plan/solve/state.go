@@ -8,6 +8,7 @@ import (
 
 	"sailby/plan/problem"
 	"sailby/tasks"
+	"sailby/tasks/hours"
 )
 
 // busy is a stretch in which a person works or keeps a watch. Watches in one workface may
@@ -23,23 +24,26 @@ type level struct{ at, amount int }
 
 // state is a partial schedule.
 type state struct {
-	p      *problem.Problem
-	start  []int
-	finish []int
-	mode   []int
-	placed []bool
-	people [][]busy  // by person, sorted by from
-	use    [][]level // by resource, sorted by at
-	pairs  [][]int   // by activity: indices into Problem.Pairs
-	ends   [][2]int  // by pair: when its placed A and B are clear, tails included
-	ticks  int64     // starts tried, the measure of work done
+	p       *problem.Problem
+	start   []int
+	finish  []int
+	mode    []int
+	placed  []bool
+	people  [][]busy  // by person, sorted by from
+	use     [][]level // by resource, sorted by at
+	pairs   [][]int   // by activity: indices into Problem.Pairs
+	ends    [][2]int  // by pair: when its placed A and B are clear, tails included
+	watches [][]busy  // by activity: its fire watches; act is the person who keeps each
+	weight  []int     // by person: how much they are wanted elsewhere
+	kept    [][]Watch // by activity: who has to keep its watches, where people are kept; nil for anybody
+	ticks   int64     // starts tried, the measure of work done
 }
 
 func newState(p *problem.Problem) *state {
 	n := len(p.Acts)
 	s := &state{p: p, start: make([]int, n), finish: make([]int, n), mode: make([]int, n), placed: make([]bool, n),
 		people: make([][]busy, len(p.People)), use: make([][]level, len(p.Res)), pairs: make([][]int, n),
-		ends: make([][2]int, len(p.Pairs))}
+		ends: make([][2]int, len(p.Pairs)), watches: make([][]busy, n), weight: make([]int, len(p.People))}
 	for i, pr := range p.Pairs {
 		s.pairs[pr.A] = append(s.pairs[pr.A], i)
 		s.pairs[pr.B] = append(s.pairs[pr.B], i)
@@ -103,8 +107,8 @@ func (s *state) fits(i, m, at int, skip *skipper) block {
 			hit = s.pieceBlock(a, md, from, to, skip)
 		}
 	})
-	if hit.kind == free && md.Keeper >= 0 && md.Time.Watch() > 0 {
-		hit = s.watchBlock(a, md, at, fin, skip)
+	if hit.kind == free && len(md.Keepers) > 0 {
+		hit = s.watchBlock(i, md, at, fin, skip)
 	}
 	return hit
 }
@@ -230,14 +234,12 @@ func (s *state) pairBlock(k, i, at, fin int, skip *skipper) block {
 	return block{}
 }
 
-// watchBlock looks whether the keeper of the fire watch is free after every stop, and whether
-// the workface has room for the watch.
-func (s *state) watchBlock(a *problem.Act, md *problem.Mode, at, fin int, skip *skipper) block {
-	for _, e := range md.Time.Stops(at) {
-		var b block
-		if !skip.person(md.Keeper) {
-			b = s.personBlock(md.Keeper, e, e+md.Time.Watch(), a.Step.Face)
-		}
+// watchBlock looks whether somebody can keep the fire watch after every stop, and whether the
+// workface has room for it.
+func (s *state) watchBlock(i int, md *problem.Mode, at, fin int, skip *skipper) block {
+	a := &s.p.Acts[i]
+	for k, e := range md.Time.Stops(at) {
+		_, b := s.keeper(i, k, md, at, e, skip)
 		if b.kind == free && a.WatchRoom > 0 && !skip.resource(a.WatchRoom-1) {
 			b = s.useBlock(problem.Use{Res: a.WatchRoom - 1, Amount: 1}, e, e+md.Time.Watch())
 		}
@@ -253,6 +255,52 @@ func (s *state) watchBlock(a *problem.Act, md *problem.Mode, at, fin int, skip *
 		return b
 	}
 	return block{}
+}
+
+// keeper finds who keeps the nth watch of the step, which begins at e: of those who can, who is least wanted
+// elsewhere. The block is that of whoever is free first.
+func (s *state) keeper(i, nth int, md *problem.Mode, at, e int, skip *skipper) (who int, hit block) {
+	until, face := e+md.Time.Watch(), s.p.Acts[i].Step.Face
+	who, hit = -1, block{next: problem.Inf, before: -problem.Inf, kind: byPerson, who: -1, other: -1}
+	for k, p := range md.Keepers {
+		if s.kept != nil && nth < len(s.kept[i]) && s.kept[i][nth].Who != p {
+			continue
+		}
+		if !md.Stay[k].Covers(hours.Span{From: hours.Minute(e), To: hours.Minute(until)}) || s.ownWork(md, p, at, e, until) {
+			continue
+		}
+		if b := s.personBlock(p, e, until, face); b.kind != free && !skip.person(p) {
+			if b.next < hit.next {
+				hit = b
+			}
+			continue
+		}
+		if who < 0 || s.weight[p] < s.weight[who] {
+			who = p
+		}
+	}
+	if who >= 0 {
+		return who, block{}
+	}
+	if hit.next >= problem.Inf {
+		hit.next = e + 1
+	}
+	return -1, hit
+}
+
+// ownWork says whether p, who works on the step and does not only watch it, goes on with it
+// before a watch from e to until is over.
+func (s *state) ownWork(md *problem.Mode, p, at, e, until int) bool {
+	works := hasPerson(md.Relief, p)
+	for k, c := range md.Crew {
+		works = works || c == p && !md.Watch[k]
+	}
+	if !works {
+		return false
+	}
+	again := false
+	md.Time.Pieces(at, func(from, to int) { again = again || from >= e && from < until })
+	return again
 }
 
 // put places activity i.
@@ -294,9 +342,15 @@ func (s *state) put(i, m, at int) {
 			}
 		})
 	})
-	if md.Keeper >= 0 && md.Time.Watch() > 0 {
-		for _, e := range md.Time.Stops(at) {
-			s.insert(md.Keeper, busy{e, e + md.Time.Watch(), i, a.Step.Face})
+	s.watches[i] = s.watches[i][:0]
+	if len(md.Keepers) > 0 {
+		for k, e := range md.Time.Stops(at) {
+			who, _ := s.keeper(i, k, md, at, e, nil)
+			if who < 0 {
+				who = md.Keepers[0] // asked for out of order: the checker will say so
+			}
+			s.watches[i] = append(s.watches[i], busy{e, e + md.Time.Watch(), who, a.Step.Face})
+			s.insert(who, busy{e, e + md.Time.Watch(), i, a.Step.Face})
 			if a.WatchRoom > 0 {
 				s.change(a.WatchRoom-1, e, e+md.Time.Watch(), 1)
 			}
@@ -378,12 +432,13 @@ func (s *state) take(i int) {
 			}
 		}
 	})
-	if md.Keeper >= 0 && md.Time.Watch() > 0 && a.WatchRoom > 0 {
-		for _, e := range md.Time.Stops(s.start[i]) {
-			s.change(a.WatchRoom-1, e, e+md.Time.Watch(), -1)
+	people := append(append([]int(nil), md.Crew...), md.Relief...)
+	for _, w := range s.watches[i] {
+		people = append(people, w.act)
+		if a.WatchRoom > 0 {
+			s.change(a.WatchRoom-1, w.from, w.to, -1)
 		}
 	}
-	people := append(append([]int(nil), md.Crew...), md.Relief...)
 	for _, p := range people {
 		keep := s.people[p][:0]
 		for _, b := range s.people[p] {

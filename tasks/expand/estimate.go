@@ -16,6 +16,10 @@ const (
 	highShare = 1.25
 )
 
+// leastPiece is the least hands-on time, in minutes, for which a weld, cut, prep or fit-up is taken up
+// again after a stop (house judgement).
+const leastPiece = 15
+
 // hands is what is known about the hands-on part of a task before it becomes steps.
 type hands struct {
 	minutes          quantity.Range // hands-on, elapsed with the people named

@@ -84,7 +84,7 @@ func (x *expander) prep(t *tasks.Task) hands {
 	h.people = int(people)
 	h.minutes = p.Range.Scale(1 / people)
 	h.noisy, h.grit = p.Noise, p.Dust
-	h.least = 15
+	h.least = leastPiece
 	h.est.Figure, h.est.Notes = p.Hours, p.Warnings
 	h.est.Facts = append(h.est.Facts, area)
 	if p.Abrasive > 0 {
@@ -161,7 +161,7 @@ func (x *expander) lift(t *tasks.Task) hands {
 
 // fitUp estimates fitting parts together after the method of Farkas and Jarmai.
 func (x *expander) fitUp(t *tasks.Task) hands {
-	h := hands{people: 2}
+	h := hands{people: 2, least: leastPiece}
 	if t.People > 0 {
 		h.people = t.People
 	}

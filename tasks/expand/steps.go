@@ -250,7 +250,13 @@ func (x *expander) statesOf(t *tasks.Task, s *Step, h hands) {
 	if t.Kind == tasks.Lift {
 		s.States = append(s.States, State{Name: tasks.LoadOverhead})
 	} else {
-		s.States = append(s.States, State{Name: tasks.PeopleState})
+		people := State{Name: tasks.PeopleState}
+		if s.Watch > 0 { // whoever keeps the fire watch is still there (R13)
+			watch := hours.Minute(s.Watch)
+			people.Tail = func(finish hours.Minute) hours.Minute { return finish + watch }
+			people.What = "fire watch"
+		}
+		s.States = append(s.States, people)
 	}
 	for _, name := range t.States {
 		s.States = append(s.States, State{Name: name})

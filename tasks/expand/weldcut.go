@@ -11,7 +11,7 @@ import (
 
 // weld estimates a weld task: its seams one after the other, shared by its welders.
 func (x *expander) weld(t *tasks.Task) hands {
-	h := hands{people: max(1, x.crewSize(t)), hot: true}
+	h := hands{people: max(1, x.crewSize(t)), hot: true, least: leastPiece}
 	if t.People > 0 {
 		h.people = t.People
 	}
@@ -99,7 +99,7 @@ func cutNature(by string) (hot, noisy bool) {
 
 // cut estimates a cutting task from its length and thickness.
 func (x *expander) cut(t *tasks.Task) hands {
-	h := hands{people: 1, least: 10}
+	h := hands{people: 1, least: leastPiece}
 	by := t.By
 	if by == "" {
 		by = "disc"
