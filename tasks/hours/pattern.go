@@ -22,11 +22,6 @@ type Pattern []Rule
 // Always is open day and night.
 var Always = Pattern{{Days: [7]bool{true, true, true, true, true, true, true}, Turns: []Turn{{0, 1440}}}}
 
-var dayWords = map[string]time.Weekday{
-	"sun": time.Sunday, "mon": time.Monday, "tue": time.Tuesday, "wed": time.Wednesday,
-	"thu": time.Thursday, "fri": time.Friday, "sat": time.Saturday,
-}
-
 // ParseWeekday reads "Mon", "mon" or "Monday".
 func ParseWeekday(s string) (time.Weekday, bool) {
 	s = strings.ToLower(strings.TrimSpace(s))
