@@ -6,6 +6,7 @@ import (
 	"sailby/plan"
 	"sailby/tasks/expand"
 	"sailby/tasks/hours"
+	"sailby/tasks/quantity"
 )
 
 // Closed says what keeps a step from being worked in the minute that begins at t by the people
@@ -61,8 +62,13 @@ func (p *Problem) Closed(i, mode, t int) []plan.Cause {
 		if md.Relief != nil && k < len(md.Relief) && p.People[md.Relief[k]].Shifts[s.Place].Has(hours.Minute(t)) {
 			continue
 		}
-		if !p.People[c].Shifts[s.Place].Has(hours.Minute(t)) && (len(out) == 0 || p.ownHours(c)) {
+		if !p.People[c].Shifts[s.Place].Has(hours.Minute(t)) && (len(out) == 0 || p.ownHours(c) && !g.own[c][s.Place].Has(at)) {
 			add(plan.ByPerson, p.People[c].Name, "%s is on shift", p.People[c].Name)
+			if g.own[c][s.Place].Has(at) { // there and willing: duty and rest keep them off
+				out[len(out)-1].Kind = plan.ByRest
+				out[len(out)-1].Text = fmt.Sprintf("%s may work again (longest duty %s, rest %s, R15)", p.People[c].Name,
+					quantity.Hours(int(p.Work.Job.Duty.Value)), quantity.Hours(int(p.Work.Job.Rest.Value)))
+			}
 			out[len(out)-1].Pos = p.Work.Job.People[c].Pos
 		}
 	}

@@ -21,6 +21,7 @@ type ground struct {
 	light map[*tasks.Place]hours.Set
 	valid map[*tasks.Place]map[string]hours.Set // by permit name
 	hire  map[*tasks.Kit]hours.Set
+	own   []map[*tasks.Place]hours.Set // by person: at an open place in own hours, before shifts are cut
 }
 
 func newGround(w *expand.Work) *ground {

@@ -12,6 +12,7 @@ func (g *ground) people() []Person {
 	out := make([]Person, len(g.work.Job.People))
 	for i, p := range g.work.Job.People {
 		at := g.hoursOf(p)
+		g.own = append(g.own, at)
 		var duty hours.Set
 		for _, set := range at {
 			duty = duty.Or(set)

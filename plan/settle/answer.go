@@ -125,8 +125,9 @@ func (a *asked) find(explain bool) error {
 	a.say("plans")
 	a.carry = problem.Compile(a.work.Carry())
 	for i := range a.carry.Acts {
-		if len(a.carry.Acts[i].Modes) == 0 {
-			return nil // cannot even be done late
+		if len(a.carry.Acts[i].Modes) == 0 { // cannot even be done late
+			a.onCarry(func(c *asked) *plan.Proof { return c.noOpening(i) })
+			return nil
 		}
 	}
 	free := network.Off{By: map[int]bool{}}
@@ -135,6 +136,7 @@ func (a *asked) find(explain bool) error {
 	}
 	b, conflict := network.Propagate(a.carry, free)
 	if conflict != nil {
+		a.onCarry(func(c *asked) *plan.Proof { return c.chain(conflict) })
 		return nil
 	}
 	bound := int(a.out.Bound - a.p.Base)
@@ -156,6 +158,16 @@ func (a *asked) find(explain bool) error {
 		return nil
 	}
 	return a.keep(solve.Compact(a.carry, res.Best), explain)
+}
+
+// onCarry keeps a proof from the problem carried on past the window, where nothing fits however
+// late it may be, if there is no proof yet.
+func (a *asked) onCarry(prove func(c *asked) *plan.Proof) {
+	if a.out.Proof == nil {
+		c := *a
+		c.p = a.carry
+		a.out.Proof = prove(&c)
+	}
 }
 
 // keep has a schedule checked and fills the answer from it.

@@ -118,6 +118,9 @@ func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 	for _, i := range involved {
 		act := &a.p.Acts[i]
 		text := fmt.Sprintf("%s: %s, not before %s, so not finished before %s", stepName(act.Step), a.length(act), a.clockAt(b.Start[i], act.Step.Place), a.clockAt(b.Finish[i], act.Step.Place))
+		if s, _ := earliest(act, b.Start[i]); s >= problem.Inf {
+			text = fmt.Sprintf("%s: %s, not before %s, and no opening after that is long enough", stepName(act.Step), a.length(act), a.clockAt(b.Start[i], act.Step.Place))
+		}
 		p.Lines = append(p.Lines, plan.ProofLine{Text: text, Minutes: act.Modes[0].Time.Length(), Pos: act.Pos(), Needed: a.needed(off, i)})
 	}
 	for _, l := range links {
@@ -139,6 +142,17 @@ func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 		p.Summary += fmt.Sprintf(": %s over", span(p.Over))
 	}
 	return p
+}
+
+// earliest gives the first start of an activity at or after t in any mode, and its finish.
+func earliest(act *problem.Act, t int) (start, finish int) {
+	start, finish = problem.Inf, problem.Inf
+	for _, w := range act.Timings() {
+		if s := w.Start(t); s < problem.Inf {
+			start, finish = min(start, s), min(finish, w.Finish(s))
+		}
+	}
+	return start, finish
 }
 
 func allActs(p *problem.Problem) map[int]bool {

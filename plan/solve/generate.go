@@ -19,6 +19,7 @@ type generator struct {
 	rank       []int   // by activity: place in the list
 	order      []int   // activities by rank
 	standing   []bool  // activities that nothing but links holds
+	stuck      int     // the activity that found no place, -1 if none
 	pending    []int   // by activity: unplaced activities that it waits for
 	queue      queue
 	trace      func(block) // told of what stands in the way; nil for none
@@ -54,6 +55,7 @@ func newGenerator(p *problem.Problem) *generator {
 // cannot be met within a bounded number of attempts.
 func (g *generator) run(order []int) bool {
 	g.reset()
+	g.stuck = -1
 	for i, a := range order {
 		g.rank[a] = i
 	}
@@ -61,7 +63,11 @@ func (g *generator) run(order []int) bool {
 	tries := 40 + 20*len(order)
 	for left := len(order); left > 0; {
 		i := g.next()
-		if i < 0 || !g.place(i) {
+		if i < 0 {
+			return false
+		}
+		if !g.place(i) {
+			g.stuck = i
 			return false
 		}
 		left--
@@ -332,6 +338,7 @@ func (g *generator) repair(i int) (undone int, ok bool) {
 			lo = g.start[l.From] + 1
 		}
 		if lo >= g.p.End {
+			g.stuck = i
 			return undone, false
 		}
 		from := l.From

@@ -78,8 +78,11 @@ func (f *finder) over() bool {
 // try makes the schedule of a list and keeps it if it is the best so far. It says whether it
 // was made, and its score.
 func (f *finder) try(order []int) (Score, bool) {
-	if !f.g.run(order) {
-		return Score{}, false
+	for k := 0; !f.g.run(order); k++ {
+		if k >= squeaks || f.g.stuck < 0 || f.over() {
+			return Score{}, false
+		}
+		f.forward(order, f.g.stuck)
 	}
 	sc := f.g.score()
 	if f.best == nil || sc.Compare(f.best.Score, false) < 0 {
@@ -87,6 +90,38 @@ func (f *finder) try(order []int) (Score, bool) {
 		f.list = append(f.list[:0], order...)
 	}
 	return sc, true
+}
+
+// squeaks is how often an activity that finds no place is moved to the front before a list is
+// given up: what has few openings (a hired crane in two slots) must go first.
+const squeaks = 12
+
+// forward moves activity i and all that comes before it to the front of the list, in their
+// order (after "squeaky wheel" optimisation, Joslin and Clements, JAIR 1999).
+func (f *finder) forward(order []int, i int) {
+	first := map[int]bool{}
+	var mark func(i int)
+	mark = func(i int) {
+		if first[i] {
+			return
+		}
+		first[i] = true
+		for _, k := range f.g.into[i] {
+			if l := &f.p.Links[k]; l.From >= 0 && l.Min > expand.NoMin {
+				mark(l.From)
+			}
+		}
+	}
+	mark(i)
+	slices.SortStableFunc(order, func(a, b int) int {
+		switch {
+		case first[a] == first[b]:
+			return 0
+		case first[a]:
+			return -1
+		}
+		return 1
+	})
 }
 
 func (g *generator) snapshot(sc Score) *Schedule {

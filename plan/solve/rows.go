@@ -2,6 +2,7 @@ package solve
 
 import (
 	"fmt"
+	"slices"
 
 	"sailby/plan"
 	"sailby/plan/problem"
@@ -151,6 +152,12 @@ func (r *rower) joint(i int, limits []limit, met map[blockKind]map[int]bool) []p
 
 // ordered puts links and people before opening hours, unless the start is an opening.
 func (r *rower) ordered(i int, causes []plan.Cause) []plan.Cause {
+	said := map[string]bool{}
+	causes = slices.DeleteFunc(causes, func(c plan.Cause) bool {
+		double := said[c.Text]
+		said[c.Text] = true
+		return double
+	})
 	var other, ours []plan.Cause
 	for _, c := range causes {
 		if c.Other >= 0 {
@@ -182,7 +189,7 @@ func (r *rower) limits(i int) []limit {
 		add(limit{links: linkSkip{links: map[int]bool{k: true}}}, plan.ByLink, l.From, "", l.Step.Why, l.Step.Pos)
 	}
 	for _, k := range g.from[i] {
-		if l := &p.Links[k]; l.Max < expand.NoMax || l.Last != nil {
+		if l := &p.Links[k]; (l.Max < expand.NoMax || l.Last != nil) && !ownStanding(p, l) {
 			add(limit{links: linkSkip{links: map[int]bool{k: true}}}, plan.ByMaxWait, l.To, "",
 				"held back for the longest wait to "+p.Acts[l.To].Label(), l.Step.Pos)
 		}
@@ -225,6 +232,12 @@ func (r *rower) limits(i int) []limit {
 		out = append(out, limit{cause: cause, clock: true})
 	}
 	return out
+}
+
+// ownStanding says whether a link ties a step to standing time of its own task: that never
+// holds the step back.
+func ownStanding(p *problem.Problem, l *problem.Link) bool {
+	return l.From >= 0 && p.Acts[l.From].Step.Task == p.Acts[l.To].Step.Task && l.Max == 0 && len(p.Acts[l.To].Modes[0].Crew) == 0
 }
 
 // before gives the activity that person c does last before i starts, -1 if none.
