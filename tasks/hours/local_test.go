@@ -7,108 +7,97 @@ import (
 	"pgregory.net/rapid"
 )
 
-func zone(t interface {
-	Helper()
-	Fatal(...any)
-}, name string) *time.Location {
-	t.Helper()
-	loc, err := time.LoadLocation(name)
-	if err != nil {
-		t.Fatal(err)
-	}
-	return loc
-}
-
-// Changes of the clocks: Europe at 01:00 UTC on the last Sunday of March and October; New York at 02:00 local
-// on the second Sunday of March; Lord Howe by half an hour at 02:00 local on the first Sundays of October and
-// April; Samoa left out all of 2011-12-30. (From the IANA time zone database.)
-func TestInstant(t *testing.T) {
-	for _, c := range []struct {
-		zone   string
-		d      Date
-		minute int
-		want   string
-		clock  Clock
+func TestInstantOfLocalTimes(t *testing.T) {
+	for _, tc := range []struct {
+		what, zone string
+		day        Date
+		minute     int
+		utc        string
+		clock      Clock
 	}{
-		{"Europe/London", Date{2027, 4, 5}, 615, "2027-04-05 09:15", Plain},
-		{"Europe/London", Date{2027, 3, 28}, 59, "2027-03-28 00:59", Plain},
-		{"Europe/London", Date{2027, 3, 28}, 60, "2027-03-28 01:00", Gap},
-		{"Europe/London", Date{2027, 3, 28}, 119, "2027-03-28 01:00", Gap},
-		{"Europe/London", Date{2027, 3, 28}, 120, "2027-03-28 01:00", Plain},
-		{"Europe/London", Date{2027, 10, 31}, 59, "2027-10-30 23:59", Plain},
-		{"Europe/London", Date{2027, 10, 31}, 60, "2027-10-31 00:00", Repeated},
-		{"Europe/London", Date{2027, 10, 31}, 119, "2027-10-31 00:59", Repeated},
-		{"Europe/London", Date{2027, 10, 31}, 120, "2027-10-31 02:00", Plain},
-		{"America/New_York", Date{2027, 3, 14}, 150, "2027-03-14 07:00", Gap},
-		{"Australia/Lord_Howe", Date{2027, 10, 3}, 135, "2027-10-02 15:30", Gap},
-		{"Australia/Lord_Howe", Date{2027, 4, 4}, 105, "2027-04-03 14:45", Repeated},
-		{"Pacific/Apia", Date{2011, 12, 30}, 600, "2011-12-30 10:00", Gap},
-		{"Pacific/Kiritimati", Date{2027, 4, 5}, 0, "2027-04-04 10:00", Plain},
-		{"Etc/GMT+12", Date{2027, 4, 5}, 0, "2027-04-05 12:00", Plain},
-		{"UTC", Date{2027, 4, 5}, 1440, "2027-04-06 00:00", Plain},
-		{"UTC", Date{2027, 4, 5}, 3000, "2027-04-07 02:00", Plain},
-		{"UTC", Date{2027, 4, 5}, -30, "2027-04-04 23:30", Plain},
-		{"UTC", Date{2027, 4, 5}, -1440, "2027-04-04 00:00", Plain},
+		{"winter in London", "Europe/London", Date{2027, time.January, 5}, 615, "2027-01-05 10:15", Plain},
+		{"summer in London", "Europe/London", Date{2027, time.April, 5}, 615, "2027-04-05 09:15", Plain},
+		{"the last minute before the jump", "Europe/London", Date{2027, time.March, 28}, 59, "2027-03-28 00:59", Plain},
+		{"a time jumped over is the jump", "Europe/London", Date{2027, time.March, 28}, 90, "2027-03-28 01:00", Gap},
+		{"the jump itself does not exist on the wall", "Europe/London", Date{2027, time.March, 28}, 60, "2027-03-28 01:00", Gap},
+		{"the first minute after the jump", "Europe/London", Date{2027, time.March, 28}, 120, "2027-03-28 01:00", Plain},
+		{"of two the earlier", "Europe/London", Date{2027, time.October, 31}, 90, "2027-10-31 00:30", Repeated},
+		{"after the second", "Europe/London", Date{2027, time.October, 31}, 120, "2027-10-31 02:00", Plain},
+		{"New York jumps at two", "America/New_York", Date{2027, time.March, 14}, 150, "2027-03-14 07:00", Gap},
+		{"New York repeats one to two", "America/New_York", Date{2027, time.November, 7}, 119, "2027-11-07 05:59", Repeated},
+		{"half an hour forward", "Australia/Lord_Howe", Date{2027, time.October, 3}, 135, "2027-10-02 15:30", Gap},
+		{"half an hour is all that is missing", "Australia/Lord_Howe", Date{2027, time.October, 3}, 150, "2027-10-02 15:30", Plain},
+		{"half an hour twice", "Australia/Lord_Howe", Date{2027, time.April, 4}, 100, "2027-04-03 14:40", Repeated},
+		{"before that half hour", "Australia/Lord_Howe", Date{2027, time.April, 4}, 89, "2027-04-03 14:29", Plain},
+		{"no change at all", "Asia/Tokyo", Date{2027, time.March, 28}, 90, "2027-03-27 16:30", Plain},
+		{"the end of a day is the next day's beginning", "Europe/London", Date{2027, time.January, 5}, 1440, "2027-01-06 00:00", Plain},
+		{"a night runs into the next day", "Europe/London", Date{2027, time.January, 5}, 1440 + 420, "2027-01-06 07:00", Plain},
+		{"minutes before midnight are the day before's", "Europe/London", Date{2027, time.January, 5}, -30, "2027-01-04 23:30", Plain},
+		{"a whole day before", "Europe/London", Date{2027, time.January, 5}, -1440, "2027-01-04 00:00", Plain},
+		{"a midnight that does not exist", "Asia/Beirut", Date{2025, time.March, 30}, 0, "2025-03-29 22:00", Gap},
+		{"a day that does not exist", "Pacific/Apia", Date{2011, time.December, 30}, 720, "2011-12-30 10:00", Gap},
 	} {
-		got, clock := Instant(c.d, c.minute, zone(t, c.zone))
-		if s := got.In(time.UTC).Format("2006-01-02 15:04"); s != c.want || clock != c.clock {
-			t.Errorf("%s %s %d: %s (%d), want %s (%d)", c.zone, c.d, c.minute, s, clock, c.want, c.clock)
+		want, err := time.Parse("2006-01-02 15:04", tc.utc)
+		if err != nil {
+			t.Fatal(err)
+		}
+		at, clock := Instant(tc.day, tc.minute, zone(t, tc.zone))
+		if at != Of(want) || clock != tc.clock {
+			t.Errorf("%s: %v (%d), want %v (%d)", tc.what, at.In(time.UTC), clock, want, tc.clock)
 		}
 	}
 }
 
-// A local time that is plain reads back as itself, and later minutes of the clock never come earlier.
-func TestInstantLaws(t *testing.T) {
-	zones := []string{"Europe/London", "America/St_Johns", "Australia/Lord_Howe", "Asia/Kathmandu", "Africa/Casablanca", "Pacific/Chatham"}
+// What the wall shows at any minute leads back to it, or to the earlier of the two that show the same.
+func TestInstantInvertsTheWall(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
-		loc := zone(t, rapid.SampledFrom(zones).Draw(t, "zone"))
-		d := Date{2027, 1, 1}.Add(rapid.IntRange(0, 400).Draw(t, "day"))
-		m := rapid.IntRange(0, 1439).Draw(t, "minute")
-		at, clock := Instant(d, m, loc)
-		if clock != Gap && (DateOf(at.In(loc)) != d || MinuteOfDay(at, loc) != m) {
-			t.Fatalf("%s %d reads back as %v", d, m, at.In(loc))
+		c := changes[rapid.IntRange(0, len(changes)-1).Draw(t, "change")]
+		loc, err := time.LoadLocation(c.zone)
+		if err != nil {
+			t.Fatal(err)
 		}
-		later, _ := Instant(d, m+1, loc)
-		if later < at {
-			t.Fatalf("%s: minute %d is %v, the next %v", d, m, at.In(loc), later.In(loc))
+		noon, _ := Instant(c.day, 720, loc)
+		m := noon + Minute(rapid.IntRange(-1440, 1440).Draw(t, "minute"))
+		got, clock := Instant(DateOf(m.In(loc)), MinuteOfDay(m, loc), loc)
+		switch {
+		case clock == Gap:
+			t.Fatalf("%v is on the wall, and said not to be", m.In(loc))
+		case clock == Plain && got != m:
+			t.Fatalf("%v leads to %v", m.In(loc), got.In(loc))
+		case clock == Repeated && got != m && (got > m || MinuteOfDay(got, loc) != MinuteOfDay(m, loc)):
+			t.Fatalf("%v leads to %v", m.In(loc), got.In(loc))
 		}
 	})
 }
 
-func TestOf(t *testing.T) {
-	for s, want := range map[string]Minute{"1970-01-01T00:00:59Z": 0, "1970-01-01T00:01:00Z": 1, "1969-12-31T23:59:59Z": -1, "1969-12-31T23:59:00Z": -1, "1969-12-31T23:58:59Z": -2} {
-		at, err := time.Parse(time.RFC3339, s)
-		if err != nil {
-			t.Fatal(err)
-		}
-		if got := Of(at); got != want {
-			t.Errorf("%s is minute %d, want %d", s, got, want)
+func TestDates(t *testing.T) {
+	d := Date{2027, time.February, 28}
+	if got := d.Add(1); got != (Date{2027, time.March, 1}) {
+		t.Errorf("the day after %v is %v", d, got)
+	}
+	if got := (Date{2028, time.February, 28}).Add(1); got.Day != 29 {
+		t.Errorf("2028 is a leap year, and got %v", got)
+	}
+	if d.Weekday() != time.Sunday {
+		t.Errorf("%v is a %v", d, d.Weekday())
+	}
+	if !d.Valid() || (Date{2027, time.February, 29}).Valid() || (Date{2027, 13, 1}).Valid() {
+		t.Error("days that exist and days that do not are mixed up")
+	}
+	if d.String() != "2027-02-28" {
+		t.Errorf("written as %q", d.String())
+	}
+	for _, p := range [][2]Date{{d, d.Add(1)}, {d, Date{2027, time.March, 1}}, {d, Date{2028, time.January, 1}}} {
+		if !p[0].Before(p[1]) || p[1].Before(p[0]) || p[0].Before(p[0]) {
+			t.Errorf("the order of %v and %v is wrong", p[0], p[1])
 		}
 	}
 }
 
-func TestDate(t *testing.T) {
-	d := Date{2028, 2, 28}
-	if d.Add(2) != (Date{2028, 3, 1}) || d.Add(-59) != (Date{2027, 12, 31}) || d.Weekday() != time.Monday || d.String() != "2028-02-28" {
-		t.Errorf("%s %s %s", d.Add(2), d.Add(-59), d.Weekday())
-	}
-	if !d.Valid() || (Date{2027, 2, 29}).Valid() || (Date{2027, 13, 1}).Valid() || (Date{2027, 1, 0}).Valid() {
-		t.Error("Valid is wrong")
-	}
-	if !d.Before(d.Add(1)) || d.Before(d) || !(Date{2027, 12, 31}).Before(Date{2028, 1, 1}) || (Date{2028, 3, 1}).Before(Date{2028, 2, 28}) {
-		t.Error("Before is wrong")
-	}
-}
-
-func TestParseWeekday(t *testing.T) {
-	for s, want := range map[string]time.Weekday{"Mon": time.Monday, "mon": time.Monday, " Sunday ": time.Sunday, "SAT": time.Saturday} {
-		if d, ok := ParseWeekday(s); !ok || d != want {
-			t.Errorf("%q is %v, want %v", s, d, want)
-		}
-	}
-	for _, s := range []string{"", "Mo", "Montag", "Monda"} {
-		if _, ok := ParseWeekday(s); ok {
-			t.Errorf("%q is a day", s)
+func TestOfRoundsDownOnBothSidesOf1970(t *testing.T) {
+	for sec, want := range map[int64]Minute{0: 0, 59: 0, 60: 1, -1: -1, -60: -1, -61: -2} {
+		if got := Of(time.Unix(sec, 0)); got != want {
+			t.Errorf("second %d lies in minute %d, want %d", sec, got, want)
 		}
 	}
 }
