@@ -89,7 +89,7 @@ func (x *expander) prep(t *tasks.Task) hands {
 	h.est.Facts = append(h.est.Facts, area)
 	if p.Abrasive > 0 {
 		h.est.Facts = append(h.est.Facts, p.Kilos)
-		h.est.Consumables = append(h.est.Consumables, Consumable{What: "abrasive", Amount: p.Abrasive, Unit: "kg", Spare: math.Ceil(p.Abrasive * 0.1)})
+		h.est.Consumables = append(h.est.Consumables, Consumable{What: "abrasive", Amount: p.Abrasive, Unit: "kg", Spare: p.Abrasive * 0.1})
 	}
 	if p.MaxWait > 0 {
 		h.est.Facts = append(h.est.Facts, p.Wait)
@@ -286,7 +286,7 @@ func (x *expander) coatHours(t *tasks.Task, p *tasks.Paint, k int) hands {
 	h.minutes = a.Range.Scale(1 / people)
 	h.est.Figure, h.est.Notes = a.Hours, a.Warnings
 	h.est.Facts = append(h.est.Facts, area, a.Volume)
-	h.est.Consumables = append(h.est.Consumables, Consumable{What: "paint " + p.Name, Amount: a.Litres, Unit: "L", Spare: math.Ceil(a.Litres * 0.1)})
+	h.est.Consumables = append(h.est.Consumables, Consumable{What: "paint " + p.Name, Amount: a.Litres, Unit: "L", Spare: a.Litres * 0.1})
 	if a.Thinner+a.Cleaner > 0 {
 		h.est.Consumables = append(h.est.Consumables, Consumable{What: "thinner for " + p.Name, Amount: a.Thinner + a.Cleaner, Unit: "L"})
 	}

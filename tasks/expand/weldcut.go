@@ -3,6 +3,7 @@ package expand
 import (
 	"errors"
 	"fmt"
+	"strings"
 
 	"sailby/tasks"
 	"sailby/tasks/origin"
@@ -84,7 +85,26 @@ func (x *expander) fittedUp(t *tasks.Task) bool {
 
 // Cutters names the ways to cut that have hours of their own; only a disc among them is noisy
 // without being a torch.
-func Cutters() []string { return []string{"plasma", "oxy-fuel", "disc"} }
+func Cutters() []string { return []string{"plasma", "oxy-fuel", "disc", "saw"} }
+
+// What a saw takes (house judgement): mm2 of section a minute, and minutes around each cut.
+const (
+	sawRate  = 800.0
+	sawReady = 5.0
+)
+
+// saw estimates cold sawing: section over rate, and making ready.
+func (x *expander) saw(t *tasks.Task, h hands) hands {
+	area := t.Length.Value * t.Thickness.Value
+	total := area/sawRate + sawReady
+	h.minutes = spread(total)
+	h.est.Figure = origin.Worked("hands-on time", total, "min", "length x thickness over the saw's rate + making ready",
+		origin.Written("length", t.Length.Value, "mm", t.Length.Pos.Origin("length")),
+		origin.Written("thickness", t.Thickness.Value, "mm", t.Thickness.Pos.Origin("thickness")),
+		origin.House("rate", sawRate, "mm2/min", "cold or band saw"),
+		origin.House("making ready", sawReady, "min", "mark, clamp, start"))
+	return h
+}
 
 // nature of a way to cut: whether it throws sparks, and whether it is loud.
 func cutNature(by string) (hot, noisy bool) {
@@ -115,8 +135,11 @@ func (x *expander) cut(t *tasks.Task) hands {
 	}
 	if !has(Cutters(), by) {
 		h.fault = fmt.Errorf("cutting by %q has no hours of its own", by)
-		h.hint = "give hours, or cut by plasma, oxy-fuel or disc"
+		h.hint = "give hours, or cut by " + strings.Join(Cutters(), ", ")
 		return h
+	}
+	if by == "saw" {
+		return x.saw(t, h)
 	}
 	l, err := weld.Cut{Method: by, Thickness: t.Thickness.Value, Length: t.Length.Value, Site: x.atSite(t),
 		Origin: t.Length.Pos.Origin("")}.Work()
