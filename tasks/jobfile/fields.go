@@ -15,6 +15,7 @@ type fields struct {
 	what string // begins every message: `task "cut lugs"`; empty at the top
 	at   *yaml.Node
 	vals map[string]*yaml.Node
+	lost bool // it has keys that are not known: what seems to be missing may be there
 }
 
 // open reads the keys of a mapping. Unknown ones are reported; a node that is no mapping is
@@ -31,6 +32,7 @@ func (r *reader) open(n *yaml.Node, sec *section, what string) *fields {
 		k, v := n.Content[i], n.Content[i+1]
 		if sec.find(k.Value) == nil {
 			r.fault(k, r.unknownKey(k.Value, sec), "%s%s is not a key here", f.lead(""), short(k.Value))
+			f.lost = true
 			continue
 		}
 		if _, twice := f.vals[k.Value]; twice {

@@ -147,7 +147,7 @@ func (r *reader) seam(n *yaml.Node, what string) (tasks.Seam, bool) {
 		}
 	}
 	if len(r.faults) > faults {
-		return s, true
+		return s, false
 	}
 	if _, err := s.Joint.Section(s.Position, true); err != nil {
 		var we *weld.Error

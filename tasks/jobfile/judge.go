@@ -16,6 +16,7 @@ func (r *reader) judge() {
 	r.judgePeople()
 	r.judgeMoments()
 	r.judgeNeeds()
+	r.judgeCrew()
 	r.judgeStates()
 	r.judgeCycles()
 	r.judgeDeadlines()

@@ -157,7 +157,7 @@ procedures:
 `, "kind: weld, at: pier/deck, hours: 3", `kind: weld, at: pier/deck, joints: [
       {fillet: {leg: 6 mm, second leg: 8 mm, both sides: yes, bead: 50 mm, pitch: 150 mm, gap: none}, length: 1.2 m each, count: 4, position: 2F, procedure: a, name: W1},
       {V butt: {thickness: 1/2 in, root gap: none, cap: none, angle: 60 deg, back gouge: yes}, length: 1.9 m in all, turns: 1, access: 1.3},
-      {fillet: {throat: 4 mm, diameter: 48.3 mm}, count: 2}]`))
+      {fillet: {throat: 4 mm, diameter: 48.3 mm}, count: 2}]`, "[fitter]", "[fitter, weld]"))
 	p := job.Procedures[0]
 	same(t, "procedure", line(int(p.Process), p.Position, p.ElectrodeDiameter, p.Travel, p.Deposition, p.Efficiency, p.OperatingFactor, p.Preheat == weld.None, p.Interpass, p.MinHeatInput, p.MaxHeatInput, p.Kit),
 		"111 PF 3.2 100 1.2 0.6 0.2 true 200 0.6 2 set")
@@ -175,7 +175,7 @@ procedures:
 		"{fillet: {leg: 90 mm}, length: 1 m}": "outside 1 mm to 60 mm", "{filet: {leg: 6 mm}, length: 1 m}": "is not a key here", "{fillet: {leg: 6 mm}, length: 1}": "has no unit",
 		"{fillet: {leg: 6 mm, throat: 6 mm}, length: 1 m}": "are not the same fillet", "{V: {root gap: wide, thickness: 10 mm}, length: 1 m}": "expected a length", "12 mm": "expected keys with values",
 	} {
-		data := text(t, "", "kind: weld, at: pier/deck, hours: 3", "kind: weld, at: pier/deck, joints: ["+value+"]")
+		data := text(t, "", "kind: weld, at: pier/deck, hours: 3", "kind: weld, at: pier/deck, joints: ["+value+"]", "[fitter]", "[fitter, weld]")
 		if strings.HasPrefix(value, "{filet") { // the missing joint is a second fault
 			if _, err := ReadBytes("job.yaml", data, nil); err == nil || !strings.Contains(err.Error(), `did you mean "fillet"?`) {
 				t.Errorf("%v", err)

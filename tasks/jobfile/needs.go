@@ -82,6 +82,9 @@ type needRef struct {
 
 // judgeNeeds checks that enough people hold the tickets asked for, at the task's place.
 func (r *reader) judgeNeeds() {
+	if r.ticketsLost {
+		return
+	}
 	var tickets []string
 	for _, p := range r.job.People {
 		for _, t := range p.Tickets {

@@ -31,7 +31,7 @@ var personSection = section{name: "Person", where: "people / NAME", host: "peopl
 
 var ticketSection = section{name: "Weld ticket", where: "people / NAME / tickets / item", host: "people/Ines/tickets/1", says: "What somebody may weld.", keys: []key{
 	{name: "weld", takes: itsOwn, form: "process, by ISO 4063 number or its usual name, or `all`", shape: anyText, need: true, example: "136", says: "the process"},
-	{name: "positions", takes: itsOwn, form: "ISO 6947 positions, or `all`", shape: textOrList, usual: "all", example: "[PF, PA]", says: "the positions that the ticket covers"},
+	{name: "positions", takes: itsOwn, form: "ISO 6947 positions, or `all`", shape: textOrList, usual: "all", example: "[PF, PA, PB]", says: "the positions that the ticket covers"},
 	{name: "joints", takes: words, words: []string{"fillet", "butt"}, usual: "all", example: "[fillet, butt]", says: "fillets, butts or both"},
 	{name: "thickness", takes: itsOwn, form: "range", shape: anyText, usual: "all", example: "3 mm to 20 mm", says: "parent metal, from thinnest to thickest"},
 }}
@@ -39,6 +39,8 @@ var ticketSection = section{name: "Weld ticket", where: "people / NAME / tickets
 const maxPeople = 300
 
 func (r *reader) readPeople(f *fields) {
+	r.ticketsLost = r.ticketsLost || f.lost && !f.tried("people")
+	r.peopleTried = r.peopleTried || f.tried("people") || f.lost
 	for i, kv := range f.pairs("people") {
 		if i == maxPeople {
 			f.fault("people", "plan with those who do the work", "more than %d people", maxPeople)
@@ -68,9 +70,11 @@ func (r *reader) person(name string, at, n *yaml.Node) *tasks.Person {
 	f := r.open(n, &personSection, fmt.Sprintf("person %q", name))
 	p := &tasks.Person{Name: name, Pos: r.pos(at), Trade: f.line("trade"), Outside: f.yes("outside")}
 	for _, t := range f.items("tickets") {
+		faults := len(r.faults)
 		if ticket, ok := r.ticket(t, f.lead("tickets")); ok {
 			p.Tickets = append(p.Tickets, ticket)
 		}
+		r.ticketsLost = r.ticketsLost || len(r.faults) > faults
 	}
 	if f.has("hours") {
 		p.Hours = f.weekly("hours")

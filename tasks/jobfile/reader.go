@@ -22,22 +22,24 @@ type reader struct {
 	unsaid  int // faults beyond maxFaults
 	guesses int
 
-	home       *time.Location
-	zoneTried  bool                  // the job states a zone, be it a faulty one
-	site       *tasks.Place          // the window's place
-	onHolidays []*tasks.Place        // closed on public holidays
-	tideTried  map[*tasks.Place]bool // a tide table is named, be it a faulty one
-	windows    []window
-	moments    []pending
-	personRefs []personRef
-	drafts     []*draft
-	needRefs   []needRef
-	taskSet    map[string]bool
-	taskNames  []string
-	blocks     []*block
-	placeOf    map[string]*tasks.Place
-	kitOf      map[string]*tasks.Kit
-	tables     map[string]bool // files read beside the job file
+	home        *time.Location
+	peopleTried bool                  // somebody is declared, be it wrongly
+	zoneTried   bool                  // the job states a zone, be it a faulty one
+	site        *tasks.Place          // the window's place
+	onHolidays  []*tasks.Place        // closed on public holidays
+	tideTried   map[*tasks.Place]bool // a tide table is named, be it a faulty one
+	windows     []window
+	moments     []pending
+	personRefs  []personRef
+	drafts      []*draft
+	ticketsLost bool // some ticket is at fault: who holds what is not known
+	needRefs    []needRef
+	taskSet     map[string]bool
+	taskNames   []string
+	blocks      []*block
+	placeOf     map[string]*tasks.Place
+	kitOf       map[string]*tasks.Kit
+	tables      map[string]bool // files read beside the job file
 }
 
 func newReader(name string, fsys fs.FS) *reader {
