@@ -11,6 +11,7 @@ type search struct {
 	value  int32   // only finishes before this are looked for
 	polled int64
 	kept   int64 // clauses allowed
+	assume []fact
 }
 
 // outcome is how a run ended.
@@ -24,8 +25,7 @@ const (
 	stopped
 )
 
-// How the search shares its effort. Restarts begin short and grow by a tenth; one run in four
-// tries to refute finishes just above the bound (destructive bounds: Klein and Scholl 1999).
+// Restarts begin short and grow by a tenth.
 const (
 	firstRun   = 100
 	growth     = 10
@@ -95,32 +95,29 @@ func (s *search) take() bool {
 	return s.tighten()
 }
 
-// breed makes schedules until so many have been made since the last improvement; false if the
-// search is at its end.
-func (s *search) breed(b *breeder, patience int) bool {
-	for k := 0; k < patience; k++ {
-		s.ticks += int64(b.n) * 4
-		better := b.step()
-		if b.best.end < s.value {
-			if !s.adopt(b.best) {
-				return false
-			}
+// breed makes some schedules.
+func (s *search) breed(b *breeder) outcome {
+	for k := 0; k < breedAtOne; k++ {
+		s.ticks += int64(b.n) * 16
+		b.step()
+		if b.best.end < s.value && !s.adopt(b.best) {
+			return over
 		}
-		if better {
-			k = 0
-		}
-		if b.best.end <= s.now[s.end] || s.stopped() {
-			break
+		if s.stopped() {
+			return stopped
 		}
 	}
-	return true
+	return tired
 }
+
+// breedAtOne is how many schedules are made in one turn.
+const breedAtOne = 100
 
 // adopt notes a schedule found outside the engine.
 func (s *search) adopt(x *beast) bool {
 	s.value = x.end
-	for len(s.best) < int(s.end/2)+1 {
-		s.best = append(s.best, 0)
+	if s.best == nil {
+		s.best = make([]int32, len(s.now)/2)
 	}
 	s.starts = s.starts[:0]
 	for i, side := range s.start {
@@ -149,56 +146,20 @@ func (s *search) tighten() bool {
 	return !s.dead
 }
 
-// minimise is the search for the best plan.
-func (s *search) minimise() Result {
+// begin takes over what is known and settles the root; false if that is the end of the search.
+func (s *search) begin() bool {
 	s.value = int32(s.p.End) + 1
-	for i, v := range s.opt.Hint {
-		for len(s.best) < int(s.start[i]/2) {
-			s.best = append(s.best, 0)
+	s.kept = firstKept
+	if s.opt.Hint != nil {
+		s.best = make([]int32, len(s.now)/2)
+		for i, v := range s.opt.Hint {
+			s.best[s.start[i]/2] = int32(v)
 		}
-		s.best = append(s.best, int32(v))
 	}
 	if s.opt.Best > 0 && s.opt.Best <= s.p.End {
 		s.value = int32(s.opt.Best)
 	}
-	if !s.tighten() || !s.settle() {
-		s.dead = true
-		return s.result()
-	}
-	s.kept = firstKept
-	if h := newShop(s.model); h != nil && !s.breed(newBreeder(h, s.opt.Seed), 2000) {
-		return s.result()
-	}
-	limit, step, low := int64(firstRun), int32(1), int64(firstRun)
-	for round := 0; ; round++ {
-		var o outcome
-		target := s.now[s.end] + step - 1
-		if round%lowEvery == lowEvery-1 && target < s.value-1 {
-			o = s.run([]fact{{s.end ^ 1, -target}}, low, false)
-			switch o {
-			case refused:
-				step = min(2*step, 1<<20)
-				round--
-			case tired:
-				if step == 1 {
-					low += low / growth
-				}
-				step = max(1, step/2)
-			}
-		} else {
-			o = s.run(nil, limit, round%2 == 0)
-			if o == tired {
-				limit += limit / growth
-			}
-		}
-		if o == over || o == stopped {
-			return s.result()
-		}
-		if int64(len(s.refs)) > s.kept {
-			s.reduce()
-			s.kept += keptStep
-		}
-	}
+	return s.tighten() && s.ok()
 }
 
 // result says what has been found out.

@@ -1,0 +1,124 @@
+package learn
+
+import "math/rand/v2"
+
+// The search has four means and gives each a share of its ticks: a free run for the proof and for
+// plans; slices of the best plan; new schedules; and low runs that refute finishes near the bound. The
+// shares of those that only find plans sink while they find none.
+type means uint8
+
+const (
+	freely means = iota
+	slicing
+	breeding
+	lowly
+	allMeans
+)
+
+var shares = [allMeans]float64{freely: 1, slicing: 1, breeding: 0.6, lowly: 0.3}
+
+// least is what is left of the share of slicing and breeding in the end.
+const least = 0.12
+
+// purse keeps account of the ticks.
+type purse struct {
+	spent [allMeans]float64 // ticks over shares
+	since [allMeans]float64 // ticks since the last better plan
+	able  [allMeans]bool
+}
+
+// next gives the means that has had the least for its share.
+func (p *purse) next() means {
+	best := freely
+	for m := freely; m < allMeans; m++ {
+		if p.able[m] && p.spent[m] < p.spent[best] {
+			best = m
+		}
+	}
+	return best
+}
+
+// pay notes what a turn has cost; patience is the number of ticks after which a means that has found
+// nothing has half of its share left.
+func (p *purse) pay(m means, ticks int64, better bool, patience float64) {
+	if better {
+		p.since = [allMeans]float64{}
+	}
+	share := shares[m]
+	if m == slicing || m == breeding {
+		p.since[m] += float64(ticks)
+		share *= max(least, patience/(patience+p.since[m]))
+	}
+	p.spent[m] += float64(ticks) / share
+}
+
+// minimise looks for the best plan.
+func (s *search) minimise() Result {
+	if !s.begin() {
+		return s.result()
+	}
+	var b *breeder
+	if h := newShop(s.model); h != nil {
+		b = newBreeder(h, s.opt.Seed)
+	}
+	c := &slicer{rnd: rand.New(rand.NewPCG(s.opt.Seed, 29)), size: firstSlice}
+	var p purse
+	p.able[freely] = true
+	turn, limit, low := 0, int64(firstRun), lowRun{step: 1, limit: firstRun}
+	for round := 0; ; round++ {
+		p.able[slicing] = s.starts != nil
+		p.able[breeding] = b != nil
+		p.able[lowly] = s.now[s.end] < s.value-2
+		m := p.next()
+		if b != nil && round == 0 {
+			m = breeding
+		}
+		ticks, value := s.ticks, s.value
+		var o outcome
+		switch m {
+		case freely:
+			turn++
+			if o = s.run(nil, limit, turn%2 == 0); o == tired {
+				limit += limit / growth
+			}
+		case slicing:
+			o = s.slices(c)
+		case breeding:
+			o = s.breed(b)
+		case lowly:
+			o = low.run(s)
+		}
+		if o == over || o == stopped {
+			return s.result()
+		}
+		p.pay(m, s.ticks-ticks, s.value < value, patience*float64(len(s.start)))
+		if int64(len(s.refs)) > s.kept {
+			s.reduce()
+			s.kept += keptStep
+		}
+	}
+}
+
+// patience is the number of ticks for each activity after which half of a share is left.
+const patience = 200_000
+
+// lowRun is the search for a higher bound, in steps that double while they succeed.
+type lowRun struct {
+	step  int32
+	limit int64
+}
+
+func (l *lowRun) run(s *search) outcome {
+	target := min(s.now[s.end]+l.step-1, s.value-2)
+	o := s.run([]fact{{s.end ^ 1, -target}}, l.limit, false)
+	switch o {
+	case refused:
+		l.step = min(2*l.step, 1<<20)
+	case tired:
+		if l.step == 1 {
+			l.limit += l.limit / growth
+		}
+		l.step = max(1, l.step/2)
+	}
+	return o
+}

@@ -1,0 +1,73 @@
+package learn
+
+import (
+	"math/rand/v2"
+	"sort"
+)
+
+// slicer takes a slice of time out of the best plan and lets the learning search arrange its
+// activities anew, everything before it kept and everything after it moved earlier by one (the
+// decomposition of Debels and Vanhoucke 2007, with an exact search in the slice). A slice that
+// holds a better plan shortens the whole.
+type slicer struct {
+	rnd   *rand.Rand
+	size  float64 // activities in a slice
+	order []int
+}
+
+const (
+	smallSlice  = 8
+	firstSlice  = 20
+	sliceWork   = 250 // conflicts for one slice
+	slicesAtOne = 4   // slices tried in one turn
+)
+
+// pick gives the facts that hold the rest of the best plan in place. The slice begins at a random
+// activity in the order of starts.
+func (c *slicer) pick(s *search, out []fact) []fact {
+	n := len(s.start)
+	c.order = c.order[:0]
+	for i := 0; i < n; i++ {
+		c.order = append(c.order, i)
+	}
+	sort.SliceStable(c.order, func(x, y int) bool { return s.starts[c.order[x]] < s.starts[c.order[y]] })
+	size := min(n, int(c.size))
+	first := c.rnd.IntN(n+size) - size
+	from, to := s.starts[c.order[max(0, first)]], int(far)
+	if first <= 0 {
+		from = -1
+	}
+	if first+size < n {
+		to = s.starts[c.order[max(0, first+size)]]
+	}
+	for _, i := range c.order {
+		v := int32(s.starts[i])
+		x := s.start[i]
+		switch {
+		case s.starts[i] >= to:
+			out = append(out, fact{x ^ 1, -(v - 1)}, fact{x, v - 1})
+		case int(s.finishOf(i)) <= from:
+			out = append(out, fact{x ^ 1, -v}, fact{x, v})
+		}
+	}
+	return out
+}
+
+// finishOf gives the finish of activity i in the best plan.
+func (s *search) finishOf(i int) int32 { return s.best[s.finish[i]/2] + s.length[i] }
+
+// slices tries some slices; what it gives is over, stopped or tired.
+func (s *search) slices(c *slicer) outcome {
+	for k := 0; k < slicesAtOne; k++ {
+		s.assume = c.pick(s, s.assume[:0])
+		switch o := s.run(s.assume, sliceWork, false); o {
+		case over, stopped:
+			return o
+		case refused:
+			c.size = min(c.size*1.03+0.1, float64(len(s.start)))
+		case tired:
+			c.size = max(c.size*0.98, smallSlice)
+		}
+	}
+	return tired
+}
