@@ -6,19 +6,36 @@ package screen
 import (
 	"strings"
 
-	"github.com/rivo/tview"
+	"github.com/gdamore/tcell/v2"
+	"github.com/rivo/uniseg"
 
 	"sailby/report/clean"
 )
 
-// cell makes text safe to hand to tview: control sequences and hidden characters are taken out,
-// and brackets that would be read as a style stay brackets. Blanks at the start are kept.
-func cell(s string) string {
-	body := strings.TrimLeft(s, " ")
-	return strings.Repeat(" ", len(s)-len(body)) + tview.Escape(spaced(body))
+// cell writes text into one row from x on, at most w columns of it. All text of the screen goes
+// through here: control sequences and hidden characters are taken out, blanks stay, and brackets
+// are brackets. It writes the cells itself, since tview's own printing takes words in brackets
+// for styles, and its Escape leaves some of them (links) as they are.
+func cell(s tcell.Screen, x, y, w int, text string, style tcell.Style) {
+	end := x + w
+	g := uniseg.NewGraphemes(spaced(text))
+	for g.Next() {
+		n, runes := g.Width(), g.Runes()
+		if n == 0 {
+			continue
+		}
+		if x+n > end {
+			break
+		}
+		s.SetContent(x, y, runes[0], runes[1:], style)
+		x += n
+	}
+	for ; x < end; x++ {
+		s.SetContent(x, y, ' ', nil, style)
+	}
 }
 
-// spaced cleans the words between runs of blanks, so that columns stay where they are.
+// spaced cleans the words between blanks, so that columns stay where they are.
 func spaced(s string) string {
 	parts := strings.Split(s, " ")
 	for i, p := range parts {

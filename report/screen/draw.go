@@ -26,15 +26,7 @@ func (v *view) Draw(s tcell.Screen) {
 	v.DrawForSubclass(s, v)
 	x, y, w, h := v.GetInnerRect()
 	for i, row := range v.m.Rows(w, h) {
-		style := v.style(row.Mark)
-		tview.Print(s, cell(row.Text), x, y+i, w, tview.AlignLeft, tcell.ColorDefault)
-		if style == tcell.StyleDefault {
-			continue
-		}
-		for col := x; col < x+w; col++ {
-			r, comb, _, _ := s.GetContent(col, y+i)
-			s.SetContent(col, y+i, r, comb, style)
-		}
+		cell(s, x, y+i, w, row.Text, v.style(row.Mark))
 	}
 	if cx, cy, shown := v.m.Cursor(); shown && v.HasFocus() {
 		s.ShowCursor(x+cx, y+cy)

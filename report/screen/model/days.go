@@ -61,6 +61,9 @@ func (p *daysPage) press(k Key) (Ask, bool) {
 	return Ask{}, true
 }
 
+// leastDay is the number of rows for which a following day is begun.
+const leastDay = 12
+
 func (p *daysPage) lay(n int) ([]Row, []line) {
 	shifts := p.m.shifts()
 	a := p.m.answer()
@@ -72,6 +75,22 @@ func (p *daysPage) lay(n int) ([]Row, []line) {
 	for _, t := range wrap(agenda.Headline(a.Work, s), n) {
 		fixed = append(fixed, Row{t, Head})
 	}
+	body := p.lines(s, n)
+	room := p.m.tall - edge - 1 - len(fixed)
+	for _, next := range shifts[min(p.day, len(shifts)-1)+1:] { // where there is room, the days that follow
+		if len(body)+leastDay > room {
+			break
+		}
+		body = append(body, line{})
+		body = append(body, para(n, "", agenda.Headline(a.Work, next), Head, nil)...)
+		body = append(body, p.lines(next, n)...)
+	}
+	return fixed, body
+}
+
+// lines gives the strips of a day and its work.
+func (p *daysPage) lines(s *agenda.Shift, n int) []line {
+	a := p.m.answer()
 	body := para(n, "", agenda.Facts(a.Work, s), Faint, nil)
 	d := dayStrips{a: a, s: s, n: n, letters: letters(s)}
 	body = append(body, d.lines()...)
@@ -85,7 +104,7 @@ func (p *daysPage) lay(n int) ([]Row, []line) {
 			text: cut(": standing: "+agenda.StepLabel(a.Work, st.Step)+", until "+agenda.When(st.To, s.Zone), n),
 			do:   func() Ask { return p.m.open(newTask(p.m, task)) }})
 	}
-	return fixed, body
+	return body
 }
 
 // entry is one piece of work of the day; Enter opens its task.
@@ -167,7 +186,7 @@ func (d dayStrips) lines() []line {
 	gates(agenda.Reach(d.a.Work, d.s))
 	gates(agenda.Hire(d.a.Work, d.s))
 	gates(agenda.Permits(d.a.Work, d.s))
-	key := fmt.Sprintf("a= at work, ~ fire watch, . free, - break, > on the way, _ open; %d min a column", base.step)
+	key := fmt.Sprintf("a== work, ~ fire watch, . free, - break, > on the way, _ open (%d min each)", base.step)
 	return append(out, para(d.n, "", key, Faint, nil)...)
 }
 

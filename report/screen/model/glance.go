@@ -40,7 +40,7 @@ func (p *glancePage) lay(n int) ([]Row, []line) {
 	out = append(out, line{})
 	out = append(out, windowStrip(a, m.shifts(), n)...)
 	out = append(out, line{})
-	out = append(out, sideBySide(m.shown, n)...)
+	out = append(out, sideBySide(m.shown, m.shown == m.tried, n)...)
 	out = append(out, line{})
 	out = append(out, p.deadlines(a, n)...)
 	if a.Proof != nil {
@@ -68,13 +68,17 @@ func inFile(at string) string {
 	return " (" + at + ")"
 }
 
-// sideBySide is the table of the three answers.
-func sideBySide(r *plan.Report, n int) []line {
+// sideBySide is the table of the three answers; only says that no more than the likely one was
+// planned.
+func sideBySide(r *plan.Report, only bool, n int) []line {
 	label := 19
 	each := (n - label) / 3
 	widths := []int{label, each, each}
 	same := func(a *plan.Answer, f func(*plan.Answer) string) string {
-		if a == nil {
+		switch {
+		case a == nil && only:
+			return "not planned"
+		case a == nil:
 			return "the same"
 		}
 		return f(a)

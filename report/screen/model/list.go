@@ -1,7 +1,6 @@
 package model
 
 import (
-	"cmp"
 	"slices"
 	"strings"
 
@@ -9,7 +8,6 @@ import (
 	"sailby/report/clean"
 	"sailby/tasks"
 	"sailby/tasks/expand"
-	"sailby/tasks/hours"
 	"sailby/tasks/quantity"
 )
 
@@ -25,16 +23,6 @@ type listPage struct {
 	at      scroll
 }
 
-// item is a task with what the list says of it.
-type item struct {
-	task          *tasks.Task
-	start, finish hours.Minute
-	people        []string
-	days          []hours.Date
-	leeway        int
-	planned       bool
-}
-
 func newList(m *Model, name string, choose func(string) Ask) *listPage {
 	return &listPage{m: m, name: name, choose: choose, filters: newFilters()}
 }
@@ -44,9 +32,9 @@ func (p *listPage) place() *scroll { return &p.at }
 func (p *listPage) typing() bool   { return len(p.search.chars) > 0 }
 func (p *listPage) keys() string {
 	if p.typing() {
-		return "type to search   Tab, Left/Right filter   Enter open   Esc all tasks again"
+		return "type to search   Tab, Left/Right: filter   Enter open   Esc all tasks again"
 	}
-	return "type to search   Tab, Left/Right filter   Up/Down choose   Enter open   Esc back"
+	return "type to search   Tab, Left/Right: filter   Enter open   Esc back"
 }
 
 func (p *listPage) cursor() (row, col int) {
@@ -156,6 +144,9 @@ func listColumns(n int) ([]int, []string) {
 	if n >= 116 {
 		return []int{18, 18, 12, n - 18 - 18 - 12 - 20 - 24 - 12, 20, 24, 12}, []string{"starts", "finishes", "kind", "task", "where", "who", "leeway"}
 	}
+	if n < 62 {
+		return []int{17, n - 17 - 11, 11}, []string{"starts", "task", "leeway"}
+	}
 	rest := n - 17 - 11
 	where := rest / 4
 	who := rest / 4
@@ -168,15 +159,26 @@ func (p *listPage) cells(it item, n int) []string {
 	start, finish, leeway := "-", "-", "-"
 	switch {
 	case it.planned:
-		start, finish, leeway = agenda.When(it.start, zone), agenda.When(it.finish, zone), quantity.Span(it.leeway)
+		start, finish, leeway = agenda.When(it.start, zone), agenda.When(it.finish, zone), roughly(it.leeway)
 	case absent(p.m.work(), it.task):
 		start, leeway = "does not happen", ""
 	}
 	who := strings.Join(it.people, ", ")
-	if n == 7 {
+	switch n {
+	case 3:
+		return []string{start, agenda.TaskLabel(it.task), leeway}
+	case 7:
 		return []string{start, finish, string(it.task.Kind), agenda.TaskLabel(it.task), it.task.Where(), who, leeway}
 	}
 	return []string{start, agenda.TaskLabel(it.task), it.task.Where(), who, leeway}
+}
+
+// roughly writes minutes as hours and minutes, from two days on without the minutes.
+func roughly(minutes int) string {
+	if minutes >= 48*60 {
+		minutes -= minutes % 60
+	}
+	return quantity.Span(minutes)
 }
 
 func absent(w *expand.Work, t *tasks.Task) bool {
@@ -199,58 +201,4 @@ func (p *listPage) takes(it item) bool {
 		}
 	}
 	return true
-}
-
-// items lists the tasks in the order of their starts; those that are not planned come last, in
-// the order of the file.
-func items(m *Model) []item {
-	a := m.answer()
-	first := map[string]int{}
-	var out []item
-	for _, t := range a.Work.Job.Tasks {
-		first[t.Name] = len(out)
-		out = append(out, item{task: t})
-	}
-	if a.Plan == nil {
-		return out
-	}
-	for i, s := range a.Work.Steps {
-		k, ok := first[s.Task.Name]
-		if !ok || s.Absent || i >= len(a.Plan.Steps) {
-			continue
-		}
-		it, ps := &out[k], a.Plan.Steps[i]
-		if !it.planned || ps.Start < it.start {
-			it.start = ps.Start
-		}
-		if !it.planned || !standing(s) {
-			it.finish = ps.Finish
-			if i < len(a.Rows) {
-				it.leeway = a.Rows[i].Leeway
-			}
-		}
-		it.planned = true
-		for _, who := range append(slices.Clone(ps.People), ps.Relief...) {
-			if !slices.Contains(it.people, who) {
-				it.people = append(it.people, who)
-			}
-		}
-		zone := agenda.Zone(a.Work, s.Place)
-		for _, piece := range ps.Pieces {
-			d := hours.DateOf(piece.From.In(zone))
-			if !slices.Contains(it.days, d) {
-				it.days = append(it.days, d)
-			}
-		}
-	}
-	slices.SortStableFunc(out, func(x, y item) int {
-		if x.planned != y.planned {
-			if x.planned {
-				return -1
-			}
-			return 1
-		}
-		return cmp.Compare(x.start, y.start)
-	})
-	return out
 }

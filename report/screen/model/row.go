@@ -72,7 +72,7 @@ func wrap(text string, n int) []string {
 	n = max(n, 4)
 	var out []string
 	line := ""
-	for _, word := range strings.Fields(clean.Line(text)) {
+	for _, word := range clean.Words(clean.Line(text)) {
 		if line != "" && width(line)+1+width(word) > n {
 			out, line = append(out, line), ""
 		}

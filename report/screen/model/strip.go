@@ -75,6 +75,17 @@ func (s strip) fill(span hours.Span, r rune) (from, to int) {
 	return from, to
 }
 
+// point draws r at a minute; where something stands already, in the nearest free column before.
+func (s strip) point(m hours.Minute, r rune) {
+	c := min(s.column(m), len(s.cells)-1)
+	for i := c; i >= 0; i-- {
+		if s.cells[i] == ' ' {
+			s.cells[i] = r
+			return
+		}
+	}
+}
+
 // write puts text from a column on, no further than to.
 func (s strip) write(from, to int, text string) {
 	for _, r := range text {
@@ -131,28 +142,21 @@ func windowStrip(a *plan.Answer, shifts []*agenda.Shift, n int) []line {
 	}
 	key := "_ open   = hands-on work"
 	point := func(m hours.Minute, r rune, says string) {
-		if m >= span.From && m <= span.To && m != 0 {
-			c := min(marks.column(m), len(marks.cells)-1)
-			if marks.cells[c] != ' ' {
-				c = max(c-1, 0)
-			}
-			marks.cells[c] = r
-			key += "   " + string(r) + " " + says
+		if m < span.From || m > span.To {
+			return
+		}
+		marks.point(m, r)
+		if says = "   " + string(r) + " " + says; !strings.Contains(key, says) {
+			key += says
 		}
 	}
 	point(w.Window.Closes, '|', "close")
 	if a.Plan != nil {
 		point(a.Finish, 'F', "finish")
 	}
-	seen := false
 	for _, d := range a.Deadlines {
-		if d.Task != nil && d.By >= span.From && d.By <= span.To {
-			if !seen {
-				point(d.By, 'D', "deadline")
-			} else {
-				marks.cells[min(marks.column(d.By), len(marks.cells)-1)] = 'D'
-			}
-			seen = true
+		if d.Task != nil {
+			point(d.By, 'D', "deadline")
 		}
 	}
 	for _, r := range []struct {

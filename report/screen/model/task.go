@@ -56,10 +56,7 @@ func (p *taskPage) lay(n int) ([]Row, []line) {
 		if i == 0 || l != "" && l[0] != ' ' && i > 0 && lines[i-1] == "" && len(l) < 40 {
 			mark = Head
 		}
-		body = append(body, line{text: strings.TrimRight(clean.Line(" "+l), " "), mark: mark})
-		if l != "" { // the indentation of the tree, which cleaning takes away
-			body[len(body)-1].text = l[:len(l)-len(strings.TrimLeft(l, " "))] + clean.Line(l)
-		}
+		body = append(body, line{text: l, mark: mark}) // cleaned by package text
 	}
 	body = append(body, line{})
 	body = append(body, p.shared(n)...)
@@ -71,7 +68,7 @@ func (p *taskPage) lay(n int) ([]Row, []line) {
 			body = append(body, para(n, "  ", s, Plain, nil)...)
 		}
 	}
-	return nil, append(body, line{text: "Try other hours for this task", do: func() Ask { return p.m.what.askHours(t.Name) }})
+	return nil, append(body, line{}, line{text: "Try other hours for this task", do: func() Ask { return p.m.what.askHours(t.Name) }})
 }
 
 // shared lists the tasks that the leeway is shared with; Enter opens one.

@@ -58,7 +58,7 @@ func (p *whatPage) lay(n int) ([]Row, []line) {
 	}
 	switch {
 	case p.m.tried != nil && p.m.shown == p.m.file:
-		act("Show the plan with these changes on every page", func() Ask { p.m.shown = p.m.tried; return Ask{} })
+		act("Show the plan with these changes on every page", func() Ask { p.m.shown, p.m.basis = p.m.tried, likely; return Ask{} })
 	case p.m.shown != p.m.file:
 		act("Show the plan of the file on every page again", func() Ask { p.m.shown = p.m.file; return Ask{} })
 	}
@@ -114,7 +114,10 @@ func (p *whatPage) stop() Ask {
 func (p *whatPage) try(c change) Ask {
 	p.m.turn(p)
 	p.changes = append(p.changes, c)
-	p.at = scroll{at: len(p.changes) + 6}
+	p.at = scroll{at: len(p.changes) + 5} // the line of the change
+	if len(p.job().Changes) > 0 {
+		p.at.at++
+	}
 	return p.plan()
 }
 
