@@ -111,10 +111,10 @@ func (p *Problem) resources() {
 			if f.People > 0 {
 				add(Resource{Name: place.Name + "/" + f.Name, Kind: Room, Capacity: f.People, Pos: f.Pos}, func(s *expand.Step) (int, bool) {
 					if s.Face == f {
-						if s.Watch > 0 && s.Room > 0 {
+						if s.Watch > 0 && s.Room > 0 { // watchers are counted as people: one may watch several works
 							p.Acts[s.Index].WatchRoom = len(p.Res) + 1
 						}
-						return s.Room, false
+						return s.Room - watchers(s), false
 					}
 					return 0, false
 				})
@@ -129,6 +129,17 @@ func (p *Problem) resources() {
 			})
 		}
 	}
+}
+
+// watchers counts the people of a step who only watch.
+func watchers(s *expand.Step) int {
+	n := 0
+	for _, need := range s.Needs {
+		if need.Watch {
+			n += need.Count
+		}
+	}
+	return n
 }
 
 // Supply gives the power there is at a place and whether anything limits it: its mains where

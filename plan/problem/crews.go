@@ -117,13 +117,13 @@ func (m *crewMaker) modes(s *expand.Step) ([]Mode, string) {
 		out = append(out, m.relays(s, teams, base, access)...)
 	}
 	if len(out) == 0 {
-		return nil, m.noOpening(s, base, room)
+		return nil, m.noOpening(s, teams, base, room)
 	}
 	return out, ""
 }
 
 // noOpening says why no start is possible for anybody.
-func (m *crewMaker) noOpening(s *expand.Step, base hours.Set, room bool) string {
+func (m *crewMaker) noOpening(s *expand.Step, teams []team, base hours.Set, room bool) string {
 	longest := 0
 	for _, b := range base.Joined(Meal, nil) {
 		longest = max(longest, base.Count(b))
@@ -137,7 +137,11 @@ func (m *crewMaker) noOpening(s *expand.Step, base hours.Set, room bool) string 
 	case !room:
 		return "nobody who can do it is on shift in its open hours"
 	}
-	return fmt.Sprintf("its %d min do not fit into the open hours of those who can do it", need)
+	most := 0
+	for _, t := range teams {
+		most = max(most, m.together(s, t.crew, base).Total())
+	}
+	return fmt.Sprintf("its %d min do not fit into the %d min that are open to those who can do it", need, most)
 }
 
 type team struct {

@@ -218,7 +218,7 @@ func (a *asked) overload(o *solve.Overload) *plan.Proof {
 		o.Load.Who, scope(o.Load.Scope), span(o.Total), from, to, span(o.Have), span(p.Over))
 	for k, i := range o.Acts {
 		act := &a.p.Acts[i]
-		p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s: %s", stepName(act.Step), span(o.Need[k])), Minutes: o.Need[k], Pos: act.Pos(), Needed: true})
+		p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s: %s", stepName(act.Step), span(o.Need[k])), Minutes: o.Need[k], Pos: act.Pos(), Needed: o.Total-o.Need[k] <= o.Have})
 	}
 	p.Lines = append(p.Lines, plan.ProofLine{
 		Text:    fmt.Sprintf("open for %s%s from %s to %s: %s", o.Load.Who, scope(o.Load.Scope), from, to, span(o.Have)),

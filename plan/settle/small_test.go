@@ -303,7 +303,9 @@ func (s *small) link(d dice, t *smallTask, j int) {
 
 // hands draws what a hands-on task needs.
 func (s *small) hands(d dice, kind string, key func(string, ...any)) {
-	key("hours: %s", d.span("hours", 1, 8))
+	if kind != "coat" {
+		key("hours: %s", d.span("hours", 1, 8))
+	}
 	switch kind {
 	case "weld":
 		key("needs: {weld 136: 1}")
@@ -313,7 +315,13 @@ func (s *small) hands(d dice, kind string, key func(string, ...any)) {
 	case "cut":
 		key("by: disc")
 	case "coat":
-		key("coats: [primer%s]", d.of("coats", "", ", primer"))
+		if d.one("two coats", 2) {
+			key("coats: [primer, primer]")
+			key("hours: %d h", 1+d.upTo("hours", 2)) // for both
+		} else {
+			key("coats: [primer]")
+			key("hours: %s", d.span("hours", 1, 4))
+		}
 		key("area: 1 m2")
 		key("set-up: 0 min") // mixing, unless a set-up is drawn
 		return

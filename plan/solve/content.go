@@ -26,7 +26,7 @@ type Load struct {
 type Overload struct {
 	Load        *Load
 	From, To    int
-	Acts        []int // none can be left out: without it the rest would fit
+	Acts        []int // all that must be done between the two
 	Need        []int
 	Total, Have int
 }
@@ -208,9 +208,9 @@ func (b *loadBuilder) resources() {
 		for i := range b.p.Acts {
 			a := &b.p.Acts[i]
 			for _, u := range a.Uses {
-				if amount := u.Amount - sharers(a, res.Kind); u.Res == r && amount > 0 && a.Modes[0].Time.Calendar() != nil {
+				if u.Res == r && a.Modes[0].Time.Calendar() != nil {
 					l.acts = append(l.acts, i)
-					l.need = append(l.need, amount*(a.Step.Working+a.Step.SetUp))
+					l.need = append(l.need, u.Amount*(a.Step.Working+a.Step.SetUp))
 				}
 			}
 		}
@@ -221,19 +221,6 @@ func (b *loadBuilder) resources() {
 		l.count(b.p.End)
 		b.loads = append(b.loads, l)
 	}
-}
-
-// sharers counts the places of an activity in a workface's room that it may share: its fire watch.
-func sharers(a *problem.Act, kind problem.ResourceKind) int {
-	n := 0
-	if kind == problem.Room {
-		for _, need := range a.Step.Needs {
-			if need.Watch {
-				n += need.Count
-			}
-		}
-	}
-	return n
 }
 
 // count sums up the minutes available.
@@ -285,27 +272,16 @@ func FindOverload(loads []*Load, b network.Bounds) *Overload {
 		}
 	}
 	if best != nil {
-		best.shrink()
+		best.name()
 	}
 	return best
 }
 
-// shrink leaves out activities that the contradiction does not need, small ones first, and
-// turns positions in the load into activities.
-func (o *Overload) shrink() {
-	sort.SliceStable(o.Acts, func(a, b int) bool { return o.Load.need[o.Acts[a]] < o.Load.need[o.Acts[b]] })
-	var keep []int
-	for _, k := range o.Acts {
-		if o.Total-o.Load.need[k] > o.Have {
-			o.Total -= o.Load.need[k]
-		} else {
-			keep = append(keep, k)
-		}
-	}
-	o.Acts = nil
-	for _, k := range keep {
-		o.Acts = append(o.Acts, o.Load.acts[k])
-		o.Need = append(o.Need, o.Load.need[k])
+// name turns positions in the load into activities.
+func (o *Overload) name() {
+	for k, at := range o.Acts {
+		o.Need = append(o.Need, o.Load.need[at])
+		o.Acts[k] = o.Load.acts[at]
 	}
 }
 

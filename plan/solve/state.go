@@ -4,6 +4,7 @@
 package solve
 
 import (
+	"slices"
 	"sort"
 
 	"sailby/plan/problem"
@@ -116,7 +117,7 @@ func (s *state) fits(i, m, at int, skip *skipper) block {
 // pieceBlock looks for what is in the way of one hands-on piece.
 func (s *state) pieceBlock(a *problem.Act, md *problem.Mode, from, to int, skip *skipper) block {
 	for _, u := range a.Uses {
-		if !u.Stays && !skip.resource(u.Res) {
+		if !u.Stays && !skip.resource(u.Res) && u.Res != a.WatchRoom-1 {
 			if b := s.useBlock(u, from, to); b.kind != free {
 				return b
 			}
@@ -170,7 +171,51 @@ func (s *state) crewBlock(a *problem.Act, crew []int, watch []bool, from, to int
 			return b
 		}
 	}
+	if a.WatchRoom > 0 && !skip.resource(a.WatchRoom-1) {
+		return s.roomBlock(a, crew, watch, from, to)
+	}
 	return block{}
+}
+
+// roomBlock looks whether a workface has room for a crew from one minute to another. Somebody
+// who watches other work there already is not counted twice.
+func (s *state) roomBlock(a *problem.Act, crew []int, watch []bool, from, to int) block {
+	cuts := []int{from, to}
+	for k, p := range crew {
+		if watch[k] {
+			for _, b := range s.people[p] {
+				if b.watch == a.Step.Face && b.from < to && b.to > from {
+					cuts = append(cuts, max(b.from, from), min(b.to, to))
+				}
+			}
+		}
+	}
+	slices.Sort(cuts)
+	for c := 1; c < len(cuts); c++ {
+		if cuts[c-1] == cuts[c] {
+			continue
+		}
+		count := 0
+		for k, p := range crew {
+			if !watch[k] || !s.watching(p, a.Step.Face, cuts[c-1]) {
+				count++
+			}
+		}
+		if b := s.useBlock(problem.Use{Res: a.WatchRoom - 1, Amount: count}, cuts[c-1], cuts[c]); b.kind != free {
+			return b
+		}
+	}
+	return block{}
+}
+
+// watching says whether p keeps a watch at a workface in the minute that begins at t.
+func (s *state) watching(p int, face *tasks.Workface, t int) bool {
+	for _, b := range s.people[p] {
+		if b.watch == face && b.from <= t && t < b.to {
+			return true
+		}
+	}
+	return false
 }
 
 // personBlock looks for work of person p that overlaps [from, to).
@@ -239,9 +284,9 @@ func (s *state) pairBlock(k, i, at, fin int, skip *skipper) block {
 func (s *state) watchBlock(i int, md *problem.Mode, at, fin int, skip *skipper) block {
 	a := &s.p.Acts[i]
 	for k, e := range md.Time.Stops(at) {
-		_, b := s.keeper(i, k, md, at, e, skip)
+		who, b := s.keeper(i, k, md, at, e, skip)
 		if b.kind == free && a.WatchRoom > 0 && !skip.resource(a.WatchRoom-1) {
-			b = s.useBlock(problem.Use{Res: a.WatchRoom - 1, Amount: 1}, e, e+md.Time.Watch())
+			b = s.roomBlock(a, []int{who}, []bool{true}, e, e+md.Time.Watch())
 		}
 		if b.kind == free {
 			continue
@@ -350,10 +395,7 @@ func (s *state) put(i, m, at int) {
 				who = md.Keepers[0] // asked for out of order: the checker will say so
 			}
 			s.watches[i] = append(s.watches[i], busy{e, e + md.Time.Watch(), who, a.Step.Face})
-			s.insert(who, busy{e, e + md.Time.Watch(), i, a.Step.Face})
-			if a.WatchRoom > 0 {
-				s.change(a.WatchRoom-1, e, e+md.Time.Watch(), 1)
-			}
+			s.engageOne(i, who, busy{e, e + md.Time.Watch(), i, a.Step.Face})
 		}
 	}
 }
@@ -364,7 +406,33 @@ func (s *state) engage(i int, crew []int, watch []bool, from, to int) {
 		if watch[k] && s.p.Acts[i].Step != nil {
 			b.watch = s.p.Acts[i].Step.Face
 		}
-		s.insert(p, b)
+		s.engageOne(i, p, b)
+	}
+}
+
+// engageOne puts one stretch of work or watch on a person, and a watcher into the workface's
+// room unless they stand there already.
+func (s *state) engageOne(i, p int, b busy) {
+	if room := s.p.Acts[i].WatchRoom; room > 0 && b.watch != nil {
+		s.fresh(p, b, func(from, to int) { s.change(room-1, from, to, 1) })
+	}
+	s.insert(p, b)
+}
+
+// fresh calls emit for the parts of a watch in which its person keeps no other in the workface.
+func (s *state) fresh(p int, b busy, emit func(from, to int)) {
+	at := b.from
+	for _, o := range s.people[p] { // sorted by from
+		if o.watch != b.watch || o.to <= at || o.from >= b.to {
+			continue
+		}
+		if o.from > at {
+			emit(at, o.from)
+		}
+		at = max(at, o.to)
+	}
+	if at < b.to {
+		emit(at, b.to)
 	}
 }
 
@@ -435,20 +503,27 @@ func (s *state) take(i int) {
 	people := append(append([]int(nil), md.Crew...), md.Relief...)
 	for _, w := range s.watches[i] {
 		people = append(people, w.act)
-		if a.WatchRoom > 0 {
-			s.change(a.WatchRoom-1, w.from, w.to, -1)
-		}
 	}
 	for _, p := range people {
-		keep := s.people[p][:0]
-		for _, b := range s.people[p] {
-			if b.act != i {
-				keep = append(keep, b)
-			}
-		}
-		s.people[p] = keep
+		s.release(i, p)
 	}
 	s.placed[i] = false
+}
+
+// release takes everything that activity i has put on a person off again.
+func (s *state) release(i, p int) {
+	room := s.p.Acts[i].WatchRoom
+	for k := 0; k < len(s.people[p]); {
+		b := s.people[p][k]
+		if b.act != i {
+			k++
+			continue
+		}
+		s.people[p] = slices.Delete(s.people[p], k, k+1)
+		if room > 0 && b.watch != nil {
+			s.fresh(p, b, func(from, to int) { s.change(room-1, from, to, -1) })
+		}
+	}
 }
 
 // skipper leaves one thing out of what stands in the way, to see whether it sets a date. The

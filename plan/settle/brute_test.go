@@ -1,0 +1,114 @@
+package settle
+
+import (
+	"context"
+	"testing"
+
+	"sailby/plan"
+	"sailby/plan/check"
+	"sailby/tasks/expand"
+
+	"pgregory.net/rapid"
+)
+
+// askTicks is the work of the search that tests of small jobs allow: a tenth of the default.
+const askTicks = 25_000
+
+// settled asks the likely basis of a small job.
+func settled(t rapid.TB, s *small) *plan.Answer {
+	job, ok := s.read(t)
+	if !ok {
+		t.Skip("the job has a fault")
+	}
+	rep, err := Ask(context.Background(), job, Options{Only: true, Ticks: askTicks})
+	if err != nil {
+		t.Fatalf("%v\n%s", err, s.yaml())
+	}
+	return rep.Likely
+}
+
+// tally counts what came of a run of small jobs.
+type tally struct{ fits, none, missed, later, proved, best int }
+
+// TestLattice tries out every start on the half hour and all people of small jobs in which every
+// time is a half hour, so that the optimum lies on it: the plan found is the best there is, no
+// bound passes it, and "cannot fit" is never said of a job that can.
+func TestLattice(t *testing.T) {
+	checks(t, 60)
+	var n tally
+	rapid.Check(t, func(rt *rapid.T) {
+		s := drawSmall(rt, 30, 6)
+		a := settled(rt, s)
+		b := newBrute(a.Work, 30)
+		best, p := b.optimum()
+		compare(rt, s, a, p, int(best-a.Work.Span.From), &n)
+		if p == nil && a.Verdict == plan.Fits {
+			rt.Fatalf("a plan was found where trying everything finds none\n%s", s.yaml())
+		}
+		if p != nil && a.Verdict == plan.Fits && a.Finish < best {
+			rt.Fatalf("finishes %d min before the best that trying everything finds\n%s", best-a.Finish, s.yaml())
+		}
+		n.later += later(a, p, int(best-a.Work.Span.From), 15)
+	})
+	t.Logf("%+v", n)
+	if n.missed > 0 || n.later > 0 {
+		t.Errorf("of %d jobs that fit %d were not settled, and %d have an earlier finish than was found", n.fits, n.missed, n.later)
+	}
+}
+
+// later says, as 1 or 0, whether trying everything finds an earlier finish by at least so many minutes.
+func later(a *plan.Answer, p *plan.Plan, best, by int) int {
+	if p != nil && a.Verdict == plan.Fits && int(a.Finish-a.Work.Span.From) >= best+by {
+		return 1
+	}
+	return 0
+}
+
+// compare holds an answer against the best plan of the lattice.
+func compare(t rapid.TB, s *small, a *plan.Answer, p *plan.Plan, best int, n *tally) {
+	if a.Best {
+		n.best++
+	}
+	if p == nil {
+		n.none++
+		if a.Verdict == plan.CannotFit {
+			n.proved++
+		}
+		return
+	}
+	n.fits++
+	if br := check.Plan(a.Work, p); len(br) > 0 {
+		t.Fatalf("the checker refuses a plan made from its own answers: %v\n%s", br, s.yaml())
+	}
+	if a.Verdict == plan.CannotFit {
+		t.Fatalf("cannot fit: %s\nbut it can: %v\n%s", a.Proof.Summary, show(a.Work, p), s.yaml())
+	}
+	if bound := int(a.Bound - a.Work.Span.From); bound > best {
+		t.Fatalf("bound %d min after what is possible (%s): %v\n%s", bound-best, a.BoundWhy, show(a.Work, p), s.yaml())
+	}
+	if a.Verdict != plan.Fits {
+		n.missed++
+		t.Logf("missed: %v\n%s", show(a.Work, p), s.yaml())
+	}
+}
+
+// show writes a plan for a message.
+func show(w *expand.Work, p *plan.Plan) string {
+	out := ""
+	for _, s := range p.Steps {
+		out += "\n  " + s.Task + " / " + s.Step + ": " + s.Start.In(w.Window.Place.Zone).Format("02 15:04") + " to " + s.Finish.In(w.Window.Place.Zone).Format("02 15:04")
+		for _, n := range s.People {
+			out += " " + n
+		}
+		if len(s.Relief) > 0 {
+			out += " / "
+		}
+		for _, n := range s.Relief {
+			out += " " + n
+		}
+		for _, x := range s.Watches {
+			out += " (watch " + x.Person + ")"
+		}
+	}
+	return out
+}
