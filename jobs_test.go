@@ -118,6 +118,7 @@ func TestDemonstrations(t *testing.T) {
 		{job: "lanehead", changes: "consent", want: plan.CannotFit, low: true},
 		{job: "lanehead", changes: "fast strip", want: plan.CannotFit, low: true},
 		{job: "lanehead", changes: "consent, fast strip", want: plan.Fits},
+		{job: "lanehead", changes: "consent, fast strip, bay by bay", want: plan.CannotFit, low: true},
 		{job: "narrows", want: plan.CannotFit, low: true},
 		{job: "narrows", changes: "second welder, staging", want: plan.Fits},
 		{job: "starter", want: plan.Fits, tasks: 6},
