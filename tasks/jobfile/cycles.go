@@ -137,6 +137,9 @@ func (g circle) path(from, to int, part []int) []arc {
 	return out
 }
 
+// longestCircle is how many links of a circle are printed.
+const longestCircle = 12
+
 // tellCircle prints a circle in the file's words, from the link that stands first in the file.
 func (r *reader) tellCircle(path []arc) {
 	var links []arc
@@ -155,6 +158,9 @@ func (r *reader) tellCircle(path []arc) {
 	for i := range links {
 		a := links[(first+len(links)-i)%len(links)]
 		words = append(words, fmt.Sprintf("%q %s %q", a.task.Name, linkWord(a.link), a.link.Task))
+	}
+	if n := len(words); n > longestCircle {
+		words = append(append(words[:longestCircle/2:longestCircle/2], fmt.Sprintf("(%d more links)", n-longestCircle)), words[n-longestCircle/2:]...)
 	}
 	r.faultAt(links[first].link.Pos, "take one of these links out", "links go round in a circle: %s", strings.Join(words, ", "))
 }

@@ -363,3 +363,5 @@ func TestApplyAndReadChanged(t *testing.T) {
 		t.Errorf("error %v", err)
 	}
 }
+
+func writeFile(name, data string) error { return os.WriteFile(name, []byte(data), 0o644) }
