@@ -146,7 +146,7 @@ func (w *Work) stays(p *tasks.Person) {
 		if !own {
 			add(w.Span.From, t.Leaves, false)
 		}
-		add(w.Window.Opens, closes, true)
+		add(t.Arrives, closes, true) // unloading included: for those who come later it is no leg, but duty (R15)
 		if !w.Carried {
 			add(t.Home, w.Span.To, false)
 		}
