@@ -265,7 +265,7 @@ func (s *small) task(d dice, i int) smallTask {
 	key("at: %s", at)
 	if kind == "standing" {
 		key("standing: %s", d.span("standing", 1, 12))
-		if d.one("keeps", 3) {
+		if f := strings.Join(s.faces[0], "") + strings.Join(s.faces[1], ""); d.one("keeps", 3) && !strings.Contains(f, "water") {
 			key("keeps: {anybody: 1}")
 		}
 	} else {

@@ -19,8 +19,10 @@ type generator struct {
 	rank       []int   // by activity: place in the list
 	order      []int   // activities by rank
 	standing   []bool  // activities that nothing but links holds
-	stuck      int     // the activity that found no place, -1 if none
-	pending    []int   // by activity: unplaced activities that it waits for
+	blocker    []int   // by activity: what was last in its way when it was placed, -1 if nothing
+	inWay      int
+	stuck      int   // the activity that found no place, -1 if none
+	pending    []int // by activity: unplaced activities that it waits for
 	queue      queue
 	trace      func(block) // told of what stands in the way; nil for none
 }
@@ -28,7 +30,7 @@ type generator struct {
 func newGenerator(p *problem.Problem) *generator {
 	n := len(p.Acts)
 	g := &generator{state: newState(p), into: make([][]int, n), from: make([][]int, n), lo: make([]int, n),
-		choice: make([]int, len(p.Orders)), rank: make([]int, n), order: make([]int, n), standing: make([]bool, n), pending: make([]int, n)}
+		choice: make([]int, len(p.Orders)), rank: make([]int, n), order: make([]int, n), standing: make([]bool, n), pending: make([]int, n), blocker: make([]int, n)}
 	for k, l := range p.Links {
 		g.into[l.To] = append(g.into[l.To], k)
 		if l.From >= 0 {
@@ -173,9 +175,10 @@ func (g *generator) urgent(i int) bool {
 	return false
 }
 
-// lower gives the earliest start that links, order rules and earlier attempts leave.
-func (g *generator) lower(i int, skip *linkSkip) int {
-	lo := g.lo[i]
+// lower gives the earliest start and the earliest finish that links, order rules and earlier
+// attempts leave.
+func (g *generator) lower(i int, skip *linkSkip) (lo, fin int) {
+	lo, fin = g.lo[i], -problem.Inf
 	if skip.from(i) {
 		lo = 0
 	}
@@ -186,16 +189,21 @@ func (g *generator) lower(i int, skip *linkSkip) int {
 		}
 		t := l.Earliest(g.end(l.From, l.FromEnd))
 		if l.ToEnd == tasks.Finish {
-			t = g.startFor(i, t, lo)
+			fin = max(fin, t)
+		} else {
+			lo = max(lo, t)
 		}
-		lo = max(lo, t)
 	}
 	for _, k := range g.from[i] { // a maximum from i to something placed already
 		l := &g.p.Links[k]
 		if !g.placed[l.To] || skip.link(k) || l.Max >= expand.NoMax && l.Last == nil {
 			continue
 		}
-		lo = max(lo, g.pulled(l, i, lo))
+		if t := g.pulledEnd(l, lo); l.FromEnd == tasks.Finish {
+			fin = max(fin, t)
+		} else {
+			lo = max(lo, t)
+		}
 	}
 	for o, c := range g.choice {
 		if skip.order(o) {
@@ -207,7 +215,18 @@ func (g *generator) lower(i int, skip *linkSkip) int {
 			}
 		}
 	}
-	return lo
+	return lo, fin
+}
+
+// first gives the first start of i in mode m at or after lo with a finish of at least fin, by its
+// own hours alone.
+func (g *generator) first(i, m, lo, fin int) int {
+	w := g.p.Acts[i].Modes[m].Time
+	s := w.Start(lo)
+	if s < problem.Inf && w.Finish(s) < fin {
+		s = w.Start(firstFinishing(w, fin, s))
+	}
+	return s
 }
 
 // end gives a placed activity's start or finish; activity -1 is the base.
@@ -241,6 +260,16 @@ func (g *generator) startFor(i, f, lo int) int {
 
 // pulled gives the least start of i from which the maximum of l reaches the placed later end.
 func (g *generator) pulled(l *problem.Link, i, lo int) int {
+	t := g.pulledEnd(l, lo)
+	if l.FromEnd == tasks.Finish {
+		return g.startFor(i, t, lo)
+	}
+	return t
+}
+
+// pulledEnd gives the least minute for the earlier end of l from which its maximum reaches the placed
+// later end.
+func (g *generator) pulledEnd(l *problem.Link, lo int) int {
 	end := g.end(l.To, l.ToEnd)
 	a, b := lo, max(lo, end)
 	if l.FromEnd == tasks.Finish {
@@ -254,32 +283,31 @@ func (g *generator) pulled(l *problem.Link, i, lo int) int {
 			a = mid + 1
 		}
 	}
-	if l.FromEnd == tasks.Finish {
-		return g.startFor(i, a, lo)
-	}
 	return a
 }
 
 // place puts activity i at its earliest finish over all modes.
 func (g *generator) place(i int) bool {
-	lo := g.lower(i, nil)
-	m, at := g.best(i, lo, nil)
+	lo, fin := g.lower(i, nil)
+	g.inWay = -1
+	m, at := g.best(i, lo, fin)
 	if m < 0 {
 		return false
 	}
+	g.blocker[i] = g.inWay
 	g.put(i, m, at)
 	return true
 }
 
-// best finds the mode and start with the earliest finish; equal ones go to the people least
-// wanted elsewhere.
-func (g *generator) best(i, lo int, skip *skipper) (mode, at int) {
+// best finds the mode and start with the earliest finish, starts from lo and finishes from fin on; equal
+// ones go to the people least wanted elsewhere.
+func (g *generator) best(i, lo, fin int) (mode, at int) {
 	a := &g.p.Acts[i]
 	mode = -1
 	bestFin, bestWeight := problem.Inf, 0
 	for m := range a.Modes {
 		w := a.Modes[m].Time
-		s := w.Start(lo)
+		s := g.first(i, m, lo, fin)
 		if s >= problem.Inf {
 			continue
 		}
@@ -290,7 +318,7 @@ func (g *generator) best(i, lo int, skip *skipper) (mode, at int) {
 		if f := w.Finish(s); f > bestFin || f == bestFin && weight >= bestWeight {
 			continue
 		}
-		s = g.earliest(i, m, s, bestFin, skip)
+		s = g.earliest(i, m, s, bestFin, nil)
 		if s >= problem.Inf {
 			continue
 		}
@@ -315,6 +343,9 @@ func (g *generator) earliest(i, m, s, limit int, skip *skipper) int {
 		}
 		if g.trace != nil {
 			g.trace(b)
+		}
+		if b.other >= 0 {
+			g.inWay = b.other
 		}
 		s = w.Start(max(b.next, s+1))
 	}

@@ -1,6 +1,7 @@
 package solve
 
 import (
+	"cmp"
 	"math/rand/v2"
 	"slices"
 
@@ -53,14 +54,15 @@ func Find(p *problem.Problem, b network.Bounds, o Options) Result {
 }
 
 type finder struct {
-	g    *generator
-	p    *problem.Problem
-	b    network.Bounds
-	o    Options
-	rng  *rand.Rand
-	best *Schedule
-	list []int // the list that made best
-	cut  bool
+	g     *generator
+	p     *problem.Problem
+	b     network.Bounds
+	o     Options
+	rng   *rand.Rand
+	best  *Schedule
+	list  []int // the list that made best
+	after []int // by activity: the longest chain of work from it on
+	cut   bool
 }
 
 // over says whether the search must end.
@@ -100,19 +102,7 @@ const squeaks = 12
 // order (after "squeaky wheel" optimisation, Joslin and Clements, JAIR 1999).
 func (f *finder) forward(order []int, i int) {
 	first := map[int]bool{}
-	var mark func(i int)
-	mark = func(i int) {
-		if first[i] {
-			return
-		}
-		first[i] = true
-		for _, k := range f.g.into[i] {
-			if l := &f.p.Links[k]; l.From >= 0 && l.Min > expand.NoMin {
-				mark(l.From)
-			}
-		}
-	}
-	mark(i)
+	f.before(i, first)
 	slices.SortStableFunc(order, func(a, b int) int {
 		switch {
 		case first[a] == first[b]:
@@ -140,7 +130,8 @@ func (g *generator) snapshot(sc Score) *Schedule {
 // rules tries the priority rules: least latest start, least latest finish, most work after,
 // least earliest start, file order; for every order rule each of its choices.
 func (f *finder) rules() {
-	after := f.workAfter()
+	f.after = f.workAfter()
+	after := f.after
 	n := len(f.p.Acts)
 	keys := []func(i int) int{
 		func(i int) int { return f.b.LastStart[i] },
@@ -165,7 +156,48 @@ func (f *finder) rules() {
 	}
 	if f.best != nil {
 		copy(f.g.choice, f.best.Choice)
+		for k := 0; k < samples && !f.over(); k++ {
+			f.try(f.biased())
+		}
 	}
+}
+
+// samples is how many biased lists are tried before the walk begins.
+const samples = 40
+
+// biased makes a list from a rule with noise, and with a lean of its own for every kind of task
+// at every workface: all hot work of a face early, say, and its coats late.
+func (f *finder) biased() []int {
+	after := f.after
+	lean := map[string]float64{}
+	span := float64(max(1, f.best.Score.Finish-f.p.Open))
+	noise := span * 0.1 * f.rng.Float64()
+	rule := f.rng.IntN(3)
+	key := make([]float64, len(f.p.Acts))
+	for i := range key {
+		switch rule {
+		case 0:
+			key[i] = float64(f.b.LastStart[i])
+		case 1:
+			key[i] = -float64(after[i])
+		default:
+			key[i] = float64(f.b.Start[i])
+		}
+		key[i] += noise * f.rng.Float64()
+		if s := f.p.Acts[i].Step; s != nil {
+			name := string(s.Task.Kind) + " " + s.Task.Where()
+			if _, ok := lean[name]; !ok {
+				lean[name] = span * (f.rng.Float64() - 0.5)
+			}
+			key[i] += lean[name]
+		}
+	}
+	order := make([]int, len(key))
+	for i := range order {
+		order[i] = i
+	}
+	slices.SortStableFunc(order, func(a, b int) int { return cmp.Compare(key[a], key[b]) })
+	return order
 }
 
 // choices counts the combinations of order choices that are tried by the rules.
@@ -299,8 +331,8 @@ func (g *generator) latest(i int, best *Schedule) int {
 	return best.Start[i]
 }
 
-// climb changes the list at random and keeps what is not worse than lately, until a limit or
-// until a long stretch has brought nothing.
+// climb changes the list and keeps what is better, or not much worse while the walk is warm,
+// until a limit or until a long stretch has brought nothing.
 func (f *finder) climb() {
 	if f.best == nil && !f.scramble() {
 		return
@@ -309,32 +341,35 @@ func (f *finder) climb() {
 	if n < 2 {
 		return
 	}
-	list := append([]int(nil), f.list...)
-	cur := f.best.Score
+	w := &walk{f: f, list: slices.Clone(f.list), choice: slices.Clone(f.best.Choice), weight: slices.Clone(f.g.weight)}
+	copy(f.g.choice, w.choice)
+	if !f.g.run(w.list) {
+		return
+	}
+	w.settle(f.g.score())
 	trial := make([]int, n)
-	choice := slices.Clone(f.best.Choice)
-	weight := slices.Clone(f.g.weight)
 	for step, stale := 0, 0; !f.over(); step++ {
-		copy(trial, list)
-		copy(f.g.choice, choice)
-		f.mutate(trial)
-		for i := range weight {
-			f.g.weight[i] = weight[i]
-			if f.rng.IntN(4) == 0 {
-				f.g.weight[i] = int(float64(weight[i]) * (0.5 + f.rng.Float64()))
-			}
-		}
+		copy(trial, w.list)
+		copy(f.g.choice, w.choice)
+		w.change(trial)
 		before := f.best.Score
 		sc, ok := f.try(trial)
+		warm := w.heat(step)
 		switch {
-		case ok && sc.Compare(cur, false) <= 0:
-			copy(list, trial)
-			copy(choice, f.g.choice)
-			cur = sc
-		case f.rng.IntN(400) == 0: // from the best again
-			copy(list, f.list)
-			copy(choice, f.best.Choice)
-			cur = f.best.Score
+		case ok && f.energy(sc) <= w.energy+warm:
+			copy(w.list, trial)
+			copy(w.choice, f.g.choice)
+			w.settle(sc)
+		case step%walkLength == walkLength-1: // from the best again, or from somewhere else
+			copy(w.list, f.list)
+			copy(w.choice, f.best.Choice)
+			if f.rng.IntN(2) == 0 {
+				copy(w.list, f.biased())
+			}
+			copy(f.g.choice, w.choice)
+			if f.g.run(w.list) {
+				w.settle(f.g.score())
+			}
 		}
 		if stale++; f.best.Score.Compare(before, false) < 0 {
 			stale = 0
@@ -346,6 +381,127 @@ func (f *finder) climb() {
 			return
 		}
 	}
+}
+
+// walkLength is how many changes a walk takes from warm to cold.
+const walkLength = 600
+
+// walk is where the search stands.
+type walk struct {
+	f      *finder
+	list   []int
+	choice []int
+	weight []int
+	energy float64
+	pairs  [][2]int // activities whose order holds the finish back: the first waited for the second
+}
+
+// settle takes the schedule in the generator as the one the walk stands on.
+func (w *walk) settle(sc Score) {
+	w.energy = w.f.energy(sc)
+	w.pairs = w.f.g.critical(w.pairs[:0])
+}
+
+// heat gives how much worse, in energy, a change may be at a step.
+func (w *walk) heat(step int) float64 {
+	left := 1 - float64(step%walkLength)/walkLength
+	return 90 * left * left * w.f.rng.Float64()
+}
+
+// energy is one number for how good a schedule is, in minutes: lateness counts most.
+func (f *finder) energy(sc Score) float64 {
+	return 20*float64(sc.Late) + float64(sc.Tardy)/8 + float64(sc.Finish) + 0.2*float64(sc.Hand) + 5*float64(sc.Stops) + 0.05*float64(sc.Idle)
+}
+
+// change alters a list: half of the time an activity that waited for another on the way to the
+// finish goes ahead of it, else at random. Who is wanted elsewhere is weighed anew now and then.
+func (w *walk) change(list []int) {
+	f := w.f
+	if len(w.pairs) > 0 && f.rng.IntN(2) == 0 {
+		pair := w.pairs[f.rng.IntN(len(w.pairs))]
+		f.ahead(list, pair[0], pair[1])
+	} else {
+		f.mutate(list)
+	}
+	for i := range w.weight {
+		f.g.weight[i] = w.weight[i]
+		if f.rng.IntN(4) == 0 {
+			f.g.weight[i] = int(float64(w.weight[i]) * (0.5 + f.rng.Float64()))
+		}
+	}
+}
+
+// ahead moves activity a, with all that must come before it, to just before b in the list.
+func (f *finder) ahead(list []int, a, b int) {
+	at := slices.Index(list, b)
+	need := map[int]bool{}
+	f.before(a, need)
+	if need[b] {
+		return
+	}
+	out := make([]int, 0, len(list))
+	out = append(out, list[:at]...)
+	for _, i := range list[at:] {
+		if need[i] {
+			out = append(out, i)
+		}
+	}
+	for _, i := range list[at:] {
+		if !need[i] {
+			out = append(out, i)
+		}
+	}
+	copy(list, out)
+}
+
+// before collects activity i and all that links make come before it.
+func (f *finder) before(i int, into map[int]bool) {
+	if into[i] {
+		return
+	}
+	into[i] = true
+	for _, k := range f.g.into[i] {
+		if l := &f.p.Links[k]; l.From >= 0 && l.Min > expand.NoMin {
+			f.before(l.From, into)
+		}
+	}
+}
+
+// critical walks back from the activity that is latest against its deadline, or last of all,
+// over what each waited for, and appends the pairs in which it was another's place in the list.
+func (g *generator) critical(pairs [][2]int) [][2]int {
+	last, worst := -1, -problem.Inf
+	for i := range g.p.Acts {
+		a := &g.p.Acts[i]
+		key := g.finish[i] - g.p.End
+		if late := g.finish[i] - a.By; a.By < problem.Inf && late > 0 {
+			key = late
+		} else if !a.Site {
+			continue
+		}
+		if key > worst {
+			last, worst = i, key
+		}
+	}
+	for steps := 0; last >= 0 && steps < 200; steps++ {
+		i := last
+		last = -1
+		at := -1
+		for _, k := range g.into[i] {
+			if l := &g.p.Links[k]; l.From >= 0 && l.Min > expand.NoMin {
+				if t := g.finish[l.From]; t > at {
+					last, at = l.From, t
+				}
+			}
+		}
+		if b := g.blocker[i]; b >= 0 && b != i && g.placed[b] {
+			pairs = append(pairs, [2]int{i, b})
+			if g.finish[b] > at && g.start[b] < g.start[i] {
+				last = b
+			}
+		}
+	}
+	return pairs
 }
 
 // scramble looks for a first schedule among random lists.

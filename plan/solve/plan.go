@@ -24,8 +24,8 @@ func Compact(p *problem.Problem, s *Schedule) *Schedule {
 			g.lo[i] = p.Acts[i].From
 		}
 		for _, i := range order {
-			lo := g.lower(i, nil)
-			at := g.earliest(i, best.Mode[i], p.Acts[i].Modes[best.Mode[i]].Time.Start(lo), problem.Inf-1, nil)
+			lo, fin := g.lower(i, nil)
+			at := g.earliest(i, best.Mode[i], g.first(i, best.Mode[i], lo, fin), problem.Inf-1, nil)
 			if at > best.Start[i] || g.breaksMax(i, best.Mode[i], at) {
 				at = best.Start[i]
 				if g.fits(i, best.Mode[i], at, nil).kind != free {

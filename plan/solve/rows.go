@@ -299,9 +299,8 @@ func (r *rower) earliest(i int, limits []limit) int {
 		md.Time = problem.Fixed(own.Length())
 		defer func() { md.Time = own }()
 	}
-	lo := max(0, g.lower(i, &links))
-	at := g.earliest(i, m, md.Time.Start(lo), problem.Inf-1, &skip)
-	return at
+	lo, fin := g.lower(i, &links)
+	return g.earliest(i, m, g.first(i, m, max(0, lo), fin), problem.Inf-1, &skip)
 }
 
 // leeway finds by how much the finish of activity i can move later (R20).
@@ -367,14 +366,13 @@ func (r *rower) delayed(rank, i, l int) (moved []int, ok bool) {
 		g.put(j, s.Mode[j], s.Start[j])
 	}
 	for _, j := range r.order[rank:] {
-		lo := s.Start[j]
 		w := r.p.Acts[j].Modes[s.Mode[j]].Time
-		if j == i {
-			lo = max(lo, firstFinishing(w, s.Finish[i]+l, lo))
-		} else {
-			lo = max(lo, g.lower(j, nil))
+		lo, fin := s.Start[j], s.Finish[i]+l
+		if j != i {
+			lo, fin = g.lower(j, nil)
+			lo = max(lo, s.Start[j])
 		}
-		at := g.earliest(j, s.Mode[j], w.Start(lo), problem.Inf-1, nil)
+		at := g.earliest(j, s.Mode[j], g.first(j, s.Mode[j], lo, fin), problem.Inf-1, nil)
 		if at >= problem.Inf || g.breaksMax(j, s.Mode[j], at) {
 			return nil, false
 		}
@@ -388,7 +386,7 @@ func (r *rower) delayed(rank, i, l int) (moved []int, ok bool) {
 		}
 		g.put(j, s.Mode[j], at)
 	}
-	return moved, true
+	return moved, g.whole()
 }
 
 // firstFinishing gives the least start at or after lo with a finish of at least f.

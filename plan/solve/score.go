@@ -9,6 +9,7 @@ import (
 // Score is how good a schedule is, compared field by field (R18, R19): smaller is better.
 type Score struct {
 	Late   int // the worst lateness over all deadlines and the window, minutes
+	Tardy  int // sum of all lateness, to guide the search; it does not count in Compare
 	Finish int // site finish, fire watches included
 	Hand   int // minus the least time in hand over deadlines other than the window
 	Stops  int // stops of hands-on work
@@ -51,6 +52,7 @@ func (s *state) score() Score {
 		}
 		if a.By < problem.Inf {
 			out.Late = max(out.Late, s.finish[i]-a.By)
+			out.Tardy += max(0, s.finish[i]-a.By)
 			if a.Site {
 				out.Late = max(out.Late, end-max(s.p.Close, 0))
 			}
