@@ -17,6 +17,7 @@ type Consumable struct {
 	Mass   float64 // kg to carry of Amount and Spare; 0 for gas, whose bottles count
 	Pieces int     // electrodes, spools or bottles that Amount and Spare fill; 0 where it does not apply
 	Packed string  // what Pieces are: "electrodes", "spools of 15 kg", "bottles of 10 m3"
+	Each   float64 // how much of Unit one of the Pieces holds; 0 where it does not apply
 	Why    origin.Figure
 }
 
@@ -157,15 +158,18 @@ func (n *Consumable) spares() {
 		n.Mass = (n.Amount + n.Spare) * 0.2
 	case n.Packed == "electrodes":
 		one := n.Amount / math.Max(1, float64(n.Pieces))
+		n.Each = one
 		n.Pieces = int(math.Ceil(float64(n.Pieces)*(1+spareShare) - 1e-9))
 		n.Spare = n.Amount * spareShare
 		n.Mass = float64(n.Pieces) * one
 	case n.Packed == "spools of 15 kg":
 		n.Spare = n.Amount * spareShare
+		n.Each = spoolMass
 		n.Pieces = int(math.Ceil(with/spoolMass - 1e-9))
 		n.Mass = with
 	case n.Unit == "L":
 		n.Spare = n.Amount * spareShare
+		n.Each = bottleGas
 		n.Pieces = int(math.Ceil(with/bottleGas - 1e-9))
 	default:
 		n.Spare = n.Amount * spareShare
@@ -191,5 +195,5 @@ func (e *seamWork) propane(c Circumstances) (origin.Figure, bool) {
 	return origin.Worked("propane", kg*heatHeld*rise/kept.Value/burns.Value, "kg", "band mass x 0.49 x (preheat - ambient) / kept in the plate / heat of propane",
 		origin.Worked("band mass", kg, "kg", "2 x 75 x thickness x density x length / 1000000000", e.thicker(),
 			densityFigure(c.Steel.density()), origin.Written("length", e.joint.Length, "mm", e.joint.Origin)),
-		e.heatTo, origin.Written("ambient", c.Ambient, "C", origin.Origin{Source: "circumstances"}), kept, burns), true
+		e.heatTo, c.ambient(), kept, burns), true
 }

@@ -33,6 +33,8 @@ func slackness(thick, density float64) float64 {
 func (e *seamWork) heating(c Circumstances) error {
 	p := e.proc
 	e.power = p.power(e.volts, e.current)
+	e.generator = p.generator(e.data, e.power)
+	e.drops()
 	k := e.heatEfficiency()
 	e.travel = p.travelOf(e.rate, e.runs.area, c.Steel.density())
 	e.heat = heatInput(k, e.volts, e.current, e.travel)
@@ -70,7 +72,7 @@ func (e *seamWork) preheating(c Circumstances) (along origin.Figure, ok bool) {
 		"band mass x 0.49 x (preheat - ambient) / torch / 60",
 		origin.Worked("band mass", bandMass(t, c.Steel.density())*1000, "kg", "2 x 75 x thickness x density / 1000000",
 			e.thicker(), densityFigure(c.Steel.density())),
-		e.heatTo, origin.Written("ambient", c.Ambient, "C", origin.Origin{Source: "circumstances"}),
+		e.heatTo, c.ambient(),
 		origin.House("torch", burner, "kW", "what a preheating torch leaves in the plate"))
 	one := math.Min(1, e.joint.Length/heatedAtOne)
 	first := origin.Written("metres heated first", one, "m", e.joint.Origin)

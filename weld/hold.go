@@ -43,13 +43,20 @@ func HoldBeforeNDT(size, heat, yield float64) (origin.Figure, error) {
 func (e *seamWork) holding(c Circumstances) {
 	std := strings.ToUpper(strings.ReplaceAll(c.Execution, " ", ""))
 	var f origin.Figure
+	asked := 0.0
+	if strings.HasPrefix(std, "EN1090") {
+		f, _ = HoldBeforeNDT(e.section.Size, math.Min(math.Max(e.heat.Value, 0.05), 20), c.Steel.yield())
+		asked = f.Value
+	}
+	if asked > 0 && (c.Hold == None || c.Hold > 0 && c.Hold < asked) {
+		e.warnf("the time before NDT is given as %.3g h, EN 1090-2:2008 Table 23 asks for %.0f h: what is given governs, ask who is to test", math.Max(c.Hold, 0), asked)
+	}
 	switch {
 	case c.Hold == None:
 		return
 	case c.Hold > 0:
 		f = origin.Written("time before NDT", c.Hold, "h", c.Origins["hold"])
 	case strings.HasPrefix(std, "EN1090"):
-		f, _ = HoldBeforeNDT(e.section.Size, math.Min(math.Max(e.heat.Value, 0.05), 20), c.Steel.yield())
 		f.From = []origin.Figure{origin.Written("size", e.section.Size, "mm", e.joint.Origin), e.heat}
 	case strings.HasPrefix(std, "AWSD1.1") && c.Steel.quenched():
 		f = origin.Recalled("time before NDT", 48, "h", "AWS D1.1: quenched and tempered plate, at least 48 h")

@@ -91,7 +91,9 @@ func (e *seamWork) preheat(c Circumstances) {
 		rule = e.preheatB(c, thick)
 	case "en 1011-2 a", "en 1011-2 method a":
 		e.preheatA(c)
-		rule = e.preheatB(c, thick)
+		if c.Steel.CET().Value > 0 {
+			rule = e.preheatB(c, thick)
+		}
 	}
 	switch {
 	case p.Preheat == None:
@@ -111,7 +113,7 @@ func (e *seamWork) preheat(c Circumstances) {
 
 func (e *seamWork) preheatAWS(c Circumstances, thick float64) origin.Figure {
 	cat := "B"
-	if c.Steel.Hydrogen > 15 && e.data.stick {
+	if e.hydrogen(c.Steel).Value > 15 && e.data.stick {
 		cat = "A"
 	}
 	if c.Steel.yield() > 400 {
@@ -129,18 +131,21 @@ func (e *seamWork) preheatAWS(c Circumstances, thick float64) origin.Figure {
 
 func (e *seamWork) preheatB(c Circumstances, thick float64) origin.Figure {
 	cet := c.Steel.CET()
+	if cet.Value == 0 && thick < 10 { // below the method's range: plain thin steel
+		return origin.Figure{}
+	}
 	if cet.Value == 0 {
 		e.warnf("method B of EN 1011-2 wants the CET: give it, or the analysis, with the steel; no preheat is reckoned until then")
 		return origin.Figure{}
 	}
-	f, in := PreheatB(cet.Value, thick, c.Steel.hydrogen(e.data.number).Value, e.heat.Value)
+	f, in := PreheatB(cet.Value, thick, e.hydrogen(c.Steel).Value, e.heat.Value)
 	if !in && thick >= 10 {
 		e.warnf("outside the range of EN 1011-2 method B (CET 0.2 to 0.5, 10 to 90 mm, 1 to 20 ml/100 g, 0.5 to 4 kJ/mm): its %.0f C is no proof", f.Value)
 	}
 	if thick < 10 || f.Value < 20 {
 		return origin.Figure{}
 	}
-	for i, made := range []origin.Figure{cet, e.thicker(), c.Steel.hydrogen(e.data.number), e.heat} {
+	for i, made := range []origin.Figure{cet, e.thicker(), e.hydrogen(c.Steel), e.heat} {
 		if f.From[i].Value == made.Value { // not brought into the method's range
 			f.From[i] = made
 		}
@@ -150,7 +155,7 @@ func (e *seamWork) preheatB(c Circumstances, thick float64) origin.Figure {
 
 // preheatA says what method A's charts are entered with; they are curves in the standard.
 func (e *seamWork) preheatA(c Circumstances) {
-	h := c.Steel.hydrogen(e.data.number).Value
+	h := e.hydrogen(c.Steel).Value
 	e.warnf("EN 1011-2 method A is read from the standard's charts: enter with CE %s, combined thickness %.0f mm, hydrogen scale %s, %.2f kJ/mm, and write the reading as the procedure's preheat; method B stands in where the CET is known",
 		shown(c.Steel.CE().Value), e.joint.CombinedThickness(), hydrogenScale(h), e.heat.Value)
 }

@@ -32,9 +32,12 @@ type Procedure struct {
 	MinHeatInput float64 // kJ/mm
 	MaxHeatInput float64 // kJ/mm
 
-	GasFlow float64 // L/min
+	GasFlow  float64 // L/min
+	Hydrogen float64 // of the weld metal, ml in 100 g; default the steel's, else 5 or 10 by process
 
-	Set Set // the welding set it is made with
+	Set    Set   // the welding set it is made with
+	Cable  Cable // from the set to the arc
+	Supply Cable // from the supply to the set
 
 	Origins map[string]origin.Origin // by field in plain words: "current", "wire", "duty cycle"
 }
@@ -80,7 +83,9 @@ func (p Procedure) check() error {
 		optional("interpass", p.Interpass, 40, 500, "C"),
 		optional("least heat input", p.MinHeatInput, 0.05, 20, "kJ/mm"),
 		optional("most heat input", p.MaxHeatInput, 0.05, 20, "kJ/mm"),
-		optional("gas flow", p.GasFlow, 3, 60, "L/min"))
+		optional("gas flow", p.GasFlow, 3, 60, "L/min"),
+		optional("hydrogen", p.Hydrogen, 0.5, 60, "ml/100 g"),
+		p.Cable.check("welding cable"), p.Supply.check("supply cable"))
 	if err != nil {
 		return err
 	}

@@ -108,25 +108,29 @@ func (p Procedure) power(volts, current origin.Figure) origin.Figure {
 // manuals: 1.35, and never below the set's own).
 const generatorMargin = 1.35
 
+// generator is what a generator for the set must give: the margin over the kVA at the most
+// current that the set gives, and not below what the arc draws.
+func (p Procedure) generator(d process, power origin.Figure) origin.Figure {
+	most := p.Set.or().MaxCurrent
+	draws := power
+	if most > 0 && most > p.Current {
+		u := d.slope[0] + d.slope[1]*most
+		current := p.given("rated current", most, "A")
+		if p.Set.MaxCurrent > 0 {
+			current = p.given("most current", most, "A")
+		}
+		current.Name = "current"
+		volts := origin.Recalled("volts", u, "V", "IEC 60974-1 load voltage "+origin.Trim(d.slope[0])+" + "+origin.Trim(d.slope[1])+" x current")
+		volts.From = []origin.Figure{current}
+		draws = p.power(volts, current)
+		if draws.Value < power.Value {
+			draws = power
+		}
+	}
+	draws.Name = "most power drawn"
+	return origin.Worked("generator", Generator(draws.Value), "kVA", "most power drawn x generator margin", draws,
+		origin.Published("generator margin", generatorMargin, "", "set makers' manuals: 1.35 times the set's largest kVA, never below it"))
+}
+
 // Generator gives the kVA of a generator that starts and carries sets drawing kVA at most: 1.35 times it.
 func Generator(kVA float64) float64 { return generatorMargin * kVA }
-
-// VoltageDrop gives the volts lost there and back in a copper cable of metres length and mm2
-// section at a current: 2 l I rho / A; for three phases the root of three instead of two.
-// rho is 0.01744 ohm mm2/m (20 C).
-//
-// Errors: a *Error for a length, section or current outside what cables are made for.
-func VoltageDrop(metres, section, current float64, threePhase bool) (float64, error) {
-	err := first(
-		within("cable length", metres, 0, 2000, "m"),
-		within("cable section", section, 0.5, 500, "mm2"),
-		within("current", current, 0, 2000, "A"))
-	if err != nil {
-		return 0, err
-	}
-	ways := 2.0
-	if threePhase {
-		ways = math.Sqrt(3)
-	}
-	return ways * metres * current * 0.01744 / section, nil
-}

@@ -17,7 +17,9 @@ type Steel struct {
 	C, Mn, Mo, Cr, Cu, Ni, V float64
 	CEV                      float64 // CE(IIW) from the certificate, where the analysis is not at hand
 	Cet                      float64 // CET from the certificate
-	Hydrogen                 float64 // of the weld metal, ml in 100 g; default by process, 5 or 10
+	Hydrogen                 float64 // of the weld metal, ml in 100 g, where the procedure does not say; default by process, 5 or 10
+
+	Origin origin.Origin // where its figures are written; default analysis or certificate
 }
 
 func (s Steel) check() error {
@@ -83,14 +85,14 @@ func (s Steel) quenched() bool {
 }
 
 func (s Steel) element(name string, v float64) origin.Figure {
-	return origin.Written(name, v, "%", origin.Origin{Source: "analysis"})
+	return origin.Written(name, v, "%", s.from("analysis"))
 }
 
 // CE gives the carbon equivalent CE(IIW) = C + Mn/6 + (Cr+Mo+V)/5 + (Ni+Cu)/15; from the
 // certificate's value where the analysis is not given. Its Value is 0 where neither is.
 func (s Steel) CE() origin.Figure {
 	if s.C == 0 || s.CEV > 0 {
-		return origin.Written("CE(IIW)", s.CEV, "%", origin.Origin{Source: "certificate"})
+		return origin.Written("CE(IIW)", s.CEV, "%", s.from("certificate"))
 	}
 	return origin.Worked("CE(IIW)", s.C+s.Mn/6+(s.Cr+s.Mo+s.V)/5+(s.Ni+s.Cu)/15, "%",
 		"carbon + manganese / 6 + (chromium + molybdenum + vanadium) / 5 + (nickel + copper) / 15",
@@ -102,7 +104,7 @@ func (s Steel) CE() origin.Figure {
 // (from memory of Annex C.3), as CE does.
 func (s Steel) CET() origin.Figure {
 	if s.C == 0 || s.Cet > 0 {
-		return origin.Written("CET", s.Cet, "%", origin.Origin{Source: "certificate"})
+		return origin.Written("CET", s.Cet, "%", s.from("certificate"))
 	}
 	return origin.Worked("CET", s.C+(s.Mn+s.Mo)/10+(s.Cr+s.Cu)/20+s.Ni/40, "%",
 		"carbon + (manganese + molybdenum) / 10 + (chromium + copper) / 20 + nickel / 40",
@@ -110,9 +112,21 @@ func (s Steel) CET() origin.Figure {
 		s.element("chromium", s.Cr), s.element("copper", s.Cu), s.element("nickel", s.Ni))
 }
 
-// hydrogen gives the weld metal's diffusible hydrogen.
-func (s Steel) hydrogen(p Process) origin.Figure {
+// from is where the steel's figures come from; what they are, where that is not said.
+func (s Steel) from(what string) origin.Origin {
+	o := s.Origin
+	if o.Line == 0 && o.Source == "" {
+		o.Source = what
+	}
+	return o
+}
+
+// hydrogen gives the weld metal's diffusible hydrogen: the procedure's, the steel's, or usual.
+func (e *seamWork) hydrogen(s Steel) origin.Figure {
+	p := e.data.number
 	switch {
+	case e.proc.Hydrogen > 0:
+		return e.proc.given("hydrogen", e.proc.Hydrogen, "ml/100 g")
 	case s.Hydrogen > 0:
 		return origin.Written("hydrogen", s.Hydrogen, "ml/100 g", origin.Origin{Source: "consumable"})
 	case p == 135 || p == 131 || p == 141 || p == 138:

@@ -34,7 +34,11 @@ func sum(parts []*seamWork, c Circumstances) Estimate {
 	w.SetUp = largest(pick(func(e *seamWork) origin.Figure { return e.setUp }))
 	w.Cooling = largest(pick(func(e *seamWork) origin.Figure { return e.cool }))
 	w.BeforeNDT = largest(pick(func(e *seamWork) origin.Figure { return e.hold }))
+	w.Soak = largest(pick(func(e *seamWork) origin.Figure { return e.soak }))
 	w.Power = largest(pick(func(e *seamWork) origin.Figure { return e.power }))
+	w.Generator = largest(pick(func(e *seamWork) origin.Figure { return e.generator }))
+	w.Drop = largest(pick(func(e *seamWork) origin.Figure { return e.drop }))
+	w.SupplyDrop = largest(pick(func(e *seamWork) origin.Figure { return e.supplyDrop }))
 	w.T85 = smallest(pick(func(e *seamWork) origin.Figure { return e.cooling.Why }))
 	if f := c.Steel.CE(); f.Value > 0 {
 		w.CE = f
@@ -125,11 +129,11 @@ func warnings(parts []*seamWork) []string {
 }
 
 // Steps gives every figure of the estimate that applies, in the order in which they are worked
-// out: metal, runs, arc, hands-on, set-up, safe stop, heat, preheat, cooling, testing, power,
-// consumables.
+// out: metal, runs, arc, hands-on, set-up, safe stop, heat, preheat, cooling, testing, power and
+// cables, consumables.
 func (e Estimate) Steps() []origin.Figure {
 	w := e.Why
-	all := []origin.Figure{w.Metal, w.Passes, w.Arc, e.Hours, w.SetUp, w.SafeStop, w.HeatInput, w.CE, w.CET, w.Preheat, w.T85, w.Cooling, w.BeforeNDT, w.Power}
+	all := []origin.Figure{w.Metal, w.Passes, w.Arc, e.Hours, w.SetUp, w.SafeStop, w.HeatInput, w.CE, w.CET, w.Preheat, w.Soak, w.T85, w.Cooling, w.BeforeNDT, w.Power, w.Generator, w.Drop, w.SupplyDrop}
 	for _, c := range e.Consumables {
 		all = append(all, renamed(c.Why, c.Name))
 	}

@@ -30,7 +30,7 @@ type Circumstances struct {
 	ByParts         bool    // hands-on time from its parts, not from the operating factor
 	Hold            float64 // hours before final NDT, where no standard says; None for none
 	Rates           Rates
-	Origins         map[string]origin.Origin // by field: "hold"
+	Origins         map[string]origin.Origin // by field: "hold", "ambient"
 }
 
 // Estimate is what welding takes. Figures in Why hold the same numbers with their origin.
@@ -59,7 +59,8 @@ type Estimate struct {
 // apply has no name.
 type Figures struct {
 	Metal, Arc, Passes, HeatInput, Preheat, CE, CET, T85 origin.Figure
-	SetUp, SafeStop, Cooling, BeforeNDT, Power           origin.Figure
+	SetUp, SafeStop, Soak, Cooling, BeforeNDT            origin.Figure
+	Power, Generator, Drop, SupplyDrop                   origin.Figure // Generator: kVA that a generator for the set gives; drops in V
 }
 
 // SeamEstimate is one seam's part in an Estimate.
@@ -125,6 +126,14 @@ func (c Circumstances) check() error {
 		c.Steel.check(), c.Rates.check())
 }
 
+func (c Circumstances) ambient() origin.Figure {
+	o := c.Origins["ambient"]
+	if o.Line == 0 && o.Source == "" {
+		o.Source = "circumstances"
+	}
+	return origin.Written("ambient", c.Ambient, "C", o)
+}
+
 // seamWork is one seam on its way to an estimate.
 type seamWork struct {
 	seam    Seam
@@ -141,7 +150,7 @@ type seamWork struct {
 	metal, arc, welding, fitUp, hours              origin.Figure
 	heatTo, soak, setUp, safe, standBy, cool, hold origin.Figure
 	cooling                                        CoolingTime
-	power                                          origin.Figure
+	power, generator, drop, supplyDrop             origin.Figure
 	warn                                           []string
 }
 

@@ -24,7 +24,7 @@ const (
 func (k Kind) String() string {
 	switch k {
 	case Given:
-		return "job file"
+		return "given"
 	case Formula:
 		return "formula"
 	case Table:

@@ -41,6 +41,9 @@ const (
 	Force                  // newton
 	Density                // kilogram a cubic metre
 	LineMass               // kilogram a metre
+	Pace                   // minute a metre
+	Hydrogen               // millilitre in 100 g of weld metal
+	Section                // square millimetre (of a cable)
 )
 
 // Error is what was wrong with a written amount. Problem is one sentence; Hint a way out.

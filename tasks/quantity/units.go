@@ -33,6 +33,9 @@ var units = map[Dim][]unit{
 	Force:       {{"N", 1, 0}, {"kN", 1000, 0}, {"daN", 10, 0}},
 	Density:     {{"kg/m3", 1, 0}, {"g/cm3", 1000, 0}, {"kg/L", 1000, 0}},
 	LineMass:    {{"kg/m", 1, 0}, {"lb/ft", 1.48816394, 0}},
+	Pace:        {{"min/m", 1, 0}, {"min/ft", 1 / 0.3048, 0}, {"s/m", 1.0 / 60, 0}},
+	Hydrogen:    {{"ml/100 g", 1, 0}, {"ml/100g", 1, 0}},
+	Section:     {{"mm2", 1, 0}, {"mm²", 1, 0}},
 }
 
 var dimNames = map[Dim]string{
@@ -42,6 +45,7 @@ var dimNames = map[Dim]string{
 	Deposition: "a deposition rate", Coverage: "an area rate", Spreading: "a spreading rate", Speed: "a speed",
 	Angle: "an angle", Flow: "a gas flow", Pressure: "a pressure", HeatInput: "a heat input", Force: "a force",
 	Density: "a density", LineMass: "a mass per length",
+	Pace: "a time per length", Hydrogen: "a hydrogen content", Section: "a cross-section",
 }
 
 // String names the dimension with its article, as error messages use it: "a length".
