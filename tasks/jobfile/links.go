@@ -151,16 +151,25 @@ func (f *fields) wait(name string) *tasks.Wait {
 	return &w
 }
 
+// maxLinks bounds the links of a job with its blocks written out.
+const maxLinks = 50_000
+
 // resolveLinks puts the names of all tasks into their links and checks their states.
 func (r *reader) resolveLinks() {
 	byName := map[string]*tasks.Task{}
 	for _, d := range r.drafts {
 		byName[d.t.Name] = d.t
 	}
+	count := 0
 	for _, d := range r.drafts {
 		for _, l := range d.links {
 			lead := d.f.lead(l.key)
+			if count > maxLinks {
+				r.faultAt(l.link.Pos, "put a task between: one that comes after `every` round, and that the others come after", "%smore than %d links when blocks are written out", lead, maxLinks)
+				return
+			}
 			for _, name := range r.resolve(l.name, lead, d.block, d.t.Round) {
+				count++
 				if name == d.t.Name {
 					r.faultAt(l.link.Pos, "name another task, or leave it out", "%sit is linked to itself", lead)
 					continue

@@ -56,6 +56,18 @@ func TestAllFaultsAtOnce(t *testing.T) {
 	}
 }
 
+// In braces YAML takes a decimal comma for the end of the value.
+func TestDecimalCommas(t *testing.T) {
+	for value, says := range map[string]string{"hours: 2,5 h": `hours: "2,5 h" has a decimal comma`, "hours: 2,5": "decimal comma", "hours: {low: 1,5 h, high: 2 h}": "decimal comma", "set-up: 0,5 h": "decimal comma",
+		"after: {prime deck: {min: 1,5 h}}": "decimal comma", "standing: 2, 5 h": ""} {
+		_, err := ReadBytes("job.yaml", text(t, "", "kind: weld, at: pier/deck, hours: 3", "at: pier/deck, "+value), nil)
+		if err == nil || !strings.Contains(err.Error(), says) || says != "" && strings.Contains(err.Error(), "is not a key") {
+			t.Errorf("%s: %v, want %q", value, err, says)
+		}
+	}
+	read(t, text(t, "repeat: {b: {count: 2, first times: [1.5,1], tasks: {x: {at: pier, hours: 1}}}}\n"))
+}
+
 func TestFaultsAreCapped(t *testing.T) {
 	var b strings.Builder
 	for i := range 3 * maxFaults {
@@ -205,6 +217,7 @@ func TestManyTasks(t *testing.T) {
 		t.Errorf("%d tasks", len(job.Tasks))
 	}
 	refused(t, append(data, "  more: {at: pier, hours: 1}\n"...), "at most 5000 are taken")
+	refused(t, text(t, "repeat:\n  a: {count: 400, tasks: {x: {at: pier, hours: 1}}}\n  b: {count: 400, tasks: {y: {at: pier, hours: 1, after: every x a}}}\n"), "more than 50000 links")
 	refused(t, text(t, "repeat: {b: {count: 500, tasks: {"+func() string {
 		var s []string
 		for i := range 10 {

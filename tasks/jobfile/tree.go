@@ -29,12 +29,31 @@ func (r *reader) tidy(file string, n *yaml.Node, depth int) bool {
 	}
 	ok := true
 	if n.Kind == yaml.MappingNode {
+		joinCommas(n)
 		ok = r.distinct(n)
 	}
 	for _, c := range n.Content {
 		ok = r.tidy(file, c, depth+1) && ok
 	}
 	return ok
+}
+
+// joinCommas puts numbers together again that YAML took apart at a decimal comma: in braces
+// `{length: 2,4 m}` is the key length and a key "4 m" without a value. So the person is told of the
+// comma, and not of a key that they never wrote.
+func joinCommas(n *yaml.Node) {
+	digit := func(c byte) bool { return c >= '0' && c <= '9' }
+	for i := 2; i+1 < len(n.Content); {
+		v, k := n.Content[i-1], n.Content[i]
+		if v.Kind == yaml.ScalarNode && v.Style == 0 && v.Value != "" && digit(v.Value[len(v.Value)-1]) && k.Kind == yaml.ScalarNode && k.Value != "" && digit(k.Value[0]) &&
+			n.Content[i+1].Tag == "!!null" && n.Content[i+1].Value == "" && k.Line == v.Line && k.Column == v.Column+len(v.Value)+1 {
+			v.Value += "," + k.Value
+			v.Tag = "!!str"
+			n.Content = append(n.Content[:i:i], n.Content[i+2:]...)
+			continue
+		}
+		i += 2
+	}
 }
 
 // visible refuses hidden signs that an escape put into a text.
