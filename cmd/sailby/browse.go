@@ -11,7 +11,6 @@ import (
 	"github.com/spf13/cobra"
 
 	"sailby/plan"
-	"sailby/plan/settle"
 	"sailby/report/screen"
 	"sailby/tasks"
 	"sailby/tasks/jobfile"
@@ -86,5 +85,5 @@ func (p *planner) ReplanTelling(ctx context.Context, sets []tasks.Setting, tell 
 	}
 	ctx, cancel := context.WithTimeout(ctx, p.limit)
 	defer cancel()
-	return settle.Ask(ctx, job, p.options(true, tell))
+	return p.settle(ctx, job, p.options(true, tell))
 }

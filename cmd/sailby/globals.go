@@ -126,14 +126,24 @@ func (g *globals) knownTrip(job *tasks.Job) error {
 	return misuse(fmt.Sprintf("one of %q", names), "the job has no trip %q", g.trip)
 }
 
-// options are those of the search; only leaves out every maybe and the high end. A limit longer
-// than the default lets it search so many times longer.
+// longTicks are the starts tried in each default limit of a longer one, where the search has
+// rested without a verdict: more than it tries by itself for any job.
+const longTicks = 5e6
+
+// options are those of the search; only leaves out every maybe and the high end.
 func (g *globals) options(only bool, show func(string)) settle.Options {
-	o := settle.Options{Trip: g.trip, Seed: g.seed, Only: only, Progress: show}
-	if g.limit > defaultLimit {
-		o.Ticks = int64(float64(settle.DefaultTicks) * min(g.limit.Seconds()/defaultLimit.Seconds(), 1e6))
+	return settle.Options{Trip: g.trip, Seed: g.seed, Only: only, Progress: show}
+}
+
+// settle asks; where no verdict comes out and the limit is longer than the default, it asks again
+// for a search that goes on for that much longer.
+func (g *globals) settle(ctx context.Context, job *tasks.Job, o settle.Options) (*plan.Report, error) {
+	r, err := settle.Ask(ctx, job, o)
+	if err != nil || r == nil || r.Likely == nil || r.Likely.Verdict != plan.Unsettled || g.limit <= defaultLimit || ctx.Err() != nil {
+		return r, err
 	}
-	return o
+	o.Ticks = int64(longTicks * min(g.limit.Seconds()/defaultLimit.Seconds(), 1e6))
+	return settle.Ask(ctx, job, o)
 }
 
 // ask settles the job, with progress shown, and says so where the search was cut.
@@ -141,7 +151,7 @@ func (g *globals) ask(ctx context.Context, st streams, job *tasks.Job) (*plan.Re
 	show, done := st.progress()
 	limited, cancel := context.WithTimeout(ctx, g.limit)
 	defer cancel()
-	r, err := settle.Ask(limited, job, g.options(false, show))
+	r, err := g.settle(limited, job, g.options(false, show))
 	done()
 	switch {
 	case err != nil && ctx.Err() != nil:

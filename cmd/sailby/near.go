@@ -8,7 +8,7 @@ func nearest(word string, options []string) string {
 	word = strings.ToLower(word)
 	best, least := "", max(1, len(word)/3)+1
 	for _, o := range options {
-		if d := edits(word, o); d < least {
+		if d := edits(word, strings.ToLower(o)); d < least {
 			best, least = o, d
 		}
 	}

@@ -98,9 +98,9 @@ func takes(more bool, names ...string) cobra.PositionalArgs {
 	return func(c *cobra.Command, args []string) error {
 		switch {
 		case len(args) < len(names):
-			return misuse(c.UseLine(), "%s: %s is missing", c.CommandPath(), names[len(args)])
+			return misuse("sailby "+c.Use, "%s: %s is missing", c.CommandPath(), names[len(args)])
 		case len(args) > len(names) && !more:
-			return misuse(c.UseLine(), "%s: %q is one word too many", c.CommandPath(), args[len(names)])
+			return misuse("sailby "+c.Use, "%s: %q is one word too many", c.CommandPath(), args[len(names)])
 		}
 		return nil
 	}
