@@ -34,8 +34,6 @@ type hands struct {
 	hint             string
 }
 
-func (h hands) likely() float64 { return h.minutes.Likely }
-
 // spread gives a computed number of minutes its range.
 func spread(likely float64) quantity.Range {
 	return quantity.Range{Low: likely * lowShare, Likely: likely, High: likely * highShare}

@@ -217,8 +217,21 @@ func (x *expander) maybes() {
 
 // roughly gives the hands-on minutes that a task takes, to find the longest of a group.
 func (x *expander) roughly(t *tasks.Task) float64 {
-	e := x.estimate(t)
-	return e.likely() + x.pick(t.Standing)
+	sum := x.pick(t.Standing)
+	hands := []hands{}
+	if t.Kind == tasks.Coat && !t.Hours.Pos.Given() && !t.ManHours.Pos.Given() {
+		for k, name := range t.Coats {
+			if p := x.paint(name); p != nil {
+				hands = append(hands, x.coatHours(t, p, k))
+			}
+		}
+	} else {
+		hands = append(hands, x.estimate(t))
+	}
+	for _, h := range hands {
+		sum += x.pick(tasks.Range{Range: h.minutes})
+	}
+	return sum
 }
 
 // pick takes the basis's value out of a range, in minutes.

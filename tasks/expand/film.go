@@ -22,9 +22,10 @@ func (x *expander) coatSteps(t *tasks.Task) {
 			return
 		}
 		h := x.coatHours(t, p, k)
-		if n := len(t.Coats); n > 1 && t.Hours.Pos.Given() || t.ManHours.Pos.Given() {
+		if n := len(t.Coats); n > 1 && (t.Hours.Pos.Given() || t.ManHours.Pos.Given()) {
 			h.minutes = h.minutes.Scale(1 / float64(n)) // the hours given are for all coats
 			h.est.Figure = origin.Worked("hands-on time", h.minutes.Likely, "min", "hours given over the coats", h.est.Figure)
+			h.est.Range = [3]int{whole(h.minutes.Low), whole(h.minutes.Likely), whole(h.minutes.High)}
 		}
 		s := x.handsStep(t, fmt.Sprintf("coat %d", k+1), h)
 		x.filmStates(t, s, p)

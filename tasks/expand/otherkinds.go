@@ -10,6 +10,7 @@ import (
 	"sailby/tasks/coat"
 	"sailby/tasks/lift"
 	"sailby/tasks/origin"
+	"sailby/tasks/quantity"
 	"sailby/weld"
 )
 
@@ -66,26 +67,28 @@ func (x *expander) massOf(name string) (lift.Total, error) {
 // prep estimates surface preparation.
 func (x *expander) prep(t *tasks.Task) hands {
 	h := hands{people: 1, noisy: true, grit: true}
-	area, err := x.area(t)
-	if err != nil {
-		h.fault, h.hint = err, "name its surface (an assembly), or give area: 4 m2 or hours"
-		return h
+	area, unknown := x.area(t)
+	if unknown != nil {
+		area.Value = 1 // the nature of the work does not hang on its size
 	}
 	grade := t.Grade
 	if grade == "" {
-		grade = "St 3"
+		grade = usualGrade(t.Method)
 	}
-	p, err := coat.Prepare(coat.Prep{Area: area.Value, Grade: grade, Method: t.Method, Site: x.atSite(t)})
+	p, err := coat.Prepare(coat.Prep{Area: area.Value, Grade: grade, Method: t.Method, State: t.Condition, Surface: t.Shape, Site: x.atSite(t)})
 	if err != nil {
 		h.fault, h.hint = err, "write for instance grade: St 3, method: power tool"
 		return h
 	}
-	people := float64(max(1, t.People, x.crewSize(t)))
-	h.people = int(people)
-	h.minutes = p.Range.Scale(1 / people)
+	h.people = max(p.People, t.People, x.crewSize(t))
 	h.noisy, h.grit = p.Noise, p.Dust
 	h.least = leastPiece
-	h.est.Figure, h.est.Notes = p.Hours, p.Warnings
+	if unknown != nil {
+		h.fault, h.hint = unknown, "name its surface (an assembly), or give area: 4 m2 or hours"
+		return h
+	}
+	h.share(p.Range, p.Hours, h.people/p.People, t) // blasting takes two at a nozzle
+	h.est.Notes = p.Warnings
 	h.est.Facts = append(h.est.Facts, area)
 	if p.Abrasive > 0 {
 		h.est.Facts = append(h.est.Facts, p.Kilos)
@@ -95,6 +98,29 @@ func (x *expander) prep(t *tasks.Task) hands {
 		h.est.Facts = append(h.est.Facts, p.Wait)
 	}
 	return h
+}
+
+// usualGrade is the grade of a method where the job file gives none.
+func usualGrade(method string) string {
+	switch method {
+	case "blast":
+		return "Sa 2 1/2"
+	case "solvent wipe":
+		return "solvent clean"
+	case "wash":
+		return "fresh-water wash"
+	}
+	return "St 3"
+}
+
+// share divides the minutes of one person, or of one pair, between several.
+func (h *hands) share(one quantity.Range, figure origin.Figure, between int, t *tasks.Task) {
+	n := float64(max(1, between))
+	h.minutes, h.est.Figure = one.Scale(1/n), figure
+	if n > 1 {
+		h.est.Figure = origin.Worked("hands-on time", figure.Value/n, "min", "time of one, shared", figure,
+			origin.Written("shared by", n, "", t.Pos.Origin("people")))
+	}
 }
 
 // lift estimates a lift or a move: rig, lift, land.
@@ -146,7 +172,7 @@ func (x *expander) lift(t *tasks.Task) hands {
 	people := max(2, t.People, x.crewSize(t))
 	m := lift.Move{Mass: mass.Value, Height: height, Travel: t.Travel.Value, By: way, People: people, First: t.Round <= 1, Site: x.atSite(t)}
 	if kit != nil && kit.Speed.Value > 0 {
-		m.Speed = kit.Speed.Value
+		m.Speed = kit.Speed.Value * 1000 // m to mm
 	}
 	e, err := lift.Times(m)
 	if err != nil {
@@ -264,8 +290,7 @@ func (x *expander) test(t *tasks.Task) hands {
 // coatHours estimates coat number k of a coat task.
 func (x *expander) coatHours(t *tasks.Task, p *tasks.Paint, k int) hands {
 	h := hands{people: 1}
-	people := float64(max(1, t.People, x.crewSize(t)))
-	h.people = int(people)
+	h.people = max(1, t.People, x.crewSize(t))
 	area, err := x.area(t)
 	if err != nil {
 		h.fault, h.hint = err, "name its surface (an assembly), or give area: 4 m2 or hours"
@@ -276,15 +301,15 @@ func (x *expander) coatHours(t *tasks.Task, p *tasks.Paint, k int) hands {
 	if method == "" {
 		method = coat.Brush
 	}
-	a, err := coat.Apply(coat.Job{Paint: p.Paint, Area: area.Value, Method: method, Surface: coat.Sections,
+	a, err := coat.Apply(coat.Job{Paint: p.Paint, Area: area.Value, Method: method, Surface: t.Shape,
 		Celsius: x.steel(t.Place), Site: x.atSite(t)})
 	if err != nil {
 		h.fault, h.hint = err, "give hours, or complete the paint"
 		x.overrule(t, &h)
 		return h
 	}
-	h.minutes = a.Range.Scale(1 / people)
-	h.est.Figure, h.est.Notes = a.Hours, a.Warnings
+	h.share(a.Range, a.Hours, h.people, t)
+	h.est.Notes = a.Warnings
 	h.est.Facts = append(h.est.Facts, area, a.Volume)
 	h.est.Consumables = append(h.est.Consumables, Consumable{What: "paint " + p.Name, Amount: a.Litres, Unit: "L", Spare: a.Litres * 0.1})
 	if a.Thinner+a.Cleaner > 0 {

@@ -21,7 +21,7 @@ var kindRules = map[tasks.Kind]kindRule{
 func (x *expander) task(t *tasks.Task) {
 	if x.absent[t] {
 		s := x.step(t, string(t.Kind))
-		s.Absent = true
+		s.Absent, s.NotBefore, s.Deadline = true, hours.Never, hours.Far
 		return
 	}
 	switch {
@@ -118,11 +118,7 @@ func (x *expander) nature(t *tasks.Task, s *Step, h hands) {
 	if t.Noisy != nil {
 		s.Noisy = *t.Noisy
 	}
-	f := t.Face
-	s.Lone = s.Hot || t.Kind == tasks.Lift || f != nil && (f.Closed || f.Water || f.Tidal || f.Level.Pos.Given())
-	if t.Lone != nil && !*t.Lone {
-		s.Lone = false
-	}
+	s.Lone = mayNotBeAlone(t, s.Hot)
 	if t.Kind == tasks.Lift || t.Kind == tasks.Move {
 		s.Moves = asm(t.Lifts)
 	}
@@ -131,6 +127,15 @@ func (x *expander) nature(t *tasks.Task, s *Step, h hands) {
 			s.Works = append(s.Works, asm(p))
 		}
 	}
+}
+
+// mayNotBeAlone says whether R14 lists the work, and its author has not said that it may be done alone.
+func mayNotBeAlone(t *tasks.Task, hot bool) bool {
+	if t.Lone != nil && !*t.Lone {
+		return false
+	}
+	f := t.Face
+	return hot || t.Kind == tasks.Lift || f != nil && (f.Closed || f.Water || f.Tidal)
 }
 
 // permits lists the permits that the step wants (R23).
@@ -157,7 +162,7 @@ func permitFor(what string, t *tasks.Task, s *Step) bool {
 	case "over water":
 		return f != nil && f.Water
 	case "between tides":
-		return f != nil && (f.Tidal || f.Level.Pos.Given())
+		return f != nil && f.Tidal
 	}
 	for _, st := range s.States {
 		if st.Name == what {
@@ -241,8 +246,13 @@ func uses(list []tasks.Use, k *tasks.Kit) bool {
 
 // statesOf sets the states of the step's kind (R12).
 func (x *expander) statesOf(t *tasks.Task, s *Step, h hands) {
+	var watched func(hours.Minute) hours.Minute
+	if s.Watch > 0 { // until the fire watch ends a spark may glow, and whoever keeps it is there (R13)
+		watch := hours.Minute(s.Watch)
+		watched = func(finish hours.Minute) hours.Minute { return finish + watch }
+	}
 	if s.Hot {
-		s.States = append(s.States, State{Name: tasks.HotWorkState})
+		s.States = append(s.States, State{Name: tasks.HotWorkState, Tail: watched, What: "fire watch"})
 	}
 	if h.grit && t.Kind == tasks.Prep {
 		s.States = append(s.States, State{Name: tasks.Grit})
@@ -250,13 +260,7 @@ func (x *expander) statesOf(t *tasks.Task, s *Step, h hands) {
 	if t.Kind == tasks.Lift {
 		s.States = append(s.States, State{Name: tasks.LoadOverhead})
 	} else {
-		people := State{Name: tasks.PeopleState}
-		if s.Watch > 0 { // whoever keeps the fire watch is still there (R13)
-			watch := hours.Minute(s.Watch)
-			people.Tail = func(finish hours.Minute) hours.Minute { return finish + watch }
-			people.What = "fire watch"
-		}
-		s.States = append(s.States, people)
+		s.States = append(s.States, State{Name: tasks.PeopleState, Tail: watched, What: "fire watch"})
 	}
 	for _, name := range t.States {
 		s.States = append(s.States, State{Name: name})
@@ -278,6 +282,7 @@ func (x *expander) standing(t *tasks.Task, after *Step) *Step {
 		s.Class = Hands
 		s.HandsOn, s.Clock = minutes, 0
 		s.States = append(s.States, State{Name: tasks.PeopleState})
+		s.Lone = mayNotBeAlone(t, false)
 		for _, n := range s.Needs {
 			s.Room += n.Count
 		}
@@ -327,7 +332,7 @@ func (x *expander) afterWeld(t *tasks.Task, main *Step) {
 
 func (x *expander) tested(t *tasks.Task) bool {
 	for _, u := range x.w.Job.Tasks {
-		if u.Kind != tasks.Test {
+		if u.Kind != tasks.Test || x.absent[u] {
 			continue
 		}
 		for _, l := range u.Links {

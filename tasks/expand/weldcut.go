@@ -27,7 +27,7 @@ func (x *expander) weld(t *tasks.Task) hands {
 	}
 	e, err := weld.Work(seams, weld.Circumstances{
 		Site: x.atSite(t), Ambient: x.steel(t.Place), Execution: x.w.Job.Execution,
-		Steel: weld.Steel{Grade: x.w.Job.Steel}, FittedUp: x.fittedUp(t),
+		Steel: weld.Steel{Grade: x.grade(t)}, FittedUp: x.fittedUp(t),
 	})
 	if err != nil {
 		return h.failed(err)
@@ -53,6 +53,18 @@ func (x *expander) weld(t *tasks.Task) hands {
 	}
 	x.welded[t] = e
 	return h
+}
+
+// grade gives the steel that a weld joins: that of the first assembly named, else the job's.
+func (x *expander) grade(t *tasks.Task) string {
+	for _, name := range t.Parts {
+		for _, a := range x.w.Job.Assemblies {
+			if a.Name == asm(name) && a.Steel != "" {
+				return a.Steel
+			}
+		}
+	}
+	return x.w.Job.Steel
 }
 
 // fittedUp says whether a fit-up task comes before t, so that fitting is not counted twice.
