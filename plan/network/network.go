@@ -194,7 +194,7 @@ func (n *network) firstFinishing(i, f int) int {
 				hi = mid
 			}
 		}
-		best = min(best, lo)
+		best = min(best, w.Start(lo))
 	}
 	return best
 }

@@ -253,7 +253,7 @@ func (g *generator) startFor(i, f, lo int) int {
 				b = mid
 			}
 		}
-		best = min(best, a)
+		best = min(best, w.Start(a))
 	}
 	return best
 }
