@@ -65,7 +65,8 @@ type Job struct {
 	Duty      Amount // longest duty, minutes; default 12 h
 	Rest      Amount // least rest between duties, minutes; default 11 h
 	Execution string // "EN 1090-2", "AWS D1.1" or "": the standard the contract is to
-	Steel     string // default grade
+	Steel     string // default: a grade, or a name under Welding.Steels
+	Welding   Welding
 	Emergency Emergency
 	Changes   []Change // named sets of changes that the file keeps beside the plan
 	Notes     []Note   // what the reader wants said: repeated hours, defaults taken
@@ -254,6 +255,7 @@ type Kit struct {
 	Kind    lift.Way // what it is for a lift; zero where it is none
 	HasKind bool
 	Mass    Amount             // kg, for packing
+	Set     weld.Procedure     // of a welding set: its rating plate and cables, with their origins
 	Hangs   map[string]float64 // what it hangs from and its rating, kg
 }
 
@@ -264,7 +266,8 @@ type ChartPoint struct{ Radius, Mass float64 } // m, kg
 type Procedure struct {
 	weld.Procedure
 	Pos Pos
-	Kit string // the set it runs on, for kVA and count; ""
+	Kit string        // the set it runs on, for kVA and count; ""
+	By  []PersonRates // people who weld it at rates of their own
 }
 
 // Paint is a paint of the job file.

@@ -73,9 +73,21 @@ type Task struct {
 
 	// By kind.
 	Seams     []Seam   // weld
+	Repairs   *Task    // weld: of this one, what testing may find
+	Steel     string   // weld: a grade, or a name under Welding.Steels; "" is that of its part, else of the job
+	Hold      Amount   // weld: hours before final NDT; Pos.Given overrules the job's, weld.None for none
+	Overweld  *bool    // weld: nil is as for the job
+	Advise    bool     // weld: an order of its seams that keeps shrinkage in balance is worked out
 	By        string   // cut: plasma, oxy-fuel, ...; lift: a kit or "hands"; test: method
 	Length    Amount   // mm: cut
 	Thickness Amount   // mm: cut
+	Bevel     Amount   // deg off square: cut
+	Pierces   int      // starts inside the plate: cut
+	Current   Amount   // A of a plasma set: cut
+	Speed     Amount   // mm/min of the torch or disc: cut
+	Count     int      // holes or tacks: cut
+	Dwell     Amount   // minutes, as the test's procedure says: test
+	Pressure  Amount   // bar: test
 	Surface   []string // surface prep, coat: assemblies or assembly/part
 	Area      Amount   // m2: overrules the surface
 	Grade     string   // surface prep, coat
@@ -105,6 +117,8 @@ type Seam struct {
 	weld.Seam
 	Procedure string
 	Name      string // joint number on the weld list
+	At        [3]float64
+	HasAt     bool // At is its middle, mm in the assembly's axes
 	Pos       Pos
 }
 

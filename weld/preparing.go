@@ -32,6 +32,16 @@ var activities = []Activity{
 // Activities lists the preparing jobs with their rates.
 func Activities() []Activity { return append([]Activity(nil), activities...) }
 
+// IsActivity says whether the word is a preparing job.
+func IsActivity(word string) bool {
+	for _, a := range activities {
+		if a.Name == plainName(word) {
+			return true
+		}
+	}
+	return false
+}
+
 // Prepare gives the hands-on time of an amount (metres, kilograms or pieces, as the activity's
 // unit says) of an activity at a thickness in mm (0: does not matter). rate overrides the house's
 // where it is above zero.

@@ -13,7 +13,7 @@ import (
 )
 
 var assemblySection = section{name: "Assembly", where: "assemblies / NAME", host: "assemblies/frame", says: "What is built, fitted or moved; tasks name it, or a part of it as `frame/base`.", keys: []key{
-	{name: "steel", takes: aText, usual: "the job's steel", example: "S355", says: "grade of its parts"},
+	{name: "steel", takes: aText, usual: "the job's steel", example: "S355", says: "grade of its parts, or a name under `steels`"},
 	{name: "axes", takes: aText, example: "origin at the hinge pin, x along the ramp, z up", says: "what the positions of its parts are measured from"},
 	{name: "parts", takes: namedOf, sub: &partSection, example: "{base: {plate: [2400 mm, 800 mm, 12 mm]}}", says: "its parts"},
 	{name: "mass", takes: anAmount, dim: quantity.Mass, low: 0.1, high: 1e6, usual: "that of its parts", example: "410 kg", says: "stated mass, overrules that of its parts"},

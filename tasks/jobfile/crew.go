@@ -45,7 +45,7 @@ func mayBe(p *tasks.Person, at *tasks.Place) bool {
 
 // judgeWelders reports seams that nobody's ticket covers.
 func (r *reader) judgeWelders(d *draft) {
-	for i, s := range d.t.Seams {
+	for i, s := range d.t.Welds() {
 		need := tasks.Ticket{Name: tasks.WeldTicket, ThickFrom: s.Joint.Thickness, ThickTo: s.Joint.Thickness, Joints: []string{"butt"}}
 		flat := weld.PA
 		switch s.Joint.Type {

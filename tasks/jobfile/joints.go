@@ -50,7 +50,8 @@ var seamSection = section{name: "Seam", where: "tasks / NAME / joints / item", h
 	{name: "procedure", takes: aName, usual: "the usual settings of the place's process", example: "site fillet", says: "how it is made"},
 	{name: "name", takes: aText, example: "W1", says: "joint number on the weld list"},
 	{name: "turns", takes: aCount, low: 0, high: 100, usual: "0", example: "1", says: "how often the part is turned over while it is welded"},
-	{name: "access", takes: aNumber, low: 1, high: 5, usual: "1", example: "1.3", says: "hands-on time times this where access is bad"},
+	{name: "access", takes: aNumber, low: 1, high: 5, usual: "1", example: "1.3", says: "hands-on time times this where access is bad: ladder or rope 1.3 to 1.5, closed space 1.3 to 1.6"},
+	{name: "at", takes: itsOwn, form: "[x, y, z]", shape: anyList, example: "[600 mm, 0, 12 mm]", says: "its middle in the axes of the assembly, for `advise order`"},
 }}
 
 func init() { // a key for each type of joint
@@ -138,6 +139,9 @@ func (r *reader) seam(n *yaml.Node, what string) (tasks.Seam, bool) {
 	s.Joint.Origin = s.Pos.Origin("")
 	s.Position = f.weldPosition("position")
 	s.Turns, s.Access = f.count("turns", 0), f.value("access")
+	if f.has("at") {
+		s.At, s.HasAt = f.point(f.node("at"))
+	}
 	if ref, ok := f.name("procedure"); ok {
 		s.Procedure = ref.text
 		if p := r.procedureOf(ref.text); p != nil {

@@ -7,7 +7,16 @@ import (
 	"sailby/tasks"
 	"sailby/tasks/coat"
 	"sailby/tasks/quantity"
+	"sailby/weld"
 )
+
+func activityNames() string {
+	var names []string
+	for _, a := range weld.Activities() {
+		names = append(names, a.Name)
+	}
+	return strings.Join(names, ", ")
+}
 
 var stateNames = []string{tasks.HotWorkState, tasks.Grit, tasks.WetFilm, tasks.SoftFilm, tasks.Solvent, tasks.LoadOverhead, tasks.PeopleState}
 
@@ -33,10 +42,21 @@ var (
 	weldKeys = section{name: "Weld", where: "tasks / NAME of kind weld", host: "tasks/weld lugs", says: "a weld", more: &taskSection, keys: []key{
 		{name: "joints", takes: listOf, sub: &seamSection, example: "[{fillet: {leg: 6 mm}, length: 9.6 m in all, position: PB}]", says: "the seams"},
 		with(partKey, "[frame/base, frame/posts]", "assembly or parts it joins"),
+		{name: "steel", takes: aText, usual: "that of its assembly, else the job's", example: "S355", says: "grade, or a name under `steels`"},
+		holdKey,
+		{name: "overweld", takes: yesNo, usual: "as for the job", example: "no", says: "more is laid than is drawn"},
+		{name: "advise order", takes: yesNo, usual: "no", example: "yes", says: "advise an order of its joints that keeps shrinkage in balance; each joint says `at`"},
+		{name: "repair of", takes: aName, example: "weld frame", without: "joints", says: "a weld task: this one is what testing may find to repair; hours, `chance` and wait are worked out from it"},
 	}}
 	cutKeys = section{name: "Cut", where: "tasks / NAME of kind cut", host: "tasks/cut lugs", says: "a cut", more: &taskSection, keys: []key{
-		with(byKey, "oxy-fuel", "plasma, oxy-fuel, disc, saw, or another way with hours"),
-		with(lengthKey, "1.9 m", "length of cut"),
+		with(byKey, "oxy-fuel", "plasma, oxy-fuel, disc, saw; a preparing job as under `rates` ("+activityNames()+"); or another way with hours"),
+		with(lengthKey, "1.9 m", "length of cut, or of edge prepared"),
+		{name: "count", takes: aCount, low: 1, high: 1e5, example: "12", says: "holes to drill, or tacks"},
+		{name: "mass", takes: anAmount, dim: quantity.Mass, low: 0.01, high: 1e4, example: "4 kg", says: "metal to grind away"},
+		{name: "bevel", takes: anAmount, dim: quantity.Angle, low: 0, high: 70, usual: "0 deg", example: "30 deg", says: "off square: the cut goes through the longer way"},
+		{name: "pierces", takes: aCount, low: 0, high: 1e5, usual: "0", example: "4", says: "starts inside the plate"},
+		{name: "current", takes: anAmount, dim: quantity.Current, low: 15, high: 400, usual: "40 A", example: "65 A", says: "of a plasma set: it cuts so much and no more"},
+		{name: "speed", takes: anAmount, dim: quantity.Travel, low: 5, high: 20000, usual: "by way and thickness", example: "400 mm/min", says: "cutting speed, in place of the table's"},
 		{name: "thickness", takes: anAmount, dim: quantity.Length, low: 0.1, high: 500, example: "16 mm", says: "thickness cut"},
 		partKey,
 	}}
@@ -63,6 +83,8 @@ var (
 	testKeys = section{name: "Test", where: "tasks / NAME of kind test", host: "tasks/MT", says: "a test", more: &taskSection, keys: []key{
 		with(byKey, "magnetic particle", "visual, dye penetrant, magnetic particle, ultrasonic, leak, load, or another method with hours"),
 		with(lengthKey, "1.9 m", "length of seam tested"), partKey,
+		{name: "dwell", takes: anAmount, dim: quantity.Time, low: 1, high: 1440, usual: "by method; penetrant doubled below 10 C", example: "30 min", says: "time that penetrant stands or pressure is held, as a written procedure says; then penetrant is also used below 5 C"},
+		{name: "pressure", takes: anAmount, dim: quantity.Pressure, low: 0.01, high: 100, usual: "air 0.15 bar, at most 0.2; hose at least 2 bar", example: "0.15 bar", says: "of an air or hose test"},
 	}}
 	moveKeys = section{name: "Move", where: "tasks / NAME of kind move", host: "tasks/to the gate", says: "a move", more: &taskSection, keys: []key{
 		liftsKey, massKey, with(byKey, "trolley", "a kit, or hands"),
@@ -116,12 +138,18 @@ func (r *reader) byKind(t *tasks.Task, f *fields) {
 	switch t.Kind {
 	case tasks.Weld:
 		t.Seams = r.seams(f)
-		if !f.tried("joints") && !timed {
+		t.Steel, t.Hold, t.Overweld, t.Advise = f.line("steel"), f.hold(), f.yesOrNot("overweld"), f.yes("advise order")
+		if f.tried("repair of") && f.tried("joints") {
+			f.fault("repair of", "leave the joints out", "the joints are those of the weld that is repaired")
+		}
+		if !f.tried("joints") && !timed && !f.tried("repair of") {
 			f.fault("", "add `joints: [{fillet: {leg: 6 mm}, length: 2 m, position: PB}]`, or `hours`", "it has neither joints nor hours")
 		}
 	case tasks.Cut:
 		t.Thickness = f.amount("thickness", 0)
-		if !timed && !f.tried("part") && !(f.tried("length") && f.tried("thickness")) {
+		t.Bevel, t.Current, t.Speed, t.Mass = f.amount("bevel", 0), f.amount("current", 0), f.amount("speed", 0), f.amount("mass", 0)
+		t.Pierces, t.Count = f.count("pierces", 0), f.count("count", 0)
+		if !timed && !f.tried("part") && !(f.tried("length") && f.tried("thickness")) && !weld.IsActivity(t.By) {
 			f.fault("", "add `length: 1.9 m` and `thickness: 16 mm`, `part: frame/base`, or `hours`", "nothing says how much is cut")
 		}
 	case tasks.Prep:
@@ -130,6 +158,8 @@ func (r *reader) byKind(t *tasks.Task, f *fields) {
 		r.coats(t, f)
 	case tasks.Lift:
 		t.Radius = f.amount("radius", 0)
+	case tasks.Test:
+		t.Dwell, t.Pressure = f.amount("dwell", 0), f.amount("pressure", 0)
 	case tasks.FitUp:
 		t.Joints = f.count("joints", 0)
 	case tasks.Move:

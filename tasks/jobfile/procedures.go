@@ -2,6 +2,7 @@ package jobfile
 
 import (
 	"fmt"
+	"maps"
 	"slices"
 
 	"gopkg.in/yaml.v3"
@@ -33,15 +34,7 @@ var procedureSection = section{name: "Procedure", where: "procedures / NAME", ho
 	{name: "heat input", takes: itsOwn, form: "{min, max}", shape: limitsShape, example: "{min: 0.6 kJ/mm, max: 2 kJ/mm}", says: "limits of the procedure"},
 	{name: "gas flow", takes: anAmount, dim: quantity.Flow, low: 3, high: 60, example: "16 L/min", says: "shielding gas"},
 	{name: "kit", takes: aName, example: "mig set", says: "the set that it runs on"},
-	{name: "set", takes: keysOf, sub: &setSection, example: "{rated: 200 A, duty cycle: 35 %}", says: "rating plate of the set"},
-}}
-
-var setSection = section{name: "Welding set", where: "procedures / NAME / set", host: "procedures/site fillet/set", says: "The rating plate of a welding set (IEC 60974-1).", keys: []key{
-	{name: "rated", takes: anAmount, dim: quantity.Current, low: 10, high: 2000, example: "200 A", says: "current that it holds for its duty cycle"},
-	{name: "duty cycle", takes: anAmount, dim: quantity.Percent, low: 0.05, high: 1, example: "35 %", says: "share of ten minutes at the rated current"},
-	{name: "most", takes: anAmount, dim: quantity.Current, low: 10, high: 2000, usual: "rated", example: "250 A", says: "the most current that it gives"},
-	{name: "efficiency", takes: anAmount, dim: quantity.Percent, low: 0.3, high: 1, usual: "85 %", example: "85 %", says: "power out over power in"},
-	{name: "power factor", takes: aNumber, low: 0.3, high: 1, usual: "0.7", example: "0.7", says: "power factor"},
+	{name: "hydrogen", takes: anAmount, dim: quantity.Hydrogen, low: 0.5, high: 60, usual: "5 or 10 ml/100 g, by process", example: "5 ml/100 g", says: "diffusible hydrogen of the weld metal, for preheat"},
 }}
 
 const maxDeclared = 500 // procedures, paints or assemblies
@@ -74,7 +67,7 @@ func (r *reader) procedure(name string, at *yaml.Node, f *fields) *tasks.Procedu
 		WireFeed: f.value("wire feed"), Deposition: f.value("deposition"), Efficiency: f.value("efficiency"),
 		OperatingFactor: f.value("operating factor"), HeatEfficiency: f.value("heat efficiency"), BeadArea: f.value("bead area") * 1e6,
 		Preheat:   f.orNone("preheat", &key{takes: anAmount, dim: quantity.Temperature, low: 5, high: 400, example: "75 C"}),
-		Interpass: f.value("interpass"), GasFlow: f.value("gas flow"), Origins: map[string]origin.Origin{},
+		Interpass: f.value("interpass"), GasFlow: f.value("gas flow"), Hydrogen: f.value("hydrogen"), Origins: map[string]origin.Origin{},
 	}
 	least, most := f.span("heat input", &key{takes: anAmount, dim: quantity.HeatInput, low: 0.05, high: 20, example: "0.6 kJ/mm"})
 	if least != nil {
@@ -95,19 +88,37 @@ func (r *reader) procedure(name string, at *yaml.Node, f *fields) *tasks.Procedu
 	if f.has("heat input") {
 		p.Origins["least heat input"], p.Origins["most heat input"] = p.Origins["heat input"], p.Origins["heat input"]
 	}
-	if f.has("set") {
-		g := r.open(f.node("set"), &setSection, f.what+": set")
-		p.Set = weld.Set{RatedCurrent: g.value("rated"), DutyCycle: g.value("duty cycle"), MaxCurrent: g.value("most"), Efficiency: g.value("efficiency"), PowerFactor: g.value("power factor")}
-		for name, word := range map[string]string{"rated": "rated current", "duty cycle": "duty cycle", "most": "most current", "efficiency": "set efficiency", "power factor": "power factor"} {
-			if g.has(name) {
-				p.Origins[word] = g.pos(name).Origin("")
-			}
-		}
-		if (p.Set.RatedCurrent > 0) != (p.Set.DutyCycle > 0) {
-			f.fault("set", "the rating plate has both, for instance {rated: 200 A, duty cycle: 35 %}", "rated current and duty cycle go together")
-		}
+	f.setOf(&p.Procedure)
+	if k := r.kitOf[p.Kit]; k != nil {
+		setFrom(&p.Procedure, k.Set)
 	}
+	r.byPerson(p, f)
 	return p
+}
+
+// byPerson reads the rates of single people; people are checked once all are read.
+func (r *reader) byPerson(p *tasks.Procedure, f *fields) {
+	for _, kv := range f.pairs("by person") {
+		name, ok := r.newName(kv[0], "person", true)
+		if !ok {
+			continue
+		}
+		r.personRefs = append(r.personRefs, personRef{ref{name, r.pos(kv[0])}, f.lead("by person")})
+		g := r.open(kv[1], &byPersonSection, f.what+": by person: "+name)
+		own := tasks.PersonRates{Person: name, Procedure: p.Procedure, Pos: r.pos(kv[0])}
+		own.Origins = maps.Clone(p.Origins)
+		for name, to := range map[string]*float64{"operating factor": &own.OperatingFactor, "current": &own.Current, "volts": &own.Volts, "travel": &own.Travel,
+			"wire feed": &own.WireFeed, "deposition": &own.Deposition, "bead area": &own.BeadArea} {
+			if !g.has(name) {
+				continue
+			}
+			if *to = g.value(name); name == "bead area" {
+				*to *= 1e6
+			}
+			own.Origins[name] = g.pos(name).Origin("")
+		}
+		p.By = append(p.By, own)
+	}
 }
 
 func (r *reader) kitNames() []string {

@@ -97,6 +97,8 @@ func (r *reader) read(root *yaml.Node) {
 	}
 	for _, l := range libs {
 		r.readProcedures(l)
+		r.readRates(l)
+		r.readSteels(l)
 		r.readPaints(l)
 		r.readClashes(l)
 	}
@@ -109,6 +111,7 @@ func (r *reader) read(root *yaml.Node) {
 		r.job.Tasks = append(r.job.Tasks, d.t)
 	}
 	r.resolveLinks()
+	r.resolveRepairs()
 	r.readOrders(f)
 	r.readChanges(f)
 	r.readHolidays(f)

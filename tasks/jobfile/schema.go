@@ -13,7 +13,7 @@ import (
 func sections() []*section {
 	out := []*section{&topSection, &placeSection, &faceSection, &permitSection, &tideSection, &climateSection,
 		&tripSection, &outSection, &backSection, &windowSection, &personSection, &ticketSection, &kitSection, &hireSection,
-		&procedureSection, &setSection, &paintSection, &assemblySection, &partSection, &taskSection, &stopSection, &linkSection}
+		&procedureSection, &byPersonSection, &setSection, &cableSection, &ratesSection, &steelSection, &paintSection, &assemblySection, &partSection, &taskSection, &stopSection, &linkSection}
 	out = append(out, kindSections()...)
 	return append(out, &seamSection, &jointSection, &blockSection, &orderSection, &clashSection, &dutySection, &emergencySection, &changeSection)
 }

@@ -44,6 +44,7 @@ const (
 	Pace                   // minute a metre
 	Hydrogen               // millilitre in 100 g of weld metal
 	Section                // square millimetre (of a cable)
+	Stress                 // newton a square millimetre
 )
 
 // Error is what was wrong with a written amount. Problem is one sentence; Hint a way out.

@@ -36,6 +36,7 @@ var units = map[Dim][]unit{
 	Pace:        {{"min/m", 1, 0}, {"min/ft", 1 / 0.3048, 0}, {"s/m", 1.0 / 60, 0}},
 	Hydrogen:    {{"ml/100 g", 1, 0}, {"ml/100g", 1, 0}},
 	Section:     {{"mm2", 1, 0}, {"mm²", 1, 0}},
+	Stress:      {{"N/mm2", 1, 0}, {"N/mm²", 1, 0}, {"MPa", 1, 0}, {"ksi", 6.894757293, 0}},
 }
 
 var dimNames = map[Dim]string{
@@ -45,7 +46,7 @@ var dimNames = map[Dim]string{
 	Deposition: "a deposition rate", Coverage: "an area rate", Spreading: "a spreading rate", Speed: "a speed",
 	Angle: "an angle", Flow: "a gas flow", Pressure: "a pressure", HeatInput: "a heat input", Force: "a force",
 	Density: "a density", LineMass: "a mass per length",
-	Pace: "a time per length", Hydrogen: "a hydrogen content", Section: "a cross-section",
+	Pace: "a time per length", Hydrogen: "a hydrogen content", Section: "a cross-section", Stress: "a strength",
 }
 
 // String names the dimension with its article, as error messages use it: "a length".
