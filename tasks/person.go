@@ -40,3 +40,12 @@ func (t Ticket) String() string {
 	}
 	return strings.Join(words, " ")
 }
+
+// Covers gives the height of tide, in metres on the table's datum, at which the workface is
+// covered: its own, else its level.
+func (f *Workface) Covers() float64 {
+	if f.CoversAt.Pos.Given() {
+		return f.CoversAt.Value
+	}
+	return f.Level.Value
+}

@@ -89,7 +89,7 @@ func (c *checker) layFace(p *tasks.Place, f *tasks.Workface) face {
 	if f.Level.Pos.Given() && p.Tide != nil {
 		out.limited = true
 		for t := c.lo; t < c.hi; t++ { // false where the table does not reach
-			if !p.Tide.Clear(true, f.Level.Value, int64(t)) {
+			if !p.Tide.Clear(true, f.Covers(), int64(t)) {
 				out.reach.on[t-c.lo] = false
 			}
 		}

@@ -8,6 +8,45 @@ import (
 // shut says why a hands-on step cannot be worked by a team in the minute that begins at t, and
 // which rule that is, as who or what is in the way and how; no rule if it can.
 func (c *checker) shut(r *row, team []*person, t hours.Minute) (rule, who, why string) {
+	if rule, who, why = c.barred(r, team, t); rule == "" && r.watch > 0 && !c.mayStop(r, t) {
+		return "R13", "nobody", "could stay the fire watch out after it"
+	}
+	return rule, who, why
+}
+
+// mayStop says whether the hot work of minute t could stop after it, or later in the same
+// opening, with somebody there to stay the fire watch out (R13).
+func (c *checker) mayStop(r *row, t hours.Minute) bool {
+	pause := 0
+	for x := t; pause <= meal && x < c.hi; x++ {
+		if !c.toil(r, x) {
+			if pause++; !r.accessible(x) {
+				return false
+			}
+			continue
+		}
+		pause = 0
+		if c.anyWatch(r, hours.Span{From: x + 1, To: x + 1 + hours.Minute(r.watch)}) {
+			return true
+		}
+	}
+	return false
+}
+
+// toil says whether one of the step's teams could work in minute t, the fire watch apart.
+func (c *checker) toil(r *row, t hours.Minute) bool {
+	if rule, _, _ := c.barred(r, r.team[0], t); rule == "" {
+		return true
+	}
+	if len(r.p.Relief) == 0 {
+		return false
+	}
+	rule, _, _ := c.barred(r, r.team[1], t)
+	return rule == ""
+}
+
+// barred is shut without the fire watch.
+func (c *checker) barred(r *row, team []*person, t hours.Minute) (rule, who, why string) {
 	at := r.s.Place
 	for _, p := range team {
 		if !p.here[at].has(t) {
@@ -29,9 +68,6 @@ func (c *checker) shut(r *row, team []*person, t hours.Minute) (rule, who, why s
 	}
 	if r.alone && !c.company(r, team, t) {
 		return "R14", "nobody else", "is on shift there"
-	}
-	if r.watch > 0 && !c.anyWatch(r, hours.Span{From: t + 1, To: t + 1 + hours.Minute(r.watch)}) {
-		return "R13", "nobody", "could stay the fire watch out after it"
 	}
 	return "", "", ""
 }

@@ -238,7 +238,7 @@ func (m *crewMaker) timing(s *expand.Step, base, access hours.Set, mode *Mode) *
 		spans = spans.Or(m.together(s, mode.Relief, base))
 	}
 	if s.Watch > 0 {
-		spans = m.watched(s, spans, mode.Keepers)
+		spans = m.watched(s, spans, access, mode.Keepers)
 	}
 	joined := spans.Joined(Meal, access)
 	t := Worked(m.shift(spans), m.shift(joined), Rules{Work: s.Working, SetUp: s.SetUp, Least: s.LeastPiece, Safe: s.SafeStop,
@@ -265,16 +265,34 @@ func (m *crewMaker) together(s *expand.Step, crew []int, base hours.Set) hours.S
 	return set
 }
 
-// watched takes off the minutes after which none of the keepers could stay the watch out: on
-// shift to its end, meals apart, with the workface in reach (R13).
-func (m *crewMaker) watched(s *expand.Step, spans hours.Set, keepers []int) hours.Set {
+// watched takes off each opening the minutes after the last one that the work can stop at with
+// somebody to stay the fire watch out: on shift to its end, meals apart, with the workface in
+// reach (R13).
+func (m *crewMaker) watched(s *expand.Step, spans, access hours.Set, keepers []int) hours.Set {
 	var keep []hours.Span
-	for _, p := range keepers {
-		for _, k := range m.canStay(s, p) {
-			keep = append(keep, hours.Span{From: k.From, To: k.To - hours.Minute(s.Watch)})
+	for _, b := range spans.Joined(Meal, access) {
+		last := b.From
+		for _, p := range keepers {
+			for _, k := range m.canStay(s, p) {
+				if x := lastStop(spans, b, min(b.To, k.To-hours.Minute(s.Watch))); x >= k.From {
+					last = max(last, x)
+				}
+			}
 		}
+		keep = append(keep, hours.Span{From: b.From, To: last})
 	}
 	return spans.And(hours.NewSet(keep...))
+}
+
+// lastStop gives the last minute up to limit, in opening b, at which a worked minute of spans ends.
+func lastStop(spans hours.Set, b hours.Span, limit hours.Minute) hours.Minute {
+	last := hours.Never
+	for _, s := range spans.Within(b) {
+		if s.From < limit {
+			last = min(s.To, limit)
+		}
+	}
+	return last
 }
 
 // canStay gives the minutes in which a person can keep a watch at a step's workface: on shift,

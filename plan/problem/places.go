@@ -91,7 +91,7 @@ func (g *ground) tide(f *tasks.Workface) hours.Set {
 	if len(waters) < 2 {
 		return nil
 	}
-	level := f.Level.Value
+	level := f.Covers()
 	var out []hours.Span
 	for k := 1; k < len(waters); k++ { // piece by piece: the table may have holes
 		from, to := max(int64(g.span.From), waters[k-1].At), min(int64(g.span.To), waters[k].At)

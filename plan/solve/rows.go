@@ -306,6 +306,9 @@ func (r *rower) earliest(i int, limits []limit) int {
 // leeway finds by how much the finish of activity i can move later (R20).
 func (r *rower) leeway(rank, i int) {
 	row := &r.rows[i]
+	if r.g.standing[i] {
+		return // standing time goes with the step before it
+	}
 	ok := func(l int) bool { _, fine := r.delayed(rank, i, l); return fine }
 	hi := 15
 	for hi < r.p.End && ok(hi) {

@@ -58,7 +58,7 @@ func Sentence(a *plan.Answer, low bool) string {
 			if p.Summary != "" {
 				s += ": " + strings.TrimSuffix(clean.Line(p.Summary), ".")
 			}
-			if p.Over > 0 {
+			if p.Over > 0 && !strings.Contains(p.Summary, quantity.Hours(p.Over)) {
 				s += fmt.Sprintf(" (%s too much)", quantity.Hours(p.Over))
 			}
 		}

@@ -70,7 +70,7 @@ func (p *page) sideBySide(r *plan.Report) {
 		}
 		return agenda.Moment(a, a.Bound)
 	})
-	line("gap to close", gap)
+	line("earlier at most by", gap)
 }
 
 // gap says how far the plan is from the earliest possible finish.
@@ -167,7 +167,7 @@ func (p *page) proof(a *plan.Answer, low bool) {
 		}
 		p.para("  - ", s)
 	}
-	if pr.Over > 0 {
+	if pr.Over > 0 && !strings.Contains(pr.Summary, quantity.Hours(pr.Over)) {
 		p.para("  ", "Together "+quantity.Hours(pr.Over)+" more than there is.")
 	}
 }

@@ -16,6 +16,9 @@ const (
 	highShare = 1.25
 )
 
+// signOffMinutes is how long a sign-off takes where the job file does not say (house judgement).
+const signOffMinutes = 15
+
 // leastPiece is the least hands-on time, in minutes, for which a weld, cut, prep or fit-up is taken up
 // again after a stop (house judgement).
 const leastPiece = 15
@@ -58,6 +61,9 @@ func (x *expander) estimate(t *tasks.Task) hands {
 		h = x.fitUp(t)
 	case tasks.Test:
 		h = x.test(t)
+	case tasks.SignOff:
+		f := origin.House("hands-on time", signOffMinutes, "min", "a sign-off without hours: look, ask, sign")
+		h = hands{people: 1, minutes: quantity.Sure(signOffMinutes), est: Estimate{Figure: f}}
 	default:
 		h = hands{people: 1, fault: fmt.Errorf("a %s task needs its hours", t.Kind), hint: "write for instance hours: 2 h, or standing: 2 h where nobody works"}
 	}

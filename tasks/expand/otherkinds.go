@@ -38,19 +38,28 @@ func (x *expander) area(t *tasks.Task) (origin.Figure, error) {
 	return origin.Worked("area", sum, "m2", "sum of the surfaces", from...), nil
 }
 
+// parts lists the parts of an assembly, or the one part named after a slash.
+func (x *expander) parts(name string) []lift.Part {
+	asm, part, single := strings.Cut(name, "/")
+	var out []lift.Part
+	for _, a := range x.w.Job.Assemblies {
+		for _, p := range a.Parts {
+			if a.Name == asm && (!single || p.Name == part) {
+				out = append(out, p.Part)
+			}
+		}
+	}
+	return out
+}
+
 // massOf weighs an assembly or one of its parts ("frame", "frame/base").
 func (x *expander) massOf(name string) (lift.Total, error) {
-	asm, part, single := strings.Cut(name, "/")
+	asm, _, single := strings.Cut(name, "/")
 	for _, a := range x.w.Job.Assemblies {
 		if a.Name != asm {
 			continue
 		}
-		var parts []lift.Part
-		for _, p := range a.Parts {
-			if !single || p.Name == part {
-				parts = append(parts, p.Part)
-			}
-		}
+		parts := x.parts(name)
 		if !single && a.Mass.Pos.Given() && len(parts) == 0 {
 			return lift.Total{Mass: a.Mass.Value, Heavy: a.Mass.Value, Figure: origin.Written("mass", a.Mass.Value, "kg", a.Mass.Pos.Origin("mass"))}, nil
 		}
@@ -273,7 +282,7 @@ func (x *expander) test(t *tasks.Task) hands {
 		h.hint = "put it after a weld with joints, or give length: 2 m, or hours"
 		return h
 	}
-	l, err := weld.Test{Method: method, Length: length, Temperature: x.steel(t.Place), Site: x.atSite(t), Origin: t.Length.Pos.Origin("")}.Work()
+	l, err := weld.Test{Method: method, Length: length, Temperature: notZero(x.steel(t.Place)), Site: x.atSite(t), Origin: t.Length.Pos.Origin("")}.Work()
 	if err != nil {
 		return h.failed(err)
 	}
@@ -325,6 +334,14 @@ func (x *expander) steel(p *tasks.Place) float64 {
 		return p.Steel.Value
 	}
 	return DefaultSteel
+}
+
+// notZero keeps freezing point apart from a temperature that is not given.
+func notZero(celsius float64) float64 {
+	if celsius == 0 {
+		return 0.01
+	}
+	return celsius
 }
 
 // DefaultSteel is the steel temperature, °C, where a place does not give one.

@@ -6,6 +6,7 @@ import (
 	"strings"
 
 	"sailby/tasks"
+	"sailby/tasks/lift"
 	"sailby/tasks/origin"
 	"sailby/weld"
 )
@@ -26,7 +27,7 @@ func (x *expander) weld(t *tasks.Task) hands {
 		seams[i] = s.Seam
 	}
 	e, err := weld.Work(seams, weld.Circumstances{
-		Site: x.atSite(t), Ambient: x.steel(t.Place), Execution: x.w.Job.Execution,
+		Site: x.atSite(t), Ambient: notZero(x.steel(t.Place)), Execution: x.w.Job.Execution,
 		Steel: weld.Steel{Grade: x.grade(t)}, FittedUp: x.fittedUp(t),
 	})
 	if err != nil {
@@ -140,7 +141,8 @@ func (x *expander) cut(t *tasks.Task) hands {
 	if t.Hours.Pos.Given() || t.ManHours.Pos.Given() {
 		return h
 	}
-	if !t.Thickness.Pos.Given() || !t.Length.Pos.Given() {
+	t, plates := x.plates(t)
+	if !plates && (!t.Thickness.Pos.Given() || !t.Length.Pos.Given()) {
 		h.fault = fmt.Errorf("it needs length and thickness, or hours")
 		h.hint = "write for instance length: 1.9 m, thickness: 16 mm, by: oxy-fuel"
 		return h
@@ -161,6 +163,33 @@ func (x *expander) cut(t *tasks.Task) hands {
 	h.minutes = spread(float64(l.HandsOn))
 	h.est.Figure, h.est.Notes = l.Hours, l.Warnings
 	return h
+}
+
+// plates gives a task that cuts parts and says no length the outline and thickness of the plates
+// among them; only plates of one thickness can be told from their parts.
+func (x *expander) plates(t *tasks.Task) (*tasks.Task, bool) {
+	if t.Length.Pos.Given() || len(t.Parts) == 0 {
+		return t, false
+	}
+	outline, thick := 0.0, 0.0
+	for _, name := range t.Parts {
+		for _, p := range x.parts(name) {
+			if p.Shape.Kind != lift.Plate || thick != 0 && p.Shape.Thick != thick {
+				return t, false
+			}
+			thick = p.Shape.Thick
+			outline += 2 * (p.Length + p.Shape.Width) * float64(max(1, p.Count))
+		}
+	}
+	if outline == 0 {
+		return t, false
+	}
+	u := *t
+	u.Length = tasks.Amount{Value: outline, Pos: t.Pos}
+	if !u.Thickness.Pos.Given() {
+		u.Thickness = tasks.Amount{Value: thick, Pos: t.Pos}
+	}
+	return &u, true
 }
 
 // failed puts an error of the weld package, with its way out, on an estimate.
