@@ -19,7 +19,8 @@ type generator struct {
 	rank       []int   // by activity: place in the list
 	order      []int   // activities by rank
 	standing   []bool  // activities that nothing but links holds
-	blocker    []int   // by activity: what was last in its way when it was placed, -1 if nothing
+	lean       leaning
+	blocker    []int // by activity: what was last in its way when it was placed, -1 if nothing
 	inWay      int
 	stuck      int   // the activity that found no place, -1 if none
 	pending    []int // by activity: unplaced activities that it waits for
@@ -30,7 +31,7 @@ type generator struct {
 func newGenerator(p *problem.Problem) *generator {
 	n := len(p.Acts)
 	g := &generator{state: newState(p), into: make([][]int, n), from: make([][]int, n), lo: make([]int, n),
-		choice: make([]int, len(p.Orders)), rank: make([]int, n), order: make([]int, n), standing: make([]bool, n), pending: make([]int, n), blocker: make([]int, n)}
+		choice: make([]int, len(p.Orders)), rank: make([]int, n), order: make([]int, n), standing: make([]bool, n), pending: make([]int, n), blocker: make([]int, n), lean: newLeaning(n)}
 	for k, l := range p.Links {
 		g.into[l.To] = append(g.into[l.To], k)
 		if l.From >= 0 {
@@ -91,7 +92,7 @@ func (g *generator) prepare() {
 	clear(g.pending)
 	g.queue = g.queue[:0]
 	for i := range g.lo {
-		g.lo[i] = g.p.Acts[i].From
+		g.lo[i] = max(g.p.Acts[i].From, g.lean.hold[i])
 		g.after(i, func(j int) { g.pending[j]++ })
 	}
 	for i := range g.pending {
@@ -129,7 +130,7 @@ func (g *generator) release(i int) {
 // push queues an activity that waits for nothing more.
 func (g *generator) push(i int) {
 	key := g.rank[i]
-	if g.standing[i] || g.urgent(i) {
+	if g.standing[i] || !g.lean.calm[i] && g.urgent(i) {
 		key -= len(g.p.Acts)
 	}
 	heap.Push(&g.queue, entry{key, i})

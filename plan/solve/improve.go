@@ -45,6 +45,8 @@ type Result struct {
 // forward-backward improvement (justification) after Valls, Ballestin and Quintanilla (EJOR 2005).
 func Find(p *problem.Problem, b network.Bounds, o Options) Result {
 	f := &finder{g: newGenerator(p), p: p, b: b, o: o, rng: rand.New(rand.NewPCG(o.Seed, 0x5a11b7))}
+	f.leaning = newLeaning(len(p.Acts))
+	f.holdable, f.calmable = f.g.yielding()
 	f.rules()
 	if f.best != nil {
 		f.justify()
@@ -54,15 +56,17 @@ func Find(p *problem.Problem, b network.Bounds, o Options) Result {
 }
 
 type finder struct {
-	g     *generator
-	p     *problem.Problem
-	b     network.Bounds
-	o     Options
-	rng   *rand.Rand
-	best  *Schedule
-	list  []int // the list that made best
-	after []int // by activity: the longest chain of work from it on
-	cut   bool
+	g                  *generator
+	p                  *problem.Problem
+	b                  network.Bounds
+	o                  Options
+	rng                *rand.Rand
+	best               *Schedule
+	list               []int   // the list that made best
+	leaning            leaning // what best was made with beside it
+	holdable, calmable []int
+	after              []int // by activity: the longest chain of work from it on
+	cut                bool
 }
 
 // over says whether the search must end.
@@ -90,6 +94,7 @@ func (f *finder) try(order []int) (Score, bool) {
 	if f.best == nil || sc.Compare(f.best.Score, false) < 0 {
 		f.best = f.g.snapshot(sc)
 		f.list = append(f.list[:0], order...)
+		f.leaning.set(f.g.lean)
 	}
 	return sc, true
 }
@@ -341,7 +346,9 @@ func (f *finder) climb() {
 	if n < 2 {
 		return
 	}
-	w := &walk{f: f, list: slices.Clone(f.list), choice: slices.Clone(f.best.Choice), weight: slices.Clone(f.g.weight)}
+	w := &walk{f: f, list: slices.Clone(f.list), choice: slices.Clone(f.best.Choice), weight: slices.Clone(f.g.weight), lean: newLeaning(n)}
+	w.lean.set(f.leaning)
+	f.g.lean.set(w.lean)
 	copy(f.g.choice, w.choice)
 	if !f.g.run(w.list) {
 		return
@@ -359,14 +366,17 @@ func (f *finder) climb() {
 		case ok && f.energy(sc) <= w.energy+warm:
 			copy(w.list, trial)
 			copy(w.choice, f.g.choice)
+			w.lean.set(f.g.lean)
 			w.settle(sc)
 		case step%walkLength == walkLength-1: // from the best again, or from somewhere else
 			copy(w.list, f.list)
 			copy(w.choice, f.best.Choice)
+			w.lean.set(f.leaning)
 			if f.rng.IntN(2) == 0 {
 				copy(w.list, f.biased())
 			}
 			copy(f.g.choice, w.choice)
+			f.g.lean.set(w.lean)
 			if f.g.run(w.list) {
 				w.settle(f.g.score())
 			}
@@ -392,6 +402,7 @@ type walk struct {
 	list   []int
 	choice []int
 	weight []int
+	lean   leaning
 	energy float64
 	pairs  [][2]int // activities whose order holds the finish back: the first waited for the second
 }
@@ -417,6 +428,7 @@ func (f *finder) energy(sc Score) float64 {
 // finish goes ahead of it, else at random. Who is wanted elsewhere is weighed anew now and then.
 func (w *walk) change(list []int) {
 	f := w.f
+	f.lean(w.lean)
 	if len(w.pairs) > 0 && f.rng.IntN(2) == 0 {
 		pair := w.pairs[f.rng.IntN(len(w.pairs))]
 		f.ahead(list, pair[0], pair[1])
