@@ -109,10 +109,12 @@ func TestDemonstrations(t *testing.T) {
 	for _, c := range []struct {
 		job, trip, changes string
 		want               plan.Verdict
-		low                bool // cannot fit even at the low end
-		tasks              int  // at least so many
+		maybes             plan.Verdict // with every maybe, where it is said
+		low                bool         // cannot fit even at the low end
+		tasks              int          // at least so many
 	}{
-		{job: "tarskay", want: plan.Fits, tasks: 50},
+		{job: "tarskay", want: plan.Fits, maybes: plan.CannotFit, tasks: 50},
+		{job: "tarskay", changes: "staging at the hinge, insert cut at home", want: plan.Fits, maybes: plan.Fits},
 		{job: "tarskay", trip: "seven days", want: plan.CannotFit, low: true},
 		{job: "lanehead", want: plan.CannotFit, low: true, tasks: 40},
 		{job: "lanehead", changes: "consent", want: plan.CannotFit, low: true},
@@ -149,12 +151,15 @@ func TestDemonstrations(t *testing.T) {
 					t.Fatal(err)
 				}
 			}
-			rep, err := settle.Ask(context.Background(), job, settle.Options{Trip: c.trip, Only: true})
+			rep, err := settle.Ask(context.Background(), job, settle.Options{Trip: c.trip, Only: c.maybes == 0})
 			if err != nil {
 				t.Fatal(err)
 			}
 			if rep.Likely.Verdict != c.want || rep.LowToo != c.low {
 				t.Errorf("got %s (even at the low end: %v), want %s (%v)", rep.Likely.Verdict, rep.LowToo, c.want, c.low)
+			}
+			if c.maybes != 0 && rep.Maybes.Verdict != c.maybes {
+				t.Errorf("with every maybe: got %s, want %s", rep.Maybes.Verdict, c.maybes)
 			}
 		})
 	}
