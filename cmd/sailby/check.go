@@ -9,6 +9,7 @@ import (
 
 	"github.com/spf13/cobra"
 
+	"sailby/plan/settle"
 	"sailby/report/agenda"
 	"sailby/report/clean"
 	"sailby/tasks"
@@ -79,8 +80,7 @@ func everyTrip(ctx context.Context, job *tasks.Job, trip string) tasks.Faults {
 			if ctx.Err() != nil {
 				return nil
 			}
-			_, faults := expand.Expand(job, b)
-			out = append(out, faults...)
+			out = append(out, settle.Faults(job, b)...)
 		}
 	}
 	return out.Sorted()
