@@ -176,7 +176,7 @@ func (e *engine) learn() bool {
 	}
 	ref := e.keep(e.learnt, n)
 	e.atoms.claim(e.learnt)
-	if !e.raise(f.s, f.v, why{whyClause, ref, 0}) {
+	if !e.raise(f.s, f.v, why{kind: whyClause, id: ref}) {
 		e.dead = true
 		return false
 	}

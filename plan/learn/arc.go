@@ -67,7 +67,7 @@ func (e *engine) addArc(a arc) {
 func (e *engine) follow(s side) bool {
 	v := e.now[s]
 	for _, a := range e.arcs.plain[s] {
-		if e.now[a.to] < v+a.w && !e.raise(a.to, v+a.w, why{whyArc, a.id, 0}) {
+		if e.now[a.to] < v+a.w && !e.raise(a.to, v+a.w, why{kind: whyArc, id: a.id}) {
 			return false
 		}
 	}
@@ -93,13 +93,13 @@ func (e *engine) pass(id int32) bool {
 	switch {
 	case a.on.s < 0 || e.holds(a.on):
 		v := a.at(e.now[a.from])
-		return e.now[a.to] >= v || e.raise(a.to, v, why{whyArc, id, 0})
+		return e.now[a.to] >= v || e.raise(a.to, v, why{kind: whyArc, id: id})
 	case e.fails(a.on):
 		return true
 	}
 	if a.at(e.now[a.from])+e.now[a.to^1] > 0 {
 		n := a.on.not()
-		return e.raise(n.s, n.v, why{whyOff, id, 0})
+		return e.raise(n.s, n.v, why{kind: whyOff, id: id})
 	}
 	return true
 }

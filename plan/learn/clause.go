@@ -97,7 +97,7 @@ func (e *engine) visit(s side) bool {
 		}
 		ws[kept] = watcher{w.from, w.ref, fs[0]}
 		kept++
-		if !e.raise(fs[0].s, fs[0].v, why{whyClause, w.ref, 0}) {
+		if !e.raise(fs[0].s, fs[0].v, why{kind: whyClause, id: w.ref}) {
 			kept += copy(ws[kept:], ws[i+1:])
 			e.watch[s] = ws[:kept]
 			return false

@@ -33,11 +33,11 @@ type engine struct {
 }
 
 // rule is a propagator: it raises sides from the bounds of several variables, and can say why.
-// With explain, out gets facts that held before entry idx and lead to f; note is what run gave
-// in the reason.
+// With explain, out gets facts that held before entry idx and lead to f; w is what run gave
+// as the reason.
 type rule interface {
 	run(e *engine) bool
-	explain(e *engine, f fact, note, idx int32, out []fact) []fact
+	explain(e *engine, f fact, w why, idx int32, out []fact) []fact
 }
 
 func newEngine() *engine {
@@ -46,7 +46,7 @@ func newEngine() *engine {
 
 // variable makes a variable and the lists that go by its sides.
 func (e *engine) variable(lo, hi int32) side {
-	s := e.add(lo, hi)
+	s := e.bounds(lo, hi)
 	for k := 0; k < 2; k++ {
 		e.watch = append(e.watch, nil)
 		e.arcs.plain = append(e.arcs.plain, nil)
@@ -100,7 +100,7 @@ func (e *engine) reason(f fact, w why, idx int32, out []fact) []fact {
 	case whyOff:
 		return e.offReason(w.id, idx, out)
 	case whyRule:
-		return e.rules[w.id].explain(e, f, w.at, idx, out)
+		return e.rules[w.id].explain(e, f, w, idx, out)
 	}
 	return out
 }
@@ -158,4 +158,17 @@ func (e *engine) decide(f fact) {
 	if !e.holds(f) {
 		e.push(f.s, f.v, why{kind: whyChoice})
 	}
+}
+
+// add puts in a clause that always holds; it is never dropped. Only before the search. It gives
+// false if the clause is empty or contradicts the root.
+func (e *engine) add(fs []fact) bool {
+	switch len(fs) {
+	case 0:
+		return false
+	case 1:
+		return e.raise(fs[0].s, fs[0].v, why{kind: whyRoot})
+	}
+	e.keep(fs, 0)
+	return true
 }

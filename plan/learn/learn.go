@@ -33,6 +33,8 @@ const (
 type Result struct {
 	Status    Status
 	Starts    []int // of the best plan, nil if none was found
+	Modes     []int // of the best plan
+	Exact     bool  // nothing was left out: the plan obeys the whole problem
 	Finish    int   // of that plan; problem.Inf without one
 	Bound     int   // no plan finishes before it; problem.Inf if there is none
 	Ticks     int64
@@ -42,12 +44,51 @@ type Result struct {
 // pollEvery is how many ticks pass between two questions whether to stop: a tick is some 20 ns.
 const pollEvery = 100_000
 
-// Solve looks for the plan with the earliest finish.
+// Solve looks for the plan with the earliest finish of the site activities (of all, where none
+// is at the site), with named people. What the model leaves out (watches over hot work and after
+// it) can only make plans worse: a bound and an Infeasible hold for the problem as it is, and
+// Exact says whether the plan does.
 func Solve(p *problem.Problem, o Options) Result {
-	m, ok := build(p)
+	m, ok := build(p, true)
 	if !ok {
-		return Result{Status: Infeasible, Finish: problem.Inf, Bound: problem.Inf}
+		return none()
+	}
+	s := &search{model: m, opt: o, people: !m.plain}
+	r := s.minimise()
+	r.Exact = m.exact()
+	return r
+}
+
+// Relax looks for the earliest finish with who does what left out: of a set of people who can do
+// some work only their number counts, and every activity takes the kindest of its timings. Its Bound
+// holds for the problem, its Starts are no plan.
+func Relax(p *problem.Problem, o Options) Result {
+	m, ok := build(p, false)
+	if !ok {
+		return none()
 	}
 	s := &search{model: m, opt: o}
 	return s.minimise()
+}
+
+func none() Result {
+	return Result{Status: Infeasible, Finish: problem.Inf, Bound: problem.Inf}
+}
+
+// exact says whether the model leaves out nothing of the problem.
+func (m *model) exact() bool {
+	for i := range m.p.Acts {
+		a := &m.p.Acts[i]
+		for k := range a.Modes {
+			if a.Modes[k].Time.Watch() > 0 {
+				return false
+			}
+			for _, w := range a.Modes[k].Watch {
+				if w {
+					return false
+				}
+			}
+		}
+	}
+	return true
 }

@@ -1,62 +1,33 @@
 package learn
 
 import (
-	"os"
-
 	"sailby/plan/problem"
 	"sailby/tasks"
-	"sailby/tasks/expand"
 )
 
 // model is a problem in the engine's terms.
 type model struct {
 	*engine
 	p      *problem.Problem
-	start  []side // by activity
-	finish []side
-	length []int32 // finish is the value of side finish plus this
+	acts   []act
+	start  []side  // by activity
+	finish []side  // by activity
+	length []int32 // the finish is the value of side finish plus this
 	end    side    // the finish of the whole
-	lags   []lag   // every lag between two starts
+	lags   []lag   // every lag of fixed length between two starts
+	plain  bool    // every activity has one fixed length and one mode
+	grids  map[*problem.Timing]*grid
+	steady map[*problem.Timing]spans
 }
 
-// build makes the model; ok is false if the problem contradicts itself at sight.
-func build(p *problem.Problem) (*model, bool) {
-	m := &model{engine: newEngine(), p: p}
-	n := len(p.Acts)
-	for i := range p.Acts {
-		a := &p.Acts[i]
-		d := int32(a.Modes[0].Time.Length())
-		latest := int32(min(p.End, a.By))
-		if latest-d < int32(a.From) {
-			return nil, false
-		}
-		s := m.variable(int32(a.From), latest-d)
-		m.start = append(m.start, s)
-		m.finish = append(m.finish, s)
-		m.length = append(m.length, d)
-	}
-	m.end = m.variable(0, int32(p.End))
-	for i := range p.Links {
-		m.link(&p.Links[i])
-	}
-	for i := 0; i < n; i++ {
-		m.join(m.finish[i], m.end, m.length[i], always)
-	}
-	if !m.orders() {
-		return nil, false
-	}
-	for k := range p.Res {
-		var us []user
-		for i := range p.Acts {
-			for _, u := range p.Acts[i].Uses {
-				if u.Res == k && u.Amount > 0 && m.length[i] > 0 {
-					us = append(us, user{m.start[i], m.finish[i], m.length[i], int32(u.Amount)})
-				}
-			}
-		}
-		newTimetable(m.engine, int32(p.Res[k].Capacity), us)
-	}
-	return m, true
+// act is what the model knows of an activity beside its sides.
+type act struct {
+	times []*problem.Timing
+	grids grids
+	empty bool   // it may take no time at all
+	sure  spans  // minutes in which it is worked if it runs over them, whoever does it
+	watch int32  // minutes of fire watch that follow at least
+	modes []side // with people: a variable for each mode, if there are several
 }
 
 // lag says that j starts at least lag after i.
@@ -65,56 +36,121 @@ type lag struct {
 	lag  int32
 }
 
+// latest is the longest horizon: above it minutes would not leave room for sums.
+const latest = int(far) / 4
+
+// build makes the model; ok is false if the problem contradicts itself at sight. With people it
+// is the job as it is, as far as the model goes; without, who does what is left out and every
+// activity takes the kindest of its timings, so that a bound holds for the job too.
+func build(p *problem.Problem, people bool) (*model, bool) {
+	m := &model{engine: newEngine(), p: p, plain: true, grids: map[*problem.Timing]*grid{}, steady: map[*problem.Timing]spans{}}
+	if p.End < 0 || p.End > latest {
+		return nil, false
+	}
+	for i := range p.Acts {
+		if !m.activity(i) {
+			return nil, false
+		}
+	}
+	m.end = m.variable(0, int32(p.End))
+	for i := range m.acts {
+		m.timed(i)
+	}
+	m.aim()
+	for i := range p.Links {
+		if !m.wait(&p.Links[i]) {
+			return nil, false
+		}
+	}
+	if !m.orders() || !m.apart() || !m.rules() {
+		return nil, false
+	}
+	if !m.resources() {
+		return nil, false
+	}
+	if people {
+		return m, m.crews()
+	}
+	m.groups()
+	return m, true
+}
+
+// activity makes the variables of activity i: its start, and its finish unless that is the
+// start and a fixed length.
+func (m *model) activity(i int) bool {
+	a := &m.p.Acts[i]
+	if len(a.Modes) == 0 {
+		return false
+	}
+	x := act{times: a.Timings()}
+	last, fixed := min(m.p.End, a.By), true
+	x.watch = int32(latest)
+	for _, w := range x.times {
+		g := m.grids[w]
+		if g == nil {
+			g = newGrid(w, m.p.End)
+			m.grids[w], m.steady[w] = g, steady(w, g)
+		}
+		x.grids = append(x.grids, g)
+		fixed = fixed && isFixed(w) && w.Length() == x.times[0].Length()
+		x.empty = x.empty || w.Length() == 0 && (isFixed(w) || w.Calendar() != nil)
+		if x.watch = min(x.watch, int32(w.Watch())); x.empty {
+			x.watch = 0
+		}
+		x.sure = x.sure.and(m.steady[w])
+	}
+	if a.Site && a.By < problem.Inf {
+		last = min(last, m.p.Close-int(x.watch))
+	}
+	m.acts = append(m.acts, x)
+	m.plain = m.plain && fixed && len(a.Modes) == 1
+	d := 0
+	if fixed {
+		d = x.times[0].Length()
+	}
+	if a.From+d > last || a.From < 0 {
+		return false
+	}
+	s := m.variable(int32(a.From), int32(last-d))
+	m.start, m.finish, m.length = append(m.start, s), append(m.finish, s), append(m.length, int32(d))
+	if !fixed {
+		m.finish[i] = m.variable(int32(a.From), int32(last))
+	}
+	return true
+}
+
+// timed ties the finish of activity i to its start, by the kindest of its timings.
+func (m *model) timed(i int) {
+	if m.start[i] != m.finish[i] {
+		m.tie(i, m.acts[i].grids, always)
+	}
+}
+
+// tie says that activity i starts where one of gs lets it, and finishes when that leads to.
+func (m *model) tie(i int, gs grids, on fact) {
+	s, f := m.start[i], m.finish[i]
+	m.bend(s, 0, f, 0, rising{gs.finish, gs.latest}, on)
+	m.bend(s, 0, s, 0, rising{gs.start, gs.last}, on)
+	m.bend(f, 0, s, 0, rising{gs.back, gs.most}, on)
+}
+
+// aim ties the finish of the whole to the site activities, to all where none is at the site.
+func (m *model) aim() {
+	site := false
+	for i := range m.p.Acts {
+		site = site || m.p.Acts[i].Site
+	}
+	for i := range m.p.Acts {
+		if m.p.Acts[i].Site || !site {
+			m.join(m.finish[i], m.end, m.length[i]+m.acts[i].watch, always)
+		}
+	}
+}
+
+// endOf gives the side of an end of activity i, and what to add to it.
 func (m *model) endOf(i int, end tasks.LinkEnd) (side, int32) {
 	if end == tasks.Start {
 		return m.start[i], 0
 	}
 	return m.finish[i], m.length[i]
-}
-
-func (m *model) link(l *problem.Link) {
-	from, a := m.endOf(l.From, l.FromEnd)
-	to, b := m.endOf(l.To, l.ToEnd)
-	if l.Min > expand.NoMin {
-		m.join(from, to, int32(l.Min)+a-b, always)
-		m.lags = append(m.lags, lag{l.From, l.To, int32(l.Min) + a - b})
-	}
-	if l.Max < expand.NoMax {
-		m.join(to, from, -int32(l.Max)+b-a, always)
-		m.lags = append(m.lags, lag{l.To, l.From, -int32(l.Max) + b - a})
-	}
-}
-
-// orders finds the pairs that cannot overlap. Those that the links decide become links; each
-// other gets a variable that says which goes first.
-func (m *model) orders() bool {
-	w := newNetwork(len(m.start))
-	for _, a := range m.lags {
-		w.put(a.i, a.j, a.lag)
-	}
-	if !w.close() {
-		return false
-	}
-	before := append([]int32(nil), w.lag...)
-	pairs := m.apart()
-	open, ok := w.force(pairs, m.length)
-	if !ok {
-		return false
-	}
-	for _, p := range pairs {
-		for _, q := range []pair{p, {p.b, p.a}} {
-			if v := w.get(q.a, q.b); v >= m.length[q.a] && before[q.a*w.n+q.b] < m.length[q.a] {
-				m.join(m.start[q.a], m.start[q.b], m.length[q.a], always)
-			}
-		}
-	}
-	if os.Getenv("NOPAIRS") != "" {
-		return true
-	}
-	for _, p := range open {
-		x := m.variable(0, 1)
-		m.join(m.start[p.a], m.start[p.b], m.length[p.a], fact{x, 1})
-		m.join(m.start[p.b], m.start[p.a], m.length[p.b], fact{x ^ 1, 0})
-	}
-	return true
 }

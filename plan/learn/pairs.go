@@ -1,10 +1,55 @@
 package learn
 
-// pair is two activities that cannot overlap, whichever goes first.
+import "sailby/plan/problem"
+
+// pair is two activities that do not overlap from start to finish, whichever goes first.
 type pair struct{ a, b int }
 
-// apart lists the pairs that together ask more of a resource than there is.
-func (m *model) apart() []pair {
+// orders finds the pairs that together ask more of a resource than there is and hold it from
+// start to finish. Those that the links decide become links; each other gets a variable that
+// says which goes first. O(n^2 x resources + n^3), the last part only up to mostClosed activities.
+func (m *model) orders() bool {
+	pairs := m.crowded()
+	open := pairs
+	if n := len(m.start); n <= mostClosed {
+		w := newNetwork(n)
+		for _, a := range m.lags {
+			w.put(a.i, a.j, a.lag)
+		}
+		if !w.close() {
+			return false
+		}
+		before := append([]int32(nil), w.lag...)
+		var ok bool
+		if open, ok = w.force(pairs, m.length); !ok {
+			return false
+		}
+		for _, p := range pairs {
+			for _, q := range []pair{p, {p.b, p.a}} {
+				if v := w.get(q.a, q.b); v >= m.length[q.a] && before[q.a*n+q.b] < m.length[q.a] {
+					m.join(m.start[q.a], m.start[q.b], m.length[q.a], always)
+				}
+			}
+		}
+	}
+	if len(open) > mostOrders {
+		return true // the resources say it all, only less well
+	}
+	for _, p := range open {
+		x := m.variable(0, 1)
+		m.join(m.start[p.a], m.start[p.b], m.length[p.a], fact{x, 1})
+		m.join(m.start[p.b], m.start[p.a], m.length[p.b], fact{x ^ 1, 0})
+	}
+	return true
+}
+
+const (
+	mostClosed = 400    // activities whose network is closed
+	mostOrders = 20_000 // order variables made for crowded resources
+)
+
+// crowded lists the pairs of activities of fixed length that overfill a resource together.
+func (m *model) crowded() []pair {
 	n := len(m.p.Acts)
 	use := make([][]int32, len(m.p.Res))
 	for k := range use {
@@ -38,9 +83,8 @@ func (m *model) apart() []pair {
 func (w *network) force(pairs []pair, length []int32) (open []pair, ok bool) {
 	for again := true; again; {
 		again = false
-		open = open[:0:0]
+		open = nil
 		for _, p := range pairs {
-			// a after b needs start a - start b >= length b, so start b - start a <= -length b
 			ab, ba := w.get(p.a, p.b), w.get(p.b, p.a)
 			switch {
 			case ab >= length[p.a] || ba >= length[p.b]:
@@ -48,20 +92,73 @@ func (w *network) force(pairs []pair, length []int32) (open []pair, ok bool) {
 			case ab > -length[p.b] && ba > -length[p.a]:
 				return nil, false
 			case ab > -length[p.b]:
-				if !w.add(p.a, p.b, length[p.a]) {
-					return nil, false
-				}
+				ok = w.add(p.a, p.b, length[p.a])
 				again = true
 			case ba > -length[p.a]:
-				if !w.add(p.b, p.a, length[p.b]) {
-					return nil, false
-				}
+				ok = w.add(p.b, p.a, length[p.b])
 				again = true
 			default:
 				open = append(open, p)
+				continue
+			}
+			if !ok {
+				return nil, false
 			}
 		}
 		pairs = open
 	}
 	return open, true
+}
+
+// apart makes the pairs of the problem: the one that goes first is over, and its tail too, before
+// the other starts. Pairs with an activity that may take no time are left out.
+func (m *model) apart() bool {
+	for _, p := range m.p.Pairs {
+		if m.acts[p.A].empty || m.acts[p.B].empty {
+			continue
+		}
+		x := m.variable(0, 1)
+		m.ahead(p.A, p.B, p.TailA, fact{x, 1})
+		m.ahead(p.B, p.A, p.TailB, fact{x ^ 1, 0})
+	}
+	return true
+}
+
+// ahead says that a and its tail are over before b starts, while on holds.
+func (m *model) ahead(a, b int, tail func(int) int, on fact) {
+	if tail == nil {
+		m.join(m.finish[a], m.start[b], m.length[a], on)
+		return
+	}
+	m.bend(m.finish[a], m.length[a], m.start[b], 0, byFunc(tail, m.p.End), on)
+}
+
+// rules makes the order rules: at least one choice holds, and with it each of its pairs.
+func (m *model) rules() bool {
+	for k := range m.p.Orders {
+		o := &m.p.Orders[k]
+		var any []fact
+		for _, c := range o.Choices {
+			on := always
+			if len(o.Choices) > 1 {
+				x := m.variable(0, 1)
+				on = fact{x, 1}
+				any = append(any, on)
+			}
+			m.choice(c, on)
+		}
+		if len(o.Choices) == 0 {
+			return false
+		}
+		if len(any) > 0 {
+			m.add(any)
+		}
+	}
+	return true
+}
+
+func (m *model) choice(all []problem.Before, on fact) {
+	for _, b := range all {
+		m.ahead(b.First, b.Then, nil, on)
+	}
 }

@@ -8,10 +8,14 @@ type search struct {
 	opt    Options
 	best   []int32 // value of each variable in the best plan or the hint, nil if none
 	starts []int   // the best plan found, nil if none
-	value  int32   // only finishes before this are looked for
+	modes  []int
+	value  int32 // only finishes before this are looked for
 	polled int64
 	kept   int64 // clauses allowed
 	assume []fact
+	people bool         // the model names people: plans are checked piece by piece
+	actOf  map[side]int // activity by the side of its start
+	loose  side         // variables from here on are settled last
 }
 
 // outcome is how a run ended.
@@ -70,6 +74,12 @@ func (s *search) run(assume []fact, limit int64, early bool) outcome {
 			s.decide(f)
 			continue
 		}
+		if s.people && !s.leaf() {
+			if !s.learn() {
+				return over
+			}
+			continue
+		}
 		if !s.take() {
 			return over
 		}
@@ -85,8 +95,10 @@ func (s *search) take() bool {
 		s.best = append(s.best, s.now[x])
 	}
 	s.starts = s.starts[:0]
-	for _, x := range s.start {
+	s.modes = s.modes[:0]
+	for i, x := range s.start {
 		s.starts = append(s.starts, int(s.now[x]))
+		s.modes = append(s.modes, s.chosen(i))
 	}
 	if s.opt.Found != nil {
 		s.opt.Found(append([]int(nil), s.starts...), int(s.value))
@@ -120,6 +132,7 @@ func (s *search) adopt(x *beast) bool {
 		s.best = make([]int32, len(s.now)/2)
 	}
 	s.starts = s.starts[:0]
+	s.modes = make([]int, len(s.start))
 	for i, side := range s.start {
 		s.best[side/2] = x.start[i]
 		s.starts = append(s.starts, int(x.start[i]))
@@ -150,6 +163,10 @@ func (s *search) tighten() bool {
 func (s *search) begin() bool {
 	s.value = int32(s.p.End) + 1
 	s.kept = firstKept
+	s.actOf = map[side]int{}
+	for i, x := range s.start {
+		s.actOf[x] = i
+	}
 	if s.opt.Hint != nil {
 		s.best = make([]int32, len(s.now)/2)
 		for i, v := range s.opt.Hint {
@@ -169,7 +186,7 @@ func (s *search) result() Result {
 		r.Bound = int(s.now[s.end])
 	}
 	if s.starts != nil {
-		r.Starts, r.Finish = s.starts, int(s.value)
+		r.Starts, r.Modes, r.Finish = s.starts, s.modes, int(s.value)
 		r.Status, r.Bound = Feasible, min(r.Bound, r.Finish)
 		if s.dead {
 			r.Status = Optimal
@@ -215,10 +232,46 @@ func (s *search) choose(early bool) (fact, bool) {
 		}
 	}
 	if pick >= 0 {
+		if f, ok := s.modeFor(pick); ok {
+			return f, true
+		}
 		return fact{pick ^ 1, -s.now[pick]}, true
 	}
-	if !s.fixed(s.end) { // the finish of the whole is as early as the starts allow
-		return fact{s.end ^ 1, -s.now[s.end]}, true
+	for i := range s.acts {
+		if len(s.acts[i].modes) > 0 {
+			if f, ok := s.modeFor(s.start[i]); ok {
+				return f, true
+			}
+		}
+	}
+	// what is left is as early as the starts allow; of two modes that both hold one is enough
+	for x := s.loose; x < side(len(s.now)); x += 2 {
+		if !s.fixed(x) {
+			return fact{x ^ 1, -s.now[x]}, true
+		}
 	}
 	return fact{}, false
+}
+
+// modeFor gives a decision on who does the activity that begins with side x, if that is open: the
+// mode that is done first.
+func (s *search) modeFor(x side) (fact, bool) {
+	i := s.actOf[x]
+	best, least := side(-1), far
+	for k, y := range s.acts[i].modes {
+		switch {
+		case s.now[y] == 1:
+			return fact{}, false
+		case s.now[y^1] == 0: // ruled out
+			continue
+		}
+		g := s.grids[s.p.Acts[i].Modes[k].Time]
+		if f := g.finish(s.now[x]); f < least {
+			best, least = y, f
+		}
+	}
+	if best < 0 {
+		return fact{}, false
+	}
+	return fact{best, 1}, true
 }

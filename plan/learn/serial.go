@@ -20,9 +20,13 @@ type shop struct {
 
 type lagTo struct{ other, lag int32 }
 
-// newShop makes a shop, nil if lags run both ways or an activity asks for more than there is.
+// newShop makes a shop, nil if the problem has more to it than such lags and
+// resources.
 func newShop(m *model) *shop {
 	p := m.p
+	if !m.plain || len(p.Pairs) > 0 || len(p.Orders) > 0 || len(p.People) > 0 {
+		return nil
+	}
 	n := len(p.Acts)
 	capacity := make([]int32, len(p.Res))
 	for k := range p.Res {
@@ -34,6 +38,9 @@ func newShop(m *model) *shop {
 	for i := range p.Acts {
 		use := make([]int32, len(p.Res))
 		h.idle[i] = true
+		if p.Acts[i].By < p.End || p.Acts[i].Site != p.Acts[0].Site {
+			return nil
+		}
 		h.from[i] = int32(p.Acts[i].From)
 		for _, u := range p.Acts[i].Uses {
 			use[u.Res] += int32(u.Amount)
@@ -45,7 +52,7 @@ func newShop(m *model) *shop {
 		h.want[i] = l.pack(use)
 	}
 	for _, a := range m.lags {
-		if a.lag < 0 || p.Acts[a.i].Hopeless != "" {
+		if a.lag < 0 {
 			return nil
 		}
 		h.before[a.j] = append(h.before[a.j], lagTo{int32(a.i), a.lag})

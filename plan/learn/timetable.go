@@ -189,7 +189,7 @@ func (c *timetable) later(e *engine, i int32) bool {
 			if t < c.from[k] || t < e.now[u.start] {
 				break
 			}
-			if !e.raise(u.start, t+1, why{whyRule, c.id, t}) {
+			if !e.raise(u.start, t+1, why{whyRule, c.id, t, i}) {
 				return false
 			}
 		}
@@ -216,7 +216,7 @@ func (c *timetable) earlier(e *engine, i int32) bool {
 				break
 			}
 			f := u.finishBy(t)
-			if !e.raise(f.s, f.v, why{whyRule, c.id, t}) {
+			if !e.raise(f.s, f.v, why{whyRule, c.id, t, i}) {
 				return false
 			}
 		}
@@ -224,33 +224,25 @@ func (c *timetable) earlier(e *engine, i int32) bool {
 	return true
 }
 
-// explain gives the activities that leave the user of f too little at a point, and that the
-// user would be there. A point that is just enough for f is tried before the one of the run.
-func (c *timetable) explain(e *engine, f fact, t, idx int32, out []fact) []fact {
-	var u *user
-	i := int32(-1)
-	for k := range c.users {
-		if u = &c.users[k]; u.start == f.s || u.finish^1 == f.s {
-			i = int32(k)
-			break
-		}
-	}
-	base := len(out)
+// explain gives the activities that leave the user too little at a point, and that it would be
+// there. A point that is just enough for f is tried before the one of the run.
+func (c *timetable) explain(e *engine, f fact, w why, idx int32, out []fact) []fact {
+	u, base := &c.users[w.who], len(out)
 	if f.s == u.start {
 		out = append(out, u.finishFrom(f.v))
-		if out = c.covers(e, f.v-1, i, idx, out); len(out) > base+1 {
+		if out = c.covers(e, f.v-1, w.who, idx, out); len(out) > base+1 {
 			return out
 		}
-		out = append(out[:base], u.finishFrom(t+1))
-		return c.covers(e, t, i, idx, out)
+		out = append(out[:base], u.finishFrom(w.at+1))
+		return c.covers(e, w.at, w.who, idx, out)
 	}
 	point := u.length - f.v // [finish <= point]
 	out = append(out, u.startBy(point))
-	if out = c.covers(e, point, i, idx, out); len(out) > base+1 {
+	if out = c.covers(e, point, w.who, idx, out); len(out) > base+1 {
 		return out
 	}
-	out = append(out[:base], u.startBy(t))
-	return c.covers(e, t, i, idx, out)
+	out = append(out[:base], u.startBy(w.at))
+	return c.covers(e, w.at, w.who, idx, out)
 }
 
 // covers adds the facts by which activities other than skip cover t so far that they leave too

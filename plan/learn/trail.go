@@ -29,7 +29,8 @@ const (
 type why struct {
 	kind uint8
 	id   int32
-	at   int32
+	at   int32 // a propagator's note: the minute
+	who  int32 // and the activity, as it counts them
 }
 
 // raised is an entry of the trail.
@@ -49,8 +50,8 @@ type trail struct {
 	head []int32 // list length at which each level above 0 begins
 }
 
-// add makes a variable with bounds lo and hi and gives its lower side. Only before the first raise.
-func (t *trail) add(lo, hi int32) side {
+// bounds makes a variable with bounds lo and hi and gives its lower side.
+func (t *trail) bounds(lo, hi int32) side {
 	s := side(len(t.now))
 	for k, v := range [2]int32{lo, -hi} {
 		t.now = append(t.now, v)

@@ -1,0 +1,271 @@
+package learn
+
+import "sort"
+
+// worker is a user that is only there in some minutes between its start and its finish, and only
+// while a condition holds.
+type worker struct {
+	user
+	on   fact  // s < 0: always
+	mask spans // minutes in which it is at work for certain if it runs over them
+}
+
+// worktable is a resource with a capacity at every minute, used by activities that pause: the
+// timetable for calendars (after Kreter, Schutt and Stuckey 2017). An activity counts at t if its
+// condition holds, t is in its mask, and it starts at t or before and finishes after t; the
+// explanations are those of the timetable, with the condition added. An activity whose condition
+// is open loses it where its compulsory part would be too much.
+//
+// Cost of a run: O(s log s) for the s spans of compulsory parts, and O(n x segments).
+type worktable struct {
+	id       int32
+	capacity int32
+	all      []worker
+	events   []event
+	from     []int32
+	level    []int32
+	cover    []covering
+}
+
+// event is a change of use.
+type event struct{ at, by int32 }
+
+func newWorktable(e *engine, capacity int32, all []worker) {
+	c := &worktable{id: int32(len(e.rules)), capacity: capacity, all: all}
+	seen := map[side]bool{}
+	var sides []side
+	add := func(s side) {
+		if !seen[s] {
+			seen[s] = true
+			sides = append(sides, s)
+		}
+	}
+	for i := range all {
+		w := &all[i]
+		add(w.start)
+		add(w.start ^ 1)
+		add(w.finish)
+		add(w.finish ^ 1)
+		if w.on.s >= 0 {
+			add(w.on.s)
+		}
+	}
+	e.attach(c, sides)
+}
+
+// sure says whether the condition of w holds.
+func (w *worker) sure(e *engine) bool { return w.on.s < 0 || e.holds(w.on) }
+
+// build makes the profile and gives its greatest level.
+func (c *worktable) build(e *engine) int32 {
+	c.events = c.events[:0]
+	for i := range c.all {
+		w := &c.all[i]
+		from, to := e.latestStart(&w.user), e.earliestFinish(&w.user)
+		if from >= to || !w.sure(e) {
+			continue
+		}
+		if w.mask == nil {
+			c.events = append(c.events, event{from, w.amount}, event{to, -w.amount})
+			continue
+		}
+		for k := w.mask.find(from); k < len(w.mask) && w.mask[k].from < to; k++ {
+			c.events = append(c.events, event{max(from, w.mask[k].from), w.amount}, event{min(to, w.mask[k].to), -w.amount})
+		}
+	}
+	e.ticks += int64(len(c.all) + len(c.events))
+	sort.Slice(c.events, func(i, j int) bool { return c.events[i].at < c.events[j].at })
+	c.from, c.level = c.from[:0], c.level[:0]
+	used, most := int32(0), int32(0)
+	for i := 0; i < len(c.events); {
+		t := c.events[i].at
+		for ; i < len(c.events) && c.events[i].at == t; i++ {
+			used += c.events[i].by
+		}
+		c.from = append(c.from, t)
+		c.level = append(c.level, used)
+		most = max(most, used)
+	}
+	return most
+}
+
+// run checks the profile and pushes activities out of where it leaves them too little.
+func (c *worktable) run(e *engine) bool {
+	most := c.build(e)
+	if most > c.capacity {
+		k := 0
+		for c.level[k] <= c.capacity {
+			k++
+		}
+		e.clash = c.covers(e, c.from[k], -1, int32(len(e.list)), e.clash[:0])
+		return false
+	}
+	for i := range c.all {
+		w := &c.all[i]
+		if w.amount+most <= c.capacity || w.on.s >= 0 && e.fails(w.on) {
+			continue
+		}
+		switch {
+		case !w.sure(e):
+			if !c.deny(e, int32(i)) {
+				return false
+			}
+		case e.fixed(w.start) && e.fixed(w.finish):
+		case !c.later(e, int32(i)) || !c.earlier(e, int32(i)):
+			return false
+		}
+	}
+	return true
+}
+
+// first gives the first segment that ends after t.
+func (c *worktable) first(t int32) int {
+	return max(0, sort.Search(len(c.from), func(i int) bool { return c.from[i] > t })-1)
+}
+
+// deny takes the condition from worker i if its compulsory part would be too much somewhere.
+func (c *worktable) deny(e *engine, i int32) bool {
+	w := &c.all[i]
+	from, to := e.latestStart(&w.user), e.earliestFinish(&w.user)
+	for k := c.first(from); k < len(c.from)-1 && c.from[k] < to; k++ {
+		e.ticks++
+		if c.level[k]+w.amount <= c.capacity {
+			continue
+		}
+		if t := w.mask.firstFrom(max(from, c.from[k])); t < min(to, c.from[k+1]) {
+			f := w.on.not()
+			return e.raise(f.s, f.v, why{whyRule, c.id, t, i})
+		}
+	}
+	return true
+}
+
+// later raises the earliest start of worker i over the minutes that leave it too little.
+func (c *worktable) later(e *engine, i int32) bool {
+	w := &c.all[i]
+	lst := e.latestStart(&w.user)
+	own := lst < e.earliestFinish(&w.user)
+	for k := c.first(e.now[w.start]); k < len(c.from)-1; k++ {
+		e.ticks++
+		if c.from[k] >= e.earliestFinish(&w.user) || own && c.from[k] >= lst {
+			return true
+		}
+		if c.level[k]+w.amount <= c.capacity {
+			continue
+		}
+		upTo := min(c.from[k+1], e.earliestFinish(&w.user))
+		if own {
+			upTo = min(upTo, lst)
+		}
+		t := w.mask.lastBefore(upTo)
+		if t < max(c.from[k], e.now[w.start]) {
+			continue
+		}
+		if !e.raise(w.start, t+1, why{whyRule, c.id, t, i}) {
+			return false
+		}
+		k-- // a fixed length has moved the finish too: the rest of the segment may be reached
+	}
+	return true
+}
+
+// earlier lowers the latest finish of worker i over the minutes that leave it too little.
+func (c *worktable) earlier(e *engine, i int32) bool {
+	w := &c.all[i]
+	ect := e.earliestFinish(&w.user)
+	own := e.latestStart(&w.user) < ect
+	for k := min(len(c.from)-2, c.first(e.latestFinish(&w.user)-1)); k >= 0; k-- {
+		e.ticks++
+		if c.from[k+1] <= e.latestStart(&w.user) || own && c.from[k+1] <= ect {
+			return true
+		}
+		if c.level[k]+w.amount <= c.capacity {
+			continue
+		}
+		from := max(c.from[k], e.latestStart(&w.user))
+		if own {
+			from = max(from, ect)
+		}
+		t := w.mask.firstFrom(from)
+		if t >= min(c.from[k+1], e.latestFinish(&w.user)) {
+			continue
+		}
+		f := w.finishBy(t)
+		if !e.raise(f.s, f.v, why{whyRule, c.id, t, i}) {
+			return false
+		}
+		k++
+	}
+	return true
+}
+
+// explain gives the activities that leave worker w.who too little at a minute, and that it would
+// be there.
+func (c *worktable) explain(e *engine, f fact, w why, idx int32, out []fact) []fact {
+	u := &c.all[w.who]
+	base := len(out)
+	try := func(t int32, there ...fact) bool {
+		out = append(out[:base], there...)
+		if u.on.s >= 0 && f.s != u.on.s^1 {
+			out = append(out, u.on)
+		}
+		n := len(out)
+		out = c.covers(e, t, w.who, idx, out)
+		return len(out) > n
+	}
+	switch f.s {
+	case u.start:
+		if t := u.mask.firstFrom(f.v - 1); t >= w.at || !try(t, u.finishFrom(t+1)) {
+			try(w.at, u.finishFrom(w.at+1))
+		}
+	case u.finish ^ 1:
+		if t := u.mask.lastBefore(u.length - f.v + 1); t <= w.at || !try(t, u.startBy(t)) {
+			try(w.at, u.startBy(w.at))
+		}
+	default:
+		try(w.at, u.startBy(w.at), u.finishFrom(w.at+1))
+	}
+	return out
+}
+
+// covers adds the facts by which workers other than skip use so much at t that they leave too
+// little for skip, as things were before entry idx.
+func (c *worktable) covers(e *engine, t, skip, idx int32, out []fact) []fact {
+	spare := -c.capacity - 1
+	if skip >= 0 {
+		spare += c.all[skip].amount
+	}
+	c.cover = c.cover[:0]
+	for k := range c.all {
+		w := &c.all[k]
+		a, b := w.startBy(t), w.finishFrom(t+1)
+		if int32(k) == skip || !w.mask.has(t) || e.before(a.s, idx) < a.v || e.before(b.s, idx) < b.v {
+			continue
+		}
+		last := max(e.entry(a), e.entry(b))
+		if w.on.s >= 0 {
+			if e.before(w.on.s, idx) < w.on.v {
+				continue
+			}
+			last = max(last, e.entry(w.on))
+		}
+		spare += w.amount
+		c.cover = append(c.cover, covering{int32(k), w.amount, last})
+	}
+	if spare < 0 {
+		return out
+	}
+	sort.SliceStable(c.cover, func(i, j int) bool { return c.cover[i].last > c.cover[j].last })
+	for _, k := range c.cover {
+		if k.amount <= spare && e.list[k.last].level > 0 {
+			spare -= k.amount
+			continue
+		}
+		w := &c.all[k.user]
+		out = append(out, w.startBy(t), w.finishFrom(t+1))
+		if w.on.s >= 0 {
+			out = append(out, w.on)
+		}
+	}
+	return out
+}
