@@ -270,6 +270,11 @@ func (r *rower) user(res, i int) int {
 // earliest gives the earliest start of i, all else in place, with the limits left out.
 func (r *rower) earliest(i int, limits []limit) int {
 	links := linkSkip{links: map[int]bool{}, orders: map[int]bool{}}
+	for _, k := range r.g.from[i] { // standing time moves along with the step before it
+		if ownStanding(r.p, &r.p.Links[k]) {
+			links.links[k] = true
+		}
+	}
 	skip := skipper{persons: map[int]bool{}, resources: map[int]bool{}, pairs: map[int]bool{}}
 	clock := false
 	for _, l := range limits {
