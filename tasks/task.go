@@ -88,6 +88,7 @@ type Task struct {
 	Count     int      // holes or tacks: cut
 	Dwell     Amount   // minutes, as the test's procedure says: test
 	Pressure  Amount   // bar: test
+	Warm      Amount   // °C of the steel: test; else that of the place
 	Surface   []string // surface prep, coat: assemblies or assembly/part
 	Area      Amount   // m2: overrules the surface
 	Grade     string   // surface prep, coat

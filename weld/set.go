@@ -1,6 +1,7 @@
 package weld
 
 import (
+	"maps"
 	"math"
 
 	"sailby/tasks/origin"
@@ -63,6 +64,34 @@ func (p Procedure) volts(d process, current origin.Figure) origin.Figure {
 	f := origin.Recalled("volts", a+b*current.Value, "V", "IEC 60974-1 load voltage "+origin.Trim(a)+" + "+origin.Trim(b)+" x current")
 	f.From = []origin.Figure{current}
 	return f
+}
+
+// SetFrom takes over the welding set and the cables of q where p has none.
+func (p *Procedure) SetFrom(q Procedure) {
+	mine := map[string]bool{"welding cable": p.Cable.Length > 0, "supply cable": p.Supply.Length > 0}
+	set := p.Set.RatedCurrent > 0
+	for _, name := range []string{"rated current", "duty cycle", "most current", "set efficiency", "power factor"} {
+		mine[name] = set
+	}
+	if !set {
+		p.Set = q.Set
+	}
+	if !mine["welding cable"] {
+		p.Cable = q.Cable
+	}
+	if !mine["supply cable"] {
+		p.Supply = q.Supply
+	}
+	origins := maps.Clone(p.Origins)
+	if origins == nil {
+		origins = map[string]origin.Origin{}
+	}
+	for name, o := range q.Origins {
+		if !mine[name] {
+			origins[name] = o
+		}
+	}
+	p.Origins = origins
 }
 
 // InputPower gives the kilowatts that the set takes at an arc of volts and current.

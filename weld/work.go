@@ -68,6 +68,7 @@ type SeamEstimate struct {
 	Title     string // "8 mm fillet PB, 136 flux-cored"
 	Section   Section
 	Position  Position
+	Process   Process
 	Length    float64 // mm welded, one side
 	Metal     float64 // kg
 	Passes    int     // all sides

@@ -30,9 +30,11 @@ type hands struct {
 	safe             float64
 	least            float64
 	people           int
+	welders          int     // of the people of a weld: the metal is shared by them
 	power            float64 // kVA, where no kit says
 	hot, noisy, grit bool
 	est              Estimate
+	warnings         []string // of the notes, those that tell of something to change
 	fault            error
 	hint             string
 }

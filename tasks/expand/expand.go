@@ -39,6 +39,7 @@ func Expand(job *tasks.Job, b Basis) (*Work, tasks.Faults) {
 	for i, s := range w.Steps {
 		s.Index = i
 	}
+	x.notes()
 	return w, nil
 }
 

@@ -9,10 +9,15 @@ import (
 func (x *expander) needs(t *tasks.Task, h hands) []tasks.Need {
 	var out []tasks.Need
 	count := 0
+	anybody := func(n tasks.Need) bool { return n.Who == nil && n.Ticket.Name == "" && len(n.Also) == 0 }
 	add := func(n tasks.Need) {
-		if n.Count > 0 {
+		count += n.Count
+		switch last := len(out) - 1; {
+		case n.Count == 0:
+		case last >= 0 && anybody(n) && anybody(out[last]):
+			out[last].Count += n.Count
+		default:
 			out = append(out, n)
-			count += n.Count
 		}
 	}
 	switch {
@@ -20,7 +25,7 @@ func (x *expander) needs(t *tasks.Task, h hands) []tasks.Need {
 		for _, n := range t.Needs {
 			add(n)
 		}
-	case t.Kind == tasks.Weld && len(t.Seams) > 0:
+	case t.Kind == tasks.Weld && len(t.Welds()) > 0:
 		first, also := x.welders(t)
 		n := tasks.Need{Ticket: first, Also: also, Count: max(1, h.people, len(t.Who)), Pos: t.Pos}
 		if t.Who != nil {
@@ -43,7 +48,7 @@ func (x *expander) needs(t *tasks.Task, h hands) []tasks.Need {
 // welders gives the tickets that one welder must hold for all seams of a task.
 func (x *expander) welders(t *tasks.Task) (first tasks.Ticket, also []tasks.Ticket) {
 	e := x.welded[t]
-	for i, s := range t.Seams {
+	for i, s := range t.Welds() {
 		n := tasks.Ticket{Name: tasks.WeldTicket, ThickFrom: s.Joint.Thickness, ThickTo: s.Joint.Thickness}
 		if i < len(e.Seams) {
 			n.Positions = []string{e.Seams[i].Position.String()}

@@ -268,7 +268,11 @@ func (x *expander) test(t *tasks.Task) hands {
 	}
 	length := 0.0
 	for _, l := range t.Links {
-		if w := x.byName[l.Task]; w != nil && w.Kind == tasks.Weld {
+		w := x.byName[l.Task]
+		if w != nil && w.Repairs != nil && !x.absent[w] {
+			length += x.repairLength(w)
+		}
+		if w != nil && w.Kind == tasks.Weld {
 			for _, s := range w.Seams {
 				length += s.Joint.Length
 			}
@@ -282,7 +286,16 @@ func (x *expander) test(t *tasks.Task) hands {
 		h.hint = "put it after a weld with joints, or give length: 2 m, or hours"
 		return h
 	}
-	l, err := weld.Test{Method: method, Length: length, Temperature: notZero(x.steel(t.Place)), Site: x.atSite(t), Origin: t.Length.Pos.Origin("")}.Work()
+	at := t.Length.Pos.Origin("")
+	if t.Dwell.Pos.Given() {
+		at = t.Dwell.Pos.Origin("")
+	}
+	celsius := x.steel(t.Place)
+	if t.Warm.Pos.Given() {
+		celsius = t.Warm.Value
+	}
+	l, err := weld.Test{Method: method, Length: length, Temperature: notZero(celsius), Dwell: t.Dwell.Value, Pressure: t.Pressure.Value,
+		Site: x.atSite(t), Origin: at}.Work()
 	if err != nil {
 		return h.failed(err)
 	}

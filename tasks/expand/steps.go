@@ -66,6 +66,7 @@ func (x *expander) handsStep(t *tasks.Task, name string, h hands) *Step {
 	s.HandsOn = x.value(h.minutes)
 	s.Working = face(float64(s.HandsOn))
 	s.Estimate = h.est
+	s.welders, s.warnings = h.welders, h.warnings
 	s.Estimate.Figure = origin.Worked("working time", float64(s.Working), "min", "hands-on time over face factor, rounded up",
 		h.est.Figure, factor)
 	if s.HandsOn == 0 {
@@ -77,6 +78,10 @@ func (x *expander) handsStep(t *tasks.Task, name string, h hands) *Step {
 	x.hotWork(t, s)
 	for _, n := range s.Needs {
 		s.Room += n.Count
+	}
+	if f := t.Face; f != nil && f.People > 0 && s.Room > f.People {
+		x.fault(t.Pos, "fewer people, or more room in the workface's `people`",
+			"task %q: %d people at work in %s/%s, which has room for %d (%d too many)", t.Name, s.Room, t.Place.Name, f.Name, f.People, s.Room-f.People)
 	}
 	x.kit(t, s, h)
 	x.statesOf(t, s, h)
@@ -200,11 +205,11 @@ const DefaultWatch = 60
 // kit sets what the step uses, and the power it draws.
 func (x *expander) kit(t *tasks.Task, s *Step, h hands) {
 	use := append([]tasks.Use(nil), t.Kit...)
-	for _, seam := range t.Seams {
+	for _, seam := range t.Welds() {
 		for _, p := range x.w.Job.Procedures {
 			if p.Name == seam.Procedure && p.Kit != "" {
 				if k := x.kitNamed(p.Kit); k != nil && !uses(use, k) {
-					use = append(use, tasks.Use{Kit: k, Count: max(1, h.people), Pos: p.Pos})
+					use = append(use, tasks.Use{Kit: k, Count: max(1, h.welders), Pos: p.Pos})
 				}
 			}
 		}
@@ -323,7 +328,7 @@ func (x *expander) afterWeld(t *tasks.Task, main *Step) {
 		x.tie(main, s, "cooling")
 		x.states[name+" / cooled"], x.states[name+" / ready for NDT"] = s, s
 	}
-	if e.BeforeNDT > e.Cooling && x.tested(t) { // the longer of the two is waited for
+	if e.BeforeNDT > e.Cooling && (t.Repairs != nil || x.tested(t)) { // the longer of the two is waited for
 		s := x.clock(t, "hold before NDT", e.BeforeNDT.Whole(), e.Why.BeforeNDT)
 		x.tie(main, s, "hold before NDT")
 		x.states[name+" / ready for NDT"] = s
@@ -332,11 +337,11 @@ func (x *expander) afterWeld(t *tasks.Task, main *Step) {
 
 func (x *expander) tested(t *tasks.Task) bool {
 	for _, u := range x.w.Job.Tasks {
-		if u.Kind != tasks.Test || x.absent[u] {
+		if x.absent[u] {
 			continue
 		}
 		for _, l := range u.Links {
-			if l.Task == t.Name {
+			if l.Task == t.Name && (u.Kind == tasks.Test && (l.State == "" || l.State == "ready for NDT") || l.State == "ready for NDT") {
 				return true
 			}
 		}

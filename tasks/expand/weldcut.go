@@ -11,51 +11,6 @@ import (
 	"sailby/weld"
 )
 
-// weld estimates a weld task: its seams one after the other, shared by its welders.
-func (x *expander) weld(t *tasks.Task) hands {
-	h := hands{people: max(1, x.crewSize(t)), hot: true, least: leastPiece}
-	if t.People > 0 {
-		h.people = t.People
-	}
-	if len(t.Seams) == 0 {
-		h.fault = fmt.Errorf("it has no joints and no hours")
-		h.hint = "list its joints, for instance joints: [{fillet: {leg: 6 mm}, length: 2 m, position: PB}], or give hours"
-		return h
-	}
-	seams := make([]weld.Seam, len(t.Seams))
-	for i, s := range t.Seams {
-		seams[i] = s.Seam
-	}
-	e, err := weld.Work(seams, weld.Circumstances{
-		Site: x.atSite(t), Ambient: notZero(x.steel(t.Place)), Execution: x.w.Job.Execution,
-		Steel: weld.Steel{Grade: x.grade(t)}, FittedUp: x.fittedUp(t),
-	})
-	if err != nil {
-		return h.failed(err)
-	}
-	n := float64(h.people)
-	h.minutes = spread(float64(e.HandsOn) / n)
-	h.setUp, h.safe = float64(e.SetUp), float64(e.SafeStop)
-	h.power = e.Power * n
-	h.est.Figure = e.Hours
-	if h.people > 1 {
-		h.est.Figure = origin.Worked("hands-on time", float64(e.HandsOn)/n, "min", "time of one welder over the welders",
-			e.Hours, origin.Written("welders", n, "", t.Pos.Origin("people")))
-	}
-	h.est.Notes = e.Warnings
-	for _, c := range e.Consumables {
-		h.est.Consumables = append(h.est.Consumables, Consumable{What: c.Name, Amount: c.Amount, Unit: c.Unit, Spare: c.Spare})
-	}
-	for _, f := range []origin.Figure{e.Why.Metal, e.Why.Arc, e.Why.Passes, e.Why.HeatInput, e.Why.Preheat, e.Why.SetUp,
-		e.Why.SafeStop, e.Why.Cooling, e.Why.BeforeNDT, e.Why.Power} {
-		if f.Name != "" {
-			h.est.Facts = append(h.est.Facts, f)
-		}
-	}
-	x.welded[t] = e
-	return h
-}
-
 // grade gives the steel that a weld joins: that of the first assembly named, else the job's.
 func (x *expander) grade(t *tasks.Task) string {
 	for _, name := range t.Parts {
@@ -122,7 +77,7 @@ func (x *expander) saw(t *tasks.Task, h hands) hands {
 // nature of a way to cut: whether it throws sparks, and whether it is loud.
 func cutNature(by string) (hot, noisy bool) {
 	switch by {
-	case "saw", "shear", "drill", "water jet":
+	case "saw", "shear", "drill", "water jet", "bevel by machine":
 		return false, true
 	case "oxy-fuel":
 		return true, false
@@ -141,6 +96,9 @@ func (x *expander) cut(t *tasks.Task) hands {
 	if t.Hours.Pos.Given() || t.ManHours.Pos.Given() {
 		return h
 	}
+	if weld.IsActivity(by) {
+		return x.prepareJob(t, h)
+	}
 	t, plates := x.plates(t)
 	if !plates && (!t.Thickness.Pos.Given() || !t.Length.Pos.Given()) {
 		h.fault = fmt.Errorf("it needs length and thickness, or hours")
@@ -156,12 +114,13 @@ func (x *expander) cut(t *tasks.Task) hands {
 		return x.saw(t, h)
 	}
 	l, err := weld.Cut{Method: by, Thickness: t.Thickness.Value, Length: t.Length.Value, Site: x.atSite(t),
-		Origin: t.Length.Pos.Origin("")}.Work()
+		Bevel: t.Bevel.Value, Pierces: t.Pierces, Current: t.Current.Value, Speed: t.Speed.Value, Origin: t.Length.Pos.Origin("")}.Work()
 	if err != nil {
 		return h.failed(err)
 	}
 	h.minutes = spread(float64(l.HandsOn))
 	h.est.Figure, h.est.Notes = l.Hours, l.Warnings
+	h.warnings = l.Warnings
 	return h
 }
 

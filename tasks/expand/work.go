@@ -47,6 +47,7 @@ type Work struct {
 	Presence  map[string][]Stay       // by person: where they are, disjoint, in order; stays at home places have Place nil
 	Travel    map[string][]hours.Span // by person: legs of the trip, which count as duty
 	Deadlines []Deadline
+	Notes     []tasks.Note // what is worth saying that is no fault
 }
 
 // Window is when the site can be worked.
@@ -113,6 +114,9 @@ type Step struct {
 	Absent    bool         // a maybe that does not happen on this basis
 
 	Estimate Estimate
+
+	welders  int      // of a weld: who shares the metal
+	warnings []string // of its notes, those that tell of something to change
 }
 
 // Use is so many of a kit, held through pauses if Stays.
@@ -145,6 +149,8 @@ type Consumable struct {
 	Amount float64
 	Unit   string
 	Spare  float64
+	Each   float64 // how much of Unit one package holds; 0 where that is not known
+	Packed string  // what the packages are: "spools of 15 kg", "bottles of 10 m3", "electrodes"
 }
 
 // Link is a wait between two ends of steps. A nil From is the start of the plan.

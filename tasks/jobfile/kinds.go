@@ -84,6 +84,7 @@ var (
 		with(byKey, "magnetic particle", "visual, dye penetrant, magnetic particle, ultrasonic, leak, load, or another method with hours"),
 		with(lengthKey, "1.9 m", "length of seam tested"), partKey,
 		{name: "dwell", takes: anAmount, dim: quantity.Time, low: 1, high: 1440, usual: "by method; penetrant doubled below 10 C", example: "30 min", says: "time that penetrant stands or pressure is held, as a written procedure says; then penetrant is also used below 5 C"},
+		{name: "steel temperature", takes: anAmount, dim: quantity.Temperature, low: -40, high: 150, usual: "that of the place", example: "15 C", says: "of the steel, warmed for the test"},
 		{name: "pressure", takes: anAmount, dim: quantity.Pressure, low: 0.01, high: 100, usual: "air 0.15 bar, at most 0.2; hose at least 2 bar", example: "0.15 bar", says: "of an air or hose test"},
 	}}
 	moveKeys = section{name: "Move", where: "tasks / NAME of kind move", host: "tasks/to the gate", says: "a move", more: &taskSection, keys: []key{
@@ -159,7 +160,7 @@ func (r *reader) byKind(t *tasks.Task, f *fields) {
 	case tasks.Lift:
 		t.Radius = f.amount("radius", 0)
 	case tasks.Test:
-		t.Dwell, t.Pressure = f.amount("dwell", 0), f.amount("pressure", 0)
+		t.Dwell, t.Pressure, t.Warm = f.amount("dwell", 0), f.amount("pressure", 0), f.amount("steel temperature", 0)
 	case tasks.FitUp:
 		t.Joints = f.count("joints", 0)
 	case tasks.Move:

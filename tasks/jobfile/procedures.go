@@ -90,7 +90,7 @@ func (r *reader) procedure(name string, at *yaml.Node, f *fields) *tasks.Procedu
 	}
 	f.setOf(&p.Procedure)
 	if k := r.kitOf[p.Kit]; k != nil {
-		setFrom(&p.Procedure, k.Set)
+		p.SetFrom(k.Set)
 	}
 	r.byPerson(p, f)
 	return p

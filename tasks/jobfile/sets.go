@@ -70,27 +70,6 @@ func (f *fields) cable(name string, c *weld.Cable, origins map[string]origin.Ori
 	}
 }
 
-// setFrom takes over the set and the cables of q where p has none.
-func setFrom(p *weld.Procedure, q weld.Procedure) {
-	had := p.Set.RatedCurrent > 0
-	if !had {
-		p.Set = q.Set
-	}
-	cable, supply := p.Cable.Length > 0, p.Supply.Length > 0
-	if !cable {
-		p.Cable = q.Cable
-	}
-	if !supply {
-		p.Supply = q.Supply
-	}
-	for name, o := range q.Origins {
-		if name == "welding cable" && cable || name == "supply cable" && supply || name != "welding cable" && name != "supply cable" && had {
-			continue
-		}
-		p.Origins[name] = o
-	}
-}
-
 // byPersonSection has the keys of a procedure that a person's hand makes other.
 var byPersonSection = section{name: "By person", where: "procedures / NAME / by person / NAME", host: "procedures/site fillet/by person/Ines", says: "What is another for one person; the rest is as in the procedure."}
 
