@@ -61,7 +61,7 @@ func (f *fields) names(name string) []ref {
 		s, ok := f.r.text(n, f.lead(name), f.key(name).example)
 		switch {
 		case !ok:
-		case seen[s] && name != "coats":
+		case seen[s] && name != "coats" && name != "workfaces":
 			f.r.fault(n, "name it once", "%s%s stands twice", f.lead(name), short(s))
 		default:
 			seen[s] = true

@@ -11,6 +11,7 @@ import (
 var blockSection = section{name: "Repeat", where: "repeat / NAME", host: "repeat/bay", says: "Work that is done several times. Task `cut` of round 2 of block `bay` is `cut bay 2`. Inside the block `cut` means the same round and `previous cut` the round before; outside write `cut bay 2` or `every cut bay`.", keys: []key{
 	{name: "count", takes: aCount, low: 1, high: 500, need: true, example: "3", says: "how many rounds"},
 	{name: "first times", takes: itsOwn, form: "list of factors", shape: anyList, usual: "[1]", example: "[1.5, 1.2, 1]", says: "how much longer the first rounds take; the last factor holds on"},
+	{name: "workfaces", takes: names, usual: "none", example: "[hinge, deck, hinge]", says: "one for each round: tasks of the block that are at a place without a workface are in that of their round, if the place has it"},
 	{name: "tasks", takes: namedOf, sub: &taskSection, need: true, example: "{grind: {at: pier, hours: 1 h}}", says: "the tasks of a round"},
 }}
 
@@ -58,7 +59,7 @@ func (r *reader) readRepeat(f *fields) {
 			}
 		}
 		r.blocks = append(r.blocks, b)
-		r.writeOut(b, round, factors)
+		r.writeOut(b, round, factors, g.roundFaces(b, round))
 	}
 }
 
@@ -73,8 +74,38 @@ func (f *fields) factors(name string) []float64 {
 	return out
 }
 
+// roundFaces reads the workfaces of the rounds: as many as there are rounds, each at the place
+// of some task of the block.
+func (f *fields) roundFaces(b *block, round []*draft) []string {
+	var out []string
+	for _, name := range f.names("workfaces") {
+		known := map[string]bool{}
+		var list []string
+		for _, d := range round {
+			if d.t.Place == nil {
+				continue
+			}
+			for _, w := range d.t.Place.Workfaces {
+				if !known[w.Name] {
+					known[w.Name] = true
+					list = append(list, w.Name)
+				}
+			}
+		}
+		if !known[name.text] {
+			f.r.faultAt(name.pos, f.r.among(name.text, list, "declare it under `workfaces` of the place"), "%sno workface is called %s at the places of the block", f.lead("workfaces"), short(name.text))
+		}
+		out = append(out, name.text)
+	}
+	if len(out) > 0 && len(out) != b.count {
+		f.fault("workfaces", "name one for each round, in order", "%d workfaces for %d rounds", len(out), b.count)
+		return nil
+	}
+	return out
+}
+
 // writeOut adds the rounds of a block, one after the other.
-func (r *reader) writeOut(b *block, round []*draft, factors []float64) {
+func (r *reader) writeOut(b *block, round []*draft, factors []float64, faces []string) {
 	for n := 1; n <= b.count; n++ {
 		for _, d := range round {
 			t := *d.t
@@ -82,6 +113,13 @@ func (r *reader) writeOut(b *block, round []*draft, factors []float64) {
 			t.Block, t.Round = b.name, n
 			if t.Title != "" {
 				t.Title = fmt.Sprintf("%s, %s %d", t.Title, b.name, n)
+			}
+			if t.Face == nil && t.Place != nil && len(faces) > 0 {
+				for _, w := range t.Place.Workfaces {
+					if w.Name == faces[n-1] {
+						t.Face = w
+					}
+				}
 			}
 			if len(factors) > 0 {
 				t.Factor = factors[min(n, len(factors))-1]
