@@ -105,7 +105,7 @@ func TestWeldsAreEstimatedWithTheirCircumstances(t *testing.T) {
 			face = 0.7
 		}
 		same(t, tc.what, []int{s.HandsOn, s.Working, s.SetUp, s.SafeStop}, []int{up(float64(e.HandsOn) / tc.people),
-			up(float64(up(float64(e.HandsOn)/tc.people)) / face), up(float64(e.SetUp) / face), min(s.Working, up(float64(e.SafeStop)/face))})
+			up(float64(up(float64(e.HandsOn)/tc.people)) / face), up(float64(e.SetUp) / face), min(s.Working, up(float64(e.SafeStop)/tc.people/face))})
 		if want := e.Power * tc.people; math.Abs(s.Power-want) > 1e-9 {
 			t.Errorf("%s: draws %g kVA, want %g", tc.what, s.Power, want)
 		}
