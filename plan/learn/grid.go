@@ -13,10 +13,10 @@ type grid struct {
 	from, upto, ends []int32
 }
 
-// newGrid writes out w for starts from 0 on with finishes up to end. Work on a calendar loses
-// a worked minute with each later start, so that its finish rises by at least one: where it rises
-// by k in k minutes it rises by one in each, and a stretch can be found by doubling. O(stretches x
-// log length) calls of the timing; a film costs one for each minute.
+// newGrid writes out w for starts from 0 on with finishes up to end. Within a span, work on a
+// calendar loses a worked minute with each later start, so that its finish rises by at least one:
+// where it rises by k in k minutes it rises by one in each, and a stretch can be found by doubling.
+// O(stretches x log length) calls of the timing; a film costs one for each minute.
 func newGrid(w *problem.Timing, end int) *grid {
 	g := &grid{}
 	for s := w.Start(0); s <= end; {
@@ -24,9 +24,15 @@ func newGrid(w *problem.Timing, end int) *grid {
 		if f > end {
 			break
 		}
-		same := func(k int) bool { return s+k <= end && w.Start(s+k) == s+k && w.Finish(s+k) == f+k && f+k <= end }
+		stop := end // last start of the same span
+		if cal := w.Calendar(); len(cal) > 0 {
+			if i := sort.Search(len(cal), func(i int) bool { return int(cal[i].To) > s }); i < len(cal) {
+				stop = int(cal[i].To) - 1
+			}
+		}
+		same := func(k int) bool { return s+k <= stop && w.Start(s+k) == s+k && w.Finish(s+k) == f+k && f+k <= end }
 		k, jump := 0, 1
-		if w.Calendar() == nil && !(same(1) && isFixed(w)) {
+		if w.Calendar() == nil && !isFixed(w) {
 			for same(k + 1) {
 				k++
 			}
