@@ -50,7 +50,7 @@ func runBrowse(ctx context.Context, o *browseOptions, st streams, args []string)
 	p := &planner{globals: o.globals, path: jobPath(args[0])}
 	tried, err := screen.Run(ctx, r, p, screen.Options{Screen: o.screen, NoColour: os.Getenv("NO_COLOR") != ""})
 	if errors.Is(err, screen.ErrNoTerminal) {
-		return &advice{err, noTerminal}
+		return &advice{screen.ErrNoTerminal, noTerminal}
 	}
 	if err != nil {
 		return err

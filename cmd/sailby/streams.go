@@ -52,5 +52,5 @@ func (st streams) progress() (show func(string), done func()) {
 	if !st.errTerm {
 		return nil, func() {}
 	}
-	return func(text string) { fmt.Fprintf(st.err, "\r\x1b[K%.70s", text) }, func() { fmt.Fprint(st.err, "\r\x1b[K") }
+	return func(text string) { fmt.Fprintf(st.err, "\r\x1b[Kworking on %.60s ...", text) }, func() { fmt.Fprint(st.err, "\r\x1b[K") }
 }

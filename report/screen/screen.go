@@ -48,7 +48,7 @@ func Run(ctx context.Context, r *plan.Report, p Planner, o Options) (tried []str
 	}
 	ctx, cancel := context.WithCancel(ctx)
 	d := &driver{ctx: ctx, m: model.New(r), planner: p, app: tview.NewApplication()}
-	d.app.SetScreen(s).EnablePaste(true).SetRoot(newView(d.m, !o.NoColour, d.do), true)
+	d.app.SetScreen(started{s}).EnablePaste(true).SetRoot(newView(d.m, !o.NoColour, d.do), true)
 	d.app.SetInputCapture(func(e *tcell.EventKey) *tcell.EventKey {
 		if e.Key() == tcell.KeyCtrlC { // tview would stop by itself
 			d.do(d.m.Press(model.Key{Code: model.Away}))
@@ -73,6 +73,13 @@ func Run(ctx context.Context, r *plan.Report, p Planner, o Options) (tried []str
 	d.wait.Wait()
 	return d.m.Tried(), err
 }
+
+// started is a screen that has been started: tview starts the one it is given once more, and does
+// not look at the error; a terminal started twice has two sizes.
+type started struct{ tcell.Screen }
+
+// Init does nothing.
+func (started) Init() error { return nil }
 
 // driver runs what the keys ask for. Its methods are called on tview's goroutine unless they say
 // otherwise.

@@ -228,7 +228,7 @@ func TestWhatIf(t *testing.T) {
 	u.see("trying orders of work")
 	u.write("2") // the screen answers while it plans
 	u.see("The days: 5 of 8")
-	u.see("planning again: trying orders of work")
+	u.see("planning again (trying orders of work)")
 	u.write("5")
 	u.see("Esc stops it")
 	u.press(tcell.KeyEscape)
@@ -297,6 +297,28 @@ func TestNoPlanner(t *testing.T) {
 	u.see("there is nothing here to plan with")
 	u.press(tcell.KeyCtrlC)
 	u.left()
+}
+
+// counted is a screen that counts its starts.
+type counted struct {
+	tcell.SimulationScreen
+	starts int
+}
+
+func (c *counted) Init() error {
+	c.starts++
+	return c.SimulationScreen.Init()
+}
+
+// TestStartedOnce: a terminal that is started twice keeps the size that its description gives, and
+// is never drawn to the end in another.
+func TestStartedOnce(t *testing.T) {
+	s := &counted{SimulationScreen: tcell.NewSimulationScreen("UTF-8")}
+	ctx, cancel := context.WithTimeout(t.Context(), 20*time.Millisecond)
+	defer cancel()
+	if _, err := Run(ctx, fixture.Report(), nil, Options{Screen: s}); err != nil || s.starts != 1 {
+		t.Errorf("%d starts, %v", s.starts, err)
+	}
 }
 
 // broken is a screen that cannot be opened.

@@ -128,7 +128,7 @@ func (m *Model) status(n int) Row {
 // news is what the lower rule says: a run that goes on, or rows out of sight.
 func (m *Model) news() string {
 	if m.what.running {
-		return "planning again: " + m.what.progress + " (Esc on page 5 stops it)"
+		return "planning again (" + m.what.progress + "); Esc on page 5 stops it"
 	}
 	return m.top().place().more()
 }

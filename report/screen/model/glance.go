@@ -2,6 +2,7 @@ package model
 
 import (
 	"fmt"
+	"strings"
 
 	"sailby/plan"
 	"sailby/report/agenda"
@@ -41,8 +42,10 @@ func (p *glancePage) lay(n int) ([]Row, []line) {
 	out = append(out, windowStrip(a, m.shifts(), n)...)
 	out = append(out, line{})
 	out = append(out, sideBySide(m.shown, m.shown == m.tried, n)...)
-	out = append(out, line{})
-	out = append(out, p.deadlines(a, n)...)
+	if len(a.Deadlines) > 0 {
+		out = append(out, line{})
+		out = append(out, p.deadlines(a, n)...)
+	}
 	if a.Proof != nil {
 		out = append(out, line{})
 		out = append(out, proofLines(a, n)...)
@@ -102,9 +105,6 @@ func sideBySide(r *plan.Report, only bool, n int) []line {
 
 // deadlines is the table of deadlines; Enter opens the task.
 func (p *glancePage) deadlines(a *plan.Answer, n int) []line {
-	if len(a.Deadlines) == 0 {
-		return nil
-	}
 	name := max(n-3*18, 16)
 	widths := []int{name, 18, 18}
 	out := []line{{columns(n, widths, "Deadlines", "must be done by", "planned finish", "in hand"), Head, nil}}
@@ -136,15 +136,15 @@ func proofLines(a *plan.Answer, n int) []line {
 	}
 	for _, l := range a.Proof.Lines {
 		s := l.Text
-		if l.Minutes != 0 {
-			s += ", " + quantity.Hours(l.Minutes)
+		if n := quantity.Hours(l.Minutes); l.Minutes != 0 && !strings.Contains(s, n) {
+			s += ", " + n
 		}
 		if !l.Needed {
 			s += " [not shown to be needed]"
 		}
 		out = append(out, para(n, "- ", s+inFile(agenda.At(l.Pos)), Plain, nil)...)
 	}
-	if a.Proof.Over > 0 {
+	if a.Proof.Over > 0 && !strings.Contains(a.Proof.Summary, quantity.Hours(a.Proof.Over)) {
 		out = append(out, line{text: fmt.Sprintf("Together %s more than there is.", quantity.Hours(a.Proof.Over))})
 	}
 	return out

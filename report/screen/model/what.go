@@ -71,7 +71,7 @@ func (p *whatPage) outcome(n int) []line {
 	var faults tasks.Faults
 	switch {
 	case p.running:
-		return para(n, "", "Planning again: "+p.progress+" ... Esc stops it.", Plain, nil)
+		return para(n, "", "Planning again ("+p.progress+") ... Esc stops it.", Plain, nil)
 	case errors.As(p.err, &faults):
 		out := []line{{"The job with these changes has a fault", Head, nil}}
 		for _, f := range faults {
