@@ -124,20 +124,12 @@ func (a *asked) bound(loads []*solve.Load) {
 func (a *asked) find(explain bool) error {
 	a.say("plans")
 	a.carry = problem.Compile(a.work.Carry())
-	for i := range a.carry.Acts {
-		if len(a.carry.Acts[i].Modes) == 0 { // cannot even be done late
-			a.onCarry(func(c *asked) *plan.Proof { return c.noOpening(i) })
-			return nil
+	b, ok := undated(a.carry)
+	if !ok { // home work that follows the site's: with the hours carried on nobody comes home to do it
+		a.carry = a.p
+		if b, ok = undated(a.p); !ok {
+			return nil // cannot even be done late
 		}
-	}
-	free := network.Off{By: map[int]bool{}}
-	for i := range a.carry.Acts {
-		free.By[i] = true
-	}
-	b, conflict := network.Propagate(a.carry, free)
-	if conflict != nil {
-		a.onCarry(func(c *asked) *plan.Proof { return c.chain(conflict) })
-		return nil
 	}
 	bound := int(a.out.Bound - a.p.Base)
 	o := solve.Options{Ticks: a.o.ticks(len(a.carry.Acts)), Stop: a.stop, Seed: a.o.Seed, Good: func(s solve.Score) bool {
@@ -153,6 +145,17 @@ func (a *asked) find(explain bool) error {
 			res = again
 		}
 	}
+	if a.carry != a.p && a.out.Proof == nil && (res.Best == nil || res.Best.Score.Late > 0) && a.homeAfter() && !a.stop() {
+		a.say("plans with home work after the window")
+		if b, ok := undated(a.p); ok {
+			home := solve.Find(a.p, b, o)
+			home.Ticks += res.Ticks
+			if home.Best != nil && home.Best.Score.Late == 0 {
+				a.carry = a.p
+				res = home
+			}
+		}
+	}
 	a.out.Steps, a.out.CutShort = res.Ticks, a.stop()
 	if res.Best == nil {
 		return nil
@@ -160,14 +163,28 @@ func (a *asked) find(explain bool) error {
 	return a.keep(solve.Compact(a.carry, res.Best), explain)
 }
 
-// onCarry keeps a proof from the problem carried on past the window, where nothing fits however
-// late it may be, if there is no proof yet.
-func (a *asked) onCarry(prove func(c *asked) *plan.Proof) {
-	if a.out.Proof == nil {
-		c := *a
-		c.p = a.carry
-		a.out.Proof = prove(&c)
+// undated gives the bounds of a problem without its deadlines; ok is false where it cannot be
+// done however late.
+func undated(p *problem.Problem) (b network.Bounds, ok bool) {
+	free := network.Off{By: map[int]bool{}}
+	for i := range p.Acts {
+		if len(p.Acts[i].Modes) == 0 {
+			return b, false
+		}
+		free.By[i] = true
 	}
+	b, conflict := network.Propagate(p, free)
+	return b, conflict == nil
+}
+
+// homeAfter says whether there is work at home that may be done after the window.
+func (a *asked) homeAfter() bool {
+	for i := range a.p.Acts {
+		if act := &a.p.Acts[i]; act.Home && act.By > a.p.Close {
+			return true
+		}
+	}
+	return false
 }
 
 // keep has a schedule checked and fills the answer from it.
