@@ -3,6 +3,7 @@ package main
 import (
 	"context"
 	"encoding/csv"
+	"errors"
 	"fmt"
 	"io"
 	"os"
@@ -98,7 +99,7 @@ func solve(ctx context.Context, path string, o settings, f *folder) (*row, error
 // judge checks the plan against the file and the answer against what is known.
 func (r *row) judge(in *instance.Instance, starts []int) {
 	if starts != nil {
-		if err := in.Check(starts); err != nil {
+		if err := errors.Join(in.Check(starts), in.CheckAsJob(starts)); err != nil {
 			r.wrong = err.Error()
 			return
 		}
