@@ -36,7 +36,6 @@ func (x *expander) coatSteps(t *tasks.Task) {
 	}
 	if len(t.Coats) == 0 {
 		x.fault(t.Pos, "write for instance coats: [primer]", "task %q: it has no coats", t.Name)
-		x.step(t, "coat 1")
 	}
 }
 

@@ -200,3 +200,12 @@ func same(t *testing.T, what string, got, want any) {
 		t.Errorf("%s:\n got  %s\n want %s", what, g, w)
 	}
 }
+
+func hoursZone(t *testing.T) *time.Location {
+	t.Helper()
+	z, err := time.LoadLocation("Europe/London")
+	if err != nil {
+		t.Fatal(err)
+	}
+	return z
+}

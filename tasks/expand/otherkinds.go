@@ -204,7 +204,7 @@ func (x *expander) fitUp(t *tasks.Task) hands {
 	for _, name := range t.Parts {
 		m, err := x.massOf(name)
 		if err != nil {
-			h.fault = err
+			h.fault, h.hint = err, "declare it under assemblies, or give hours"
 			return h
 		}
 		kg += m.Mass

@@ -367,7 +367,7 @@ func (x *expander) deadlines() {
 	w := x.w
 	w.Deadlines = append(w.Deadlines, Deadline{By: w.Window.Closes, Pos: w.Window.Pos})
 	for _, t := range w.Job.Tasks {
-		if t.Deadline == nil || x.absent[t] {
+		if t.Deadline == nil || x.absent[t] || len(x.first[t]) == 0 {
 			continue
 		}
 		by := x.moment(*t.Deadline)
