@@ -6,6 +6,7 @@ import (
 	"errors"
 	"fmt"
 	"io"
+	"slices"
 
 	"github.com/spf13/cobra"
 
@@ -39,19 +40,21 @@ func newCheck(g *globals, st streams) *cobra.Command {
 func runCheck(ctx context.Context, o *checkOptions, st streams, args []string) error {
 	job, err := o.read(args[0])
 	var faults tasks.Faults
+	var notes []tasks.Note
 	switch {
 	case errors.As(err, &faults):
 	case err != nil:
 		return err
 	default:
-		faults = everyTrip(ctx, job, o.trip)
+		faults, notes = everyTrip(ctx, job, o.trip)
+		notes = append(slices.Clone(job.Notes), notes...)
 	}
 	if ctx.Err() != nil {
 		return errStopped
 	}
-	write := func(w io.Writer) error { return checkText(w, job, faults) }
+	write := func(w io.Writer) error { return checkText(w, job, faults, notes) }
 	if o.json {
-		write = func(w io.Writer) error { return checkJSON(w, jobPath(args[0]), job, faults) }
+		write = func(w io.Writer) error { return checkJSON(w, jobPath(args[0]), faults, notes) }
 	}
 	if err := st.print(write); err != nil {
 		return err
@@ -63,8 +66,9 @@ func runCheck(ctx context.Context, o *checkOptions, st streams, args []string) e
 	return errTold
 }
 
-// everyTrip gives the faults that only the hours and the choice of a window show.
-func everyTrip(ctx context.Context, job *tasks.Job, trip string) tasks.Faults {
+// everyTrip gives the faults that only the hours and the choice of a window show, and what the
+// estimates have to say beside them, each note once.
+func everyTrip(ctx context.Context, job *tasks.Job, trip string) (tasks.Faults, []tasks.Note) {
 	names := []string{trip}
 	if trip == "" {
 		for i, t := range job.Trips {
@@ -75,25 +79,35 @@ func everyTrip(ctx context.Context, job *tasks.Job, trip string) tasks.Faults {
 		}
 	}
 	var out tasks.Faults
+	var notes []tasks.Note
 	for _, name := range names {
 		for _, b := range []expand.Basis{{Trip: name}, {Trip: name, Maybes: true}} {
 			if ctx.Err() != nil {
-				return nil
+				return nil, nil
 			}
 			out = append(out, settle.Faults(job, b)...)
+			work, _ := expand.Expand(job, b)
+			if work == nil {
+				continue
+			}
+			for _, n := range work.Notes {
+				if !slices.Contains(notes, n) {
+					notes = append(notes, n)
+				}
+			}
 		}
 	}
-	return out.Sorted()
+	return out.Sorted(), notes
 }
 
-func checkText(w io.Writer, job *tasks.Job, faults tasks.Faults) error {
+func checkText(w io.Writer, job *tasks.Job, faults tasks.Faults, notes []tasks.Note) error {
 	for _, f := range faults {
 		tell(w, f.Error())
 	}
 	if job == nil {
 		return nil
 	}
-	for _, n := range job.Notes {
+	for _, n := range notes {
 		at := agenda.At(n.Pos)
 		if at != "" {
 			at += ": "
@@ -129,15 +143,13 @@ type checkForm struct {
 	Notes  []faultForm `json:"notes"`
 }
 
-func checkJSON(w io.Writer, file string, job *tasks.Job, faults tasks.Faults) error {
+func checkJSON(w io.Writer, file string, faults tasks.Faults, notes []tasks.Note) error {
 	f := checkForm{File: file, Faults: []faultForm{}, Notes: []faultForm{}}
 	for _, x := range faults {
 		f.Faults = append(f.Faults, faultForm{x.Pos.File, x.Pos.Line, x.Pos.Col, clean.Line(x.Text), clean.Line(x.Hint)})
 	}
-	if job != nil {
-		for _, n := range job.Notes {
-			f.Notes = append(f.Notes, faultForm{File: n.Pos.File, Line: n.Pos.Line, Col: n.Pos.Col, Text: clean.Line(n.Text)})
-		}
+	for _, n := range notes {
+		f.Notes = append(f.Notes, faultForm{File: n.Pos.File, Line: n.Pos.Line, Col: n.Pos.Col, Text: clean.Line(n.Text)})
 	}
 	e := json.NewEncoder(w)
 	e.SetEscapeHTML(false)

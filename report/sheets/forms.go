@@ -2,6 +2,7 @@ package sheets
 
 import (
 	"fmt"
+	"math"
 	"strings"
 
 	"sailby/report/agenda"
@@ -50,7 +51,7 @@ func (k *pack) weldList() {
 		p.heading(agenda.TaskLabel(s.Task), 45)
 		ps := k.planned(s)
 		p.para(joined("; ", agenda.Where(s), k.span(s), "planned: "+strings.Join(names(ps.People, ps.Relief), ", "),
-			prefixed("drawing ", or(s.Task.Drawing, k.job.Drawing)), holdWords(k.work, s)), body, false)
+			prefixed("drawing ", or(s.Task.Drawing, k.job.Drawing)), heatWords(s), holdWords(k.work, s)), body, false)
 		t := p.table(column{"Joint", 42}, column{"Welder", 22}, column{"Batch", 24}, column{"Heat no.", 24}, column{"Visual", 20}, column{"NDT", 20}, column{"Repair", 21})
 		for i, seam := range s.Task.Seams {
 			t.row(k.joint(i, seam), write(), write(), write(), write(), write(), write())
@@ -100,6 +101,22 @@ func preheat(c float64) string {
 		return ""
 	}
 	return "preheat " + origin.Trim(c) + " °C"
+}
+
+// heatWords gives preheat and heat input where the work preheats.
+func heatWords(s *expand.Step) string {
+	f, ok := agenda.Fact(s, "preheat")
+	if !ok || f.Value <= 0 {
+		return ""
+	}
+	words := "preheat to " + origin.Trim(f.Value) + " °C at least"
+	if soak, ok := agenda.Fact(s, "soak"); ok && soak.Value > 0 {
+		words += ", soak " + origin.Trim(math.Ceil(soak.Value)) + " min"
+	}
+	if q, ok := agenda.Fact(s, "heat input"); ok {
+		words += ", heat input planned " + origin.Trim(q.Value) + " kJ/mm"
+	}
+	return words
 }
 
 // holdWords says how long to wait before testing, where the plan keeps such a time.

@@ -166,7 +166,7 @@ func (k *pack) fromHome(name string) bool {
 func (k *pack) consumables() []thing {
 	type key struct{ what, unit string }
 	sum, spare := map[key]float64{}, map[key]float64{}
-	index := map[key]int{}
+	index, packs := map[key]int{}, map[key]expand.Consumable{}
 	var out []thing
 	var keys []key
 	for _, s := range k.siteSteps() {
@@ -178,6 +178,9 @@ func (k *pack) consumables() []thing {
 				index[id] = i
 				out, keys = append(out, thing{what: id.what}), append(keys, id)
 			}
+			if c.Each > 0 {
+				packs[id] = c
+			}
 			sum[id] += c.Amount
 			spare[id] += c.Spare
 			out[i].with(k, s)
@@ -187,6 +190,9 @@ func (k *pack) consumables() []thing {
 		out[i].amount = joined(" ", origin.Trim(roundUp(sum[id])), id.unit)
 		if spare[id] > 0 {
 			out[i].amount += joined(" ", " and", origin.Trim(roundUp(spare[id])), id.unit, "spare")
+		}
+		if c := packs[id]; c.Each > 0 {
+			out[i].amount += joined(" ", ":", origin.Trim(math.Ceil((sum[id]+spare[id])/c.Each-1e-9)), paper(c.Packed))
 		}
 		if id.unit == "kg" {
 			out[i].mass = roundUp(sum[id] + spare[id])

@@ -34,6 +34,7 @@ func (x *expander) repair(t *tasks.Task, h hands, e weld.Estimate, c weld.Circum
 		k := r.Length / length
 		h.est.Consumables = append(h.est.Consumables, Consumable{What: n.Name, Amount: n.Amount * k, Unit: n.Unit, Spare: n.Spare * k, Each: n.Each, Packed: n.Packed})
 	}
+	h.warnings = nil // said of the weld itself
 	e.HandsOn = quantity.HandsOn(hours.Value)
 	x.welded[t] = e
 	return h

@@ -2,6 +2,7 @@ package jobfile
 
 import (
 	"fmt"
+	"math"
 	"slices"
 
 	"sailby/tasks"
@@ -211,5 +212,6 @@ func (r *reader) repairChance(of *tasks.Task) float64 {
 	if err != nil {
 		return 0 // said where the weld is estimated
 	}
-	return min(e.Repair(c, tasks.BadAccess(of.Seams)).Chance, 0.99)
+	chance := e.Repair(c, tasks.BadAccess(of.Seams)).Chance
+	return min(max(math.Round(chance*100)/100, 0.01), 0.99)
 }
