@@ -282,13 +282,16 @@ func (n *network) backward() *Conflict {
 		b.Last[i], b.LastStart[i] = n.by(i), n.by(i)
 		push(i)
 	}
+	for k := range p.Links { // a maximum from the beginning
+		if l := &p.Links[k]; l.From < 0 && !n.off.Link[k] {
+			n.cut(l.To, l.ToEnd, l.LastAt(0))
+		}
+	}
 	for len(queue) > 0 {
 		i := queue[0]
 		queue = queue[1:]
 		queued[i] = false
-		if s := n.latest(i); s < b.LastStart[i] {
-			b.LastStart[i] = s
-		}
+		b.LastStart[i], b.Last[i] = n.latest(i)
 		if b.LastStart[i] < b.Start[i] {
 			return n.conflict(i, b.Start[i]-max(b.LastStart[i], -1))
 		}
@@ -311,16 +314,41 @@ func (n *network) backward() *Conflict {
 	return nil
 }
 
-// latest gives the last start, over all modes, with a finish by the latest finish.
-func (n *network) latest(i int) int {
-	best := -problem.Inf
+// latest gives the last start and the last finish, over all modes, that the latest times leave.
+func (n *network) latest(i int) (start, finish int) {
+	lo, hi, by := n.b.Start[i], n.b.LastStart[i], n.b.Last[i]
+	start, finish = -problem.Inf, -problem.Inf
 	for _, w := range n.p.Acts[i].Timings() {
 		if n.off.Calendar[i] {
-			return min(n.b.LastStart[i], n.b.Last[i]-w.Length())
+			start = min(hi, by-w.Length())
+			return start, min(by, start+w.Length())
 		}
-		best = max(best, w.Latest(n.b.Last[i], n.b.Start[i]))
+		s := w.Latest(by, lo)
+		if s > hi {
+			s = lastStart(w, lo, hi)
+		}
+		if s > -problem.Inf {
+			start, finish = max(start, s), max(finish, w.Finish(s))
+		}
 	}
-	return min(best, n.b.LastStart[i])
+	return start, finish
+}
+
+// lastStart gives the last possible start from lo to hi, -problem.Inf if there is none.
+func lastStart(w *problem.Timing, lo, hi int) int {
+	s := w.Start(lo)
+	if s > hi {
+		return -problem.Inf
+	}
+	for end := hi + 1; s+1 < end; { // Start(end) is after hi
+		mid := s + (end-s)/2
+		if x := w.Start(mid); x <= hi {
+			s = x
+		} else {
+			end = mid
+		}
+	}
+	return s
 }
 
 // lower cuts the earlier end of link k to the last minute that lets the later end be in time.
