@@ -1,19 +1,23 @@
 package learn
 
-import "sailby/tasks/hours"
+import (
+	"fmt"
+
+	"sailby/tasks/hours"
+)
 
 // crews names the people: a variable for each mode of an activity, one for each timing that its
-// modes have, and one for each person and timing; a mode brings its timing and its people with
-// it. At least one mode holds. Each person works on one thing at a time, pauses left out. People
-// who only watch hot work are left out, since they may watch several things at once.
+// modes have, one for each person and timing, and one for each person who may keep the fire watch
+// after it; a mode brings its timing and its people with it. At least one mode holds. Each person does one
+// thing at a time, pauses left out, or keeps watches in one workface.
 func (m *model) crews() bool {
-	byPerson := make([][]worker, len(m.p.People))
+	c := &crewer{model: m, byPerson: make([][]worker, len(m.p.People)), stays: map[string]*grid{}}
 	for i := range m.p.Acts {
-		if !m.crew(i, byPerson) {
+		if !c.crew(i) || !c.watchAfter(i) {
 			return false
 		}
 	}
-	for _, ws := range byPerson {
+	for _, ws := range c.byPerson {
 		if len(ws) > 1 {
 			newWorktable(m.engine, 1, ws)
 		}
@@ -21,79 +25,148 @@ func (m *model) crews() bool {
 	return true
 }
 
-// crew makes the modes of activity i; false if it has none.
-func (m *model) crew(i int, byPerson [][]worker) bool {
-	a, x := &m.p.Acts[i], &m.acts[i]
+// crewer makes the people's variables.
+type crewer struct {
+	*model
+	byPerson [][]worker
+	stays    map[string]*grid
+	known    map[part]side // of the activity at hand
+}
+
+// part is somebody's part in an activity: with which timing, and whether they only watch.
+type part struct {
+	who, time int
+	watch     bool
+}
+
+// crew makes the modes of activity i; false if none can hold.
+func (c *crewer) crew(i int) bool {
+	a, x := &c.p.Acts[i], &c.acts[i]
 	if len(a.Modes) == 1 {
-		m.team(i, 0, always, byPerson, nil)
+		c.hands(i, 0, always)
 		return true
 	}
 	times := make([]side, len(x.times))
 	for k := range times {
 		times[k] = -1
 		if len(x.times) > 1 {
-			times[k] = m.variable(0, 1)
-			m.tie(i, grids{x.grids[k]}, fact{times[k], 1})
+			times[k] = c.variable(0, 1)
+			c.tie(i, grids{x.grids[k]}, fact{times[k], 1})
 		}
 	}
-	known := map[[2]int]side{}
+	c.known = map[part]side{}
 	var any []fact
 	for k := range a.Modes {
-		mode := m.variable(0, 1)
+		mode := c.variable(0, 1)
 		x.modes = append(x.modes, mode)
 		any = append(any, fact{mode, 1})
-		for t := range x.times {
-			if x.times[t] == a.Modes[k].Time && times[t] >= 0 {
-				m.join(mode, times[t], 0, always)
-			}
+		if t := times[c.timeOf(i, k)]; t >= 0 {
+			c.join(mode, t, 0, always)
 		}
-		m.team(i, k, fact{mode, 1}, byPerson, known)
+		c.hands(i, k, fact{mode, 1})
 	}
-	return m.add(any)
+	return c.add(any)
 }
 
-// team makes the work of the people of mode k, which holds if on does. Modes with the same
-// timing share the variable of a person; known has those made so far.
-func (m *model) team(i, k int, on fact, byPerson [][]worker, known map[[2]int]side) {
-	md := &m.p.Acts[i].Modes[k]
-	if m.start[i] == m.finish[i] && m.length[i] == 0 {
+// hands makes the work of the people of mode k, which holds if on does. Modes with the same
+// timing share the variable of a person.
+func (c *crewer) hands(i, k int, on fact) {
+	md := &c.p.Acts[i].Modes[k]
+	if c.start[i] == c.finish[i] && c.length[i] == 0 {
 		return
 	}
-	sure := m.steady[md.Time]
-	work := func(p int, on fact, mask spans) {
-		byPerson[p] = append(byPerson[p], worker{user: m.user(i, 1), on: on, mask: mask})
-	}
+	sure := c.steady[md.Time]
 	if md.Relief != nil {
 		first := toSpans(md.First)
-		for c, p := range md.Crew {
-			if !watches(md.Watch, c) {
-				work(p, on, sure.and(first))
-			}
+		for n, p := range md.Crew {
+			c.work(i, p, watches(md.Watch, n), on, sure.and(first))
 		}
-		for c, p := range md.Relief {
-			if !watches(md.Watch, c) {
-				work(p, on, sure.less(first))
-			}
+		for n, p := range md.Relief {
+			c.work(i, p, watches(md.Watch, n), on, sure.less(first))
 		}
 		return
 	}
-	for c, p := range md.Crew {
-		if watches(md.Watch, c) {
+	for n, p := range md.Crew {
+		if on.s < 0 {
+			c.work(i, p, watches(md.Watch, n), on, sure)
 			continue
 		}
-		if known == nil {
-			work(p, on, sure)
-			continue
-		}
-		key := [2]int{p, m.timeOf(i, k)}
-		y, ok := known[key]
+		key := part{p, c.timeOf(i, k), watches(md.Watch, n)}
+		y, ok := c.known[key]
 		if !ok {
-			y = m.variable(0, 1)
-			known[key] = y
-			work(p, fact{y, 1}, sure)
+			y = c.variable(0, 1)
+			c.known[key] = y
+			c.work(i, p, key.watch, fact{y, 1}, sure)
 		}
-		m.join(on.s, y, 0, always)
+		c.join(on.s, y, 0, always)
 	}
+}
+
+func (c *crewer) work(i, p int, watch bool, on fact, mask spans) {
+	w := worker{user: c.user(i, 1), on: on, mask: mask}
+	if watch {
+		w.team = c.team[i]
+	}
+	c.byPerson[p] = append(c.byPerson[p], w)
+}
+
+// watchAfter lets somebody keep the fire watch after activity i: one of those of its mode who can
+// stay it out. False if nobody can.
+func (c *crewer) watchAfter(i int) bool {
+	a, x := &c.p.Acts[i], &c.acts[i]
+	if x.watch == 0 {
+		return true
+	}
+	keep := map[int]side{}
+	for k := range a.Modes {
+		md := &a.Modes[k]
+		if len(md.Keepers) == 0 {
+			return true // nothing is known about who keeps it
+		}
+		var any []fact
+		for n, p := range md.Keepers {
+			y, ok := keep[p]
+			if !ok {
+				y = c.variable(0, 1)
+				keep[p] = y
+				x.keepers = append(x.keepers, keeper{p, y})
+				f := c.finish[i]
+				g := c.stay(md.Stay[n], x.watch)
+				c.bend(f, 0, f, 0, rising{g.start, g.last}, fact{y, 1})
+				c.byPerson[p] = append(c.byPerson[p], worker{user: c.afterWatch(i), on: fact{y, 1}, team: c.team[i]})
+			}
+			any = append(any, fact{y, 1})
+		}
+		if len(x.modes) > 0 {
+			any = append(any, fact{x.modes[k] ^ 1, 0})
+		}
+		if !c.add(any) {
+			return false
+		}
+	}
+	return true
+}
+
+// keeper is somebody who may keep the watch after an activity, with the side that says so.
+type keeper struct {
+	who int
+	on  side
+}
+
+// stay gives the minutes from which a watch can be kept to its end within set.
+func (c *crewer) stay(set hours.Set, watch int32) *grid {
+	key := fmt.Sprint(watch, set)
+	if g := c.stays[key]; g != nil {
+		return g
+	}
+	g := &grid{}
+	for _, s := range toSpans(set) {
+		if s.to-watch >= s.from {
+			g.from, g.upto, g.ends = append(g.from, s.from), append(g.upto, s.to-watch), append(g.ends, s.from)
+		}
+	}
+	c.stays[key] = g
+	return g
 }
 
 // timeOf gives the number of mode k's timing among those of activity i.
@@ -106,10 +179,20 @@ func (m *model) timeOf(i, k int) int {
 	return 0
 }
 
+// chosen gives the mode that holds for activity i, once everything is settled.
+func (m *model) chosen(i int) int {
+	for k, x := range m.acts[i].modes {
+		if m.now[x] == 1 {
+			return k
+		}
+	}
+	return 0
+}
+
 func toSpans(set hours.Set) spans {
 	out := spans{}
 	for _, s := range set {
-		out = append(out, struct{ from, to int32 }{clip(int(s.From)), clip(int(s.To))})
+		out = append(out, span{clip(int(s.From)), clip(int(s.To))})
 	}
 	return out
 }
@@ -120,19 +203,9 @@ func (a spans) less(b spans) spans {
 	at := -far
 	for _, s := range b {
 		if s.from > at {
-			rest = append(rest, struct{ from, to int32 }{at, s.from})
+			rest = append(rest, span{at, s.from})
 		}
 		at = s.to
 	}
-	return a.and(append(rest, struct{ from, to int32 }{at, far}))
-}
-
-// chosen gives the mode that holds for activity i, once everything is settled.
-func (m *model) chosen(i int) int {
-	for k, x := range m.acts[i].modes {
-		if m.now[x] == 1 {
-			return k
-		}
-	}
-	return 0
+	return a.and(append(rest, span{at, far}))
 }

@@ -1,100 +1,230 @@
 package learn
 
-import "sort"
+import (
+	"sort"
+
+	"sailby/plan/problem"
+	"sailby/tasks/hours"
+)
 
 // A leaf is a state in which everything is settled. The masks of the worktables leave out spans
-// that work may skip; here the pieces of the chosen modes are counted as they are, so that no plan
-// gets through that uses a person or a resource twice. The clash of two activities is their starts
-// and modes. O(pieces log pieces).
+// that work may skip, and watches after stops on the way; here the pieces of the chosen modes are
+// counted as they are, so that no plan gets through that uses a person or a resource twice. The
+// clash is the starts, modes and keepers of those concerned. O(pieces log pieces), plus the search
+// for keepers.
 
-// holding is a stretch of use.
+// holding is a stretch of use. Holdings of one team by one person count once.
 type holding struct {
 	act      int
 	from, to int32
 	amount   int32
+	who      int
+	team     int
 }
 
 // leaf says whether the settled plan uses nobody and nothing more than there is; if not, the
-// clash is filled.
+// clash is filled. It notes who keeps the watches.
 func (m *model) leaf() bool {
-	res := make([][]holding, len(m.p.Res))
-	people := make([][]holding, len(m.p.People))
+	h := &holdings{model: m, res: make([][]holding, len(m.p.Res)), people: make([][]holding, len(m.p.People))}
 	for i := range m.p.Acts {
-		a := &m.p.Acts[i]
-		md := &a.Modes[m.chosen(i)]
-		start, finish := m.now[m.start[i]], m.now[m.finish[i]]+m.length[i]
-		for _, u := range a.Uses {
-			if u.Stays {
-				res[u.Res] = append(res[u.Res], holding{i, start, finish, clip(u.Amount)})
-			}
-		}
-		md.Time.Pieces(int(start), func(from, to int) {
-			h := holding{i, int32(from), int32(to), 1}
-			for _, u := range a.Uses {
-				if !u.Stays {
-					h.amount = clip(u.Amount)
-					res[u.Res] = append(res[u.Res], h)
-				}
-			}
-			h.amount = 1
-			if md.Relief == nil {
-				for c, p := range md.Crew {
-					if !watches(md.Watch, c) {
-						people[p] = append(people[p], h)
-					}
-				}
-				return
-			}
-			first := toSpans(md.First)
-			team := md.Relief
-			if first.has(h.from) {
-				team = md.Crew
-			}
-			for c, p := range team {
-				if !watches(md.Watch, c) {
-					people[p] = append(people[p], h)
-				}
-			}
-		})
+		h.add(i)
 	}
-	for k, list := range res {
-		if !m.within(list, clip(m.p.Res[k].Capacity)) {
-			return false
-		}
-	}
-	for _, list := range people {
+	for _, list := range h.people {
 		if !m.within(list, 1) {
 			return false
 		}
 	}
-	return true
-}
-
-// within says whether the holdings never add up to more than capacity; if they do, the clash is
-// that of the activities that do so first.
-func (m *model) within(list []holding, capacity int32) bool {
-	sort.SliceStable(list, func(i, j int) bool { return list[i].from < list[j].from })
-	for i := range list {
-		used := int32(0)
-		m.clash = m.clash[:0]
-		for j := 0; j <= i; j++ {
-			if list[j].to > list[i].from && list[j].from < list[j].to {
-				used += list[j].amount
-				m.place(list[j].act)
-			}
-		}
-		if used > capacity && list[i].from < list[i].to {
+	if !h.watchStops() {
+		return false
+	}
+	for k, list := range h.res {
+		if !m.within(list, clip(m.p.Res[k].Capacity)) {
 			return false
 		}
 	}
 	return true
 }
 
+// holdings collects the uses of a plan.
+type holdings struct {
+	*model
+	res, people [][]holding
+	tries       int
+}
+
+// add collects what activity i uses.
+func (h *holdings) add(i int) {
+	a := &h.p.Acts[i]
+	md := &a.Modes[h.chosen(i)]
+	start, finish := h.now[h.start[i]], h.now[h.finish[i]]+h.length[i]
+	for _, u := range a.Uses {
+		if u.Stays {
+			h.res[u.Res] = append(h.res[u.Res], holding{i, start, finish, clip(u.Amount), -1, 0})
+		}
+	}
+	md.Time.Pieces(int(start), func(from, to int) {
+		for _, u := range a.Uses {
+			if !u.Stays && u.Res != a.WatchRoom-1 {
+				h.res[u.Res] = append(h.res[u.Res], holding{i, int32(from), int32(to), clip(u.Amount), -1, 0})
+			}
+		}
+		if md.Relief == nil {
+			h.crew(i, md.Crew, md.Watch, int32(from), int32(to))
+			return
+		}
+		first := toSpans(md.First)
+		piece := spans{{int32(from), int32(to)}}
+		for _, s := range piece.and(first) {
+			h.crew(i, md.Crew, md.Watch, s.from, s.to)
+		}
+		for _, s := range piece.less(first) {
+			h.crew(i, md.Relief, md.Watch, s.from, s.to)
+		}
+	})
+	for _, k := range h.acts[i].keepers {
+		if h.now[k.on] == 1 {
+			h.watch(i, k.who, finish, finish+h.acts[i].watch)
+			break
+		}
+	}
+}
+
+// crew collects the people of a piece.
+func (h *holdings) crew(i int, crew []int, watch []bool, from, to int32) {
+	room := h.p.Acts[i].WatchRoom - 1
+	for c, p := range crew {
+		x := holding{i, from, to, 1, p, 0}
+		if watches(watch, c) {
+			x.team = h.team[i]
+		}
+		h.people[p] = append(h.people[p], x)
+		if room >= 0 {
+			h.res[room] = append(h.res[room], x)
+		}
+	}
+}
+
+// watch notes that p keeps a watch after a piece of activity i.
+func (h *holdings) watch(i, p int, from, to int32) {
+	x := holding{i, from, to, 1, p, h.team[i]}
+	h.people[p] = append(h.people[p], x)
+	if room := h.p.Acts[i].WatchRoom - 1; room >= 0 {
+		h.res[room] = append(h.res[room], x)
+	}
+}
+
+// within says whether the holdings never add up to more than capacity; if they do, the clash is
+// that of the activities at work when they first do.
+func (m *model) within(list []holding, capacity int32) bool {
+	sort.SliceStable(list, func(i, j int) bool { return list[i].from < list[j].from })
+	for i := range list {
+		if list[i].from >= list[i].to {
+			continue
+		}
+		used := int32(0)
+		m.clash = m.clash[:0]
+		for j := 0; j <= i; j++ {
+			if list[j].to <= list[i].from || list[j].from >= list[j].to || again(list[:j], list[j], list[i].from) {
+				continue
+			}
+			used += list[j].amount
+			m.place(list[j].act)
+		}
+		if used > capacity {
+			return false
+		}
+	}
+	return true
+}
+
+// again says whether x is a watch by somebody who watches in that workface at t already.
+func again(list []holding, x holding, t int32) bool {
+	for _, y := range list {
+		if x.team > 0 && x.team == y.team && x.who == y.who && y.to > t && y.from < y.to {
+			return true
+		}
+	}
+	return false
+}
+
 // place adds to the clash that activity i is where and by whom it is.
 func (m *model) place(i int) {
-	s := m.start[i]
+	s, x := m.start[i], &m.acts[i]
 	m.clash = append(m.clash, fact{s, m.now[s]}, fact{s ^ 1, m.now[s^1]})
-	if x := &m.acts[i]; len(x.modes) > 0 {
+	if len(x.modes) > 0 {
 		m.clash = append(m.clash, fact{x.modes[m.chosen(i)], 1})
 	}
+	for _, k := range x.keepers {
+		if m.now[k.on] == 1 {
+			m.clash = append(m.clash, fact{k.on, 1})
+		}
+	}
+}
+
+// stop is a fire watch after a piece that ends in a stop on the way.
+type stop struct {
+	act, from, to int
+	mode          *problem.Mode
+}
+
+// mostTries bounds the search for keepers of the watches on the way; beyond it they are taken to
+// be found.
+const mostTries = 20_000
+
+// watchStops finds somebody for every watch on the way. If there is no way to, the clash is the
+// whole plan.
+func (h *holdings) watchStops() bool {
+	var stops []stop
+	for i := range h.p.Acts {
+		md := &h.p.Acts[i].Modes[h.chosen(i)]
+		if h.acts[i].watch == 0 || len(md.Keepers) == 0 {
+			continue
+		}
+		ends := md.Time.Stops(int(h.now[h.start[i]]))
+		for _, e := range ends[:max(0, len(ends)-1)] {
+			stops = append(stops, stop{i, e, e + md.Time.Watch(), md})
+		}
+	}
+	if h.assign(stops) {
+		return true
+	}
+	h.clash = h.clash[:0]
+	for i := range h.p.Acts {
+		h.place(i)
+	}
+	return false
+}
+
+func (h *holdings) assign(stops []stop) bool {
+	if len(stops) == 0 || h.tries > mostTries {
+		return true
+	}
+	s := stops[0]
+	room := h.p.Acts[s.act].WatchRoom - 1
+	for n, p := range s.mode.Keepers {
+		h.tries++
+		if !s.mode.Stay[n].Covers(hours.Span{From: hours.Minute(s.from), To: hours.Minute(s.to)}) || h.busy(p, s) {
+			continue
+		}
+		old := len(h.people[p])
+		h.watch(s.act, p, int32(s.from), int32(s.to))
+		if h.assign(stops[1:]) {
+			return true
+		}
+		h.people[p] = h.people[p][:old]
+		if room >= 0 {
+			h.res[room] = h.res[room][:len(h.res[room])-1]
+		}
+	}
+	return false
+}
+
+// busy says whether p does something else during a watch.
+func (h *holdings) busy(p int, s stop) bool {
+	for _, x := range h.people[p] {
+		if int(x.from) < s.to && int(x.to) > s.from && x.from < x.to && x.team != h.team[s.act] {
+			return true
+		}
+	}
+	return false
 }

@@ -45,9 +45,8 @@ type Result struct {
 const pollEvery = 100_000
 
 // Solve looks for the plan with the earliest finish of the site activities (of all, where none
-// is at the site), with named people. What the model leaves out (watches over hot work and after
-// it) can only make plans worse: a bound and an Infeasible hold for the problem as it is, and
-// Exact says whether the plan does.
+// is at the site), with named people. What the model leaves out can only make plans worse:
+// a bound and an Infeasible hold for the problem as it is, and Exact says whether the plan does.
 func Solve(p *problem.Problem, o Options) Result {
 	m, ok := build(p, true)
 	if !ok {
@@ -75,18 +74,14 @@ func none() Result {
 	return Result{Status: Infeasible, Finish: problem.Inf, Bound: problem.Inf}
 }
 
-// exact says whether the model leaves out nothing of the problem.
+// exact says whether the model leaves out nothing of the problem: a fire watch of a mode that is
+// longer than that of another, or that nobody is named for, is counted short.
 func (m *model) exact() bool {
 	for i := range m.p.Acts {
 		a := &m.p.Acts[i]
 		for k := range a.Modes {
-			if a.Modes[k].Time.Watch() > 0 {
+			if w := a.Modes[k].Time.Watch(); w > 0 && (int32(w) != m.acts[i].watch || len(a.Modes[k].Keepers) == 0) {
 				return false
-			}
-			for _, w := range a.Modes[k].Watch {
-				if w {
-					return false
-				}
 			}
 		}
 	}

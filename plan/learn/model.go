@@ -15,6 +15,7 @@ type model struct {
 	length []int32 // the finish is the value of side finish plus this
 	end    side    // the finish of the whole
 	lags   []lag   // every lag of fixed length between two starts
+	team   []int   // by activity: its workface, for watches that may be shared
 	plain  bool    // every activity has one fixed length and one mode
 	grids  map[*problem.Timing]*grid
 	steady map[*problem.Timing]spans
@@ -22,12 +23,13 @@ type model struct {
 
 // act is what the model knows of an activity beside its sides.
 type act struct {
-	times []*problem.Timing
-	grids grids
-	empty bool   // it may take no time at all
-	sure  spans  // minutes in which it is worked if it runs over them, whoever does it
-	watch int32  // minutes of fire watch that follow at least
-	modes []side // with people: a variable for each mode, if there are several
+	times   []*problem.Timing
+	grids   grids
+	empty   bool     // it may take no time at all
+	sure    spans    // minutes in which it is worked if it runs over them, whoever does it
+	watch   int32    // minutes of fire watch that follow at least
+	keepers []keeper // with people: who may keep the watch after it
+	modes   []side   // with people: a variable for each mode, if there are several
 }
 
 // lag says that j starts at least lag after i.
@@ -52,6 +54,7 @@ func build(p *problem.Problem, people bool) (*model, bool) {
 			return nil, false
 		}
 	}
+	m.workfaces()
 	m.end = m.variable(0, int32(p.End))
 	for i := range m.acts {
 		m.timed(i)

@@ -8,7 +8,9 @@ import (
 )
 
 // spans is a sorted list of disjoint half-open spans of minutes; nil is every minute.
-type spans []struct{ from, to int32 }
+type spans []span
+
+type span struct{ from, to int32 }
 
 // steady gives the minutes in which work on w is at work for certain, if it runs over them at all:
 // its worked spans without those that it may skip for being too short (R8). Whether a span is skipped
@@ -22,7 +24,7 @@ func steady(w *problem.Timing, g *grid) spans {
 	for _, s := range w.Calendar() {
 		from, to := int32(s.From), int32(s.To)
 		if u := g.last(from - 1); u == -far || g.finish(u) <= from || worksAt(w, int(u), s) {
-			out = append(out, struct{ from, to int32 }{from, to})
+			out = append(out, span{from, to})
 		}
 	}
 	return out
@@ -49,7 +51,7 @@ func (a spans) and(b spans) spans {
 	for i, j := 0, 0; i < len(a) && j < len(b); {
 		from, to := max(a[i].from, b[j].from), min(a[i].to, b[j].to)
 		if from < to {
-			out = append(out, struct{ from, to int32 }{from, to})
+			out = append(out, span{from, to})
 		}
 		if a[i].to < b[j].to {
 			i++

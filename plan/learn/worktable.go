@@ -8,6 +8,7 @@ type worker struct {
 	user
 	on   fact  // s < 0: always
 	mask spans // minutes in which it is at work for certain if it runs over them
+	team int   // workers of one team above 0 count once between them: fire watches in one workface
 }
 
 // worktable is a resource with a capacity at every minute, used by activities that pause: the
@@ -24,11 +25,23 @@ type worktable struct {
 	events   []event
 	from     []int32
 	level    []int32
+	teams    []uint64 // by segment: the teams at work in it, a bit each; from 63 on they share the last
+	crowd    []int32  // scratch: by team, how many of it are at work
 	cover    []covering
 }
 
 // event is a change of use.
-type event struct{ at, by int32 }
+type event struct {
+	at, by int32
+	team   int
+}
+
+func teamBit(team int) uint64 {
+	if team == 0 {
+		return 0
+	}
+	return 1 << min(team, 63)
+}
 
 func newWorktable(e *engine, capacity int32, all []worker) {
 	c := &worktable{id: int32(len(e.rules)), capacity: capacity, all: all}
@@ -49,6 +62,9 @@ func newWorktable(e *engine, capacity int32, all []worker) {
 		if w.on.s >= 0 {
 			add(w.on.s)
 		}
+		if w.team >= len(c.crowd) {
+			c.crowd = append(c.crowd, make([]int32, w.team+1-len(c.crowd))...)
+		}
 	}
 	e.attach(c, sides)
 }
@@ -66,27 +82,49 @@ func (c *worktable) build(e *engine) int32 {
 			continue
 		}
 		if w.mask == nil {
-			c.events = append(c.events, event{from, w.amount}, event{to, -w.amount})
+			c.events = append(c.events, event{from, w.amount, w.team}, event{to, -w.amount, w.team})
 			continue
 		}
 		for k := w.mask.find(from); k < len(w.mask) && w.mask[k].from < to; k++ {
-			c.events = append(c.events, event{max(from, w.mask[k].from), w.amount}, event{min(to, w.mask[k].to), -w.amount})
+			c.events = append(c.events, event{max(from, w.mask[k].from), w.amount, w.team}, event{min(to, w.mask[k].to), -w.amount, w.team})
 		}
 	}
 	e.ticks += int64(len(c.all) + len(c.events))
 	sort.Slice(c.events, func(i, j int) bool { return c.events[i].at < c.events[j].at })
-	c.from, c.level = c.from[:0], c.level[:0]
-	used, most := int32(0), int32(0)
+	c.from, c.level, c.teams = c.from[:0], c.level[:0], c.teams[:0]
+	clear(c.crowd)
+	used, most, bits := int32(0), int32(0), uint64(0)
 	for i := 0; i < len(c.events); {
 		t := c.events[i].at
 		for ; i < len(c.events) && c.events[i].at == t; i++ {
-			used += c.events[i].by
+			ev := &c.events[i]
+			if ev.team == 0 {
+				used += ev.by
+				continue
+			}
+			old := c.crowd[ev.team]
+			c.crowd[ev.team] += ev.by
+			switch {
+			case old == 0:
+				used++
+				bits |= teamBit(ev.team)
+			case c.crowd[ev.team] == 0:
+				used--
+				bits &^= teamBit(ev.team)
+			}
 		}
 		c.from = append(c.from, t)
 		c.level = append(c.level, used)
+		c.teams = append(c.teams, bits)
 		most = max(most, used)
 	}
 	return most
+}
+
+// tight says whether segment k leaves worker w too little. One whose team is there already
+// takes nothing more.
+func (c *worktable) tight(k int, w *worker) bool {
+	return c.level[k]+w.amount > c.capacity && c.teams[k]&teamBit(w.team) == 0
 }
 
 // run checks the profile and pushes activities out of where it leaves them too little.
@@ -129,7 +167,7 @@ func (c *worktable) deny(e *engine, i int32) bool {
 	from, to := e.latestStart(&w.user), e.earliestFinish(&w.user)
 	for k := c.first(from); k < len(c.from)-1 && c.from[k] < to; k++ {
 		e.ticks++
-		if c.level[k]+w.amount <= c.capacity {
+		if !c.tight(k, w) {
 			continue
 		}
 		if t := w.mask.firstFrom(max(from, c.from[k])); t < min(to, c.from[k+1]) {
@@ -150,7 +188,7 @@ func (c *worktable) later(e *engine, i int32) bool {
 		if c.from[k] >= e.earliestFinish(&w.user) || own && c.from[k] >= lst {
 			return true
 		}
-		if c.level[k]+w.amount <= c.capacity {
+		if !c.tight(k, w) {
 			continue
 		}
 		upTo := min(c.from[k+1], e.earliestFinish(&w.user))
@@ -179,7 +217,7 @@ func (c *worktable) earlier(e *engine, i int32) bool {
 		if c.from[k+1] <= e.latestStart(&w.user) || own && c.from[k+1] <= ect {
 			return true
 		}
-		if c.level[k]+w.amount <= c.capacity {
+		if !c.tight(k, w) {
 			continue
 		}
 		from := max(c.from[k], e.latestStart(&w.user))
@@ -239,7 +277,7 @@ func (c *worktable) covers(e *engine, t, skip, idx int32, out []fact) []fact {
 	for k := range c.all {
 		w := &c.all[k]
 		a, b := w.startBy(t), w.finishFrom(t+1)
-		if int32(k) == skip || !w.mask.has(t) || e.before(a.s, idx) < a.v || e.before(b.s, idx) < b.v {
+		if int32(k) == skip || skip >= 0 && w.team > 0 && w.team == c.all[skip].team || !w.mask.has(t) || e.before(a.s, idx) < a.v || e.before(b.s, idx) < b.v {
 			continue
 		}
 		last := max(e.entry(a), e.entry(b))
@@ -248,6 +286,9 @@ func (c *worktable) covers(e *engine, t, skip, idx int32, out []fact) []fact {
 				continue
 			}
 			last = max(last, e.entry(w.on))
+		}
+		if w.team > 0 && c.shared(w.team, int32(k), last) {
+			continue
 		}
 		spare += w.amount
 		c.cover = append(c.cover, covering{int32(k), w.amount, last})
@@ -268,4 +309,18 @@ func (c *worktable) covers(e *engine, t, skip, idx int32, out []fact) []fact {
 		}
 	}
 	return out
+}
+
+// shared says whether somebody of the team is among those that cover already; the one with the
+// earlier facts stays.
+func (c *worktable) shared(team int, k, last int32) bool {
+	for i := range c.cover {
+		if v := &c.cover[i]; c.all[v.user].team == team {
+			if last < v.last {
+				v.user, v.last = k, last
+			}
+			return true
+		}
+	}
+	return false
 }
