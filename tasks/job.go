@@ -70,6 +70,11 @@ type Job struct {
 	Emergency Emergency
 	Changes   []Change // named sets of changes that the file keeps beside the plan
 	Notes     []Note   // what the reader wants said: repeated hours, defaults taken
+
+	Vehicles []*Vehicle
+	Carriage []lift.CarriageRule
+	Driving  []lift.DutyRule
+	Packing  Packing
 }
 
 // Note is something worth saying about the job file that is no fault.
@@ -105,15 +110,17 @@ type Place struct {
 	Mains      Amount // kVA of a fixed supply; 0 is "no limit stated"
 	Climate    *Climate
 	Tide       *site.TideTable
+	Sea        Sea
 	Workfaces  []*Workface
 }
 
-// Climate is the weather that a place is planned with.
+// Climate is the weather that a place is planned with: the poor day by hour, and what is usual.
 type Climate struct {
 	Pos     Pos
 	Hourly  *site.Series // steel and air by hour; nil where only the Steel figure stands
 	Month   time.Month   // that the figures are of; 0 is not said
 	WetDays int          // days with rain in that month; 0 is not said
+	Weather
 }
 
 // Workface is a part of a place.
@@ -134,6 +141,7 @@ type Workface struct {
 	Tidal                 bool   // between tides
 	OpeningUp, ClearingUp Amount // minutes at each reach
 	Dry                   []Slot // given dry and warm hours; nil: not limited
+	FaceNature
 }
 
 // Permit is a daily permit: work of kind For only in its hours, after Issue minutes of them.
@@ -154,6 +162,8 @@ type Trip struct {
 	Back   []Leg
 	People []string // who goes; nil: everybody who is not tied to another place
 	Prices []Price
+	Bands  []lift.Band // lengths and heights that the ferry books vehicles by
+	Sea    lift.Sea    // of the crossing
 
 	Leaves  hours.Minute // home, for the site
 	Arrives hours.Minute // at the site, before unloading
@@ -257,6 +267,9 @@ type Kit struct {
 	Mass    Amount             // kg, for packing
 	Set     weld.Procedure     // of a welding set: its rating plate and cables, with their origins
 	Hangs   map[string]float64 // what it hangs from and its rating, kg
+	Closed  Amount             // mm from the anchor to the hook when fully up
+	HungAt  Amount             // mm of the anchor above the floor
+	Stowing
 }
 
 // ChartPoint is one line of a crane's chart.
@@ -285,6 +298,8 @@ type Assembly struct {
 	Parts []*Part
 	Mass  Amount // stated, kg; Pos.Given tells whether
 	How   string // weighed, drawn, guessed
+	Old   bool   // sits in place: stuck until a task has proved it free
+	Stowing
 }
 
 // Part is one named part of an assembly.

@@ -104,6 +104,11 @@ type Task struct {
 	To        *Place   // move
 	Parts     []string // cut, fit-up, weld: assembly/part it works on
 	Joints    int      // fit-up: count of joints; 0 unknown
+	Lifting   *Lifting // lift, move
+	Joins     []Named  // fit-up, weld: assemblies or parts that hang together from its finish on
+	FitProved []string // fit-up: survey, template or trial fit that proves that it fits
+	TaskNature
+	SentOut   string   // plain: galvanizing, machining, profile cutting or other work sent out
 }
 
 // Use is so many of a kit.

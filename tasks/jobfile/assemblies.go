@@ -54,6 +54,7 @@ func (r *reader) readAssemblies(f *fields) {
 		g := r.open(kv[1], &assemblySection, fmt.Sprintf("assembly %q", name))
 		a := &tasks.Assembly{Name: name, Pos: r.pos(kv[0]), Steel: g.line("steel"), Axes: g.line("axes"),
 			Mass: g.amount("mass", 0), How: g.choice("known", "")}
+		a.Old, a.Stowing = g.yes("old"), g.stowing()
 		if a.Steel == "" {
 			a.Steel = r.job.Steel
 		}

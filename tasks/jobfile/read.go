@@ -112,7 +112,9 @@ func (r *reader) read(root *yaml.Node) {
 	}
 	r.resolveLinks()
 	r.resolveRepairs()
+	r.resolveLifting()
 	r.readOrders(f)
+	r.readVehicles(f)
 	r.readChanges(f)
 	r.readHolidays(f)
 	r.judge()

@@ -13,9 +13,9 @@ import (
 func sections() []*section {
 	out := []*section{&topSection, &placeSection, &faceSection, &permitSection, &tideSection, &climateSection,
 		&tripSection, &outSection, &backSection, &windowSection, &personSection, &ticketSection, &kitSection, &hireSection,
-		&procedureSection, &byPersonSection, &setSection, &cableSection, &ratesSection, &steelSection, &paintSection, &assemblySection, &partSection, &taskSection, &stopSection, &linkSection}
+		&procedureSection, &byPersonSection, &setSection, &cableSection, &ratesSection, &steelSection, &paintSection, &assemblySection, &partSection, &taskSection, &stopSection, &linkSection, &slingsSection, &secondSection, &handsSection, &pushSection}
 	out = append(out, kindSections()...)
-	return append(out, &seamSection, &jointSection, &blockSection, &orderSection, &clashSection, &dutySection, &emergencySection, &changeSection)
+	return append(out, &seamSection, &jointSection, &blockSection, &orderSection, &clashSection, &dutySection, &emergencySection, &vehicleSection, &carriageSection, &drivingSection, &bandSection, &packingSection, &boxSection, &extraSection, &changeSection)
 }
 
 // object is a JSON object; encoding/json writes its keys in order.

@@ -160,6 +160,7 @@ func (r *reader) task(name string, at, n *yaml.Node) *draft {
 	t.Light = f.yes("needs light")
 	t.States = texts(f.names("states"))
 	r.byKind(t, f)
+	r.liftingOf(t, f)
 	d := &draft{t: t, f: f, links: r.linkDrafts(f)}
 	r.taskMakesSense(t, f)
 	return d

@@ -184,6 +184,7 @@ func (r *reader) trip(i int, n *yaml.Node) *tasks.Trip {
 	}
 	faults := len(r.faults)
 	r.legs(f, t)
+	r.carried(t, f)
 	if len(r.faults) > faults {
 		return nil
 	}
