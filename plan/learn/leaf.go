@@ -20,6 +20,7 @@ type holding struct {
 	amount   int32
 	who      int
 	team     int
+	after    bool // a fire watch after a piece
 }
 
 // leaf says whether the settled plan uses nobody and nothing more than there is; if not, the
@@ -42,6 +43,18 @@ func (m *model) leaf() bool {
 			return false
 		}
 	}
+	m.kept = m.kept[:0]
+	for p, list := range h.people {
+		for _, x := range list {
+			if x.after {
+				m.kept = append(m.kept, Kept{x.act, int(x.from), int(x.to), p})
+			}
+		}
+	}
+	sort.Slice(m.kept, func(i, j int) bool {
+		a, b := m.kept[i], m.kept[j]
+		return a.Act < b.Act || a.Act == b.Act && a.From < b.From
+	})
 	return true
 }
 
@@ -59,13 +72,13 @@ func (h *holdings) add(i int) {
 	start, finish := h.now[h.start[i]], h.now[h.finish[i]]+h.length[i]
 	for _, u := range a.Uses {
 		if u.Stays {
-			h.res[u.Res] = append(h.res[u.Res], holding{i, start, finish, clip(u.Amount), -1, 0})
+			h.res[u.Res] = append(h.res[u.Res], holding{i, start, finish, clip(u.Amount), -1, 0, false})
 		}
 	}
 	md.Time.Pieces(int(start), func(from, to int) {
 		for _, u := range a.Uses {
 			if !u.Stays && u.Res != a.WatchRoom-1 {
-				h.res[u.Res] = append(h.res[u.Res], holding{i, int32(from), int32(to), clip(u.Amount), -1, 0})
+				h.res[u.Res] = append(h.res[u.Res], holding{i, int32(from), int32(to), clip(u.Amount), -1, 0, false})
 			}
 		}
 		if md.Relief == nil {
@@ -93,7 +106,7 @@ func (h *holdings) add(i int) {
 func (h *holdings) crew(i int, crew []int, watch []bool, from, to int32) {
 	room := h.p.Acts[i].WatchRoom - 1
 	for c, p := range crew {
-		x := holding{i, from, to, 1, p, 0}
+		x := holding{i, from, to, 1, p, 0, false}
 		if watches(watch, c) {
 			x.team = h.team[i]
 		}
@@ -106,7 +119,7 @@ func (h *holdings) crew(i int, crew []int, watch []bool, from, to int32) {
 
 // watch notes that p keeps a watch after a piece of activity i.
 func (h *holdings) watch(i, p int, from, to int32) {
-	x := holding{i, from, to, 1, p, h.team[i]}
+	x := holding{i, from, to, 1, p, h.team[i], true}
 	h.people[p] = append(h.people[p], x)
 	if room := h.p.Acts[i].WatchRoom - 1; room >= 0 {
 		h.res[room] = append(h.res[room], x)

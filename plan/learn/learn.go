@@ -32,14 +32,18 @@ const (
 // Result is what a search found.
 type Result struct {
 	Status    Status
-	Starts    []int // of the best plan, nil if none was found
-	Modes     []int // of the best plan
-	Exact     bool  // nothing was left out: the plan obeys the whole problem
-	Finish    int   // of that plan; problem.Inf without one
-	Bound     int   // no plan finishes before it; problem.Inf if there is none
+	Starts    []int  // of the best plan, nil if none was found
+	Modes     []int  // of the best plan
+	Watches   []Kept // the fire watches of the best plan, by activity and time
+	Exact     bool   // nothing was left out: the plan obeys the whole problem
+	Finish    int    // of that plan; problem.Inf without one
+	Bound     int    // no plan finishes before it; problem.Inf if there is none
 	Ticks     int64
 	Conflicts int64
 }
+
+// Kept is a fire watch after a piece of activity Act, kept by person Who.
+type Kept struct{ Act, From, To, Who int }
 
 // pollEvery is how many ticks pass between two questions whether to stop: a tick is some 20 ns.
 const pollEvery = 100_000

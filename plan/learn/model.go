@@ -17,6 +17,7 @@ type model struct {
 	lags   []lag   // every lag of fixed length between two starts
 	team   []int   // by activity: its workface, for watches that may be shared
 	plain  bool    // every activity has one fixed length and one mode
+	kept   []Kept  // the fire watches of the last leaf
 	grids  map[*problem.Timing]*grid
 	steady map[*problem.Timing]spans
 }

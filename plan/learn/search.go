@@ -9,9 +9,10 @@ type search struct {
 	best   []int32 // value of each variable in the best plan or the hint, nil if none
 	starts []int   // the best plan found, nil if none
 	modes  []int
-	value  int32 // only finishes before this are looked for
+	keep   []Kept // the fire watches of the best plan
+	value  int32  // only finishes before this are looked for
 	polled int64
-	kept   int64 // clauses allowed
+	room   int64 // clauses allowed
 	assume []fact
 	people bool         // the model names people: plans are checked piece by piece
 	actOf  map[side]int // activity by the side of its start
@@ -95,7 +96,7 @@ func (s *search) take() bool {
 		s.best = append(s.best, s.now[x])
 	}
 	s.starts = s.starts[:0]
-	s.modes = s.modes[:0]
+	s.modes, s.keep = s.modes[:0], append(s.keep[:0], s.kept...)
 	for i, x := range s.start {
 		s.starts = append(s.starts, int(s.now[x]))
 		s.modes = append(s.modes, s.chosen(i))
@@ -162,7 +163,7 @@ func (s *search) tighten() bool {
 // begin takes over what is known and settles the root; false if that is the end of the search.
 func (s *search) begin() bool {
 	s.value = int32(s.p.End) + 1
-	s.kept = firstKept
+	s.room = firstKept
 	s.actOf = map[side]int{}
 	for i, x := range s.start {
 		s.actOf[x] = i
@@ -186,7 +187,7 @@ func (s *search) result() Result {
 		r.Bound = int(s.now[s.end])
 	}
 	if s.starts != nil {
-		r.Starts, r.Modes, r.Finish = s.starts, s.modes, int(s.value)
+		r.Starts, r.Modes, r.Watches, r.Finish = s.starts, s.modes, s.keep, int(s.value)
 		r.Status, r.Bound = Feasible, min(r.Bound, r.Finish)
 		if s.dead {
 			r.Status = Optimal

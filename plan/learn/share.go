@@ -92,9 +92,9 @@ func (s *search) minimise() Result {
 			return s.result()
 		}
 		p.pay(m, s.ticks-ticks, s.value < value, patience*float64(len(s.start)))
-		if int64(len(s.refs)) > s.kept {
+		if int64(len(s.refs)) > s.room {
 			s.reduce()
-			s.kept += keptStep
+			s.room += keptStep
 		}
 	}
 }
