@@ -36,7 +36,7 @@ func (e *seamWork) heating(c Circumstances) error {
 	e.generator = p.generator(e.data, e.power)
 	e.drops()
 	k := e.heatEfficiency()
-	e.travel = p.travelOf(e.rate, e.runs.area, c.Steel.density())
+	e.travel = p.travelOf(e.rate, e.runs.large, c.Steel.density())
 	e.heat = heatInput(k, e.volts, e.current, e.travel)
 	if p.MaxHeatInput > 0 && e.heat.Value > p.MaxHeatInput*1.0001 {
 		e.warnf("heat input %.2f kJ/mm is above the procedure's %.2f: weld faster, with smaller runs (and more of them)", e.heat.Value, p.MaxHeatInput)
@@ -52,7 +52,10 @@ func (e *seamWork) heating(c Circumstances) error {
 		if e.cooling, err = Cool(e.heat.Value, e.joint.Thickness, from, f2, f3); err != nil {
 			return err
 		}
-		plate := origin.Written("plate temperature", from, "C", origin.Origin{Source: "preheat or ambient"})
+		plate := origin.Worked("plate temperature", from, "C", "ambient", c.ambient())
+		if e.heatTo.Name != "" {
+			plate = origin.Worked("plate temperature", from, "C", "max(preheat, ambient)", renamed(e.heatTo, "preheat"), c.ambient())
+		}
 		e.cooling.Why = e.cooling.why(e.heat, plate, e.joint.drawn("thickness", e.joint.Thickness, "mm"), f2, f3)
 	}
 	return nil

@@ -28,15 +28,14 @@ func heatInput(k, u, i, v origin.Figure) origin.Figure {
 		"heat efficiency x volts x current x 60 / (1000 x travel)", k, u, i, v)
 }
 
-// travelOf gives the speed at which a run of an area is laid at a rate, mm/min: as given, else
+// travelOf gives the speed at which the largest run is laid at a rate, mm/min: as given, else
 // what the metal says.
-func (p Procedure) travelOf(rate origin.Figure, area, density float64) origin.Figure {
+func (p Procedure) travelOf(rate, area origin.Figure, density float64) origin.Figure {
 	if p.Travel > 0 {
 		return p.given("travel", p.Travel, "mm/min")
 	}
-	return origin.Worked("travel", rate.Value*1e9/60/density/area, "mm/min", "deposition rate x 1000000000 / 60 / density / area of the largest run",
-		rate, densityFigure(density),
-		origin.Written("area of the largest run", area, "mm2", origin.Origin{Source: "runs"}))
+	return origin.Worked("travel", rate.Value*1e9/60/density/area.Value, "mm/min", "deposition rate x 1000000000 / 60 / density / area of the largest run",
+		rate, densityFigure(density), area)
 }
 
 // CoolingTime is t8/5, the seconds from 800 to 500 C, after EN 1011-2 Annex D.

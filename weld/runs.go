@@ -92,6 +92,8 @@ func singleLeg(p Process, pos Position) float64 {
 	return 8
 }
 
+const largestRun = "area of the largest run"
+
 const rootShare = 0.8 // a root run lays this part of the usual bead (house judgement)
 
 // runs is how a section is filled: count in all, the largest area of one, and why.
@@ -100,6 +102,7 @@ type runs struct {
 	area   float64 // mm2 of the largest run
 	travel bool    // one run a side laid at a given travel speed
 	why    origin.Figure
+	large  origin.Figure // area as a figure
 	warn   []string
 }
 
@@ -149,22 +152,26 @@ func (p Procedure) runsFor(j Joint, s Section, d process, pos Position, bead, ho
 			most.Origin = origin.Origin{Kind: origin.Table, Source: "AISC Steel Interchange: 8 mm (5/16 in) is the largest usual single-run horizontal fillet"}
 		}
 		r.why = origin.Worked("runs", n, "", "sides", sides, most)
+		r.large = origin.Worked(largestRun, r.area, "mm2", "area laid / sides", s.Why, sides)
 	case legs && p.Travel > 0 && p.BeadArea == 0: // the leg drawn must come out; a tenth short is within the hand
 		wants := s.Drawn / n
 		c := math.Max(1, math.Ceil(wants/bead.Value-0.1))
 		r.count, r.area, r.travel = int(c*n), each/c, true
 		r.why = origin.Worked("runs", c*n, "", "max(1, ceil(area drawn on a side / area of a run - 0.1)) x sides",
 			origin.Written("area drawn on a side", wants, "mm2", j.Origin), bead, sides)
+		r.large = origin.Worked(largestRun, r.area, "mm2", "area laid / runs", s.Why, r.why)
 	case legs:
 		c := math.Ceil(each/bead.Value - 1e-9)
 		r.count, r.area = int(c*n), each/c
 		r.why = origin.Worked("runs", c*n, "", "ceil(area laid / sides / area of a run) x sides", s.Why, sides, bead)
+		r.large = origin.Worked(largestRun, r.area, "mm2", "area laid / runs", s.Why, r.why)
 	default:
 		root := math.Min(each, rootShare*bead.Value)
 		c := 1 + math.Ceil((each-root)/bead.Value-1e-9)
 		r.count, r.area = int(c*n), math.Min(bead.Value, math.Max(root, each-root))
-		r.why = origin.Worked("runs", c*n, "", "(1 + ceil(max(0, area laid / sides - root run) / area of a run)) x sides", s.Why, sides,
-			origin.Worked("root run", rootShare*bead.Value, "mm2", "area of a run x root share", bead, origin.House("root share", rootShare, "", "the root lays less than a fill run")), bead)
+		first := origin.Worked("root run", rootShare*bead.Value, "mm2", "area of a run x root share", bead, origin.House("root share", rootShare, "", "the root lays less than a fill run"))
+		r.why = origin.Worked("runs", c*n, "", "(1 + ceil(max(0, area laid / sides - root run) / area of a run)) x sides", s.Why, sides, first, bead)
+		r.large = origin.Worked(largestRun, r.area, "mm2", "min(area of a run, max(min(area laid / sides, root run), area laid / sides - root run))", s.Why, sides, first, bead)
 	}
 	r.warn = ceilings(p, j, s, d, pos, bead, r)
 	return r

@@ -151,11 +151,21 @@ func (e Estimate) Repair(c Circumstances, badAccess bool) Repair {
 	r.Length = math.Min(length, share*length/r.Chance)
 	minutes := per / length
 	m := r.Length * minutes * repairEffort
+	var seams []origin.Figure
+	for _, s := range e.Seams {
+		if len(s.Hours.From) > 0 {
+			seams = append(seams, s.Hours.From[0])
+		}
+	}
+	welding := origin.House("welding", per, "min", "of the estimate")
+	if len(seams) > 0 {
+		welding = renamed(joined("welding", seams), "welding")
+	}
 	r.HandsOn = quantity.HandsOn(m)
 	r.Hours = origin.Worked("hands-on time", m, "min", "repair length x welding a millimetre x effort",
 		origin.Worked("repair length", r.Length, "mm", "min(length, repair share x process factor x length / chance)", rate, easy,
-			origin.Written("length", length, "mm", origin.Origin{}), origin.House("chance", r.Chance, "", "Poisson count of repairs of 150 mm")),
-		origin.Written("welding a millimetre", minutes, "min", origin.Origin{Source: "estimate"}),
+			origin.Written("length", length, "mm", origin.Origin{Source: "all sides of the seams"}), origin.House("chance", r.Chance, "", "Poisson count of repairs of 150 mm")),
+		origin.Worked("welding a millimetre", minutes, "min", "welding / length", welding, origin.Written("length", length, "mm", origin.Origin{Source: "all sides of the seams"})),
 		origin.House("effort", repairEffort, "", "3 to 5 times the first welding: locate, gouge, grind, test, weld again"))
 	return r
 }

@@ -101,6 +101,15 @@ func SeamWords(s tasks.Seam) string {
 	return what
 }
 
+// Packs counts packages: "1 spool of 15 kg", "3 bottles of 10 m3".
+func Packs(n int, packed string) string {
+	if n == 1 {
+		first, rest, _ := strings.Cut(packed, " ")
+		packed = strings.TrimSpace(strings.TrimSuffix(first, "s") + " " + rest)
+	}
+	return fmt.Sprintf("%d %s", n, packed)
+}
+
 func metres(mm float64) string {
 	if mm >= 1000 {
 		return origin.Trim(mm/1000) + " m"

@@ -192,7 +192,7 @@ func (k *pack) consumables() []thing {
 			out[i].amount += joined(" ", " and", origin.Trim(roundUp(spare[id])), id.unit, "spare")
 		}
 		if c := packs[id]; c.Each > 0 {
-			out[i].amount += joined(" ", ":", origin.Trim(math.Ceil((sum[id]+spare[id])/c.Each-1e-9)), paper(c.Packed))
+			out[i].amount += ": " + paper(agenda.Packs(int(math.Ceil((sum[id]+spare[id])/c.Each-1e-9)), c.Packed))
 		}
 		if id.unit == "kg" {
 			out[i].mass = roundUp(sum[id] + spare[id])
