@@ -33,17 +33,18 @@ func settled(t rapid.TB, s *small) *plan.Answer {
 
 // tally counts what came of a run of small jobs.
 type tally struct {
-	t                                       *testing.T
-	fits, none, missed, later, proved, best int
+	t                           *testing.T
+	fits, none, skipped         int
+	missed, later, proved, best int
 }
 
 func (n *tally) String() string {
-	return fmt.Sprintf("%d fit, %d cannot; not settled %d, not the best %d; proved that they cannot %d, that it is the best %d",
-		n.fits, n.none, n.missed, n.later, n.proved, n.best)
+	return fmt.Sprintf("%d fit, %d cannot, %d have too much to try; not settled %d, not the best %d; proved that they cannot %d, that it is the best %d",
+		n.fits, n.none, n.skipped, n.missed, n.later, n.proved, n.best)
 }
 
 // TestLattice tries out every start on the half hour and all people of small jobs in which every
-// time is a half hour, so that the optimum lies on it: the plan found is the best there is, no
+// time is a half hour, so that the optimum lies on it or just before: the plan found is the best there is, no
 // bound passes it, and "cannot fit" is never said of a job that can.
 func TestLattice(t *testing.T) {
 	checks(t, 60)
@@ -53,12 +54,16 @@ func TestLattice(t *testing.T) {
 		a := settled(rt, s)
 		b := newBrute(a.Work, 30)
 		best, p := b.optimum()
+		if b.nodes > mostNodes {
+			n.skipped++
+			return
+		}
 		compare(rt, s, a, p, int(best-a.Work.Span.From), n)
 		if p == nil && a.Verdict == plan.Fits {
 			rt.Fatalf("a plan was found where trying everything finds none\n%s", s.yaml())
 		}
-		if p != nil && a.Verdict == plan.Fits && a.Finish < best {
-			rt.Fatalf("finishes %d min before the best that trying everything finds\n%s", best-a.Finish, s.yaml())
+		if p != nil && a.Verdict == plan.Fits && a.Finish <= best-30 { // off the lattice less is possible: a start just after a meal
+			rt.Fatalf("finishes %d min before the best that trying everything finds:%v\nand not%v\n%s", best-a.Finish, show(a.Work, a.Plan), show(a.Work, p), s.yaml())
 		}
 	})
 	t.Log(n)

@@ -21,8 +21,9 @@ type brute struct {
 
 	clashes map[[2]string]bool
 	between map[[2]int][]int // links by the steps that they join
-	opts    [][]option       // by step
-	beside  [][][]set        // by step, other step, option: the other's options that can stand beside it
+	nodes   int
+	opts    [][]option // by step
+	beside  [][][]set  // by step, other step, option: the other's options that can stand beside it
 }
 
 func newBrute(w *expand.Work, grain int) *brute {

@@ -68,7 +68,7 @@ func (b *brute) choices(s *expand.Step) []choice {
 				continue
 			}
 			for _, r := range teams {
-				if !slices.ContainsFunc(r, func(n string) bool { return slices.Contains(t, n) }) {
+				if !slices.Equal(r, t) {
 					out = append(out, choice{team: t, relief: r, keeper: k})
 				}
 			}

@@ -8,6 +8,9 @@ import (
 	"sailby/tasks/hours"
 )
 
+// mostNodes is how many choices are made before a job is left as too much to try out.
+const mostNodes = 100_000
+
 // optimum finds the earliest site finish of all plans with starts on the lattice, and a plan that
 // has it; nil where there is none. Every start and all people are tried; what cannot stand beside
 // what is chosen already is left out at once.
@@ -141,6 +144,9 @@ func (b *brute) by(f hours.Minute) []*option {
 
 // assign gives the step with the fewest options left one of them, and goes on to the next.
 func (b *brute) assign(all []*option, domains []set, left int) bool {
+	if b.nodes++; b.nodes > mostNodes {
+		return false
+	}
 	if left == 0 {
 		return true
 	}
