@@ -5,6 +5,7 @@ import (
 	"slices"
 	"strings"
 	"testing"
+	"testing/fstest"
 	"time"
 
 	"sailby/tasks"
@@ -27,6 +28,15 @@ var usual = []string{
   Ines: {tickets: [weld 136, fire watch]}
   Tom: {tickets: [fitter, fire watch, slinger/signaller]}`,
 	"tasks: {fit: {at: pier, hours: 2 h}}",
+}
+
+// tide is easily reckoned: 5 m at 06:00 and 18:00 summer time, 1 m at noon and midnight, for the days of the window.
+func tide() []byte {
+	text := "# zone: UTC\n# datum: chart\n"
+	for day := 5; day <= 9; day++ {
+		text += fmt.Sprintf("2027-04-%02d 05:00,5.0,HW\n2027-04-%02d 11:00,1.0,LW\n2027-04-%02d 17:00,5.0,HW\n2027-04-%02d 23:00,1.0,LW\n", day, day, day, day)
+	}
+	return []byte(text)
 }
 
 // yaml writes a job file of the usual sections and those given, which begin with their key.
@@ -55,7 +65,7 @@ type tb interface {
 
 func expanded(t tb, text string) *expand.Work {
 	t.Helper()
-	job, err := jobfile.ReadBytes("job.yaml", []byte(text), nil)
+	job, err := jobfile.ReadBytes("job.yaml", []byte(text), fstest.MapFS{"tide.csv": {Data: tide()}})
 	if err != nil {
 		t.Fatalf("%v\n%s", err, text)
 	}

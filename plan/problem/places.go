@@ -72,7 +72,7 @@ func (g *ground) face2(f *tasks.Workface) (hours.Set, bool) {
 	if f.Reach != nil {
 		set, limited = g.work.Window.Slots(f.Reach), true
 	}
-	if f.Level.Pos.Given() && f.Place.Tide != nil {
+	if (f.Level.Pos.Given() || f.CoversAt.Pos.Given()) && f.Place.Tide != nil {
 		set, limited = set.And(g.tide(f)), true
 	}
 	if limited {
@@ -159,7 +159,7 @@ func (g *ground) access(s *expand.Step) hours.Set {
 	}
 	if !s.Site {
 		for _, u := range s.Kit {
-			if u.Kit.At == nil && u.Kit.Slots == nil { // it goes along
+			if u.Kit.At == nil { // it goes along
 				set = set.Less(hours.Set{g.away()})
 				break
 			}
@@ -173,10 +173,15 @@ func (g *ground) access(s *expand.Step) hours.Set {
 	return set
 }
 
-// away is when the things that go along are not at home (R1).
+// away is when the things that go along are not at home (R1): to the end where the hours are
+// carried on past the window, for nobody comes home then (R18).
 func (g *ground) away() hours.Span {
+	away := hours.Span{From: g.work.Window.Opens, To: g.work.Window.Closes}
 	if t := g.work.Trip; t != nil {
-		return hours.Span{From: t.Leaves, To: t.Home}
+		away = hours.Span{From: t.Leaves, To: t.Home}
 	}
-	return hours.Span{From: g.work.Window.Opens, To: g.work.Window.Closes}
+	if g.work.Carried {
+		away.To = g.span.To
+	}
+	return away
 }
