@@ -52,7 +52,7 @@ func TestLattice(t *testing.T) {
 	rapid.Check(t, func(rt *rapid.T) {
 		s := drawSmall(rt, 30, 6)
 		a := settled(rt, s)
-		b := newBrute(a.Work, 30)
+		b := newBrute(a.Work, 30, 30)
 		best, p := b.optimum()
 		if b.nodes > mostNodes {
 			n.skipped++
@@ -65,6 +65,28 @@ func TestLattice(t *testing.T) {
 		if p != nil && a.Verdict == plan.Fits && a.Finish <= best-30 { // off the lattice less is possible: a start just after a meal
 			rt.Fatalf("finishes %d min before the best that trying everything finds:%v\nand not%v\n%s", best-a.Finish, show(a.Work, a.Plan), show(a.Work, p), s.yaml())
 		}
+	})
+	t.Log(n)
+	if n.missed > 0 || n.later > 0 {
+		t.Errorf("of %d jobs that fit %d were not settled, and %d have an earlier finish than was found", n.fits, n.missed, n.later)
+	}
+}
+
+// TestOffLattice does the same for jobs in which lengths are any minutes: what is found is no
+// worse than the best with starts on the half hour.
+func TestOffLattice(t *testing.T) {
+	checks(t, 40)
+	n := &tally{t: t}
+	rapid.Check(t, func(rt *rapid.T) {
+		s := drawSmall(rt, 10, 6)
+		a := settled(rt, s)
+		b := newBrute(a.Work, 30, 10)
+		best, p := b.optimum()
+		if b.nodes > mostNodes {
+			n.skipped++
+			return
+		}
+		compare(rt, s, a, p, int(best-a.Work.Span.From), n)
 	})
 	t.Log(n)
 	if n.missed > 0 || n.later > 0 {

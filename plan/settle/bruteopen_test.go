@@ -15,7 +15,8 @@ import (
 // minute by itself, and tries out everything that is left.
 type brute struct {
 	w     *expand.Work // with a short span: nothing past the window matters here
-	grain int          // minutes between the starts tried; all that is open changes on it
+	grain int          // minutes between the starts tried
+	tick  int          // minutes: all that is open changes on it
 	hi    hours.Minute // nothing is tried after it
 	lines map[string][]bool
 
@@ -26,14 +27,14 @@ type brute struct {
 	beside  [][][]set  // by step, other step, option: the other's options that can stand beside it
 }
 
-func newBrute(w *expand.Work, grain int) *brute {
+func newBrute(w *expand.Work, grain, tick int) *brute {
 	c := *w
 	end := w.Window.Closes
 	if w.Trip != nil {
 		end = w.Trip.Home
 	}
 	c.Span.To = end + 2*1440
-	b := &brute{w: &c, grain: grain, hi: end + 1440, lines: map[string][]bool{}, between: map[[2]int][]int{}}
+	b := &brute{w: &c, grain: grain, tick: tick, hi: end + 1440, lines: map[string][]bool{}, between: map[[2]int][]int{}}
 	b.clashes = b.clashing()
 	for k, l := range w.Links {
 		if l.From != nil {
@@ -96,7 +97,7 @@ func (b *brute) access(s *expand.Step, team []string) []bool {
 	return l
 }
 
-// probe plans one minute of a step, once for every grain, and asks which of these break a rule.
+// probe plans one minute of a step, once for every tick, and asks which of these break a rule.
 func (b *brute) probe(w *expand.Work, s expand.Step, team []string, keeper string, rules []string) []bool {
 	probes := *w
 	probes.Steps, probes.Links, probes.Orders, probes.Deadlines = nil, nil, nil, nil
@@ -105,7 +106,7 @@ func (b *brute) probe(w *expand.Work, s expand.Step, team []string, keeper strin
 	s.Deadline, s.NotBefore = hours.Far, hours.Never
 	line := make([]bool, b.index(b.hi))
 	var at []int
-	for i := 0; i < len(line); i += b.grain {
+	for i := 0; i < len(line); i += b.tick {
 		t := b.minute(i)
 		if s.Site && t+1+hours.Minute(s.Watch) > w.Window.Closes {
 			continue // past the window: never
@@ -128,7 +129,7 @@ func (b *brute) probe(w *expand.Work, s expand.Step, team []string, keeper strin
 		}
 	}
 	for k, i := range at {
-		for j := i; j < min(i+b.grain, len(line)) && !closed[probes.Steps[k].Key()]; j++ {
+		for j := i; j < min(i+b.tick, len(line)) && !closed[probes.Steps[k].Key()]; j++ {
 			line[j] = true
 		}
 	}

@@ -16,17 +16,38 @@ type option struct {
 	end hours.Minute // its finish, fire watches included
 }
 
-// options lists every way to do a step with a start on the lattice.
+// options lists every way to do a step with a start on the lattice, or, for what begins when
+// another step ends, with each end of that.
 func (b *brute) options(s *expand.Step) []option {
 	var out []option
+	starts := b.starts(s)
 	for _, c := range b.choices(s) {
-		for i := 0; i < b.index(b.hi); i += b.grain {
+		for _, i := range starts {
 			if o, ok := b.at(s, c, i); ok {
 				out = append(out, o)
 			}
 		}
 	}
 	return out
+}
+
+func (b *brute) starts(s *expand.Step) []int {
+	var out []int
+	for i := 0; i < b.index(b.hi); i += b.grain {
+		out = append(out, i)
+	}
+	for _, l := range b.w.Links {
+		if l.To != s || l.From == nil || l.Max != 0 {
+			continue
+		}
+		for _, o := range b.opts[l.From.Index] {
+			if i := b.index(o.Finish); i < b.index(b.hi) {
+				out = append(out, i)
+			}
+		}
+	}
+	slices.Sort(out)
+	return slices.Compact(out)
 }
 
 // choice is a choice of people for a step.

@@ -79,7 +79,7 @@ func (b *brute) sharesPeople(x, y *option, but *without) bool {
 	for _, d := range x.duties() {
 		for _, e := range y.duties() {
 			left := but.person == d.who && (but.step == x.s || but.step == y.s)
-			if d.who == e.who && !left && d.Overlaps(e.Span) && !(d.watch && e.watch && x.s.Place == y.s.Place && x.s.Face == y.s.Face) {
+			if d.who == e.who && !left && d.Overlaps(e.Span) && !(d.watch && e.watch && x.s.Face != nil && x.s.Face == y.s.Face) {
 				return true
 			}
 		}

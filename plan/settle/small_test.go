@@ -57,7 +57,7 @@ type small struct {
 	orders   []string
 	closeAt  string
 	openAt   string
-	grain    int // all times of the job are multiples of this many minutes
+	grain    int // all opening hours are multiples of this many minutes; with 30 all lengths too
 	deadline bool
 }
 
@@ -157,6 +157,9 @@ func (d dice) span(what string, n, m int) string {
 	if d.grain == 30 {
 		return fmt.Sprintf("%d min", 30*rapid.IntRange(n, m).Draw(d.t, what))
 	}
+	if strings.Contains(what, "ing up") {
+		return fmt.Sprintf("%d min", 10*rapid.IntRange(n, 3*m).Draw(d.t, what))
+	}
 	return fmt.Sprintf("%d min", rapid.IntRange(max(1, 30*n-20), 30*m).Draw(d.t, what))
 }
 
@@ -189,7 +192,7 @@ func (s *small) pierHours(d dice) {
 		"open: [daily 07:00-10:00 12:30-18:00]", "open: [daily 09:00-11:00 11:30-14:00, daily 20:00-02:00]")}
 	s.pier = append(s.pier, "fire watch: "+d.of("fire watch", "30 min", "60 min", "0 min"))
 	if d.one("clearing up", 5) {
-		s.pier = append(s.pier, "opening up: "+d.span("opening up", 1, 1), "clearing up: "+d.span("clearing", 1, 1))
+		s.pier = append(s.pier, "opening up: "+d.span("opening up", 1, 1), "clearing up: "+d.span("clearing up", 1, 1))
 	}
 	if s.grain == 30 {
 		s.pier = append(s.pier, "face factor: 1")
