@@ -42,10 +42,17 @@ func (t Ticket) String() string {
 }
 
 // Covers gives the height of tide, in metres on the table's datum, at which the workface is
-// covered: its own, else its level.
+// covered: its own, else its level, less the allowance for pressure and surge where the job file
+// gives one (R26).
 func (f *Workface) Covers() float64 {
+	level := f.Level.Value
 	if f.CoversAt.Pos.Given() {
-		return f.CoversAt.Value
+		level = f.CoversAt.Value
 	}
-	return f.Level.Value
+	if f.Place != nil && f.Place.Sea.AllowPos.Given() {
+		if low, err := f.Place.Sea.Allow.Level(true, level); err == nil {
+			return low.Value
+		}
+	}
+	return level
 }

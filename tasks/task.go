@@ -108,7 +108,7 @@ type Task struct {
 	Joins     []Named  // fit-up, weld: assemblies or parts that hang together from its finish on
 	FitProved []string // fit-up: survey, template or trial fit that proves that it fits
 	TaskNature
-	SentOut   string   // plain: galvanizing, machining, profile cutting or other work sent out
+	SentOut string // plain: galvanizing, machining, profile cutting or other work sent out
 }
 
 // Use is so many of a kit.

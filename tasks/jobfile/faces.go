@@ -24,6 +24,9 @@ var faceSection = section{name: "Workface", where: "places / NAME / workfaces / 
 	{name: "over water", takes: yesNo, usual: "no", example: "yes", says: "over water (R14)"},
 	{name: "between tides", takes: yesNo, usual: "yes with a level", example: "yes", says: "between the tides (R14)"},
 	{name: "dry hours", takes: slots, usual: "not limited", example: "[2027-04-06 08:00-18:00]", says: "the only times in which it is dry and warm enough for what needs that"},
+	{name: "indoors", takes: yesNo, usual: "no", example: "yes", says: "the place's weather does not hold there: its steel has the place's `steel temperature` (R25)"},
+	{name: "sheltered", takes: yesNo, usual: "no", example: "yes", says: "rain and wind are kept off, cold and damp are not (R25)"},
+	{name: "wash", takes: anAmount, dim: quantity.Time, low: 0, high: 480, usual: "15 min where water covers it (house judgement)", example: "20 min", says: "fresh-water wash and drying at every start of a weld or coat there (R26)"},
 	{name: "opening up", takes: anAmount, dim: quantity.Time, low: 0, high: 240, usual: "0 min", example: "15 min", says: "at the start of every reach, not working time"},
 	{name: "clearing up", takes: anAmount, dim: quantity.Time, low: 0, high: 240, usual: "0 min", example: "15 min", says: "at the end of every reach, not working time"},
 }}
@@ -50,6 +53,7 @@ func (r *reader) face(p *tasks.Place, name string, at, n *yaml.Node) *tasks.Work
 	w.Reach, w.ReachPos = r.reach(p, f), f.pos("reach")
 	w.Dry = f.slots("dry hours", p.Zone)
 	w.OpeningUp, w.ClearingUp = f.amount("opening up", 0), f.amount("clearing up", 0)
+	w.Indoors, w.Sheltered, w.Wash = f.yes("indoors"), f.yes("sheltered"), f.amount("wash", 0)
 	r.faceMakesSense(p, w, f)
 	return w
 }

@@ -82,28 +82,6 @@ func (f *fields) sheetFaults(name string, err error) {
 	f.r.advice(f.vals[name], f.lead(name), err, "mend the file")
 }
 
-// tide reads a place's tide table.
-func (r *reader) tide(p *tasks.Place, f *fields) {
-	r.tideTried[p] = true
-	file, ok := f.word("table")
-	if !ok {
-		return
-	}
-	data, shown, ok := f.beside("table", file)
-	if !ok {
-		return
-	}
-	t, err := site.ReadTideTable(shown, bytes.NewReader(data))
-	if err != nil {
-		f.sheetFaults("table", err)
-		return
-	}
-	p.Tide = t
-	for _, n := range t.Notes {
-		r.note(f.pos("table"), "%s", n)
-	}
-}
-
 // reachFile reads a file of times in which a workface can be reached.
 func (r *reader) reachFile(f *fields) [][2]hours.Minute {
 	file, ok := f.word("file")

@@ -22,6 +22,7 @@ func (r *reader) judge() {
 	r.judgeDeadlines()
 	r.judgeStays()
 	r.judgeTides()
+	r.judgeSea()
 	r.judgeTasks()
 }
 

@@ -26,6 +26,8 @@ var (
 	surfaceKey = key{name: "surface", takes: names, example: "frame", says: "assemblies, or parts as frame/base"}
 	areaKey    = key{name: "area", takes: anAmount, dim: quantity.Area, low: 0.01, high: 1e5, usual: "that of the surface", example: "4 m2", says: "overrules that of the surface"}
 	gradeKey   = key{name: "grade", takes: aText, example: "Sa 2 1/2", says: "grade of preparation: Sa 1 to Sa 3, St 2, St 3, an SSPC name, bare metal, solvent clean, fresh-water wash"}
+	patchKey   = key{name: "patch", takes: anAmount, dim: quantity.Length, low: 0, high: 1e7, without: "area", example: "9.6 m", says: "in place of a surface: the strips, 50 mm to each side, of so much seam that was left bare"}
+	offKey     = key{name: "paint off first", takes: yesNo, usual: "no", example: "yes", says: "where it is hot work on what is coated, the paint is taken off first (R27)"}
 	shapeKey   = key{name: "shape", takes: aWord, words: coat.Surfaces(), usual: "sections", example: "lattice", says: "how the surface slows the work"}
 	partKey    = key{name: "part", takes: names, example: "frame/base", says: "assembly or part it works on"}
 	liftsKey   = key{name: "lifts", takes: aName, example: "frame", says: "assembly or part"}
@@ -46,6 +48,7 @@ var (
 		holdKey,
 		{name: "overweld", takes: yesNo, usual: "as for the job", example: "no", says: "more is laid than is drawn"},
 		{name: "advise order", takes: yesNo, usual: "no", example: "yes", says: "advise an order of its joints that keeps shrinkage in balance; each joint says `at`"},
+		offKey,
 		{name: "repair of", takes: aName, example: "weld frame", without: "joints", says: "a weld task: this one is what testing may find to repair; hours, `chance` and wait are worked out from it"},
 	}}
 	cutKeys = section{name: "Cut", where: "tasks / NAME of kind cut", host: "tasks/cut lugs", says: "a cut", more: &taskSection, keys: []key{
@@ -58,16 +61,22 @@ var (
 		{name: "current", takes: anAmount, dim: quantity.Current, low: 15, high: 400, usual: "40 A", example: "65 A", says: "of a plasma set: it cuts so much and no more"},
 		{name: "speed", takes: anAmount, dim: quantity.Travel, low: 5, high: 20000, usual: "by way and thickness", example: "400 mm/min", says: "cutting speed, in place of the table's"},
 		{name: "thickness", takes: anAmount, dim: quantity.Length, low: 0.1, high: 500, example: "16 mm", says: "thickness cut"},
-		partKey,
+		partKey, offKey,
 	}}
 	prepKeys = section{name: "Surface prep", where: "tasks / NAME of kind surface prep", host: "tasks/blast", says: "a surface prep", more: &taskSection, keys: []key{
 		surfaceKey, areaKey, gradeKey, shapeKey,
+		patchKey,
+		{name: "holds", takes: anAmount, dim: quantity.Time, low: 1, high: 30 * 1440, usual: "4 h at the window's place, 8 h elsewhere (R25)", example: "24 h", says: "longest wait to the start of the first coat"},
 		{name: "method", takes: aWord, words: []string{"blast", "power tool", "hand tool", "needle gun", "solvent wipe", "wash"}, usual: "that of the grade", example: "blast", says: "how"},
 		{name: "condition", takes: aWord, words: []string{"new", "light rust", "heavy rust", "painted"}, usual: "new", example: "light rust", says: "the steel before"},
 	}}
 	coatKeys = section{name: "Coat", where: "tasks / NAME of kind coat", host: "tasks/prime", says: "a coat", more: &taskSection, keys: []key{
 		surfaceKey, areaKey, gradeKey, shapeKey,
 		{name: "method", takes: aWord, words: coat.Methods(), usual: "brush", example: "airless", says: "how"},
+		patchKey,
+		{name: "stripe", takes: anAmount, dim: quantity.Length, low: 0, high: 1e7, example: "12 m", says: "edges and welds striped by brush before the first full coat, with a wait of its own (R11)"},
+		{name: "leave bare", takes: anAmount, dim: quantity.Length, low: 0, high: 1e7, example: "9.6 m", says: "seams kept bare and taped, 50 mm to each side: taken off the area (R27)"},
+		{name: "profile", takes: anAmount, dim: quantity.Film, low: 0, high: 150, usual: "0 um", example: "60 um", says: "of blasted steel, Rz, that the first coat fills"},
 		{name: "coats", takes: names, need: true, example: "[primer, primer]", says: "paints in order"},
 	}}
 	liftKeys = section{name: "Lift", where: "tasks / NAME of kind lift", host: "tasks/load", says: "a lift", more: &taskSection, keys: []key{
@@ -124,7 +133,11 @@ func (r *reader) byKind(t *tasks.Task, f *fields) {
 		t.Area, t.Grade, t.Shape = f.amount("area", 0), f.line("grade"), f.choice("shape", "")
 		t.Method = f.choice("method", "")
 		r.grade(t, f)
-		if !f.tried("surface") && !f.tried("area") && !timed {
+		t.Patch = f.amount("patch", 0)
+		if f.has("patch") && f.has("area") {
+			f.fault("patch", "keep one of the two", "an area is given as well")
+		}
+		if !f.tried("surface") && !f.tried("area") && !f.tried("patch") && !timed {
 			f.fault("", "add `surface: frame` (an assembly), `area: 4 m2`, or `hours`", "nothing says how large the surface is")
 		}
 	}
@@ -139,6 +152,7 @@ func (r *reader) byKind(t *tasks.Task, f *fields) {
 	switch t.Kind {
 	case tasks.Weld:
 		t.Seams = r.seams(f)
+		t.PaintOff = f.yes("paint off first")
 		t.Steel, t.Hold, t.Overweld, t.Advise = f.line("steel"), f.hold(), f.yesOrNot("overweld"), f.yes("advise order")
 		if f.tried("repair of") && f.tried("joints") {
 			f.fault("repair of", "leave the joints out", "the joints are those of the weld that is repaired")
@@ -147,16 +161,17 @@ func (r *reader) byKind(t *tasks.Task, f *fields) {
 			f.fault("", "add `joints: [{fillet: {leg: 6 mm}, length: 2 m, position: PB}]`, or `hours`", "it has neither joints nor hours")
 		}
 	case tasks.Cut:
-		t.Thickness = f.amount("thickness", 0)
+		t.Thickness, t.PaintOff = f.amount("thickness", 0), f.yes("paint off first")
 		t.Bevel, t.Current, t.Speed, t.Mass = f.amount("bevel", 0), f.amount("current", 0), f.amount("speed", 0), f.amount("mass", 0)
 		t.Pierces, t.Count = f.count("pierces", 0), f.count("count", 0)
 		if !timed && !f.tried("part") && !(f.tried("length") && f.tried("thickness")) && !weld.IsActivity(t.By) {
 			f.fault("", "add `length: 1.9 m` and `thickness: 16 mm`, `part: frame/base`, or `hours`", "nothing says how much is cut")
 		}
 	case tasks.Prep:
-		t.Condition = f.choice("condition", "")
+		t.Condition, t.Holds = f.choice("condition", ""), f.amount("holds", 0)
 	case tasks.Coat:
 		r.coats(t, f)
+		t.Stripe, t.Bare, t.Profile = f.amount("stripe", 0), f.amount("leave bare", 0), f.amount("profile", 0)
 	case tasks.Lift:
 		t.Radius = f.amount("radius", 0)
 	case tasks.Test:

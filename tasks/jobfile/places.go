@@ -40,15 +40,6 @@ var permitSection = section{name: "Permit", where: "places / NAME / permits / NA
 	{name: "issue", takes: anAmount, dim: quantity.Time, low: 0, high: 240, usual: "0 min", example: "30 min", says: "until it is handed out, at the start of each validity"},
 }}
 
-var climateSection = section{name: "Climate", where: "places / NAME / climate", host: "places/pier/climate", says: "Usual weather, for the odds.", keys: []key{
-	{name: "month", takes: aWord, words: monthNames(), example: "April", says: "the month that the figures are of"},
-	{name: "wet days", takes: aCount, low: 0, high: 31, example: "14", says: "days with rain in that month"},
-}}
-
-var tideSection = section{name: "Tide", where: "places / NAME / tide", host: "places/pier/tide", says: "The tide at a place.", keys: []key{
-	{name: "table", takes: itsOwn, form: "file", shape: anyText, need: true, example: "tide.csv", says: "high and low waters: a CSV file whose head states `# zone:` and `# datum:`"},
-}}
-
 func monthNames() []string {
 	var out []string
 	for m := time.January; m <= time.December; m++ {
@@ -107,9 +98,7 @@ func (r *reader) place(name string, at, n *yaml.Node) *tasks.Place {
 	p.Steel = f.amount("steel temperature", 10)
 	p.Mains = f.amount("mains", 0)
 	if f.has("climate") {
-		g := r.open(f.node("climate"), &climateSection, what+": climate")
-		p.Climate = &tasks.Climate{Pos: f.pos("climate"), WetDays: g.count("wet days", 0)}
-		p.Climate.Month = time.Month(slices.Index(monthNames(), g.choice("month", "")) + 1)
+		r.climate(p, r.open(f.node("climate"), &climateSection, what+": climate"))
 	}
 	if f.has("tide") {
 		r.tide(p, r.open(f.node("tide"), &tideSection, what+": tide"))

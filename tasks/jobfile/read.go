@@ -117,6 +117,7 @@ func (r *reader) read(root *yaml.Node) {
 	r.readVehicles(f)
 	r.readChanges(f)
 	r.readHolidays(f)
+	r.nature()
 	r.judge()
 }
 

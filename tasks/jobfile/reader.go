@@ -28,6 +28,8 @@ type reader struct {
 	site        *tasks.Place          // the window's place
 	onHolidays  []*tasks.Place        // closed on public holidays
 	tideTried   map[*tasks.Place]bool // a tide table is named, be it a faulty one
+	climates    []climate             // to be laid out by hour when the windows are known
+	predicted   []prediction          // tides to be predicted then
 	windows     []window
 	moments     []pending
 	personRefs  []personRef

@@ -11,7 +11,7 @@ import (
 
 // sections lists every section in the order of the manual.
 func sections() []*section {
-	out := []*section{&topSection, &placeSection, &faceSection, &permitSection, &tideSection, &climateSection,
+	out := []*section{&topSection, &placeSection, &faceSection, &permitSection, &tideSection, &craftSection, &climateSection, &monthSection,
 		&tripSection, &outSection, &backSection, &windowSection, &personSection, &ticketSection, &kitSection, &hireSection,
 		&procedureSection, &byPersonSection, &setSection, &cableSection, &ratesSection, &steelSection, &paintSection, &assemblySection, &partSection, &taskSection, &stopSection, &linkSection, &slingsSection, &secondSection, &handsSection, &pushSection}
 	out = append(out, kindSections()...)

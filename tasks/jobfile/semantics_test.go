@@ -110,7 +110,7 @@ func TestTripWithBoat(t *testing.T) {
 			}
 		}
 	}
-	if len(job.Notes) != 1 || !strings.Contains(job.Notes[0].Text, "as long at sea as on the way out") {
+	if len(job.Notes) != 2 || !strings.Contains(job.Notes[0].Text, "as long at sea as on the way out") || !strings.Contains(job.Notes[1].Text, "no allowance for pressure and surge") {
 		t.Errorf("notes: %v", job.Notes)
 	}
 }

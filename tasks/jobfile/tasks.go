@@ -53,6 +53,7 @@ var taskSection = section{name: "Task", where: "tasks / NAME", host: "tasks/rot 
 	{name: "fire watch", takes: anAmount, dim: quantity.Time, low: 0, high: 480, usual: "that of the place", example: "90 min", says: "watch after it (R13)"},
 	{name: "alone", takes: yesNo, usual: "no", example: "yes", says: "its author says that it may be done alone (R14)"},
 	{name: "needs light", takes: yesNo, usual: "no", example: "yes", says: "needs daylight"},
+	{name: "may be covered", takes: yesNo, usual: "coats by their `immersion min`, others yes", example: "no", says: "by water before it is done, its standing time included (R26)"},
 	{name: "states", takes: names, example: "[grit]", says: "states it puts its workface in, beyond those of its kind: " + list(stateNames, 20) + ", or others that `clashes` names"},
 }}
 
@@ -159,6 +160,7 @@ func (r *reader) task(name string, at, n *yaml.Node) *draft {
 	}
 	t.Light = f.yes("needs light")
 	t.States = texts(f.names("states"))
+	t.Covered = f.yesOrNot("may be covered")
 	r.byKind(t, f)
 	r.liftingOf(t, f)
 	d := &draft{t: t, f: f, links: r.linkDrafts(f)}
@@ -193,6 +195,11 @@ func (r *reader) taskMakesSense(t *tasks.Task, f *fields) {
 	}
 	if t.Light && t.Place != nil && !t.Place.HasAt {
 		f.fault("needs light", fmt.Sprintf("add `at: [57.6 N, 7.2 W]` to place %s", t.Place.Name), "daylight needs the position of the place")
+	}
+	if f.has("may be covered") && (t.Face == nil || !t.Face.Floods() && !(t.Place != nil && r.tideTried[t.Place])) && t.Place != nil {
+		f.fault("may be covered", "leave it out, or give the workface a `level`", "no water comes there")
+	} else if t.Covered != nil && !*t.Covered && f.has("standing") && !f.tried("hours") && !f.tried("man-hours") && t.Kind == tasks.Plain {
+		f.fault("may be covered", "put it on the task that the standing time follows, with this as its `standing`", "standing time alone cannot choose its tide")
 	}
 	if t.Kind == tasks.Plain && !f.tried("hours") && !f.tried("man-hours") && !f.tried("standing") {
 		f.fault("", "add `hours: 2 h`, `man-hours: 3` or `standing: 4 h`", "nothing says how long it takes")

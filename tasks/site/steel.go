@@ -18,6 +18,9 @@ type SteelRule struct {
 
 var usualSteel = SteelRule{NightPoor: 5, NightAverage: 2, SunAverage: 5, SunWarm: 20, Lag: 2}
 
+// UsualSteel gives the rule that holds where a climate has none of its own.
+func UsualSteel() SteelRule { return usualSteel }
+
 func (r *SteelRule) rule() SteelRule {
 	if r == nil {
 		return usualSteel
