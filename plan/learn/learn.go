@@ -52,7 +52,7 @@ const pollEvery = 100_000
 // is at the site), with named people. What the model leaves out can only make plans worse:
 // a bound and an Infeasible hold for the problem as it is, and Exact says whether the plan does.
 func Solve(p *problem.Problem, o Options) Result {
-	m, ok := build(p, true)
+	m, ok := build(p, named)
 	if !ok {
 		return none()
 	}
@@ -66,11 +66,23 @@ func Solve(p *problem.Problem, o Options) Result {
 // some work only their number counts, and every activity takes the kindest of its timings. Its Bound
 // holds for the problem, its Starts are no plan.
 func Relax(p *problem.Problem, o Options) Result {
-	m, ok := build(p, false)
+	m, ok := build(p, relaxed)
 	if !ok {
 		return none()
 	}
 	s := &search{model: m, opt: o}
+	return s.minimise()
+}
+
+// Within asks the same of one finish only: Infeasible is a proof that no plan finishes by then,
+// Feasible that the relaxed problem has a solution that does.
+func Within(p *problem.Problem, finish int, o Options) Result {
+	m, ok := build(p, relaxed)
+	if !ok || finish < 0 {
+		return none()
+	}
+	o.Best = min(finish, p.End) + 1
+	s := &search{model: m, opt: o, once: true}
 	return s.minimise()
 }
 

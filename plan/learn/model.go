@@ -8,18 +8,21 @@ import (
 // model is a problem in the engine's terms.
 type model struct {
 	*engine
-	p      *problem.Problem
-	acts   []act
-	start  []side  // by activity
-	finish []side  // by activity
-	length []int32 // the finish is the value of side finish plus this
-	end    side    // the finish of the whole
-	lags   []lag   // every lag of fixed length between two starts
-	team   []int   // by activity: its workface, for watches that may be shared
-	plain  bool    // every activity has one fixed length and one mode
-	kept   []Kept  // the fire watches of the last leaf
-	grids  map[*problem.Timing]*grid
-	steady map[*problem.Timing]spans
+	p       *problem.Problem
+	acts    []act
+	start   []side  // by activity
+	finish  []side  // by activity
+	length  []int32 // the finish is the value of side finish plus this
+	end     side    // the finish of the whole
+	lags    []lag   // every lag of fixed length between two starts
+	team    []int   // by activity: its workface, for watches that may be shared
+	plain   bool    // every activity has one fixed length and one mode
+	kept    []Kept  // the fire watches of the last leaf
+	guards  []guard // the limits that can be left out, nil if none can
+	guarded bool    // limits can be left out
+	zero    side    // with guarded: a variable that is 0
+	grids   map[*problem.Timing]*grid
+	steady  map[*problem.Timing]spans
 }
 
 // act is what the model knows of an activity beside its sides.
@@ -42,13 +45,25 @@ type lag struct {
 // latest is the longest horizon: above it minutes would not leave room for sums.
 const latest = int(far) / 4
 
-// build makes the model; ok is false if the problem contradicts itself at sight. With people it
-// is the job as it is, as far as the model goes; without, who does what is left out and every
-// activity takes the kindest of its timings, so that a bound holds for the job too.
-func build(p *problem.Problem, people bool) (*model, bool) {
-	m := &model{engine: newEngine(), p: p, plain: true, grids: map[*problem.Timing]*grid{}, steady: map[*problem.Timing]spans{}}
+// kind is what a model is for.
+type kind uint8
+
+const (
+	// relaxed: who does what is left out and every activity takes the kindest of its timings, so
+	// that a bound holds for the job too.
+	relaxed kind = iota
+	named        // the job as it is, with named people
+	guarded      // relaxed, with every limit behind a variable of its own
+)
+
+// build makes the model; ok is false if the problem contradicts itself at sight.
+func build(p *problem.Problem, kind kind) (*model, bool) {
+	m := &model{engine: newEngine(), p: p, plain: kind != guarded, guarded: kind == guarded, grids: map[*problem.Timing]*grid{}, steady: map[*problem.Timing]spans{}}
 	if p.End < 0 || p.End > latest {
 		return nil, false
+	}
+	if m.guarded {
+		m.zero = m.variable(0, 0)
 	}
 	for i := range p.Acts {
 		if !m.activity(i) {
@@ -62,17 +77,17 @@ func build(p *problem.Problem, people bool) (*model, bool) {
 	}
 	m.aim()
 	for i := range p.Links {
-		if !m.wait(&p.Links[i]) {
+		if !m.wait(&p.Links[i], m.guard(ByLink, i)) {
 			return nil, false
 		}
 	}
-	if !m.orders() || !m.apart() || !m.rules() {
+	if !m.guarded && !m.orders() || !m.apart() || !m.rules() {
 		return nil, false
 	}
 	if !m.resources() {
 		return nil, false
 	}
-	if people {
+	if kind == named {
 		return m, m.crews()
 	}
 	m.groups()
@@ -112,21 +127,41 @@ func (m *model) activity(i int) bool {
 	if fixed {
 		d = x.times[0].Length()
 	}
-	if a.From+d > last || a.From < 0 {
+	from := a.From
+	if m.guarded {
+		from, fixed = 0, fixed && isFixed(x.times[0])
+	}
+	upTo := last
+	if m.guarded {
+		upTo = m.p.End
+	}
+	if from+d > upTo || from < 0 {
 		return false
 	}
-	s := m.variable(int32(a.From), int32(last-d))
+	s := m.variable(int32(from), int32(upTo-d))
 	m.start, m.finish, m.length = append(m.start, s), append(m.finish, s), append(m.length, int32(d))
 	if !fixed {
-		m.finish[i] = m.variable(int32(a.From), int32(last))
+		m.finish[i] = m.variable(int32(from), int32(upTo))
+	}
+	if m.guarded {
+		m.limit(i, last)
 	}
 	return true
 }
 
 // timed ties the finish of activity i to its start, by the kindest of its timings.
 func (m *model) timed(i int) {
-	if m.start[i] != m.finish[i] {
-		m.tie(i, m.acts[i].grids, always)
+	if m.start[i] == m.finish[i] {
+		return
+	}
+	on := m.guard(ByHours, i)
+	m.tie(i, m.acts[i].grids, on)
+	if on.s >= 0 { // without its hours it still takes its minutes
+		least := m.acts[i].times[0].Length()
+		for _, w := range m.acts[i].times {
+			least = min(least, w.Length())
+		}
+		m.join(m.start[i], m.finish[i], int32(least), always)
 	}
 }
 

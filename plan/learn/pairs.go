@@ -113,13 +113,18 @@ func (w *network) force(pairs []pair, length []int32) (open []pair, ok bool) {
 // apart makes the pairs of the problem: the one that goes first is over, and its tail too, before
 // the other starts. Pairs with an activity that may take no time are left out.
 func (m *model) apart() bool {
-	for _, p := range m.p.Pairs {
+	for k, p := range m.p.Pairs {
 		if m.acts[p.A].empty || m.acts[p.B].empty {
 			continue
 		}
 		x := m.variable(0, 1)
-		m.ahead(p.A, p.B, p.TailA, fact{x, 1})
-		m.ahead(p.B, p.A, p.TailB, fact{x ^ 1, 0})
+		first, second := fact{x, 1}, fact{x ^ 1, 0}
+		if on := m.guard(ByPair, k); on.s >= 0 { // neither order, if the pair is left out
+			second = fact{m.variable(0, 1), 1}
+			m.add([]fact{on.not(), first, second})
+		}
+		m.ahead(p.A, p.B, p.TailA, first)
+		m.ahead(p.B, p.A, p.TailB, second)
 	}
 	return true
 }
@@ -137,21 +142,25 @@ func (m *model) ahead(a, b int, tail func(int) int, on fact) {
 func (m *model) rules() bool {
 	for k := range m.p.Orders {
 		o := &m.p.Orders[k]
-		var any []fact
-		for _, c := range o.Choices {
-			on := always
-			if len(o.Choices) > 1 {
-				x := m.variable(0, 1)
-				on = fact{x, 1}
-				any = append(any, on)
-			}
-			m.choice(c, on)
-		}
-		if len(o.Choices) == 0 {
+		guard := m.guard(ByOrder, k)
+		if len(o.Choices) == 0 && guard.s < 0 {
 			return false
 		}
-		if len(any) > 0 {
-			m.add(any)
+		if len(o.Choices) == 1 {
+			m.choice(o.Choices[0], guard)
+			continue
+		}
+		var any []fact
+		for _, c := range o.Choices {
+			on := fact{m.variable(0, 1), 1}
+			any = append(any, on)
+			m.choice(c, on)
+		}
+		if guard.s >= 0 {
+			any = append(any, guard.not())
+		}
+		if !m.add(any) {
+			return false
 		}
 	}
 	return true

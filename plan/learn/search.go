@@ -16,6 +16,10 @@ type search struct {
 	assume []fact
 	people bool         // the model names people: plans are checked piece by piece
 	actOf  map[side]int // activity by the side of its start
+	once   bool         // the first plan is enough
+	silent bool         // plans are not taken, only counted as found
+	last   outcome      // why a contradiction was not found
+	core   []fact       // assumptions that cannot hold together, after refused
 	loose  side         // variables from here on are settled last
 }
 
@@ -64,6 +68,7 @@ func (s *search) run(assume []fact, limit int64, early bool) outcome {
 		}
 		if k := int(s.level()); k < len(assume) {
 			if s.fails(assume[k]) {
+				s.core = s.behind(assume[k])
 				s.retreat(0)
 				return refused
 			}
@@ -81,8 +86,15 @@ func (s *search) run(assume []fact, limit int64, early bool) outcome {
 			}
 			continue
 		}
+		if s.silent {
+			s.retreat(0)
+			return found
+		}
 		if !s.take() {
 			return over
+		}
+		if s.once {
+			return stopped
 		}
 		return found
 	}

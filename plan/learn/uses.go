@@ -16,7 +16,7 @@ func (m *model) resources() bool {
 		calm := true
 		for i := range m.p.Acts {
 			for _, w := range m.uses(i, k) {
-				if w.amount > clip(m.p.Res[k].Capacity) && !m.acts[i].empty {
+				if w.amount > clip(m.p.Res[k].Capacity) && !m.acts[i].empty && !m.guarded {
 					return false
 				}
 				calm = calm && w.mask == nil && w.team == 0
@@ -24,6 +24,9 @@ func (m *model) resources() bool {
 			}
 		}
 		capacity := clip(m.p.Res[k].Capacity)
+		if len(us) > 0 {
+			calm = m.only(ws, m.guard(ByResource, k)) && calm
+		}
 		switch {
 		case len(us) == 0:
 		case calm:
@@ -151,6 +154,11 @@ func (m *model) group(g []int) {
 		total += n
 	}
 	if total > int32(len(g)) {
+		on := m.guard(ByPeople, len(m.guards))
+		if on.s >= 0 {
+			m.guards[len(m.guards)-1].People = g
+		}
+		m.only(ws, on)
 		newWorktable(m.engine, int32(len(g)), ws)
 	}
 }
