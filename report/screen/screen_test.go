@@ -279,10 +279,14 @@ func TestLeaving(t *testing.T) {
 func TestResize(t *testing.T) {
 	u := start(t.Context(), t, nil)
 	u.s.SetSize(140, 40)
-	u.s.PostEventWait(tcell.NewEventResize(140, 40))
+	if err := u.s.PostEvent(tcell.NewEventResize(140, 40)); err != nil {
+		t.Fatal(err)
+	}
 	u.see(strings.Repeat("─", 100))
 	u.s.SetSize(30, 8)
-	u.s.PostEventWait(tcell.NewEventResize(30, 8))
+	if err := u.s.PostEvent(tcell.NewEventResize(30, 8)); err != nil {
+		t.Fatal(err)
+	}
 	u.see("Make the window larger")
 	u.press(tcell.KeyCtrlC)
 	u.left()
