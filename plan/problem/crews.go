@@ -124,8 +124,11 @@ func (m *crewMaker) modes(s *expand.Step) ([]Mode, string) {
 
 // noOpening says why no start is possible for anybody.
 func (m *crewMaker) noOpening(s *expand.Step, teams []team, base hours.Set, room bool) string {
-	longest := 0
-	for _, b := range base.Joined(Meal, nil) {
+	longest, openings := 0, base
+	if s.OverMeals {
+		openings = base.Joined(Meal, nil)
+	}
+	for _, b := range openings {
 		longest = max(longest, base.Count(b))
 	}
 	need := s.Working + s.SetUp
@@ -134,6 +137,8 @@ func (m *crewMaker) noOpening(s *expand.Step, teams []team, base hours.Set, room
 		return "there is no open hour for it"
 	case s.InOneGo && longest < need:
 		return fmt.Sprintf("it goes in one go and needs %d min; the longest opening has %d min", need, longest)
+	case s.Lone && m.alone(s, teams, base):
+		return "it may not be done alone (R14), and nobody else is on shift there when those who can do it are; have a second person there, or write alone: yes"
 	case !room:
 		return "nobody who can do it is on shift in its open hours"
 	}
@@ -142,6 +147,20 @@ func (m *crewMaker) noOpening(s *expand.Step, teams []team, base hours.Set, room
 		most = max(most, m.together(s, t.crew, base).Total())
 	}
 	return fmt.Sprintf("its %d min do not fit into the %d min that are open to those who can do it", need, most)
+}
+
+// alone says whether some team could work, but for the want of company.
+func (m *crewMaker) alone(s *expand.Step, teams []team, base hours.Set) bool {
+	for _, t := range teams {
+		set := base
+		for _, p := range t.crew {
+			set = set.And(m.people[p].Shifts[s.Place])
+		}
+		if len(set) > 0 && len(m.together(s, t.crew, base)) == 0 {
+			return true
+		}
+	}
+	return false
 }
 
 type team struct {
