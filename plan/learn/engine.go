@@ -29,7 +29,8 @@ type engine struct {
 	stampNow int64
 
 	conflicts int64
-	dead      bool // no solution at all under the root facts
+	heard     func(f fact, w why, behind []fact) // told of every reason given, by tests; nil: nobody
+	dead      bool                               // no solution at all under the root facts
 }
 
 // rule is a propagator: it raises sides from the bounds of several variables, and can say why.
@@ -88,6 +89,7 @@ func (e *engine) raise(s side, v int32, w why) bool {
 
 // reason gives the facts behind f, raised for w at entry idx.
 func (e *engine) reason(f fact, w why, idx int32, out []fact) []fact {
+	base := len(out)
 	switch w.kind {
 	case whyClause:
 		for _, g := range e.clause(w.id) {
@@ -96,11 +98,14 @@ func (e *engine) reason(f fact, w why, idx int32, out []fact) []fact {
 			}
 		}
 	case whyArc:
-		return e.arcReason(w.id, f, out)
+		out = e.arcReason(w.id, f, out)
 	case whyOff:
-		return e.offReason(w.id, idx, out)
+		out = e.offReason(w.id, idx, out)
 	case whyRule:
-		return e.rules[w.id].explain(e, f, w, idx, out)
+		out = e.rules[w.id].explain(e, f, w, idx, out)
+	}
+	if e.heard != nil {
+		e.heard(f, w, out[base:])
 	}
 	return out
 }

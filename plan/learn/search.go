@@ -107,7 +107,7 @@ func (s *search) take() bool {
 	for x := 0; x < len(s.now); x += 2 {
 		s.best = append(s.best, s.now[x])
 	}
-	s.starts = s.starts[:0]
+	s.starts = make([]int, 0, len(s.start))
 	s.modes, s.keep = s.modes[:0], append(s.keep[:0], s.kept...)
 	for i, x := range s.start {
 		s.starts = append(s.starts, int(s.now[x]))
@@ -144,7 +144,7 @@ func (s *search) adopt(x *beast) bool {
 	if s.best == nil {
 		s.best = make([]int32, len(s.now)/2)
 	}
-	s.starts = s.starts[:0]
+	s.starts = make([]int, 0, len(s.start))
 	s.modes = make([]int, len(s.start))
 	for i, side := range s.start {
 		s.best[side/2] = x.start[i]
