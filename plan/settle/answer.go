@@ -19,6 +19,10 @@ import (
 // the job file. The plan is not shown.
 var ErrChecker = errors.New("the independent checker refused the plan")
 
+// explainAll is how many steps a job may have for its plans on every basis to be explained; above
+// it only the plan on likely hours is.
+const explainAll = 250
+
 // asked is one basis being settled.
 type asked struct {
 	ctx    context.Context
@@ -207,7 +211,7 @@ func (a *asked) keep(s *solve.Schedule, explain bool) error {
 	a.out.Finish = a.at(s.Score.Finish)
 	a.out.InHand = int(a.work.Window.Closes - a.out.Finish)
 	a.deadlines(s)
-	if explain {
+	if explain || len(p.Steps) <= explainAll {
 		a.out.Rows = solve.Rows(a.carry, s, a.stop)
 		a.out.Governing = solve.Governing(a.carry, s, a.out.Rows)
 		a.lastStarts()

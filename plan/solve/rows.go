@@ -17,6 +17,7 @@ func Rows(p *problem.Problem, s *Schedule, stop func() bool) []plan.Row {
 	r := &rower{g: newGenerator(p), p: p, s: s, rows: make([]plan.Row, len(p.Acts))}
 	r.g.load(s)
 	r.order = r.g.list()
+	r.inOrder()
 	for i := range p.Acts {
 		r.rows[i].SetBy = r.setBy(i)
 		r.rows[i].Leeway = -1
@@ -40,7 +41,56 @@ type rower struct {
 	p     *problem.Problem
 	s     *Schedule
 	order []int
+	ahead [][]int // by activity: those that come before it in the plan's order, for want of people, kit, room or a clear workface
 	rows  []plan.Row
+}
+
+// inOrder finds for every activity those that it comes after in the plan because both want the
+// same people, more of a resource than there is, or a workface to themselves.
+func (r *rower) inOrder() {
+	r.ahead = make([][]int, len(r.p.Acts))
+	if len(r.p.Acts) > leewaySteps {
+		return
+	}
+	for rank, j := range r.order {
+		for _, i := range r.order[:rank] {
+			if r.clear(i) <= r.s.Start[j] && r.s.Start[i] < r.s.Finish[i] && r.s.Start[j] < r.s.Finish[j] && r.meetAny(i, j) {
+				r.ahead[j] = append(r.ahead[j], i)
+			}
+		}
+	}
+}
+
+// clear gives the minute at which activity i and its fire watches are over.
+func (r *rower) clear(i int) int { return r.s.end(r.p, i) }
+
+// meetAny says whether two activities could not run side by side.
+func (r *rower) meetAny(i, j int) bool {
+	a, b := &r.p.Acts[i], &r.p.Acts[j]
+	ma, mb := &a.Modes[r.s.Mode[i]], &b.Modes[r.s.Mode[j]]
+	for _, p := range append(append([]int(nil), ma.Crew...), ma.Relief...) {
+		if hasPerson(mb.Crew, p) || hasPerson(mb.Relief, p) {
+			return true
+		}
+	}
+	for _, w := range r.s.Watches[i] {
+		if hasPerson(mb.Crew, w.Who) || hasPerson(mb.Relief, w.Who) {
+			return true
+		}
+	}
+	for _, ua := range a.Uses {
+		for _, ub := range b.Uses {
+			if ua.Res == ub.Res && ua.Amount+ub.Amount > r.p.Res[ua.Res].Capacity {
+				return true
+			}
+		}
+	}
+	for _, k := range r.g.pairs[j] {
+		if r.p.Pairs[k].A == i || r.p.Pairs[k].B == i {
+			return true
+		}
+	}
+	return false
 }
 
 // limit is one thing that may set a start.
@@ -379,6 +429,9 @@ func (r *rower) delayed(rank, i, l int) (moved []int, ok bool) {
 		if j != i {
 			lo, fin = g.lower(j, nil)
 			lo = max(lo, s.Start[j])
+			for _, k := range r.ahead[j] {
+				lo = max(lo, g.finish[k])
+			}
 		}
 		at := g.earliest(j, s.Mode[j], g.first(j, s.Mode[j], lo, fin), problem.Inf-1, nil)
 		if at >= problem.Inf || g.breaksMax(j, s.Mode[j], at) {
@@ -431,8 +484,10 @@ func Governing(p *problem.Problem, s *Schedule, rows []plan.Row) []plan.Cause {
 			}
 		}
 		kept := false
+		said := map[string]bool{}
 		for _, c := range rows[i].SetBy {
-			if c.Other < 0 || c.Other == next {
+			if (c.Other < 0 || c.Other == next) && !said[c.Text] {
+				said[c.Text] = true
 				out = append(out, c)
 				kept = true
 			}

@@ -51,7 +51,7 @@ func upper(s string) string {
 func (k *pack) tightTasks() []string {
 	var list []int
 	for i, s := range k.work.Steps {
-		if i < len(k.a.Rows) && s.Site && !s.Absent && s.Class == expand.Hands && k.a.Rows[i].Leeway < tight {
+		if i < len(k.a.Rows) && s.Site && !s.Absent && s.Class == expand.Hands && k.a.Rows[i].Leeway >= 0 && k.a.Rows[i].Leeway < tight {
 			list = append(list, i)
 		}
 	}

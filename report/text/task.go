@@ -159,8 +159,10 @@ func stepOf(a *plan.Answer, i int, m func(hours.Minute) moment, tree bool) stepF
 		f.Pieces = append(f.Pieces, [2]moment{m(p.From), m(p.To)})
 	}
 	if i < len(a.Rows) {
-		n := a.Rows[i].Leeway
-		f.Latest, f.Leeway, f.SetBy = m(a.Rows[i].Latest), &n, causesOf(a, a.Rows[i].SetBy)
+		f.Latest, f.SetBy = m(a.Rows[i].Latest), causesOf(a, a.Rows[i].SetBy)
+		if n := a.Rows[i].Leeway; n >= 0 { // standing time has none of its own
+			f.Leeway = &n
+		}
 	}
 	if tree {
 		h := figureOf(st.Estimate.Figure)

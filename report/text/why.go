@@ -190,6 +190,9 @@ func (p *page) planned(a *plan.Answer, i int, s *expand.Step) {
 		}
 		p.para(lead, agenda.CauseText(a.Work, c)+inFile(at(c.Pos)))
 	}
+	if row.Leeway < 0 {
+		return
+	}
 	leeway := quantity.Hours(row.Leeway)
 	if len(row.Shares) > 0 {
 		leeway += ", shared with " + strings.Join(row.Shares, ", ")

@@ -66,7 +66,7 @@ func (x *expander) fromStep(f, t *tasks.Task, l *tasks.Link) (*Step, string) {
 	}
 	steps := x.first[f]
 	last := steps[len(steps)-1]
-	if f.Kind == tasks.Weld {
+	if f.Kind == tasks.Weld && !f.Standing.Pos.Given() {
 		last = x.lastHands(f)
 	}
 	return last, "after " + f.Label()

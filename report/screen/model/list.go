@@ -175,6 +175,9 @@ func (p *listPage) cells(it item, n int) []string {
 
 // roughly writes minutes as hours and minutes, from two days on without the minutes.
 func roughly(minutes int) string {
+	if minutes < 0 {
+		return "-"
+	}
 	if minutes >= 48*60 {
 		minutes -= minutes % 60
 	}
