@@ -43,7 +43,7 @@ func (p *Problem) Closed(i, mode, t int) []plan.Cause {
 	if n, limited := g.noise[s.Place]; s.Noisy && limited && !n.Has(at) {
 		add(plan.ByConditions, "noise", "noisy work allowed at %s", place)
 	}
-	if s.Light && !g.light[s.Place].Has(at) {
+	if (s.Light || s.Face != nil && s.Face.Light) && !g.light[s.Place].Has(at) {
 		add(plan.ByConditions, "light", "daylight")
 	}
 	for _, u := range s.Kit {
