@@ -6,6 +6,7 @@ import (
 	"fmt"
 	"os"
 	"path/filepath"
+	"strings"
 	"time"
 
 	"github.com/spf13/cobra"
@@ -26,6 +27,7 @@ const defaultLimit = 20 * time.Second
 // globals are the flags that every command takes.
 type globals struct {
 	trip  string
+	with  []string // changes that the job file keeps by name
 	now   string
 	zone  string
 	seed  uint64
@@ -34,6 +36,7 @@ type globals struct {
 
 func (g *globals) flags(f *pflag.FlagSet) {
 	f.StringVar(&g.trip, "trip", "", "the trip to plan for, by its name (default: the booked one, else the first)")
+	f.StringArrayVar(&g.with, "with", nil, "a change that the job file keeps under `changes`, by its name; may be given several times")
 	f.StringVar(&g.now, "now", "", "the time that counts as now, RFC 3339 or \"2027-04-05 10:15\" (stamps calendar files)")
 	f.StringVar(&g.zone, "zone", "", "the time zone of --now, as Europe/London (default: that of the job)")
 	f.Uint64Var(&g.seed, "seed", 0, "seed of the search; equal seeds give equal plans")
@@ -92,10 +95,41 @@ func (g *globals) read(path string) (*tasks.Job, error) {
 	if err != nil {
 		return nil, err
 	}
+	if job, err = g.changed(path, job); err != nil {
+		return nil, err
+	}
 	if _, err := g.moment(job); err != nil {
 		return nil, err
 	}
 	return job, g.knownTrip(job)
+}
+
+// changed reads the job again with the changes asked for; the file stays as it is.
+func (g *globals) changed(path string, job *tasks.Job) (*tasks.Job, error) {
+	if len(g.with) == 0 {
+		return job, nil
+	}
+	var names []string
+	var sets []tasks.Setting
+	for _, want := range g.with {
+		found := false
+		for _, c := range job.Changes {
+			if c.Name == want {
+				found = true
+				sets = append(sets, c.Sets...)
+			}
+		}
+		if !found {
+			for _, c := range job.Changes {
+				names = append(names, c.Name)
+			}
+			if len(names) == 0 {
+				return nil, misuse("a job file with `changes`", "--with %q: the job file keeps no changes", want)
+			}
+			return nil, misuse("one of: "+strings.Join(names, ", "), "--with %q: the job file keeps no such change", want)
+		}
+	}
+	return jobfile.ReadChanged(path, sets)
 }
 
 func jobPath(path string) string {
