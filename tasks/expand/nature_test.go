@@ -1,6 +1,7 @@
 package expand
 
 import (
+	"strings"
 	"testing"
 
 	"sailby/tasks"
@@ -24,6 +25,7 @@ const kindTasks = `tasks:
 // The tables of R6, R12, R13 and R14, kind by kind.
 func TestEveryKindStopsPausesAndFillsItsWorkface(t *testing.T) {
 	w := likely(t, kindTasks)
+	keys := strings.Split("weld / weld, flame / cut, disc / cut, saw / cut, blast / surface prep, wipe / surface prep, coat / coat 1, lift / lift, fit / fit-up, test / test, move / move, sign / sign-off, plain / plain", ", ")
 	for i, want := range []struct {
 		oneGo, meals, lone, noisy bool
 		states                    string
@@ -43,7 +45,7 @@ func TestEveryKindStopsPausesAndFillsItsWorkface(t *testing.T) {
 		{true, false, false, false, "people", 0},
 		{false, true, false, false, "people", 0},
 	} {
-		s := w.Steps[i]
+		s := w.step(t, keys[i])
 		same(t, s.Key()+": in one go, over meals, not alone, noisy, states, watch", []any{s.InOneGo, s.OverMeals, s.Lone, s.Noisy, states(s), s.Watch},
 			[]any{want.oneGo, want.meals, want.lone, want.noisy, want.states, want.watch})
 	}
