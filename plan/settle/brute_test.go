@@ -60,7 +60,7 @@ func TestLattice(t *testing.T) {
 		}
 		compare(rt, s, a, p, int(best-a.Work.Span.From), n)
 		if p == nil && a.Verdict == plan.Fits {
-			rt.Fatalf("a plan was found where trying everything finds none\n%s", s.yaml())
+			rt.Fatalf("a plan was found where trying everything finds none (%s):%s\n%s", b.differs(a.Plan), show(a.Work, a.Plan), s.yaml())
 		}
 		if p != nil && a.Verdict == plan.Fits && a.Finish <= best-30 { // off the lattice less is possible: a start just after a meal
 			rt.Fatalf("finishes %d min before the best that trying everything finds:%v\nand not%v\n%s", best-a.Finish, show(a.Work, a.Plan), show(a.Work, p), s.yaml())

@@ -142,15 +142,16 @@ type run struct {
 	stops  []int // ends of its pieces that end in a stop, the finish last
 }
 
-// walk starts a step at minute t and goes on minute by minute, by R5, R6 and R8; ok is false
+// walk starts a step at minute t and goes on minute by minute, by R5, R6 and R8; open gives the
+// minutes open to it after so many stops, as they depend on who keeps the fire watch. ok is false
 // where it may not start there.
-func walk(s *expand.Step, open, access []bool, t int) (r run, ok bool) {
+func walk(s *expand.Step, open func(stops int) []bool, access []bool, t int) (r run, ok bool) {
 	left := s.Working
-	if !open[t] {
+	if !open(0)[t] {
 		return r, false
 	}
 	for first := true; left > 0; first = false {
-		o, meals := opening(open, access, t, s.SetUp+left)
+		o, meals := opening(open(len(r.stops)), access, t, s.SetUp+left)
 		if len(o) == 0 {
 			return r, false
 		}

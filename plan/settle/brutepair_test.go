@@ -195,7 +195,8 @@ func (b *brute) placeOpen(p *tasks.Place) []bool {
 		return l
 	}
 	w, job := *b.w, *b.w.Job
-	job.People = []*tasks.Person{{Name: "X"}}
+	job.People = []*tasks.Person{{Name: "X", Places: []string{p.Name}}}
+	w.Trip, w.Window.Opens, w.Window.Closes = nil, w.Span.From-1440, w.Span.To+1440
 	job.Duty = tasks.Amount{Value: 1e6, Pos: job.Pos}
 	job.Rest = tasks.Amount{Pos: tasks.Pos{File: "x", Line: 1}}
 	w.Job = &job
