@@ -118,7 +118,7 @@ func Contradiction(p *problem.Problem, each int64, o Options) []Limit {
 	for i, g := range m.guards {
 		all[i] = g.on
 	}
-	if !s.refuse(all, 1<<40) {
+	if !s.refuse(all, 1<<29) {
 		return nil
 	}
 	return s.shrink(each)
