@@ -53,7 +53,7 @@ func (e *seamWork) heating(c Circumstances) error {
 			return err
 		}
 		plate := origin.Worked("plate temperature", from, "C", "ambient", c.ambient())
-		if e.heatTo.Name != "" {
+		if e.heatTo.Value > 0 {
 			plate = origin.Worked("plate temperature", from, "C", "max(preheat, ambient)", renamed(e.heatTo, "preheat"), c.ambient())
 		}
 		e.cooling.Why = e.cooling.why(e.heat, plate, e.joint.drawn("thickness", e.joint.Thickness, "mm"), f2, f3)

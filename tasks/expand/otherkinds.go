@@ -281,6 +281,10 @@ func (x *expander) test(t *tasks.Task) hands {
 	if t.Length.Pos.Given() {
 		length = t.Length.Value
 	}
+	if length <= 0 && x.onlyAfterAbsent(t) {
+		h.minutes, h.est.Figure = quantity.Sure(0), origin.Worked("hands-on time", 0, "min", "nothing was repaired, nothing is tested again")
+		return h
+	}
 	if length <= 0 {
 		h.fault = fmt.Errorf("nothing says what length of seam it tests")
 		h.hint = "put it after a weld with joints, or give length: 2 m, or hours"

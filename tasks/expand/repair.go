@@ -49,3 +49,19 @@ func (x *expander) repairLength(t *tasks.Task) float64 {
 	}
 	return e.Repair(c, tasks.BadAccess(t.Welds())).Length
 }
+
+// onlyAfterAbsent says whether the welds that a test follows are repairs that do not happen.
+func (x *expander) onlyAfterAbsent(t *tasks.Task) bool {
+	any := false
+	for _, l := range t.Links {
+		w := x.byName[l.Task]
+		if w == nil || w.Kind != tasks.Weld {
+			continue
+		}
+		if w.Repairs == nil || !x.absent[w] {
+			return false
+		}
+		any = true
+	}
+	return any
+}
