@@ -1,4 +1,4 @@
-// Package check judges a plan by the rules of the job file (JOBFILE.md, R1 to R23) and by nothing
+// Package check judges a plan by the rules of the job file (JOBFILE.md, R1 to R24) and by nothing
 // else: it knows the job, the minutes of its steps and the plan, and works out by itself, minute by
 // minute, where people are, what is open and who is on shift. Times are UTC minutes, spans
 // half-open. It shares no code with the solver and may be slow: its cost is the planned minutes
@@ -97,6 +97,7 @@ func Plan(w *expand.Work, p *plan.Plan) []Breach {
 	c.power()
 	c.deadlines()
 	c.orders()
+	c.lifts()
 	return c.out
 }
 

@@ -55,6 +55,7 @@ func (c *checker) kit() {
 			}
 		}
 	}
+	c.landed(by)
 	for _, k := range c.w.Job.Kit {
 		c.within(by[k], k.Name, "", func(hours.Minute) (float64, bool) { return float64(k.Count), true })
 	}

@@ -34,6 +34,7 @@ type hands struct {
 	power            float64 // kVA, where no kit says
 	hot, noisy, grit bool
 	est              Estimate
+	rigging          *Rigging
 	warnings         []string // of the notes, those that tell of something to change
 	fault            error
 	hint             string

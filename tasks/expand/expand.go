@@ -24,7 +24,7 @@ func Expand(job *tasks.Job, b Basis) (*Work, tasks.Faults) {
 		return nil, tasks.Faults{*f}
 	}
 	w.lay()
-	x := &expander{w: w, first: map[*tasks.Task][]*Step{}, absent: map[*tasks.Task]bool{}, states: map[string]*Step{}, welded: map[*tasks.Task]weld.Estimate{}}
+	x := &expander{w: w, first: map[*tasks.Task][]*Step{}, absent: map[*tasks.Task]bool{}, states: map[string]*Step{}, welded: map[*tasks.Task]weld.Estimate{}, stager: newStager(job)}
 	x.maybes()
 	for _, t := range job.Tasks {
 		x.task(t)
@@ -32,6 +32,7 @@ func Expand(job *tasks.Job, b Basis) (*Work, tasks.Faults) {
 	x.links()
 	x.homeward()
 	x.orders()
+	x.stages()
 	x.deadlines()
 	if len(x.faults) > 0 {
 		return nil, x.faults.Sorted()
@@ -52,6 +53,8 @@ type expander struct {
 	states map[string]*Step // "task / state" to the step whose finish is that state
 	byName map[string]*tasks.Task
 	welded map[*tasks.Task]weld.Estimate
+	stager *stager
+	after  map[*Step][]*Step // steps that surely come after one, by links; made when first asked
 }
 
 func (x *expander) fault(pos tasks.Pos, hint, format string, args ...any) {

@@ -35,6 +35,7 @@ func (x *expander) needs(t *tasks.Task, h hands) []tasks.Need {
 		return out
 	case t.Who == nil:
 		add(x.usual(t))
+		add(x.supervisor(t, h))
 	}
 	for _, who := range t.Who {
 		add(tasks.Need{Who: []string{who}, Count: 1, Pos: t.Pos})

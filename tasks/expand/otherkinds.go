@@ -132,68 +132,6 @@ func (h *hands) share(one quantity.Range, figure origin.Figure, between int, t *
 	}
 }
 
-// lift estimates a lift or a move: rig, lift, land.
-func (x *expander) lift(t *tasks.Task) hands {
-	h := hands{people: 2}
-	mass := origin.Figure{}
-	switch {
-	case t.Mass.Pos.Given():
-		mass = origin.Written("mass", t.Mass.Value, "kg", t.Mass.Pos.Origin("mass"))
-	case t.Lifts != "":
-		m, err := x.massOf(t.Lifts)
-		if err != nil {
-			h.fault, h.hint = err, "give its parts, or mass: 410 kg on the task"
-			return h
-		}
-		mass = m.Figure
-		mass.Name = "mass of " + t.Lifts
-		if mass.Value == 0 {
-			mass.Value = m.Mass
-		}
-	default:
-		h.fault, h.hint = fmt.Errorf("nothing says what it lifts"), "write lifts: frame, or mass: 410 kg, or hours"
-		return h
-	}
-	h.est.Facts = append(h.est.Facts, mass)
-	way, kit := lift.ByChainHoist, (*tasks.Kit)(nil)
-	for _, u := range t.Kit {
-		if u.Kit.HasKind || u.Kit.Chart != nil {
-			kit = u.Kit
-		}
-	}
-	switch {
-	case t.By == "hands" || t.By == "by hand":
-		way = lift.ByHands
-	case kit != nil && kit.HasKind:
-		way = kit.Kind
-	case kit != nil:
-		way = lift.ByLoaderCrane
-	default:
-		if w, err := lift.ParseWay(t.By); err == nil && t.By != "" {
-			way = w
-		}
-	}
-	height := t.Height.Value
-	if !t.Height.Pos.Given() {
-		height = 1500
-		h.est.Facts = append(h.est.Facts, origin.House("hook travel", height, "mm", "not given: 1.5 m"))
-	}
-	people := max(2, t.People, x.crewSize(t))
-	m := lift.Move{Mass: mass.Value, Height: height, Travel: t.Travel.Value, By: way, People: people, First: t.Round <= 1, Site: x.atSite(t)}
-	if kit != nil && kit.Speed.Value > 0 {
-		m.Speed = kit.Speed.Value * 1000 // m to mm
-	}
-	e, err := lift.Times(m)
-	if err != nil {
-		h.fault, h.hint = err, "give hours, or another way to lift"
-		return h
-	}
-	h.people = people
-	h.minutes = spread(float64(e.HandsOn))
-	h.est.Figure = e.Hours
-	return h
-}
-
 // fitUp estimates fitting parts together after the method of Farkas and Jarmai.
 func (x *expander) fitUp(t *tasks.Task) hands {
 	h := hands{people: 2, least: leastPiece}

@@ -65,7 +65,7 @@ func (x *expander) handsStep(t *tasks.Task, name string, h hands) *Step {
 	face := func(m float64) int { return whole(m / factor.Value) }
 	s.HandsOn = x.value(h.minutes)
 	s.Working = face(float64(s.HandsOn))
-	s.Estimate = h.est
+	s.Estimate, s.Rigging = h.est, h.rigging
 	s.welders, s.warnings = h.welders, h.warnings
 	s.Estimate.Figure = origin.Worked("working time", float64(s.Working), "min", "hands-on time over face factor, rounded up",
 		h.est.Figure, factor)
@@ -126,6 +126,11 @@ func (x *expander) nature(t *tasks.Task, s *Step, h hands) {
 	s.Lone = mayNotBeAlone(t, s.Hot)
 	if t.Kind == tasks.Lift || t.Kind == tasks.Move {
 		s.Moves = asm(t.Lifts)
+	}
+	for _, n := range t.Joins {
+		if !has(t.Parts, n.Name) {
+			s.Works = append(s.Works, asm(n.Name))
+		}
 	}
 	for _, list := range [][]string{t.Parts, t.Surface} {
 		for _, p := range list {

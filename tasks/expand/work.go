@@ -114,6 +114,7 @@ type Step struct {
 	Absent    bool         // a maybe that does not happen on this basis
 
 	Estimate Estimate
+	Rigging  *Rigging // of a lift or move
 
 	welders  int      // of a weld: who shares the metal
 	warnings []string // of its notes, those that tell of something to change
@@ -183,6 +184,7 @@ type Order struct {
 	Choices []Before
 	Pos     tasks.Pos
 	Text    string
+	Made    bool // made by a lift (R24), not written under `orders`
 }
 
 // Before says that every step of First is finished before any step of Then starts; both lists
