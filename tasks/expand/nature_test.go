@@ -154,6 +154,7 @@ func TestOneWelderHoldsTheTicketsOfAllSeams(t *testing.T) {
 		{"two welders", ", people: 2", "weld 136 PF fillet x2"},
 		{"the welder named", ", who: Una", "Una x1"},
 		{"both named", ", who: [Ines, Una]", "Ines or Una x2"},
+		{"one named, and one more", ", who: Una, people: 2", "Una x1, weld 136 PF fillet x1"},
 		{"tickets given in place", ", needs: {fire watch: 1}", "fire watch x1 (watch)"},
 	} {
 		s := likely(t, crew, "procedures: {flux: {process: 136}}", "tasks: {it: {kind: weld, at: shop, "+seams+tc.task+"}}").Steps[0]

@@ -27,11 +27,16 @@ func (x *expander) needs(t *tasks.Task, h hands) []tasks.Need {
 		}
 	case t.Kind == tasks.Weld && len(t.Welds()) > 0:
 		first, also := x.welders(t)
-		n := tasks.Need{Ticket: first, Also: also, Count: max(1, h.people, len(t.Who)), Pos: t.Pos}
-		if t.Who != nil {
-			n.Who = t.Who
+		n := tasks.Need{Ticket: first, Also: also, Pos: t.Pos}
+		if len(t.Who) > 0 {
+			named := n
+			named.Who, named.Count = t.Who, len(t.Who)
+			add(named)
 		}
-		add(n)
+		n.Count = max(1, h.people) - count // as many again as are not named, up to the number of people
+		if n.Count > 0 {
+			add(n)
+		}
 		return out
 	case t.Who == nil:
 		add(x.usual(t))
