@@ -64,7 +64,7 @@ func TestStandingTimeIsNeverClosed(t *testing.T) {
 
 func TestAReliefIsOnShiftInPlaceOfTheFirst(t *testing.T) {
 	p := compiled(t, "people: {Ines: {hours: daily 07:00-13:00}, Tom: {hours: daily 11:00-17:00}}", "tasks: {it: {at: pier, hours: 8 h, may change hands: yes}}")
-	a := p.act_(t, "it")
+	a := p.activity(t, "it")
 	for k, m := range a.Modes {
 		got := fmt.Sprint(len(p.Closed(0, k, p.at(t, "04-06 09:00"))), len(p.Closed(0, k, p.at(t, "04-06 16:00"))), len(p.Closed(0, k, p.at(t, "04-06 18:00"))))
 		want := map[string]string{"Ines": "0 1 1", "Tom": "1 0 1"}[p.People[m.Crew[0]].Name]

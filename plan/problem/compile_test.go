@@ -32,16 +32,16 @@ func TestActivitiesKeepTheBoundsOfTheirSteps(t *testing.T) {
 		{"home", 0, Inf, false, 60}, {"site", p.at(t, "04-06 08:00"), p.at(t, "04-07 17:00"), true, 60}, {"wait", open, close, true, 180},
 		{"maybe", 0, Inf, true, 0}, {"nothing", open, close, true, 0}, {"kept", open, close, true, 180},
 	} {
-		a := p.act_(t, tc.name)
+		a := p.activity(t, tc.name)
 		same(t, tc.name, []any{a.From, a.By, a.Site, a.Home, a.Modes[0].Time.Length()}, []any{tc.from, tc.by, tc.site, !tc.site, tc.length})
 		if a.Label() != tc.name || a.Pos().Line == 0 {
 			t.Errorf("%s is called %q, at %v", tc.name, a.Label(), a.Pos())
 		}
 	}
-	if a := p.act_(t, "wait"); a.Modes[0].Time.Calendar() != nil || a.Modes[0].Crew != nil {
+	if a := p.activity(t, "wait"); a.Modes[0].Time.Calendar() != nil || a.Modes[0].Crew != nil {
 		t.Error("standing time needs neither hours nor people")
 	}
-	if a := p.act_(t, "kept"); p.crews(a) != "Tom" || a.Modes[0].Time.Start(p.at(t, "04-06 10:00")) != p.at(t, "04-06 12:30") {
+	if a := p.activity(t, "kept"); p.crews(a) != "Tom" || a.Modes[0].Time.Start(p.at(t, "04-06 10:00")) != p.at(t, "04-06 12:30") {
 		t.Error("standing time that keeps somebody lies in one opening, without a meal")
 	}
 	open2 := (&Act{Name: "a"}).Label()
@@ -52,7 +52,7 @@ func TestActivitiesKeepTheBoundsOfTheirSteps(t *testing.T) {
 
 func TestFilmsOfAProblemCureOnItsOwnMinutes(t *testing.T) {
 	p := compiled(t, "paints: {top: {kind: polyurethane, hard dry: {10 C: 20 h}}}", "tasks: {paint: {kind: coat, at: pier, hours: 1 h, coats: top}, next: {at: pier, hours: 1 h, after: paint}}")
-	w := p.act_(t, "paint / hard dry").Modes[0].Time
+	w := p.activity(t, "paint / hard dry").Modes[0].Time
 	if s := p.at(t, "04-06 10:00"); w.Start(s) != s || w.Finish(s) != s+1200 {
 		t.Errorf("begun at 10:00 it is dry by %s, want 20 h later", p.clock(w.Finish(s)))
 	}
@@ -88,7 +88,7 @@ func TestKitRoomAndPower(t *testing.T) {
 		"weld": "1 welder stays, 1 pier/hinge, 76 power at pier", "grind": "2 welder stays, 1 gauge, 2 pier/hinge, 151 power at pier",
 		"shop": "1 welder stays, 76 power at shop", "yard": "", "maybe": "", "deck": "",
 	} {
-		same(t, name, uses(p.act_(t, name)), want)
+		same(t, name, uses(p.activity(t, name)), want)
 	}
 	for _, r := range p.Res {
 		want, known := map[string]int{"welder": 2, "gauge": 1, "pier/hinge": 3, "power at pier": 150, "power at shop": 115}[r.Name]
@@ -96,10 +96,10 @@ func TestKitRoomAndPower(t *testing.T) {
 			t.Errorf("%s: %d of %d at %v", r.Name, r.Capacity, want, r.Pos)
 		}
 	}
-	if a := p.act_(t, "weld"); a.WatchRoom == 0 || p.Res[a.WatchRoom-1].Name != "pier/hinge" {
+	if a := p.activity(t, "weld"); a.WatchRoom == 0 || p.Res[a.WatchRoom-1].Name != "pier/hinge" {
 		t.Errorf("whoever keeps its fire watch takes a place in the workface besides, got %d", a.WatchRoom)
 	}
-	if p.act_(t, "grind").WatchRoom != 0 {
+	if p.activity(t, "grind").WatchRoom != 0 {
 		t.Error("without a watch there is none")
 	}
 	for name, want := range map[string]string{"pier": "15 true", "shop": "11.55 true", "yard": "0 false"} { // R7: what goes along counts at the window's place only

@@ -29,7 +29,7 @@ func TestCrewsAreDifferentPeopleWithTheTickets(t *testing.T) {
 			c = strings.ReplaceAll(crew, "fitter]}", "fitter, fire watch]}")
 		}
 		p := compiled(t, c, "tasks: {it: {at: pier, "+tc.task+"}}")
-		same(t, tc.what, p.crews(p.act_(t, "it")), tc.want)
+		same(t, tc.what, p.crews(p.activity(t, "it")), tc.want)
 	}
 }
 
@@ -44,7 +44,7 @@ func TestNobodyCanAndWhy(t *testing.T) {
 		{"more than all hours together", "", "hours: 300 h, who: Ines", "do not fit into"},
 	} {
 		p := compiled(t, tc.more, "paints: {top: {kind: polyurethane}}", "hire: {crane: {slots: [2027-04-06 01:00-02:00]}}", "tasks: {it: {at: pier, "+tc.task+"}}")
-		a := p.act_(t, "it")
+		a := p.activity(t, "it")
 		if len(a.Modes) != 0 || !strings.Contains(a.Hopeless, tc.says) {
 			t.Errorf("%s: %d modes, %q, want %q", tc.what, len(a.Modes), a.Hopeless, tc.says)
 		}
@@ -57,7 +57,7 @@ func TestTheChoicesAreBoundedInTheOrderOfTheFile(t *testing.T) {
 		people = append(people, fmt.Sprintf("P%02d: {}", i))
 	}
 	p := compiled(t, "people: {"+strings.Join(people, ", ")+"}", "tasks: {it: {at: pier, hours: 1 h, people: 3}}")
-	a := p.act_(t, "it")
+	a := p.activity(t, "it")
 	if len(a.Modes) != MaxModes {
 		t.Fatalf("%d choices of 4060 are kept, want %d", len(a.Modes), MaxModes)
 	}
@@ -107,7 +107,7 @@ func TestHotWorkEndsWhileItsWatchCanBeKept(t *testing.T) {
 			"people: {"+tc.people+"}", "tasks: {it: {at: "+at+", hours: 30 min, hot work: yes, who: Ines"+tc.task+"}}")
 		got, _, _ := strings.Cut(p.calendar(t, "it", "04-06 00:00"), ", 04-07")
 		same(t, tc.what, got, tc.want)
-		if a := p.act_(t, "it"); len(a.Modes) > 0 && (len(a.Modes[0].Keepers) > 0) != !strings.Contains(tc.task, "watch: 0") {
+		if a := p.activity(t, "it"); len(a.Modes) > 0 && (len(a.Modes[0].Keepers) > 0) != !strings.Contains(tc.task, "watch: 0") {
 			t.Errorf("%s: keepers %v", tc.what, a.Modes[0].Keepers)
 		}
 	}
@@ -122,7 +122,7 @@ func TestWatchesAreWalkedMinuteByMinute(t *testing.T) {
 		p := compiled(t, "places: {shop: {open: always}, pier: {open: daily 07:00-19:00, face factor: 1}}",
 			fmt.Sprintf("people: {Ines: {hours: daily %s}, Tom: {tickets: [fire watch], hours: daily %s}, Ann: {tickets: [fire watch], hours: daily %s}}", shift.Draw(t, "Ines"), shift.Draw(t, "Tom"), shift.Draw(t, "Ann")),
 			fmt.Sprintf("tasks: {it: {at: pier, hours: 1 min, hot work: yes, alone: yes, fire watch: %d min, who: Ines}}", long))
-		a, pier := p.act_(t, "it"), place(t, p, "pier")
+		a, pier := p.activity(t, "it"), place(t, p, "pier")
 		from := p.at(t, "04-06 00:00")
 		on := func(who, m int) bool { return p.People[who].Shifts[pier].Has(hours.Minute(m)) }
 		for _, mode := range a.Modes {
@@ -184,7 +184,7 @@ func TestTeamsTakeTurns(t *testing.T) {
 	p := compiled(t, "people: {Ines: {hours: daily 07:00-13:00}, Tom: {hours: daily 11:00-19:00}, Ann: {hours: daily 11:00-19:00}}",
 		"places: {shop: {open: always}, pier: {open: daily 07:00-19:00, face factor: 1}}",
 		"tasks: {it: {at: pier, hours: 10 h, may change hands: yes}, pair: {at: pier, hours: 1 h, people: 2, may change hands: yes}, own: {at: pier, hours: 10 h}}")
-	a := p.act_(t, "it")
+	a := p.activity(t, "it")
 	same(t, "alone or in turns, of those whose shifts differ", p.crews(a), "Ines, Tom, Ann, Ines/Tom, Ines/Ann, Tom/Ines, Ann/Ines")
 	relay := a.Modes[3]
 	day := hours.Span{From: hours.Minute(p.at(t, "04-06 00:00")), To: hours.Minute(p.at(t, "04-07 00:00"))}
@@ -193,6 +193,6 @@ func TestTeamsTakeTurns(t *testing.T) {
 	if s := relay.Time.Start(p.at(t, "04-06 07:00")); p.clock(relay.Time.Finish(s)) != "04-06 17:00" || len(relay.Time.Stops(s)) != 1 {
 		t.Errorf("in turns ten hours are done without a stop by %s", p.clock(relay.Time.Finish(s)))
 	}
-	same(t, "pairs with a member in common", p.crews(p.act_(t, "pair")), "Ines+Tom, Ines+Ann, Tom+Ann, Ines+Tom/Tom+Ann, Ines+Ann/Tom+Ann, Tom+Ann/Ines+Tom, Tom+Ann/Ines+Ann")
-	same(t, "nobody relieves where the task does not say so", p.crews(p.act_(t, "own")), "Ines, Tom, Ann")
+	same(t, "pairs with a member in common", p.crews(p.activity(t, "pair")), "Ines+Tom, Ines+Ann, Tom+Ann, Ines+Tom/Tom+Ann, Ines+Ann/Tom+Ann, Tom+Ann/Ines+Tom, Tom+Ann/Ines+Ann")
+	same(t, "nobody relieves where the task does not say so", p.crews(p.activity(t, "own")), "Ines, Tom, Ann")
 }

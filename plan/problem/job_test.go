@@ -81,8 +81,8 @@ func compiled(t tb, sections ...string) *Problem {
 	return Compile(expanded(t, yaml(sections...)))
 }
 
-// act finds an activity by task name, or by task and step: "prime / coat 1".
-func (p *Problem) act_(t tb, name string) *Act {
+// activity finds an activity by task name, or by task and step: "prime / coat 1".
+func (p *Problem) activity(t tb, name string) *Act {
 	t.Helper()
 	for i := range p.Acts {
 		if p.Acts[i].Name == name || p.Acts[i].Step.Task.Name == name {
@@ -126,7 +126,7 @@ func (p *Problem) spans(set hours.Set) string {
 // calendar writes when the first mode of an activity can be worked in the two days from from on.
 func (p *Problem) calendar(t tb, name, from string) string {
 	t.Helper()
-	a := p.act_(t, name)
+	a := p.activity(t, name)
 	if len(a.Modes) == 0 {
 		return "hopeless: " + a.Hopeless
 	}

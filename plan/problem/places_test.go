@@ -53,7 +53,7 @@ func TestWorkThatNeedsLight(t *testing.T) {
 		f, task, _ := strings.Cut(face, "}, task: {")
 		p := compiled(t, "places: {shop: {open: always}, pier: {open: always, at: [57 N, 7 W], face factor: 1, workfaces: {hinge: {"+f+"}}}}",
 			"people: {Ines: {}, Tom: {}}", "duty: {longest: 24 h, rest: 0 min}", "tasks: {it: {at: pier/hinge, hours: 10 min, "+task+"}}")
-		cal := p.act_(t, "it").Modes[0].Time.Calendar()
+		cal := p.activity(t, "it").Modes[0].Time.Calendar()
 		for clock, want := range map[string]bool{"04-06 05:45": false, "04-06 06:25": true, "04-06 20:35": true, "04-06 21:15": false} {
 			if cal.Has(hours.Minute(p.at(t, clock))) != want {
 				t.Errorf("%s: at %s work is %v", what, clock, !want)
@@ -77,10 +77,10 @@ func TestKitThatIsAwayIsNotUsedAtHome(t *testing.T) {
 	}
 	w := expanded(t, yaml(trip, "kit: {saw: {}}", "people: {Ines: {}, Tom: {places: shop}}", "tasks: {it: {at: shop, hours: 10 min, who: Tom, kit: saw}}"))
 	carried := Compile(w.Carry())
-	if cal := carried.act_(t, "it").Modes[0].Time.Calendar(); cal.Has(hours.Minute(carried.at(t, "04-09 10:00"))) {
+	if cal := carried.activity(t, "it").Modes[0].Time.Calendar(); cal.Has(hours.Minute(carried.at(t, "04-09 10:00"))) {
 		t.Error("carried on past the window nobody brings the kit home (R18)")
 	}
-	if cal := Compile(w).act_(t, "it").Modes[0].Time.Calendar(); !cal.Has(hours.Minute(carried.at(t, "04-09 10:00"))) {
+	if cal := Compile(w).activity(t, "it").Modes[0].Time.Calendar(); !cal.Has(hours.Minute(carried.at(t, "04-09 10:00"))) {
 		t.Error("after the trip the kit is home again")
 	}
 }
@@ -100,7 +100,7 @@ func TestMealsAndStops(t *testing.T) {
 	} {
 		p := compiled(t, "places: {shop: {open: always}, pier: {"+tc.pier+", face factor: 1, workfaces: {hinge: {"+tc.face+"}}}}",
 			"people: {Ines: {}, Tom: {hours: daily 07:00-12:00 13:00-19:00}}", "tasks: {it: {at: pier/hinge, hours: 8 h, "+tc.task+"}}")
-		w := p.act_(t, "it").Modes[0].Time
+		w := p.activity(t, "it").Modes[0].Time
 		stops := w.Stops(w.Start(p.at(t, "04-06 07:00")))
 		if (len(stops) == 1) != tc.meal {
 			t.Errorf("%s: it stops %d times", tc.what, len(stops)-1)
