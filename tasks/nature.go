@@ -39,7 +39,7 @@ type FaceNature struct {
 type TaskNature struct {
 	Covered  *bool  // may be covered by water before it is done; nil: a coat by its immersion min, others yes
 	PaintOff bool   // hot work: the paint is taken off first
-	Holds    Amount // surface prep: minutes to the first coat; Pos.Given overrules
+	HoldsFor Amount // surface prep: minutes to the first coat; Pos.Given overrules
 	Stripe   Amount // coat: mm of edges and welds striped before the first full coat
 	Bare     Amount // coat: mm of seam left bare, 50 mm to each side
 	Patch    Amount // surface prep, coat: mm of seam whose bare strips it takes

@@ -82,6 +82,7 @@ func Plan(w *expand.Work, p *plan.Plan) []Breach {
 		case r.s.Class == expand.Hands:
 			c.pieces(r)
 			c.watches(r)
+			c.water(r)
 		case r.s.Class == expand.Cure:
 			c.cure(r)
 		default:
@@ -90,6 +91,8 @@ func Plan(w *expand.Work, p *plan.Plan) []Breach {
 	}
 	c.oneThing()
 	c.links()
+	c.holds()
+	c.paint()
 	c.states()
 	c.room()
 	c.assemblies()

@@ -86,10 +86,10 @@ func (c *checker) layFace(p *tasks.Place, f *tasks.Workface) face {
 	if f.Reach != nil {
 		out.reach = c.slots(c.line(false), f.Reach)
 	}
-	if f.Level.Pos.Given() && p.Tide != nil {
+	if (f.Level.Pos.Given() || f.CoversAt.Pos.Given()) && p.Tide != nil {
 		out.limited = true
 		for t := c.lo; t < c.hi; t++ { // false where the table does not reach
-			if !p.Tide.Clear(true, f.Covers(), int64(t)) {
+			if !p.Tide.Clear(true, covers(f), int64(t)) {
 				out.reach.on[t-c.lo] = false
 			}
 		}
@@ -147,6 +147,7 @@ func (c *checker) layStep(r *row) {
 			need(at.valid[i], "R23", "the permit "+pm.Name, "is not valid")
 		}
 	}
+	c.weather(r, need)
 	t := s.Task
 	r.alone = s.Lone || s.Class == expand.Hands && (s.Hot || t.Kind == tasks.Lift ||
 		s.Face != nil && (s.Face.Closed || s.Face.Water || s.Face.Tidal))

@@ -46,6 +46,15 @@ func (p *Problem) Closed(i, mode, t int) []plan.Cause {
 	if (s.Light || s.Face != nil && s.Face.Light) && !g.light[s.Place].Has(at) {
 		add(plan.ByConditions, "light", "daylight")
 	}
+	for _, shut := range g.weather(s) {
+		if shut.From <= int64(at) && int64(at) < shut.To {
+			add(plan.ByConditions, "weather", "closed before it: %s", shut.Why)
+			if s.Place.Climate != nil {
+				out[len(out)-1].Pos = s.Place.Climate.Pos
+			}
+			break
+		}
+	}
 	for _, u := range s.Kit {
 		if slots, hired := g.hire[u.Kit]; hired && !slots.Has(at) {
 			add(plan.ByHire, u.Kit.Name, "%s is there", u.Kit.Name)

@@ -21,6 +21,7 @@ type ground struct {
 	light map[*tasks.Place]hours.Set
 	valid map[*tasks.Place]map[string]hours.Set // by permit name
 	hire  map[*tasks.Kit]hours.Set
+	shut  map[*expand.Step][]site.Span // by weather and water, with the reasons
 	own   []map[*tasks.Place]hours.Set // by person: at an open place in own hours, before shifts are cut
 }
 
@@ -29,7 +30,7 @@ func newGround(w *expand.Work) *ground {
 		open: map[*tasks.Place]hours.Set{}, face: map[*tasks.Place]hours.Set{},
 		reach: map[*tasks.Workface]hours.Set{}, noise: map[*tasks.Place]hours.Set{},
 		light: map[*tasks.Place]hours.Set{}, valid: map[*tasks.Place]map[string]hours.Set{},
-		hire: map[*tasks.Kit]hours.Set{}}
+		hire: map[*tasks.Kit]hours.Set{}, shut: map[*expand.Step][]site.Span{}}
 	for _, p := range w.Job.Places {
 		g.place(p)
 	}
@@ -170,7 +171,19 @@ func (g *ground) access(s *expand.Step) hours.Set {
 			set = set.And(v)
 		}
 	}
+	if shut := g.weather(s); len(shut) > 0 {
+		set = set.Less(fromSite(shut))
+	}
 	return set
+}
+
+// weather gives when weather and water close a step, with the reasons (R25, R26); worked out once.
+func (g *ground) weather(s *expand.Step) []site.Span {
+	if shut, known := g.shut[s]; known {
+		return shut
+	}
+	g.shut[s] = g.work.Nature(s)
+	return g.shut[s]
 }
 
 // away is when the things that go along are not at home (R1): to the end where the hours are

@@ -37,6 +37,10 @@ func frostPoint(dew float64) float64 {
 	return iceB * g / (iceA - g)
 }
 
+// FrostPoint gives the temperature in C at which frost settles from air with the dew point dew; the dew
+// point itself where that is not below 0 C.
+func FrostPoint(dew float64) float64 { return frostPoint(dew) }
+
 // RelativeHumidity gives the share for air at airC whose dew point is dewC.
 // Special cases are: 1 where the dew point is above the air; NaN outside -45 to 60 C for the air and
 // below -90 C for the dew point.

@@ -30,6 +30,8 @@ func Expand(job *tasks.Job, b Basis) (*Work, tasks.Faults) {
 		x.task(t)
 	}
 	x.links()
+	x.holds()
+	x.hotOverCoats()
 	x.homeward()
 	x.orders()
 	x.stages()

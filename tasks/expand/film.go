@@ -9,6 +9,7 @@ import (
 	"sailby/tasks/coat"
 	"sailby/tasks/hours"
 	"sailby/tasks/origin"
+	"sailby/tasks/site"
 )
 
 // coatSteps makes the steps of a coat task: coat 1, dry 1, coat 2, ...
@@ -21,14 +22,24 @@ func (x *expander) coatSteps(t *tasks.Task) {
 			x.fault(t.Pos, "declare it under paints", "task %q: there is no paint %q", t.Name, name)
 			return
 		}
+		if t.Face.Floods() && len(p.ImmersionMin) == 0 && (t.Covered == nil || !*t.Covered) {
+			x.fault(t.Pos, "add immersion min: {10 C: 24 h} to the paint from its sheet, or write may be covered: yes on the task",
+				"task %q: the tide covers %s/%s, and paint %q does not say when it may go under water", t.Name, t.Place.Name, t.Face.Name, p.Name)
+		}
 		h := x.coatHours(t, p, k)
 		if n := len(t.Coats); n > 1 && (t.Hours.Pos.Given() || t.ManHours.Pos.Given()) {
 			h.minutes = h.minutes.Scale(1 / float64(n)) // the hours given are for all coats
 			h.est.Figure = origin.Worked("hands-on time", h.minutes.Likely, "min", "hours given over the coats", h.est.Figure)
 			h.est.Range = [3]int{whole(h.minutes.Low), whole(h.minutes.Likely), whole(h.minutes.High)}
 		}
+		var striped *Step
+		if k == 0 {
+			striped = x.stripe(t, p)
+		}
 		s := x.handsStep(t, fmt.Sprintf("coat %d", k+1), h)
+		s.Paint = p
 		x.filmStates(t, s, p)
+		x.afterStripe(striped, s, p)
 		if before != nil {
 			x.recoat(t, before, s, last, p, k)
 		}
@@ -50,18 +61,19 @@ func (x *expander) paint(name string) *tasks.Paint {
 
 // film is one curing time of a paint at one place.
 type film struct {
-	x     *expander
-	curve coat.Curve
-	min   float64
-	place *tasks.Place
-	sum   []float64 // cure gathered since the span's start, by minute; nil for steady steel
-	rate  float64
+	x      *expander
+	curve  coat.Curve
+	paint  *tasks.Paint
+	steady float64      // steel temperature where there is no series, °C
+	series *site.Series // weather by hour; nil for steady steel
+	sum    []float64    // cure gathered since the span's start, by minute; nil for steady steel
+	rate   float64
 }
 
-func (x *expander) film(curve coat.Curve, p *tasks.Paint, place *tasks.Place) *film {
-	f := &film{x: x, curve: curve, min: p.ApplyMin, place: place}
-	if place.Climate == nil || place.Climate.Hourly == nil {
-		f.rate = f.at(x.steel(place))
+func (x *expander) film(curve coat.Curve, p *tasks.Paint, t *tasks.Task) *film {
+	f := &film{x: x, curve: curve, paint: p, steady: x.steel(t.Place), series: t.Place.Hourly(t.Face)}
+	if f.series == nil {
+		f.rate = f.at(f.steady, math.NaN())
 		return f
 	}
 	f.rate = math.NaN()
@@ -69,30 +81,29 @@ func (x *expander) film(curve coat.Curve, p *tasks.Paint, place *tasks.Place) *f
 	hour, r := int64(math.MinInt64), 0.0
 	for i := range f.sum[1:] {
 		m := x.w.Span.From + hours.Minute(i)
-		if h := int64(m) / 60; h != hour {
-			hour, r = h, f.at(x.steelAt(place, m))
+		if h := (int64(m) - f.series.Start) / 60; h != hour {
+			hour, r = h, f.minute(m)
 		}
 		f.sum[i+1] = f.sum[i] + r
 	}
 	return f
 }
 
-// at gives the rate at a steel temperature, 0 below the paint's least.
-func (f *film) at(celsius float64) float64 {
-	if celsius < f.min {
+// at gives the rate at a steel temperature and the humidity there, 0 below the paint's least of either;
+// a humidity that is not known does not count.
+func (f *film) at(celsius, humidity float64) float64 {
+	if celsius < f.paint.ApplyMin || f.paint.RHMin > 0 && humidity < f.paint.RHMin {
 		return 0
 	}
 	return f.curve.Rate(celsius)
 }
 
-// steelAt gives the steel temperature of a place at a minute.
-func (x *expander) steelAt(p *tasks.Place, m hours.Minute) float64 {
-	if p.Climate != nil && p.Climate.Hourly != nil {
-		if w, ok := p.Climate.Hourly.At(int64(m)); ok {
-			return w.Steel
-		}
+// minute gives the rate of the minute that begins at m.
+func (f *film) minute(m hours.Minute) float64 {
+	if w, ok := f.series.At(int64(m)); ok {
+		return f.at(w.Steel, coat.SteelHumidity(w.Air, w.RH, w.Steel))
 	}
-	return x.steel(p)
+	return f.at(f.steady, math.NaN())
 }
 
 // Rate gives the share of the cure that the minute beginning at m adds.
@@ -100,7 +111,7 @@ func (f *film) Rate(m hours.Minute) float64 {
 	if f.sum == nil {
 		return f.rate
 	}
-	return f.at(f.x.steelAt(f.place, m))
+	return f.minute(m)
 }
 
 // finish gives the first minute by which a film begun at m is cured (R11), hours.Far if never.
@@ -134,9 +145,9 @@ func (x *expander) filmStates(t *tasks.Task, s *Step, p *tasks.Paint) {
 				continue
 			}
 		}
-		f := x.film(curve, p, t.Place)
+		f := x.film(curve, p, t)
 		s.States = append(s.States, State{Name: st.state, Tail: f.finish,
-			What: fmt.Sprintf("%s at %s", st.film, temperature(x.steel(t.Place)))})
+			What: fmt.Sprintf("%s at %s", st.film, x.steelWords(t))})
 	}
 }
 
@@ -146,7 +157,7 @@ func temperature(c float64) string { return origin.Trim(c) + " °C" }
 func (x *expander) dry(t *tasks.Task, after *Step, name string, curve coat.Curve, p *tasks.Paint) *Step {
 	s := x.step(t, name)
 	s.Class = Cure
-	f := x.film(curve, p, t.Place)
+	f := x.film(curve, p, t)
 	s.Rate = f.Rate
 	minutes, fig, err := curve.Time(x.steel(t.Place))
 	if err == nil {
@@ -196,23 +207,79 @@ func (x *expander) swapLast(t *tasks.Task, s, b *Step) {
 // longest adds the longest wait for the next coat, from start to start and from finish to
 // finish (R10), shortening with heat (R11).
 func (x *expander) longest(t *tasks.Task, a, b *Step, p *tasks.Paint, max coat.Curve) {
-	last := func(m hours.Minute) hours.Minute {
-		temp := func(minute int) float64 { return x.steelAt(t.Place, hours.Minute(minute)) }
-		return hours.Minute(coat.LastRecoat(int(m), max, temp, int(x.w.Span.To)))
+	why := "longest recoat of " + p.Name
+	if r := x.rescue(a); r != "" {
+		why += " (missed: " + r + ")"
 	}
-	if t.Place.Climate == nil || t.Place.Climate.Hourly == nil {
-		cap, _, err := max.Life(x.steel(t.Place))
-		if err != nil {
-			return
-		}
+	series := t.Place.WarmHourly(t.Face)
+	add := func(l Link) {
 		for _, end := range []tasks.LinkEnd{tasks.Start, tasks.Finish} {
-			x.w.Links = append(x.w.Links, Link{From: a, To: b, FromEnd: end, ToEnd: end, Min: NoMin, Max: int(cap), Pos: p.Pos, Why: "longest recoat of " + p.Name})
+			l.From, l.To, l.FromEnd, l.ToEnd, l.Min, l.Pos, l.Why = a, b, end, end, NoMin, p.Pos, why
+			x.w.Links = append(x.w.Links, l)
+		}
+	}
+	if series == nil {
+		cap, _, err := max.Life(x.steel(t.Place))
+		if err == nil {
+			add(Link{Max: int(cap)})
 		}
 		return
 	}
-	for _, end := range []tasks.LinkEnd{tasks.Start, tasks.Finish} {
-		x.w.Links = append(x.w.Links, Link{From: a, To: b, FromEnd: end, ToEnd: end, Min: NoMin, Max: NoMax,
-			MaxCure: &MaxCure{Last: last}, Pos: p.Pos, Why: "longest recoat of " + p.Name})
+	add(Link{Max: NoMax, MaxCure: &MaxCure{Last: x.lastRecoat(max, series, x.steel(t.Place))}})
+}
+
+// lastRecoat gives the last minute u after a start such that u - start is at most the longest wait
+// for the hottest steel from start to u: coat.LastRecoat, hour by hour.
+func (x *expander) lastRecoat(max coat.Curve, series *site.Series, steady float64) func(hours.Minute) hours.Minute {
+	span := x.w.Span
+	life := func(celsius float64) float64 {
+		v, _, err := max.Life(celsius)
+		if err != nil {
+			return 0
+		}
+		return v * (1 + 1e-9)
+	}
+	lives := map[float64]float64{}
+	steel := func(m hours.Minute) float64 {
+		if w, ok := series.At(int64(m)); ok {
+			return w.Steel
+		}
+		return steady
+	}
+	for m := span.From; m < span.To; m += 60 {
+		lives[steel(m)] = 0
+	}
+	lives[steel(span.To)], lives[steady] = 0, 0
+	for c := range lives {
+		lives[c] = life(c)
+	}
+	return func(start hours.Minute) hours.Minute {
+		hottest, most := math.Inf(-1), math.Inf(1)
+		for m := start; m <= span.To; {
+			if t := steel(m); t > hottest {
+				hottest = t
+				v, known := lives[t]
+				if !known {
+					v = life(t)
+				}
+				most = v
+			}
+			next := m + 60 - hours.Minute(((int64(m)-series.Start)%60+60)%60)
+			if over := start + hours.Minute(math.Min(math.Floor(most), 1e9)) + 1; over < next {
+				if over < m {
+					over = m
+				}
+				if over > start {
+					over--
+				}
+				return min(over, span.To)
+			}
+			m = next
+		}
+		if start > span.To {
+			return start
+		}
+		return span.To
 	}
 }
 

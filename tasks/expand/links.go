@@ -92,7 +92,7 @@ func (x *expander) fromCoat(f, t *tasks.Task, l *tasks.Link) (*Step, string) {
 	}
 	if next != nil {
 		coats := x.handsOf(f)
-		a, b := coats[len(coats)-1], x.first[t][0]
+		a, b := coats[len(coats)-1], x.firstCoat(t)
 		p := x.paint(f.Coats[len(f.Coats)-1])
 		if w, err := p.Next(next.Paint); err == nil && len(w.Max) > 0 && !x.absent[t] {
 			x.longest(t, a, b, p, w.Max)

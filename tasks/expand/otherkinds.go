@@ -16,6 +16,18 @@ import (
 
 // area gives the surface of a prep or coat task in m2: its own area, else that of what it is on.
 func (x *expander) area(t *tasks.Task) (origin.Figure, error) {
+	if t.Patch.Pos.Given() {
+		return patch(t), nil
+	}
+	whole, err := x.wholeArea(t)
+	if err != nil {
+		return whole, err
+	}
+	return bared(t, whole)
+}
+
+// wholeArea is area without the strips left bare.
+func (x *expander) wholeArea(t *tasks.Task) (origin.Figure, error) {
 	if t.Area.Pos.Given() {
 		return origin.Written("area", t.Area.Value, "m2", t.Area.Pos.Origin("area")), nil
 	}
@@ -261,12 +273,8 @@ func (x *expander) coatHours(t *tasks.Task, p *tasks.Paint, k int) hands {
 		x.overrule(t, &h)
 		return h
 	}
-	method := t.Method
-	if method == "" {
-		method = coat.Brush
-	}
-	a, err := coat.Apply(coat.Job{Paint: p.Paint, Area: area.Value, Method: method, Surface: t.Shape,
-		Celsius: x.steel(t.Place), Site: x.atSite(t)})
+	j := x.coatJob(t, p, k, area.Value)
+	a, err := coat.Apply(j)
 	if err != nil {
 		h.fault, h.hint = err, "give hours, or complete the paint"
 		x.overrule(t, &h)
@@ -275,6 +283,7 @@ func (x *expander) coatHours(t *tasks.Task, p *tasks.Paint, k int) hands {
 	h.share(a.Range, a.Hours, h.people, t)
 	h.est.Notes = a.Warnings
 	h.est.Facts = append(h.est.Facts, area, a.Volume)
+	mixed(&h, p, a, j.Celsius)
 	h.est.Consumables = append(h.est.Consumables, Consumable{What: "paint " + p.Name, Amount: a.Litres, Unit: "L", Spare: a.Litres * 0.1})
 	if a.Thinner+a.Cleaner > 0 {
 		h.est.Consumables = append(h.est.Consumables, Consumable{What: "thinner for " + p.Name, Amount: a.Thinner + a.Cleaner, Unit: "L"})

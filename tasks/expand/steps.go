@@ -36,6 +36,8 @@ func (x *expander) task(t *tasks.Task) {
 		}
 		if t.Standing.Pos.Given() {
 			x.standing(t, main)
+		} else if t.Kind == tasks.Prep {
+			x.dryOff(t, main)
 		}
 	}
 }
@@ -76,6 +78,7 @@ func (x *expander) handsStep(t *tasks.Task, name string, h hands) *Step {
 	x.nature(t, s, h)
 	s.Needs = x.needs(t, h)
 	x.hotWork(t, s)
+	x.gasTest(t, s, face)
 	for _, n := range s.Needs {
 		s.Room += n.Count
 	}
@@ -109,7 +112,10 @@ func (x *expander) stopping(t *tasks.Task, s *Step, h hands, face func(float64) 
 		}
 		return face(estimated)
 	}
-	s.SetUp = own(t.SetUp, h.setUp)
+	s.SetUp = own(t.SetUp, h.setUp+x.washed(t, s))
+	if t.Covered != nil && !*t.Covered && t.Face.Floods() { // R26
+		s.InOneGo, s.OverMeals = true, true
+	}
 	s.SafeStop = min(own(t.SafeStop, h.safe), s.Working)
 	s.LeastPiece = min(own(t.LeastPiece, h.least), s.Working)
 }

@@ -104,9 +104,10 @@ type Step struct {
 	Hot     bool
 	Noisy   bool
 	Light   bool
-	Moves   string   // assembly that it moves: exclusive with all other work on it
-	Works   []string // assemblies it works on
-	Wants   []string // permits wanted, by Permit.Name
+	Moves   string       // assembly that it moves: exclusive with all other work on it
+	Works   []string     // assemblies it works on
+	Wants   []string     // permits wanted, by Permit.Name
+	Paint   *tasks.Paint // of a coat or a stripe; nil for all others
 
 	NotBefore hours.Minute // hours.Never if free
 	Deadline  hours.Minute // hours.Far if free; includes the window for site work
@@ -170,8 +171,8 @@ type Link struct {
 
 // NoMax and NoMin mark a link without that wait.
 const (
-	NoMax = int(1 << 40)
-	NoMin = -int(1 << 40)
+	NoMax = int(1 << 29)
+	NoMin = -int(1 << 29)
 )
 
 // MaxCure gives the last minute at which the later end may come after the earlier end at t.
