@@ -132,7 +132,8 @@ func (a *asked) find(explain bool) error {
 	if !ok { // home work that follows the site's: with the hours carried on nobody comes home to do it
 		a.carry = a.p
 		if b, ok = undated(a.p); !ok {
-			return nil // cannot even be done late
+			a.out.NoPlan = "what some task needs (reach, hire, a permit, somebody booked) does not come again after the window, however late it may be"
+			return nil
 		}
 	}
 	bound := int(a.out.Bound - a.p.Base)
@@ -162,6 +163,7 @@ func (a *asked) find(explain bool) error {
 	}
 	a.out.Steps, a.out.CutShort = res.Ticks, a.stop()
 	if res.Best == nil {
+		a.out.NoPlan = "the search found none, not even a late one"
 		return nil
 	}
 	return a.keep(solve.Compact(a.carry, res.Best), explain)

@@ -3,6 +3,7 @@ package settle
 import (
 	"fmt"
 	"slices"
+	"strings"
 
 	"sailby/plan"
 	"sailby/plan/check"
@@ -50,15 +51,44 @@ func (b *brute) index(t hours.Minute) int { return int(t - b.w.Span.From) }
 
 func (b *brute) minute(i int) hours.Minute { return b.w.Span.From + hours.Minute(i) }
 
-// open asks the checker in which minutes a team can work on a step, by itself: one probe of a
-// minute for each, with the fire watch that would follow it.
-func (b *brute) open(s *expand.Step, team []string, keeper string) []bool {
-	key := fmt.Sprint(s.Index, team, keeper)
+// unary are the rules that one minute of work can break by itself.
+var unary = []string{"R1", "R2", "R5", "R13", "R14", "R15", "R23", "R25", "R26"}
+
+// open asks the checker in which minutes a team can work on a step, or with a relief either of
+// the two: one probe of a minute for each.
+func (b *brute) open(s *expand.Step, team, relief []string) []bool {
+	key := fmt.Sprint(s.Index, team, relief)
 	if l := b.lines[key]; l != nil {
 		return l
 	}
-	unary := []string{"R1", "R2", "R5", "R13", "R14", "R15", "R23"}
-	l := b.probe(b.w, *s, team, keeper, unary)
+	l := b.probe(b.w, *s, plan.Step{People: team, Relief: relief}, 0, func(br check.Breach) bool {
+		return slices.Contains(unary, br.Rule) && (br.Rule != "R13" || strings.Contains(br.Text, "is worked when"))
+	})
+	b.lines[key] = l
+	return l
+}
+
+// first asks in which minutes the first of two teams works: in the others it is the second's turn.
+func (b *brute) first(s *expand.Step, team, relief []string) []bool {
+	key := fmt.Sprint(s.Index, "first", team, relief)
+	if l := b.lines[key]; l != nil {
+		return l
+	}
+	l := b.probe(b.w, *s, plan.Step{People: team, Relief: relief}, 0, func(br check.Breach) bool { return br.Rule == "R9" })
+	b.lines[key] = l
+	return l
+}
+
+// stays asks from which minutes on somebody can stay the fire watch of a step out.
+func (b *brute) stays(s *expand.Step, team, relief []string, who string) []bool {
+	key := fmt.Sprint(s.Index, "watch", team, relief, who)
+	if l := b.lines[key]; l != nil {
+		return l
+	}
+	watch := []plan.Watch{{Span: hours.Span{To: hours.Minute(s.Watch)}, Person: who}}
+	l := b.probe(b.w, *s, plan.Step{People: team, Relief: relief, Watches: watch}, 1, func(br check.Breach) bool {
+		return br.Rule == "R13" && !strings.Contains(br.Text, "is worked when")
+	})
 	b.lines[key] = l
 	return l
 }
@@ -92,13 +122,14 @@ func (b *brute) access(s *expand.Step, team []string) []bool {
 		job.People[i] = &free
 	}
 	w.Job = &job
-	l := b.probe(&w, step, team, "", []string{"R5", "R23"})
+	l := b.probe(&w, step, plan.Step{People: team}, 0, func(br check.Breach) bool { return br.Rule == "R5" || br.Rule == "R23" })
 	b.lines[key] = l
 	return l
 }
 
-// probe plans one minute of a step, once for every tick, and asks which of these break a rule.
-func (b *brute) probe(w *expand.Work, s expand.Step, team []string, keeper string, rules []string) []bool {
+// probe plans one minute of a step, once for every tick, and asks which of these are shut; back is by how much
+// the minute lies before the one asked about.
+func (b *brute) probe(w *expand.Work, s expand.Step, with plan.Step, back hours.Minute, shut func(check.Breach) bool) []bool {
 	probes := *w
 	probes.Steps, probes.Links, probes.Orders, probes.Deadlines = nil, nil, nil, nil
 	p := plan.Plan{Basis: w.Basis}
@@ -106,25 +137,26 @@ func (b *brute) probe(w *expand.Work, s expand.Step, team []string, keeper strin
 	s.Deadline, s.NotBefore = hours.Far, hours.Never
 	line := make([]bool, b.index(b.hi))
 	var at []int
-	for i := 0; i < len(line); i += b.tick {
-		t := b.minute(i)
-		if s.Site && t+1+hours.Minute(s.Watch) > w.Window.Closes {
+	for i := b.tick; i < len(line); i += b.tick {
+		t := b.minute(i) - back
+		if s.Site && t+1 > w.Window.Closes || len(with.Watches) > 0 && t+1+hours.Minute(s.Watch) > w.Window.Closes {
 			continue // past the window: never
 		}
 		one := s
 		one.Index, one.Name = len(probes.Steps), fmt.Sprint("probe ", i)
 		probes.Steps = append(probes.Steps, &one)
-		span := hours.Span{From: t, To: t + 1}
-		st := plan.Step{Task: s.Task.Name, Step: one.Name, Start: t, Finish: t + 1, Pieces: []hours.Span{span}, People: team}
-		if keeper != "" {
-			st.Watches = []plan.Watch{{Span: hours.Span{From: t + 1, To: t + 1 + hours.Minute(s.Watch)}, Person: keeper}}
+		st := with
+		st.Task, st.Step, st.Start, st.Finish, st.Pieces = s.Task.Name, one.Name, t, t+1, []hours.Span{{From: t, To: t + 1}}
+		st.Watches = nil
+		for _, x := range with.Watches {
+			st.Watches = append(st.Watches, plan.Watch{Span: hours.Span{From: t + 1, To: t + 1 + x.To}, Person: x.Person})
 		}
 		p.Steps = append(p.Steps, st)
 		at = append(at, i)
 	}
 	closed := map[string]bool{}
 	for _, br := range check.Plan(&probes, &p) {
-		if br.Other == "" && slices.Contains(rules, br.Rule) {
+		if br.Other == "" && shut(br) {
 			closed[br.Step] = true
 		}
 	}
@@ -142,16 +174,15 @@ type run struct {
 	stops  []int // ends of its pieces that end in a stop, the finish last
 }
 
-// walk starts a step at minute t and goes on minute by minute, by R5, R6 and R8; open gives the
-// minutes open to it after so many stops, as they depend on who keeps the fire watch. ok is false
+// walk starts a step at minute t and goes on minute by minute, by R5, R6 and R8; ok is false
 // where it may not start there.
-func walk(s *expand.Step, open func(stops int) []bool, access []bool, t int) (r run, ok bool) {
+func walk(s *expand.Step, open, access []bool, t int) (r run, ok bool) {
 	left := s.Working
-	if !open(0)[t] {
+	if !open[t] {
 		return r, false
 	}
 	for first := true; left > 0; first = false {
-		o, meals := opening(open(len(r.stops)), access, t, s.SetUp+left)
+		o, meals := opening(open, access, t, s.SetUp+left)
 		if len(o) == 0 {
 			return r, false
 		}

@@ -1,11 +1,9 @@
 package settle
 
 import (
-	"fmt"
 	"slices"
 
 	"sailby/plan"
-	"sailby/plan/check"
 	"sailby/tasks"
 	"sailby/tasks/expand"
 	"sailby/tasks/hours"
@@ -16,6 +14,8 @@ type option struct {
 	plan.Step
 	s   *expand.Step
 	end hours.Minute // its finish, fire watches included
+
+	stops []int // after which a fire watch is kept, minutes of the span
 }
 
 // options lists every way to do a step with a start on the lattice, or, for what begins when
@@ -26,7 +26,7 @@ func (b *brute) options(s *expand.Step) []option {
 	for _, c := range b.choices(s) {
 		for _, i := range starts {
 			if o, ok := b.at(s, c, i); ok {
-				out = append(out, o)
+				out = append(out, b.watched(o)...)
 			}
 		}
 	}
@@ -53,20 +53,9 @@ func (b *brute) starts(s *expand.Step) []int {
 }
 
 // choice is a choice of people for a step.
-type choice struct {
-	team, relief []string
-	keepers      []string // who keeps the watch after each stop; the last of them after all others
-}
+type choice struct{ team, relief []string }
 
-// keeper gives who keeps the watch after a stop, counted from 0.
-func (c *choice) keeper(stop int) string {
-	if len(c.keepers) == 0 {
-		return ""
-	}
-	return c.keepers[min(stop, len(c.keepers)-1)]
-}
-
-// choices lists all the people that a step could be given, by R9 and R13.
+// choices lists all the people that a step could be given (R9).
 func (b *brute) choices(s *expand.Step) []choice {
 	if idle(s) || s.Class != expand.Hands {
 		return []choice{{}}
@@ -93,15 +82,10 @@ func (b *brute) choices(s *expand.Step) []choice {
 	fill(nil)
 	var out []choice
 	for _, t := range teams {
-		for _, k := range b.keepers(s, t) {
-			out = append(out, choice{team: t, keepers: k})
-			if !s.ChangeHands {
-				continue
-			}
-			for _, r := range teams {
-				if !slices.Equal(r, t) {
-					out = append(out, choice{team: t, relief: r, keepers: k})
-				}
+		out = append(out, choice{team: t})
+		for _, r := range teams {
+			if s.ChangeHands && !slices.Equal(r, t) {
+				out = append(out, choice{team: t, relief: r})
 			}
 		}
 	}
@@ -119,29 +103,6 @@ func may(p *tasks.Person, n *tasks.Need) bool {
 		}
 	}
 	return true
-}
-
-// keepers lists who may keep the watches after the stops of a step, one after another: its own
-// people, or anybody with the ticket (R13). From the third stop on it is the same one.
-func (b *brute) keepers(s *expand.Step, team []string) [][]string {
-	if s.Watch == 0 {
-		return [][]string{nil}
-	}
-	var one []string
-	for _, p := range b.w.Job.People {
-		if slices.Contains(team, p.Name) || may(p, s.Watcher) {
-			one = append(one, p.Name)
-		}
-	}
-	var out [][]string
-	for _, x := range one {
-		for _, y := range one {
-			for _, z := range one {
-				out = append(out, []string{x, y, z})
-			}
-		}
-	}
-	return out
 }
 
 // idle says whether a step takes no time.
@@ -173,59 +134,18 @@ func (b *brute) at(s *expand.Step, c choice, i int) (o option, ok bool) {
 	return o, true
 }
 
-// hands works out hands-on work.
+// hands works out hands-on work, fire watches left open.
 func (b *brute) hands(o option, c choice, i int) (option, bool) {
 	s := o.s
-	lines := func(stops int) []bool {
-		if c.relief == nil {
-			return b.open(s, c.team, c.keeper(stops))
-		}
-		return b.either(s, c, c.keeper(stops))
-	}
-	r, ok := walk(s, lines, b.access(s, c.team), i)
+	r, ok := walk(s, b.open(s, c.team, c.relief), b.access(s, c.team), i)
 	if !ok {
 		return o, false
 	}
-	for k := len(r.stops); k < len(c.keepers); k++ {
-		if c.keepers[k] != c.keepers[k-1] {
-			return o, false // the same as another choice
-		}
-	}
 	o.People, o.Relief = c.team, c.relief
-	b.cut(&o, c, r)
-	o.end = o.Finish
-	for k, e := range r.stops {
-		if s.Watch > 0 {
-			o.Watches = append(o.Watches, plan.Watch{Span: hours.Span{From: b.minute(e), To: b.minute(e + s.Watch)}, Person: c.keeper(k)})
-			o.end = b.minute(e + s.Watch)
-		}
-	}
-	return o, len(r.stops) < 2 || s.Watch == 0 || b.accepted(&o)
-}
-
-// either gives the minutes in which one team or the other can work.
-func (b *brute) either(s *expand.Step, c choice, keeper string) []bool {
-	key := fmt.Sprint(s.Index, c.team, c.relief, keeper)
-	l := b.lines[key]
-	if l == nil {
-		l = slices.Clone(b.open(s, c.team, keeper))
-		for k, v := range b.open(s, c.relief, keeper) {
-			l[k] = l[k] || v
-		}
-		b.lines[key] = l
-	}
-	return l
-}
-
-// cut makes pieces of the minutes worked, by team.
-func (b *brute) cut(o *option, c choice, r run) {
-	last, lastTeam, stop := -2, -1, 0
+	last, lastTeam := -2, -1
 	for _, m := range r.worked {
-		for stop < len(r.stops)-1 && m >= r.stops[stop] {
-			stop++
-		}
 		team := 0
-		if c.relief != nil && !b.open(o.s, c.team, c.keeper(stop))[m] {
+		if c.relief != nil && !b.first(s, c.team, c.relief)[m] {
 			team = 1
 		}
 		if m != last+1 || team != lastTeam {
@@ -238,19 +158,35 @@ func (b *brute) cut(o *option, c choice, r run) {
 		last, lastTeam = m, team
 	}
 	o.Finish = b.minute(last + 1)
+	o.end = o.Finish
+	if s.Watch > 0 {
+		o.stops = r.stops
+	}
+	return o, true
 }
 
-// accepted asks the checker about a step by itself: where the watch is kept by one after another
-// the hours open to it change with each stop.
-func (b *brute) accepted(o *option) bool {
-	w := *b.w
-	s := *o.s
-	s.Index, s.Deadline, s.NotBefore = 0, hours.Far, hours.Never
-	w.Steps, w.Links, w.Orders, w.Deadlines = []*expand.Step{&s}, nil, nil, nil
-	for _, br := range check.Plan(&w, &plan.Plan{Basis: w.Basis, Steps: []plan.Step{o.Step}}) {
-		if slices.Contains([]string{"R5", "R6", "R8", "R9", "R13"}, br.Rule) {
-			return false
+// watched gives an option with everybody who may keep each of its fire watches: its own people,
+// or anybody with the ticket (R13).
+func (b *brute) watched(o option) []option {
+	out := []option{o}
+	for _, e := range o.stops {
+		var next []option
+		for _, x := range out {
+			for _, p := range b.w.Job.People {
+				if p.Outside || !slices.Contains(o.People, p.Name) && !slices.Contains(o.Relief, p.Name) && !may(p, o.s.Watcher) {
+					continue
+				}
+				l := b.stays(o.s, o.People, o.Relief, p.Name)
+				if up := (e + b.tick - 1) / b.tick * b.tick; up >= len(l) || !l[e] || !l[up] {
+					continue
+				}
+				y := x
+				y.end = b.minute(e + o.s.Watch)
+				y.Watches = append(slices.Clone(x.Watches), plan.Watch{Span: hours.Span{From: b.minute(e), To: y.end}, Person: p.Name})
+				next = append(next, y)
+			}
 		}
+		out = next
 	}
-	return true
+	return out
 }

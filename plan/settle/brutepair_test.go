@@ -4,6 +4,8 @@ import (
 	"slices"
 	"strings"
 
+	"sailby/plan"
+	"sailby/plan/check"
 	"sailby/tasks"
 	"sailby/tasks/expand"
 	"sailby/tasks/hours"
@@ -200,8 +202,8 @@ func (b *brute) placeOpen(p *tasks.Place) []bool {
 	job.Duty = tasks.Amount{Value: 1e6, Pos: job.Pos}
 	job.Rest = tasks.Amount{Pos: tasks.Pos{File: "x", Line: 1}}
 	w.Job = &job
-	l := b.probe(&w, expand.Step{Task: &tasks.Task{Name: "x", Kind: tasks.Plain, Place: p}, Place: p, Needs: []tasks.Need{{Count: 1}}},
-		[]string{"X"}, "", []string{"R5"})
+	step := expand.Step{Task: &tasks.Task{Name: "x", Kind: tasks.Plain, Place: p}, Place: p, Needs: []tasks.Need{{Count: 1}}}
+	l := b.probe(&w, step, plan.Step{People: []string{"X"}}, 0, func(br check.Breach) bool { return br.Rule == "R5" })
 	b.lines["place "+p.Name] = l
 	return l
 }
