@@ -197,6 +197,10 @@ func (a *asked) homeAfter() bool {
 func (a *asked) keep(s *solve.Schedule, explain bool) error {
 	p := solve.Plan(a.carry, s)
 	late := s.Score.Late > 0
+	if late && a.leftBehind(s) {
+		a.out.NoPlan = "the search found none in which what goes along is ready before the trip leaves, not even a late one"
+		return nil
+	}
 	work := a.work
 	if late {
 		work = a.carry.Work
@@ -224,6 +228,23 @@ func (a *asked) keep(s *solve.Schedule, explain bool) error {
 		}
 	}
 	return nil
+}
+
+// leftBehind says whether something that goes along is not ready when the trip leaves (R1, R11):
+// that is no lateness, the plan is none.
+func (a *asked) leftBehind(s *solve.Schedule) bool {
+	leaves := a.p.Open
+	if t := a.work.Trip; t != nil {
+		leaves = int(t.Leaves - a.p.Base)
+	}
+	for i := range a.carry.Acts {
+		act := &a.carry.Acts[i]
+		goes := len(act.Step.Works) > 0 || act.Step.Moves != "" || act.Step.Class == expand.Cure
+		if act.Home && goes && act.By <= leaves && s.Finish[i] > leaves {
+			return true
+		}
+	}
+	return false
 }
 
 // deadlines sets what the plan makes of each deadline.
