@@ -22,6 +22,7 @@ type Answer struct {
 	Rows      []Row   // one for each step of Plan
 	Proof     *Proof  // for CannotFit
 	CutShort  bool    // the time limit or a cancel ended the search
+	NoPlan    string  // why there is no plan to show, not even a late one; "" if there is one
 	Steps     int64   // search steps done
 }
 

@@ -134,7 +134,7 @@ func (m *crewMaker) noOpening(s *expand.Step, teams []team, base hours.Set, room
 	need := s.Working + s.SetUp
 	switch {
 	case len(base) == 0:
-		return "there is no open hour for it"
+		return m.g.shutOut(s)
 	case s.InOneGo && longest < need:
 		return fmt.Sprintf("it goes in one go and needs %d min; the longest opening has %d min", need, longest)
 	case s.Lone && m.alone(s, teams, base):

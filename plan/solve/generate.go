@@ -271,7 +271,11 @@ func (g *generator) pulled(l *problem.Link, i, lo int) int {
 // pulledEnd gives the least minute for the earlier end of l from which its maximum reaches the placed
 // later end.
 func (g *generator) pulledEnd(l *problem.Link, lo int) int {
-	end := g.end(l.To, l.ToEnd)
+	return pulledTo(l, g.end(l.To, l.ToEnd), lo)
+}
+
+// pulledTo is pulledEnd for a later end at the given minute.
+func pulledTo(l *problem.Link, end, lo int) int {
 	a, b := lo, max(lo, end)
 	if l.FromEnd == tasks.Finish {
 		a = 0

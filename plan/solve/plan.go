@@ -6,6 +6,7 @@ import (
 	"sailby/plan"
 	"sailby/plan/problem"
 	"sailby/tasks"
+	"sailby/tasks/expand"
 	"sailby/tasks/hours"
 )
 
@@ -25,6 +26,7 @@ func Compact(p *problem.Problem, s *Schedule) *Schedule {
 		}
 		for _, i := range order {
 			lo, fin := g.lower(i, nil)
+			lo, fin = g.nearEnough(i, best, lo, fin)
 			at := g.earliest(i, best.Mode[i], g.first(i, best.Mode[i], lo, fin), problem.Inf-1, nil)
 			if at > best.Start[i] || g.breaksMax(i, best.Mode[i], at) {
 				at = best.Start[i]
@@ -39,12 +41,35 @@ func Compact(p *problem.Problem, s *Schedule) *Schedule {
 			return best
 		}
 		sc := g.score()
-		if slices.Equal(g.start, best.Start) || sc.Compare(best.Score, true) > 0 {
+		early, was := sc, best.Score
+		early.Idle, was.Idle = 0, 0 // waiting is no reason to begin late
+		if slices.Equal(g.start, best.Start) || early.Compare(was, true) > 0 {
 			return best
 		}
 		best = g.snapshot(sc)
 	}
 	return best
+}
+
+// nearEnough raises the bounds of i so that no longest wait to something later, where it stands
+// in best, is broken.
+func (g *generator) nearEnough(i int, best *Schedule, lo, fin int) (int, int) {
+	for _, k := range g.from[i] {
+		l := &g.p.Links[k]
+		if g.placed[l.To] || l.Max >= expand.NoMax && l.Last == nil || ownStanding(g.p, l) {
+			continue
+		}
+		end := best.Start[l.To]
+		if l.ToEnd == tasks.Finish {
+			end = best.Finish[l.To]
+		}
+		if t := pulledTo(l, end, lo); l.FromEnd == tasks.Finish {
+			fin = max(fin, t)
+		} else {
+			lo = max(lo, t)
+		}
+	}
+	return lo, fin
 }
 
 // load puts a whole schedule into the state.

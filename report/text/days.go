@@ -26,7 +26,11 @@ func Days(w io.Writer, r *plan.Report, o Options) error {
 	switch {
 	case a.Plan == nil:
 		p.gap()
-		p.para("", "There is no plan to show. `sailby fits` says why.")
+		why := ""
+		if a.NoPlan != "" {
+			why = ", not even a late one: " + a.NoPlan
+		}
+		p.para("", "There is no plan to show"+why+". `sailby fits` says what stands against it.")
 	case a.Late:
 		p.para("", "The plan below is late: of the plans found it is the one that is least late.")
 	}

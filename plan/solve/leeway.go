@@ -1,0 +1,163 @@
+package solve
+
+import (
+	"sailby/plan/problem"
+	"sailby/tasks/expand"
+	"sailby/tasks/hours"
+)
+
+const leewaySteps = 600
+
+// inOrder finds for every activity those that it comes after in the plan because both want the
+// same people, more of a resource than there is, or a workface to themselves.
+func (r *rower) inOrder() {
+	r.ahead = make([][]int, len(r.p.Acts))
+	if len(r.p.Acts) > leewaySteps {
+		return
+	}
+	for rank, j := range r.order {
+		for _, i := range r.order[:rank] {
+			if r.clear(i) <= r.s.Start[j] && r.s.Start[i] < r.s.Finish[i] && r.s.Start[j] < r.s.Finish[j] && r.meetAny(i, j) {
+				r.ahead[j] = append(r.ahead[j], i)
+			}
+		}
+	}
+}
+
+// clear gives the minute at which activity i and its fire watches are over.
+func (r *rower) clear(i int) int { return r.s.end(r.p, i) }
+
+// meetAny says whether two activities could not run side by side.
+func (r *rower) meetAny(i, j int) bool {
+	a, b := &r.p.Acts[i], &r.p.Acts[j]
+	ma, mb := &a.Modes[r.s.Mode[i]], &b.Modes[r.s.Mode[j]]
+	for _, p := range append(append([]int(nil), ma.Crew...), ma.Relief...) {
+		if hasPerson(mb.Crew, p) || hasPerson(mb.Relief, p) {
+			return true
+		}
+	}
+	for _, w := range r.s.Watches[i] {
+		if hasPerson(mb.Crew, w.Who) || hasPerson(mb.Relief, w.Who) {
+			return true
+		}
+	}
+	for _, ua := range a.Uses {
+		for _, ub := range b.Uses {
+			if ua.Res == ub.Res && ua.Amount+ub.Amount > r.p.Res[ua.Res].Capacity {
+				return true
+			}
+		}
+	}
+	for _, k := range r.g.pairs[j] {
+		if r.p.Pairs[k].A == i || r.p.Pairs[k].B == i {
+			return true
+		}
+	}
+	return false
+}
+
+// leeway finds by how much the finish of activity i can move later (R20).
+func (r *rower) leeway(rank, i int) {
+	row := &r.rows[i]
+	if r.g.standing[i] {
+		return // standing time goes with the step before it
+	}
+	ok := func(l int) bool { _, fine := r.delayed(rank, i, l); return fine }
+	hi := 15
+	for hi < r.p.End && ok(hi) {
+		hi *= 2
+	}
+	lo := 0
+	for hi-lo > 1 {
+		mid := (lo + hi) / 2
+		if ok(mid) {
+			lo = mid
+		} else {
+			hi = mid
+		}
+	}
+	if r.maxWaits() { // lateness need not grow with the delay: look at the steps between too
+		step := max(5, lo/60)
+		for l := step; l < lo; l += step {
+			if !ok(l) {
+				lo = l - step
+				for lo+1 < l && ok(lo+1) {
+					lo++
+				}
+				break
+			}
+		}
+	}
+	row.Leeway = lo
+	row.Latest = r.p.Base + hours.Minute(r.s.Finish[i]+lo)
+	if lo > 0 {
+		moved, _ := r.delayed(rank, i, lo)
+		seen := map[string]bool{r.p.Acts[i].Label(): true}
+		for _, j := range moved {
+			if name := r.p.Acts[j].Label(); !seen[name] && r.p.Acts[j].Step.Class == expand.Hands {
+				seen[name] = true
+				row.Shares = append(row.Shares, name)
+			}
+		}
+	}
+	r.g.load(r.s)
+}
+
+func (r *rower) maxWaits() bool {
+	for k := range r.p.Links {
+		if l := &r.p.Links[k]; (l.Max < expand.NoMax && l.Max > 0) || l.Last != nil {
+			return true
+		}
+	}
+	return false
+}
+
+// delayed makes the schedule again in its order with the finish of i at least l later; false
+// where that breaks a deadline or a maximum wait. moved are the later activities that moved.
+func (r *rower) delayed(rank, i, l int) (moved []int, ok bool) {
+	g, s := r.g, r.s
+	g.reset()
+	copy(g.choice, s.Choice)
+	for _, j := range r.order[:rank] {
+		g.put(j, s.Mode[j], s.Start[j])
+	}
+	for _, j := range r.order[rank:] {
+		w := r.p.Acts[j].Modes[s.Mode[j]].Time
+		lo, fin := s.Start[j], s.Finish[i]+l
+		if j != i {
+			lo, fin = g.lower(j, nil)
+			lo = max(lo, s.Start[j])
+			for _, k := range r.ahead[j] {
+				lo = max(lo, g.finish[k])
+			}
+		}
+		at := g.earliest(j, s.Mode[j], g.first(j, s.Mode[j], lo, fin), problem.Inf-1, nil)
+		if at >= problem.Inf || g.breaksMax(j, s.Mode[j], at) {
+			return nil, false
+		}
+		end := w.Finish(at)
+		a := &r.p.Acts[j]
+		if end > a.By || a.Site && a.By < problem.Inf && w.Watch() > 0 && at < end && end+w.Watch() > r.p.Close {
+			return nil, false
+		}
+		if j != i && at > s.Start[j] {
+			moved = append(moved, j)
+		}
+		g.put(j, s.Mode[j], at)
+	}
+	return moved, g.whole()
+}
+
+// firstFinishing gives the least start at or after lo with a finish of at least f.
+func firstFinishing(w *problem.Timing, f, lo int) int {
+	a, b := lo, max(lo, f)
+	for a < b {
+		mid := (a + b) / 2
+		if s := w.Start(mid); s < problem.Inf && w.Finish(s) < f {
+			a = mid + 1
+		} else {
+			b = mid
+		}
+	}
+	return a
+}
