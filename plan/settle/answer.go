@@ -161,6 +161,18 @@ func (a *asked) find(explain bool) error {
 			}
 		}
 	}
+	if a.work.Trip != nil && a.carry != a.p && (res.Best == nil || res.Best.Score.Late > 0) && !a.stop() {
+		a.say("plans in which nobody goes home before the work is done")
+		stay := problem.Compile(a.work.Remain())
+		if b, ok := undated(stay); ok {
+			o.Good = nil
+			late := solve.Find(stay, b, o)
+			late.Ticks += res.Ticks
+			if late.Best != nil && late.Best.Score.Late > 0 && (res.Best == nil || late.Best.Score.Compare(res.Best.Score, true) < 0) {
+				a.carry, res = stay, late
+			}
+		}
+	}
 	a.out.Steps, a.out.CutShort = res.Ticks, a.stop()
 	if res.Best == nil {
 		a.out.NoPlan = "the search found none, not even a late one"

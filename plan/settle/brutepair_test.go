@@ -11,21 +11,21 @@ import (
 	"sailby/tasks/hours"
 )
 
-// without leaves one thing of a job out, to see what it does.
+// without leaves some things out for one step, to see what they do.
 type without struct {
-	link   int    // index in the work's links, -1 none
-	person string // who, as far as the step goes
-	pair   bool   // states and moves against the other step
-	kit    string
-	room   bool
-	power  bool
-	orders bool
-	begin  bool // not-before times
-	step   *expand.Step
-	other  *expand.Step
+	step    *expand.Step
+	links   map[int]bool          // by index in the work's links
+	persons map[string]bool       // who, as far as the step goes
+	apart   map[*expand.Step]bool // states and moves against these
+	kit     map[string]bool
+	room    bool
+	power   bool
+	orders  bool
+	begin   bool // its not-before time
+	clock   bool // its hours: it takes its working minutes at any time
 }
 
-var nothing = without{link: -1}
+var nothing without
 
 // together says whether two options of different steps can stand in one plan as far as people,
 // states, assemblies and links between them go (R7, R9 to R13).
@@ -37,7 +37,7 @@ func (b *brute) apart(x, y *option, but *without) bool {
 	if b.sharesPeople(x, y, but) {
 		return false
 	}
-	if but.pair && (but.other == nil || but.step == x.s && but.other == y.s || but.step == y.s && but.other == x.s) {
+	if but.step == x.s && but.apart[y.s] || but.step == y.s && but.apart[x.s] {
 		return true
 	}
 	return !b.statesMeet(x, y) && !b.moved(x, y) && !b.moved(y, x)
@@ -80,7 +80,7 @@ func (b *brute) sharesPeople(x, y *option, but *without) bool {
 	}
 	for _, d := range x.duties() {
 		for _, e := range y.duties() {
-			left := but.person == d.who && (but.step == x.s || but.step == y.s)
+			left := but.persons[d.who] && (but.step == x.s || but.step == y.s)
 			if d.who == e.who && !left && d.Overlaps(e.Span) && !(d.watch && e.watch && x.s.Face != nil && x.s.Face == y.s.Face) {
 				return true
 			}
@@ -157,7 +157,7 @@ func (b *brute) moved(x, y *option) bool {
 // linked says whether the links from x to y hold (R10, R11, R16).
 func (b *brute) linked(x, y *option, but *without) bool {
 	for _, k := range b.between[[2]int{x.s.Index, y.s.Index}] {
-		if l := &b.w.Links[k]; k != but.link && !b.waits(l, end(x, l.FromEnd), end(y, l.ToEnd)) {
+		if l := &b.w.Links[k]; !but.links[k] && !b.waits(l, end(x, l.FromEnd), end(y, l.ToEnd)) {
 			return false
 		}
 	}
@@ -238,7 +238,7 @@ func (b *brute) holdsAt(all []*option, t hours.Minute, but *without) bool {
 		}
 		working := slices.ContainsFunc(o.Pieces, func(p hours.Span) bool { return p.Has(t) })
 		for _, u := range o.s.Kit {
-			if (working || u.Stays && o.Start <= t && t < o.Finish) && !(but.kit == u.Kit.Name && but.step == o.s) {
+			if (working || u.Stays && o.Start <= t && t < o.Finish) && !(but.kit[u.Kit.Name] && but.step == o.s) {
 				kit[u.Kit] += u.Count
 			}
 		}

@@ -13,7 +13,9 @@ import (
 )
 
 // drawLaw makes a small job for a law; jobs with a fault are left out.
-func drawLaw(t *rapid.T) *small { return drawSmall(t, rapid.SampledFrom([]int{10, 30}).Draw(t, "grain"), 6) }
+func drawLaw(t *rapid.T) *small {
+	return drawSmall(t, rapid.SampledFrom([]int{10, 30}).Draw(t, "grain"), 6)
+}
 
 // TestWeekLater: all dates a week later, in a zone without a change of clocks, move the plan and
 // all that is said of it by a week.

@@ -87,7 +87,9 @@ func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 	last := &a.p.Acts[c.Act]
 	by := a.work.Window.Closes
 	end := c.Act
+	dated := false // whether any date is needed for the contradiction
 	for i := range a.p.Acts {
+		dated = dated || a.p.Acts[i].By < problem.Inf && !off.By[i]
 		if a.p.Acts[i].By < problem.Inf && !off.By[i] && b.Finish[i] > a.p.Acts[i].By {
 			end, last = i, &a.p.Acts[i]
 		}
@@ -124,6 +126,10 @@ func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 		p.Lines = append(p.Lines, plan.ProofLine{Text: text, Minutes: act.Modes[0].Time.Length(), Pos: act.Pos(), Needed: a.needed(off, i)})
 	}
 	for _, l := range links {
+		if l.Last != nil {
+			from := b.Finish[max(l.From, 0)]
+			p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s: no later than %s", l.Step.Why, a.clock(l.Last(from))), Pos: l.Step.Pos, Needed: true})
+		}
 		if l.Max < expand.NoMax && l.Max > 0 {
 			p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s: at most %s", l.Step.Why, span(l.Max)), Minutes: l.Max, Pos: l.Step.Pos, Needed: true})
 		}
@@ -131,6 +137,11 @@ func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 	p.Over = c.Late
 	if b.Finish[end] > last.By {
 		p.Over = b.Finish[end] - last.By
+	}
+	if !dated {
+		p.Over = 0
+		p.Summary = fmt.Sprintf("the waits round %s contradict each other, on any date and with unlimited people", stepName(last.Step))
+		return p
 	}
 	what := "must be finished by"
 	p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s %s %s", stepName(last.Step), what, by.In(last.Step.Place.Zone).Format("Mon 2 Jan 15:04")), Pos: a.byPos(last), Needed: true})
