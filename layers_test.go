@@ -43,8 +43,9 @@ var mayImport = map[string][]string{
 
 	"report/clean":        {},
 	"report/agenda":       {"plan", "report/clean", "tasks", "tasks/expand", "tasks/site", "weld"},
-	"report/text":         {"plan", "report/agenda", "report/clean", "tasks", "tasks/expand"},
-	"report/sheets":       {"plan", "report/agenda", "report/clean", "tasks", "tasks/expand", "weld"},
+	"report/packlist":     {"plan", "report/agenda", "report/clean", "tasks", "tasks/coat", "tasks/expand", "tasks/lift"},
+	"report/text":         {"plan", "report/agenda", "report/clean", "report/packlist", "tasks", "tasks/expand"},
+	"report/sheets":       {"plan", "report/agenda", "report/clean", "report/packlist", "tasks", "tasks/expand", "tasks/lift", "weld"},
 	"report/pdf":          {"report/clean", "report/sheets"},
 	"report/export":       {"plan", "report/agenda", "report/clean", "tasks", "tasks/expand"},
 	"report/screen/model": {"plan", "report/agenda", "report/clean", "report/text", "tasks", "tasks/expand"},

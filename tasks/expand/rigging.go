@@ -76,7 +76,7 @@ func (x *expander) rigging(t *tasks.Task) *Rigging {
 		}
 	}
 	for _, k := range x.w.Job.Kit {
-		if k.HasKind || k.Chart != nil {
+		if (k.HasKind || k.Chart != nil) && (k.At == nil || k.At == t.Place) {
 			r.gear = append(r.gear, k)
 		}
 	}

@@ -289,3 +289,60 @@ func plus(a, b lift.Total, shape bool) lift.Total {
 	out.Allowance = out.Heavy / math.Max(out.Mass, 1e-9)
 	return out
 }
+
+// Piece is what hangs together of an assembly when it leaves for the site.
+type Piece struct {
+	Name  string // its parts: "posts, rails"
+	Parts []string
+	Total lift.Total
+}
+
+// Travels gives an assembly as it leaves for the site: in one piece, or in those that only tasks at
+// the site join.
+func Travels(w *Work, a *tasks.Assembly) []Piece {
+	s := newStager(w.Job)
+	var joined []Join
+	absent := map[*tasks.Task]bool{}
+	for _, st := range w.Steps {
+		absent[st.Task] = absent[st.Task] || st.Absent
+	}
+	for _, t := range w.Job.Tasks {
+		if j, ok := joinOf(t); ok && !absent[t] && t.Place != w.Window.Place {
+			joined = append(joined, j)
+		}
+	}
+	if len(a.Parts) == 0 {
+		total, err := s.weigh(a, nil, false, &tasks.Task{Lifts: a.Name})
+		if err != nil {
+			return nil
+		}
+		return []Piece{{Name: a.Name, Parts: []string{a.Name}, Total: total}}
+	}
+	done := map[string]bool{}
+	var out []Piece
+	for i := -1; i < len(a.Parts); i++ {
+		thing := a.Name
+		if i >= 0 {
+			thing = a.Name + "/" + a.Parts[i].Name
+			if done[thing] {
+				continue
+			}
+		}
+		hang := s.hanging(thing, joined)
+		parts, all := s.of(a, hang)
+		if len(parts) == 0 {
+			continue
+		}
+		var names []string
+		for _, p := range all {
+			done[p] = true
+			names = append(names, strings.TrimPrefix(p, a.Name+"/"))
+		}
+		total, err := s.weigh(a, parts, false, &tasks.Task{Lifts: thing})
+		if err != nil {
+			continue
+		}
+		out = append(out, Piece{Name: strings.Join(names, ", "), Parts: all, Total: total})
+	}
+	return out
+}

@@ -1,0 +1,261 @@
+package packlist
+
+import (
+	"cmp"
+	"fmt"
+	"math"
+	"slices"
+	"strings"
+
+	"sailby/tasks"
+	"sailby/tasks/hours"
+	"sailby/tasks/lift"
+	"sailby/tasks/origin"
+)
+
+// Vehicle is one run of one vehicle, with what is in it in the order of loading.
+type Vehicle struct {
+	Name    string
+	Run     int
+	Goods   []Stowed
+	Mass    float64 // kg
+	Payload float64 // kg left for goods
+	Nose    float64 // kg on the hitch, trailers only
+	Straps  []Straps
+}
+
+// Stowed is one thing in a vehicle: x runs from the headboard to the tail, y from the left.
+type Stowed struct {
+	What    string
+	Mass    float64
+	X, Y, Z float64 // mm
+	Loose   bool    // without sizes: anywhere
+}
+
+// Straps says how a load is tied down.
+type Straps struct {
+	What    string
+	Count   int
+	Governs string
+	Edition string // of EN 12195-1
+	Notes   []string
+}
+
+// heavyGoods is the mass from which straps are counted, kg (house judgement).
+const heavyGoods = 50
+
+// vehicles finds what goes in which vehicle on which run, and flags what rules say of it.
+func (m *maker) vehicles() {
+	m.driving()
+	m.bands()
+	if len(m.job.Vehicles) == 0 {
+		return
+	}
+	goods, from := m.goods()
+	if len(goods) == 0 {
+		return
+	}
+	var list []lift.Vehicle
+	for _, v := range m.job.Vehicles {
+		list = append(list, v.Vehicle)
+	}
+	p, err := lift.LoadVehicles(goods, list)
+	if err != nil {
+		m.list.OK, m.list.Reason = false, "no load plan: "+err.Error()
+		return
+	}
+	m.list.OK, m.list.Reason, m.list.Nearest, m.list.Proved = p.OK, p.Reason, p.Nearest, p.Proved
+	m.list.Notes = append(m.list.Notes, p.Warnings...)
+	if !p.OK {
+		return
+	}
+	for _, breach := range lift.CheckLoads(goods, list, p.Trips) {
+		m.list.OK = false
+		m.list.Flags = append(m.list.Flags, "the load plan does not hold: "+breach)
+	}
+	runs := false
+	for _, t := range p.Trips {
+		v := m.job.Vehicles[t.Vehicle]
+		out := Vehicle{Name: v.Name, Run: t.Number, Mass: roundUp(t.Mass), Payload: math.Floor(t.Payload), Nose: t.Nose}
+		runs = runs || t.Number > 1
+		where := v.Name
+		if v.Trips > 1 {
+			where = fmt.Sprintf("%s, run %d", v.Name, t.Number)
+		}
+		for _, s := range t.Stowed {
+			g := goods[s.Goods]
+			out.Goods = append(out.Goods, Stowed{What: g.Name, Mass: g.Mass, X: s.X, Y: s.Y, Z: s.Z, Loose: s.Loose})
+			from[s.Goods](where)
+			if g.Mass >= heavyGoods && s.On < 0 {
+				out.Straps = append(out.Straps, m.straps(g, v))
+			}
+		}
+		for _, f := range lift.Carriage(goods, t, m.job.Carriage) {
+			m.flag(v.Name + ": " + f)
+		}
+		m.list.Vehicles = append(m.list.Vehicles, out)
+	}
+	if runs {
+		m.list.Notes = append(m.list.Notes, "what goes on a second run is at the site only after it: the plan has one arrival, so see that nothing of it is needed before")
+	}
+}
+
+func (m *maker) flag(s string) {
+	if !slices.Contains(m.list.Flags, s) {
+		m.list.Flags = append(m.list.Flags, s)
+	}
+}
+
+// goods writes the list as things to stow: boxes, and what is loose. from marks where a thing went.
+func (m *maker) goods() (goods []lift.Goods, from []func(where string)) {
+	rank := m.ranks()
+	boxed := map[string]int{}
+	for i := range m.items {
+		it := &m.items[i]
+		mark := func(where string) {
+			if !slices.Contains(it.Where, where) {
+				it.Where = append(it.Where, where)
+			}
+		}
+		if it.Box != "" {
+			at, ok := boxed[it.Box]
+			if !ok {
+				at = len(goods)
+				boxed[it.Box] = at
+				b := m.job.Packing.Boxes[slices.IndexFunc(m.job.Packing.Boxes, func(b tasks.Box) bool { return b.Name == it.Box })]
+				goods = append(goods, lift.Goods{Name: "box " + b.Name, Mass: max(b.Mass, 0.1), Length: b.Size[0], Width: b.Size[1], Height: b.Size[2], Needed: rank[it.Day], Stack: true})
+				from = append(from, func(where string) {
+					for k := range m.list.Boxes {
+						if m.list.Boxes[k].Name == b.Name {
+							m.list.Boxes[k].Where = where
+						}
+					}
+				})
+			}
+			goods[at].Mass += it.Mass
+			goods[at].Needed = min(goods[at].Needed, rank[it.Day])
+			if it.stow.Class != "" && goods[at].Class == "" {
+				goods[at].Class, goods[at].Amount = it.stow.Class, it.stow.Of
+			}
+			before := from[at]
+			from[at] = func(where string) { before(where); mark(where) }
+			continue
+		}
+		if it.Mass <= 0 {
+			continue // not known, or nothing: in a corner
+		}
+		n := max(it.pieces, 1)
+		for k := range n {
+			name := it.What
+			if n > 1 {
+				name = fmt.Sprintf("%s %d", it.What, k+1)
+			}
+			s := it.stow
+			goods = append(goods, lift.Goods{Name: name, Mass: it.Mass / float64(n), Length: s.Size[0], Width: s.Size[1], Height: s.Size[2],
+				Needed: rank[it.Day], Stack: s.Stack, Class: s.Class, Amount: s.Of})
+			from = append(from, mark)
+		}
+	}
+	return goods, from
+}
+
+// ranks numbers the moments at which things are first needed, in order; what has no moment is
+// needed last.
+func (m *maker) ranks() map[hours.Minute]int {
+	var days []hours.Minute
+	for _, it := range m.items {
+		if it.Day != 0 && !slices.Contains(days, it.Day) {
+			days = append(days, it.Day)
+		}
+	}
+	slices.SortFunc(days, func(a, b hours.Minute) int { return cmp.Compare(a, b) })
+	out := map[hours.Minute]int{0: len(days) + 1}
+	for i, d := range days {
+		out[d] = i + 1
+	}
+	return out
+}
+
+// straps counts the straps over one load.
+func (m *maker) straps(g lift.Goods, v *tasks.Vehicle) Straps {
+	c := lift.Cargo{On: v.Bed, Old: v.Edition}
+	if m.w.Trip != nil {
+		c.Sea = m.w.Trip.Sea
+	}
+	res, err := lift.Secure(lift.Load{Name: g.Name, Mass: g.Mass, Length: g.Length, Width: g.Width, Height: g.Height}, c, v.Lashing)
+	if err != nil {
+		return Straps{What: g.Name, Notes: []string{"straps not counted: " + err.Error()}}
+	}
+	return Straps{What: g.Name, Count: res.Straps, Governs: res.Governs, Edition: res.Edition, Notes: res.Warnings}
+}
+
+// driving flags what the rules of the job file say of the drivers' day on the way out.
+func (m *maker) driving() {
+	if m.w.Trip == nil || len(m.job.Driving) == 0 {
+		return
+	}
+	var d lift.Duty
+	run := 0.0
+	for i, l := range m.w.Trip.Out {
+		span := float64(l.To - l.From)
+		if strings.HasPrefix(l.What, "drive") {
+			d.Drive += span
+			run += span
+			d.LongestDrive = max(d.LongestDrive, run)
+		} else if span >= 45 {
+			run = 0
+		}
+		if i == 0 {
+			d.OnDuty = float64(m.w.Trip.Out[len(m.w.Trip.Out)-1].To - l.From)
+		}
+	}
+	for _, v := range m.job.Vehicles {
+		if v.TowedBy != "" {
+			continue
+		}
+		one := d
+		one.Driver, one.Gross, one.OwnWorkTools = v.Driver, v.Gross, v.OwnTools
+		if one.Driver == "" {
+			one.Driver = "the driver of " + v.Name
+		}
+		if one.Gross == 0 {
+			one.Gross = v.Empty + v.Payload
+		}
+		for _, t := range m.job.Vehicles {
+			if t.TowedBy == v.Name {
+				one.Gross += max(t.Gross, t.Empty+t.Payload)
+			}
+		}
+		for _, f := range lift.Driving(one, m.job.Driving) {
+			m.flag(f + "; check it, it is not decided here")
+		}
+	}
+}
+
+// bands finds the ferry's band for each vehicle, with its trailer.
+func (m *maker) bands() {
+	if m.w.Trip == nil || len(m.w.Trip.Bands) == 0 {
+		return
+	}
+	for _, v := range m.job.Vehicles {
+		if v.TowedBy != "" {
+			continue
+		}
+		long, high, name := v.Long, v.High, v.Name
+		for _, t := range m.job.Vehicles {
+			if t.TowedBy == v.Name {
+				long, high, name = long+t.Long, max(high, t.High), v.Name+" with "+t.Name
+			}
+		}
+		if v.Long == 0 || v.High == 0 {
+			m.flag(v.Name + ": its length and height over all are not known (keys `long` and `high`): no ferry band")
+			continue
+		}
+		b, err := lift.BookingBand(m.w.Trip.Bands, long, high)
+		if err != nil {
+			m.flag(name + ": " + err.Error())
+			continue
+		}
+		m.list.Notes = append(m.list.Notes, fmt.Sprintf("%s, %s m long and %s m high, books as %q", name, origin.Trim(long/1000), origin.Trim(high/1000), b.Name))
+	}
+}
