@@ -57,11 +57,19 @@ func days(a, b hours.Date) int {
 	return int(t(b).Sub(t(a)).Hours()) / 24
 }
 
-// Facts gives the day's sun and, at the site, the hours left to the window's end.
+// Facts gives the day's sun and tide, the hours that nature leaves to coats and, at the site, the hours left to the window's end.
 func Facts(w *expand.Work, s *Shift) string {
 	var parts []string
 	if rise, set, ok := Sun(s); ok {
 		parts = append(parts, fmt.Sprintf("sun %s to %s", rise, set))
+	}
+	if t := Tides(w, s.Place, s.Date); t != "" {
+		parts = append(parts, t)
+	}
+	if s.Place != nil {
+		if words := FitWords(w, s.Place, s.Span); len(words) > 0 {
+			parts = append(parts, "weather and water leave "+strings.Join(words, ", "))
+		}
 	}
 	if s.Site {
 		parts = append(parts, fmt.Sprintf("at the start %s left to the window's end", quantity.Hours(int(w.Window.Closes-s.From))))

@@ -46,12 +46,12 @@ func faceReach(w *expand.Work, f *tasks.Workface, in hours.Span) (hours.Set, boo
 			open = append(open, s)
 		}
 		return hours.NewSet(open...).Within(in), true
-	case f.Level.Pos.Given() && f.Place != nil && f.Place.Tide != nil && len(f.Place.Tide.Waters) > 1:
+	case (f.Level.Pos.Given() || f.CoversAt.Pos.Given()) && f.Place != nil && f.Place.Tide != nil && len(f.Place.Tide.Waters) > 1:
 		// Asked a day wide, as far as the table goes, so that the way off is taken from the tide's end
 		// and not from the shift's.
 		waters := f.Place.Tide.Waters
 		wide := hours.Span{From: max(in.From-1440, hours.Minute(waters[0].At)), To: min(in.To+1440, hours.Minute(waters[len(waters)-1].At))}
-		spans, err := f.Place.Tide.Reach(true, f.Level.Value, int64(wide.From), int64(wide.To))
+		spans, err := f.Place.Tide.Reach(true, f.Covers(), int64(wide.From), int64(wide.To))
 		if err != nil {
 			return nil, false // the table does not reach so far; the plan says so where it matters
 		}

@@ -23,10 +23,14 @@ func Fits(w io.Writer, r *plan.Report, o Options) error {
 	if a.CutShort && a.Verdict == plan.Unsettled {
 		p.para("", "The search was cut short; a longer limit may settle it.")
 	}
+	for _, g := range agenda.Getaways(a.Work) {
+		p.para("", g.Words+".")
+	}
 	p.gap()
 	p.sideBySide(r)
 	p.window(a)
 	p.deadlines(a)
+	p.nature(a)
 	p.governing(a)
 	for _, side := range []*plan.Answer{r.Likely, r.Maybes, r.High} {
 		if side != nil && side.Proof != nil {

@@ -134,6 +134,7 @@ func (p *page) step(a *plan.Answer, i int, s *expand.Step) bool {
 	}
 	if a.Plan != nil && i < len(a.Plan.Steps) {
 		p.planned(a, i, s)
+		p.curing(a, i, s)
 	}
 	label := "  hours     "
 	if s.Estimate.Overruled {

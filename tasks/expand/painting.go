@@ -279,7 +279,7 @@ func meet(a, b []string) bool {
 // spoils gives the first minute from m on in which prepared steel does not keep its grade; nil where
 // no weather is known.
 func (x *expander) spoils(f *tasks.Task) func(hours.Minute) hours.Minute {
-	closed := x.w.damp(f)
+	closed := x.w.damp(f, x.w.Span)
 	if closed == nil {
 		return nil
 	}

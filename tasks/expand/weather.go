@@ -16,18 +16,26 @@ import (
 // Nature lists the spans of the work's span in which weather and water close a hands-on step (R25,
 // R26), each with the reason in words, in order of their starts; spans may overlap. Reach, light and
 // hire are not in it. Cost: O(hours of the span) a step.
-func (w *Work) Nature(s *Step) []site.Span {
+func (w *Work) Nature(s *Step) []site.Span { return w.NatureIn(s, w.Span) }
+
+// NatureIn is Nature for a part of the work's span; reasons are those of the hours in it.
+func (w *Work) NatureIn(s *Step, in hours.Span) []site.Span {
 	if s.Class != Hands || s.Absent || s.Working == 0 {
 		return nil
 	}
 	var out []site.Span
 	switch {
 	case s.Paint != nil:
-		out = w.coatWeather(s)
+		out = w.coatWeather(s, in)
 	case s.Task.Kind == tasks.Prep:
-		out = w.damp(s.Task)
+		out = w.damp(s.Task, in)
 	}
-	out = append(out, w.water(s)...)
+	for _, shut := range w.water(s) {
+		shut.From, shut.To = max(shut.From, int64(in.From)), min(shut.To, int64(in.To))
+		if shut.From < shut.To {
+			out = append(out, shut)
+		}
+	}
 	sort.SliceStable(out, func(i, j int) bool { return out[i].From < out[j].From })
 	return out
 }
@@ -41,7 +49,7 @@ func felt(t *tasks.Task, w site.Weather) site.Weather {
 }
 
 // coatWeather gives when a coat may not be put on, and when what is put on would be lost.
-func (w *Work) coatWeather(s *Step) []site.Span {
+func (w *Work) coatWeather(s *Step, in hours.Span) []site.Span {
 	series := s.Place.Hourly(s.Face)
 	if series == nil {
 		return nil
@@ -50,7 +58,7 @@ func (w *Work) coatWeather(s *Step) []site.Span {
 	if s.Name == "stripe" {
 		method = coat.Brush
 	}
-	from, to := int64(w.Span.From), int64(w.Span.To)
+	from, to := int64(in.From), int64(in.To)
 	out := series.ClosedBy(func(h site.Weather) []string {
 		h = felt(s.Task, h)
 		_, reasons := coat.MayApply(p, h.Air, h.Steel, h.RH, h.Wind, method)
@@ -99,7 +107,7 @@ func settles(dew, steel float64) float64 {
 
 // damp gives when surface preparation may not be done and prepared steel turns; nil where weather
 // does not bear on it.
-func (w *Work) damp(t *tasks.Task) []site.Span {
+func (w *Work) damp(t *tasks.Task, in hours.Span) []site.Span {
 	series := t.Place.Hourly(t.Face)
 	if series == nil {
 		return nil
@@ -117,7 +125,7 @@ func (w *Work) damp(t *tasks.Task) []site.Span {
 			reasons = append(reasons, "wet")
 		}
 		return reasons
-	}, int64(w.Span.From), int64(w.Span.To))
+	}, int64(in.From), int64(in.To))
 }
 
 func zone(p *tasks.Place) *time.Location {
