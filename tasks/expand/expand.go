@@ -36,6 +36,7 @@ func Expand(job *tasks.Job, b Basis) (*Work, tasks.Faults) {
 	x.orders()
 	x.stages()
 	x.deadlines()
+	x.power()
 	if len(x.faults) > 0 {
 		return nil, x.faults.Sorted()
 	}
