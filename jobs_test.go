@@ -12,6 +12,7 @@ import (
 
 	"sailby/plan"
 	"sailby/plan/settle"
+	"sailby/report/agenda"
 	"sailby/tasks/hours"
 	"sailby/tasks/jobfile"
 )
@@ -85,6 +86,13 @@ func said(rep *plan.Report, key string) string {
 			return fmt.Sprintf("no such plan (late: %v)", a.Late)
 		}
 		return stamp(a.Finish, zone)
+	case "getting off":
+		for _, g := range agenda.Getaways(a.Work) {
+			if g.Neaped {
+				return "neaped"
+			}
+		}
+		return "gets off"
 	case "with maybes":
 		return fmt.Sprintf("%s %s", rep.Maybes.Verdict, stamp(rep.Maybes.Finish, zone))
 	}

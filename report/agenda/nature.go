@@ -124,6 +124,8 @@ func FitWords(w *expand.Work, p *tasks.Place, in hours.Span) []string {
 				parts = append(parts, Between(s, Zone(w, p)))
 			}
 			words = strings.Join(parts, " and ")
+		} else if why := mostly(x.Closed); why != "" {
+			words += " (" + why + ")"
 		}
 		out = append(out, x.Name+": "+words)
 	}
@@ -273,4 +275,15 @@ func DayWords(w *expand.Work, p *tasks.Place, d hours.Date) []string {
 		out = append(out, x)
 	}
 	return append(out, FitWords(w, p, span)...)
+}
+
+// mostly gives the reason of the longest of some spans, the first of equals.
+func mostly(shut []site.Span) string {
+	why, longest := "", int64(0)
+	for _, s := range shut {
+		if s.To-s.From > longest {
+			why, longest = s.Why, s.To-s.From
+		}
+	}
+	return why
 }
