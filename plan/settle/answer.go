@@ -232,7 +232,7 @@ func (a *asked) keep(s *solve.Schedule, explain bool) error {
 	if explain || len(p.Steps) <= explainAll {
 		a.out.Rows = solve.Rows(a.carry, s, a.stop)
 		a.out.Governing = solve.Governing(a.carry, s, a.out.Rows)
-		a.lastStarts()
+		a.lastStarts(s)
 	} else {
 		a.out.Rows = make([]plan.Row, len(p.Steps))
 		for i := range a.out.Rows {
@@ -272,14 +272,18 @@ func (a *asked) deadlines(s *solve.Schedule) {
 	}
 }
 
-// lastStarts sets the last start of each deadline's task that still makes it.
-func (a *asked) lastStarts() {
+// lastStarts sets the last start of each deadline's task from which its finish still lies within
+// its leeway.
+func (a *asked) lastStarts(s *solve.Schedule) {
 	for k := range a.out.Deadlines {
 		d := &a.out.Deadlines[k]
-		if d.Step == nil || a.out.Rows[d.Step.Index].Leeway < 0 {
+		if d.Step == nil {
 			continue
 		}
-		d.LastStart = a.out.Plan.Steps[d.Step.Index].Start + hours.Minute(a.out.Rows[d.Step.Index].Leeway)
+		i := d.Step.Index
+		if l := a.out.Rows[i].Leeway; l >= 0 {
+			d.LastStart = a.at(a.carry.Acts[i].Modes[s.Mode[i]].Time.Latest(s.Finish[i]+l, s.Start[i]))
+		}
 	}
 }
 

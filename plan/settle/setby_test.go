@@ -68,7 +68,14 @@ func (r *replay) tries(o *option, t int, clock bool) []option {
 	if !ok {
 		return nil
 	}
-	return r.watched(x)
+	return slices.DeleteFunc(r.watched(x), func(y option) bool { // those who keep the watches are kept too
+		for k := range min(len(y.Watches), len(o.Watches)) {
+			if y.Watches[k].Person != o.Watches[k].Person {
+				return true
+			}
+		}
+		return false
+	})
 }
 
 // stands says whether step i as x stands beside all other steps as they are planned.

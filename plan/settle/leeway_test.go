@@ -1,0 +1,224 @@
+package settle
+
+import (
+	"slices"
+	"testing"
+
+	"sailby/tasks/expand"
+	"sailby/tasks/hours"
+
+	"pgregory.net/rapid"
+)
+
+// late makes the plan again with step i moved, minute by minute: the steps before it stay, those
+// after it keep their order and people and move later only as far as they must. ok is false where a step
+// finds no place before the end of the hours, or a wait or a deadline is broken.
+func (r *replay) late(i int, moves func(o *option) bool) (ok bool) {
+	order := r.order()
+	done := make([]*option, len(r.all))
+	rank := slices.Index(order, i)
+	for _, j := range order[:rank] {
+		done[j] = r.all[j]
+	}
+	for _, j := range order[rank:] {
+		x := r.place(j, done, func(o *option) bool { return j != i || moves(o) })
+		if x == nil {
+			return false
+		}
+		done[j] = x
+	}
+	for j, x := range done {
+		if !r.alone(x) {
+			return false
+		}
+		for _, y := range done[:j] {
+			if !r.linked(x, y, &nothing) || !r.linked(y, x, &nothing) {
+				return false
+			}
+		}
+	}
+	return r.ordered(done)
+}
+
+// order gives the steps by start, then finish, then as they are written.
+func (r *replay) order() []int {
+	var out []int
+	for i := range r.all {
+		out = append(out, i)
+	}
+	slices.SortStableFunc(out, func(a, b int) int {
+		if r.all[a].Start != r.all[b].Start {
+			return int(r.all[a].Start - r.all[b].Start)
+		}
+		return int(r.all[a].Finish - r.all[b].Finish)
+	})
+	return out
+}
+
+// place finds the first start of step j, from its own on, at which it stands beside what is placed
+// and after what it came after.
+func (r *replay) place(j int, done []*option, want func(o *option) bool) *option {
+	own := r.all[j]
+	for t := r.index(own.Start); t < r.index(r.hi); t++ {
+		for _, x := range r.tries(own, t, false) {
+			if !want(&x) {
+				continue
+			}
+			fits := true
+			for k, y := range done {
+				if y == nil {
+					continue
+				}
+				if !r.apart(&x, y, &nothing) || !r.soon(y, &x) || r.all[k].end <= own.Start && y.Finish > x.Start && r.rivals(r.all[k], own) {
+					fits = false
+					break
+				}
+			}
+			if all := slices.Clone(done); fits {
+				all[j] = &x
+				if r.holds(all, &nothing) {
+					return &x
+				}
+			}
+		}
+	}
+	return nil
+}
+
+// soon says whether x waits for y as long as it must.
+func (r *replay) soon(y, x *option) bool {
+	for _, k := range r.between[[2]int{y.s.Index, x.s.Index}] {
+		l := r.w.Links[k]
+		l.Max, l.MaxCure = expand.NoMax, nil
+		if !r.waits(&l, end(y, l.FromEnd), end(x, l.ToEnd)) {
+			return false
+		}
+	}
+	return true
+}
+
+// rivals says whether two steps could not run side by side: for people, kit, room, power, states.
+func (r *replay) rivals(x, y *option) bool {
+	if x.Start == x.Finish || y.Start == y.Finish {
+		return false
+	}
+	for _, a := range slices.Concat(x.People, x.Relief, keepers(x)) {
+		if slices.Contains(slices.Concat(y.People, y.Relief), a) {
+			return true
+		}
+	}
+	a, b := *x, *y
+	a.Start, a.Finish, a.Pieces = 0, 1, []hours.Span{{From: 0, To: 1}}
+	b.Start, b.Finish, b.Pieces = 0, 1, []hours.Span{{From: 0, To: 1}}
+	a.Shifts, b.Shifts, a.Watches, b.Watches = nil, nil, nil, nil
+	pair := make([]*option, len(r.all))
+	pair[x.s.Index], pair[y.s.Index] = &a, &b
+	if x.s.Class != expand.Hands {
+		a.Pieces = nil
+	}
+	if y.s.Class != expand.Hands {
+		b.Pieces = nil
+	}
+	free := without{orders: true}
+	return r.statesMeet(&a, &b) || r.moved(&a, &b) || r.moved(&b, &a) || !r.holds(pair, &free)
+}
+
+func keepers(o *option) []string {
+	var out []string
+	for _, w := range o.Watches {
+		out = append(out, w.Person)
+	}
+	return out
+}
+
+// TestLeeway: every delay up to the leeway works, and the next minute does not; the last start of
+// a deadline works, and the next start does not (R20).
+func TestLeeway(t *testing.T) {
+	checks(t, 40)
+	tried, limited := 0, 0
+	rapid.Check(t, func(rt *rapid.T) {
+		grain := rapid.SampledFrom([]int{30, 10}).Draw(rt, "grain")
+		s := drawSmall(rt, grain, 5)
+		a := settled(rt, s)
+		if a.Plan == nil || a.Late {
+			return
+		}
+		r := newReplay(a, grain)
+		for i, row := range a.Rows {
+			o := r.all[i]
+			if row.Leeway < 0 || o.Start == o.Finish || row.Latest > r.hi-1440 {
+				continue
+			}
+			tried++
+			by := func(l int) bool {
+				return r.late(i, func(x *option) bool { return x.Finish >= o.Finish+hours.Minute(l) })
+			}
+			for _, l := range []int{0, 1, row.Leeway / 3, row.Leeway / 2, row.Leeway - 1, row.Leeway} {
+				if l >= 0 && l <= row.Leeway && !by(l) {
+					rt.Fatalf("%s has %d min of leeway, but %d later does not work:%s\n%s", o.s.Key(), row.Leeway, l, show(a.Work, a.Plan), s.yaml())
+				}
+			}
+			if by(row.Leeway + 1) {
+				rt.Fatalf("%s has %d min of leeway, but a minute more works:%s\n%s", o.s.Key(), row.Leeway, show(a.Work, a.Plan), s.yaml())
+			}
+			for _, d := range a.Deadlines {
+				if d.Step != a.Work.Steps[i] {
+					continue
+				}
+				limited++
+				if !r.late(i, func(x *option) bool { return x.Start >= d.LastStart }) {
+					rt.Fatalf("%s is said to make it from %d min after its start, but does not:%s\n%s", o.s.Key(), d.LastStart-o.Start, show(a.Work, a.Plan), s.yaml())
+				}
+				if r.late(i, func(x *option) bool { return x.Start > d.LastStart }) {
+					rt.Fatalf("%s makes it from later than %d min after its start:%s\n%s", o.s.Key(), d.LastStart-o.Start, show(a.Work, a.Plan), s.yaml())
+				}
+			}
+		}
+	})
+	t.Logf("%d steps, %d deadlines", tried, limited)
+	if tried == 0 || limited == 0 && !testing.Short() {
+		t.Error("no leeway, or no deadline, among all these plans")
+	}
+}
+
+// TestGoverning: the chain that is printed hangs together, from the last finish of the site back: each entry is of
+// the step that the one before it came from, and ends with what comes from no other step.
+func TestGoverning(t *testing.T) {
+	checks(t, 60)
+	longest := 0
+	rapid.Check(t, func(rt *rapid.T) {
+		s := drawLaw(rt)
+		a := settled(rt, s)
+		if a.Plan == nil || len(a.Governing) == 0 {
+			return
+		}
+		at := a.Governing[0].Step
+		if r := newReplay(a, 10); int(r.all[at].end) != int(a.Finish) && slices.ContainsFunc(a.Work.Steps, func(st *expand.Step) bool { return st.Site }) {
+			rt.Fatalf("the chain begins with %s, which does not end last:%s\n%s", a.Work.Steps[at].Key(), show(a.Work, a.Plan), s.yaml())
+		}
+		steps := 1
+		for k := 0; k < len(a.Governing); {
+			next := -1
+			for ; k < len(a.Governing) && a.Governing[k].Step == at; k++ {
+				if o := a.Governing[k].Other; o >= 0 {
+					next = o
+				}
+			}
+			if k == len(a.Governing) {
+				break
+			}
+			if next < 0 || a.Governing[k].Step != next {
+				rt.Fatalf("the chain goes from %s to %s, which is not what set it: %+v\n%s", a.Work.Steps[at].Key(), a.Work.Steps[a.Governing[k].Step].Key(), a.Governing, s.yaml())
+			}
+			if a.Plan.Steps[next].Start > a.Plan.Steps[at].Finish {
+				rt.Fatalf("the chain goes forward in time from %s to %s\n%s", a.Work.Steps[at].Key(), a.Work.Steps[next].Key(), s.yaml())
+			}
+			at = next
+			steps++
+		}
+		longest = max(longest, steps)
+	})
+	if longest < 3 && !testing.Short() {
+		t.Errorf("the longest chain has %d steps", longest)
+	}
+}
