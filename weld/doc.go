@@ -36,6 +36,12 @@
 // whichever is later; in seams of one or two runs a third of the length at full size. Every seam
 // of a task must have reached it. Tacks alone never carry a lift or a tide.
 //
+// # Power and cables
+//
+// A set draws volts x current over its efficiency and power factor; a generator for it gives 1.35
+// times that at the most current of the set, and no less. A welding cable may lose 4 V, a supply
+// cable 5 % of the supply's volts, there and back, before a warning says so.
+//
 // # What is not here
 //
 // EN 1011-2 method A is a set of charts; the package says with what to enter them and takes the

@@ -132,12 +132,17 @@ func jointTold(e weld.Estimate, in jointInput) (head []string, steps []origin.Fi
 	}
 	head = append(head, "Take along, spare included: "+strings.Join(take, "; "))
 
+	perMetre := origin.Worked("weld metal a metre", e.Metal/math.Max(s.Length, 1e-9)*1000, "kg/m", "weld metal / length welded", e.Why.Metal,
+		origin.Worked("length welded", s.Length/1000, "m", "length, of an intermittent weld its welded part"))
 	steps = []origin.Figure{s.Section.Why,
 		origin.Worked("width of the weld", s.Section.Width, "mm", "across the face"),
 		origin.Worked("height of the weld", s.Section.Height, "mm", "throat of a fillet, thickness with caps of a butt")}
-	for _, f := range e.Steps() {
+	for i, f := range e.Steps() {
 		if f.Value != 0 { // nothing to wait for: nothing said
 			steps = append(steps, f)
+		}
+		if i == 0 {
+			steps = append(steps, perMetre)
 		}
 	}
 	face := 0.85

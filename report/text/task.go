@@ -52,12 +52,13 @@ type stepForm struct {
 	Leeway *int        `json:"leeway_min"`
 	SetBy  []causeForm `json:"set_by"`
 	// HandsOn, Working and Clock are the step's minutes: hands-on, of open hours, of clock time.
-	HandsOn int         `json:"hands_on_min"`
-	Working int         `json:"working_min"`
-	Clock   int         `json:"clock_min"`
-	Hours   *figureForm `json:"hours,omitempty"`
-	Given   bool        `json:"hours_given,omitempty"`
-	Notes   []string    `json:"notes,omitempty"`
+	HandsOn int          `json:"hands_on_min"`
+	Working int          `json:"working_min"`
+	Clock   int          `json:"clock_min"`
+	Hours   *figureForm  `json:"hours,omitempty"`
+	Given   bool         `json:"hours_given,omitempty"`
+	Facts   []figureForm `json:"facts,omitempty"`
+	Notes   []string     `json:"notes,omitempty"`
 }
 
 func className(c expand.Class) string {
@@ -167,6 +168,9 @@ func stepOf(a *plan.Answer, i int, m func(hours.Minute) moment, tree bool) stepF
 	if tree {
 		h := figureOf(st.Estimate.Figure)
 		f.Hours = &h
+		for _, g := range st.Estimate.Facts {
+			f.Facts = append(f.Facts, figureOf(g))
+		}
 		for _, n := range st.Estimate.Notes {
 			f.Notes = append(f.Notes, clean.Line(n))
 		}

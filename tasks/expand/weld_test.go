@@ -395,6 +395,10 @@ func TestCutsAndTests(t *testing.T) {
 			t.Errorf("%s: %d min, want %.2f rounded up\n%s", c.what, s.HandsOn, c.minutes, tree(s.Estimate.Figure, ""))
 		}
 	}
+	gouge := likely(t, "tasks: {it: {kind: cut, at: shop, by: back-gouge, length: 3 m, thickness: 8 mm}}").Steps[0]
+	if notes := strings.Join(gouge.Estimate.Notes, "|"); !strings.Contains(notes, "carbon of 8 mm at 250 to 350 A") { // a maker's handbook
+		t.Errorf("gouging: %q", notes)
+	}
 	for task, want := range map[string]string{
 		"kind: test, by: dye penetrant, length: 1 m, steel temperature: 3 C": "below 5 C",
 		"kind: test, by: air, length: 1 m, pressure: 0.3 bar":                "above 0.2 bar",
