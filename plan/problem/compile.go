@@ -40,13 +40,13 @@ func (p *Problem) act(s *expand.Step, maker *crewMaker) Act {
 		a.From = max(0, int(s.NotBefore-p.Base))
 	}
 	if s.Deadline < hours.Far {
-		a.By = int(s.Deadline - p.Base)
+		a.By = p.since(s.Deadline)
 	}
 	switch {
 	case s.Absent || s.Class == expand.Hands && s.Working == 0 || s.Class == expand.Clock && s.Clock == 0 && len(s.Needs) == 0:
 		a.Modes = []Mode{{Time: Fixed(0)}}
 	case s.Class == expand.Hands || len(s.Needs) > 0:
-		a.Modes, a.Hopeless = maker.modes(s)
+		a.Modes, a.Hopeless = maker.modes(s, &a)
 	case s.Class == expand.Clock:
 		a.Modes = []Mode{{Time: Fixed(s.Clock)}}
 	default:
@@ -73,10 +73,13 @@ func (p *Problem) link(l *expand.Link, g *ground) Link {
 	}
 	if l.MaxCure != nil {
 		last := l.MaxCure.Last
-		out.Last = func(t int) int { return int(last(p.Base+hours.Minute(t)) - p.Base) }
+		out.Last = func(t int) int { return p.since(last(p.Base + hours.Minute(t))) }
 	}
 	return out
 }
+
+// since counts the minutes from the problem's base to m, kept within -Inf and Inf.
+func (p *Problem) since(m hours.Minute) int { return int(min(max(m-p.Base, -Inf), Inf)) }
 
 // resources makes the kit, the room of workfaces and the power of places into resources.
 func (p *Problem) resources() {
@@ -121,9 +124,9 @@ func (p *Problem) resources() {
 			}
 		}
 		if kva, limited := Supply(w, place); limited {
-			add(Resource{Name: "power at " + place.Name, Kind: Power, Capacity: int(math.Floor(kva*10 + 1e-6)), Pos: place.Pos}, func(s *expand.Step) (int, bool) {
+			add(Resource{Name: "power at " + place.Name, Kind: Power, Capacity: int(math.Round(kva * 1000)), Pos: place.Pos}, func(s *expand.Step) (int, bool) {
 				if s.Place == place {
-					return int(math.Ceil(s.Power*10 - 1e-6)), false
+					return int(math.Round(s.Power * 1000)), false
 				}
 				return 0, false
 			})
@@ -250,7 +253,7 @@ func (p *Problem) tail(s expand.State) func(int) int {
 	if s.Tail == nil {
 		return nil
 	}
-	return func(f int) int { return int(s.Tail(p.Base+hours.Minute(f)) - p.Base) }
+	return func(f int) int { return p.since(s.Tail(p.Base + hours.Minute(f))) }
 }
 
 // softTail gives the tail of a coat until its film is hard dry: until then what it is on is not

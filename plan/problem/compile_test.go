@@ -85,13 +85,13 @@ func TestKitRoomAndPower(t *testing.T) {
 		return strings.Join(out, ", ")
 	}
 	for name, want := range map[string]string{
-		"weld": "1 welder stays, 1 pier/hinge, 75 power at pier", "grind": "2 welder stays, 1 gauge, 2 pier/hinge, 149 power at pier",
-		"shop": "1 welder stays, 75 power at shop", "yard": "", "maybe": "", "deck": "",
+		"weld": "1 welder stays, 1 pier/hinge, 7450 power at pier", "grind": "2 welder stays, 1 gauge, 2 pier/hinge, 14900 power at pier",
+		"shop": "1 welder stays, 7450 power at shop", "yard": "", "maybe": "", "deck": "",
 	} {
 		same(t, name, uses(p.activity(t, name)), want)
 	}
 	for _, r := range p.Res {
-		want, known := map[string]int{"welder": 2, "gauge": 1, "pier/hinge": 3, "power at pier": 150, "power at shop": 115}[r.Name]
+		want, known := map[string]int{"welder": 2, "gauge": 1, "pier/hinge": 3, "power at pier": 15000, "power at shop": 11550}[r.Name]
 		if !known || r.Capacity != want || r.Pos.Line == 0 {
 			t.Errorf("%s: %d of %d at %v", r.Name, r.Capacity, want, r.Pos)
 		}

@@ -91,12 +91,12 @@ func NeedName(n *tasks.Need) string {
 }
 
 // modes gives the choices of people of a hands-on step, and a reason where there is none.
-func (m *crewMaker) modes(s *expand.Step) ([]Mode, string) {
+func (m *crewMaker) modes(s *expand.Step, a *Act) ([]Mode, string) {
 	slots, hopeless := m.slots(s)
 	if hopeless != "" {
 		return nil, hopeless
 	}
-	teams := m.teams(slots)
+	teams, cut := m.teams(slots)
 	if len(teams) == 0 {
 		return nil, "its needs are for different people, and there are too few of them"
 	}
@@ -115,6 +115,10 @@ func (m *crewMaker) modes(s *expand.Step) ([]Mode, string) {
 	}
 	if s.ChangeHands {
 		out = append(out, m.relays(s, teams, base, access)...)
+	}
+	if a.Cut = cut || len(out) >= MaxModes; a.Cut { // anybody may be in it, for all that a bound may say
+		a.Times = []*Timing{Worked(m.shift(base), m.shift(base.Joined(Meal, access)), Rules{Work: s.Working, SetUp: s.SetUp,
+			Least: s.LeastPiece, Safe: s.SafeStop, InOneGo: s.InOneGo, OverMeals: s.OverMeals})}
 	}
 	if len(out) == 0 {
 		return nil, m.noOpening(s, teams, base, room)
@@ -171,8 +175,7 @@ type team struct {
 
 // teams lists the distinct ways to fill the slots with different people, at most MaxModes,
 // people in the order of the job file first.
-func (m *crewMaker) teams(slots []slot) []team {
-	var out []team
+func (m *crewMaker) teams(slots []slot) (out []team, cut bool) {
 	seen := map[string]bool{}
 	crew := make([]int, 0, len(slots))
 	watch := make([]bool, len(slots))
@@ -184,6 +187,7 @@ func (m *crewMaker) teams(slots []slot) []team {
 	fill = func(k int) {
 		tries++
 		if len(out) >= MaxModes || tries > 200*MaxModes {
+			cut = true
 			return
 		}
 		if k == len(slots) {
@@ -208,7 +212,7 @@ func (m *crewMaker) teams(slots []slot) []team {
 		}
 	}
 	fill(0)
-	return out
+	return out, cut
 }
 
 func crewKey(crew []int, watch []bool) string {

@@ -33,6 +33,7 @@ type Act struct {
 	Modes     []Mode       // at least one, unless Hopeless says why there is none
 	Times     []*Timing    // the distinct timings of Modes
 	Hopeless  string       // why no mode exists: "no opening is long enough", "nobody has the ticket"
+	Cut       bool         // there are more choices of people than Modes holds: bounds must not rest on who is in them
 	Uses      []Use
 	WatchRoom int  // 1 + the resource that is the room of its workface, where a fire watch takes a place in it; 0 none
 	From      int  // not before
@@ -66,7 +67,7 @@ type ResourceKind uint8
 const (
 	Kit ResourceKind = iota
 	Room
-	Power // in tenths of a kVA
+	Power // in VA
 	Plain // of an open instance
 )
 

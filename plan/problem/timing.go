@@ -6,8 +6,8 @@ import (
 	"sailby/tasks/hours"
 )
 
-// Inf is later than any minute of a problem; -Inf earlier than any.
-const Inf = 1 << 40
+// Inf is later than any minute of a problem; -Inf earlier than any. Sums of two still fit into 32 bits.
+const Inf = 1 << 29
 
 // Timing says when a step can run in one mode: which starts are possible, and the finish that
 // each start leads to. Finish is monotone in the start. Minutes count from the problem's base.

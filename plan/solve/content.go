@@ -60,7 +60,7 @@ type needSet struct {
 // needs gives the needs of activity i that are not watches.
 func (b *loadBuilder) needs(i int) []needSet {
 	a := &b.p.Acts[i]
-	if a.Step == nil || a.Step.Absent || a.Modes[0].Time.Calendar() == nil {
+	if a.Step == nil || a.Step.Absent || a.Cut || a.Modes[0].Time.Calendar() == nil {
 		return nil
 	}
 	var out []needSet
@@ -208,7 +208,7 @@ func (b *loadBuilder) resources() {
 		for i := range b.p.Acts {
 			a := &b.p.Acts[i]
 			for _, u := range a.Uses {
-				if u.Res == r && a.Modes[0].Time.Calendar() != nil {
+				if u.Res == r && !a.Cut && a.Modes[0].Time.Calendar() != nil {
 					l.acts = append(l.acts, i)
 					l.need = append(l.need, u.Amount*(a.Step.Working+a.Step.SetUp))
 				}

@@ -186,6 +186,18 @@ func (w *Work) Carry() *Work {
 	return &c
 }
 
+// Remain gives the carried work in which nobody goes home either: the legs back are left out, as
+// they are for those who stay until the work is done.
+func (w *Work) Remain() *Work {
+	if w.Trip == nil {
+		return w.Carry()
+	}
+	c, trip := *w, *w.Trip
+	trip.Back, trip.Departs = nil, w.Span.To
+	c.Trip = &trip
+	return c.Carry()
+}
+
 func has(list []string, word string) bool {
 	for _, v := range list {
 		if v == word {
