@@ -22,8 +22,11 @@ type beast struct {
 	end          int32
 }
 
+// Measured on seven of the hardest PSPLIB instances at 50,000 schedules: herds of 20 and 40, parents
+// chosen by their finish, rarer swaps and repeated justification all came out worse.
 const (
-	herdSize = 40
+	herdSize = 80
+	swapOne  = 8    // one in so many neighbours is swapped in a child
 	staleAt  = 4000 // children without improvement before the herd is renewed
 )
 
@@ -79,17 +82,9 @@ func (b *breeder) topological(order []int32, key []float64) {
 
 // finish schedules a beast's order and justifies it.
 func (b *breeder) finish(x *beast) {
-	x.end = b.forward(x.order, x.start)
+	end := b.forward(x.order, x.start)
+	x.end = b.justify(x.order, x.start, b.tmp, end)
 	b.made += 3
-	for {
-		end := b.justify(x.order, x.start, b.tmp, x.end)
-		if end >= x.end {
-			x.end = end
-			break
-		}
-		x.end = end
-		b.made += 2
-	}
 	b.byTime(x.order, x.start, false)
 	if b.best == nil || x.end < b.best.end {
 		b.best = x
@@ -116,21 +111,32 @@ func (b *breeder) step() bool {
 		}
 		return false
 	}
-	p, q := b.pick(), b.pick()
-	x := b.cross(p, q)
+	x := b.cross(b.herd[b.rnd.IntN(len(b.herd))], b.herd[b.rnd.IntN(len(b.herd))])
 	b.shake(x)
 	b.finish(x)
 	b.admit(x)
 	return b.best != old
 }
 
-// pick gives the better of two beasts.
-func (b *breeder) pick() *beast {
-	p, q := b.herd[b.rnd.IntN(len(b.herd))], b.herd[b.rnd.IntN(len(b.herd))]
-	if q.end < p.end {
-		return q
+// welcome takes a schedule that was found elsewhere into the herd.
+func (b *breeder) welcome(starts []int) {
+	x := b.fresh()
+	for i, t := range starts {
+		x.start[i] = int32(t)
 	}
-	return p
+	b.byTime(x.order, x.start, false)
+	b.finish(x)
+	if len(b.herd) < herdSize {
+		b.herd = append(b.herd, x)
+		return
+	}
+	worst := 0
+	for k, y := range b.herd {
+		if y.end > b.herd[worst].end {
+			worst = k
+		}
+	}
+	b.herd[worst] = x
 }
 
 // cross takes a stretch of p's order and fills up from q.
@@ -164,7 +170,7 @@ func (b *breeder) cross(p, q *beast) *beast {
 // shake swaps neighbours that do not wait for each other.
 func (b *breeder) shake(x *beast) {
 	for k := 0; k+1 < b.n; k++ {
-		if b.rnd.IntN(20) > 0 {
+		if b.rnd.IntN(swapOne) > 0 {
 			continue
 		}
 		i, j := x.order[k], x.order[k+1]

@@ -91,6 +91,12 @@ func (s *search) minimise() Result {
 		if o == over || o == stopped {
 			return s.result()
 		}
+		if b != nil && m != breeding && s.value < value {
+			b.welcome(s.starts)
+			if b.best.end < s.value && !s.adopt(b.best) {
+				return s.result()
+			}
+		}
 		p.pay(m, s.ticks-ticks, s.value < value, patience*float64(len(s.start)))
 		if int64(len(s.refs)) > s.room {
 			s.reduce()
