@@ -173,7 +173,13 @@ func (a *asked) find(explain bool) error {
 			}
 		}
 	}
-	a.out.Steps, a.out.CutShort = res.Ticks, a.stop()
+	a.out.Steps = res.Ticks
+	if a.carry == a.p || a.carry.Work.Trip == a.work.Trip { // the learning search knows the window as it is
+		res.Best = a.learning(res.Best)
+	} else {
+		a.learning(nil)
+	}
+	a.out.CutShort = a.stop()
 	if res.Best == nil {
 		a.out.NoPlan = "the search found none, not even a late one"
 		return nil

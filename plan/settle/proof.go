@@ -46,6 +46,14 @@ const shrinkLimit = 1500
 // chain proves that a chain of links is too long for the hours, whoever does the work: the
 // links that the contradiction needs, each of which, left out, lets the others hold.
 func (a *asked) chain(c *network.Conflict) *plan.Proof {
+	off := a.core(c)
+	_, left := network.Propagate(a.p, off)
+	return a.chainText(off, left)
+}
+
+// core leaves out every link and date that a contradiction does not need: what is left is one still, and
+// holds without any of what is left. A cancel leaves more in than that.
+func (a *asked) core(c *network.Conflict) network.Off {
 	off := network.Off{Link: map[int]bool{}, By: map[int]bool{}, From: map[int]bool{}, Calendar: map[int]bool{}}
 	path := map[int]bool{}
 	for _, k := range c.Path {
@@ -62,7 +70,7 @@ func (a *asked) chain(c *network.Conflict) *plan.Proof {
 	}
 	if len(a.p.Links) <= shrinkLimit {
 		for k := range a.p.Links {
-			if !off.Link[k] && a.p.Links[k].From >= 0 {
+			if !off.Link[k] && a.p.Links[k].From >= 0 && !a.stop() {
 				off.Link[k] = true
 				if still() == nil {
 					off.Link[k] = false
@@ -70,7 +78,7 @@ func (a *asked) chain(c *network.Conflict) *plan.Proof {
 			}
 		}
 		for i := range a.p.Acts {
-			if a.p.Acts[i].By < problem.Inf && !off.By[i] {
+			if a.p.Acts[i].By < problem.Inf && !off.By[i] && !a.stop() {
 				off.By[i] = true
 				if still() == nil {
 					off.By[i] = false
@@ -78,7 +86,7 @@ func (a *asked) chain(c *network.Conflict) *plan.Proof {
 			}
 		}
 	}
-	return a.chainText(off, still())
+	return off
 }
 
 // chainText writes the proof of a chain that off has made small.
@@ -119,6 +127,11 @@ func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 	sortBy(involved, b.Start)
 	for _, i := range involved {
 		act := &a.p.Acts[i]
+		if !dated { // any date will do: lengths alone say it
+			p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s: %s", stepName(act.Step), a.length(act)),
+				Minutes: act.Modes[0].Time.Length(), Pos: act.Pos(), Needed: a.needed(off, i)})
+			continue
+		}
 		text := fmt.Sprintf("%s: %s, not before %s, so not finished before %s", stepName(act.Step), a.length(act), a.clockAt(b.Start[i], act.Step.Place), a.clockAt(b.Finish[i], act.Step.Place))
 		if s, _ := earliest(act, b.Start[i]); s >= problem.Inf {
 			text = fmt.Sprintf("%s: %s, not before %s, and no opening after that is long enough", stepName(act.Step), a.length(act), a.clockAt(b.Start[i], act.Step.Place))
@@ -126,7 +139,7 @@ func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 		p.Lines = append(p.Lines, plan.ProofLine{Text: text, Minutes: act.Modes[0].Time.Length(), Pos: act.Pos(), Needed: a.needed(off, i)})
 	}
 	for _, l := range links {
-		if l.Last != nil {
+		if l.Last != nil && dated {
 			from := b.Finish[max(l.From, 0)]
 			p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s: no later than %s", l.Step.Why, a.clock(l.Last(from))), Pos: l.Step.Pos, Needed: true})
 		}
@@ -137,6 +150,11 @@ func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 	p.Over = c.Late
 	if b.Finish[end] > last.By {
 		p.Over = b.Finish[end] - last.By
+	}
+	if !dated {
+		if over, ends := a.runsOut(off, end); ends {
+			p.Over, dated = over, true
+		}
 	}
 	if !dated {
 		p.Over = 0
@@ -164,6 +182,23 @@ func earliest(act *problem.Act, t int) (start, finish int) {
 		}
 	}
 	return start, finish
+}
+
+// runsOut says by how much a chain to a step at the site runs past its date with the hours carried
+// on past the window; ends is false where it is not the end of the window that leaves it no opening.
+func (a *asked) runsOut(off network.Off, i int) (over int, ends bool) {
+	if !a.p.Acts[i].Site {
+		return 0, false
+	}
+	carry := problem.Compile(a.work.Carry())
+	for k := range carry.Acts {
+		if len(carry.Acts[k].Modes) == 0 {
+			return 0, false
+		}
+	}
+	b, c := network.Propagate(carry, network.Off{Link: off.Link, From: off.From, By: allActs(carry)})
+	over = b.Finish[i] - carry.Acts[i].By
+	return over, c == nil && over > 0
 }
 
 func allActs(p *problem.Problem) map[int]bool {
