@@ -133,7 +133,7 @@ func holdWords(w *expand.Work, s *expand.Step) string {
 func (k *pack) paintLog() {
 	var coats []*expand.Step
 	for _, s := range k.taskSteps(tasks.Coat) {
-		if agenda.CoatNumber(s) > 0 {
+		if agenda.CoatNumber(s) > 0 || s.Paint != nil {
 			coats = append(coats, s)
 		}
 	}
@@ -153,7 +153,9 @@ func (k *pack) coatBlock(s *expand.Step) {
 	p := k.p
 	n := agenda.CoatNumber(s)
 	name := ""
-	if n <= len(s.Task.Coats) {
+	if s.Paint != nil {
+		name = s.Paint.Name
+	} else if n > 0 && n <= len(s.Task.Coats) {
 		name = s.Task.Coats[n-1]
 	}
 	p.heading(agenda.StepLabel(k.work, s), 105)
@@ -171,6 +173,9 @@ func (k *pack) coatBlock(s *expand.Step) {
 		if len(limits) > 0 {
 			p.para("Limits: "+strings.Join(limits, "; ")+".", body, false)
 		}
+	}
+	if h := k.plannedHour(s); h != "" {
+		p.para("Planned with: "+h+".", body, false)
 	}
 	for _, f := range s.Estimate.Facts {
 		if strings.Contains(strings.ToLower(f.Name), "wet film") || strings.Contains(strings.ToLower(f.Name), "pot life") {

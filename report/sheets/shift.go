@@ -30,6 +30,7 @@ func (k *pack) shift(s *agenda.Shift) {
 	steps := stepsOf(s.Entries)
 	k.dayStrip(s, steps)
 	k.begun(s)
+	k.conditions(s, steps)
 	k.dayTasks(s, steps)
 	k.stopped(s, steps)
 	if list := cautionsOf(k.work, steps); len(list) > 0 {
