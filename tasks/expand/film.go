@@ -164,6 +164,9 @@ func (x *expander) dry(t *tasks.Task, after *Step, name string, curve coat.Curve
 		s.Estimate.Figure = fig
 		s.Estimate.Range = [3]int{whole(minutes), whole(minutes), whole(minutes)}
 	}
+	if f.sum != nil {
+		s.Estimate.Notes = append(s.Estimate.Notes, "cures by the steel of each hour; the time at a steady "+temperature(x.steel(t.Place))+" stands here to compare")
+	}
 	if f.sum == nil && f.rate <= 0 {
 		x.fault(t.Pos, "warm the place, or take a paint that cures in the cold",
 			"task %q: paint %q does not cure at %s", t.Name, p.Name, temperature(x.steel(t.Place)))
@@ -180,6 +183,9 @@ func (x *expander) recoat(t *tasks.Task, a, b *Step, p, q *tasks.Paint, k int) {
 		return
 	}
 	s := x.dry(t, a, fmt.Sprintf("dry %d", k), window.Min, p)
+	if least, _, err := p.Window(q.Paint, x.steel(t.Place)); err == nil {
+		s.Estimate.Figure = least
+	}
 	// steps are kept in the order coat, dry, coat
 	x.swapLast(t, s, b)
 	x.w.Links = append(x.w.Links, Link{From: s, To: b, Min: 0, Max: NoMax, Pos: t.Pos, ToEnd: tasks.Start, Why: "recoat of " + p.Name})
@@ -325,6 +331,17 @@ func (x *expander) filmState(t *tasks.Task, state string, next *tasks.Paint) (*S
 		curve = c
 	}
 	s := x.dry(t, after, name, curve, p)
+	word := map[string]string{"cured": "service", "immersion": "immersion min"}[state]
+	if word == "" {
+		word = state
+	}
+	if next == nil {
+		if _, f, err := p.Wait(word, x.steel(t.Place)); err == nil {
+			s.Estimate.Figure = f
+		}
+	} else if least, _, err := p.Window(next.Paint, x.steel(t.Place)); err == nil {
+		s.Estimate.Figure = least
+	}
 	if state == "cured" || state == "service" {
 		s.Deadline = hours.Far
 		s.Site = false
