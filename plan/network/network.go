@@ -79,7 +79,7 @@ func (n *network) earliest(i, t int) (start, finish int) {
 	a := &n.p.Acts[i]
 	start, finish = problem.Inf, problem.Inf
 	for _, w := range a.Timings() {
-		if n.off.Calendar[i] {
+		if n.off.Calendar[i] && w.Calendar() != nil {
 			return t, t + w.Length()
 		}
 		s := w.Start(t)
@@ -182,7 +182,7 @@ func (n *network) raise(k, t int) bool {
 func (n *network) firstFinishing(i, f int) int {
 	best := problem.Inf
 	for _, w := range n.p.Acts[i].Timings() {
-		if n.off.Calendar[i] {
+		if n.off.Calendar[i] && w.Calendar() != nil {
 			return f - w.Length()
 		}
 		lo, hi := n.b.Start[i], f
@@ -319,7 +319,7 @@ func (n *network) latest(i int) (start, finish int) {
 	lo, hi, by := n.b.Start[i], n.b.LastStart[i], n.b.Last[i]
 	start, finish = -problem.Inf, -problem.Inf
 	for _, w := range n.p.Acts[i].Timings() {
-		if n.off.Calendar[i] {
+		if n.off.Calendar[i] && w.Calendar() != nil {
 			start = min(hi, by-w.Length())
 			return start, min(by, start+w.Length())
 		}

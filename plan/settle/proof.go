@@ -89,21 +89,21 @@ func (a *asked) core(c *network.Conflict) network.Off {
 	return off
 }
 
-// chainText writes the proof of a chain that off has made small.
+// chainText writes the proof of a chain that off has made small. Its dates are those of the
+// hours carried on past the window, so that what comes too late has a date.
 func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
-	b, _ := network.Propagate(a.p, network.Off{Link: off.Link, By: allActs(a.p), From: off.From})
-	last := &a.p.Acts[c.Act]
-	by := a.work.Window.Closes
-	end := c.Act
-	dated := false // whether any date is needed for the contradiction
+	free := network.Off{Link: off.Link, By: allActs(a.p), From: off.From}
+	far := problem.Compile(a.work.Remain())
+	b, _ := network.Propagate(far, free)
+	free.Calendar = allActs(a.p)
+	_, never := network.Propagate(far, free) // the waits alone contradict each other
+	dated := never == nil
+	last, end := &a.p.Acts[c.Act], c.Act
+	by := a.p.Close
 	for i := range a.p.Acts {
-		dated = dated || a.p.Acts[i].By < problem.Inf && !off.By[i]
 		if a.p.Acts[i].By < problem.Inf && !off.By[i] && b.Finish[i] > a.p.Acts[i].By {
-			end, last = i, &a.p.Acts[i]
+			end, last, by = i, &a.p.Acts[i], a.p.Acts[i].By
 		}
-	}
-	if last.By < problem.Inf {
-		by = a.at(last.By)
 	}
 	p := &plan.Proof{Kind: plan.ByChain}
 	involved := []int{}
@@ -147,25 +147,20 @@ func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 			p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s: at most %s", l.Step.Why, span(l.Max)), Minutes: l.Max, Pos: l.Step.Pos, Needed: true})
 		}
 	}
-	p.Over = c.Late
-	if b.Finish[end] > last.By {
-		p.Over = b.Finish[end] - last.By
-	}
-	if !dated {
-		if over, ends := a.runsOut(off, end); ends {
-			p.Over, dated = over, true
-		}
+	p.Over = b.Finish[end] - by
+	if p.Over >= problem.Inf/2 || p.Over < 0 {
+		p.Over = 0
 	}
 	if !dated {
 		p.Over = 0
 		p.Summary = fmt.Sprintf("the waits round %s contradict each other, on any date and with unlimited people", stepName(last.Step))
 		return p
 	}
-	what := "must be finished by"
-	p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s %s %s", stepName(last.Step), what, by.In(last.Step.Place.Zone).Format("Mon 2 Jan 15:04")), Pos: a.byPos(last), Needed: true})
-	if p.Over >= problem.Inf || p.Over < 0 {
-		p.Over = 0
+	limit := fmt.Sprintf("%s must be finished by %s", stepName(last.Step), a.clockAt(by, last.Step.Place))
+	if by == a.p.Close && last.Step.Site {
+		limit = fmt.Sprintf("the window at %s closes %s", a.work.Window.Place.Name, a.clockAt(by, last.Step.Place))
 	}
+	p.Lines = append(p.Lines, plan.ProofLine{Text: limit, Pos: a.byPos(last), Needed: true})
 	p.Summary = fmt.Sprintf("the chain that ends in %s is too long, even with unlimited people", stepName(last.Step))
 	if p.Over > 0 {
 		p.Summary += fmt.Sprintf(": %s over", span(p.Over))

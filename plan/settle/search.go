@@ -21,6 +21,8 @@ const (
 	memberConflicts  = 2_000
 )
 
+const searched = "the search has shown that no plan does, whoever works"
+
 // learning asks the learning search for what generation and bounds have left open: a plan that
 // fits, a better one, a proof that none is better, or that none fits.
 func (a *asked) learning(best *solve.Schedule) *solve.Schedule {
@@ -48,9 +50,13 @@ func (a *asked) learning(best *solve.Schedule) *solve.Schedule {
 	case r.Status == learn.Infeasible && !fits:
 		a.out.Proof = a.contradiction(o)
 		return best
+	case r.Status == learn.Infeasible:
+		a.out.Bound = a.at(best.Score.Finish)
+		a.out.BoundWhy = searched
+		return best
 	case r.Bound < problem.Inf && a.at(r.Bound) > a.out.Bound:
 		a.out.Bound = a.at(r.Bound)
-		a.out.BoundWhy = "the search has shown that no plan does, whoever works"
+		a.out.BoundWhy = searched
 	}
 	if r.Starts == nil || !r.Exact {
 		return best
