@@ -17,10 +17,10 @@ func (c *checker) basis() {
 	if c.trip(have.Trip) != trip {
 		c.add("R2", nil, asked.Trip, have.Trip, "the plan is for another trip")
 	}
-	if trip != w.Trip {
+	if tripName(trip) != tripName(w.Trip) || (trip == nil) != (w.Trip == nil) {
 		c.add("R2", nil, asked.Trip, tripName(w.Trip), "the work is written out for another trip")
 	}
-	if trip != nil && trip == w.Trip {
+	if trip != nil && w.Trip != nil && trip.Name == w.Trip.Name {
 		opens, closes := trip.Opens, trip.Closes
 		if n := len(trip.Out); n > 0 {
 			opens = trip.Out[n-1].To
