@@ -3,6 +3,7 @@ package main
 import (
 	"os"
 	"path/filepath"
+	"strings"
 	"testing"
 
 	"github.com/rogpeppe/go-internal/testscript"
@@ -27,7 +28,7 @@ func TestScripts(t *testing.T) {
 			e.Setenv("FAULTS", filepath.Join(tests, "faults"))
 			return nil
 		},
-		Cmds: map[string]func(*testscript.TestScript, bool, []string){"status": status3},
+		Cmds: map[string]func(*testscript.TestScript, bool, []string){"status": status3, "without": without},
 	})
 }
 
@@ -56,4 +57,22 @@ func TestStarterIsTheDemo(t *testing.T) {
 	if string(demo) != string(starter) {
 		t.Error("cmd/sailby/starter.yaml is not testdata/jobs/starter/job.yaml: copy it over")
 	}
+}
+
+// without takes the lines that begin with a word, blanks aside, out of a file: without job.yaml trailer:
+func without(ts *testscript.TestScript, neg bool, args []string) {
+	if neg || len(args) != 2 {
+		ts.Fatalf("usage: without FILE WORD")
+	}
+	var kept []string
+	lines := strings.Split(ts.ReadFile(args[0]), "\n")
+	for _, l := range lines {
+		if !strings.HasPrefix(strings.TrimSpace(l), args[1]) {
+			kept = append(kept, l)
+		}
+	}
+	if len(kept) == len(lines) {
+		ts.Fatalf("%s has no line that begins with %s", args[0], args[1])
+	}
+	ts.Check(os.WriteFile(ts.MkAbs(args[0]), []byte(strings.Join(kept, "\n")), 0o644))
 }

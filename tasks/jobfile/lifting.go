@@ -27,7 +27,7 @@ var slingsSection = section{name: "Slings", where: "tasks / NAME / slings", host
 	{name: "angle", takes: itsOwn, form: "angle `from vertical` or `from horizontal`", shape: anyText, example: "50 deg from horizontal", says: "of a leg; more than 60 degrees from the vertical is refused"},
 	length("leg length", 1e5, "2 m", "of each leg"),
 	length("hook above", 1e5, "1.4 m", "the hook above the highest lug"),
-	{name: "lugs", takes: itsOwn, form: "list of [x, y, z]", shape: anyList, example: "[[0, 400 mm, 12 mm], [2400 mm, 400 mm, 12 mm]]", beside: "hook above: 2 m", without: "legs angle", says: "where they are, in the axes of the assembly: the centre of gravity then counts"},
+	{name: "lugs", takes: itsOwn, form: "list of [x, y, z]", shape: anyList, example: "[[0, 400 mm, 12 mm], [2400 mm, 400 mm, 12 mm]]", beside: "hook above: 2 m", without: "legs angle", says: "where they are, in the axes of the assembly with z up: the centre of gravity then counts"},
 	{name: "hitch", takes: aWord, words: []string{"straight", "choked", "basket", "endless"}, usual: "straight", example: "choked", says: "how they hold the load"},
 	{name: "table", takes: aWord, words: lift.SlingTables(), usual: "none: `rated` counts", example: "EN 818-4 grade 8", beside: "size: 8 mm", says: "the table that rates them"},
 	{name: "size", takes: itsOwn, form: "length of chain or rope, mass of webbing", shape: anyText, example: "8 mm", beside: "table: EN 818-4 grade 8", says: "of chain or rope in mm, of webbing in t"},

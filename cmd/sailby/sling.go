@@ -1,0 +1,154 @@
+package main
+
+import (
+	"io"
+	"strings"
+
+	"github.com/spf13/cobra"
+
+	"sailby/report/text"
+	"sailby/tasks/lift"
+	"sailby/tasks/origin"
+	"sailby/tasks/quantity"
+)
+
+type slingOptions struct {
+	amounts   map[string]*string
+	words     map[string]*string
+	legs      int
+	equalised bool
+	json      bool
+}
+
+func newSling(st streams) *cobra.Command {
+	o := &slingOptions{amounts: map[string]*string{}, words: map[string]*string{}}
+	c := &cobra.Command{
+		Use:   "sling --mass MASS",
+		Short: "One lift: load on the hook, pull in each leg, hoist, anchor, crane and wind, every step with its origin",
+		Long: "Works out one lift from flags: the load with its allowances, the pull in each leg of the slings against their rating,\n" +
+			"and, where they are given, the hoist and what it hangs from, the crane by its chart, the gust and the landing place.\n" +
+			"An angle is given with its datum. What is refused names the number that fails and the nearest gear that would do; then\n" +
+			"the exit status is 3. It does not stand for the decision of a competent person. Slings are known by their tag, or by\n" +
+			strings.Join(lift.SlingTables(), ", ") + ".",
+		Example: "  sailby sling --mass 410kg --legs 2 --angle \"40 deg from horizontal\" --span 1.8m --rated 1t\n" +
+			"  sailby sling --mass 1.2t --known weighed --span 2m --cg 1.2m --hook-above 1.5m --table \"EN 818-4 grade 8\" --size 8mm --by crane --chart \"4m: 2.4t, 6m: 1.5t\" --radius 5m",
+		Args: takes(false),
+		RunE: func(*cobra.Command, []string) error { return runSling(o, st) },
+	}
+	f := c.Flags()
+	for _, a := range slingAmounts {
+		o.amounts[a.name] = f.String(a.name, "", a.says)
+	}
+	for _, w := range slingWords {
+		o.words[w[0]] = f.String(w[0], "", w[1])
+	}
+	f.IntVar(&o.legs, "legs", 0, "how many legs, 1 to 4")
+	f.BoolVar(&o.equalised, "equalised", false, "four legs are made to share")
+	f.BoolVar(&o.json, "json", false, "print for machines")
+	return c
+}
+
+// slingTold is what is printed of one lift.
+type slingTold struct {
+	head, notes []string
+	steps       []origin.Figure
+	refused     bool
+}
+
+func runSling(o *slingOptions, st streams) error {
+	in := slingInput{}
+	if err := in.read(o); err != nil {
+		return err
+	}
+	t, err := in.judge()
+	if err != nil {
+		return misuse(quantity.Hint(err), "%v", err)
+	}
+	err = st.print(func(w io.Writer) error {
+		if o.json {
+			return text.StepsJSON(w, t.head, t.steps, t.notes)
+		}
+		return text.Steps(w, t.head, t.steps, t.notes, text.Options{Width: st.width})
+	})
+	if err == nil && t.refused {
+		return errNotShown
+	}
+	return err
+}
+
+// judge makes every check that the flags give the numbers for.
+func (i *slingInput) judge() (slingTold, error) {
+	hook := i.load.Hook()
+	t := slingTold{steps: append([]origin.Figure{hook}, i.shapes...)}
+	add := func(r lift.Result, err error) error {
+		if err != nil {
+			return err
+		}
+		line := r.Reason
+		if r.OK {
+			line = "within: " + line
+		} else {
+			line, t.refused = "REFUSED: "+line, true
+		}
+		t.head = append(t.head, line)
+		if !r.OK && r.Nearest != "" {
+			t.head = append(t.head, "would do: "+r.Nearest)
+		}
+		t.steps = append(t.steps, r.Figure, r.Limit)
+		t.notes = append(t.notes, r.Warnings...)
+		return nil
+	}
+	if i.slung {
+		r, err := lift.Slings(i.load, i.rig)
+		if err := add(r.Result, err); err != nil {
+			return t, err
+		}
+		if r.Rule != "" {
+			t.head = append(t.head, "rated by: "+r.Rule)
+		}
+		for n, l := range r.Legs {
+			t.head = append(t.head, legLine(n, l))
+			t.steps = append(t.steps, origin.Worked("pull in leg "+string(rune('1'+n)), l.Tension, "kg", "share of the weight / cos(angle from the vertical)",
+				origin.Worked("share of the weight", l.Share, "kg", "by statics over the lugs, or evenly over the legs that carry", hook),
+				origin.Worked("angle from the vertical", l.Angle, "deg", "by the shape of the slings")))
+		}
+	}
+	if i.hung {
+		if err := add(lift.Hang(i.load, i.hoist)); err != nil {
+			return t, err
+		}
+	}
+	if i.craned {
+		c := i.crane
+		if i.hoist.Tackle > 0 {
+			c.Deduct = []lift.Piece{{Name: "block, slings and shackles", Mass: i.hoist.Tackle}}
+		}
+		if err := add(lift.Crane(i.load, c)); err != nil {
+			return t, err
+		}
+	}
+	if i.air {
+		r, err := lift.Gust(i.load, i.wind)
+		if err := add(r.Result, err); err != nil {
+			return t, err
+		}
+	}
+	if i.pads > 0 {
+		if err := add(lift.Bearing(i.load, i.pads, i.floor)); err != nil {
+			return t, err
+		}
+	}
+	if len(t.head) == 0 {
+		t.head = []string{"load on the hook: " + hook.Amount()}
+		t.notes = append(t.notes, "nothing says what carries it: give the slings (--legs, --angle, --rated), the hoist (--hoist) or the crane (--chart, --radius)")
+	}
+	if i.given["span"] && !i.given["lugs-above"] {
+		t.notes = append(t.notes, "the lugs are taken to be above the centre of gravity: a load hung below it rolls over (--lugs-above)")
+	}
+	clear, err := lift.Exclusion(i.crane.Raise, max(i.load.Length, i.load.Width, i.span))
+	if err == nil {
+		t.steps = append(t.steps, clear)
+	}
+	t.notes = append(t.notes, "planned, supervised and carried out as a competent person decides; nobody below the load")
+	return t, nil
+}
