@@ -18,12 +18,13 @@ type Answer struct {
 	Best      bool         // Finish is proved to be the earliest
 	InHand    int          // minutes between Finish and the window's close; negative if late
 	Deadlines []DeadlineResult
-	Governing []Cause // what sets the finish, step by step, last first
-	Rows      []Row   // one for each step of Plan
-	Proof     *Proof  // for CannotFit
-	CutShort  bool    // the time limit or a cancel ended the search
-	NoPlan    string  // why there is no plan to show, not even a late one; "" if there is one
-	Steps     int64   // search steps done
+	Governing []Cause              // what sets the finish, step by step, last first
+	Rows      []Row                // one for each step of Plan
+	Proof     *Proof               // for CannotFit
+	CutShort  bool                 // the time limit or a cancel ended the search
+	NoPlan    string               // why there is no plan to show, not even a late one; "" if there is one
+	Shifts    map[string]hours.Set // by person: from the start to the end of each shift, legs of the trip included (R15)
+	Steps     int64                // search steps done
 }
 
 // DeadlineResult is one deadline with what the plan makes of it.

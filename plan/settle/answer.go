@@ -232,6 +232,7 @@ func (a *asked) keep(s *solve.Schedule, explain bool) error {
 		return fmt.Errorf("%w: %s", ErrChecker, breaches[0].String())
 	}
 	a.out.Plan, a.out.Late = p, late
+	a.shifts()
 	a.out.Finish = a.at(s.Score.Finish)
 	a.out.InHand = int(a.work.Window.Closes - a.out.Finish)
 	a.deadlines(s)
@@ -263,6 +264,24 @@ func (a *asked) leftBehind(s *solve.Schedule) bool {
 		}
 	}
 	return false
+}
+
+// shifts tells the shifts that the plan was made with.
+func (a *asked) shifts() {
+	a.out.Shifts = map[string]hours.Set{}
+	rest := int(a.work.Job.Rest.Value)
+	for i := range a.carry.People {
+		p := &a.carry.People[i]
+		var set []hours.Span
+		for _, s := range p.Hours {
+			set = append(set, hours.Span{From: s.From + a.carry.Base, To: s.To + a.carry.Base})
+		}
+		set = append(set, a.carry.Work.Travel[p.Name]...)
+		a.out.Shifts[p.Name] = hours.NewSet(set...)
+		if !p.Outside {
+			a.out.Shifts[p.Name] = a.out.Shifts[p.Name].Joined(max(0, rest-1), nil)
+		}
+	}
 }
 
 // deadlines sets what the plan makes of each deadline.

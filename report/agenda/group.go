@@ -22,6 +22,9 @@ func Shifts(a *plan.Answer) []*Shift {
 	for _, p := range a.Work.Job.People {
 		b.outside[p.Name] = p.Outside
 		b.duty[p.Name] = Duty(a.Work, p)
+		if set, known := a.Shifts[p.Name]; known { // as they were planned with
+			b.duty[p.Name] = set
+		}
 	}
 	b.collect()
 	b.group()
