@@ -75,7 +75,7 @@ func TestProgress(t *testing.T) {
 		t.Error("the result is another one with progress")
 	}
 	if s := talk.String(); !strings.HasSuffix(s, "\r\x1b[K") {
-		t.Errorf("the talk ends with %q", s)
+		t.Errorf("standard error ends with %q", s)
 	}
 }
 

@@ -1,7 +1,6 @@
 package solve
 
 import (
-	"container/heap"
 	"slices"
 
 	"sailby/plan/problem"
@@ -85,95 +84,6 @@ func (g *generator) run(order []int) bool {
 		}
 	}
 	return true
-}
-
-// prepare counts what every activity waits for, and queues those that wait for nothing.
-func (g *generator) prepare() {
-	clear(g.pending)
-	g.queue = g.queue[:0]
-	for i := range g.lo {
-		g.lo[i] = max(g.p.Acts[i].From, g.lean.hold[i])
-		g.after(i, func(j int) { g.pending[j]++ })
-	}
-	for i := range g.pending {
-		if g.pending[i] == 0 {
-			g.push(i)
-		}
-	}
-}
-
-// after calls visit for every activity that waits for i by a link or an order rule, once for each.
-func (g *generator) after(i int, visit func(j int)) {
-	for _, k := range g.from[i] {
-		if l := &g.p.Links[k]; l.Min > expand.NoMin {
-			visit(l.To)
-		}
-	}
-	for o, c := range g.choice {
-		for _, b := range g.p.Orders[o].Choices[c] {
-			if b.First == i {
-				visit(b.Then)
-			}
-		}
-	}
-}
-
-// release tells those that wait for i that it is placed.
-func (g *generator) release(i int) {
-	g.after(i, func(j int) {
-		if g.pending[j]--; g.pending[j] == 0 {
-			g.push(j)
-		}
-	})
-}
-
-// push queues an activity that waits for nothing more.
-func (g *generator) push(i int) {
-	key := g.rank[i]
-	if g.standing[i] || !g.lean.calm[i] && g.urgent(i) {
-		key -= len(g.p.Acts)
-	}
-	heap.Push(&g.queue, entry{key, i})
-}
-
-// next gives the unplaced activity that comes first in the list among those whose earlier
-// activities are placed. Standing time, and what must follow within a maximum wait, go first of all.
-func (g *generator) next() int {
-	for len(g.queue) > 0 {
-		e := heap.Pop(&g.queue).(entry)
-		if !g.placed[e.act] && g.pending[e.act] == 0 {
-			return e.act
-		}
-	}
-	return -1
-}
-
-// entry is an activity in the queue; queue is a heap of them, least key first.
-type entry struct{ key, act int }
-
-type queue []entry
-
-func (q queue) Len() int { return len(q) }
-func (q queue) Less(a, b int) bool {
-	return q[a].key < q[b].key || q[a].key == q[b].key && q[a].act < q[b].act
-}
-func (q queue) Swap(a, b int) { q[a], q[b] = q[b], q[a] }
-func (q *queue) Push(x any)   { *q = append(*q, x.(entry)) }
-func (q *queue) Pop() any {
-	old := *q
-	x := old[len(old)-1]
-	*q = old[:len(old)-1]
-	return x
-}
-
-func (g *generator) urgent(i int) bool {
-	for _, k := range g.into[i] {
-		l := &g.p.Links[k]
-		if l.From >= 0 && g.placed[l.From] && (l.Max < expand.NoMax || l.Last != nil) {
-			return true
-		}
-	}
-	return false
 }
 
 // lower gives the earliest start and the earliest finish that links, order rules and earlier
@@ -355,64 +265,6 @@ func (g *generator) earliest(i, m, s, limit int, skip *skipper) int {
 		s = w.Start(max(b.next, s+1))
 	}
 	return problem.Inf
-}
-
-// repair looks for maximum waits that the placing of i has broken. For each, the earlier
-// activity's lower bound is raised and it is unscheduled with all that hangs on it. It gives the number
-// of activities unscheduled.
-func (g *generator) repair(i int) (undone int, ok bool) {
-	for _, k := range g.into[i] {
-		l := &g.p.Links[k]
-		if l.From < 0 || !g.placed[i] || !g.placed[l.From] {
-			continue
-		}
-		if g.end(i, l.ToEnd) <= l.LastAt(g.end(l.From, l.FromEnd)) {
-			continue
-		}
-		lo := g.pulled(l, l.From, g.start[l.From])
-		if lo <= g.start[l.From] {
-			lo = g.start[l.From] + 1
-		}
-		if lo >= g.p.End {
-			g.stuck = i
-			return undone, false
-		}
-		from := l.From
-		undone += g.drop(from)
-		g.lo[from] = max(g.lo[from], lo)
-	}
-	for _, k := range g.from[i] { // something placed already comes too early after i
-		l := &g.p.Links[k]
-		if !g.placed[i] || !g.placed[l.To] || l.Min <= expand.NoMin {
-			continue
-		}
-		if g.end(l.To, l.ToEnd) < l.Earliest(g.end(i, l.FromEnd)) {
-			undone += g.drop(l.To)
-		}
-	}
-	return undone, true
-}
-
-// drop unschedules activity i and everything placed that comes after it, and queues i again.
-func (g *generator) drop(i int) int {
-	n := g.undo(i)
-	if n > 0 && g.pending[i] == 0 {
-		g.push(i)
-	}
-	return n
-}
-
-func (g *generator) undo(i int) int {
-	if !g.placed[i] {
-		return 0
-	}
-	g.take(i)
-	n := 1
-	g.after(i, func(j int) {
-		n += g.undo(j)
-		g.pending[j]++
-	})
-	return n
 }
 
 // list gives the placed activities by start, then by rank.
