@@ -1,0 +1,158 @@
+package expand
+
+import (
+	"math"
+	"strings"
+	"testing"
+
+	"sailby/tasks"
+)
+
+func TestAStripeIsACoatOfItsOwnWithItsWait(t *testing.T) {
+	w := likely(t, "tasks: {paint: {kind: coat, at: shop, area: 4 m2, stripe: 12 m, coats: [primer, primer]}, next: {at: shop, hours: 1 h, after: {paint: applied}}}")
+	same(t, "steps", w.keys(), "paint / stripe, paint / stripe touch dry, paint / coat 1, paint / dry 1, paint / coat 2, next / plain")
+	stripe, full := w.step(t, "paint / stripe"), w.step(t, "paint / coat 1")
+	// 12 m at 60 m/h are 12 min, and half of a brush's 20 min of setting up and cleaning (house judgement, by hand)
+	same(t, "minutes of the stripe", stripe.HandsOn, 22)
+	same(t, "states of a stripe", states(stripe), "people, wet film, soft film, solvent")
+	same(t, "the full coat waits until it is touch dry", w.linksOf(full), "paint / stripe touch dry finish -> start")
+	if want := 1 / between(360, 180); math.Abs(w.step(t, "paint / stripe touch dry").Rate(0)-want) > 1e-12 {
+		t.Error("the stripe dries by the paint's touch dry")
+	}
+	same(t, "what follows follows the last coat", w.linksOf(w.step(t, "next / plain")), "paint / coat 2 finish -> start")
+}
+
+func TestStripsAlongSeamsStayBareAndArePatched(t *testing.T) {
+	area := func(task string) float64 {
+		w := likely(t, "tasks: {it: {at: shop, "+task+"}}")
+		for _, f := range w.Steps[0].Estimate.Facts {
+			if f.Name == "area" {
+				return f.Value
+			}
+		}
+		t.Fatalf("%s: no area", task)
+		return 0
+	}
+	whole := area("kind: coat, surface: frame, coats: primer")
+	for _, c := range []struct {
+		what, task string
+		want       float64
+	}{
+		{"10 m of seam, 50 mm to each side", "kind: coat, surface: frame, coats: primer, leave bare: 10 m", whole - 1},
+		{"an area that is given is what is painted", "kind: coat, area: 4 m2, coats: primer, leave bare: 10 m", 4},
+		{"the patch of 10 m", "kind: coat, patch: 10 m, coats: primer", 1},
+		{"its preparation", "kind: surface prep, patch: 10 m, grade: St 3", 1},
+	} {
+		if got := area(c.task); math.Abs(got-c.want) > 1e-9 {
+			t.Errorf("%s: %.3f m2, want %.3f", c.what, got, c.want)
+		}
+	}
+	// taping both sides of 10 m at 40 m/h takes half an hour (house judgement, by hand)
+	minutes := func(more string) int {
+		return likely(t, "tasks: {it: {at: shop, kind: coat, area: 4 m2, coats: primer"+more+"}}").Steps[0].HandsOn
+	}
+	if got := minutes(", leave bare: 10 m") - minutes(""); got != 30 {
+		t.Errorf("taping takes %d min, want 30", got)
+	}
+	refused(t, "are more than its surface", "tasks: {it: {at: shop, kind: coat, surface: frame, coats: primer, leave bare: 900 m}}")
+}
+
+func TestPreparationHoldsForSoLong(t *testing.T) {
+	links := func(text string) string {
+		w := likely(t, "tasks: {"+text+"}")
+		return w.linksOf(w.step(t, "paint / coat 1"))
+	}
+	for _, c := range []struct{ what, tasks, want string }{
+		{"at home a shift", "grind: {kind: surface prep, at: shop, area: 2 m2, grade: St 3}, paint: {kind: coat, at: shop, area: 2 m2, coats: primer, after: grind}",
+			"grind / surface prep finish -> start; grind / surface prep finish -> start max 480"},
+		{"on site four hours (UFGS-09971 3.7.2.6)", "grind: {kind: surface prep, at: pier, area: 2 m2, grade: St 3}, paint: {kind: coat, at: pier, area: 2 m2, coats: primer, after: grind}",
+			"grind / surface prep finish -> start; grind / surface prep finish -> start max 240"},
+		{"as the task says", "grind: {kind: surface prep, at: pier, area: 2 m2, grade: St 3, holds: 26 h}, paint: {kind: coat, at: pier, area: 2 m2, coats: primer, after: grind}",
+			"grind / surface prep finish -> start; grind / surface prep finish -> start max 1560"},
+		{"as the link says", "grind: {kind: surface prep, at: pier, area: 2 m2, grade: St 3}, paint: {kind: coat, at: pier, area: 2 m2, coats: primer, after: {grind: {max: 26 h}}}",
+			"grind / surface prep finish -> start max 1560"},
+		{"through a wipe, which holds nothing and dries first", "grind: {kind: surface prep, at: pier, area: 2 m2, grade: St 3}, wipe: {kind: surface prep, at: pier, area: 2 m2, method: solvent wipe, after: grind}, paint: {kind: coat, at: pier, area: 2 m2, coats: primer, after: wipe}",
+			"grind / surface prep finish -> start max 240; wipe / drying finish -> start"},
+		{"not of another surface", "grind: {kind: surface prep, at: shop, surface: frame/base, grade: St 3}, paint: {kind: coat, at: shop, surface: frame/posts, coats: primer, after: grind}",
+			"grind / surface prep finish -> start"},
+	} {
+		same(t, c.what, links(c.tasks), c.want)
+	}
+	w := likely(t, "tasks: {wash: {kind: surface prep, at: pier, area: 2 m2, method: wash}, own: {kind: surface prep, at: pier, area: 2 m2, method: wash, standing: 30 min, why: dries}}")
+	same(t, "a wash dries two hours, or as the file says", w.keys(), "wash / surface prep, wash / drying, own / surface prep, own / dries")
+	same(t, "minutes", []int{w.Steps[1].Clock, w.Steps[3].Clock}, []int{120, 30})
+}
+
+func TestAMissedLongestWaitHasItsRescue(t *testing.T) {
+	w := likely(t, "tasks: {paint: {kind: coat, at: shop, area: 4 m2, coats: [primer, top]}}")
+	why := ""
+	for _, l := range w.Links {
+		if l.Max < NoMax && l.Max > 0 {
+			why = l.Why
+		}
+	}
+	same(t, "the link names it (tack coat over epoxy: UFGS-09971)", why, "longest recoat of primer (missed: tack coat)")
+	if notes := strings.Join(w.Steps[0].Estimate.Notes, "\n"); strings.Count(notes, "if the longest wait to the next coat is missed: tack coat") != 1 {
+		t.Errorf("the coat notes it once: %s", notes)
+	}
+}
+
+func TestMixesAreNoted(t *testing.T) {
+	w := likely(t, "tasks: {paint: {kind: coat, at: shop, area: 60 m2, shape: flat, method: brush, coats: quick}}",
+		"paints: {quick: {kind: two-pack epoxy, pot life: {10 C: 2 h, 20 C: 1 h}, induction: 10 min, packs: [5 L], mix: \"4:1\"}}")
+	notes := strings.Join(w.Steps[0].Estimate.Notes, "\n")
+	for _, want := range []string{" mixes of ", "of mixing at 15 °C", "L hardener", "stands 10 min before use", "of 5 L of quick"} {
+		if !strings.Contains(notes, want) {
+			t.Errorf("no %q in\n%s", want, notes)
+		}
+	}
+}
+
+const hotOnFrame = "weld: {kind: weld, at: shop, hours: 1 h, part: frame/base"
+
+func TestHotWorkComesBeforePaint(t *testing.T) {
+	paint := "paint: {kind: coat, at: shop, surface: frame, coats: primer"
+	w := likely(t, "tasks: {"+hotOnFrame+"}, "+paint+"}}")
+	if len(w.Orders) != 1 || w.Orders[0].Choices[0].First[0].Key() != "weld / weld" || w.Orders[0].Choices[0].Then[0].Key() != "paint / coat 1" {
+		t.Errorf("orders %+v", w.Orders)
+	}
+	for _, c := range []struct{ what, tasks string }{
+		{"links say so already", hotOnFrame + "}, " + paint + ", after: weld}"},
+		{"other parts", strings.Replace(hotOnFrame, "base", "posts", 1) + "}, " + strings.Replace(paint, "frame", "frame/base", 1) + "}"},
+		{"strips are bare", hotOnFrame + ", after: paint}, " + paint + ", leave bare: 1 m}"},
+		{"the paint comes off first", hotOnFrame + ", paint off first: yes, after: paint}, " + paint + "}"},
+		{"cold work", "weld: {kind: fit-up, at: shop, hours: 1 h, part: frame/base, after: paint}, " + paint + "}"},
+	} {
+		if w := likely(t, "tasks: {"+c.tasks+"}"); len(w.Orders) != 0 {
+			t.Errorf("%s: orders %+v", c.what, w.Orders)
+		}
+	}
+	refused(t, `hot work on what "paint" has coated`, "tasks: {"+hotOnFrame+", after: paint}, "+paint+"}}")
+}
+
+func TestGasIsTestedWhereThereIsPaint(t *testing.T) {
+	places := "places: {shop: {open: always}, pier: {open: always, face factor: 0.5, workfaces: {hold: {closed space: yes, next to: deck}, deck: {}, bow: {}}}}"
+	people := "people: {Ines: {tickets: [{weld: all}]}, Tom: {tickets: [fitter, fire watch, gas tester]}, Ann: {tickets: [painter]}}"
+	at := func(face, more string) *Step {
+		w := likely(t, "tasks: {burn: {kind: weld, at: pier/hold, hours: 1 h, needs: {weld: 1}"+more+"}, paint: {kind: coat, at: pier/"+face+", area: 2 m2, coats: primer}}", places, people)
+		return w.step(t, "burn / weld")
+	}
+	tested, none := at("deck", ""), at("bow", "")
+	same(t, "15 min over the face factor at every start", tested.SetUp-none.SetUp, 30)
+	tester := func(s *Step) (n int) {
+		for _, need := range s.Needs {
+			for _, a := range append([]tasks.Ticket{need.Ticket}, need.Also...) {
+				if a.Name == GasTester {
+					n++
+				}
+			}
+		}
+		return n
+	}
+	same(t, "by the fire watch", []int{tester(tested), len(tested.Needs) - len(none.Needs), tester(none)}, []int{1, 0, 0})
+	alone := at("hold", ", fire watch: 0 min")
+	same(t, "by one more where there is no watch", []int{tester(alone), len(alone.Needs)}, []int{1, 2})
+	refused(t, "wants a gas test, and nobody has the ticket", "tasks: {burn: {kind: weld, at: pier/hold, hours: 1 h, needs: {weld: 1}}, paint: {kind: coat, at: pier/hold, area: 2 m2, coats: primer}}", places)
+	w := likely(t, "tasks: {burn: {kind: weld, at: pier/hold, hours: 1 h, needs: {weld: 1}}, paint: {kind: coat, at: pier/hold, area: 2 m2, coats: primer, after: burn}}", places)
+	same(t, "not where links put the paint after it", tester(w.step(t, "burn / weld")), 0)
+}
