@@ -58,7 +58,7 @@ func (c *crewer) crew(i int) bool {
 	var any []fact
 	for k := range a.Modes {
 		mode := c.variable(0, 1)
-		x.modes = append(x.modes, mode)
+		x.modes, x.byMode = append(x.modes, mode), append(x.byMode, c.grids[a.Modes[k].Time])
 		any = append(any, fact{mode, 1})
 		if t := times[c.timeOf(i, k)]; t >= 0 {
 			c.join(mode, t, 0, always)

@@ -29,6 +29,7 @@ type engine struct {
 	stampNow int64
 
 	conflicts int64
+	turns     int64                              // times that levels were taken back
 	heard     func(f fact, w why, behind []fact) // told of every reason given, by tests; nil: nobody
 	dead      bool                               // no solution at all under the root facts
 }
@@ -146,6 +147,7 @@ func (e *engine) settle() bool {
 
 // retreat takes back all levels above k.
 func (e *engine) retreat(k int32) {
+	e.turns++
 	if e.level() > k {
 		e.cut(e.head[k])
 	}

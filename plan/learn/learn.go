@@ -14,7 +14,8 @@ type Options struct {
 	Stop  func() bool // asked every few milliseconds; true ends the search. nil: never
 	Seed  uint64
 	Best  int                            // a known finish: only better ones are looked for. 0: none known
-	Hint  []int                          // starts of a known plan, taken where nothing else decides; nil: none
+	Hint  []int                          // starts of a known plan, where the search begins; nil: none
+	Modes []int                          // its modes; nil: not known
 	Found func(starts []int, finish int) // called for each better plan; nil: not
 }
 

@@ -32,6 +32,7 @@ type act struct {
 	empty   bool     // it may take no time at all
 	sure    spans    // minutes in which it is worked if it runs over them, whoever does it
 	watch   int32    // minutes of fire watch that follow at least
+	byMode  []*grid  // with people: the timing of each mode
 	keepers []keeper // with people: who may keep the watch after it
 	modes   []side   // with people: a variable for each mode, if there are several
 }

@@ -129,6 +129,12 @@ func TestKnownPlan(t *testing.T) {
 		if hint.Finish != best.Finish {
 			t.Errorf("instance %d: finish %d with a hint, %d without", k, hint.Finish, best.Finish)
 		}
+		for _, odd := range []Options{{Hint: []int{1}}, {Hint: best.Starts, Modes: make([]int, 1)}, {Hint: best.Starts, Modes: []int{9, 9, 9, 9, 9, 9, 9, 9}},
+			{Hint: best.Starts, Modes: best.Modes, Best: best.Finish + 1}} {
+			if got := Solve(p, odd); got.Finish != best.Finish {
+				t.Errorf("instance %d: finish %d with an odd hint, %d without", k, got.Finish, best.Finish)
+			}
+		}
 		if none := Solve(p, Options{Best: best.Finish}); none.Status != Infeasible {
 			t.Errorf("instance %d: better than %d should be refuted, have status %d", k, best.Finish, none.Status)
 		}

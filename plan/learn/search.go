@@ -8,6 +8,7 @@ type search struct {
 	opt    Options
 	best   []int32 // value of each variable in the best plan or the hint, nil if none
 	starts []int   // the best plan found, nil if none
+	base   []int   // the plan that slices are taken of: the best found, or the hint
 	modes  []int
 	keep   []Kept // the fire watches of the best plan
 	value  int32  // only finishes before this are looked for
@@ -20,7 +21,9 @@ type search struct {
 	silent bool         // plans are not taken, only counted as found
 	last   outcome      // why a contradiction was not found
 	core   []fact       // assumptions that cannot hold together, after refused
-	loose  side         // variables from here on are settled last
+	modal  int          // activities before this one have their mode, since backs
+	loose  side         // variables before this one are settled, since backs
+	backs  int64
 }
 
 // outcome is how a run ended.
@@ -113,6 +116,7 @@ func (s *search) take() bool {
 		s.starts = append(s.starts, int(s.now[x]))
 		s.modes = append(s.modes, s.chosen(i))
 	}
+	s.base = s.starts
 	if s.opt.Found != nil {
 		s.opt.Found(append([]int(nil), s.starts...), int(s.value))
 	}
@@ -150,6 +154,7 @@ func (s *search) adopt(x *beast) bool {
 		s.best[side/2] = x.start[i]
 		s.starts = append(s.starts, int(x.start[i]))
 	}
+	s.base = s.starts
 	if s.opt.Found != nil {
 		s.opt.Found(append([]int(nil), s.starts...), int(s.value))
 	}
@@ -172,6 +177,33 @@ func (s *search) tighten() bool {
 	return !s.dead
 }
 
+// hint takes over a plan that is known; one that does not fit the problem is left alone.
+func (s *search) hint() {
+	n := len(s.start)
+	if n == 0 || len(s.opt.Hint) != n || s.opt.Modes != nil && len(s.opt.Modes) != n {
+		return
+	}
+	s.base, s.best = s.opt.Hint, make([]int32, len(s.now)/2)
+	for i, v := range s.base {
+		x, w := &s.acts[i], s.acts[i].times[0]
+		if s.opt.Modes != nil {
+			k := s.opt.Modes[i]
+			if k < 0 || k >= len(s.p.Acts[i].Modes) {
+				s.base, s.best = nil, nil
+				return
+			}
+			w = s.p.Acts[i].Modes[k].Time
+			if len(x.modes) > 0 {
+				s.best[x.modes[k]/2] = 1
+			}
+		}
+		s.best[s.start[i]/2] = clip(v)
+		if s.start[i] != s.finish[i] {
+			s.best[s.finish[i]/2] = s.grids[w].finish(clip(v))
+		}
+	}
+}
+
 // begin takes over what is known and settles the root; false if that is the end of the search.
 func (s *search) begin() bool {
 	s.value = int32(s.p.End) + 1
@@ -180,12 +212,7 @@ func (s *search) begin() bool {
 	for i, x := range s.start {
 		s.actOf[x] = i
 	}
-	if s.opt.Hint != nil {
-		s.best = make([]int32, len(s.now)/2)
-		for i, v := range s.opt.Hint {
-			s.best[s.start[i]/2] = int32(v)
-		}
-	}
+	s.hint()
 	if s.opt.Best > 0 && s.opt.Best <= s.p.End {
 		s.value = int32(s.opt.Best)
 	}
@@ -250,16 +277,17 @@ func (s *search) choose(early bool) (fact, bool) {
 		}
 		return fact{pick ^ 1, -s.now[pick]}, true
 	}
-	for i := range s.acts {
-		if len(s.acts[i].modes) > 0 {
-			if f, ok := s.modeFor(s.start[i]); ok {
-				return f, true
-			}
+	if s.backs != s.turns { // a level was taken back since
+		s.backs, s.modal, s.loose = s.turns, 0, 0
+	}
+	for ; s.modal < len(s.acts); s.modal++ {
+		if f, ok := s.modeFor(s.start[s.modal]); ok {
+			return f, true
 		}
 	}
 	// what is left is as early as the starts allow; of two modes that both hold one is enough
-	for x := s.loose; x < side(len(s.now)); x += 2 {
-		if !s.fixed(x) {
+	for ; s.loose < side(len(s.now)); s.loose += 2 {
+		if x := s.loose; !s.fixed(x) {
 			return fact{x ^ 1, -s.now[x]}, true
 		}
 	}
@@ -278,7 +306,7 @@ func (s *search) modeFor(x side) (fact, bool) {
 		case s.now[y^1] == 0: // ruled out
 			continue
 		}
-		g := s.grids[s.p.Acts[i].Modes[k].Time]
+		g := s.acts[i].byMode[k]
 		if f := g.finish(s.now[x]); f < least {
 			best, least = y, f
 		}

@@ -66,7 +66,7 @@ func (s *search) minimise() Result {
 	p.able[freely] = true
 	turn, limit, low := 0, int64(firstRun), lowRun{step: 1, limit: firstRun}
 	for round := 0; ; round++ {
-		p.able[slicing] = s.starts != nil
+		p.able[slicing] = len(s.base) > 0
 		p.able[breeding] = b != nil
 		p.able[lowly] = s.now[s.end] < s.value-2
 		m := p.next()

@@ -6,8 +6,8 @@ import (
 )
 
 // slicer takes a slice of time out of the best plan and lets the learning search arrange its
-// activities anew, everything before it kept and everything after it moved earlier by one (the
-// decomposition of Debels and Vanhoucke 2007, with an exact search in the slice). A slice that
+// activities anew, everything before it kept and everything after it moved earlier by one, or,
+// with calendars, let be no later than it is (the decomposition of Debels and Vanhoucke 2007, with an exact search in the slice). A slice that
 // holds a better plan shortens the whole.
 type slicer struct {
 	rnd   *rand.Rand
@@ -30,21 +30,23 @@ func (c *slicer) pick(s *search, out []fact) []fact {
 	for i := 0; i < n; i++ {
 		c.order = append(c.order, i)
 	}
-	sort.SliceStable(c.order, func(x, y int) bool { return s.starts[c.order[x]] < s.starts[c.order[y]] })
+	sort.SliceStable(c.order, func(x, y int) bool { return s.base[c.order[x]] < s.base[c.order[y]] })
 	size := min(n, int(c.size))
 	first := c.rnd.IntN(n+size) - size
-	from, to := s.starts[c.order[max(0, first)]], int(far)
+	from, to := s.base[c.order[max(0, first)]], int(far)
 	if first <= 0 {
 		from = -1
 	}
 	if first+size < n {
-		to = s.starts[c.order[max(0, first+size)]]
+		to = s.base[c.order[max(0, first+size)]]
 	}
 	for _, i := range c.order {
-		v := int32(s.starts[i])
+		v := int32(s.base[i])
 		x := s.start[i]
 		switch {
-		case s.starts[i] >= to:
+		case s.base[i] >= to && !s.plain: // calendars do not let everything move by one
+			out = append(out, fact{x ^ 1, -v})
+		case s.base[i] >= to:
 			out = append(out, fact{x ^ 1, -(v - 1)}, fact{x, v - 1})
 		case int(s.finishOf(i)) <= from:
 			out = append(out, fact{x ^ 1, -v}, fact{x, v})

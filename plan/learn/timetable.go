@@ -31,13 +31,18 @@ type timetable struct {
 	level    []int32 // and how much is used
 	key      []int32
 	cover    []covering
+	parts    []stretch // by user: its compulsory part in the profile
+	seen     []view    // by user: the bounds for which it was last looked at in vain
+	version  int32     // of the profile
+	most     int32     // its greatest level
 }
 
 // covering is an activity that covers a point, with the later entry of its two facts.
 type covering struct{ user, amount, last int32 }
 
 func newTimetable(e *engine, capacity int32, users []user) {
-	c := &timetable{id: int32(len(e.rules)), capacity: capacity, users: users, key: make([]int32, len(users))}
+	c := &timetable{id: int32(len(e.rules)), capacity: capacity, users: users, key: make([]int32, len(users)),
+		parts: make([]stretch, len(users)), seen: make([]view, len(users))}
 	var sides []side
 	for i, u := range users {
 		c.byStart = append(c.byStart, int32(i))
@@ -76,6 +81,20 @@ func order(ids, key []int32) {
 
 // build makes the profile and gives its greatest level.
 func (c *timetable) build(e *engine) int32 {
+	changed := false
+	for i := range c.users {
+		u := &c.users[i]
+		part := stretch{e.latestStart(u), e.earliestFinish(u)}
+		if part.from >= part.to {
+			part = stretch{}
+		}
+		changed = changed || part != c.parts[i]
+		c.parts[i] = part
+	}
+	if !changed {
+		return c.most
+	}
+	c.version++
 	for i := range c.users {
 		c.key[i] = e.latestStart(&c.users[i])
 	}
@@ -126,6 +145,7 @@ func (c *timetable) build(e *engine) int32 {
 		c.from = append(c.from, t)
 		c.level = append(c.level, used)
 	}
+	c.most = most
 	return most
 }
 
@@ -151,8 +171,15 @@ func (c *timetable) run(e *engine) bool {
 		if u.amount+most <= c.capacity || e.fixed(u.start) && e.fixed(u.finish) {
 			continue
 		}
+		look := e.view(u, c.version)
+		if c.seen[i] == look {
+			continue
+		}
 		if !c.later(e, int32(i)) || !c.earlier(e, int32(i)) {
 			return false
+		}
+		if e.view(u, c.version) == look {
+			c.seen[i] = look
 		}
 	}
 	return true

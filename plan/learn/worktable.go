@@ -1,6 +1,10 @@
 package learn
 
-import "sort"
+import (
+	"cmp"
+	"slices"
+	"sort"
+)
 
 // worker is a user that is only there in some minutes between its start and its finish, and only
 // while a condition holds.
@@ -17,12 +21,19 @@ type worker struct {
 // explanations are those of the timetable, with the condition added. An activity whose condition
 // is open loses it where its compulsory part would be too much.
 //
-// Cost of a run: O(s log s) for the s spans of compulsory parts, and O(n x segments).
+// Cost of a run: O(n + s) for the s spans of compulsory parts, s log s of those that changed, and
+// O(segments) for each activity that has changed or that a changed profile may push.
 type worktable struct {
 	id       int32
 	capacity int32
 	all      []worker
-	events   []event
+	events   []event   // of all compulsory parts, in order of time
+	fresh    []event   // scratch: of those that have changed
+	parts    []stretch // by worker: its compulsory part in events
+	seen     []view    // by worker: the bounds for which it was last looked at in vain
+	moved    []bool    // scratch: by worker, whether its part has changed
+	version  int32     // of the profile
+	most     int32     // its greatest level
 	from     []int32
 	level    []int32
 	teams    []uint64 // by segment: the teams at work in it, a bit each; from 63 on they share the last
@@ -32,8 +43,18 @@ type worktable struct {
 
 // event is a change of use.
 type event struct {
-	at, by int32
-	team   int
+	at, by, who int32
+	team        int
+}
+
+// stretch is a compulsory part; from is to where there is none.
+type stretch struct{ from, to int32 }
+
+// view is what a look at a user depends on: its bounds and the profile.
+type view struct{ est, lst, ect, lct, version int32 }
+
+func (e *engine) view(u *user, version int32) view {
+	return view{e.now[u.start], e.latestStart(u), e.earliestFinish(u), e.latestFinish(u), version}
 }
 
 func teamBit(team int) uint64 {
@@ -44,7 +65,7 @@ func teamBit(team int) uint64 {
 }
 
 func newWorktable(e *engine, capacity int32, all []worker) {
-	c := &worktable{id: int32(len(e.rules)), capacity: capacity, all: all}
+	c := &worktable{id: int32(len(e.rules)), capacity: capacity, all: all, parts: make([]stretch, len(all)), seen: make([]view, len(all)), moved: make([]bool, len(all))}
 	seen := map[side]bool{}
 	var sides []side
 	add := func(s side) {
@@ -72,25 +93,74 @@ func newWorktable(e *engine, capacity int32, all []worker) {
 // sure says whether the condition of w holds.
 func (w *worker) sure(e *engine) bool { return w.on.s < 0 || e.holds(w.on) }
 
-// build makes the profile and gives its greatest level.
-func (c *worktable) build(e *engine) int32 {
-	c.events = c.events[:0]
+// update finds the compulsory parts that have changed and puts their events in the place of the
+// old ones; false if there are none.
+func (c *worktable) update(e *engine) bool {
+	c.fresh = c.fresh[:0]
+	changed := false
 	for i := range c.all {
 		w := &c.all[i]
-		from, to := e.latestStart(&w.user), e.earliestFinish(&w.user)
-		if from >= to || !w.sure(e) {
+		part := stretch{e.latestStart(&w.user), e.earliestFinish(&w.user)}
+		if part.from >= part.to || !w.sure(e) {
+			part = stretch{}
+		}
+		if part == c.parts[i] {
 			continue
 		}
+		changed = true
+		c.parts[i], c.moved[i] = part, true
+		if part.from == part.to {
+			continue
+		}
+		who := int32(i)
 		if w.mask == nil {
-			c.events = append(c.events, event{from, w.amount, w.team}, event{to, -w.amount, w.team})
+			c.fresh = append(c.fresh, event{part.from, w.amount, who, w.team}, event{part.to, -w.amount, who, w.team})
 			continue
 		}
-		for k := w.mask.find(from); k < len(w.mask) && w.mask[k].from < to; k++ {
-			c.events = append(c.events, event{max(from, w.mask[k].from), w.amount, w.team}, event{min(to, w.mask[k].to), -w.amount, w.team})
+		for k := w.mask.find(part.from); k < len(w.mask) && w.mask[k].from < part.to; k++ {
+			c.fresh = append(c.fresh, event{max(part.from, w.mask[k].from), w.amount, who, w.team},
+				event{min(part.to, w.mask[k].to), -w.amount, who, w.team})
 		}
 	}
-	e.ticks += int64(len(c.all) + len(c.events))
-	sort.Slice(c.events, func(i, j int) bool { return c.events[i].at < c.events[j].at })
+	e.ticks += int64(len(c.all))
+	if !changed {
+		return false
+	}
+	slices.SortFunc(c.fresh, func(a, b event) int { return cmp.Compare(a.at, b.at) })
+	kept := c.events[:0]
+	for _, ev := range c.events {
+		if !c.moved[ev.who] {
+			kept = append(kept, ev)
+		}
+	}
+	c.events = mergeEvents(kept, c.fresh)
+	clear(c.moved)
+	e.ticks += int64(len(c.events))
+	c.version++
+	return true
+}
+
+// mergeEvents puts the events of b among those of a, from behind.
+func mergeEvents(a, b []event) []event {
+	i, j := len(a)-1, len(b)-1
+	a = append(a, b...)
+	for k := len(a) - 1; j >= 0; k-- {
+		if i >= 0 && a[i].at > b[j].at {
+			a[k] = a[i]
+			i--
+		} else {
+			a[k] = b[j]
+			j--
+		}
+	}
+	return a
+}
+
+// build makes the profile and gives its greatest level.
+func (c *worktable) build(e *engine) int32 {
+	if !c.update(e) {
+		return c.most
+	}
 	c.from, c.level, c.teams = c.from[:0], c.level[:0], c.teams[:0]
 	clear(c.crowd)
 	used, most, bits := int32(0), int32(0), uint64(0)
@@ -118,6 +188,7 @@ func (c *worktable) build(e *engine) int32 {
 		c.teams = append(c.teams, bits)
 		most = max(most, used)
 	}
+	c.most = most
 	return most
 }
 
@@ -143,14 +214,22 @@ func (c *worktable) run(e *engine) bool {
 		if w.amount+most <= c.capacity || w.on.s >= 0 && e.fails(w.on) {
 			continue
 		}
+		look := e.view(&w.user, c.version)
+		if c.seen[i] == look {
+			continue
+		}
 		switch {
 		case !w.sure(e):
 			if !c.deny(e, int32(i)) {
 				return false
 			}
+			continue
 		case e.fixed(w.start) && e.fixed(w.finish):
 		case !c.later(e, int32(i)) || !c.earlier(e, int32(i)):
 			return false
+		}
+		if e.view(&w.user, c.version) == look {
+			c.seen[i] = look
 		}
 	}
 	return true
