@@ -289,6 +289,23 @@ func (x *expander) lastRecoat(max coat.Curve, series *site.Series, steady float6
 	}
 }
 
+// underWater adds the longest time that a coat may wait to go under water, to the start of the
+// task that waits for `immersion`.
+func (x *expander) underWater(f, t *tasks.Task) {
+	coats := x.handsOf(f)
+	p := x.paint(f.Coats[len(f.Coats)-1])
+	if len(coats) == 0 || p == nil || len(p.ImmersionMax) == 0 {
+		return
+	}
+	l := Link{From: coats[len(coats)-1], To: x.first[t][0], ToEnd: tasks.Start, Min: NoMin, Max: NoMax, Pos: p.Pos, Why: "longest wait of " + p.Name + " to go under water"}
+	if series := f.Place.WarmHourly(f.Face); series != nil {
+		l.MaxCure = &MaxCure{Last: x.lastRecoat(p.ImmersionMax, series, x.steel(f.Place))}
+	} else if cap, _, err := p.ImmersionMax.Life(x.steel(f.Place)); err == nil {
+		l.Max = int(cap)
+	}
+	x.w.Links = append(x.w.Links, l)
+}
+
 // filmState gives the step whose finish is a film state of a coat task, made when first asked for.
 func (x *expander) filmState(t *tasks.Task, state string, next *tasks.Paint) (*Step, error) {
 	key := t.Name + " / " + state

@@ -90,6 +90,9 @@ func (x *expander) fromCoat(f, t *tasks.Task, l *tasks.Link) (*Step, string) {
 		x.fault(l.Pos, "complete the paint, or write the wait: after: {"+f.Name+": {min: 16 h}}", "task %q: %v", t.Name, err)
 		return nil, ""
 	}
+	if (state == "immersion" || state == "immersion min") && l.Max == nil && !x.absent[t] {
+		x.underWater(f, t)
+	}
 	if next != nil {
 		coats := x.handsOf(f)
 		a, b := coats[len(coats)-1], x.firstCoat(t)

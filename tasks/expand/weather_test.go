@@ -284,3 +284,38 @@ func TestWhatTheTideHasCoveredIsWashedFirst(t *testing.T) {
 	refused(t, "does not say when it may go under water", "tasks: {it: {kind: coat, at: pier/hinge, hours: 1 h, coats: dry}}", "paints: {dry: {kind: alkyd}}",
 		"places: {shop: {open: always}, pier: {open: always, workfaces: {hinge: {between tides: yes, reach: [2027-04-06 08:00-14:00]}}}}")
 }
+
+// Antifouling must go under water in time: 12 h at the least and 90 days at most at 10 C here.
+func TestLongestWaitToGoUnderWater(t *testing.T) {
+	text := "tasks: {paint: {kind: coat, at: pier, area: 4 m2, coats: foul}, launch: {at: pier, hours: 1 h, after: {paint: immersion min}}}"
+	paint := "paints: {foul: {kind: two-pack epoxy, immersion min: {10 C: 12 h}, immersion max: {10 C: 90 d, 20 C: 45 d}}}"
+	w := likely(t, text, paint)
+	same(t, "links", w.linksOf(w.step(t, "launch / plain")), "paint / coat 1 finish -> start max 129600; paint / immersion min finish -> start")
+	w = under(t, func(int) site.Weather { x := fine(); x.Steel = 20; return x }, text, paint)
+	for _, l := range w.Links {
+		if l.MaxCure != nil {
+			if got := l.MaxCure.Last(w.Span.From); got != w.Span.To { // 45 days are longer than all that is planned over
+				t.Errorf("at the latest %d", got-w.Span.From)
+			}
+			return
+		}
+	}
+	t.Error("by the hour there is no longest wait")
+}
+
+func TestWeldsNoteTheWeatherPlannedWith(t *testing.T) {
+	w := under(t, func(h int) site.Weather {
+		x := fine()
+		x.Wind, x.Wet = 8, h%24 < 12
+		return x
+	}, "tasks: {it: {kind: weld, at: pier, joints: [{fillet: {leg: 6 mm}, length: 1 m, position: PB, procedure: wire}]}}", "procedures: {wire: {process: 135}}\nsteel: S355")
+	notes := strings.Join(w.Steps[0].Estimate.Notes, "\n")
+	for _, want := range []string{"too much wind at the arc without a shelter (up to 8.0 m/s): in ", "steel wet by rain or dew: dry and warm it first: in "} {
+		if !strings.Contains(notes, want) {
+			t.Errorf("no %q in\n%s", want, notes)
+		}
+	}
+	if strings.Contains(notes, "too cold") {
+		t.Error("15 C are not too cold")
+	}
+}

@@ -244,6 +244,9 @@ func (x *expander) weatherNotes(t *tasks.Task, e weld.Estimate) []string {
 		note += fmt.Sprintf(", nor in more than %.1f m/s of wind at the arc without a shelter (AWS D1.1)", wind)
 	}
 	out := []string{note}
+	if h := t.Place.Hourly(t.Face); h != nil {
+		return append(out, x.weldHours(t, h, wind, air)...)
+	}
 	if t := x.steel(t.Place); t < air {
 		out = append(out, fmt.Sprintf("planned at %.0f °C, too cold to weld: warm a shelter", t))
 	}
