@@ -29,10 +29,19 @@ func (k *pack) liftSheet(s *expand.Step) {
 	for _, g := range k.hireOf(s) {
 		p.para(g, body, false)
 	}
+	j, judged := k.judged(s)
+	if judged {
+		k.liftSketch(s, j)
+		k.liftLimits(s, j)
+	}
 	p.heading("What the plan counted with", 3*lineHeight(body))
 	k.liftFacts(s)
 	for _, n := range s.Estimate.Notes {
 		p.point("!", n, true)
+	}
+	if judged {
+		k.liftSteps(s, j)
+		k.liftAsk(j)
 	}
 	p.heading("Decided by the competent person", 60)
 	mass := ""
@@ -44,8 +53,8 @@ func (k *pack) liftSheet(s *expand.Step) {
 	p.fields(3, field{label: "Load", value: t.Lifts}, field{label: "Weight planned with", value: mass}, field{label: "Weight, how known"},
 		field{label: "Lifting points seen by"}, field{label: "Centre of gravity, trial lift"}, field{label: "Slings, shackles, angle"},
 		field{label: "Machine or hoist, no.", value: ""}, field{label: "Radius and chart there"}, field{label: "Share of the chart, %"},
-		field{label: "Ground, outriggers, hang point"}, field{label: "Overhead lines, obstructions"}, field{label: "Nobody inside the line of"},
-		field{label: "Wind limit", value: gust(s)}, field{label: "Wind measured by, where"}, field{label: "Tag lines, hands"},
+		field{label: "Ground, outriggers, hang point"}, field{label: "Overhead lines, obstructions"}, field{label: "Nobody inside the line of", value: clear(j, judged)},
+		field{label: "Wind limit", value: windLimit(s, j, judged)}, field{label: "Wind measured by, where", value: measures(s)}, field{label: "Tag lines, hands"},
 		field{label: "Signaller, and how"}, field{label: "Landing place ready, seen by"}, field{label: "Certificates seen, dates"})
 	p.heading("Before the load leaves the ground", 2*(boxHeight+lineHeight(body)))
 	p.fields(2, field{label: "Planned by a competent person, signature"}, field{label: "Lift supervisor, signature"},

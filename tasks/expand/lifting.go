@@ -33,17 +33,11 @@ func (x *expander) lift(t *tasks.Task) hands {
 		mass.Name = j.Total.Figure.Name
 	}
 	h.est.Facts = append(h.est.Facts, mass)
-	height := t.Height.Value
 	if !t.Height.Pos.Given() {
-		height = 1500
-		h.est.Facts = append(h.est.Facts, origin.House("hook travel", height, "mm", "not given: 1.5 m"))
-	}
-	m := lift.Move{Mass: j.Load.Mass, Height: height, Travel: t.Travel.Value, By: r.Way, People: r.crew, First: t.Round <= 1, Site: r.site}
-	if r.Kit != nil && r.Kit.Speed.Value > 0 {
-		m.Speed = r.Kit.Speed.Value * 1000 // m to mm
+		h.est.Facts = append(h.est.Facts, origin.House("hook travel", 1500, "mm", "not given: 1.5 m"))
 	}
 	x.liftNotes(t, j, &h)
-	e, err := lift.Times(m)
+	e, err := r.Times(j.Load.Mass)
 	if err != nil {
 		h.fault, h.hint = err, "give hours, or another way to lift"
 		return h
@@ -51,6 +45,20 @@ func (x *expander) lift(t *tasks.Task) hands {
 	h.minutes = spread(float64(e.HandsOn))
 	h.est.Figure = e.Hours
 	return h
+}
+
+// Times estimates the steps of the lift for a mass in kg. Errors as for lift.Times.
+func (r *Rigging) Times(mass float64) (lift.Estimate, error) {
+	t := r.Task
+	height := t.Height.Value
+	if !t.Height.Pos.Given() {
+		height = 1500
+	}
+	m := lift.Move{Mass: mass, Height: height, Travel: t.Travel.Value, By: r.Way, People: r.crew, First: t.Round <= 1, Site: r.site}
+	if r.Kit != nil && r.Kit.Speed.Value > 0 {
+		m.Speed = r.Kit.Speed.Value * 1000 // m to mm
+	}
+	return lift.Times(m)
 }
 
 // liftNotes says what exceeds a filter, and when to stop pulling at an old part.

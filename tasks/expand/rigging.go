@@ -66,8 +66,13 @@ func (x *expander) rigging(t *tasks.Task) *Rigging {
 	case r.Kit != nil:
 		r.Way = wayOf(r.Kit)
 	default:
-		if w, err := lift.ParseWay(t.By); err == nil && t.By != "" {
+		w, err := lift.ParseWay(t.By)
+		switch {
+		case err == nil:
 			r.Way = w
+		case t.By != "" && x.kitNamed(t.By) == nil:
+			x.fault(t.Pos, "name a kit or hire, or write hands, chain hoist, lever hoist, loader crane, gantry, trolley or jack",
+				"task %q: by %q: no kit or hire is called that, and it is no way to lift", t.Name, t.By)
 		}
 	}
 	for _, u := range x.w.Job.Tasks {
@@ -436,3 +441,46 @@ func (j Judgement) Hint() string {
 	out = append(out, "or lift it in parts, or before something is joined")
 	return strings.Join(out, "; ")
 }
+
+// Outline is one piece of what is lifted as a box, mm, in the axes of its assembly.
+type Outline struct {
+	Name      string
+	Low, High [3]float64
+}
+
+// Outlines gives the pieces of the assembly that the lift names, those that hang on it at a stage,
+// for a sketch; nothing where the file gives no sizes.
+func (r *Rigging) Outlines(pieces []string) []Outline {
+	var out []Outline
+	for _, a := range r.s.job.Assemblies {
+		if a.Name != asm(r.Task.Lifts) {
+			continue
+		}
+		for _, p := range a.Parts {
+			if !slices.Contains(pieces, a.Name+"/"+p.Name) {
+				continue
+			}
+			places := p.Places
+			if len(places) == 0 {
+				places = [][3]float64{p.At}
+			}
+			for _, at := range places {
+				one := p.Part
+				one.At, one.Places, one.Count = at, nil, 1
+				if t, err := lift.Mass([]lift.Part{one}); err == nil {
+					out = append(out, Outline{p.Name, t.Low, t.High})
+				}
+			}
+		}
+		if len(a.Parts) == 0 && a.Size[0]*a.Size[2] > 0 {
+			out = append(out, Outline{a.Name, [3]float64{}, a.Size})
+		}
+	}
+	return out
+}
+
+// Slung gives the slings of the lift, nil where the file says nothing of them.
+func (r *Rigging) Slung() *lift.Rig { return r.lifting().Slings }
+
+// Said gives what the file says of the lift beyond mass and gear; never nil.
+func (r *Rigging) Said() *tasks.Lifting { return r.lifting() }
