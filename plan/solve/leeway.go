@@ -17,27 +17,28 @@ func (r *rower) inOrder() {
 	}
 	for rank, j := range r.order {
 		for _, i := range r.order[:rank] {
-			if r.clear(i) <= r.s.Start[j] && r.s.Start[i] < r.s.Finish[i] && r.s.Start[j] < r.s.Finish[j] && r.meetAny(i, j) {
+			if r.s.Start[i] < r.s.Finish[i] && r.s.Start[j] < r.s.Finish[j] && r.gives(i, j) {
 				r.ahead[j] = append(r.ahead[j], i)
 			}
 		}
 	}
 }
 
-// clear gives the minute at which activity i and its fire watches are over.
-func (r *rower) clear(i int) int { return r.s.end(r.p, i) }
-
-// meetAny says whether two activities could not run side by side.
-func (r *rower) meetAny(i, j int) bool {
+// gives says whether j, later in the plan, begins only after i has given up something that both
+// want: somebody, a resource, or the workface.
+func (r *rower) gives(i, j int) bool {
 	a, b := &r.p.Acts[i], &r.p.Acts[j]
 	ma, mb := &a.Modes[r.s.Mode[i]], &b.Modes[r.s.Mode[j]]
-	for _, p := range append(append([]int(nil), ma.Crew...), ma.Relief...) {
-		if hasPerson(mb.Crew, p) || hasPerson(mb.Relief, p) {
+	for _, w := range r.s.Watches[i] {
+		if w.To <= r.s.Start[j] && (hasPerson(mb.Crew, w.Who) || hasPerson(mb.Relief, w.Who)) {
 			return true
 		}
 	}
-	for _, w := range r.s.Watches[i] {
-		if hasPerson(mb.Crew, w.Who) || hasPerson(mb.Relief, w.Who) {
+	if r.s.Finish[i] > r.s.Start[j] {
+		return false
+	}
+	for _, p := range append(append([]int(nil), ma.Crew...), ma.Relief...) {
+		if hasPerson(mb.Crew, p) || hasPerson(mb.Relief, p) {
 			return true
 		}
 	}
@@ -77,7 +78,7 @@ func (r *rower) leeway(rank, i int) {
 		}
 	}
 	if r.maxWaits() { // lateness need not grow with the delay: look at the steps between too
-		step := max(5, lo/60)
+		step := max(5, lo/400)
 		for l := step; l < lo; l += step {
 			if !ok(l) {
 				lo = l - step

@@ -66,11 +66,18 @@ func (f *fields) beside(name, file string) (data []byte, shown string, ok bool) 
 	return data, shown, true
 }
 
+// mostSheetFaults is how many faults of one table are told one by one.
+const mostSheetFaults = 4
+
 // sheetFaults takes over the faults of a table, or reports err at the key that names it.
 func (f *fields) sheetFaults(name string, err error) {
 	var all site.Faults
 	if errors.As(err, &all) {
-		for _, s := range all {
+		for i, s := range all {
+			if i == mostSheetFaults && len(all) > i+1 {
+				f.r.faultAt(tasks.Pos{File: s.File, Line: s.Line, Col: s.Col}, "mend those above first", "and %d more lines like it", len(all)-i)
+				return
+			}
 			hint := s.Hint
 			if hint == "" {
 				hint = "mend the file, or leave it out"
