@@ -81,10 +81,16 @@ func (r *reader) climate(p *tasks.Place, f *fields) {
 		}
 		if least, most := g.span("air", airKey); least != nil && most != nil {
 			n.AirLeast, n.AirGreatest = *least, *most
+			if n.Dew > n.AirGreatest && g.has("dew point") {
+				g.fault("dew point", "give the mean dew point in C", "%s C is above the greatest air, %s C", trim(n.Dew), trim(n.AirGreatest))
+			}
 		} else if g.has("air") {
 			g.fault("air", "write {min: 4 C, max: 11 C}", "both least and greatest are wanted")
 		}
 		c.normals.Months[m] = n
+	}
+	if len(r.faults) == faults && len(c.normals.Months) == 0 {
+		f.fault("months", "write for instance {April: {air: {min: 4 C, max: 11 C}, dew point: 4 C, wind: 6 m/s, wet days: 14}}", "there is no month")
 	}
 	if len(r.faults) == faults {
 		r.climates = append(r.climates, c)
@@ -199,14 +205,24 @@ func (r *reader) nature() {
 // hourly lays out a place's weather by hour.
 func (r *reader) hourly(c climate, all, windows hours.Span) {
 	var missing []string
+	filled := map[time.Month]time.Month{}
 	for d := hours.DateOf(all.From.In(time.UTC)); !hours.DateOf(all.To.In(time.UTC)).Before(d); d = d.Add(1) {
-		if _, ok := c.normals.Months[d.Month]; ok || len(c.normals.Months) == 0 {
-			continue
+		if _, ok := c.normals.Months[d.Month]; !ok {
+			filled[d.Month] = nearestMonth(c.normals.Months, d.Month)
 		}
-		near := nearestMonth(c.normals.Months, d.Month)
-		c.normals.Months[d.Month] = c.normals.Months[near]
-		if m, _ := hours.Instant(d, 0, time.UTC); m >= windows.From-daysBefore*1440 && m < windows.To {
-			missing = append(missing, fmt.Sprintf("those of %s for %s", near, d.Month))
+		m, _ := hours.Instant(d, 0, time.UTC)
+		say := "those of " + filled[d.Month].String() + " for " + d.Month.String()
+		if filled[d.Month] > 0 && m >= windows.From-daysBefore*1440 && m < windows.To && !slices.Contains(missing, say) {
+			missing = append(missing, say)
+		}
+	}
+	given := c.normals.Months
+	c.normals.Months = map[time.Month]site.Normal{}
+	for m := time.January; m <= time.December; m++ {
+		if near, ok := filled[m]; ok {
+			c.normals.Months[m] = given[near]
+		} else if n, ok := given[m]; ok {
+			c.normals.Months[m] = n
 		}
 	}
 	if len(missing) > 0 {
