@@ -41,6 +41,9 @@ func TestCorners(t *testing.T) {
 		// Ann is there from 12: a ends at 11:30 at the earliest.
 		{"a maximum wait pulls the earlier task along", "people: {Ann: {hours: [daily 12:00-18:00]}, Bob: {}}",
 			"  a: {at: quay, hours: 1 h, who: Bob}\n  b: {at: quay, hours: 1 h, who: Ann, after: {a: {max: 30 min}}}", "05 13:00"},
+		// The same where Ann could do a as well, but only from 12 on.
+		{"a maximum wait pulls somebody's task along", "people: {Ann: {hours: [daily 12:00-18:00]}, Bob: {}}",
+			"  a: {at: quay, hours: 1 h, people: 1}\n  b: {at: quay, hours: 1 h, who: Ann, after: {a: {max: 30 min}}}", "05 13:00"},
 		// One watcher for two welds in one workface: both at once, 8 to 10, watched until 11.
 		{"one watcher keeps two watches in a workface", "people: {Ann: {}, Bob: {}, Cid: {tickets: [fire watch]}}",
 			"  v: {kind: weld, at: quay/deck, hours: 2 h, needs: {Ann: 1}}\n  w: {kind: weld, at: quay/deck, hours: 2 h, needs: {Bob: 1}}", "05 11:00"},
