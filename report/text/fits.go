@@ -37,6 +37,7 @@ func Fits(w io.Writer, r *plan.Report, o Options) error {
 			p.proof(side, r.LowToo && side == r.Likely)
 		}
 	}
+	p.orders(a)
 	p.notes(r)
 	p.gap()
 	p.para("", agenda.Care)

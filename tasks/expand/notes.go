@@ -33,6 +33,7 @@ func (x *expander) notes() {
 			}
 		}
 	}
+	x.aside(add)
 	for _, k := range x.w.Job.Kit {
 		if k.Gives > 0 {
 			x.generator(k, add)

@@ -405,6 +405,9 @@ func (r *Rigging) inWind(j *Judgement) {
 	if err == nil {
 		j.Wind = &res
 	}
+	if l.Measures == "" {
+		j.Ask = append(j.Ask, "who measures the gust, with what, and where")
+	}
 	if l.Gust.Pos.Given() {
 		j.add("wind", true, res.Result, err)
 	}
