@@ -132,10 +132,14 @@ func FitWords(w *expand.Work, p *tasks.Place, in hours.Span) []string {
 	return out
 }
 
-// ClosedWords gives the reasons of the hours that are closed, one line for each run of like hours: of
-// overlapping reasons the first.
+// ClosedWords gives the reasons of the hours that are closed, one line for each run of hours closed
+// by the same limits, with the numbers of its first: of overlapping reasons the first.
 func ClosedWords(w *expand.Work, p *tasks.Place, x Weathered) []string {
-	var out []string
+	type run struct {
+		hours.Span
+		key, why string
+	}
+	var runs []run
 	told := hours.Minute(math.MinInt64)
 	for _, c := range x.Closed {
 		s := hours.Span{From: max(hours.Minute(c.From), told), To: hours.Minute(c.To)}
@@ -143,9 +147,26 @@ func ClosedWords(w *expand.Work, p *tasks.Place, x Weathered) []string {
 			continue
 		}
 		told = s.To
-		out = append(out, Between(s, Zone(w, p))+" "+c.Why)
+		key := strings.Map(wordsOnly, c.Why)
+		if n := len(runs); n > 0 && runs[n-1].To == s.From && runs[n-1].key == key {
+			runs[n-1].To = s.To
+			continue
+		}
+		runs = append(runs, run{s, key, c.Why})
+	}
+	var out []string
+	for _, r := range runs {
+		out = append(out, Between(r.Span, Zone(w, p))+" "+r.why)
 	}
 	return out
+}
+
+// wordsOnly drops what numbers are written with.
+func wordsOnly(r rune) rune {
+	if r >= '0' && r <= '9' || r == '.' || r == '-' {
+		return -1
+	}
+	return r
 }
 
 // WeatherWords writes the weather of a span that a place is planned with, and the average day

@@ -26,6 +26,22 @@ type answerForm struct {
 	Governing []causeForm    `json:"governing"`
 	Proof     *proofForm     `json:"proof"`
 	CutShort  bool           `json:"cut_short"`
+	Days      []dayForm      `json:"days,omitempty"`        // sun, tide and weather, where the file tells them
+	Getaways  []getawayForm  `json:"getting_off,omitempty"` // craft that came in on the tide
+}
+
+// dayForm is what nature does on one day of the window.
+type dayForm struct {
+	Date string   `json:"date"`
+	Says []string `json:"says"`
+	name string   // "Tue 6 Apr"
+}
+
+// getawayForm says whether a craft gets off again.
+type getawayForm struct {
+	Place  string `json:"place"`
+	Neaped bool   `json:"neaped"`
+	Says   string `json:"says"`
 }
 
 type fitsForm struct {
@@ -70,6 +86,7 @@ func answerOf(a *plan.Answer, basis string, low bool) answerForm {
 		Earliest: siteMoment(a, a.Bound), Why: clean.Line(a.BoundWhy), Best: a.Best, Late: a.Late, InHand: count(a, a.InHand),
 		Deadlines: deadlinesOf(a), Governing: causesOf(a, a.Governing), Proof: proofOf(a, low), CutShort: a.CutShort,
 	}
+	f.Days, f.Getaways = daysOfNature(a), getaways(a)
 	if a.Plan != nil {
 		f.Finish = siteMoment(a, a.Finish)
 		if gap(a) != "-" {

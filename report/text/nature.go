@@ -14,25 +14,39 @@ import (
 // nature prints sun, tide, weather and the hours that they leave, day by day of the window, where the
 // job file tells the tide or the weather there.
 func (p *page) nature(a *plan.Answer) {
+	list := daysOfNature(a)
+	if len(list) == 0 {
+		return
+	}
+	p.gap()
+	p.para("", "The days at "+agenda.PlaceLabel(a.Work.Window.Place)+": sun, tide, weather planned with, and the hours that they leave")
+	for _, d := range list {
+		p.para("  ", d.name+": "+strings.Join(d.Says, "; "))
+	}
+}
+
+// daysOfNature gives what nature does on each day of the window; none where the job file tells
+// neither tide nor weather.
+func daysOfNature(a *plan.Answer) []dayForm {
 	win := a.Work.Window
 	zone := agenda.Zone(a.Work, win.Place)
-	told := false
+	var out []dayForm
 	for d := win.DayOne(); ; d = d.Add(1) {
 		from, _ := hours.Instant(d, 0, zone)
-		if from >= win.Closes {
-			return
-		}
 		words := agenda.DayWords(a.Work, win.Place, d)
-		if len(words) == 0 {
-			return
+		if from >= win.Closes || len(words) == 0 {
+			return out
 		}
-		if !told {
-			told = true
-			p.gap()
-			p.para("", "The days at "+agenda.PlaceLabel(win.Place)+": sun, tide, weather planned with, and the hours that they leave")
-		}
-		p.para("  ", agenda.ShortDay(from+720, zone)+": "+strings.Join(words, "; "))
+		out = append(out, dayForm{Date: d.String(), Says: words, name: agenda.ShortDay(from+720, zone)})
 	}
+}
+
+func getaways(a *plan.Answer) []getawayForm {
+	var out []getawayForm
+	for _, g := range agenda.Getaways(a.Work) {
+		out = append(out, getawayForm{g.Place.Name, g.Neaped, g.Words})
+	}
+	return out
 }
 
 // curing prints how a film's cure adds up, midnight by midnight and at noon, and the weather that a
