@@ -66,7 +66,7 @@ var onlyHere = map[string][]string{
 	"github.com/arran4/golang-ical":  {"report/export"},
 	"github.com/rickar/cal/v2":       {"tasks/jobfile", "tasks/hours"},
 	"github.com/teambition/rrule-go": {"tasks/hours", "report/export"},
-	"github.com/gdamore/tcell/v2":    {"report/screen"},
+	"github.com/gdamore/tcell/v2":    {"report/screen", "cmd/sailby"},
 }
 
 func TestWhoMayImportWhom(t *testing.T) {

@@ -90,12 +90,12 @@ func TestReplan(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	after, err := p.Replan(t.Context(), []tasks.Setting{{Path: []string{"tasks", "try the gate", "hours"}, Value: "2 h"}})
+	after, err := p.Replan(t.Context(), []tasks.Setting{{Path: []string{"tasks", "prime welds", "hours"}, Value: "2 h"}})
 	if err != nil {
 		t.Fatal(err)
 	}
 	if before.Likely.Plan == nil || after.Likely.Plan == nil || after.Likely.Finish <= before.Likely.Finish {
-		t.Errorf("finish %d, with an hour more of the last task %d", before.Likely.Finish, after.Likely.Finish)
+		t.Errorf("finish %d, with more of the last task %d", before.Likely.Finish, after.Likely.Finish)
 	}
 	var faults tasks.Faults
 	if _, err := p.Replan(t.Context(), []tasks.Setting{{Path: []string{"tasks", "try the gate", "hours"}, Value: "2 m"}}); !errors.As(err, &faults) {
