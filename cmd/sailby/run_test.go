@@ -90,7 +90,7 @@ func TestReplan(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	after, err := p.Replan(t.Context(), []tasks.Setting{{Path: []string{"tasks", "prime welds", "hours"}, Value: "2 h"}})
+	after, err := p.Replan(t.Context(), []tasks.Setting{{Path: []string{"tasks", "prime welds", "hours"}, Value: "75 min"}})
 	if err != nil {
 		t.Fatal(err)
 	}
