@@ -13,7 +13,7 @@ var (
 	byNetwork = []string{"./plan/network -rapid.shrinktime=1ms"}
 	byProblem = []string{"./plan/problem", "./plan/settle -run TestLattice -rapid.shrinktime=1ms"}
 	byContent = []string{"./plan/solve"}
-	byPlans   = []string{"./plan/settle -run TestCorners|TestBoundAndPlan -rapid.shrinktime=1ms", "./plan/settle -run TestLattice|TestOffLattice -rapid.shrinktime=1ms"}
+	byPlans   = []string{"./plan/solve", "./plan/settle -run TestBoundAndPlan -rapid.shrinktime=1ms", "./plan/settle -run TestLattice|TestOffLattice -rapid.shrinktime=1ms"}
 	bySetBy   = []string{"./plan/settle -run TestSetBy -rapid.shrinktime=1ms"}
 	byLeeway  = []string{"./plan/settle -run TestLeeway -rapid.shrinktime=1ms"}
 	byChecker = []string{"./plan/check -rapid.shrinktime=1ms"}

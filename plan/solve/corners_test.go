@@ -1,11 +1,12 @@
-package settle
+package solve
 
 import (
-	"context"
 	"testing"
 
-	"sailby/plan"
-	"sailby/tasks/jobfile"
+	"sailby/plan/check"
+	"sailby/plan/network"
+	"sailby/plan/problem"
+	"sailby/tasks/hours"
 )
 
 // TestCorners: small jobs whose best finish is worked out by hand beside each, one for each thing
@@ -60,7 +61,7 @@ func TestCorners(t *testing.T) {
 		{"work that changes hands", "people: {Ann: {hours: [daily 08:00-12:00]}, Bob: {hours: [daily 12:00-18:00]}}",
 			"  a: {at: quay, hours: 5 h, people: 1, may change hands: yes, in one go: yes}", "05 13:00"},
 	} {
-		job, err := jobfile.ReadBytes("job.yaml", []byte(`
+		p := compile(t, `
 job: corner
 zone: Africa/Abidjan
 begin: 2027-04-05 06:00
@@ -68,23 +69,26 @@ places:
   shop: {open: [daily 08:00-16:00]}
   quay: {open: [daily 08:00-18:00], face factor: 1, fire watch: 60 min, mains: 10 kVA, steel temperature: 10 C, workfaces: {deck: {}, hold: {}, tank: {people: 2}}}
 window: {place: quay, opens: 2027-04-05 08:00, closes: 2027-04-06 18:00}
-`+tc.head+"\ntasks:\n"+tc.tasks), nil)
-		if err != nil {
-			t.Errorf("%s: %v", tc.name, err)
+`+tc.head+"\ntasks:\n"+tc.tasks)
+		p = problem.Compile(p.Work.Carry())
+		b, conflict := network.Propagate(p, network.Off{})
+		if conflict != nil {
+			t.Errorf("%s: %+v", tc.name, conflict)
 			continue
 		}
-		rep, err := Ask(context.Background(), job, Options{Only: true, Ticks: askTicks})
-		if err != nil {
-			t.Errorf("%s: %v", tc.name, err)
+		res := Find(p, b, Options{Ticks: 20_000})
+		if res.Best == nil {
+			t.Errorf("%s: no plan found", tc.name)
 			continue
 		}
-		a := rep.Likely
-		if a.Verdict != plan.Fits {
-			t.Errorf("%s: %v", tc.name, a.Verdict)
-			continue
+		s := Compact(p, res.Best)
+		made := Plan(p, s)
+		for _, br := range check.Plan(p.Work, made) {
+			t.Errorf("%s: %s", tc.name, br)
 		}
-		if got := a.Finish.In(job.Zone).Format("02 15:04"); got != tc.finish {
-			t.Errorf("%s: finished %s, want %s:%s", tc.name, got, tc.finish, show(a.Work, a.Plan))
+		got := (p.Base + hours.Minute(s.Score.Finish)).In(p.Work.Job.Zone).Format("02 15:04")
+		if got != tc.finish {
+			t.Errorf("%s: finished %s, want %s: starts %v, finishes %v", tc.name, got, tc.finish, s.Start, s.Finish)
 		}
 	}
 }
