@@ -12,11 +12,12 @@ import (
 	"sailby/tasks/expand"
 )
 
-// The work of the learning search, in its own ticks: quick is a small share of a second, enough
-// to close most jobs; thorough is for those that neither plan nor proof has settled. Each trial
+// The work of the learning search, in its own ticks: quick is a share of a second, enough
+// to close most jobs (less beside the likely hours); thorough is for those that neither plan nor proof has settled. Each trial
 // of a contradiction's member is bounded by a number of conflicts.
 const (
-	quickLearning    = 1_500_000
+	quickLearning    = 6_000_000
+	besideLearning   = 2_000_000
 	thoroughLearning = 40_000_000
 	memberConflicts  = 2_000
 )
@@ -35,6 +36,9 @@ func (a *asked) learning(best *solve.Schedule) *solve.Schedule {
 	}
 	a.say("proofs")
 	o := learn.Options{Ticks: quickLearning, Stop: a.stop, Seed: a.o.Seed}
+	if a.work.Basis.Maybes || a.work.Basis.End != expand.Likely {
+		o.Ticks = besideLearning
+	}
 	if !fits {
 		o.Ticks = thoroughLearning
 	}
