@@ -146,7 +146,7 @@ func (r *reader) readVehicles(f *fields) {
 			}
 		}
 		if v.TowedBy != "" && !has(others, v.TowedBy) {
-			r.unknown(v.Pos, fmt.Sprintf("vehicle %q: towed by: ", v.Name), "vehicle", v.TowedBy, others)
+			r.faultAt(v.Pos, r.among(v.TowedBy, others, "declare it under `vehicles`"), "vehicle %q: towed by: no vehicle is called %s", v.Name, short(v.TowedBy))
 		}
 	}
 	for _, kv := range f.pairs("carriage") {
