@@ -124,43 +124,6 @@ func (s *search) take() bool {
 	return s.tighten()
 }
 
-// breed makes some schedules.
-func (s *search) breed(b *breeder) outcome {
-	for k := 0; k < breedAtOne; k++ {
-		s.ticks += int64(b.n) * 16
-		b.step()
-		if b.best.end < s.value && !s.adopt(b.best) {
-			return over
-		}
-		if s.stopped() {
-			return stopped
-		}
-	}
-	return tired
-}
-
-// breedAtOne is how many schedules are made in one turn.
-const breedAtOne = 100
-
-// adopt notes a schedule found outside the engine.
-func (s *search) adopt(x *beast) bool {
-	s.value = x.end
-	if s.best == nil {
-		s.best = make([]int32, len(s.now)/2)
-	}
-	s.starts = make([]int, 0, len(s.start))
-	s.modes = make([]int, len(s.start))
-	for i, side := range s.start {
-		s.best[side/2] = x.start[i]
-		s.starts = append(s.starts, int(x.start[i]))
-	}
-	s.base = s.starts
-	if s.opt.Found != nil {
-		s.opt.Found(append([]int(nil), s.starts...), int(s.value))
-	}
-	return s.tighten() && s.ok()
-}
-
 // ok settles the root.
 func (s *search) ok() bool {
 	if !s.settle() {
@@ -175,48 +138,6 @@ func (s *search) tighten() bool {
 		s.dead = true
 	}
 	return !s.dead
-}
-
-// hint takes over a plan that is known; one that does not fit the problem is left alone.
-func (s *search) hint() {
-	n := len(s.start)
-	if n == 0 || len(s.opt.Hint) != n || s.opt.Modes != nil && len(s.opt.Modes) != n {
-		return
-	}
-	s.base, s.best = s.opt.Hint, make([]int32, len(s.now)/2)
-	for i, v := range s.base {
-		x, w := &s.acts[i], s.acts[i].times[0]
-		if s.opt.Modes != nil {
-			k := s.opt.Modes[i]
-			if k < 0 || k >= len(s.p.Acts[i].Modes) {
-				s.base, s.best = nil, nil
-				return
-			}
-			w = s.p.Acts[i].Modes[k].Time
-			if len(x.modes) > 0 {
-				s.best[x.modes[k]/2] = 1
-			}
-		}
-		s.best[s.start[i]/2] = clip(v)
-		if s.start[i] != s.finish[i] {
-			s.best[s.finish[i]/2] = s.grids[w].finish(clip(v))
-		}
-	}
-}
-
-// begin takes over what is known and settles the root; false if that is the end of the search.
-func (s *search) begin() bool {
-	s.value = int32(s.p.End) + 1
-	s.room = firstKept
-	s.actOf = map[side]int{}
-	for i, x := range s.start {
-		s.actOf[x] = i
-	}
-	s.hint()
-	if s.opt.Best > 0 && s.opt.Best <= s.p.End {
-		s.value = int32(s.opt.Best)
-	}
-	return s.tighten() && s.ok()
 }
 
 // result says what has been found out.
@@ -247,72 +168,4 @@ func (s *search) stopped() bool {
 		return s.opt.Stop()
 	}
 	return false
-}
-
-// choose gives the next decision, false if every start is settled. Where the best plan known has
-// a say it is followed; else things are done early.
-func (s *search) choose(early bool) (fact, bool) {
-	for !early {
-		f, ok := s.atoms.take(s.level())
-		if !ok {
-			break
-		}
-		if s.holds(f) || s.fails(f) {
-			continue
-		}
-		if x := int(f.s / 2); x < len(s.best) && s.best[x] >= f.v {
-			return f, true
-		}
-		return f.not(), true
-	}
-	pick := side(-1)
-	for _, x := range s.start {
-		if !s.fixed(x) && (pick < 0 || s.now[x] < s.now[pick] || s.now[x] == s.now[pick] && s.now[x^1] > s.now[pick^1]) {
-			pick = x
-		}
-	}
-	if pick >= 0 {
-		if f, ok := s.modeFor(pick); ok {
-			return f, true
-		}
-		return fact{pick ^ 1, -s.now[pick]}, true
-	}
-	if s.backs != s.turns { // a level was taken back since
-		s.backs, s.modal, s.loose = s.turns, 0, 0
-	}
-	for ; s.modal < len(s.acts); s.modal++ {
-		if f, ok := s.modeFor(s.start[s.modal]); ok {
-			return f, true
-		}
-	}
-	// what is left is as early as the starts allow; of two modes that both hold one is enough
-	for ; s.loose < side(len(s.now)); s.loose += 2 {
-		if x := s.loose; !s.fixed(x) {
-			return fact{x ^ 1, -s.now[x]}, true
-		}
-	}
-	return fact{}, false
-}
-
-// modeFor gives a decision on who does the activity that begins with side x, if that is open: the
-// mode that is done first.
-func (s *search) modeFor(x side) (fact, bool) {
-	i := s.actOf[x]
-	best, least := side(-1), far
-	for k, y := range s.acts[i].modes {
-		switch {
-		case s.now[y] == 1:
-			return fact{}, false
-		case s.now[y^1] == 0: // ruled out
-			continue
-		}
-		g := s.acts[i].byMode[k]
-		if f := g.finish(s.now[x]); f < least {
-			best, least = y, f
-		}
-	}
-	if best < 0 {
-		return fact{}, false
-	}
-	return fact{best, 1}, true
 }

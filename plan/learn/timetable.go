@@ -1,15 +1,5 @@
 package learn
 
-import "sort"
-
-// A user is an activity as a resource sees it: it holds amount from its start to its finish.
-type user struct {
-	start  side
-	finish side  // the finish is the lower side of this, plus length
-	length int32 // where finish is start: the fixed length; else 0
-	amount int32
-}
-
 // timetable is a resource with a capacity at every minute, by compulsory parts: whatever the
 // rest of the plan, an activity runs from its latest start to its earliest finish if these are in
 // that order. The sum of these parts is the profile; where it is above the capacity there is no
@@ -37,9 +27,6 @@ type timetable struct {
 	most     int32     // its greatest level
 }
 
-// covering is an activity that covers a point, with the later entry of its two facts.
-type covering struct{ user, amount, last int32 }
-
 func newTimetable(e *engine, capacity int32, users []user) {
 	c := &timetable{id: int32(len(e.rules)), capacity: capacity, users: users, key: make([]int32, len(users)),
 		parts: make([]stretch, len(users)), seen: make([]view, len(users))}
@@ -54,17 +41,6 @@ func newTimetable(e *engine, capacity int32, users []user) {
 	}
 	e.attach(c, sides)
 }
-
-func (e *engine) latestStart(u *user) int32    { return -e.now[u.start^1] }
-func (e *engine) earliestFinish(u *user) int32 { return e.now[u.finish] + u.length }
-func (e *engine) latestFinish(u *user) int32   { return u.length - e.now[u.finish^1] }
-
-// startBy and finishFrom are the facts that the user starts at t or before, and that it finishes
-// at t or later.
-func (u *user) startBy(t int32) fact    { return fact{u.start ^ 1, -t} }
-func (u *user) startFrom(t int32) fact  { return fact{u.start, t} }
-func (u *user) finishFrom(t int32) fact { return fact{u.finish, t - u.length} }
-func (u *user) finishBy(t int32) fact   { return fact{u.finish ^ 1, u.length - t} }
 
 // order sorts ids by key; they are nearly in order already.
 func order(ids, key []int32) {
@@ -249,58 +225,4 @@ func (c *timetable) earlier(e *engine, i int32) bool {
 		}
 	}
 	return true
-}
-
-// explain gives the activities that leave the user too little at a point, and that it would be
-// there. A point that is just enough for f is tried before the one of the run.
-func (c *timetable) explain(e *engine, f fact, w why, idx int32, out []fact) []fact {
-	u, base := &c.users[w.who], len(out)
-	if f.s == u.start {
-		out = append(out, u.finishFrom(f.v))
-		if out = c.covers(e, f.v-1, w.who, idx, out); len(out) > base+1 {
-			return out
-		}
-		out = append(out[:base], u.finishFrom(w.at+1))
-		return c.covers(e, w.at, w.who, idx, out)
-	}
-	point := u.length - f.v // [finish <= point]
-	out = append(out, u.startBy(point))
-	if out = c.covers(e, point, w.who, idx, out); len(out) > base+1 {
-		return out
-	}
-	out = append(out[:base], u.startBy(w.at))
-	return c.covers(e, w.at, w.who, idx, out)
-}
-
-// covers adds the facts by which activities other than skip cover t so far that they leave too
-// little for skip (for nobody, if skip is -1), as things were before entry idx. Of those that could
-// be left out the ones that came last go. It adds nothing if they leave enough.
-func (c *timetable) covers(e *engine, t, skip, idx int32, out []fact) []fact {
-	spare := -c.capacity - 1
-	if skip >= 0 {
-		spare += c.users[skip].amount
-	}
-	c.cover = c.cover[:0]
-	for k := range c.users {
-		u := &c.users[k]
-		a, b := u.startBy(t), u.finishFrom(t+1)
-		if int32(k) == skip || e.before(a.s, idx) < a.v || e.before(b.s, idx) < b.v {
-			continue
-		}
-		spare += u.amount
-		c.cover = append(c.cover, covering{int32(k), u.amount, max(e.entry(a), e.entry(b))})
-	}
-	if spare < 0 {
-		return out
-	}
-	sort.SliceStable(c.cover, func(i, j int) bool { return c.cover[i].last > c.cover[j].last })
-	for _, k := range c.cover {
-		if k.amount <= spare && e.list[k.last].level > 0 {
-			spare -= k.amount
-			continue
-		}
-		u := &c.users[k.user]
-		out = append(out, u.startBy(t), u.finishFrom(t+1))
-	}
-	return out
 }

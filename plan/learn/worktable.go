@@ -1,10 +1,6 @@
 package learn
 
-import (
-	"cmp"
-	"slices"
-	"sort"
-)
+import "sort"
 
 // worker is a user that is only there in some minutes between its start and its finish, and only
 // while a condition holds.
@@ -41,29 +37,6 @@ type worktable struct {
 	cover    []covering
 }
 
-// event is a change of use.
-type event struct {
-	at, by, who int32
-	team        int
-}
-
-// stretch is a compulsory part; from is to where there is none.
-type stretch struct{ from, to int32 }
-
-// view is what a look at a user depends on: its bounds and the profile.
-type view struct{ est, lst, ect, lct, version int32 }
-
-func (e *engine) view(u *user, version int32) view {
-	return view{e.now[u.start], e.latestStart(u), e.earliestFinish(u), e.latestFinish(u), version}
-}
-
-func teamBit(team int) uint64 {
-	if team == 0 {
-		return 0
-	}
-	return 1 << min(team, 63)
-}
-
 func newWorktable(e *engine, capacity int32, all []worker) {
 	c := &worktable{id: int32(len(e.rules)), capacity: capacity, all: all, parts: make([]stretch, len(all)), seen: make([]view, len(all)), moved: make([]bool, len(all))}
 	seen := map[side]bool{}
@@ -92,105 +65,6 @@ func newWorktable(e *engine, capacity int32, all []worker) {
 
 // sure says whether the condition of w holds.
 func (w *worker) sure(e *engine) bool { return w.on.s < 0 || e.holds(w.on) }
-
-// update finds the compulsory parts that have changed and puts their events in the place of the
-// old ones; false if there are none.
-func (c *worktable) update(e *engine) bool {
-	c.fresh = c.fresh[:0]
-	changed := false
-	for i := range c.all {
-		w := &c.all[i]
-		part := stretch{e.latestStart(&w.user), e.earliestFinish(&w.user)}
-		if part.from >= part.to || !w.sure(e) {
-			part = stretch{}
-		}
-		if part == c.parts[i] {
-			continue
-		}
-		changed = true
-		c.parts[i], c.moved[i] = part, true
-		if part.from == part.to {
-			continue
-		}
-		who := int32(i)
-		if w.mask == nil {
-			c.fresh = append(c.fresh, event{part.from, w.amount, who, w.team}, event{part.to, -w.amount, who, w.team})
-			continue
-		}
-		for k := w.mask.find(part.from); k < len(w.mask) && w.mask[k].from < part.to; k++ {
-			c.fresh = append(c.fresh, event{max(part.from, w.mask[k].from), w.amount, who, w.team},
-				event{min(part.to, w.mask[k].to), -w.amount, who, w.team})
-		}
-	}
-	e.ticks += int64(len(c.all))
-	if !changed {
-		return false
-	}
-	slices.SortFunc(c.fresh, func(a, b event) int { return cmp.Compare(a.at, b.at) })
-	kept := c.events[:0]
-	for _, ev := range c.events {
-		if !c.moved[ev.who] {
-			kept = append(kept, ev)
-		}
-	}
-	c.events = mergeEvents(kept, c.fresh)
-	clear(c.moved)
-	e.ticks += int64(len(c.events))
-	c.version++
-	return true
-}
-
-// mergeEvents puts the events of b among those of a, from behind.
-func mergeEvents(a, b []event) []event {
-	i, j := len(a)-1, len(b)-1
-	a = append(a, b...)
-	for k := len(a) - 1; j >= 0; k-- {
-		if i >= 0 && a[i].at > b[j].at {
-			a[k] = a[i]
-			i--
-		} else {
-			a[k] = b[j]
-			j--
-		}
-	}
-	return a
-}
-
-// build makes the profile and gives its greatest level.
-func (c *worktable) build(e *engine) int32 {
-	if !c.update(e) {
-		return c.most
-	}
-	c.from, c.level, c.teams = c.from[:0], c.level[:0], c.teams[:0]
-	clear(c.crowd)
-	used, most, bits := int32(0), int32(0), uint64(0)
-	for i := 0; i < len(c.events); {
-		t := c.events[i].at
-		for ; i < len(c.events) && c.events[i].at == t; i++ {
-			ev := &c.events[i]
-			if ev.team == 0 {
-				used += ev.by
-				continue
-			}
-			old := c.crowd[ev.team]
-			c.crowd[ev.team] += ev.by
-			switch {
-			case old == 0:
-				used++
-				bits |= teamBit(ev.team)
-			case c.crowd[ev.team] == 0:
-				used--
-				bits &^= teamBit(ev.team)
-			}
-		}
-		c.from = append(c.from, t)
-		c.level = append(c.level, used)
-		c.teams = append(c.teams, bits)
-		most = max(most, used)
-	}
-	c.most = most
-	return most
-}
 
 // tight says whether segment k leaves worker w too little. One whose team is there already
 // takes nothing more.
@@ -314,92 +188,4 @@ func (c *worktable) earlier(e *engine, i int32) bool {
 		k++
 	}
 	return true
-}
-
-// explain gives the activities that leave worker w.who too little at a minute, and that it would
-// be there.
-func (c *worktable) explain(e *engine, f fact, w why, idx int32, out []fact) []fact {
-	u := &c.all[w.who]
-	base := len(out)
-	try := func(t int32, there ...fact) bool {
-		out = append(out[:base], there...)
-		if u.on.s >= 0 && f.s != u.on.s^1 {
-			out = append(out, u.on)
-		}
-		n := len(out)
-		out = c.covers(e, t, w.who, idx, out)
-		return len(out) > n
-	}
-	switch f.s {
-	case u.start:
-		if t := u.mask.firstFrom(f.v - 1); t >= w.at || !try(t, u.finishFrom(t+1)) {
-			try(w.at, u.finishFrom(w.at+1))
-		}
-	case u.finish ^ 1:
-		if t := u.mask.lastBefore(u.length - f.v + 1); t <= w.at || !try(t, u.startBy(t)) {
-			try(w.at, u.startBy(w.at))
-		}
-	default:
-		try(w.at, u.startBy(w.at), u.finishFrom(w.at+1))
-	}
-	return out
-}
-
-// covers adds the facts by which workers other than skip use so much at t that they leave too
-// little for skip, as things were before entry idx.
-func (c *worktable) covers(e *engine, t, skip, idx int32, out []fact) []fact {
-	spare := -c.capacity - 1
-	if skip >= 0 {
-		spare += c.all[skip].amount
-	}
-	c.cover = c.cover[:0]
-	for k := range c.all {
-		w := &c.all[k]
-		a, b := w.startBy(t), w.finishFrom(t+1)
-		if int32(k) == skip || skip >= 0 && w.team > 0 && w.team == c.all[skip].team || !w.mask.has(t) || e.before(a.s, idx) < a.v || e.before(b.s, idx) < b.v {
-			continue
-		}
-		last := max(e.entry(a), e.entry(b))
-		if w.on.s >= 0 {
-			if e.before(w.on.s, idx) < w.on.v {
-				continue
-			}
-			last = max(last, e.entry(w.on))
-		}
-		if w.team > 0 && c.shared(w.team, int32(k), last) {
-			continue
-		}
-		spare += w.amount
-		c.cover = append(c.cover, covering{int32(k), w.amount, last})
-	}
-	if spare < 0 {
-		return out
-	}
-	sort.SliceStable(c.cover, func(i, j int) bool { return c.cover[i].last > c.cover[j].last })
-	for _, k := range c.cover {
-		if k.amount <= spare && e.list[k.last].level > 0 {
-			spare -= k.amount
-			continue
-		}
-		w := &c.all[k.user]
-		out = append(out, w.startBy(t), w.finishFrom(t+1))
-		if w.on.s >= 0 {
-			out = append(out, w.on)
-		}
-	}
-	return out
-}
-
-// shared says whether somebody of the team is among those that cover already; the one with the
-// earlier facts stays.
-func (c *worktable) shared(team int, k, last int32) bool {
-	for i := range c.cover {
-		if v := &c.cover[i]; c.all[v.user].team == team {
-			if last < v.last {
-				v.user, v.last = k, last
-			}
-			return true
-		}
-	}
-	return false
 }
