@@ -34,11 +34,6 @@ type advice struct {
 func (a *advice) Error() string { return a.err.Error() }
 func (a *advice) Unwrap() error { return a.err }
 
-// advise makes an error with a way out.
-func advise(hint, format string, args ...any) error {
-	return &advice{fmt.Errorf(format, args...), hint}
-}
-
 // usage is a wrong command line.
 type usage struct{ text, hint string }
 

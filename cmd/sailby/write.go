@@ -2,7 +2,6 @@ package main
 
 import (
 	"errors"
-	"io"
 	"io/fs"
 	"os"
 	"path/filepath"
@@ -69,7 +68,7 @@ func writeTemp(path string, data []byte, mode fs.FileMode) (string, error) {
 
 // fill writes data, sees it onto the disk and closes the file.
 func fill(f *os.File, data []byte) error {
-	_, err := io.WriteString(f, string(data))
+	_, err := f.Write(data)
 	if err == nil {
 		err = f.Sync()
 	}

@@ -94,7 +94,10 @@ func (a *asked) core(c *network.Conflict) network.Off {
 func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 	free := network.Off{Link: off.Link, By: allActs(a.p), From: off.From}
 	far := problem.Compile(a.work.Remain())
-	b, _ := network.Propagate(far, free)
+	b, stuck := network.Propagate(far, free)
+	if stuck != nil { // something does not come again, however late: the dates are those of the window's own hours
+		b, _ = network.Propagate(a.p, free)
+	}
 	free.Calendar = allActs(a.p)
 	_, never := network.Propagate(far, free) // the waits alone contradict each other
 	dated := never == nil
@@ -177,23 +180,6 @@ func earliest(act *problem.Act, t int) (start, finish int) {
 		}
 	}
 	return start, finish
-}
-
-// runsOut says by how much a chain to a step at the site runs past its date with the hours carried
-// on past the window; ends is false where it is not the end of the window that leaves it no opening.
-func (a *asked) runsOut(off network.Off, i int) (over int, ends bool) {
-	if !a.p.Acts[i].Site {
-		return 0, false
-	}
-	carry := problem.Compile(a.work.Carry())
-	for k := range carry.Acts {
-		if len(carry.Acts[k].Modes) == 0 {
-			return 0, false
-		}
-	}
-	b, c := network.Propagate(carry, network.Off{Link: off.Link, From: off.From, By: allActs(carry)})
-	over = b.Finish[i] - carry.Acts[i].By
-	return over, c == nil && over > 0
 }
 
 func allActs(p *problem.Problem) map[int]bool {

@@ -99,7 +99,8 @@ func TestCalendarByTask(t *testing.T) {
 }
 
 func TestSameBytes(t *testing.T) {
-	if calendar(t, Options{}) != calendar(t, Options{}) {
+	first, second := calendar(t, Options{}), calendar(t, Options{})
+	if first != second {
 		t.Error("two exports differ")
 	}
 	moved := fixture.Report()

@@ -107,13 +107,12 @@ const defaultAllowance = 0.10
 // used is one consumable summed over the tasks, exact until it is rounded.
 type used struct {
 	Item
-	unit         string
-	sum, spare   float64
-	each         float64
-	packed       string
-	paint        *tasks.Paint
-	owed         float64 // of sum, what has no spare of its own
-	bottles, per string
+	unit       string
+	sum, spare float64
+	each       float64
+	packed     string
+	paint      *tasks.Paint
+	owed       float64 // of sum, what has no spare of its own
 }
 
 // consumables adds up what the site's tasks use up; allowance and spare come on top of the sum, and

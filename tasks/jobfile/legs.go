@@ -11,7 +11,6 @@ import (
 // way puts legs end to end, forwards from a moment or backwards to it.
 type way struct {
 	legs []tasks.Leg
-	pos  tasks.Pos
 }
 
 // after adds legs that follow each other from the minute at, and gives the end.
