@@ -252,6 +252,14 @@ func (c *checker) heldBy(first *row, at *tasks.Task, seen map[*tasks.Task]bool) 
 		case f.Place == c.w.Window.Place:
 			most = siteHolds
 		}
+		if f.InOneGo == nil && last.s.Working+last.s.SetUp <= int(most) {
+			for i := 1; i < len(last.p.Pieces); i++ {
+				if gap := (hours.Span{From: last.p.Pieces[i-1].To, To: last.p.Pieces[i].From}); !last.isMeal(gap) {
+					c.add("R25", last, "", c.when(gap.From, f.Place), "is left half done, and would turn")
+					break
+				}
+			}
+		}
 		if first.p.Start > last.p.Finish+most {
 			c.add("R25", first, mins(int(most)), mins(int(first.p.Start-last.p.Finish)), "comes too late on what %s has prepared", f.Label()).Other = last.s.Key()
 			continue

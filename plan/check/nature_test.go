@@ -132,6 +132,12 @@ func TestPreparedSteelIsCoatedInTime(t *testing.T) {
 			f.broken(c.rule, "grind has prepared")
 		})
 	}
+	left := newFix(t)
+	half := left.work("grind", tasks.Prep, left.deck, 60, need("fitter"))
+	left.put(half, "Tom", "04-06 17:30-18:00", "04-07 08:00-08:30")
+	p := left.coated("paint", left.deck, "04-07 09:00-10:00")
+	p.Task.Links = []tasks.Link{{Task: "grind"}}
+	left.broken("R25", "is left half done")
 	f := newFix(t)
 	f.weather(func(h int, w *site.Weather) {
 		if h == 33 {

@@ -62,6 +62,7 @@ func (p *page) curing(a *plan.Answer, i int, s *expand.Step) {
 			}
 			p.para(lead, f.Name+" "+f.Amount()+" ["+f.Origin.String()+"]"+mark(f.Origin.Soft()))
 		}
+		p.assumed(s, ps.Start)
 	}
 	if s.Class != expand.Cure || s.Rate == nil || ps.Finish <= ps.Start {
 		return
@@ -81,6 +82,25 @@ func (p *page) curing(a *plan.Answer, i int, s *expand.Step) {
 		parts = append(append(parts[:6:6], fmt.Sprintf("(%d more)", n-11)), parts[n-5:]...)
 	}
 	p.para("  cure      ", strings.Join(parts, ", "))
+}
+
+// assumed prints what the weather of a step rests on where it is that of the normals.
+func (p *page) assumed(s *expand.Step, at hours.Minute) {
+	series := s.Place.Hourly(s.Face)
+	if series == nil {
+		return
+	}
+	w, ok := series.At(int64(at))
+	if !ok || !strings.HasPrefix(w.Basis, "climate") {
+		return
+	}
+	for k, f := range s.Place.Climate.Assumed {
+		lead := "            "
+		if k == 0 {
+			lead = "  assumes   "
+		}
+		p.para(lead, f.Name+" "+f.Amount()+" ["+f.Origin.String()+"]"+mark(f.Origin.Soft()))
+	}
 }
 
 // steel writes the steel temperature of a minute, where it is known by the hour.

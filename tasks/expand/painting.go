@@ -248,6 +248,7 @@ func (x *expander) heldBy(t, at *tasks.Task, seen map[*tasks.Task]bool) {
 		if f.HoldsFor.Pos.Given() {
 			most = int(f.HoldsFor.Value)
 		}
+		x.notLeft(f, most)
 		out := Link{From: x.lastHands(f), To: x.first[t][0], ToEnd: tasks.Start, Min: NoMin, Max: most, Pos: f.Pos,
 			Why: f.Label() + " holds for " + quantity.Hours(most)}
 		if bad := x.spoils(f); bad != nil {
@@ -256,6 +257,22 @@ func (x *expander) heldBy(t, at *tasks.Task, seen map[*tasks.Task]bool) {
 			out.Why += ", in dry air"
 		}
 		x.w.Links = append(x.w.Links, out)
+	}
+}
+
+// notLeft keeps a preparation that takes no longer than it holds from being left half done: it goes in
+// one go, meals apart. What takes longer is gone over again, which is said.
+func (x *expander) notLeft(f *tasks.Task, most int) {
+	s := x.lastHands(f)
+	switch {
+	case f.InOneGo != nil:
+	case s.Working+s.SetUp <= most:
+		s.InOneGo, s.OverMeals = true, true
+	default:
+		note := "takes longer than it holds (" + quantity.Hours(most) + "): after a stop go over again what was done before it, or divide the task"
+		if !slices.Contains(s.Estimate.Notes, note) {
+			s.Estimate.Notes = append(s.Estimate.Notes, note)
+		}
 	}
 }
 

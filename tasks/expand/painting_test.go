@@ -78,6 +78,21 @@ func TestPreparationHoldsForSoLong(t *testing.T) {
 	} {
 		same(t, c.what, links(c.tasks), c.want)
 	}
+	for _, c := range []struct {
+		what, more string
+		oneGo      bool
+		noted      bool
+	}{
+		{"short enough: not left half done", "hours: 2 h", true, false},
+		{"longer than four hours over the face factor", "hours: 3 h", false, true},
+		{"its author lets it stop", "hours: 2 h, in one go: no", false, false},
+	} {
+		w := likely(t, "tasks: {grind: {kind: surface prep, at: pier, area: 2 m2, grade: St 3, "+c.more+"}, paint: {kind: coat, at: pier, area: 2 m2, coats: primer, after: grind}}")
+		s := w.step(t, "grind / surface prep")
+		if s.InOneGo != c.oneGo || strings.Contains(strings.Join(s.Estimate.Notes, " "), "takes longer than it holds") != c.noted {
+			t.Errorf("%s: in one go %v, notes %q", c.what, s.InOneGo, s.Estimate.Notes)
+		}
+	}
 	w := likely(t, "tasks: {wash: {kind: surface prep, at: pier, area: 2 m2, method: wash}, own: {kind: surface prep, at: pier, area: 2 m2, method: wash, standing: 30 min, why: dries}}")
 	same(t, "a wash dries two hours, or as the file says", w.keys(), "wash / surface prep, wash / drying, own / surface prep, own / dries")
 	same(t, "minutes", []int{w.Steps[1].Clock, w.Steps[3].Clock}, []int{120, 30})
