@@ -132,6 +132,7 @@ func TestDemonstrations(t *testing.T) {
 		{job: "narrows", want: plan.CannotFit, low: true},
 		{job: "narrows", changes: "second welder, staging", want: plan.Fits},
 		{job: "starter", want: plan.Fits, tasks: 6},
+		{job: "sluice", want: plan.Fits, tasks: 12},
 	} {
 		t.Run(c.job+" "+c.trip+c.changes, func(t *testing.T) {
 			path := filepath.Join("testdata/jobs", c.job, "job.yaml")

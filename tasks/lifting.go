@@ -28,11 +28,13 @@ type Lifting struct {
 	Gust     Amount // m/s, measured or forecast
 	Measures string // who measures the wind
 
-	Hands  *lift.Handling // nil: floor to knuckles, close, by the people of the task
-	Push   *lift.Push     // nil: level, good wheels, the people of the task
-	Second *SecondHook
-	Floor  Amount // kN/m2 that the landing place may carry
-	Lands  Amount // m2 that it lands on
+	Hands   *lift.Handling  // nil: floor to knuckles, close, by the people of the task
+	Push    *lift.Push      // nil: level, good wheels, the people of the task
+	NIOSH   *lift.NIOSHLift // nil: not asked for
+	Second  *SecondHook
+	InWater bool   // wholly under when it is taken up
+	Floor   Amount // kN/m2 that the landing place may carry
+	Lands   Amount // m2 that it lands on
 
 	Secured *Named  // the task that secures it: until then the gear is kept
 	Proved  *Named  // the task that proves an old part free

@@ -125,6 +125,7 @@ func (r *Rigging) Judge(joined []Join) (Judgement, error) {
 	}
 	j := Judgement{Stage: st, OK: true, Crew: lift.Crew(r.Way)}
 	r.byGear(&j)
+	r.byPeople(&j)
 	r.bySlings(&j)
 	r.onFloor(&j)
 	r.inWind(&j)
@@ -198,6 +199,19 @@ func (r *Rigging) byGear(j *Judgement) {
 	j.add(name, r.Way == lift.ByHands || r.Way == lift.ByTrolley, res, err)
 	if rated := r.rating(r.Kit); r.Way == lift.ByTrolley && rated > 0 {
 		j.add(name+", its rating", false, simple(name, j.Load.Heavy(), rated), nil)
+	}
+}
+
+// byPeople works out the revised NIOSH equation, and floating, where the file asks for them.
+func (r *Rigging) byPeople(j *Judgement) {
+	l := r.lifting()
+	if l.NIOSH != nil {
+		res, err := lift.NIOSH(j.Load, *l.NIOSH)
+		j.add("by the revised NIOSH equation, one person", true, res.Result, err)
+	}
+	if l.InWater {
+		res, err := lift.Afloat(j.Total, 0)
+		j.add("floating in sea water", true, res, err)
 	}
 }
 

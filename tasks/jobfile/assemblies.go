@@ -107,6 +107,7 @@ func (r *reader) part(a *tasks.Assembly, kv [2]*yaml.Node) *tasks.Part {
 			p.Material = "" // a grade without a density of its own is steel
 		}
 	}
+	p.Water, p.Silt, p.Rust, p.Allowance = f.value("water"), f.value("silt"), f.value("rust"), f.value("weight allowance")
 	f.shape(p)
 	f.where(p)
 	if len(r.faults) > faults {
@@ -118,7 +119,7 @@ func (r *reader) part(a *tasks.Assembly, kv [2]*yaml.Node) *tasks.Part {
 // shape reads which of the kinds of piece it is.
 func (f *fields) shape(p *tasks.Part) {
 	var is []string
-	for _, k := range []string{"plate", "section", "item", "bolts"} {
+	for _, k := range []string{"plate", "section", "item", "bolts", "weld metal", "paint film"} {
 		if f.tried(k) {
 			is = append(is, k)
 		}
@@ -142,8 +143,13 @@ func (f *fields) shape(p *tasks.Part) {
 		if v := f.lengths("bolts", 2); v != nil {
 			s.Kind, s.Thread, p.Length = lift.Bolts, v[0], v[1]
 		}
+	case "weld metal":
+		s.Kind = lift.Weld
+		p.Stated = f.value("weld metal")
+	case "paint film":
+		s.Kind, s.Film = lift.Paint, f.value("paint film")
 	case "item":
-		s.Kind = lift.Item
+		s.Kind, s.Volume = lift.Item, f.value("displaces")
 		p.Stated = f.value("item")
 	case "section":
 		word, _ := f.word("section")

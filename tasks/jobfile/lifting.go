@@ -49,6 +49,17 @@ var handsSection = section{name: "Hands", where: "tasks / NAME / hands", host: "
 	{name: "per hour", takes: aNumber, low: 1, high: 1000, usual: "up to 30", example: "60", says: "lifts an hour"},
 	{name: "twist", takes: anAmount, dim: quantity.Angle, low: 0, high: 180, usual: "0 deg", example: "45 deg", says: "of the body"},
 	{name: "slope", takes: yesNo, usual: "no", example: "yes", says: "on steps or a slope"},
+	{name: "NIOSH", takes: keysOf, sub: &nioshSection, example: "{out: 400 mm, up: 200 mm, travel: 600 mm, turn: 45 deg, grip: fair}", says: "the revised NIOSH equation, on request"},
+}}
+
+var nioshSection = section{name: "NIOSH lift", where: "tasks / NAME / hands / NIOSH", host: "tasks/to the gate/hands/NIOSH", says: "One end of a two-handed lift for the revised NIOSH lifting equation, worked out beside the guideline figures.", keys: []key{
+	{name: "out", takes: anAmount, dim: quantity.Length, low: 1, high: 2000, need: true, example: "400 mm", says: "from between the ankles to the hands (H)"},
+	{name: "up", takes: anAmount, dim: quantity.Length, low: 0, high: 3000, need: true, example: "200 mm", says: "from the floor to the hands (V)"},
+	{name: "travel", takes: anAmount, dim: quantity.Length, low: 0, high: 3000, need: true, example: "600 mm", says: "up or down (D)"},
+	{name: "turn", takes: anAmount, dim: quantity.Angle, low: 0, high: 180, usual: "0 deg", example: "45 deg", says: "to the side (A)"},
+	{name: "per minute", takes: aNumber, low: 0, high: 30, usual: "0.2", example: "1", says: "lifts a minute (F)"},
+	{name: "hours", takes: aNumber, low: 0.1, high: 8, usual: "1", example: "2", says: "hours at it"},
+	{name: "grip", takes: aWord, words: []string{"good", "fair", "poor"}, usual: "good", example: "fair", says: "how well the hands hold it"},
 }}
 
 var pushSection = section{name: "Pushing", where: "tasks / NAME / pushing", host: "tasks/to the gate/pushing", says: "People who push or pull a load on wheels, for the guideline forces of HSE.", keys: []key{
@@ -72,6 +83,7 @@ var bothKeys = []key{
 	{name: "weight allowance", takes: aNumber, low: 1, high: 3, usual: "by how the mass is known", example: "1.1", says: "factor on the mass for what is not known"},
 	{name: "floor", takes: anAmount, dim: quantity.Pressure, low: 0.001, high: 1000, example: "5 kPa", says: "what the landing place may carry; 1 kPa is 1 kN/m2"},
 	{name: "lands on", takes: anAmount, dim: quantity.Area, low: 1e-4, high: 1000, example: "0.4 m2", says: "area that it stands on when landed"},
+	{name: "in water", takes: yesNo, usual: "no", example: "yes", says: "wholly under when it is taken up: whether it floats is worked out, sealed bores staying dry"},
 	{name: "secured by", takes: aName, example: "resin", says: "the task that secures it: from the lift until that is done its gear is not free (R24)"},
 	{name: "proved free by", takes: aName, example: "fit frame", says: "the task that proves an old part free, with a cut-off pull (R24)"},
 	{name: "stiff with", takes: names, example: "frame/posts", says: "parts that must be on before it is lifted (R24)"},
@@ -116,6 +128,14 @@ func init() {
 	kitSection.keys = append(kitSection.keys, stowKeys...)
 	kitSection.keys = append(kitSection.keys, length("closed height", 1e4, "350 mm", "of a hoist, from what it hangs from to the hook when fully up"),
 		length("hung at", 1e5, "3.6 m", "what it hangs from above the floor"))
+	partSection.keys = append(partSection.keys,
+		key{name: "weld metal", takes: anAmount, dim: quantity.Mass, low: 0.001, high: 1e5, example: "4 kg", without: "plate", says: "welded onto the other parts, at their centre of gravity"},
+		key{name: "paint film", takes: anAmount, dim: quantity.Film, low: 10, high: 5000, example: "300 um", without: "plate", says: "dry film on all of the other parts"},
+		key{name: "displaces", takes: anAmount, dim: quantity.Volume, low: 0, high: 1e7, example: "12 L", without: "plate", beside: "item: 35 kg", says: "of an item: the water that it pushes aside, each"},
+		key{name: "water", takes: anAmount, dim: quantity.Volume, low: 0, high: 1e7, usual: "none", example: "40 L", says: "standing in an old part, each"},
+		key{name: "silt", takes: anAmount, dim: quantity.Volume, low: 0, high: 1e7, usual: "none", example: "15 L", says: "silt or growth in or on an old part, each"},
+		key{name: "rust", takes: anAmount, dim: quantity.Length, low: 0, high: 100, usual: "none", example: "2 mm", says: "rust scale over its surface"},
+		key{name: "weight allowance", takes: aNumber, low: 1, high: 3, usual: "by how its mass is known", example: "1.15", says: "factor on its mass for what is not known"})
 	assemblySection.keys = append(assemblySection.keys, stowKeys...)
 	assemblySection.keys = append(assemblySection.keys,
 		key{name: "old", takes: yesNo, usual: "no", example: "yes", says: "it sits in place: a lift of it says which task has proved it free (R24)"})
@@ -139,12 +159,18 @@ func (r *reader) liftingOf(t *tasks.Task, f *fields) {
 	if f.sec.find("secured by") == nil {
 		return
 	}
-	l := &tasks.Lifting{Allowance: f.amount("weight allowance", 0), Floor: kilopascals(f.amount("floor", 0)), Lands: f.amount("lands on", 0)}
+	l := &tasks.Lifting{InWater: f.yes("in water"), Allowance: f.amount("weight allowance", 0), Floor: kilopascals(f.amount("floor", 0)), Lands: f.amount("lands on", 0)}
 	for _, name := range r.partNames(f, "stiff with") {
 		l.Stiff = append(l.Stiff, tasks.Named{Name: name, Pos: f.pos("stiff with")})
 	}
 	if n := f.node("hands"); n != nil {
-		l.Hands = r.open(n, &handsSection, f.what+": hands").hands()
+		g := r.open(n, &handsSection, f.what+": hands")
+		l.Hands = g.hands()
+		if n := g.node("NIOSH"); n != nil {
+			q := r.open(n, &nioshSection, f.what+": hands: NIOSH")
+			l.NIOSH = &lift.NIOSHLift{Out: q.value("out"), Up: q.value("up"), Travel: q.value("travel"), Turn: q.value("turn"), PerMinute: q.value("per minute"), Hours: q.value("hours"),
+				Grip: map[string]lift.Coupling{"fair": lift.FairGrip, "poor": lift.PoorGrip}[q.choice("grip", "good")]}
+		}
 	}
 	if t.Kind == tasks.Lift {
 		r.liftOnly(l, f)

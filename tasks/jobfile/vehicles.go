@@ -49,7 +49,7 @@ var vehicleSection = section{name: "Vehicle", where: "vehicles / NAME", host: "v
 }}
 
 var carriageSection = section{name: "Carriage rule", where: "carriage / NAME", host: "carriage/ferry, gas", says: "What a ferry, a road or a tunnel lets a vehicle carry. It is flagged, never decided: the operator's answer counts.", keys: []key{
-	{name: "class", takes: aText, need: true, example: "acetylene", says: "what it is about, as under `class` of kit"},
+	{name: "class", takes: aText, need: true, example: "acetylene", says: "what it is about, as under `class` of kit; consumables are paint (L), thinner (L) and gas (bottles)"},
 	{name: "most", takes: aNumber, low: 0, high: 1e6, example: "50", says: "greatest amount in one vehicle; 0 is none at all"},
 	{name: "unit", takes: aText, usual: "pieces", example: "L", says: "of that amount"},
 	massOf("heaviest", "25 kg", "of one piece"),
