@@ -234,6 +234,11 @@ func (c *checker) holds() {
 func (c *checker) heldBy(first *row, at *tasks.Task, seen map[*tasks.Task]bool) {
 	for _, l := range at.Links {
 		f := c.named(l.Task)
+		if f != nil && (f.Kind == tasks.Test || f.Kind == tasks.SignOff) && !seen[f] && l.From != tasks.Start && c.firstHands(f) != nil {
+			seen[f] = true
+			c.heldBy(first, f, seen)
+			continue
+		}
 		if f == nil || f.Kind != tasks.Prep || seen[f] || l.From == tasks.Start || l.Max != nil {
 			continue
 		}

@@ -228,10 +228,15 @@ func (x *expander) holds() {
 	}
 }
 
-// heldBy looks for the preparations that the coat waits for, through washing and wiping.
+// heldBy looks for the preparations that the coat waits for, through washing, wiping, tests and sign-offs.
 func (x *expander) heldBy(t, at *tasks.Task, seen map[*tasks.Task]bool) {
 	for _, l := range at.Links {
 		f := x.byName[l.Task]
+		if f != nil && (f.Kind == tasks.Test || f.Kind == tasks.SignOff) && !x.absent[f] && !seen[f] && l.From != tasks.Start {
+			seen[f] = true // a look at the steel in between changes nothing
+			x.heldBy(t, f, seen)
+			continue
+		}
 		if f == nil || f.Kind != tasks.Prep || x.absent[f] || seen[f] || l.From == tasks.Start || l.Max != nil || !sameSurface(f, t) {
 			continue
 		}

@@ -73,6 +73,8 @@ func TestPreparationHoldsForSoLong(t *testing.T) {
 			"grind / surface prep finish -> start max 1560"},
 		{"through a wipe, which holds nothing and dries first", "grind: {kind: surface prep, at: pier, area: 2 m2, grade: St 3}, wipe: {kind: surface prep, at: pier, area: 2 m2, method: solvent wipe, after: grind}, paint: {kind: coat, at: pier, area: 2 m2, coats: primer, after: wipe}",
 			"grind / surface prep finish -> start max 240; wipe / drying finish -> start"},
+		{"through a look at it", "grind: {kind: surface prep, at: pier, area: 2 m2, grade: St 3}, look: {kind: sign-off, at: pier, after: grind}, paint: {kind: coat, at: pier, area: 2 m2, coats: primer, after: look}",
+			"grind / surface prep finish -> start max 240; look / sign-off finish -> start"},
 		{"not of another surface", "grind: {kind: surface prep, at: shop, surface: frame/base, grade: St 3}, paint: {kind: coat, at: shop, surface: frame/posts, coats: primer, after: grind}",
 			"grind / surface prep finish -> start"},
 	} {
