@@ -80,12 +80,30 @@ func (x *expander) rigging(t *tasks.Task) *Rigging {
 			r.Joins = append(r.Joins, j)
 		}
 	}
+	r.near()
 	for _, k := range x.w.Job.Kit {
 		if (k.HasKind || k.Chart != nil) && (k.At == nil || k.At == t.Place) {
 			r.gear = append(r.gear, k)
 		}
 	}
 	return r
+}
+
+// near leaves out the joining tasks that have nothing to do with what is lifted, whatever is joined.
+func (r *Rigging) near() {
+	all := map[string]bool{}
+	for _, p := range r.s.hanging(r.Task.Lifts, r.Joins) {
+		all[p] = true
+	}
+	var out []Join
+	for _, j := range r.Joins {
+		if slices.ContainsFunc(j.Things, func(t string) bool {
+			return slices.ContainsFunc(r.s.pieces(t), func(p string) bool { return all[p] })
+		}) {
+			out = append(out, j)
+		}
+	}
+	r.Joins = out
 }
 
 func wayOf(k *tasks.Kit) lift.Way {

@@ -54,6 +54,9 @@ func (x *expander) stageOf(s *Step) {
 	if len(open) > mostOpen {
 		open = open[:mostOpen] // the checker judges what the plan makes of the others
 	}
+	if all, err := r.Judge(append(sure[:len(sure):len(sure)], open...)); err == nil && all.OK && r.byMassAlone() {
+		return // what carries all of it carries less
+	}
 	var bad []uint
 	for n := 1; n <= len(open); n++ {
 		for set := uint(1); set < 1<<len(open); set++ {
@@ -73,6 +76,13 @@ func (x *expander) stageOf(s *Step) {
 			x.before(s, some, j)
 		}
 	}
+}
+
+// byMassAlone says whether more on the hook is never easier: no lugs or second hook whose share
+// hangs on where the centre of gravity is.
+func (r *Rigging) byMassAlone() bool {
+	l := r.lifting()
+	return l.Second == nil && (l.Slings == nil || len(l.Slings.Lugs) == 0)
 }
 
 // relevant leaves out the tasks that change nothing about what is lifted.
