@@ -20,10 +20,11 @@ type crewMaker struct {
 	people []Person
 	class  []int // people with the same shifts at every place share a class
 	cache  map[string]*Timing
+	roster
 }
 
 func newCrewMaker(g *ground, people []Person) *crewMaker {
-	m := &crewMaker{g: g, people: people, cache: map[string]*Timing{}}
+	m := &crewMaker{g: g, people: people, cache: map[string]*Timing{}, roster: newRoster()}
 	seen := map[string]int{}
 	for i := range people {
 		var b strings.Builder
@@ -233,7 +234,7 @@ func (m *crewMaker) keepers(s *expand.Step, crew []int) (out []int, stay []hours
 	add := func(p int) {
 		if !m.people[p].Outside && !has(out, p) && len(m.people[p].Shifts[s.Place]) > 0 {
 			out = append(out, p)
-			stay = append(stay, m.shift(m.canStay(s, p)))
+			stay = append(stay, m.canStay(s, p).moved)
 		}
 	}
 	for k := len(crew) - 1; k >= 0; k-- {
@@ -255,17 +256,9 @@ func (m *crewMaker) timing(s *expand.Step, base, access hours.Set, mode *Mode) *
 			return t
 		}
 	}
-	spans := m.together(s, mode.Crew, base)
-	if mode.Relief != nil {
-		mode.First = m.shift(spans)
-		spans = spans.Or(m.together(s, mode.Relief, base))
-	}
-	if s.Watch > 0 {
-		spans = m.watched(s, spans, access, mode.Keepers)
-	}
-	joined := spans.Joined(Meal, access)
-	t := Worked(m.shift(spans), m.shift(joined), Rules{Work: s.Working, SetUp: s.SetUp, Least: s.LeastPiece, Safe: s.SafeStop,
-		InOneGo: s.InOneGo, OverMeals: s.OverMeals})
+	turn := m.turn(s, base, access, mode)
+	mode.First = turn.first
+	t := &Timing{cal: turn.cal, length: s.Working, setUp: s.SetUp, least: s.LeastPiece, safe: s.SafeStop, inOneGo: s.InOneGo, overMeals: s.OverMeals}
 	t.watch = s.Watch
 	if mode.Relief == nil {
 		m.cache[key] = t
@@ -286,46 +279,6 @@ func (m *crewMaker) together(s *expand.Step, crew []int, base hours.Set) hours.S
 		}
 	}
 	return set
-}
-
-// watched takes off each opening the minutes after the last one that the work can stop at with
-// somebody to stay the fire watch out: on shift to its end, meals apart, with the workface in
-// reach (R13).
-func (m *crewMaker) watched(s *expand.Step, spans, access hours.Set, keepers []int) hours.Set {
-	var keep []hours.Span
-	for _, b := range spans.Joined(Meal, access) {
-		last := b.From
-		for _, p := range keepers {
-			for _, k := range m.canStay(s, p) {
-				if x := lastStop(spans, b, min(b.To, k.To-hours.Minute(s.Watch))); x >= k.From {
-					last = max(last, x)
-				}
-			}
-		}
-		keep = append(keep, hours.Span{From: b.From, To: last})
-	}
-	return spans.And(hours.NewSet(keep...))
-}
-
-// lastStop gives the last minute up to limit, in opening b, at which a worked minute of spans ends.
-func lastStop(spans hours.Set, b hours.Span, limit hours.Minute) hours.Minute {
-	last := hours.Never
-	for _, s := range spans.Within(b) {
-		if s.From < limit {
-			last = min(s.To, limit)
-		}
-	}
-	return last
-}
-
-// canStay gives the minutes in which a person can keep a watch at a step's workface: on shift,
-// meals included, and in reach.
-func (m *crewMaker) canStay(s *expand.Step, p int) hours.Set {
-	stay := m.people[p].Shifts[s.Place].Joined(Meal, nil)
-	if r, limited := m.g.reach[s.Face]; limited && s.Face != nil {
-		stay = stay.And(r)
-	}
-	return stay
 }
 
 // relays lists the modes in which two teams take turns; they may have members in common.

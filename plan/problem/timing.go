@@ -55,6 +55,11 @@ type Rules struct {
 // Worked gives the timing of hands-on work: spans are its worked minutes, joined its openings
 // (spans joined over meals), both from base.
 func Worked(spans, joined hours.Set, r Rules) *Timing {
+	return &Timing{length: r.Work, cal: newCalendar(spans, joined), setUp: r.SetUp, least: r.Least, safe: r.Safe,
+		inOneGo: r.InOneGo, overMeals: r.OverMeals}
+}
+
+func newCalendar(spans, joined hours.Set) *calendar {
 	c := &calendar{spans: spans, open: make([]int, len(spans)+1), block: make([]int, len(spans)), last: make([]int, len(spans))}
 	first, j := 0, 0
 	for i, s := range spans {
@@ -72,8 +77,7 @@ func Worked(spans, joined hours.Set, r Rules) *Timing {
 			end = i - 1
 		}
 	}
-	return &Timing{length: r.Work, cal: c, setUp: r.SetUp, least: r.Least, safe: r.Safe,
-		inOneGo: r.InOneGo, overMeals: r.OverMeals}
+	return c
 }
 
 // Start gives the first possible start at or after t, or Inf.
