@@ -214,13 +214,29 @@ func (g *generator) place(i int) bool {
 	return true
 }
 
+// manyModes is the number of choices of people from which on not all are looked at.
+const manyModes = 40
+
 // best finds the mode and start with the earliest finish, starts from lo and finishes from fin on; equal
 // ones go to the people least wanted elsewhere.
 func (g *generator) best(i, lo, fin int) (mode, at int) {
 	a := &g.p.Acts[i]
 	mode = -1
 	bestFin, bestWeight := problem.Inf, 0
-	for m := range a.Modes {
+	many, least, turn := len(a.Modes) > manyModes, problem.Inf, 0
+	if many { // with many choices the first that could not finish earlier will do, from another one each time
+		for _, w := range a.Timings() {
+			if s := w.Start(lo); s < problem.Inf {
+				least = min(least, max(fin, w.Finish(s)))
+			}
+		}
+		turn = (g.rank[i] * 31) % len(a.Modes)
+	}
+	for k := range a.Modes {
+		m := k + turn
+		if m >= len(a.Modes) {
+			m -= len(a.Modes)
+		}
 		w := a.Modes[m].Time
 		s := g.first(i, m, lo, fin)
 		if s >= problem.Inf {
@@ -239,6 +255,9 @@ func (g *generator) best(i, lo, fin int) (mode, at int) {
 		}
 		if f := w.Finish(s); mode < 0 || f < bestFin || f == bestFin && weight < bestWeight {
 			mode, at, bestFin, bestWeight = m, s, f, weight
+		}
+		if many && bestFin <= least {
+			break
 		}
 	}
 	return mode, at

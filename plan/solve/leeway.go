@@ -63,12 +63,12 @@ func (r *rower) leeway(rank, i int) {
 	if r.g.standing[i] {
 		return // standing time goes with the step before it
 	}
-	ok := func(l int) bool { _, fine := r.delayed(rank, i, l); return fine }
-	hi := 15
-	for hi < r.p.End && ok(hi) {
-		hi *= 2
-	}
+	ok := func(l int) bool { _, fine := r.delayed(rank, i, l); return fine && !r.stopped() }
+	hi := r.most(i) + 1
 	lo := 0
+	if ok(hi - 1) {
+		lo = hi - 1
+	}
 	for hi-lo > 1 {
 		mid := (lo + hi) / 2
 		if ok(mid) {
@@ -77,22 +77,26 @@ func (r *rower) leeway(rank, i int) {
 			hi = mid
 		}
 	}
-	if r.maxWaits() { // lateness need not grow with the delay: look at the steps between too
-		step := max(5, lo/400)
+	moved, _ := r.delayed(rank, i, lo)
+	if r.waiting(i, moved) { // lateness need not grow with the delay: look at the steps between too
+		step := max(5, lo/max(20, min(400, 4_000_000/(len(r.order)*len(r.order)))))
 		for l := step; l < lo; l += step {
 			if !ok(l) {
 				lo = l - step
 				for lo+1 < l && ok(lo+1) {
 					lo++
 				}
+				moved, _ = r.delayed(rank, i, lo)
 				break
 			}
 		}
 	}
+	if r.stopped() {
+		return
+	}
 	row.Leeway = lo
 	row.Latest = r.p.Base + hours.Minute(r.s.Finish[i]+lo)
 	if lo > 0 {
-		moved, _ := r.delayed(rank, i, lo)
 		seen := map[string]bool{r.p.Acts[i].Label(): true}
 		for _, j := range moved {
 			if name := r.p.Acts[j].Label(); !seen[name] && r.p.Acts[j].Step.Class == expand.Hands {
@@ -101,27 +105,35 @@ func (r *rower) leeway(rank, i int) {
 			}
 		}
 	}
-	r.g.load(r.s)
 }
 
-func (r *rower) maxWaits() bool {
-	for k := range r.p.Links {
-		if l := &r.p.Links[k]; (l.Max < expand.NoMax && l.Max > 0) || l.Last != nil {
-			return true
+// most is more leeway than activity i can have: to its own deadline, or to the end of the time
+// planned over.
+func (r *rower) most(i int) int {
+	a := &r.p.Acts[i]
+	end := min(a.By, r.p.End)
+	return max(0, end-r.s.Finish[i])
+}
+
+// waiting says whether a longest wait holds any of the activities that move with i.
+func (r *rower) waiting(i int, moved []int) bool {
+	for _, j := range append([]int{i}, moved...) {
+		for _, list := range [][]int{r.g.into[j], r.g.from[j]} {
+			for _, k := range list {
+				if l := &r.p.Links[k]; l.Max < expand.NoMax && l.Max > 0 || l.Last != nil {
+					return true
+				}
+			}
 		}
 	}
 	return false
 }
 
-// delayed makes the schedule again in its order with the finish of i at least l later; false
+// delayed makes the schedule again, from the activities before rank on, in its order with the finish of i at least l later; false
 // where that breaks a deadline or a maximum wait. moved are the later activities that moved.
 func (r *rower) delayed(rank, i, l int) (moved []int, ok bool) {
 	g, s := r.g, r.s
-	g.reset()
-	copy(g.choice, s.Choice)
-	for _, j := range r.order[:rank] {
-		g.put(j, s.Mode[j], s.Start[j])
-	}
+	g.restore(&r.prefix)
 	for _, j := range r.order[rank:] {
 		w := r.p.Acts[j].Modes[s.Mode[j]].Time
 		lo, fin := s.Start[j], s.Finish[i]+l

@@ -13,21 +13,34 @@ func Rows(p *problem.Problem, s *Schedule, stop func() bool) []plan.Row {
 	r.g.load(s)
 	r.order = r.g.list()
 	r.inOrder()
-	for i := range p.Acts {
+	for i := 0; i < len(p.Acts); i++ {
+		if i%16 == 0 && stop != nil && stop() {
+			for ; i < len(p.Acts); i++ {
+				r.rows[i] = plan.Row{Leeway: -1, Latest: p.Base + hours.Minute(s.Finish[i])}
+			}
+			return r.rows
+		}
 		r.rows[i].SetBy = r.setBy(i)
 		r.rows[i].Leeway = -1
 		r.rows[i].Latest = p.Base + hours.Minute(s.Finish[i])
 	}
 	if len(p.Acts) <= leewaySteps {
+		r.stop = stop
+		r.g.reset()
 		for rank, i := range r.order {
-			if stop != nil && stop() {
+			if r.stopped() {
 				break
 			}
+			r.g.save(&r.prefix)
 			r.leeway(rank, i)
+			r.g.restore(&r.prefix)
+			r.g.put(i, s.Mode[i], s.Start[i])
 		}
 	}
 	return r.rows
 }
+
+func (r *rower) stopped() bool { return r.stop != nil && r.stop() }
 
 type rower struct {
 	g     *generator
@@ -36,4 +49,7 @@ type rower struct {
 	order []int
 	ahead [][]int // by activity: those that come before it in the plan's order, for want of people, kit, room or a clear workface
 	rows  []plan.Row
+
+	stop   func() bool
+	prefix saved // the schedule of the activities before the one whose leeway is looked for
 }

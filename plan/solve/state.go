@@ -224,3 +224,34 @@ func (s *state) release(i, p int) {
 		}
 	}
 }
+
+// saved is a copy of what is placed, to go back to.
+type saved struct {
+	people [][]busy
+	use    [][]level
+	placed []bool
+}
+
+// save copies what is placed into d.
+func (s *state) save(d *saved) {
+	d.people, d.use = copied(d.people, s.people), copied(d.use, s.use)
+	d.placed = append(d.placed[:0], s.placed...)
+}
+
+// restore goes back to a copy: what was placed then, and nothing else. Starts and finishes of
+// what is placed must not have changed since.
+func (s *state) restore(d *saved) {
+	s.people, s.use = copied(s.people, d.people), copied(s.use, d.use)
+	copy(s.placed, d.placed)
+}
+
+// copied copies lists into the room of old ones.
+func copied[T any](to, from [][]T) [][]T {
+	if len(to) != len(from) {
+		to = make([][]T, len(from))
+	}
+	for i := range from {
+		to[i] = append(to[i][:0], from[i]...)
+	}
+	return to
+}
