@@ -59,6 +59,17 @@ func days(a, b hours.Date) int {
 
 // Facts gives the day's sun and tide, the hours that nature leaves to coats and, at the site, the hours left to the window's end.
 func Facts(w *expand.Work, s *Shift) string {
+	var nature []string
+	if s.Place != nil {
+		nature = FitWords(w, s.Place, s.Span)
+	}
+	return facts(w, s, nature)
+}
+
+// Day gives what Facts gives without the hours that nature leaves to coats.
+func Day(w *expand.Work, s *Shift) string { return facts(w, s, nil) }
+
+func facts(w *expand.Work, s *Shift, nature []string) string {
 	var parts []string
 	if rise, set, ok := Sun(s); ok {
 		parts = append(parts, fmt.Sprintf("sun %s to %s", rise, set))
@@ -66,10 +77,8 @@ func Facts(w *expand.Work, s *Shift) string {
 	if t := Tides(w, s.Place, s.Date); t != "" {
 		parts = append(parts, t)
 	}
-	if s.Place != nil {
-		if words := FitWords(w, s.Place, s.Span); len(words) > 0 {
-			parts = append(parts, "weather and water leave "+strings.Join(words, ", "))
-		}
+	if len(nature) > 0 {
+		parts = append(parts, "weather and water leave "+strings.Join(nature, ", "))
 	}
 	if s.Site {
 		parts = append(parts, fmt.Sprintf("at the start %s left to the window's end", quantity.Hours(int(w.Window.Closes-s.From))))

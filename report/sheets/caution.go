@@ -72,7 +72,7 @@ var cautions = []caution{
 		func(_ *expand.Work, s *expand.Step) bool {
 			return s.Power > 0 || s.Task.Kind == tasks.Weld && s.Class == expand.Hands
 		}},
-	{"Working alone", "Never alone at hot work, lifts, in closed spaces, over water or between tides.",
+	{"Working alone", "Never alone at the tasks marked so: if the second person has to leave, that work stops.",
 		[]string{"The plan keeps a second person at the place for such work. If that person has to leave, the work stops.",
 			"Where somebody works alone at other things: agreed times to call in, and who comes if the call does not."},
 		func(_ *expand.Work, s *expand.Step) bool { return s.Lone }},
@@ -119,9 +119,7 @@ func (k *pack) cautionPage() {
 	p.para("For the work in this job. Local rules, the permit and licensed practice come first.", body, false)
 	for _, c := range append(cautionsOf(k.work, k.work.Steps), always) {
 		p.heading(c.name, 2*lineHeight(body))
-		for _, s := range c.full {
-			p.point("-", s, false)
-		}
+		p.para(strings.Join(c.full, " "), body, false)
 	}
 	var alone []string
 	for _, t := range k.work.Job.Tasks {

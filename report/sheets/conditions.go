@@ -16,7 +16,7 @@ func (k *pack) conditions(s *agenda.Shift, steps []*expand.Step) {
 	p := k.p
 	var lines []string
 	if w := agenda.WeatherWords(s.Place, s.Span); w != "" {
-		lines = append(lines, "Planned with "+w+".")
+		lines = append(lines, "Planned with "+signs(w)+".")
 	}
 	lines = append(lines, k.wayOff(s, steps)...)
 	lines = append(lines, k.closedHours(s, steps)...)
@@ -29,8 +29,10 @@ func (k *pack) conditions(s *agenda.Shift, steps []*expand.Step) {
 	for _, l := range lines {
 		p.point("-", l, false)
 	}
-	if len(painted) > 0 || bare {
-		row := []field{{label: "Read at"}, {label: "Air °C"}, {label: "Humidity %"}, {label: "Dew point °C"}, {label: "Steel °C"}, {label: "Steel above it"}}
+	// Coats have their later readings in the paint log.
+	if row := []field{{label: "Read at"}, {label: "Air °C"}, {label: "Humidity %"}, {label: "Dew point °C"}, {label: "Steel °C"}, {label: "Steel above it"}}; len(painted) > 0 {
+		p.fields(6, row...)
+	} else if bare {
 		p.fields(6, append(row, row...)...)
 	}
 }
@@ -63,9 +65,9 @@ func (k *pack) closedHours(s *agenda.Shift, steps []*expand.Step) []string {
 				continue
 			}
 			if reasons := agenda.ClosedWords(k.work, place, x); len(reasons) > 0 {
-				out = append(out, upper(x.Name)+" closed "+strings.Join(reasons, "; ")+".")
+				out = append(out, signs(upper(x.Name)+" closed "+strings.Join(reasons, "; ")+"."))
 			} else {
-				out = append(out, upper(x.Name)+": open all the shift.")
+				out = append(out, upper(x.Name)+": weather and water allow it all the shift.")
 			}
 		}
 	}
@@ -93,9 +95,12 @@ func (k *pack) limits(steps []*expand.Step) (lines []string, bare bool) {
 		}
 		var parts []string
 		for _, f := range st.Paint.Limits(st.Task.Method) {
-			parts = append(parts, f.Name+" "+f.Amount())
+			parts = append(parts, f.Name+" "+signs(f.Amount()))
 		}
-		line := paper(st.Paint.Name) + ": " + strings.Join(parts, "; ") + "."
+		if len(parts) == 0 {
+			continue
+		}
+		line := joined(" by ", paper(st.Paint.Name), paper(st.Task.Method)) + ": " + strings.Join(parts, "; ") + "."
 		if !slices.Contains(lines, line) {
 			lines = append(lines, line)
 		}
@@ -107,7 +112,7 @@ func (k *pack) limits(steps []*expand.Step) (lines []string, bare bool) {
 func (k *pack) plannedHour(st *expand.Step) string {
 	var parts []string
 	for _, f := range agenda.Hour(st, k.planned(st).Start) {
-		parts = append(parts, f.Name+" "+f.Amount())
+		parts = append(parts, f.Name+" "+signs(f.Amount()))
 	}
 	return strings.Join(parts, "; ")
 }

@@ -105,19 +105,37 @@ func (k *pack) deadlines() {
 	t.end()
 }
 
+// mostGoverning is the number of lines of the governing chain on the cover.
+const mostGoverning = 10
+
+// governing prints what sets the finish, one line for each step, as far back as the cover has room.
 func (k *pack) governing() {
-	if len(k.a.Governing) == 0 {
+	p := k.p
+	var lines []string
+	last := -1
+	for _, c := range k.a.Governing {
+		s := agenda.CauseText(k.work, c)
+		if c.Step < 0 || c.Step >= len(k.a.Plan.Steps) || c.Step >= len(k.work.Steps) {
+			lines, last = append(lines, s), -1
+			continue
+		}
+		if c.Step == last {
+			lines[len(lines)-1] += "; " + s
+			continue
+		}
+		st := k.work.Steps[c.Step]
+		last = c.Step
+		lines = append(lines, fmt.Sprintf("%s starts %s: %s", agenda.StepLabel(k.work, st), agenda.When(k.a.Plan.Steps[c.Step].Start, agenda.Zone(k.work, st.Place)), s))
+	}
+	if len(lines) == 0 {
 		return
 	}
-	p := k.p
 	p.heading("What sets the finish, the last first", 2*lineHeight(body))
-	for i, c := range k.a.Governing {
-		s := agenda.CauseText(k.work, c)
-		if c.Step >= 0 && c.Step < len(k.a.Plan.Steps) && c.Step < len(k.work.Steps) {
-			st := k.work.Steps[c.Step]
-			s = fmt.Sprintf("%s starts %s: %s", agenda.StepLabel(k.work, st), agenda.When(k.a.Plan.Steps[c.Step].Start, agenda.Zone(k.work, st.Place)), s)
-		}
+	for i, s := range lines[:min(len(lines), mostGoverning)] {
 		p.point(fmt.Sprint(i+1), s, false)
+	}
+	if n := len(lines) - mostGoverning; n > 0 {
+		p.point("", fmt.Sprintf("and %d more, back to: %s", n, lines[len(lines)-1]), false)
 	}
 }
 

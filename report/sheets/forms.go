@@ -9,6 +9,7 @@ import (
 	"sailby/tasks"
 	"sailby/tasks/expand"
 	"sailby/tasks/origin"
+	"sailby/tasks/quantity"
 	"sailby/weld"
 )
 
@@ -159,32 +160,40 @@ func (k *pack) coatBlock(s *expand.Step) {
 		name = s.Task.Coats[n-1]
 	}
 	p.heading(agenda.StepLabel(k.work, s), 105)
-	p.para(joined("; ", agenda.Where(s), k.span(s), "planned: "+strings.Join(names(k.planned(s).People), ", "), agenda.Amount(s), prefixed("surface ", s.Task.Grade)), body, false)
+	p.para(joined("; ", agenda.Where(s), k.span(s), "planned: "+strings.Join(names(k.planned(s).People), ", "), signs(agenda.Amount(s)), prefixed("surface ", s.Task.Grade)), body, false)
 	film := ""
 	for _, q := range k.job.Paints {
 		if q.Name != name {
 			continue
 		}
-		film = origin.Trim(q.DFT) + " um"
+		film = origin.Trim(q.DFT) + " µm"
 		var limits []string
 		for _, f := range q.Limits(s.Task.Method) {
-			limits = append(limits, f.Name+" "+f.Amount())
+			limits = append(limits, f.Name+" "+signs(f.Amount()))
 		}
 		if len(limits) > 0 {
 			p.para("Limits: "+strings.Join(limits, "; ")+".", body, false)
 		}
 	}
+	var with []string
 	if h := k.plannedHour(s); h != "" {
-		p.para("Planned with: "+h+".", body, false)
+		with = append(with, h)
 	}
 	for _, f := range s.Estimate.Facts {
-		if strings.Contains(strings.ToLower(f.Name), "wet film") || strings.Contains(strings.ToLower(f.Name), "pot life") {
-			p.para(upper(f.Name)+" "+f.Amount()+".", body, false)
+		if name := strings.ToLower(f.Name); strings.Contains(name, "wet film") || strings.Contains(name, "pot life") {
+			amount := f.Amount()
+			if f.Unit == "min" && f.Text == "" {
+				amount = quantity.Hours(int(f.Value))
+			}
+			with = append(with, signs(f.Name)+" "+signs(amount))
 		}
+	}
+	if len(with) > 0 {
+		p.para("Planned with: "+strings.Join(with, "; ")+".", body, false)
 	}
 	p.fields(5, field{label: "Paint", value: name}, field{label: "Base batch"}, field{label: "Hardener batch"}, field{label: "Thinner %"}, field{label: "Mixed at"},
 		field{label: "First read at"}, field{label: "Air °C"}, field{label: "Humidity %"}, field{label: "Dew point °C"}, field{label: "Steel °C"},
 		field{label: "Then read at"}, field{label: "Air °C"}, field{label: "Humidity %"}, field{label: "Dew point °C"}, field{label: "Steel °C"},
 		field{label: "Grade and profile"}, field{label: "Since cleaning, h"}, field{label: "Since last coat, h"}, field{label: "Started"}, field{label: "Finished"},
-		field{label: "Wet film, um"}, field{label: "Dry film wanted", value: film}, field{label: "Dry film, least"}, field{label: "Dry film, mean"}, field{label: "Painter signs"})
+		field{label: "Wet film, µm"}, field{label: "Dry film wanted", value: film}, field{label: "Dry film, least"}, field{label: "Dry film, mean"}, field{label: "Painter signs"})
 }

@@ -165,7 +165,7 @@ func (k *pack) liftAsk(j expand.Judgement) {
 	if len(j.Ask) == 0 {
 		return
 	}
-	k.p.heading("Not known to the plan: to be asked and settled", 2*lineHeight(body))
+	k.p.heading("Not known to the plan: to be asked and settled", float64(min(len(j.Ask), 8))*lineHeight(body))
 	for _, a := range j.Ask {
 		k.p.point("?", strings.TrimPrefix(a, "ask: "), false)
 	}

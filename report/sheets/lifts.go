@@ -89,9 +89,11 @@ func (k *pack) liftFacts(s *expand.Step) {
 			continue
 		}
 		add(paper(u.Kit.Name)+" rated", amountOf(u.Kit.Rated, "kg", 1), "job file")
+		var chart []string
 		for _, c := range u.Kit.Chart {
-			add(paper(u.Kit.Name)+" chart", fmt.Sprintf("%s kg at %s m", origin.Trim(c.Mass), origin.Trim(c.Radius)), "job file")
+			chart = append(chart, fmt.Sprintf("%s kg at %s m", origin.Trim(c.Mass), origin.Trim(c.Radius)))
 		}
+		add(paper(u.Kit.Name)+" chart", strings.Join(chart, ", "), "job file")
 	}
 	tb := p.table(column{"What", 60}, column{"Figure", 45}, column{"From", 78})
 	for _, f := range facts {
@@ -102,6 +104,7 @@ func (k *pack) liftFacts(s *expand.Step) {
 
 // soft says where a figure comes from, and marks defaults that nothing stands behind.
 func soft(o origin.Origin) string {
+	o.File = baseName(o.File)
 	if o.Soft() {
 		return o.String() + " (default: check it)"
 	}

@@ -4,6 +4,7 @@ import (
 	"errors"
 	"fmt"
 	"slices"
+	"strings"
 
 	"sailby/plan"
 	"sailby/report/agenda"
@@ -58,11 +59,7 @@ func Pack(r *plan.Report, o Options) (*Document, error) {
 	}
 	k := &pack{p: newPen(doc), report: r, a: a, work: a.Work, job: r.Job, opt: o, shifts: agenda.Shifts(a), worked: agenda.Worked(a)}
 	k.cover()
-	for _, s := range k.shifts {
-		if s.Site || !o.SiteOnly {
-			k.shift(s)
-		}
-	}
+	k.allShifts()
 	k.handover()
 	k.weldList()
 	k.paintLog()
@@ -82,7 +79,7 @@ func (k *pack) foot() {
 		s := fmt.Sprintf("page %d of %d", i+1, len(p.doc.Pages))
 		w := width(s, body, false)
 		p.put(Item{Kind: Text, X: p.right - w, Y: base, W: w, Text: s, Size: body})
-		left := "Printed from " + k.job.File
+		left := "Printed from " + baseName(k.job.File)
 		if p.forms[i] {
 			left = "Write N/A, leave no box empty."
 		}
@@ -120,3 +117,6 @@ func (k *pack) taskSteps(kind tasks.Kind) []*expand.Step {
 	}
 	return out
 }
+
+// baseName is the last part of a path, on any system that wrote it.
+func baseName(path string) string { return path[strings.LastIndexAny(path, `/\\`)+1:] }

@@ -34,7 +34,10 @@ func (k *pack) packing() {
 		}
 		t.row(write(), whatOf(it), amountCell(it), say(day), write())
 	}
-	for range 3 { // room for what the list does not know
+	for i := range 3 { // room for what the list does not know
+		if i > 0 && p.y+3*boxHeight+8*lineHeight(body) > p.bottom {
+			break
+		}
 		t.row(write(), cell{blank: true}, cell{blank: true}, cell{blank: true}, write())
 	}
 	t.end()

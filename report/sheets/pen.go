@@ -12,6 +12,9 @@ const (
 // boxHeight is the height of a box to write in, for gloved hands.
 const boxHeight = 10.0
 
+// headRoom is the height of the running head with the room below it.
+const headRoom = 1.25*body*mmPerPoint + 3.8
+
 // thin and thick are strokes in mm.
 const (
 	thin  = 0.25
@@ -58,7 +61,7 @@ func (p *pen) newPage() {
 	base := p.y + ascent*body*mmPerPoint
 	p.put(Item{Kind: Text, X: p.right - rw, Y: base, W: rw, Text: right, Size: body, Bold: true})
 	p.run(p.left, base, fitted(p.doc.Title, body, false, p.wide()-rw-6), body, false)
-	p.y += lineHeight(body) + 0.8
+	p.y += headRoom - 3
 	p.rule(thick)
 	p.y += 3
 }

@@ -216,7 +216,7 @@ func TestSheetsSay(t *testing.T) {
 		{"cover", "open again Thu 8 Apr 17:30 Thu 8 Apr 16:00 1 h 30 min Thu 8 Apr 16:30"},
 		{"cover", "loader crane comes Wed 7 Apr 08:00-12:00"},
 		{"cover", "Tickets that only one person holds: slinger/signaller (Tom), weld (Ines)"},
-		{"cover", "rot found may come (chance 35 %)"},
+		{"cover", "look for it as early as you can: rot found (35 %)"},
 		{"cover", agenda.Care},
 		{"shift 2027-04-07", "Wednesday 7 April 2027"},
 		{"shift 2027-04-07", "Tarskay pier, day 2 of 4, 07:30-18:00"},

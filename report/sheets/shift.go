@@ -11,21 +11,84 @@ import (
 	"sailby/tasks/quantity"
 )
 
-// shift prints one shift's sheet, named by the day on which it begins.
-func (k *pack) shift(s *agenda.Shift) {
-	p := k.p
-	day := agenda.LongDay(s.Date)
-	if s.Night {
-		day += ", night"
+// between is the room in mm that two shifts on one page keep between them.
+const between = 9.0
+
+// allShifts prints a sheet for each shift. Short days at home follow each other on one page.
+func (k *pack) allShifts() {
+	list := slices.Clone(k.shifts)
+	if k.opt.SiteOnly {
+		list = slices.DeleteFunc(list, func(s *agenda.Shift) bool { return !s.Site })
 	}
-	head := day
-	if s.Site {
+	for i := 0; i < len(list); {
+		n, used := 1, k.height(list[i])
+		for i+n < len(list) && !list[i].Site && !list[i+n].Site {
+			more := between + k.height(list[i+n])
+			if used+more > k.p.bottom-k.p.doc.Top-headRoom {
+				break
+			}
+			used += more
+			n++
+		}
+		k.shared(list[i : i+n])
+		i += n
+	}
+}
+
+// shared prints shifts on one page; a single one may run on.
+func (k *pack) shared(list []*agenda.Shift) {
+	var heads, names []string
+	for _, s := range list {
+		heads, names = append(heads, dayName(s)), append(names, s.Date.String())
+	}
+	head := strings.Join(heads, "; ")
+	if s := list[0]; s.Site {
 		head += ", " + agenda.DayOf(k.work, s)
+	} else if len(list) > 1 {
+		head = heads[0] + " to " + heads[len(heads)-1]
 	}
-	p.begin(head, "shift "+s.Date.String(), true)
+	k.p.begin(head, "shift "+strings.Join(names, ", "), true)
+	for i, s := range list {
+		if i > 0 {
+			k.p.y += between / 2
+			k.p.rule(thick)
+			k.p.y += between / 2
+		}
+		k.shift(s, i+1 < len(list))
+	}
+}
+
+// height lays a shift out on trial and gives its height in mm at its tightest, more than a page
+// where it takes more than one.
+func (k *pack) height(s *agenda.Shift) float64 {
+	t := *k
+	doc := *k.p.doc
+	doc.Pages = nil
+	t.p = newPen(&doc)
+	t.p.begin("", "", true)
+	top := t.p.y
+	t.shift(s, true)
+	if len(doc.Pages) > 1 {
+		return doc.Height
+	}
+	return t.p.y - top
+}
+
+func dayName(s *agenda.Shift) string {
+	if s.Night {
+		return agenda.LongDay(s.Date) + ", night"
+	}
+	return agenda.LongDay(s.Date)
+}
+
+// shift prints one shift's sheet, named by the day on which it begins; tight where something else
+// follows on the page.
+func (k *pack) shift(s *agenda.Shift, tight bool) {
+	p := k.p
+	day := dayName(s)
 	p.big(day)
 	p.para(joined(", ", agenda.PlaceLabel(s.Place), agenda.DayOf(k.work, s), agenda.Between(s.Span, s.Zone)), strong, true)
-	p.para(upper(agenda.Facts(k.work, s))+".", body, false)
+	p.para(upper(agenda.Day(k.work, s))+".", body, false)
 	k.running(s)
 	steps := stepsOf(s.Entries)
 	k.dayStrip(s, steps)
@@ -39,7 +102,7 @@ func (k *pack) shift(s *agenda.Shift) {
 			p.point("-", c.short, false)
 		}
 	}
-	k.closing()
+	k.closing(tight, slices.ContainsFunc(steps, func(st *expand.Step) bool { return st.Watch > 0 }))
 }
 
 // dayStrip draws the strip: reach and hire in grey, then each person with the numbers of the
@@ -65,9 +128,9 @@ func (k *pack) dayStrip(s *agenda.Shift, steps []*expand.Step) {
 	}
 	k.p.skip(2)
 	k.p.strip(s.Span, s.Zone, lanes)
-	legend := "Grey: there or on shift. Numbers: the tasks below. At the latest: done by then, or a deadline falls."
+	legend := "Grey: there or on shift. Numbers: tasks below. Latest: done by then, or a deadline is missed."
 	if slices.ContainsFunc(s.Entries, func(e agenda.Entry) bool { return e.Watch }) {
-		legend += " w: fire watch after that task."
+		legend += " w: fire watch."
 	}
 	k.p.para(legend, body, false)
 }
@@ -76,17 +139,15 @@ func (k *pack) dayStrip(s *agenda.Shift, steps []*expand.Step) {
 func (k *pack) dayTasks(s *agenda.Shift, steps []*expand.Step) {
 	p := k.p
 	p.skip(2)
-	t := p.table(column{"No.", 10}, column{"Task", 83}, column{"Planned", 27}, column{"Started", 20}, column{"Finished", 21}, column{"Hours left", 22})
+	t := p.table(column{"No.", 10}, column{"Task", 77}, column{"Planned", 33}, column{"Started", 20}, column{"Finished", 21}, column{"Hours left", 22})
+	notes, numbers := sharedNotes(steps)
 	for i, st := range steps {
-		times := []string{}
-		for _, e := range s.Entries {
-			if e.Step == st && !e.Watch {
-				times = append(times, agenda.Between(e.Span, s.Zone))
-			}
-		}
-		t.row(loud(fmt.Sprint(i+1)), k.taskCell(s, st), say(slices.Compact(times)...), write(), write(), write())
+		t.row(loud(fmt.Sprint(i+1)), k.taskCell(s, st, notes), k.plannedCell(s, st), write(), write(), write())
 	}
 	t.end()
+	for i, n := range notes {
+		p.point("-", numbers[i]+": "+n, false)
+	}
 }
 
 // running prints what nobody works on but the clock does.
@@ -104,14 +165,22 @@ func (k *pack) running(s *agenda.Shift) {
 func (k *pack) stopped(s *agenda.Shift, steps []*expand.Step) {
 	p := k.p
 	spare := agenda.Spare(k.a, s, 4)
-	p.heading("If you have to stop", 2*lineHeight(body))
-	var whole []string
+	p.heading("If you have to stop", 3*lineHeight(body))
+	p.para(joined(" ", "Make it safe, write down the time and why, tell the lead hand.", prefixed("Telephone ", k.job.Emergency.Phone)), body, false)
+	var whole, safe []string
 	for i, st := range steps {
 		if st.InOneGo {
 			whole = append(whole, fmt.Sprint(i+1))
 		} else if st.SafeStop > 0 {
-			p.point(fmt.Sprint(i+1), fmt.Sprintf("is not stopped before %s of it is done; starting again takes %s.", quantity.Hours(st.SafeStop), quantity.Hours(st.SetUp)), false)
+			words := fmt.Sprintf("%d not before %s of it is done", i+1, quantity.Hours(st.SafeStop))
+			if st.SetUp > 0 {
+				words += ", and starting again takes " + quantity.Hours(st.SetUp)
+			}
+			safe = append(safe, words)
 		}
+	}
+	if len(safe) > 0 {
+		p.para("Stopping: "+strings.Join(safe, "; ")+".", body, false)
 	}
 	if len(whole) > 0 {
 		p.para("In one go, not to be begun unless it can be finished: "+strings.Join(whole, ", ")+".", body, false)
@@ -140,16 +209,40 @@ func (k *pack) begun(s *agenda.Shift) {
 	p.fields(4, field{label: "Brief held, initials"}, field{label: "Tools and gear seen"}, field{label: "Forecast, wind"}, field{label: "Gas, tests"})
 }
 
-// closing has the boxes for the end of the shift; the largest takes what is left of the page.
-func (k *pack) closing() {
-	const least, most = 12.0, 80.0
+// closing has the boxes for the end of the shift. The box for notes takes what is left of the page;
+// where little is left it stands beside the signature.
+func (k *pack) closing(tight, watched bool) {
+	const least, most = 25.0, 80.0
 	p := k.p
+	sign := []field{{label: "Lead hand, name and signature", units: 2}, {label: "Time"}}
+	if watched {
+		sign = append(sign, field{label: "Last fire watch ended"})
+	}
 	below := 1 + lineHeight(body) + boxHeight + 1.6
+	beside := lineHeight(body) + boxHeight + 1.5 + lineHeight(body) + boxHeight
+	head := 2.5 + lineHeight(strong) + 0.8
+	if tight || p.y+head+lineHeight(body)+least+below > p.bottom && p.y+2+beside <= p.bottom {
+		p.skip(2)
+		p.room(beside)
+		w, top := p.wide()*0.55, p.y
+		p.note(w-gutter, beside-lineHeight(body))
+		end, left := p.y, p.left
+		p.y, p.left = top, p.left+w
+		p.fields(1, field{label: sign[0].label})
+		p.fields(len(sign)-1, sign[1:]...)
+		p.y, p.left = max(end, p.y)+0.1, left
+		return
+	}
 	p.heading("At the end", lineHeight(body)+least+below)
-	p.run(p.left, p.y+ascent*body*mmPerPoint, "Found, changed, stopped, and why", body, false)
+	p.note(p.wide()-gutter, min(max(p.bottom-p.y-lineHeight(body)-below, least), most))
+	p.y++
+	p.fields(2+len(sign)-1, sign...)
+}
+
+// note draws the box for what was found, w mm wide and h mm high.
+func (p *pen) note(w, h float64) {
+	p.run(p.left, p.y+ascent*body*mmPerPoint, fitted("Found, changed, stopped, and why", body, false, w), body, false)
 	p.y += lineHeight(body)
-	h := min(max(p.bottom-p.y-below, least), most)
-	p.put(Item{Kind: Blank, X: p.left, Y: p.y, W: p.wide() - gutter, H: h, Stroke: thin})
-	p.y += h + 1
-	p.fields(4, field{label: "Lead hand, name and signature", units: 2}, field{label: "Time"}, field{label: "Last fire watch ended"})
+	p.put(Item{Kind: Blank, X: p.left, Y: p.y, W: w, H: h, Stroke: thin})
+	p.y += h
 }

@@ -12,9 +12,11 @@ type line struct {
 	bold bool
 }
 
-// cell is what stands in a column of a row: lines of text, or a box to write in.
+// cell is what stands in a column of a row: lines of text, or a box to write in. What is under
+// runs from the column to the right edge of the table, below the boxes of the row.
 type cell struct {
 	lines []line
+	under []line
 	blank bool
 }
 
@@ -109,12 +111,12 @@ type wrappedLine struct {
 func (t *table) row(cells ...cell) {
 	p := t.p
 	wrapped := make([][]wrappedLine, len(cells))
-	tall, box := 0, false
+	var under []wrappedLine
+	column, tall, box := 0, 0, false
 	for i, c := range cells {
-		for _, l := range c.lines {
-			for _, s := range wrapText(l.text, body, l.bold, t.w[i]-2*pad) {
-				wrapped[i] = append(wrapped[i], wrappedLine{s, l.bold})
-			}
+		wrapped[i] = wrapLines(c.lines, t.w[i]-2*pad)
+		if len(c.under) > 0 {
+			column, under = i, wrapLines(c.under, p.right-t.x[i]-2*pad)
 		}
 		tall = max(tall, len(wrapped[i]))
 		box = box || c.blank
@@ -127,7 +129,11 @@ func (t *table) row(cells ...cell) {
 		if box && from == 0 {
 			h = max(h, boxHeight+1.6)
 		}
-		p.room(h)
+		whole := h
+		if from+n >= tall && len(under) > 0 && n+len(under) <= most {
+			whole += float64(len(under))*lineHeight(body) + pad/2
+		}
+		p.room(whole)
 		for i, c := range cells {
 			if c.blank && from == 0 {
 				p.put(Item{Kind: Blank, X: t.x[i] + 0.6, Y: p.y + 0.8, W: t.w[i] - 1.2, H: min(h-1.6, tallest), Stroke: thin})
@@ -138,8 +144,24 @@ func (t *table) row(cells ...cell) {
 			}
 		}
 		p.y += h
+		if from+n >= tall && len(under) > 0 {
+			for _, l := range under {
+				p.lines(t.x[column]+pad, []string{l.text}, body, l.bold)
+			}
+			p.y += pad / 2
+		}
 		p.rule(thin)
 	}
+}
+
+func wrapLines(list []line, w float64) []wrappedLine {
+	var out []wrappedLine
+	for _, l := range list {
+		for _, s := range wrapText(l.text, body, l.bold, w) {
+			out = append(out, wrappedLine{s, l.bold})
+		}
+	}
+	return out
 }
 
 // field is one box of a form with its label above it; a value is printed inside.

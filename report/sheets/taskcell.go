@@ -12,66 +12,119 @@ import (
 	"sailby/tasks/quantity"
 )
 
-// taskCell says what the task is, where, who, how much of what, and by when.
-func (k *pack) taskCell(s *agenda.Shift, st *expand.Step) cell {
+// taskCell says what the task is, where and who beside the boxes; how much of what, what holds and
+// by when below them. Notes that several tasks of the shift share come once below the table.
+func (k *pack) taskCell(s *agenda.Shift, st *expand.Step, shared []string) cell {
 	c := loud(agenda.StepLabel(k.work, st))
+	ps := k.planned(st)
+	who := joined(": ", where(s, st), strings.Join(names(ps.People, ps.Relief), ", "))
+	rules := ""
+	if st.Lone {
+		rules = "never alone"
+	}
+	if st.InOneGo {
+		rules = joined("; ", "in one go", rules)
+	}
+	if who = joined("; ", who, rules); who != "" {
+		c.lines = append(c.lines, line{text: upper(who)})
+	}
 	add := func(bold bool, text string) {
 		if text != "" {
-			c.lines = append(c.lines, line{text, bold})
+			c.under = append(c.under, line{text, bold})
 		}
 	}
-	ps := k.planned(st)
-	add(false, joined(": ", where(s, st), strings.Join(names(ps.People, ps.Relief), ", ")))
-	add(false, joined("; ", agenda.Amount(st), prefixed("drawing ", st.Task.Drawing), prefixed("with ", kitWords(st))))
-	for _, n := range clean.Lines(st.Task.Note) {
-		add(false, n)
-	}
-	for _, n := range st.Estimate.Notes {
-		add(false, n)
-	}
-	ways := []string{}
-	if st.InOneGo {
-		ways = append(ways, "in one go")
-	}
-	if st.Lone {
-		ways = append(ways, "never alone")
-	}
+	words := []string{signs(agenda.Amount(st)), prefixed("drawing ", st.Task.Drawing), prefixed("with ", kitWords(st))}
 	for _, e := range s.Entries {
-		switch {
-		case e.Step != st:
-		case e.Watch:
-			add(true, fmt.Sprintf("Fire watch %s: %s", agenda.Between(e.Span, s.Zone), strings.Join(names(e.People), ", ")))
-		case e.Goes && e.Piece == lastEntry(s, st).Piece:
-			ways = append(ways, "goes on "+agenda.NextPiece(k.work, e)+hoursLeft(e))
+		if e.Step == st && !e.Watch && e.Goes && e.Piece == lastEntry(s, st).Piece {
+			words = append(words, "goes on "+agenda.NextPiece(k.work, e)+hoursLeft(e))
 		}
 	}
 	latest, bold := k.byWhen(st, s)
-	if !bold {
-		ways = append(ways, latest)
+	add(false, upper(joined("; ", words...)))
+	for _, n := range notesOf(st) {
+		if !slices.Contains(shared, n) {
+			add(false, upper(n))
+		}
 	}
-	add(false, upper(joined("; ", ways...)))
+	for _, e := range s.Entries {
+		if e.Step == st && e.Watch {
+			add(true, fmt.Sprintf("Fire watch %s: %s", agenda.Between(e.Span, s.Zone), strings.Join(names(e.People), ", ")))
+		}
+	}
 	if st.Task.Deadline != nil && st.Deadline < hours.Far {
 		add(true, "Must be done by "+onDay(st.Deadline, s))
 	}
 	if bold {
-		add(true, upper(latest))
+		add(true, "No leeway: "+latest)
 	}
 	return c
 }
 
-// byWhen gives the latest finish that keeps every deadline; bold where there is no leeway.
+// plannedCell gives when the task is worked on in the shift, and by when it has to be done at the
+// latest.
+func (k *pack) plannedCell(s *agenda.Shift, st *expand.Step) cell {
+	var times []string
+	for _, e := range s.Entries {
+		if e.Step == st && !e.Watch {
+			times = append(times, agenda.Between(e.Span, s.Zone))
+		}
+	}
+	if latest, bold := k.byWhen(st, s); !bold && latest != "" {
+		times = append(times, latest)
+	}
+	return say(slices.Compact(times)...)
+}
+
+// notesOf gives the notes of the task and of its estimate.
+func notesOf(st *expand.Step) []string {
+	out := clean.Lines(st.Task.Note)
+	for _, n := range st.Estimate.Notes {
+		out = append(out, signs(n))
+	}
+	return out
+}
+
+// sharedNotes gives the notes that more than one of the steps has, in order, each with the numbers
+// of its steps.
+func sharedNotes(steps []*expand.Step) (notes, numbers []string) {
+	has := map[string][]string{}
+	var all []string
+	for i, st := range steps {
+		for _, n := range notesOf(st) {
+			if no := fmt.Sprint(i + 1); !slices.Contains(has[n], no) {
+				has[n] = append(has[n], no)
+			}
+			all = append(all, n)
+		}
+	}
+	for _, n := range all {
+		if len(has[n]) > 1 && !slices.Contains(notes, n) {
+			notes, numbers = append(notes, n), append(numbers, strings.Join(has[n], ", "))
+		}
+	}
+	return notes, numbers
+}
+
+// byWhen gives the latest finish that keeps every deadline; bold where there is no leeway. In the
+// next six days the day of the week alone is clear.
 func (k *pack) byWhen(st *expand.Step, s *agenda.Shift) (text string, bold bool) {
 	if st.Index >= len(k.a.Rows) {
 		return "", false
 	}
-	switch m := k.a.Rows[st.Index].Latest; {
-	case m <= 0 || m >= hours.Far:
+	m := k.a.Rows[st.Index].Latest
+	if m <= 0 || m >= hours.Far {
 		return "", false
-	case m > k.planned(st).Finish:
-		return "at the latest " + onDay(m, s), false
-	default:
-		return "no leeway: at the latest " + onDay(m, s), true
 	}
+	day := hours.DateOf(m.In(s.Zone))
+	switch {
+	case day == s.Date:
+		text = "latest " + agenda.Clock(m, s.Zone)
+	case day.Before(s.Date.Add(7)) && s.Date.Before(day):
+		text = "latest " + m.In(s.Zone).Format("Mon 15:04")
+	default:
+		text = "latest " + agenda.When(m, s.Zone)
+	}
+	return text, m <= k.planned(st).Finish
 }
 
 // onDay writes a time, without its day where that is the shift's own.

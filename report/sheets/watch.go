@@ -30,14 +30,17 @@ func (k *pack) watchList() {
 
 // lateSides names the other two answers where they do not fit.
 func (k *pack) lateSides() []string {
-	var out []string
+	var parts []string
 	for _, a := range []*plan.Answer{k.report.Maybes, k.report.High} {
 		if a != nil && a != k.a && a.Verdict != plan.Fits {
-			out = append(out, fmt.Sprintf("%s it %s: agree now what is left out or left for later.", upper(agenda.BasisWords(a.Work.Basis)),
+			parts = append(parts, fmt.Sprintf("%s it %s", agenda.BasisWords(a.Work.Basis),
 				map[plan.Verdict]string{plan.CannotFit: "cannot fit", plan.Unsettled: "was not shown to fit"}[a.Verdict]))
 		}
 	}
-	return out
+	if len(parts) == 0 {
+		return nil
+	}
+	return []string{upper(strings.Join(parts, "; ")) + ": agree now what is left out or left for later."}
 }
 
 func upper(s string) string {
@@ -56,17 +59,16 @@ func (k *pack) tightTasks() []string {
 		}
 	}
 	slices.SortStableFunc(list, func(x, y int) int { return cmp.Compare(k.a.Rows[x].Leeway, k.a.Rows[y].Leeway) })
-	var out []string
+	var parts []string
 	for _, i := range list[:min(len(list), 4)] {
 		s := k.work.Steps[i]
-		word := "no leeway"
-		if n := k.a.Rows[i].Leeway; n > 0 {
-			word = "only " + quantity.Hours(n) + " of leeway"
-		}
-		out = append(out, fmt.Sprintf("%s has %s: finished by %s or a deadline falls.", agenda.StepLabel(k.work, s), word,
-			agenda.When(k.a.Rows[i].Latest, agenda.Zone(k.work, s.Place))))
+		parts = append(parts, fmt.Sprintf("%s by %s (%s)", agenda.StepLabel(k.work, s),
+			agenda.When(k.a.Rows[i].Latest, agenda.Zone(k.work, s.Place)), quantity.Hours(k.a.Rows[i].Leeway)))
 	}
-	return out
+	if len(parts) == 0 {
+		return nil
+	}
+	return []string{"Least leeway, to be finished by the time given or a deadline is missed: " + strings.Join(parts, "; ") + "."}
 }
 
 // slots names the hire and outside people that come only when booked.
@@ -79,7 +81,7 @@ func (k *pack) slots() []string {
 			parts = append(parts, agenda.ShortDay(s.From, zone)+" "+agenda.Between(s, zone))
 		}
 		if len(parts) > 0 {
-			out = append(out, fmt.Sprintf("%s comes %s: confirm the day before.", who, strings.Join(parts, " and ")))
+			out = append(out, who+" comes "+strings.Join(parts, " and "))
 		}
 	}
 	for _, kit := range k.job.Kit {
@@ -92,7 +94,10 @@ func (k *pack) slots() []string {
 			say(paper(q.Name), k.work.Window.Slots(q.Booked))
 		}
 	}
-	return out
+	if len(out) == 0 {
+		return nil
+	}
+	return []string{"Confirm the day before: " + strings.Join(out, "; ") + "."}
 }
 
 // onlyOnes names tickets that one person alone holds and the work at the site needs.
@@ -125,11 +130,14 @@ func (k *pack) onlyOnes() []string {
 
 // maybes names the tasks that happen only with a chance.
 func (k *pack) maybes() []string {
-	var out []string
+	var parts []string
 	for _, t := range k.job.Tasks {
 		if t.Maybe() {
-			out = append(out, fmt.Sprintf("%s may come (chance %.0f %%): look for it as early as you can.", agenda.TaskLabel(t), t.Chance*100))
+			parts = append(parts, fmt.Sprintf("%s (%.0f %%)", agenda.TaskLabel(t), t.Chance*100))
 		}
 	}
-	return out
+	if len(parts) == 0 {
+		return nil
+	}
+	return []string{"May come, with its chance; look for it as early as you can: " + strings.Join(parts, ", ") + "."}
 }
