@@ -188,7 +188,7 @@ func (g *globals) ask(ctx context.Context, st streams, job *tasks.Job) (*plan.Re
 	r, err := g.settle(limited, job, g.options(false, show))
 	done()
 	switch {
-	case err != nil && ctx.Err() != nil:
+	case err != nil && ctx.Err() != nil, errors.Is(err, settle.ErrStopped):
 		return nil, errStopped
 	case err != nil:
 		return nil, err

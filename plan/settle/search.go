@@ -50,9 +50,18 @@ func (a *asked) learning(best *solve.Schedule) *solve.Schedule {
 	}
 	r := learn.Solve(a.p, o)
 	a.out.Steps += r.Ticks
+	if a.choicesLeftOut() { // then it knows too little to prove anything
+		r.Bound = problem.Inf
+		if r.Status == learn.Infeasible {
+			return best
+		}
+	}
 	switch {
 	case r.Status == learn.Infeasible && !fits:
 		a.out.Proof = a.contradiction(o)
+		if late := learn.Relax(a.p, o); a.out.Proof != nil && len(a.out.Proof.Lines) == 0 && late.Status != learn.Infeasible {
+			a.out.Proof = nil // shown only with people named one by one: too little for a proof (R22)
+		}
 		return best
 	case r.Status == learn.Infeasible:
 		a.out.Bound = a.at(best.Score.Finish)
@@ -70,6 +79,16 @@ func (a *asked) learning(best *solve.Schedule) *solve.Schedule {
 		return best
 	}
 	return found
+}
+
+// choicesLeftOut says whether some step has more choices of people than the problem holds.
+func (a *asked) choicesLeftOut() bool {
+	for i := range a.p.Acts {
+		if a.p.Acts[i].Cut {
+			return true
+		}
+	}
+	return false
 }
 
 func keptWatches(p *problem.Problem, kept []learn.Kept) [][]solve.Watch {

@@ -4,6 +4,9 @@ package settle
 
 import (
 	"context"
+	"errors"
+	"sync/atomic"
+	"time"
 
 	"sailby/plan"
 	"sailby/tasks"
@@ -42,10 +45,62 @@ func (o Options) ticks(n int) int64 {
 
 // Ask settles a job for one window: likely hours, with every maybe, and at the high end.
 //
-// Errors: tasks.Faults where estimates or the choice of the window show faults in the job file.
-// A cancelled context or a deadline gives the best answer so far, marked as cut short, and no error.
+// Errors: tasks.Faults where estimates or the choice of the window show faults in the job file;
+// ErrStopped where a large job is cancelled before there is any answer. A cancelled context or
+// a deadline otherwise gives the best answer so far, marked as cut short, and no error; after a
+// cancel it comes within milliseconds, and what is still running ends by itself.
 func Ask(ctx context.Context, job *tasks.Job, o Options) (*plan.Report, error) {
+	type result struct {
+		rep *plan.Report
+		err error
+	}
+	var sofar atomic.Pointer[plan.Report]
+	done := make(chan result, 1)
+	go func() {
+		rep, err := settle(ctx, job, o, &sofar)
+		done <- result{rep, err}
+	}()
+	select {
+	case r := <-done:
+		return r.rep, r.err
+	case <-ctx.Done():
+	}
+	if !errors.Is(ctx.Err(), context.Canceled) { // a limit: what has been found is worth a moment
+		r := <-done
+		return r.rep, r.err
+	}
+	grace := time.NewTimer(patience(len(job.Tasks)))
+	defer grace.Stop()
+	select {
+	case r := <-done:
+		return r.rep, r.err
+	case <-grace.C:
+	}
+	if rep := sofar.Load(); rep != nil {
+		return rep, nil
+	}
+	return nil, ErrStopped
+}
+
+// ErrStopped says that a job was cancelled before there was any answer.
+var ErrStopped = errors.New("stopped before there was an answer")
+
+// patience is how long a cancel waits for the best answer so far: small jobs give it at once, a
+// large one is left.
+func patience(tasks int) time.Duration {
+	if tasks <= 150 {
+		return 2 * time.Second
+	}
+	return 25 * time.Millisecond
+}
+
+// settle answers each basis in turn, and leaves in sofar what is whole.
+func settle(ctx context.Context, job *tasks.Job, o Options, sofar *atomic.Pointer[plan.Report]) (*plan.Report, error) {
 	rep := &plan.Report{Job: job}
+	keep := func() {
+		whole := *rep
+		sofar.Store(&whole)
+	}
 	likely := expand.Basis{Trip: o.Trip}
 	var err error
 	if rep.Likely, err = answer(ctx, job, likely, o, true); err != nil {
@@ -57,6 +112,7 @@ func Ask(ctx context.Context, job *tasks.Job, o Options) (*plan.Report, error) {
 			rep.Likely.Proof.Even = rep.LowToo
 		}
 	}
+	keep()
 	if o.Only {
 		return rep, nil
 	}
@@ -64,6 +120,7 @@ func Ask(ctx context.Context, job *tasks.Job, o Options) (*plan.Report, error) {
 		if rep.Maybes, err = answer(ctx, job, expand.Basis{Trip: o.Trip, Maybes: true}, o, false); err != nil {
 			return nil, err
 		}
+		keep()
 	}
 	if hasRanges(rep.Likely.Work) {
 		if rep.High, err = answer(ctx, job, expand.Basis{Trip: o.Trip, End: expand.High}, o, false); err != nil {

@@ -21,8 +21,9 @@ type generator struct {
 	lean       leaning
 	blocker    []int // by activity: what was last in its way when it was placed, -1 if nothing
 	inWay      int
-	stuck      int   // the activity that found no place, -1 if none
-	pending    []int // by activity: unplaced activities that it waits for
+	stop       func() bool // asked while a schedule is made; nil never stops
+	stuck      int         // the activity that found no place, -1 if none
+	pending    []int       // by activity: unplaced activities that it waits for
 	queue      queue
 	trace      func(block) // told of what stands in the way; nil for none
 }
@@ -63,7 +64,10 @@ func (g *generator) run(order []int) bool {
 	}
 	g.prepare()
 	tries := 40 + 20*len(order)
-	for left := len(order); left > 0; {
+	for left, n := len(order), 0; left > 0; n++ {
+		if n%32 == 31 && g.stop != nil && g.stop() {
+			return false
+		}
 		i := g.next()
 		if i < 0 {
 			return false

@@ -44,6 +44,7 @@ func Find(p *problem.Problem, b network.Bounds, o Options) Result {
 	f := &finder{g: newGenerator(p), p: p, b: b, o: o, rng: rand.New(rand.NewPCG(o.Seed, 0x5a11b7))}
 	f.leaning = newLeaning(len(p.Acts))
 	f.holdable, f.calmable = f.g.yielding()
+	f.g.stop = o.Stop
 	f.rules()
 	if f.best != nil {
 		f.justify()
