@@ -32,11 +32,6 @@ func (s *state) fits(i, m, at int, skip *skipper) block {
 	a := &s.p.Acts[i]
 	md := &a.Modes[m]
 	fin := md.Time.Finish(at)
-	for _, k := range s.pairs[i] {
-		if b := s.pairBlock(k, i, at, fin, skip); b.kind != free {
-			return b
-		}
-	}
 	for _, u := range a.Uses {
 		if u.Stays && !skip.resource(u.Res) {
 			if b := s.useBlock(u, at, fin); b.kind != free {
@@ -53,7 +48,16 @@ func (s *state) fits(i, m, at int, skip *skipper) block {
 	if hit.kind == free && len(md.Keepers) > 0 {
 		hit = s.watchBlock(i, md, at, fin, skip)
 	}
-	return hit
+	if hit.kind != free {
+		return hit
+	}
+	var apart block // of all that must be over first, what is over last
+	for _, k := range s.pairs[i] {
+		if b := s.pairBlock(k, i, at, fin, skip); b.kind != free && (apart.kind == free || b.next > apart.next) {
+			apart = b
+		}
+	}
+	return apart
 }
 
 // pieceBlock looks for what is in the way of one hands-on piece.

@@ -43,7 +43,7 @@ func (r *rower) setBy(i int) []plan.Cause {
 	if len(single) > 0 {
 		return r.ordered(i, single)
 	}
-	if group := r.group(i, limits); group != nil {
+	if group := r.group(i, limits, met); group != nil {
 		return group
 	}
 	if len(clock) > 0 {
@@ -57,11 +57,18 @@ func (r *rower) setBy(i int) []plan.Cause {
 
 // group finds one other activity all of whose holds on i, left out together, let it start
 // earlier: the last to finish is tried first.
-func (r *rower) group(i int, limits []limit) []plan.Cause {
+func (r *rower) group(i int, limits []limit, met map[blockKind]map[int]bool) []plan.Cause {
+	var waits []limit // what stands in the way where no wait and no date holds i back
+	for _, l := range limits {
+		if len(l.links.links) > 0 || len(l.links.orders) > 0 || l.links.begin {
+			waits = append(waits, l)
+		}
+	}
+	r.meet(i, waits, met)
 	byOther := map[int][]limit{}
 	var others []int
 	for _, l := range limits {
-		if o := l.cause.Other; o >= 0 {
+		if o := l.cause.Other; o >= 0 && l.met(met) {
 			if byOther[o] == nil {
 				others = append(others, o)
 			}
