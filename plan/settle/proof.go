@@ -132,14 +132,14 @@ func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 		act := &a.p.Acts[i]
 		if !dated { // any date will do: lengths alone say it
 			p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s: %s", stepName(act.Step), a.length(act)),
-				Minutes: act.Modes[0].Time.Length(), Pos: act.Pos(), Needed: a.needed(off, i)})
+				Minutes: act.Step.Minutes() + act.Step.SetUp, Pos: act.Pos(), Needed: a.needed(off, i)})
 			continue
 		}
 		text := fmt.Sprintf("%s: %s, not before %s, so not finished before %s", stepName(act.Step), a.length(act), a.clockAt(b.Start[i], act.Step.Place), a.clockAt(b.Finish[i], act.Step.Place))
 		if s, _ := earliest(act, b.Start[i]); s >= problem.Inf {
 			text = fmt.Sprintf("%s: %s, not before %s, and no opening after that is long enough", stepName(act.Step), a.length(act), a.clockAt(b.Start[i], act.Step.Place))
 		}
-		p.Lines = append(p.Lines, plan.ProofLine{Text: text, Minutes: act.Modes[0].Time.Length(), Pos: act.Pos(), Needed: a.needed(off, i)})
+		p.Lines = append(p.Lines, plan.ProofLine{Text: text, Minutes: act.Step.Minutes() + act.Step.SetUp, Pos: act.Pos(), Needed: a.needed(off, i)})
 	}
 	for _, l := range links {
 		if l.Last != nil && dated {
