@@ -80,27 +80,46 @@ func (b *builder) group() {
 	for _, t := range b.turns {
 		site := t.entry.Step.Place == b.a.Work.Window.Place
 		zone := Zone(b.a.Work, t.entry.Step.Place)
-		var home *Shift
+		span := t.on
+		if b.outside[t.who] { // a booking may be far longer than the crew's shift
+			span = t.entry.Span
+		}
+		home := b.holds(t, site, zone.String())
 		for _, s := range b.shifts {
+			if home != nil {
+				break
+			}
 			near := t.on.From >= s.From && t.on.From-s.From <= with
 			if b.outside[t.who] || t.on == t.entry.Span { // no shift of their own: wherever it lies inside
 				near = s.From <= t.entry.From && t.entry.From < s.To || near || s.From > t.on.From && s.From-t.on.From <= with
 			}
 			if near && s.Site == site && s.Zone.String() == zone.String() {
 				home = s
-				break
 			}
 		}
 		if home == nil {
-			home = &Shift{Span: t.on, Site: site, Zone: zone}
+			home = &Shift{Span: span, Site: site, Zone: zone}
 			b.shifts = append(b.shifts, home)
 		}
-		home.From, home.To = min(home.From, t.on.From), max(home.To, t.on.To)
+		home.From, home.To = min(home.From, span.From), max(home.To, span.To)
 		home.add(t)
 	}
 	slices.SortStableFunc(b.shifts, func(x, y *Shift) int {
 		return cmp.Or(cmp.Compare(x.From, y.From), cmp.Compare(boolInt(x.Site), boolInt(y.Site)))
 	})
+}
+
+// holds gives the shift in which somebody from outside is at work, nil where there is none.
+func (b *builder) holds(t turn, site bool, zone string) *Shift {
+	if !b.outside[t.who] {
+		return nil
+	}
+	for _, s := range b.shifts {
+		if s.Site == site && s.Zone.String() == zone && s.From <= t.entry.From && t.entry.From < s.To {
+			return s
+		}
+	}
+	return nil
 }
 
 func (s *Shift) add(t turn) {
@@ -151,7 +170,11 @@ func (b *builder) finish(s *Shift) {
 	}
 	slices.SortStableFunc(s.People, func(x, y Person) int { return cmp.Compare(order[x.Name], order[y.Name]) })
 	for i := range s.People {
-		slices.SortStableFunc(s.People[i].Entries, byTime)
+		q := &s.People[i]
+		slices.SortStableFunc(q.Entries, byTime)
+		if b.outside[q.Name] {
+			q.On = hours.Span{From: max(q.On.From, s.From), To: max(min(q.On.To, s.To), max(q.On.From, s.From))}
+		}
 	}
 	s.place()
 	begin := s.From.In(s.Zone)

@@ -35,43 +35,53 @@ func (k *pack) allShifts() {
 	}
 }
 
-// shared prints shifts on one page; a single one may run on.
+// shared prints shifts on one page; a single one may run on, and is drawn together where that
+// saves a page.
 func (k *pack) shared(list []*agenda.Shift) {
 	var heads, names []string
 	for _, s := range list {
 		heads, names = append(heads, dayName(s)), append(names, s.Date.String())
 	}
-	head := strings.Join(heads, "; ")
+	head := heads[0]
 	if s := list[0]; s.Site {
 		head += ", " + agenda.DayOf(k.work, s)
 	} else if len(list) > 1 {
-		head = heads[0] + " to " + heads[len(heads)-1]
+		head += " to " + heads[len(heads)-1]
 	}
 	k.p.begin(head, "shift "+strings.Join(names, ", "), true)
+	loose, _ := k.trial(list[0], false)
+	tight, _ := k.trial(list[0], true)
 	for i, s := range list {
 		if i > 0 {
 			k.p.y += between / 2
 			k.p.rule(thick)
 			k.p.y += between / 2
 		}
-		k.shift(s, i+1 < len(list))
+		k.shift(s, len(list) > 1 || tight < loose)
 	}
 }
 
-// height lays a shift out on trial and gives its height in mm at its tightest, more than a page
-// where it takes more than one.
+// height gives the height of a shift drawn together in mm, more than a page where it takes more
+// than one.
 func (k *pack) height(s *agenda.Shift) float64 {
+	pages, h := k.trial(s, true)
+	if pages > 1 {
+		return k.p.doc.Height
+	}
+	return h
+}
+
+// trial lays a shift out on paper that is thrown away and gives the pages it takes and the height
+// in mm on the last.
+func (k *pack) trial(s *agenda.Shift, tight bool) (pages int, height float64) {
 	t := *k
 	doc := *k.p.doc
 	doc.Pages = nil
 	t.p = newPen(&doc)
 	t.p.begin("", "", true)
 	top := t.p.y
-	t.shift(s, true)
-	if len(doc.Pages) > 1 {
-		return doc.Height
-	}
-	return t.p.y - top
+	t.shift(s, tight)
+	return len(doc.Pages), t.p.y - top
 }
 
 func dayName(s *agenda.Shift) string {
@@ -92,11 +102,18 @@ func (k *pack) shift(s *agenda.Shift, tight bool) {
 	k.running(s)
 	steps := stepsOf(s.Entries)
 	k.dayStrip(s, steps)
-	k.begun(s)
+	k.begun(s, tight)
 	k.conditions(s, steps)
 	k.dayTasks(s, steps)
-	k.stopped(s, steps)
-	if list := cautionsOf(k.work, steps); len(list) > 0 {
+	k.stopped(s, steps, tight)
+	if list := cautionsOf(k.work, steps); len(list) > 0 && tight {
+		var short []string
+		for _, c := range list {
+			short = append(short, c.short)
+		}
+		p.skip(1.5)
+		p.para("Take care. "+strings.Join(short, " "), body, false)
+	} else if len(list) > 0 {
 		p.heading("Take care", float64(min(len(list), 10))*lineHeight(body))
 		for _, c := range list {
 			p.point("-", c.short, false)
@@ -162,11 +179,17 @@ func (k *pack) running(s *agenda.Shift) {
 }
 
 // stopped prints what else could be done if the work has to stop.
-func (k *pack) stopped(s *agenda.Shift, steps []*expand.Step) {
+func (k *pack) stopped(s *agenda.Shift, steps []*expand.Step, tight bool) {
 	p := k.p
 	spare := agenda.Spare(k.a, s, 4)
-	p.heading("If you have to stop", 3*lineHeight(body))
-	p.para(joined(" ", "Make it safe, write down the time and why, tell the lead hand.", prefixed("Telephone ", k.job.Emergency.Phone)), body, false)
+	lead := ""
+	if tight {
+		p.skip(1.5)
+		lead = "If you have to stop."
+	} else {
+		p.heading("If you have to stop", 3*lineHeight(body))
+	}
+	p.para(joined(" ", lead, "Make it safe, write down the time and why, tell the lead hand.", prefixed("Telephone ", k.job.Emergency.Phone)), body, false)
 	var whole, safe []string
 	for i, st := range steps {
 		if st.InOneGo {
@@ -186,7 +209,9 @@ func (k *pack) stopped(s *agenda.Shift, steps []*expand.Step) {
 		p.para("In one go, not to be begun unless it can be finished: "+strings.Join(whole, ", ")+".", body, false)
 	}
 	if len(spare) == 0 {
-		p.para("Nothing planned for later is ready to be brought forward.", body, false)
+		if !tight {
+			p.para("Nothing planned for later is ready to be brought forward.", body, false)
+		}
 		return
 	}
 	p.para("Work planned for later that is ready; look first at reach, hire and who is free:", body, false)
@@ -200,9 +225,13 @@ func (k *pack) stopped(s *agenda.Shift, steps []*expand.Step) {
 }
 
 // begun has the boxes to fill in before work begins: permits first.
-func (k *pack) begun(s *agenda.Shift) {
+func (k *pack) begun(s *agenda.Shift, tight bool) {
 	p := k.p
-	p.heading("Before work begins", boxHeight+2*lineHeight(body))
+	if tight {
+		p.skip(1)
+	} else {
+		p.heading("Before work begins", boxHeight+2*lineHeight(body))
+	}
 	for _, g := range agenda.Permits(k.work, s) {
 		p.fields(3, field{label: upper(g.Name) + " no."}, field{label: "Valid", value: agenda.Opens(g, s.Zone)}, field{label: "Issued at, by"})
 	}

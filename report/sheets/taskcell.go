@@ -16,8 +16,7 @@ import (
 // by when below them. Notes that several tasks of the shift share come once below the table.
 func (k *pack) taskCell(s *agenda.Shift, st *expand.Step, shared []string) cell {
 	c := loud(agenda.StepLabel(k.work, st))
-	ps := k.planned(st)
-	who := joined(": ", where(s, st), strings.Join(names(ps.People, ps.Relief), ", "))
+	who := joined(": ", where(s, st), strings.Join(workers(s, st), ", "))
 	rules := ""
 	if st.Lone {
 		rules = "never alone"
@@ -75,11 +74,16 @@ func (k *pack) plannedCell(s *agenda.Shift, st *expand.Step) cell {
 	return say(slices.Compact(times)...)
 }
 
-// notesOf gives the notes of the task and of its estimate.
+// planners are marks of notes for who plans and packs; `sailby why` and the packing list have them.
+var planners = []string{"is counted in proportion", "open 1 of", "stands here to compare"}
+
+// notesOf gives the notes of the task and those of its estimate that the people at the work need.
 func notesOf(st *expand.Step) []string {
 	out := clean.Lines(st.Task.Note)
 	for _, n := range st.Estimate.Notes {
-		out = append(out, signs(n))
+		if !slices.ContainsFunc(planners, func(mark string) bool { return strings.Contains(n, mark) }) {
+			out = append(out, signs(n))
+		}
 	}
 	return out
 }
@@ -147,6 +151,17 @@ func hoursLeft(e agenda.Entry) string {
 		return ""
 	}
 	return ", " + quantity.Hours(n) + " of it then"
+}
+
+// workers names who works on a step in a shift; a relief of a later shift is on that shift's sheet.
+func workers(s *agenda.Shift, st *expand.Step) []string {
+	var out []string
+	for _, e := range s.Entries {
+		if e.Step == st && !e.Watch {
+			out = append(out, e.People...)
+		}
+	}
+	return names(out)
 }
 
 // lastEntry is the last piece of a step in a shift.
