@@ -59,8 +59,9 @@ func Covers(w *expand.Work, f *tasks.Workface, in hours.Span) []string {
 		if s.To <= in.From || off >= in.To {
 			continue
 		}
-		words := "covered " + Between(s, Zone(w, f.Place))
+		words := "covered until " + Clock(s.To, Zone(w, f.Place))
 		if s.From > in.From {
+			words = "covered " + Between(s, Zone(w, f.Place))
 			words = "way off by " + Clock(off, Zone(w, f.Place)) + ", " + words
 		}
 		out = append(out, words)

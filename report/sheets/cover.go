@@ -94,7 +94,7 @@ func (k *pack) deadlines() {
 	}
 	p := k.p
 	p.heading("Deadlines", 25)
-	t := p.table(column{"What", 24}, column{"Must be done by", 21}, column{"Planned", 20}, column{"In hand", 14}, column{"Last start that still makes it", 21})
+	t := p.table(column{"What", 24}, column{"Must be done by", 21}, column{"Planned finish", 20}, column{"In hand", 14}, column{"Latest start", 21})
 	for _, d := range k.a.Deadlines {
 		last := "-"
 		if d.LastStart < hours.Far {

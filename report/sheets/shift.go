@@ -145,7 +145,7 @@ func (k *pack) dayStrip(s *agenda.Shift, steps []*expand.Step) {
 	}
 	k.p.skip(2)
 	k.p.strip(s.Span, s.Zone, lanes)
-	legend := "Grey: there or on shift. Numbers: tasks below. Latest: done by then, or a deadline is missed."
+	legend := "Grey: there or on shift. Numbers: tasks below. Latest: later, and a deadline is missed."
 	if slices.ContainsFunc(s.Entries, func(e agenda.Entry) bool { return e.Watch }) {
 		legend += " w: fire watch."
 	}
@@ -156,7 +156,7 @@ func (k *pack) dayStrip(s *agenda.Shift, steps []*expand.Step) {
 func (k *pack) dayTasks(s *agenda.Shift, steps []*expand.Step) {
 	p := k.p
 	p.skip(2)
-	t := p.table(column{"No.", 10}, column{"Task", 77}, column{"Planned", 33}, column{"Started", 20}, column{"Finished", 21}, column{"Hours left", 22})
+	t := p.table(column{"No.", 10}, column{"Task", taskShare}, column{"Planned", 33}, column{"Started", 20}, column{"Finished", 21}, column{"Hours left", 22})
 	notes, numbers := sharedNotes(steps)
 	for i, st := range steps {
 		t.row(loud(fmt.Sprint(i+1)), k.taskCell(s, st, notes), k.plannedCell(s, st), write(), write(), write())

@@ -12,6 +12,9 @@ import (
 	"sailby/tasks/quantity"
 )
 
+// taskShare is the share of the column of tasks in 183.
+const taskShare = 77
+
 // taskCell says what the task is, where and who beside the boxes; how much of what, what holds and
 // by when below them. Notes that several tasks of the shift share come once below the table.
 func (k *pack) taskCell(s *agenda.Shift, st *expand.Step, shared []string) cell {
@@ -24,7 +27,10 @@ func (k *pack) taskCell(s *agenda.Shift, st *expand.Step, shared []string) cell 
 	if st.InOneGo {
 		rules = joined("; ", "in one go", rules)
 	}
-	if who = joined("; ", who, rules); who != "" {
+	if all := joined("; ", who, rules); len(wrapText(all, body, false, k.p.wide()*taskShare/183-2*pad)) == 1 {
+		who, rules = all, ""
+	}
+	if who != "" {
 		c.lines = append(c.lines, line{text: upper(who)})
 	}
 	add := func(bold bool, text string) {
@@ -32,7 +38,7 @@ func (k *pack) taskCell(s *agenda.Shift, st *expand.Step, shared []string) cell 
 			c.under = append(c.under, line{text, bold})
 		}
 	}
-	words := []string{signs(agenda.Amount(st)), prefixed("drawing ", st.Task.Drawing), prefixed("with ", kitWords(st))}
+	words := []string{rules, signs(agenda.Amount(st)), prefixed("drawing ", st.Task.Drawing), prefixed("with ", kitWords(st))}
 	for _, e := range s.Entries {
 		if e.Step == st && !e.Watch && e.Goes && e.Piece == lastEntry(s, st).Piece {
 			words = append(words, "goes on "+agenda.NextPiece(k.work, e)+hoursLeft(e))
@@ -190,7 +196,7 @@ func names(lists ...[]string) []string {
 func kitWords(st *expand.Step) string {
 	var out []string
 	for _, u := range st.Kit {
-		if u.Kit == nil {
+		if u.Kit == nil || u.Kit.Name == st.Task.By && u.Count <= 1 {
 			continue
 		}
 		n := paper(u.Kit.Name)

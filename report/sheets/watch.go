@@ -50,7 +50,7 @@ func upper(s string) string {
 	return strings.ToUpper(s[:1]) + s[1:]
 }
 
-// tightTasks names the tasks at the site with least leeway, at most four.
+// tightTasks names the tasks at the site with least leeway, at most three.
 func (k *pack) tightTasks() []string {
 	var list []int
 	for i, s := range k.work.Steps {
@@ -60,7 +60,7 @@ func (k *pack) tightTasks() []string {
 	}
 	slices.SortStableFunc(list, func(x, y int) int { return cmp.Compare(k.a.Rows[x].Leeway, k.a.Rows[y].Leeway) })
 	var parts []string
-	for _, i := range list[:min(len(list), 4)] {
+	for _, i := range list[:min(len(list), 3)] {
 		s := k.work.Steps[i]
 		parts = append(parts, fmt.Sprintf("%s by %s (%s)", agenda.StepLabel(k.work, s),
 			agenda.When(k.a.Rows[i].Latest, agenda.Zone(k.work, s.Place)), quantity.Hours(k.a.Rows[i].Leeway)))
@@ -68,7 +68,7 @@ func (k *pack) tightTasks() []string {
 	if len(parts) == 0 {
 		return nil
 	}
-	return []string{"Least leeway, to be finished by the time given or a deadline is missed: " + strings.Join(parts, "; ") + "."}
+	return []string{"Least leeway; finished later, a deadline is missed: " + strings.Join(parts, "; ") + "."}
 }
 
 // slots names the hire and outside people that come only when booked.
