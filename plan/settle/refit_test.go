@@ -15,11 +15,11 @@ import (
 // three steps, so that there are about a fifth more activities than tasks.
 func refit(tasks int, seed uint64) string {
 	rng := rand.New(rand.NewPCG(seed, 1))
-	days := max(5, tasks/14)
+	days := max(7, tasks/8)
 	var b strings.Builder
 	closes := 10 + days
 	month := 5
-	for _, n := range []int{31, 30, 31, 31, 30, 31} {
+	for _, n := range []int{31, 30, 31, 31, 30, 31, 30, 31} {
 		if closes <= n {
 			break
 		}

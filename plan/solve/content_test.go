@@ -131,6 +131,9 @@ func TestNoOverload(t *testing.T) {
 		"a person": pier(oneDay, "", "Ann: {}", "", `
   a: {at: pier, hours: 5 h, set-up: 0 min}
   b: {at: pier, hours: 3 h, set-up: 0 min}`),
+		"what somebody else may do": pier(oneDay, "", "Ann: {}, Bob: {}", "", `
+  a: {at: pier, hours: 5 h, who: Ann, set-up: 0 min}
+  b: {at: pier, hours: 4 h, people: 1, set-up: 0 min}`),
 		"a ticket that a third holds": pier(oneDay, "", "Ann: {tickets: [fitter]}, Bob: {tickets: [fitter]}, Cid: {tickets: [fitter]}", "", `
   a: {at: pier, hours: 6 h, needs: {fitter: 1}, set-up: 0 min}
   b: {at: pier, hours: 6 h, needs: {fitter: 1}, set-up: 0 min}
