@@ -114,10 +114,14 @@ func Fit(w *expand.Work, p *tasks.Place, in hours.Span) []Weathered {
 	return out
 }
 
-// FitWords writes the hours that nature leaves open: "primer by brush at hinge 10:00-15:00".
+// FitWords writes the hours that nature leaves open, of work that it closes for part of the span:
+// "primer by brush at hinge: 10:00-15:00".
 func FitWords(w *expand.Work, p *tasks.Place, in hours.Span) []string {
 	var out []string
 	for _, x := range Fit(w, p, in) {
+		if x.Open.Total() == in.Len() {
+			continue // nothing closes it: nothing to say
+		}
 		words := "no hour"
 		if x.Open.Total() > 0 {
 			var parts []string

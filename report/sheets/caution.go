@@ -118,7 +118,9 @@ func (k *pack) cautionPage() {
 	p.big("Cautions")
 	p.para("For the work in this job. Local rules, the permit and licensed practice come first.", body, false)
 	for _, c := range append(cautionsOf(k.work, k.work.Steps), always) {
-		p.heading(c.name, 2*lineHeight(body))
+		p.skip(1)
+		p.room(3 * lineHeight(body))
+		p.para(c.name, body, true)
 		p.para(strings.Join(c.full, " "), body, false)
 	}
 	var alone []string

@@ -165,7 +165,7 @@ func TestPages(t *testing.T) {
 			t.Errorf("page %d (%s) says to leave no box empty: %v, want %v", i+1, p.Name, got, form)
 		}
 	}
-	want := "cover|shift 2027-04-01|shift 2027-04-02|shift 2027-04-03|shift 2027-04-05|shift 2027-04-06|shift 2027-04-07|shift 2027-04-08|" +
+	want := "cover|shift 2027-04-01|shift 2027-04-02|shift 2027-04-03, 2027-04-05|shift 2027-04-06|shift 2027-04-07|shift 2027-04-08|" +
 		"shift 2027-04-09|handover|weld list|paint log|lift load frame|lift hang frame|packing|cautions"
 	if got := strings.Join(names, "|"); got != want {
 		t.Errorf("pages\n %s\nwant\n %s", got, want)
@@ -216,7 +216,7 @@ func TestSheetsSay(t *testing.T) {
 		{"cover", "open again Thu 8 Apr 17:30 Thu 8 Apr 16:00 1 h 30 min Thu 8 Apr 16:30"},
 		{"cover", "loader crane comes Wed 7 Apr 08:00-12:00"},
 		{"cover", "Tickets that only one person holds: slinger/signaller (Tom), weld (Ines)"},
-		{"cover", "look for it as early as you can: rot found (35 %)"},
+		{"cover", "Look early for what may come: rot found (35 %)"},
 		{"cover", agenda.Care},
 		{"shift 2027-04-07", "Wednesday 7 April 2027"},
 		{"shift 2027-04-07", "Tarskay pier, day 2 of 4, 07:30-18:00"},
@@ -229,7 +229,7 @@ func TestSheetsSay(t *testing.T) {
 		{"shift 2027-04-06", "Standing: resin set, Tarskay pier / deck, until Tue 6 Apr 23:10."},
 		{"shift 2027-04-06", "weld lugs, hinge, 7 h 40 min, from 11:00 on"},
 		{"shift 2027-04-08", "Must be done by 17:30"},
-		{"shift 2027-04-05", "the day of leaving"},
+		{"shift 2027-04-03, 2027-04-05", "the day of leaving"},
 		{"weld list", "L1-L4"},
 		{"weld list", "procedure site fillet"},
 		{"weld list", "136 flux-cored, preheat 50 °C"},
@@ -260,6 +260,46 @@ func TestLatePlanSaysSo(t *testing.T) {
 	for _, want := range []string{"This plan is late.", "These sheets are for the plan with every maybe.", "2 h 10 min late"} {
 		if !strings.Contains(s, want) {
 			t.Errorf("the cover of a late plan does not say %q", want)
+		}
+	}
+}
+
+// Short days at home share a page, and each keeps its boxes; a day at the site has its own page.
+func TestShortDaysShareAPage(t *testing.T) {
+	r := fixture.Report()
+	d := packed(t, r, Options{})
+	shared := 0
+	for _, p := range d.Pages {
+		if !strings.HasPrefix(p.Name, "shift ") {
+			continue
+		}
+		days := strings.Count(p.Name, "2027-")
+		if n := strings.Count(text(p), "Lead hand, name and signature\n"); days > 1 && n != days {
+			t.Errorf("page %q has %d places to sign, want %d", p.Name, n, days)
+		}
+		if days > 1 {
+			shared++
+		}
+		if days > 1 && strings.Contains(text(p), "Tarskay pier, day") {
+			t.Errorf("page %q has a day at the site on it", p.Name)
+		}
+	}
+	if shared == 0 {
+		t.Error("no page has two days on it, and the fixture has short days at home")
+	}
+}
+
+// The names of units and nothing else change.
+func TestSigns(t *testing.T) {
+	for in, want := range map[string]string{
+		"6 m2, primer": "6 m², primer", "147 um": "147 µm", "steel at least 5 C; wind": "steel at least 5 °C; wind", "24.5 mm2": "24.5 mm²", "0.5 m3": "0.5 m³",
+		"TP-2 Cm": "TP-2 Cm", "16 °C": "16 °C", "bay C": "bay C", "3 umbrellas": "3 umbrellas",
+	} {
+		if got := signs(in); got != want {
+			t.Errorf("signs(%q) = %q, want %q", in, got, want)
+		}
+		if got := signs(signs(in)); got != want {
+			t.Errorf("signs twice made %q", got)
 		}
 	}
 }

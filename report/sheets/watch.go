@@ -40,7 +40,7 @@ func (k *pack) lateSides() []string {
 	if len(parts) == 0 {
 		return nil
 	}
-	return []string{upper(strings.Join(parts, "; ")) + ": agree now what is left out or left for later."}
+	return []string{upper(strings.Join(parts, "; ")) + ": agree now what can be left out."}
 }
 
 func upper(s string) string {
@@ -139,5 +139,5 @@ func (k *pack) maybes() []string {
 	if len(parts) == 0 {
 		return nil
 	}
-	return []string{"May come, with its chance; look for it as early as you can: " + strings.Join(parts, ", ") + "."}
+	return []string{"Look early for what may come: " + strings.Join(parts, ", ") + "."}
 }
