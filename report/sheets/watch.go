@@ -30,11 +30,17 @@ func (k *pack) watchList() {
 
 // lateSides names the other two answers where they do not fit.
 func (k *pack) lateSides() []string {
+	words := map[plan.Verdict]string{plan.CannotFit: "cannot fit", plan.Unsettled: "was not shown to fit"}
 	var parts []string
-	for _, a := range []*plan.Answer{k.report.Maybes, k.report.High} {
-		if a != nil && a != k.a && a.Verdict != plan.Fits {
-			parts = append(parts, fmt.Sprintf("%s it %s", agenda.BasisWords(a.Work.Basis),
-				map[plan.Verdict]string{plan.CannotFit: "cannot fit", plan.Unsettled: "was not shown to fit"}[a.Verdict]))
+	for _, v := range []plan.Verdict{plan.CannotFit, plan.Unsettled} {
+		var on []string
+		for _, a := range []*plan.Answer{k.report.Maybes, k.report.High} {
+			if a != nil && a != k.a && a.Verdict == v {
+				on = append(on, agenda.BasisWords(a.Work.Basis))
+			}
+		}
+		if len(on) > 0 {
+			parts = append(parts, strings.Join(on, " and ")+" it "+words[v])
 		}
 	}
 	if len(parts) == 0 {
