@@ -161,7 +161,7 @@ func ClosedWords(w *expand.Work, p *tasks.Place, x Weathered) []string {
 	}
 	var out []string
 	for _, r := range runs {
-		out = append(out, Between(r.Span, Zone(w, p))+" "+r.why)
+		out = append(out, Between(r.Span, Zone(w, p))+": "+r.why)
 	}
 	return out
 }

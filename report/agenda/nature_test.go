@@ -64,7 +64,7 @@ func TestHoursThatNatureLeaves(t *testing.T) {
 	}
 	fit := agenda.Fit(w, slip, day)
 	closed := strings.Join(agenda.ClosedWords(w, slip, fit[0]), "\n")
-	for _, want := range []string{"07:00-08:00 steel 6.0 C is below", "08:00-09:00 steel 10.0 C is only 2.0 K above", "11:00-19:00", "must stay dry for 8 h: steel 6.0 C is below the dew point 8.0 C at Tue 19:00"} {
+	for _, want := range []string{"07:00-08:00: steel 6.0 C is below", "08:00-09:00: steel 10.0 C is only 2.0 K above", "11:00-19:00", "must stay dry for 8 h: steel 6.0 C is below the dew point 8.0 C at Tue 19:00"} {
 		if !strings.Contains(closed, want) {
 			t.Errorf("no %q in\n%s", want, closed)
 		}

@@ -30,7 +30,7 @@ func (k *pack) conditions(s *agenda.Shift, steps []*expand.Step) {
 		p.point("-", l, false)
 	}
 	// Coats have their later readings in the paint log.
-	if row := []field{{label: "Read at"}, {label: "Air °C"}, {label: "Humidity %"}, {label: "Dew point °C"}, {label: "Steel °C"}, {label: "Steel above it"}}; len(painted) > 0 {
+	if row := []field{{label: "Read at"}, {label: "Air °C"}, {label: "Humidity %"}, {label: "Dew point °C"}, {label: "Steel °C"}, {label: "Above dew, K"}}; len(painted) > 0 {
 		p.fields(6, row...)
 	} else if bare {
 		p.fields(6, append(row, row...)...)

@@ -47,7 +47,7 @@ func TestWeatherAndWaterOnTheSheets(t *testing.T) {
 		job, page string
 		want      []string
 	}{
-		{"evening-dew.yaml", "shift 2027-06-08", []string{"Weather and water", "Planned with forecast", "Quick by brush closed 07:00-08:00 steel", "must stay dry for 8 h", "steel at least 5 °C", "Dew point °C", "Steel above it"}},
+		{"evening-dew.yaml", "shift 2027-06-08", []string{"Weather and water", "Planned with forecast", "Quick by brush closed 07:00-08:00: steel", "must stay dry for 8 h", "steel at least 5 °C", "Dew point °C", "Above dew, K"}},
 		{"evening-dew.yaml", "paint log", []string{"Planned with: air 15 °C; dew point 8 °C; steel 14 °C; steel above dew point 6 K"}},
 		{"covered-coat.yaml", "shift 2027-06-08", []string{"Foot: way off by 13:07, covered 13:07-18:53", "is not fit for water before it is covered at Tue 13:07"}},
 		{"neaped.yaml", "cover", []string{"Getting off again at slip: neaped"}},
