@@ -9,11 +9,10 @@ import (
 // each clause are watched: it is looked at only when one of them fails (Moskewicz et al. 2001).
 // The clause at ref has its header in facts[ref-2] and facts[ref-1].
 type store struct {
-	facts   []fact
-	refs    []int32 // the clauses in the order learnt
-	watch   [][]watcher
-	garbage int     // facts of dropped clauses
-	bump    float32 // what one use adds to a clause's activity
+	facts []fact
+	refs  []int32 // the clauses in the order learnt
+	watch [][]watcher
+	bump  float32 // what one use adds to a clause's activity
 }
 
 // watcher looks at clause ref when its side reaches from; if ahead holds there is nothing to do.

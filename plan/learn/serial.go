@@ -15,7 +15,6 @@ type shop struct {
 	rank   []int32   // an order in which every activity comes after those it waits for
 	prof   *profile
 	idle   []bool // asks for nothing
-	ids    []int32
 }
 
 type lagTo struct{ other, lag int32 }

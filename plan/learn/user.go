@@ -15,6 +15,5 @@ func (e *engine) latestFinish(u *user) int32   { return u.length - e.now[u.finis
 // startBy and finishFrom are the facts that the user starts at t or before, and that it finishes
 // at t or later.
 func (u *user) startBy(t int32) fact    { return fact{u.start ^ 1, -t} }
-func (u *user) startFrom(t int32) fact  { return fact{u.start, t} }
 func (u *user) finishFrom(t int32) fact { return fact{u.finish, t - u.length} }
 func (u *user) finishBy(t int32) fact   { return fact{u.finish ^ 1, u.length - t} }

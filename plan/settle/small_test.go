@@ -40,25 +40,23 @@ func checks(t *testing.T, n int) {
 // small is a small job made at random, in parts, so that a law can change one of them before it is
 // written as a job file: a shop, a pier with two workfaces, a window of two or three days, two or three people.
 type small struct {
-	monday   time.Time // first day of the window
-	zones    [2]string // shop, pier
-	days     int
-	trip     bool
-	duty     string
-	shop     string
-	pier     []string
-	faces    [2][]string
-	people   []string // tickets and the rest
-	names    []string
-	noClash  bool
-	kit      []string
-	hire     bool
-	tasks    []smallTask
-	orders   []string
-	closeAt  string
-	openAt   string
-	grain    int // all opening hours are multiples of this many minutes; with 30 all lengths too
-	deadline bool
+	monday  time.Time // first day of the window
+	zones   [2]string // shop, pier
+	days    int
+	trip    bool
+	duty    string
+	shop    string
+	pier    []string
+	faces   [2][]string
+	people  []string // tickets and the rest
+	names   []string
+	kit     []string
+	hire    bool
+	tasks   []smallTask
+	orders  []string
+	closeAt string
+	openAt  string
+	grain   int // all opening hours are multiples of this many minutes; with 30 all lengths too
 }
 
 // smallTask is one task: its own keys, and its links by key.
