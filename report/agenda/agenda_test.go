@@ -264,6 +264,33 @@ func TestOutsidePeopleJoinTheCrew(t *testing.T) {
 	}
 }
 
+// TestABookingDoesNotStretchAShift: an inspector booked until late at night keeps
+// neither the sheet's hours nor his own on it open beyond the crew's.
+func TestABookingDoesNotStretchAShift(t *testing.T) {
+	r := fixture.Report()
+	var want hours.Span
+	for _, s := range agenda.Shifts(r.Likely) {
+		if s.Date.String() == "2027-04-08" && s.Site {
+			want = s.Span
+		}
+	}
+	slot := &r.Job.People[4].Booked[0]
+	slot.To.Minute = 23*60 + 30
+	for _, s := range agenda.Shifts(r.Likely) {
+		if s.Date.String() != "2027-04-08" || !s.Site {
+			continue
+		}
+		if s.Span != want {
+			t.Errorf("the shift is %v, want %v", s.Span, want)
+		}
+		for _, p := range s.People {
+			if p.On.From < s.From || p.On.To > s.To {
+				t.Errorf("%s is on shift %v, outside the shift's %v", p.Name, p.On, s.Span)
+			}
+		}
+	}
+}
+
 func TestStepLabels(t *testing.T) {
 	w := fixture.Report().Likely.Work
 	var got []string
