@@ -95,9 +95,9 @@ func mixed(h *hands, p *tasks.Paint, a coat.Application, temperatureOf float64) 
 			fig.Value = math.Floor(pot)
 			h.est.Facts = append(h.est.Facts, fig)
 		}
-		note := fmt.Sprintf("%d mixes of %s L", a.Batches, origin.Trim(a.BatchLitres))
+		note := fmt.Sprintf("%d mixes of %s L", a.Batches, origin.Trim(math.Ceil(a.BatchLitres*10-1e-9)/10))
 		if a.Batches == 1 {
-			note = fmt.Sprintf("one mix of %s L", origin.Trim(a.BatchLitres))
+			note = fmt.Sprintf("one mix of %s L", origin.Trim(math.Ceil(a.BatchLitres*10-1e-9)/10))
 		}
 		note += fmt.Sprintf(", each used within %s of mixing at %s", quantity.Hours(int(a.UseWithin)), temperature(math.Round(temperatureOf*10)/10))
 		if a.Hardener > 0 {
