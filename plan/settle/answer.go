@@ -44,6 +44,9 @@ func answer(ctx context.Context, job *tasks.Job, b expand.Basis, o Options, expl
 	if err := a.find(explain); err != nil {
 		return nil, err
 	}
+	if o.left() {
+		return nil, ErrStopped
+	}
 	a.verdict()
 	return a.out, nil
 }
@@ -62,6 +65,9 @@ func ask(ctx context.Context, job *tasks.Job, b expand.Basis, o Options) (*asked
 	w, faults := expand.Expand(job, b)
 	if len(faults) > 0 {
 		return nil, faults
+	}
+	if o.left() {
+		return nil, ErrStopped
 	}
 	return &asked{ctx: ctx, o: o, work: w, p: problem.Compile(w), out: &plan.Answer{Work: w}}, nil
 }
@@ -89,6 +95,9 @@ func (a *asked) prove() {
 	a.bounds = b
 	if conflict != nil {
 		a.out.Proof = a.chain(conflict)
+		return
+	}
+	if a.o.left() {
 		return
 	}
 	a.say("work against open hours")
@@ -126,6 +135,9 @@ func (a *asked) bound(loads []*solve.Load) {
 
 // find searches for a plan and has it checked.
 func (a *asked) find(explain bool) error {
+	if a.o.left() {
+		return nil
+	}
 	a.say("plans")
 	a.carry = problem.Compile(a.work.Carry())
 	b, ok := undated(a.carry)
@@ -137,7 +149,7 @@ func (a *asked) find(explain bool) error {
 		}
 	}
 	bound := int(a.out.Bound - a.p.Base)
-	o := solve.Options{Ticks: a.o.ticks(len(a.carry.Acts)), Stop: a.stop, Seed: a.o.Seed, Good: func(s solve.Score) bool {
+	o := solve.Options{Ticks: a.o.ticks(len(a.carry.Acts)), Stop: a.stop, Quit: a.o.left, Seed: a.o.Seed, Good: func(s solve.Score) bool {
 		return a.out.Proof == nil && s.Late == 0 && s.Finish <= bound && s.Hand == 0 && s.Stops == 0
 	}}
 	res := solve.Find(a.carry, b, o)
@@ -180,6 +192,9 @@ func (a *asked) find(explain bool) error {
 		a.learning(nil)
 	}
 	a.out.CutShort = a.stop()
+	if a.o.left() {
+		return nil
+	}
 	if res.Best == nil {
 		a.out.NoPlan = "the search found none, not even a late one"
 		return nil

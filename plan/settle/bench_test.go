@@ -118,7 +118,7 @@ func BenchmarkCancel(b *testing.B) {
 			idle := runtime.NumGoroutine()
 			ctx, cancel := context.WithCancel(context.Background())
 			var at time.Time
-			after := time.AfterFunc(time.Duration(k*k)*time.Millisecond, func() { at = time.Now(); cancel() })
+			after := time.AfterFunc(time.Duration(k*k)*time.Millisecond/2, func() { at = time.Now(); cancel() })
 			rep, err := Ask(ctx, job, Options{})
 			back := time.Now()
 			if err != nil && !errors.Is(err, ErrStopped) {

@@ -20,7 +20,12 @@ type Options struct {
 	Ticks    int64             // starts tried for each basis; 0 is by the size of the job
 	Only     bool              // likely hours only: no maybes, no high end (for what-if)
 	Progress func(text string) // called now and then with what is being done; may be nil
+
+	gone *atomic.Bool // nobody waits for the answer any more
 }
+
+// left says whether the asker has gone away: the rest of the work is for nobody.
+func (o Options) left() bool { return o.gone != nil && o.gone.Load() }
 
 // The work done for each basis before the search rests, in starts tried: a small job has its
 // verdict within a second, a large one gets more. Where no fitting plan and no proof is found, the
@@ -55,6 +60,7 @@ func Ask(ctx context.Context, job *tasks.Job, o Options) (*plan.Report, error) {
 		err error
 	}
 	var sofar atomic.Pointer[plan.Report]
+	o.gone = &atomic.Bool{}
 	done := make(chan result, 1)
 	go func() {
 		rep, err := settle(ctx, job, o, &sofar)
@@ -76,6 +82,7 @@ func Ask(ctx context.Context, job *tasks.Job, o Options) (*plan.Report, error) {
 		return r.rep, r.err
 	case <-grace.C:
 	}
+	o.gone.Store(true)
 	if rep := sofar.Load(); rep != nil {
 		return rep, nil
 	}

@@ -25,6 +25,7 @@ type generator struct {
 	stuck      int         // the activity that found no place, -1 if none
 	pending    []int       // by activity: unplaced activities that it waits for
 	queue      queue
+	quit       func() bool // true ends a schedule in the middle; nil for never
 	trace      func(block) // told of what stands in the way; nil for none
 }
 
@@ -69,7 +70,7 @@ func (g *generator) run(order []int) bool {
 			return false
 		}
 		i := g.next()
-		if i < 0 {
+		if i < 0 || g.quits() {
 			return false
 		}
 		if !g.place(i) {
@@ -318,3 +319,6 @@ type linkSkip struct {
 func (k *linkSkip) link(i int) bool  { return k != nil && k.links[i] }
 func (k *linkSkip) from(int) bool    { return k != nil && k.begin }
 func (k *linkSkip) order(i int) bool { return k != nil && k.orders[i] }
+
+// quits says whether a schedule is to end in the middle.
+func (g *generator) quits() bool { return g.quit != nil && g.quit() }

@@ -22,7 +22,8 @@ type Watch struct{ From, To, Who int }
 // Options bound a search.
 type Options struct {
 	Ticks int64       // starts tried before it ends; 0 is no limit
-	Stop  func() bool // asked often; true ends the search
+	Stop  func() bool // asked often; true ends the search after the schedule that is being made
+	Quit  func() bool // asked more often; true ends it in the middle of a schedule
 	Seed  uint64
 	Good  func(Score) bool // true ends the search: nothing better is wanted
 }
@@ -42,6 +43,7 @@ type Result struct {
 // forward-backward improvement (justification) after Valls, Ballestin and Quintanilla (EJOR 2005).
 func Find(p *problem.Problem, b network.Bounds, o Options) Result {
 	f := &finder{g: newGenerator(p), p: p, b: b, o: o, rng: rand.New(rand.NewPCG(o.Seed, 0x5a11b7))}
+	f.g.quit = o.Quit
 	f.leaning = newLeaning(len(p.Acts))
 	f.holdable, f.calmable = f.g.yielding()
 	f.g.stop = o.Stop
@@ -72,7 +74,7 @@ func (f *finder) over() bool {
 	if f.best != nil && f.o.Good != nil && f.o.Good(f.best.Score) {
 		return true
 	}
-	if f.o.Ticks > 0 && f.g.ticks >= f.o.Ticks || f.o.Stop != nil && f.o.Stop() {
+	if f.o.Ticks > 0 && f.g.ticks >= f.o.Ticks || f.o.Stop != nil && f.o.Stop() || f.g.quits() {
 		f.cut = true
 		return true
 	}
