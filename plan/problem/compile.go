@@ -124,7 +124,7 @@ func (p *Problem) resources() {
 			}
 		}
 		if kva, limited := Supply(w, place); limited {
-			add(Resource{Name: "power at " + place.Name, Kind: Power, Capacity: int(math.Round(kva * 1000)), Pos: place.Pos}, func(s *expand.Step) (int, bool) {
+			add(Resource{Name: "power at " + place.Name, Kind: Power, Capacity: int(math.Round(kva * 1000)), Taken: p.hiredAway(place), Pos: place.Pos}, func(s *expand.Step) (int, bool) {
 				if s.Place == place {
 					return int(math.Round(s.Power * 1000)), false
 				}
@@ -132,6 +132,21 @@ func (p *Problem) resources() {
 			})
 		}
 	}
+}
+
+// hiredAway gives the power of hired generators at a place in the hours in which they are not there.
+func (p *Problem) hiredAway(place *tasks.Place) []Taken {
+	var out []Taken
+	for _, k := range p.Work.Job.Kit {
+		slots, hired := p.ground.hire[k]
+		if !hired || k.Gives <= 0 || k.At != place && !(k.At == nil && place == p.Work.Window.Place) {
+			continue
+		}
+		for _, s := range moved(hours.Set{p.ground.span}.Less(slots), -p.Base) {
+			out = append(out, Taken{int(s.From), int(s.To), int(math.Round(k.Gives * float64(max(k.Count, 1)) * 1000))})
+		}
+	}
+	return out
 }
 
 // watchers counts the people of a step who only watch.

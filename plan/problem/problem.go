@@ -76,8 +76,12 @@ type Resource struct {
 	Name     string
 	Kind     ResourceKind
 	Capacity int
+	Taken    []Taken // what is not there at some hours: hired generators outside their slots
 	Pos      tasks.Pos
 }
+
+// Taken is an amount of a resource that is not there from From to To.
+type Taken struct{ From, To, Amount int }
 
 // Person is somebody with the shifts fixed before planning (R15).
 type Person struct {

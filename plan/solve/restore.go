@@ -13,6 +13,7 @@ func Restore(p *problem.Problem, start, mode []int, watches [][]Watch) *Schedule
 		return nil
 	}
 	g := newGenerator(p)
+	g.reset()
 	g.kept = watches
 	order := make([]int, len(start))
 	for i := range order {

@@ -61,6 +61,9 @@ func (s *state) reset() {
 	}
 	for i := range s.use {
 		s.use[i] = s.use[i][:0]
+		for _, t := range s.p.Res[i].Taken {
+			s.change(i, t.From, t.To, t.Amount)
+		}
 	}
 }
 
