@@ -59,13 +59,13 @@ var mayImport = map[string][]string{
 
 // onlyHere holds modules to the one package that may import them.
 var onlyHere = map[string][]string{
-	"github.com/jung-kurt/gofpdf":    {"report/pdf"},
-	"github.com/rivo/tview":          {"report/screen"},
-	"github.com/spf13/cobra":         {"cmd/sailby"},
-	"gopkg.in/yaml.v3":               {"tasks/jobfile"},
-	"github.com/arran4/golang-ical":  {"report/export"},
-	"github.com/rickar/cal/v2":       {"tasks/jobfile", "tasks/hours"},
-	"github.com/gdamore/tcell/v2":    {"report/screen", "cmd/sailby"},
+	"github.com/jung-kurt/gofpdf":   {"report/pdf"},
+	"github.com/rivo/tview":         {"report/screen"},
+	"github.com/spf13/cobra":        {"cmd/sailby"},
+	"gopkg.in/yaml.v3":              {"tasks/jobfile"},
+	"github.com/arran4/golang-ical": {"report/export"},
+	"github.com/rickar/cal/v2":      {"tasks/jobfile", "tasks/hours"},
+	"github.com/gdamore/tcell/v2":   {"report/screen", "cmd/sailby"},
 }
 
 func TestWhoMayImportWhom(t *testing.T) {

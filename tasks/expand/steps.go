@@ -1,8 +1,6 @@
 package expand
 
 import (
-	"strings"
-
 	"sailby/tasks"
 	"sailby/tasks/hours"
 	"sailby/tasks/origin"
@@ -120,74 +118,6 @@ func (x *expander) stopping(t *tasks.Task, s *Step, h hands, face func(float64) 
 	s.LeastPiece = min(own(t.LeastPiece, h.least), s.Working)
 }
 
-// nature sets what kind of work the step is: hot, noisy, in need of light or of company.
-func (x *expander) nature(t *tasks.Task, s *Step, h hands) {
-	s.Hot, s.Noisy, s.Light = h.hot, h.noisy, t.Light
-	if t.HotWork != nil {
-		s.Hot = *t.HotWork
-	}
-	if t.Noisy != nil {
-		s.Noisy = *t.Noisy
-	}
-	s.Lone = mayNotBeAlone(t, s.Hot)
-	if t.Kind == tasks.Lift || t.Kind == tasks.Move {
-		s.Moves = asm(t.Lifts)
-	}
-	for _, n := range t.Joins {
-		if !has(t.Parts, n.Name) {
-			s.Works = append(s.Works, asm(n.Name))
-		}
-	}
-	for _, list := range [][]string{t.Parts, t.Surface} {
-		for _, p := range list {
-			s.Works = append(s.Works, asm(p))
-		}
-	}
-}
-
-// mayNotBeAlone says whether R14 lists the work, and its author has not said that it may be done alone.
-func mayNotBeAlone(t *tasks.Task, hot bool) bool {
-	if t.Lone != nil && !*t.Lone {
-		return false
-	}
-	f := t.Face
-	return hot || t.Kind == tasks.Lift || f != nil && (f.Closed || f.Water || f.Tidal)
-}
-
-// permits lists the permits that the step wants (R23).
-func (x *expander) permits(t *tasks.Task, s *Step) {
-	for _, p := range t.Place.Permits {
-		if permitFor(p.For, t, s) {
-			s.Wants = append(s.Wants, p.Name)
-		}
-	}
-}
-
-func asm(name string) string {
-	a, _, _ := strings.Cut(name, "/")
-	return a
-}
-
-func permitFor(what string, t *tasks.Task, s *Step) bool {
-	f := t.Face
-	switch what {
-	case "all", "", string(t.Kind):
-		return true
-	case "closed space":
-		return f != nil && f.Closed
-	case "over water":
-		return f != nil && f.Water
-	case "between tides":
-		return f != nil && f.Tidal
-	}
-	for _, st := range s.States {
-		if st.Name == what {
-			return true
-		}
-	}
-	return what == tasks.HotWorkState && s.Hot
-}
-
 // hotWork adds the fire watch (R13).
 func (x *expander) hotWork(t *tasks.Task, s *Step) {
 	if !s.Hot {
@@ -258,29 +188,6 @@ func uses(list []tasks.Use, k *tasks.Kit) bool {
 		}
 	}
 	return false
-}
-
-// statesOf sets the states of the step's kind (R12).
-func (x *expander) statesOf(t *tasks.Task, s *Step, h hands) {
-	var watched func(hours.Minute) hours.Minute
-	if s.Watch > 0 { // until the fire watch ends a spark may glow, and whoever keeps it is there (R13)
-		watch := hours.Minute(s.Watch)
-		watched = func(finish hours.Minute) hours.Minute { return finish + watch }
-	}
-	if s.Hot {
-		s.States = append(s.States, State{Name: tasks.HotWorkState, Tail: watched, What: "fire watch"})
-	}
-	if h.grit && t.Kind == tasks.Prep {
-		s.States = append(s.States, State{Name: tasks.Grit})
-	}
-	if t.Kind == tasks.Lift {
-		s.States = append(s.States, State{Name: tasks.LoadOverhead})
-	} else {
-		s.States = append(s.States, State{Name: tasks.PeopleState, Tail: watched, What: "fire watch"})
-	}
-	for _, name := range t.States {
-		s.States = append(s.States, State{Name: name})
-	}
 }
 
 // standing adds the clock time that a task keeps: alone, or after its hands-on part.
@@ -358,104 +265,4 @@ func (x *expander) tested(t *tasks.Task) bool {
 		}
 	}
 	return false
-}
-
-// moment resolves a moment and reports one that cannot be.
-func (x *expander) moment(m tasks.Moment) hours.Minute {
-	at, clock, ok := x.w.Window.At(m)
-	if !ok {
-		why := "that weekday does not fall just once in the window"
-		if clock == hours.Gap {
-			why = "the clocks go forward over it"
-		}
-		x.fault(m.Pos, "write the date, for instance "+x.w.Window.DayOne().String()+" 10:15", "time %q: %s", m.Text, why)
-	}
-	return at
-}
-
-// deadlines collects the deadlines and puts them on the steps (R18).
-func (x *expander) deadlines() {
-	w := x.w
-	w.Deadlines = append(w.Deadlines, Deadline{By: w.Window.Closes, Pos: w.Window.Pos})
-	for _, t := range w.Job.Tasks {
-		if t.Deadline == nil || x.absent[t] || len(x.first[t]) == 0 {
-			continue
-		}
-		by := x.moment(*t.Deadline)
-		step := x.lastHands(t)
-		step.Deadline = min(step.Deadline, by)
-		w.Deadlines = append(w.Deadlines, Deadline{Task: t, Step: step, By: by, Pos: t.Deadline.Pos})
-	}
-}
-
-// lastHands gives the last step of t that people work on, or its last step.
-func (x *expander) lastHands(t *tasks.Task) *Step {
-	steps := x.first[t]
-	for i := len(steps) - 1; i >= 0; i-- {
-		if steps[i].Class == Hands {
-			return steps[i]
-		}
-	}
-	return steps[len(steps)-1]
-}
-
-// homeward holds home work on a travelled assembly to the time of leaving (R1).
-func (x *expander) homeward() {
-	w := x.w
-	leaves := w.Window.Opens
-	if w.Trip != nil {
-		leaves = w.Trip.Leaves
-	}
-	travels := map[string]bool{}
-	for _, s := range w.Steps {
-		if s.Site {
-			for _, a := range append(s.Works, s.Moves) {
-				travels[a] = a != ""
-			}
-		}
-	}
-	for _, s := range append([]*Step(nil), w.Steps...) {
-		if s.Site || s.Absent {
-			continue
-		}
-		for _, a := range append(s.Works, s.Moves) {
-			if !travels[a] {
-				continue
-			}
-			s.Deadline = min(s.Deadline, leaves)
-			if s.Task.Kind == tasks.Coat && s == x.lastHands(s.Task) { // what travels is dry to handle (R11)
-				if dry, err := x.filmState(s.Task, "hard dry", nil); err == nil {
-					dry.Deadline = min(dry.Deadline, leaves)
-				}
-			}
-		}
-	}
-}
-
-// orders resolves the order rules (R17).
-func (x *expander) orders() {
-	for _, o := range x.w.Job.Orders {
-		out := Order{Pos: o.Pos, Text: o.Text}
-		for _, c := range o.Choices {
-			a, b := x.byName[c.First], x.byName[c.Then]
-			if a == nil || b == nil || x.absent[a] || x.absent[b] {
-				out.Choices = nil
-				break
-			}
-			out.Choices = append(out.Choices, Before{First: x.handsOf(a), Then: x.handsOf(b)})
-		}
-		if len(out.Choices) > 0 {
-			x.w.Orders = append(x.w.Orders, out)
-		}
-	}
-}
-
-func (x *expander) handsOf(t *tasks.Task) []*Step {
-	var out []*Step
-	for _, s := range x.first[t] {
-		if s.Class == Hands {
-			out = append(out, s)
-		}
-	}
-	return out
 }
