@@ -234,6 +234,10 @@ func (a *asked) keep(s *solve.Schedule, explain bool) error {
 		a.out.NoPlan = "the search found none in which what goes along is ready before the trip leaves, not even a late one"
 		return nil
 	}
+	if late && a.carry == a.p && s.Score.Finish > a.p.Close {
+		a.out.NoPlan = "the search found none: work at home waits for work at the site, and that runs past the window"
+		return nil
+	}
 	work := a.work
 	if late {
 		work = a.carry.Work

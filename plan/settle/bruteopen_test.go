@@ -20,6 +20,7 @@ type brute struct {
 	tick  int          // minutes: all that is open changes on it
 	hi    hours.Minute // nothing is tried after it
 	lines map[string][]bool
+	early bool // the window need not be open yet
 
 	clashes map[[2]string]bool
 	between map[[2]int][]int // links by the steps that they join
@@ -57,12 +58,12 @@ var unary = []string{"R1", "R2", "R5", "R13", "R14", "R15", "R23", "R25", "R26"}
 // open asks the checker in which minutes a team can work on a step, or with a relief either of
 // the two: one probe of a minute for each.
 func (b *brute) open(s *expand.Step, team, relief []string) []bool {
-	key := fmt.Sprint(s.Index, team, relief)
+	key := fmt.Sprint(s.Index, team, relief, b.early)
 	if l := b.lines[key]; l != nil {
 		return l
 	}
 	l := b.probe(b.w, *s, plan.Step{People: team, Relief: relief}, 0, func(br check.Breach) bool {
-		return slices.Contains(unary, br.Rule) && (br.Rule != "R13" || strings.Contains(br.Text, "is worked when"))
+		return slices.Contains(unary, br.Rule) && !(b.early && br.Rule == "R2") && (br.Rule != "R13" || strings.Contains(br.Text, "is worked when"))
 	})
 	b.lines[key] = l
 	return l

@@ -16,6 +16,7 @@ type option struct {
 	end hours.Minute // its finish, fire watches included
 
 	stops []int // after which a fire watch is kept, minutes of the span
+	halts int   // how many stops it has, its finish counted
 }
 
 // options lists every way to do a step with a start on the lattice, or, for what begins when
@@ -159,6 +160,7 @@ func (b *brute) hands(o option, c choice, i int) (option, bool) {
 	}
 	o.Finish = b.minute(last + 1)
 	o.end = o.Finish
+	o.halts = len(r.stops)
 	if s.Watch > 0 {
 		o.stops = r.stops
 	}

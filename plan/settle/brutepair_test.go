@@ -23,6 +23,7 @@ type without struct {
 	orders  bool
 	begin   bool // its not-before time
 	clock   bool // its hours: it takes its working minutes at any time
+	calm    bool // nothing but this: no start that makes it stop more often counts
 }
 
 var nothing without

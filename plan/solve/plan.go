@@ -52,7 +52,8 @@ func Compact(p *problem.Problem, s *Schedule) *Schedule {
 }
 
 // nearEnough raises the bounds of i so that no longest wait to something later, where it stands
-// in best, is broken.
+// in best, is broken, and no wait for something that begins later than i does (i may have to finish
+// after it).
 func (g *generator) nearEnough(i int, best *Schedule, lo, fin int) (int, int) {
 	for _, k := range g.from[i] {
 		l := &g.p.Links[k]
@@ -64,6 +65,21 @@ func (g *generator) nearEnough(i int, best *Schedule, lo, fin int) (int, int) {
 			end = best.Finish[l.To]
 		}
 		if t := pulledTo(l, end, lo); l.FromEnd == tasks.Finish {
+			fin = max(fin, t)
+		} else {
+			lo = max(lo, t)
+		}
+	}
+	for _, k := range g.into[i] {
+		l := &g.p.Links[k]
+		if l.From < 0 || g.placed[l.From] {
+			continue
+		}
+		t := best.Finish[l.From]
+		if l.FromEnd == tasks.Start {
+			t = best.Start[l.From]
+		}
+		if t = l.Earliest(t); l.ToEnd == tasks.Finish {
 			fin = max(fin, t)
 		} else {
 			lo = max(lo, t)
