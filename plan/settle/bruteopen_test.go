@@ -179,7 +179,7 @@ type run struct {
 // where it may not start there.
 func walk(s *expand.Step, open, access []bool, t int) (r run, ok bool) {
 	left := s.Working
-	if !open[t] {
+	if t >= len(open) || !open[t] {
 		return r, false
 	}
 	for first := true; left > 0; first = false {

@@ -62,15 +62,15 @@ func (r *replay) place(j int, done []*option, want func(o *option) bool) *option
 	own := r.all[j]
 	for t := r.index(own.Start); t < r.index(r.hi); t++ {
 		for _, x := range r.tries(own, t, false) {
-			if !want(&x) {
-				continue
+			if !want(&x) || !x.s.Site && x.Finish > r.w.Window.Closes && own.Finish <= r.w.Window.Closes {
+				continue // home work is not put off until everybody is home again
 			}
 			fits := true
 			for k, y := range done {
 				if y == nil {
 					continue
 				}
-				if !r.apart(&x, y, &nothing) || !r.soon(y, &x) || r.all[k].end <= own.Start && y.Finish > x.Start && r.rivals(r.all[k], own) {
+				if !r.apart(&x, y, &nothing) || !r.soon(y, &x) || y.Finish > x.Start && r.rivals(r.all[k], own) {
 					fits = false
 					break
 				}
@@ -98,13 +98,23 @@ func (r *replay) soon(y, x *option) bool {
 	return true
 }
 
-// rivals says whether two steps could not run side by side: for people, kit, room, power, states.
+// rivals says whether y begins in the plan only after x has given up what both want: somebody, kit,
+// room, power, a workface.
 func (r *replay) rivals(x, y *option) bool {
 	if x.Start == x.Finish || y.Start == y.Finish {
 		return false
 	}
-	for _, a := range slices.Concat(x.People, x.Relief, keepers(x)) {
-		if slices.Contains(slices.Concat(y.People, y.Relief), a) {
+	people := slices.Concat(y.People, y.Relief)
+	for _, w := range x.Watches {
+		if w.To <= y.Start && slices.Contains(people, w.Person) {
+			return true
+		}
+	}
+	if x.Finish > y.Start {
+		return false
+	}
+	for _, a := range slices.Concat(x.People, x.Relief) {
+		if slices.Contains(people, a) {
 			return true
 		}
 	}
@@ -122,14 +132,6 @@ func (r *replay) rivals(x, y *option) bool {
 	}
 	free := without{orders: true}
 	return r.statesMeet(&a, &b) || r.moved(&a, &b) || r.moved(&b, &a) || !r.holds(pair, &free)
-}
-
-func keepers(o *option) []string {
-	var out []string
-	for _, w := range o.Watches {
-		out = append(out, w.Person)
-	}
-	return out
 }
 
 // TestLeeway: every delay up to the leeway works, and the next minute does not; the last start of
