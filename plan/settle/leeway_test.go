@@ -70,7 +70,7 @@ func (r *replay) place(j int, done []*option, want func(o *option) bool) *option
 				if y == nil {
 					continue
 				}
-				if !r.apart(&x, y, &nothing) || !r.soon(y, &x) || y.Finish > x.Start && r.rivals(r.all[k], own) {
+				if !r.apart(&x, y, &nothing) || !r.linked(y, &x, &nothing) || !r.linked(&x, y, &nothing) || y.Finish > x.Start && r.rivals(r.all[k], own) {
 					fits = false
 					break
 				}
@@ -84,18 +84,6 @@ func (r *replay) place(j int, done []*option, want func(o *option) bool) *option
 		}
 	}
 	return nil
-}
-
-// soon says whether x waits for y as long as it must.
-func (r *replay) soon(y, x *option) bool {
-	for _, k := range r.between[[2]int{y.s.Index, x.s.Index}] {
-		l := r.w.Links[k]
-		l.Max, l.MaxCure = expand.NoMax, nil
-		if !r.waits(&l, end(y, l.FromEnd), end(x, l.ToEnd)) {
-			return false
-		}
-	}
-	return true
 }
 
 // rivals says whether y begins in the plan only after x has given up what both want: somebody, kit,
