@@ -92,14 +92,14 @@ func (r *replay) rivals(x, y *option) bool {
 	if x.Start == x.Finish || y.Start == y.Finish {
 		return false
 	}
+	if x.Finish > y.Start {
+		return false
+	}
 	people := slices.Concat(y.People, y.Relief)
 	for _, w := range x.Watches {
 		if w.To <= y.Start && slices.Contains(people, w.Person) {
 			return true
 		}
-	}
-	if x.Finish > y.Start {
-		return false
 	}
 	for _, a := range slices.Concat(x.People, x.Relief) {
 		if slices.Contains(people, a) {

@@ -29,13 +29,13 @@ func (r *rower) inOrder() {
 func (r *rower) gives(i, j int) bool {
 	a, b := &r.p.Acts[i], &r.p.Acts[j]
 	ma, mb := &a.Modes[r.s.Mode[i]], &b.Modes[r.s.Mode[j]]
+	if r.s.Finish[i] > r.s.Start[j] { // a pause may lend somebody out: that is no order
+		return false
+	}
 	for _, w := range r.s.Watches[i] {
 		if w.To <= r.s.Start[j] && (hasPerson(mb.Crew, w.Who) || hasPerson(mb.Relief, w.Who)) {
 			return true
 		}
-	}
-	if r.s.Finish[i] > r.s.Start[j] {
-		return false
 	}
 	for _, p := range append(append([]int(nil), ma.Crew...), ma.Relief...) {
 		if hasPerson(mb.Crew, p) || hasPerson(mb.Relief, p) {
