@@ -139,8 +139,10 @@ func (r *replay) out(c plan.Cause, but *without) {
 		but.apart[r.all[c.Other].s] = true
 	case plan.ByOrder:
 		but.orders = true
-	case plan.ByNotBefore, plan.ByStart:
+	case plan.ByNotBefore:
 		but.begin = true
+	case plan.ByStart: // were the window open before, they would be there before
+		but.begin, but.clock = true, true
 	default:
 		but.clock = true
 	}
