@@ -34,7 +34,7 @@ func (p *Problem) Closed(i, mode, t int) []plan.Cause {
 	case !g.open[s.Place].Has(at):
 		add(plan.ByHours, place, "%s opens", place)
 	case !g.face[s.Place].Has(at):
-		add(plan.ByHours, place, "%s: opening up and clearing up", place)
+		add(plan.ByHours, place, "opening up at %s is done", place)
 	}
 	if r, limited := g.reach[s.Face]; s.Face != nil && limited && !r.Has(at) {
 		add(plan.ByReach, s.Face.Name, "%s/%s can be reached", place, s.Face.Name)

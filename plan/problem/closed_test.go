@@ -23,7 +23,7 @@ func TestWhatKeepsAStepClosed(t *testing.T) {
 		{"all is open", "at: pier", "04-06 10:00", ""},
 		{"before the window", "at: pier", "04-05 06:30", "start: the window opens"},
 		{"at night", "at: pier", "04-06 23:00", "hours: pier opens"},
-		{"while it opens up", "at: pier", "04-06 07:10", "hours: pier: opening up and clearing up"},
+		{"while it opens up", "at: pier", "04-06 07:10", "hours: opening up at pier is done"},
 		{"under water", "at: pier/hinge", "04-06 13:00", "reach: pier/hinge can be reached"},
 		{"too early to be loud", "at: pier, noisy: yes", "04-06 07:30", "conditions: noisy work allowed at pier"},
 		{"too dark for the task", "at: pier, needs light: yes", "04-06 21:30", "conditions: daylight"},

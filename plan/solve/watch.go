@@ -90,6 +90,9 @@ func (s *state) keeper(i, nth int, md *problem.Mode, at, e int, skip *skipper) (
 			}
 			continue
 		}
+		if s.keptBefore(i, nth) == p { // a watch that a delay adds goes to whoever keeps the others
+			return p, block{}
+		}
 		if who < 0 || s.weight[p] < s.weight[who] {
 			who = p
 		}
@@ -101,6 +104,15 @@ func (s *state) keeper(i, nth int, md *problem.Mode, at, e int, skip *skipper) (
 		hit.next = e + 1
 	}
 	return -1, hit
+}
+
+// keptBefore gives who keeps the last watch of the step where people are kept and the nth is one
+// more than the plan has, -1 otherwise.
+func (s *state) keptBefore(i, nth int) int {
+	if s.kept == nil || len(s.kept[i]) == 0 || nth < len(s.kept[i]) {
+		return -1
+	}
+	return s.kept[i][len(s.kept[i])-1].Who
 }
 
 // ownWork says whether p, who works on the step and does not only watch it, goes on with it

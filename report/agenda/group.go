@@ -164,6 +164,12 @@ func (b *builder) finish(s *Shift) {
 			}
 		}
 	}
+	if s.Site && w.Trip == nil { // at home until the window opens: that is no part of the site's day
+		s.From = max(s.From, w.Window.Opens)
+		for i := range s.People {
+			s.People[i].On.From = max(s.People[i].On.From, w.Window.Opens)
+		}
+	}
 	order := map[string]int{}
 	for i, p := range w.Job.People {
 		order[p.Name] = i

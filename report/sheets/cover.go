@@ -3,6 +3,7 @@ package sheets
 import (
 	"fmt"
 	"math"
+	"strings"
 
 	"sailby/plan"
 	"sailby/report/agenda"
@@ -112,20 +113,12 @@ const mostGoverning = 10
 func (k *pack) governing() {
 	p := k.p
 	var lines []string
-	last := -1
-	for _, c := range k.a.Governing {
-		s := agenda.CauseText(k.work, c)
-		if c.Step < 0 || c.Step >= len(k.a.Plan.Steps) || c.Step >= len(k.work.Steps) {
-			lines, last = append(lines, s), -1
-			continue
+	for _, link := range agenda.Chain(k.a) {
+		var causes []string
+		for _, c := range link.Causes {
+			causes = append(causes, agenda.CauseText(k.work, c))
 		}
-		if c.Step == last {
-			lines[len(lines)-1] += "; " + s
-			continue
-		}
-		st := k.work.Steps[c.Step]
-		last = c.Step
-		lines = append(lines, fmt.Sprintf("%s starts %s: %s", agenda.StepLabel(k.work, st), agenda.When(k.a.Plan.Steps[c.Step].Start, agenda.Zone(k.work, st.Place)), s))
+		lines = append(lines, link.Head+strings.Join(causes, "; "))
 	}
 	if len(lines) == 0 {
 		return

@@ -131,20 +131,13 @@ func (p *page) governing(a *plan.Answer) {
 	}
 	p.gap()
 	p.para("", "What sets the finish of "+agenda.Finish(a)+", step by step, the last first")
-	for i, c := range a.Governing {
-		lead := fmt.Sprintf("%3d  ", i+1)
-		p.para(lead, causeLine(a, c))
+	for i, link := range agenda.Chain(a) {
+		var causes []string
+		for _, c := range link.Causes {
+			causes = append(causes, agenda.CauseText(a.Work, c)+inFile(agenda.At(c.Pos)))
+		}
+		p.para(fmt.Sprintf("%3d  ", i+1), link.Head+strings.Join(causes, "; "))
 	}
-}
-
-// causeLine says which step starts when, and why not earlier.
-func causeLine(a *plan.Answer, c plan.Cause) string {
-	s := ""
-	if c.Step >= 0 && c.Step < len(a.Work.Steps) && c.Step < len(a.Plan.Steps) {
-		st := a.Work.Steps[c.Step]
-		s = fmt.Sprintf("%s starts %s: ", agenda.StepLabel(a.Work, st), agenda.When(a.Plan.Steps[c.Step].Start, agenda.Zone(a.Work, st.Place)))
-	}
-	return s + agenda.CauseText(a.Work, c) + inFile(agenda.At(c.Pos))
 }
 
 func inFile(at string) string {

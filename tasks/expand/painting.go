@@ -95,13 +95,13 @@ func mixed(h *hands, p *tasks.Paint, a coat.Application, temperatureOf float64) 
 			fig.Value = math.Floor(pot)
 			h.est.Facts = append(h.est.Facts, fig)
 		}
-		note := fmt.Sprintf("%d mixes of %s L", a.Batches, origin.Trim(math.Ceil(a.BatchLitres*10-1e-9)/10))
+		note := fmt.Sprintf("%d mixes of %s", a.Batches, measured(a.BatchLitres))
 		if a.Batches == 1 {
-			note = fmt.Sprintf("one mix of %s L", origin.Trim(math.Ceil(a.BatchLitres*10-1e-9)/10))
+			note = "one mix of " + measured(a.BatchLitres)
 		}
 		note += fmt.Sprintf(", each used within %s of mixing at %s", quantity.Hours(int(a.UseWithin)), temperature(math.Round(temperatureOf*10)/10))
 		if a.Hardener > 0 {
-			note += fmt.Sprintf("; in all %s L base, %s L hardener", origin.Trim(a.Base), origin.Trim(a.Hardener))
+			note += fmt.Sprintf("; in all %s base, %s hardener", measured(a.Base), measured(a.Hardener))
 		}
 		if a.Induction > 0 {
 			note += fmt.Sprintf("; stands %s before use", quantity.Hours(int(a.Induction)))
@@ -118,6 +118,14 @@ func mixed(h *hands, p *tasks.Paint, a coat.Application, temperatureOf float64) 
 		}
 		h.est.Notes = append(h.est.Notes, note+" of "+p.Name)
 	}
+}
+
+// measured writes litres as somebody with a jug reads them: below one litre in millilitres.
+func measured(litres float64) string {
+	if ml := math.Round(litres * 1000); ml < 1000 {
+		return fmt.Sprintf("%.0f ml", ml)
+	}
+	return fmt.Sprintf("%.2f L", litres)
 }
 
 // stripe makes the stripe coat of a task: a step of its own before the first full coat; nil

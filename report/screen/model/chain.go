@@ -2,6 +2,7 @@ package model
 
 import (
 	"fmt"
+	"strings"
 
 	"sailby/report/agenda"
 	"sailby/tasks/expand"
@@ -31,19 +32,22 @@ func (p *chainPage) lay(n int) ([]Row, []line) {
 	}
 	fixed := []Row{{"Finish " + agenda.Finish(a) + " " + agenda.BasisWords(a.Work.Basis) + "; each line: why not earlier", Head}}
 	var body []line
-	for i, c := range a.Governing {
-		lead := fmt.Sprintf("%2d ", i+1)
-		if c.Step < 0 || c.Step >= len(a.Work.Steps) || c.Step >= len(a.Plan.Steps) {
-			body = append(body, para(n, lead, agenda.CauseText(a.Work, c)+inFile(agenda.At(c.Pos)), Plain, nil)...)
+	for i, link := range agenda.Chain(a) {
+		var causes []string
+		for _, c := range link.Causes {
+			causes = append(causes, agenda.CauseText(a.Work, c)+inFile(agenda.At(c.Pos)))
+		}
+		why := strings.Join(causes, "; ")
+		if link.Head == "" {
+			body = append(body, para(n, fmt.Sprintf("%2d ", i+1), why, Plain, nil)...)
 			continue
 		}
-		s := a.Work.Steps[c.Step]
-		do := p.open(s)
-		ps := a.Plan.Steps[c.Step]
+		step := link.Causes[0].Step
+		s, ps := a.Work.Steps[step], a.Plan.Steps[step]
 		zone := agenda.Zone(a.Work, s.Place)
 		body = append(body, line{text: columns(n, []int{3, n - 3 - 37, 37}, fmt.Sprint(i+1), agenda.StepLabel(a.Work, s),
-			agenda.When(ps.Start, zone)+" to "+agenda.When(ps.Finish, zone)), do: do})
-		body = append(body, para(n, "     ", "starts then because: "+agenda.CauseText(a.Work, c)+inFile(agenda.At(c.Pos)), Plain, nil)...)
+			agenda.When(ps.Start, zone)+" to "+agenda.When(ps.Finish, zone)), do: p.open(s)})
+		body = append(body, para(n, "     ", "starts then because: "+why, Plain, nil)...)
 	}
 	if len(a.Governing) == 0 {
 		body = append(body, para(n, "", "Nothing is known of what sets the finish.", Plain, nil)...)
