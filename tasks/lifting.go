@@ -26,6 +26,7 @@ type Lifting struct {
 	Body     lift.Body
 	Tip      Amount // mm of the highest point of boom or load above the ground
 	Gust     Amount // m/s, measured or forecast
+	MayGust  Amount // m/s at the tip, up to which whoever plans the lift has it done
 	Measures string // who measures the wind
 
 	Hands   *lift.Handling  // nil: floor to knuckles, close, by the people of the task

@@ -71,6 +71,7 @@ func (c *checker) stage(r *row) {
 	if !j.OK {
 		c.add("R24", r, "at most "+j.Refused.Result.Limit.Amount(), j.Refused.Result.Figure.Amount(), "is lifted when too much hangs on it: %s", j.Refused.Result.Reason)
 	}
+	c.sail(r, j)
 	if heavy, ok := c.weight(t, pieces); ok && j.OK {
 		for _, u := range r.s.Kit {
 			k := u.Kit

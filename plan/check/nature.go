@@ -46,7 +46,7 @@ func felt(s *expand.Step, t hours.Minute) (w site.Weather, ok, none bool) {
 	}
 	w, ok = series.At(int64(t))
 	if s.Face != nil && s.Face.Sheltered {
-		w.Wet, w.Wind = false, 0
+		w.Wet, w.Wind, w.Gust = false, 0, 0
 	}
 	return w, ok, false
 }
@@ -101,6 +101,13 @@ func (c *checker) weather(r *row, need func(line, string, string, string)) {
 		need(l, "R25", s.Paint.Name, "may not be put on: weather, or what would be lost in it")
 	case s.Task.Kind == tasks.Prep && !wipes(s.Task):
 		need(c.dryAir(s), "R25", "surface preparation", "would turn: damp or wet")
+	case s.Gust.Value > 0:
+		l := c.line(false)
+		for t := c.lo; t < c.hi; t++ {
+			w, ok, _ := felt(s, t)
+			l.on[t-c.lo] = ok && w.Gust <= s.Gust.Value*(1+1e-6)
+		}
+		need(l, "R25", "the wind", "is stronger than it may be lifted in")
 	}
 }
 

@@ -35,6 +35,7 @@ func Expand(job *tasks.Job, b Basis) (*Work, tasks.Faults) {
 	x.homeward()
 	x.orders()
 	x.stages()
+	x.winds()
 	x.deadlines()
 	x.power()
 	if len(x.faults) > 0 {

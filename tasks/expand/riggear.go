@@ -241,20 +241,16 @@ func (r *Rigging) onFloor(j *Judgement) {
 
 // inWind works out the gust at which to stop. A forecast above it warns: the day may be another.
 func (r *Rigging) inWind(j *Judgement) {
-	if r.Way != lift.ByLoaderCrane && !r.site || r.Way == lift.ByHands || r.Way == lift.ByTrolley || r.Way == lift.ByJack {
+	inside := r.Task.Face != nil && r.Task.Face.Indoors
+	if inside || r.Way != lift.ByLoaderCrane && !r.site && r.Task.Place.Hourly(r.Task.Face) == nil || r.Way == lift.ByHands || r.Way == lift.ByTrolley || r.Way == lift.ByJack {
 		return
 	}
 	l := r.lifting()
-	w := lift.Wind{Area: l.Sail.Value, Body: l.Body, Tip: l.Tip.Value, Gust: l.Gust.Value}
-	if r.Kit != nil {
-		w.Limit = r.Kit.Gust.Value
-	}
-	load := j.Load
-	if w.Area == 0 && load.Length*load.Height+load.Length*load.Width == 0 {
+	res, known, err := r.wind(j.Load)
+	if !known {
 		j.Ask = append(j.Ask, "sail area of the load, for the gust at which to stop")
 		return
 	}
-	res, err := lift.Gust(load, w)
 	if err == nil {
 		j.Wind = &res
 	}
@@ -264,6 +260,23 @@ func (r *Rigging) inWind(j *Judgement) {
 	if l.Gust.Pos.Given() {
 		j.add("wind", true, res.Result, err)
 	}
+}
+
+// wind judges the gust that a load may have; known is false where nothing tells its sail.
+func (r *Rigging) wind(load lift.Load) (res lift.WindResult, known bool, err error) {
+	l := r.lifting()
+	w := lift.Wind{Area: l.Sail.Value, Body: l.Body, Tip: l.Tip.Value, Gust: l.Gust.Value, May: l.MayGust.Value}
+	if r.Kit != nil {
+		w.Limit = r.Kit.Gust.Value
+	}
+	if w.Area == 0 && w.May > 0 && load.Length*load.Height+load.Length*load.Width == 0 {
+		w.Area = 0.01 // it does not count
+	}
+	if w.Area == 0 && load.Length*load.Height+load.Length*load.Width == 0 {
+		return res, false, nil
+	}
+	res, err = lift.Gust(load, w)
+	return res, true, err
 }
 
 // others names the gear of the job that would carry a load that is refused.

@@ -31,6 +31,7 @@ func (x *expander) aside(add func(tasks.Pos, string, ...any)) {
 			add(o.Pos, "the order is held: %s", o.Text)
 		}
 	}
+	x.windNotes(add)
 	for _, t := range x.w.Job.Tasks {
 		switch {
 		case x.absent[t]:

@@ -28,16 +28,7 @@ func (x *expander) stages() {
 
 func (x *expander) stageOf(s *Step) {
 	r := s.Rigging
-	var sure, open []Join
-	for _, j := range r.Joins {
-		switch first := x.first[j.Task][0]; {
-		case x.ahead(first, s):
-			sure = append(sure, j)
-		case x.ahead(s, first):
-		default:
-			open = append(open, j)
-		}
-	}
+	sure, open := x.split(s)
 	open = r.relevant(sure, open)
 	now, err := r.Judge(sure)
 	if err != nil {
@@ -76,6 +67,20 @@ func (x *expander) stageOf(s *Step) {
 			x.before(s, some, j)
 		}
 	}
+}
+
+// split gives the joining tasks that are surely done before a lift, and those that may be.
+func (x *expander) split(s *Step) (sure, open []Join) {
+	for _, j := range s.Rigging.Joins {
+		switch first := x.first[j.Task][0]; {
+		case x.ahead(first, s):
+			sure = append(sure, j)
+		case x.ahead(s, first):
+		default:
+			open = append(open, j)
+		}
+	}
+	return sure, open
 }
 
 // byMassAlone says whether more on the hook is never easier: no lugs or second hook whose share

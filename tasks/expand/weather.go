@@ -29,6 +29,8 @@ func (w *Work) NatureIn(s *Step, in hours.Span) []site.Span {
 		out = w.coatWeather(s, in)
 	case s.Task.Kind == tasks.Prep:
 		out = w.damp(s.Task, in)
+	case s.Gust.Name != "":
+		out = w.gusty(s, in)
 	}
 	for _, shut := range w.water(s) {
 		shut.From, shut.To = max(shut.From, int64(in.From)), min(shut.To, int64(in.To))

@@ -115,7 +115,8 @@ type Step struct {
 	Absent    bool         // a maybe that does not happen on this basis
 
 	Estimate Estimate
-	Rigging  *Rigging // of a lift or move
+	Rigging  *Rigging      // of a lift or move
+	Gust     origin.Figure // m/s at 10 m above which a lift is not worked (R25); without a name: none
 
 	welders  int      // of a weld: who shares the metal
 	warnings []string // of its notes, those that tell of something to change

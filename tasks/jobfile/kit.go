@@ -24,12 +24,12 @@ var kitSection = section{name: "Kit", where: "kit / NAME", host: "kit/chain hois
 	{name: "speed", takes: anAmount, dim: quantity.Travel, low: 1, high: 1e5, example: "1.2 m/min", says: "of the hook under load, as its maker says"},
 	{name: "mass", takes: anAmount, dim: quantity.Mass, low: 0.1, high: 1e6, example: "24 kg", says: "of one, for packing"},
 	{name: "hangs from", takes: itsOwn, form: "{what: what that may carry}", shape: massShape, example: "{shop beam: 1.5 t}", says: "what it hangs from"},
+	{name: "chart", takes: itsOwn, form: "{radius: mass}", shape: massShape, example: "{4 m: 2.4 t, 6 m: 1.5 t}", says: "what a crane lifts at which radius"},
+	{name: "gust limit", takes: anAmount, dim: quantity.Speed, low: 1, high: 40, usual: "9.8 m/s where wind counts (from memory)", example: "9.8 m/s", says: "no lifts in stronger gusts (R25)"},
 }}
 
 var hireSection = section{name: "Hire", where: "hire / NAME", host: "hire/loader crane", says: "Kit that is there only in its slots (R23); all keys of kit, and these.", more: &kitSection, keys: []key{
 	{name: "slots", takes: slots, need: true, example: "[2027-04-06 08:00-12:00, 2027-04-12 13:00-17:00]", says: "when it is there; local to its place"},
-	{name: "chart", takes: itsOwn, form: "{radius: mass}", shape: massShape, example: "{4 m: 2.4 t, 6 m: 1.5 t}", says: "what a crane lifts at which radius"},
-	{name: "gust limit", takes: anAmount, dim: quantity.Speed, low: 1, high: 40, example: "9.8 m/s", says: "no lifts in stronger gusts"},
 }}
 
 const maxKit = 500
@@ -67,6 +67,7 @@ func (r *reader) kit(name string, at *yaml.Node, f *fields) *tasks.Kit {
 		Stays: f.yes("stays"), At: f.place("at"), Rated: f.amount("rated", 0), Speed: f.amount("speed", 0), Mass: f.amount("mass", 0)}
 	k.Speed.Value /= 1000
 	k.Closed, k.HungAt, k.Stowing = f.amount("closed height", 0), f.amount("hung at", 0), f.stowing()
+	k.Chart, k.Gust = f.chart("chart"), f.amount("gust limit", 0)
 	f.setOf(&k.Set)
 	kind := name
 	if f.has("kind") {
@@ -97,8 +98,6 @@ func (r *reader) kit(name string, at *yaml.Node, f *fields) *tasks.Kit {
 		if k.Slots == nil {
 			k.Slots = []tasks.Slot{}
 		}
-		k.Chart = f.chart("chart")
-		k.Gust = f.amount("gust limit", 0)
 	}
 	return k
 }

@@ -107,6 +107,7 @@ var liftOnlyKeys = []key{
 	{name: "body", takes: aWord, words: []string{"box", "round"}, usual: "not known: drag 2.4", example: "box", says: "shape to the wind"},
 	length("tip height", 2e5, "9 m", "highest point of boom or load above ground; 10 m if left out"),
 	{name: "gust", takes: anAmount, dim: quantity.Speed, low: 0, high: 80, example: "7 m/s", says: "measured or forecast at the tip"},
+	{name: "gust limit", takes: anAmount, dim: quantity.Speed, low: 1, high: 40, usual: "by gear, mass and sail (R25)", example: "6 m/s", says: "gust at the tip up to which whoever plans the lift has it done; in place of what is worked out, and never above the gear's"},
 	{name: "wind measured by", takes: aName, example: "Tom", says: "who measures the wind"},
 	{name: "second hook", takes: keysOf, sub: &secondSection, example: "{by: chain hoist, at: [200 mm, 2200 mm]}", says: "a second piece of gear on the same load"},
 }
@@ -206,7 +207,7 @@ func (r *reader) liftOnly(l *tasks.Lifting, f *fields) {
 	l.Hangs, l.SidePull, l.SeaAir = f.line("hangs from"), f.amount("side pull", 0), f.yes("sea air")
 	l.Water = map[string]lift.Water{"inshore": lift.Inshore, "offshore": lift.Offshore}[f.choice("on water", "")]
 	l.Body = map[string]lift.Body{"box": lift.BoxBody, "round": lift.RoundBody}[f.choice("body", "")]
-	l.Sail, l.Tip, l.Gust = f.amount("sail area", 0), f.amount("tip height", 0), f.amount("gust", 0)
+	l.Sail, l.Tip, l.Gust, l.MayGust = f.amount("sail area", 0), f.amount("tip height", 0), f.amount("gust", 0), f.amount("gust limit", 0)
 	if refs := r.people(f, "wind measured by"); len(refs) > 0 {
 		l.Measures = refs[0].text
 	}

@@ -25,6 +25,7 @@ type Wind struct {
 	Drag  float64 // factor in place of that of Body
 	Tip   float64 // mm of the highest point of boom or load above ground; 0 is 10 m
 	Mean  float64 // m/s forecast mean at 10 m
+	May   float64 // m/s at the tip that whoever plans the lift permits, in place of what sail and mass give; never above Limit
 	Gust  float64 // m/s measured or forecast gust at the tip, in place of Mean
 }
 
@@ -54,7 +55,7 @@ func Gust(l Load, w Wind) (WindResult, error) {
 	if err := l.valid(); err != nil {
 		return WindResult{}, err
 	}
-	if err := checkAll(check{"the gust limit", w.Limit, 0, 50, "m/s"}, check{"the sail area", w.Area, 0, 1e5, "m2"}, check{"the drag", w.Drag, 0, 5, ""},
+	if err := checkAll(check{"the gust limit", w.Limit, 0, 50, "m/s"}, check{"the permitted gust", w.May, 0, 50, "m/s"}, check{"the sail area", w.Area, 0, 1e5, "m2"}, check{"the drag", w.Drag, 0, 5, ""},
 		check{"the tip's height", w.Tip, 0, 5e5, "mm"}, check{"the mean wind", w.Mean, 0, 100, "m/s"}, check{"the gust", w.Gust, 0, 150, "m/s"}); err != nil {
 		return WindResult{}, err
 	}
@@ -65,7 +66,7 @@ func Gust(l Load, w Wind) (WindResult, error) {
 	drag := w.drag()
 	limit := given("gust limit of the gear", w.Limit, "m/s")
 	if w.Limit == 0 {
-		limit = origin.Recalled("gust limit of the gear", 9.8, "m/s", "usual limit of mobile cranes")
+		limit = UsualGust()
 	}
 	mass := l.best() // the lighter it is, the more the wind moves it: no allowance
 	t := mass.Value / 1000
@@ -75,6 +76,9 @@ func Gust(l Load, w Wind) (WindResult, error) {
 	}
 	have := origin.Worked("permitted gust", limit.Value*factor, "m/s", "limit x sqrt(1.2 P / (A c)), at most the limit", limit, mass, area, drag,
 		origin.Published("reference sail area", 1.2, "m2/t", mobileManual))
+	if w.May > 0 {
+		have = origin.Worked("permitted gust", math.Min(w.May, limit.Value), "m/s", "as whoever plans the lift states it, at most the gear's", given("permitted by who plans the lift", w.May, "m/s"), limit)
+	}
 	need := w.gust()
 	out := WindResult{Result: worst(judge{"wind", need, have}), Force: pressure(have.Value) * area.Value * drag.Value}
 	if need.Value == 0 {
@@ -88,6 +92,17 @@ func Gust(l Load, w Wind) (WindResult, error) {
 		out.Nearest = fmt.Sprintf("wait for gusts below %.1f m/s at the tip, or lift it lower, on edge to the wind or in smaller pieces", math.Floor(have.Value*10)/10)
 	}
 	return out, nil
+}
+
+// UsualGust is the limit of gear whose papers do not say.
+func UsualGust() origin.Figure {
+	return origin.Recalled("gust limit of the gear", 9.8, "m/s", "usual limit of mobile cranes")
+}
+
+// TipShare gives the gust at a height z, mm, over that at 10 m: ((z / 10 m)^0.14 + 0.4) / 1.4.
+func TipShare(z float64) origin.Figure {
+	return origin.Worked("gust at the tip over gust at 10 m", (math.Pow(math.Max(z, 1)/10000, 0.14)+0.4)/1.4, "", "((z / 10 m)^0.14 + 0.4) / 1.4, "+mobileManual,
+		given("tip", z, "mm"))
 }
 
 // pressure of the wind, N/m2: v^2 / 1.6.
