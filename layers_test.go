@@ -40,6 +40,7 @@ var mayImport = map[string][]string{
 	"plan/check":    {"plan", "tasks", "tasks/expand", "tasks/lift", "tasks/site"}, // never problem, network, solve, learn
 	"plan/settle":   {"plan", "plan/check", "plan/network", "plan/problem", "plan/solve", "plan/learn", "plan/proof", "tasks", "tasks/expand"},
 	"plan/mutants":  {},
+	"plan/random":   {},
 
 	"report/clean":        {},
 	"report/agenda":       {"plan", "report/clean", "tasks", "tasks/expand", "tasks/site", "weld"},
@@ -54,7 +55,7 @@ var mayImport = map[string][]string{
 
 	"cmd/sailby": {"plan", "plan/settle", "tasks", "tasks/jobfile", "tasks/expand", "tasks/coat", "tasks/lift", "weld",
 		"report/agenda", "report/clean", "report/export", "report/pdf", "report/screen", "report/sheets", "report/text"},
-	"cmd/sailbench": {"plan/check", "plan/instance", "plan/learn", "plan/problem", "plan/solve", "plan/proof"},
+	"cmd/sailbench": {"plan", "plan/network", "plan/random", "plan/settle", "tasks", "tasks/expand", "tasks/jobfile", "plan/check", "plan/instance", "plan/learn", "plan/problem", "plan/solve", "plan/proof"},
 }
 
 // onlyHere holds modules to the one package that may import them.

@@ -68,8 +68,8 @@ func (r *row) fields() []string {
 		strconv.FormatBool(r.checked)}
 }
 
-// solve runs one instance and judges the answer.
-func solve(ctx context.Context, path string, o settings, f *folder) (*row, error) {
+// solveInstance runs one instance and judges the answer.
+func solveInstance(ctx context.Context, path string, o settings, f *folder) (*row, error) {
 	begin := time.Now()
 	in, err := instance.Read(path)
 	if err != nil {
@@ -162,7 +162,7 @@ func benchFolder(ctx context.Context, f *folder, o settings, talk io.Writer) ([]
 		go func() {
 			defer wg.Done()
 			for i := range next {
-				r, err := solve(ctx, f.files[i], o, f)
+				r, err := solveInstance(ctx, f.files[i], o, f)
 				rows[i], errs[i] = r, err
 				if err == nil && o.verbose {
 					say.Lock()

@@ -30,6 +30,7 @@ type settings struct {
 	every   int
 	offset  int
 	verbose bool
+	random  randomJobs
 }
 
 // run reads the flags, solves the instances and prints the rows and the summary. A wrong answer
@@ -48,8 +49,16 @@ func run(ctx context.Context, args []string, out, talk io.Writer) error {
 	fl.IntVar(&o.every, "every", 1, "take one in so many instances of each folder")
 	fl.IntVar(&o.offset, "from", 0, "the first one taken, counted from 0")
 	fl.BoolVar(&o.verbose, "v", false, "print each row when it is done")
+	fl.IntVar(&o.random.count, "jobs", 0, "make so many jobs at random and solve these; no PATH")
+	fl.IntVar(&o.random.size, "size", 60, "activities of a random job, about")
+	fl.Uint64Var(&o.random.seed, "seed", 1, "seed of the first random job; the next have the next numbers")
+	fl.StringVar(&o.random.class, "class", "", "one class of random jobs: slack, snug, tight or over; else all in turn")
+	fl.BoolVar(&o.random.lattice, "lattice", false, "random jobs in which every time is a half hour")
 	if err := fl.Parse(args); err != nil {
 		return err
+	}
+	if o.random.count > 0 && fl.NArg() == 0 && o.limit > 0 && o.workers > 0 {
+		return benchJobs(ctx, o, out, talk)
 	}
 	if fl.NArg() == 0 {
 		fl.Usage()

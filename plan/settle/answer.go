@@ -80,6 +80,12 @@ func (a *asked) say(format string, args ...any) {
 	}
 }
 
+func (a *asked) found() {
+	if a.o.Found != nil {
+		a.o.Found()
+	}
+}
+
 func (a *asked) at(t int) hours.Minute { return a.p.Base + hours.Minute(t) }
 
 // prove looks for a proof that nothing fits, cheapest first, and for a bound.
@@ -152,6 +158,11 @@ func (a *asked) find(explain bool) error {
 	o := solve.Options{Ticks: a.o.ticks(len(a.carry.Acts)), Stop: a.stop, Quit: a.o.left, Seed: a.o.Seed, Good: func(s solve.Score) bool {
 		return a.out.Proof == nil && s.Late == 0 && s.Finish <= bound && s.Hand == 0 && s.Stops == 0
 	}}
+	o.Found = func(s solve.Score) {
+		if s.Late == 0 {
+			a.found()
+		}
+	}
 	res := solve.Find(a.carry, b, o)
 	if a.out.Proof == nil && a.o.Ticks == 0 && (res.Best == nil || res.Best.Score.Late > 0) && !a.stop() {
 		a.say("plans, for longer")

@@ -48,6 +48,7 @@ func (a *asked) learning(best *solve.Schedule) *solve.Schedule {
 	if fits {
 		o.Best, o.Hint = best.Score.Finish, best.Start
 	}
+	o.Found = func([]int, int) { a.found() }
 	r := learn.Solve(a.p, o)
 	a.out.Steps += r.Ticks
 	if a.choicesLeftOut() { // then it knows too little to prove anything

@@ -21,6 +21,8 @@ type Options struct {
 	Only     bool              // likely hours only: no maybes, no high end (for what-if)
 	Progress func(text string) // called now and then with what is being done; may be nil
 
+	Found func() // called each time a plan that fits, or a better one, is found; may be nil
+
 	gone *atomic.Bool // nobody waits for the answer any more
 }
 

@@ -26,6 +26,7 @@ type Options struct {
 	Quit  func() bool // asked more often; true ends it in the middle of a schedule
 	Seed  uint64
 	Good  func(Score) bool // true ends the search: nothing better is wanted
+	Found func(Score)      // called for each schedule that is better than all before; may be nil
 }
 
 // Result is what a search found.
@@ -95,6 +96,9 @@ func (f *finder) try(order []int) (Score, bool) {
 		f.best = f.g.snapshot(sc)
 		f.list = append(f.list[:0], order...)
 		f.leaning.set(f.g.lean)
+		if f.o.Found != nil {
+			f.o.Found(sc)
+		}
 	}
 	return sc, true
 }
