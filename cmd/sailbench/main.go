@@ -57,15 +57,18 @@ func run(ctx context.Context, args []string, out, talk io.Writer) error {
 	if err := fl.Parse(args); err != nil {
 		return err
 	}
-	if o.random.count > 0 && fl.NArg() == 0 && o.limit > 0 && o.workers > 0 {
+	if o.limit <= 0 || o.workers < 1 || o.every < 1 || o.offset < 0 {
+		return fmt.Errorf("-limit, -workers and -every must be above 0, -from at least 0")
+	}
+	if o.random.count != 0 {
+		if o.random.count < 0 || fl.NArg() > 0 {
+			return fmt.Errorf("-jobs %d: want a number above 0, and no PATH beside it", o.random.count)
+		}
 		return benchJobs(ctx, o, out, talk)
 	}
 	if fl.NArg() == 0 {
 		fl.Usage()
 		return fmt.Errorf("no instances given")
-	}
-	if o.limit <= 0 || o.workers < 1 || o.every < 1 || o.offset < 0 {
-		return fmt.Errorf("-limit, -workers and -every must be above 0, -from at least 0")
 	}
 	folders, err := gather(fl.Args(), o)
 	if err != nil {
