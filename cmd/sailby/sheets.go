@@ -35,7 +35,7 @@ func newSheets(g *globals, st streams) *cobra.Command {
 	f := c.Flags()
 	f.StringVarP(&o.out, "out", "o", "", "the file to write")
 	f.BoolVar(&o.letter, "letter", false, "US Letter in place of A4")
-	f.BoolVar(&o.site, "site", false, "leave out the shifts at home")
+	f.BoolVar(&o.site, "site", false, "only what is done at the site: no shifts, welds, coats and lifts at home")
 	o.which.flags(f)
 	return c
 }

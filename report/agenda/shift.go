@@ -16,10 +16,11 @@ type Entry struct {
 	Planned     plan.Step
 	Row         plan.Row
 	People      []string
-	Watch       bool // a fire watch after the step's work
-	Piece       int  // from 0, watches counted apart
-	Last        bool // the last piece of the step
-	From0, Goes bool // the step began in an earlier shift; it goes on in a later one
+	Watch       bool         // a fire watch after the step's work
+	Piece       int          // from 0, watches counted apart
+	Last        bool         // the last piece of the step
+	Pauses      []hours.Span // breaks inside the span, where a remnant was joined to it (Merged)
+	From0, Goes bool         // the step began in an earlier shift; it goes on in a later one
 }
 
 // Person is what one person does in a shift, in order of time.

@@ -12,7 +12,7 @@ import (
 // conditions prints what weather and water do in the shift: the weather planned with, when people
 // are off before the water, which hours are closed and why, the limits of the paints, and boxes
 // for the readings. Nothing where none of it bears on the shift.
-func (k *pack) conditions(s *agenda.Shift, steps []*expand.Step) {
+func (k *pack) conditions(s *agenda.Shift, steps []*expand.Step, how form) {
 	p := k.p
 	var lines []string
 	if w := agenda.WeatherWords(s.Place, s.Span); w != "" {
@@ -25,12 +25,14 @@ func (k *pack) conditions(s *agenda.Shift, steps []*expand.Step) {
 	if len(lines) == 0 {
 		return
 	}
-	p.heading("Weather and water", float64(min(len(lines), 4))*lineHeight(body))
+	if how == loose {
+		p.heading("Weather and water", float64(min(len(lines), 4))*lineHeight(body))
+	}
 	for _, l := range lines {
 		p.point("-", l, false)
 	}
 	// Coats have their later readings in the paint log.
-	if row := []field{{label: "Read at"}, {label: "Air °C"}, {label: "Humidity %"}, {label: "Dew point °C"}, {label: "Steel °C"}, {label: "Above dew, K"}}; len(painted) > 0 {
+	if row := []field{{label: "Read at"}, {label: "Air °C"}, {label: "Humidity %"}, {label: "Dew point °C"}, {label: "Steel °C"}, {label: "Above dew, K"}}; len(painted) > 0 || bare && how == dense {
 		p.fields(6, row...)
 	} else if bare {
 		p.fields(6, append(row, row...)...)

@@ -53,7 +53,7 @@ func (k *pack) weldList() {
 		ps := k.planned(s)
 		p.para(joined("; ", agenda.Where(s), k.span(s), "planned: "+strings.Join(names(ps.People, ps.Relief), ", "),
 			prefixed("drawing ", or(s.Task.Drawing, k.job.Drawing)), heatWords(s), holdWords(k.work, s)), body, false)
-		t := p.table(column{"Joint", 42}, column{"Welder", 22}, column{"Batch", 24}, column{"Heat no.", 24}, column{"Visual", 20}, column{"NDT", 20}, column{"Repair", 21})
+		t := p.table(column{"Joint", 62}, column{"Welder", 21}, column{"Batch", 21}, column{"Heat no.", 21}, column{"Visual", 19}, column{"NDT", 19}, column{"Repair", 20})
 		for i, seam := range s.Task.Seams {
 			t.row(k.joint(i, seam), write(), write(), write(), write(), write(), write())
 		}
@@ -80,8 +80,7 @@ func (k *pack) joint(i int, s tasks.Seam) cell {
 		if q.Name != s.Procedure {
 			continue
 		}
-		c.lines = append(c.lines, line{text: "procedure " + q.Name})
-		c.lines = append(c.lines, line{text: joined(", ", processWords(q.Process), preheat(q.Preheat))})
+		c.lines = append(c.lines, line{text: joined(", ", "procedure "+q.Name, processWords(q.Process), preheat(q.Preheat))})
 		return c
 	}
 	if s.Procedure != "" {

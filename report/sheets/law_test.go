@@ -53,6 +53,14 @@ func TestLawsHoldForAnyNames(t *testing.T) {
 		if f := faults(d); len(f) > 0 {
 			t.Fatalf("%d faults, the first: %s", len(f), f[0])
 		}
+		k := newPack(&Document{Width: 210, Height: 297, Left: 15, Right: 12, Top: 17, Bottom: 10}, r, r.Likely, Options{})
+		for _, s := range k.shifts { // drawn as close as can be, whatever form the pack takes
+			k.p.begin("", "", true)
+			k.shift(s, dense)
+		}
+		if f := faults(k.p.doc); len(f) > 0 {
+			t.Fatalf("%d faults in close form, the first: %s", len(f), f[0])
+		}
 	})
 }
 

@@ -16,7 +16,7 @@ import (
 // likely hours.
 type Options struct {
 	Letter   bool       // US Letter in place of A4
-	SiteOnly bool       // leave out the shifts at the home places
+	SiteOnly bool       // leave out what is done at the home places: shifts, welds, coats, lifts
 	Maybes   bool       // the plan with every maybe
 	End      expand.End // High: the plan at the high end of the hours
 }
@@ -57,7 +57,7 @@ func Pack(r *plan.Report, o Options) (*Document, error) {
 	if o.Letter {
 		doc.Width, doc.Height = 215.9, 279.4
 	}
-	k := &pack{p: newPen(doc), report: r, a: a, work: a.Work, job: r.Job, opt: o, shifts: agenda.Shifts(a), worked: agenda.Worked(a)}
+	k := newPack(doc, r, a, o)
 	k.cover()
 	k.allShifts()
 	k.handover()
@@ -68,6 +68,10 @@ func Pack(r *plan.Report, o Options) (*Document, error) {
 	k.cautionPage()
 	k.foot()
 	return doc, nil
+}
+
+func newPack(doc *Document, r *plan.Report, a *plan.Answer, o Options) *pack {
+	return &pack{p: newPen(doc), report: r, a: a, work: a.Work, job: r.Job, opt: o, shifts: agenda.Shifts(a), worked: agenda.Worked(a)}
 }
 
 // foot draws the last line of every page, now that their number is known.
@@ -107,11 +111,12 @@ func (k *pack) span(s *expand.Step) string {
 	return agenda.When(ps.Start, zone) + " to " + agenda.When(ps.Finish, zone)
 }
 
-// taskSteps gives the hands-on steps of the tasks of a kind that happen, in the order of the file.
+// taskSteps gives the hands-on steps of the tasks of a kind that happen, in the order of the file; those at home
+// are left out where the pack is for the site.
 func (k *pack) taskSteps(kind tasks.Kind) []*expand.Step {
 	var out []*expand.Step
 	for i, s := range k.work.Steps {
-		if s.Task.Kind == kind && s.Class == expand.Hands && !s.Absent && i < len(k.a.Plan.Steps) && s.HandsOn > 0 {
+		if s.Task.Kind == kind && s.Class == expand.Hands && !s.Absent && (s.Site || !k.opt.SiteOnly) && i < len(k.a.Plan.Steps) && s.HandsOn > 0 {
 			out = append(out, s)
 		}
 	}

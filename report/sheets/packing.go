@@ -19,28 +19,18 @@ func (k *pack) packing() {
 	p := k.p
 	p.begin("Packing list", "packing", true)
 	p.big("Packing list")
-	p.para("Every thing is seen by somebody before it is ticked. The job stops without what is marked so: it is used on the chain that sets the finish, or there is only one. House list: no task names it; strike out what is not wanted.", body, false)
+	p.para("Every thing is seen by somebody before it is ticked. ! The job stops without it: it is on the chain that sets the finish, or the only one. House list: no task names it; strike out what is not wanted.", body, false)
 	p.skip(2)
-	t := p.table(column{"Out", 15}, column{"What", 84}, column{"Amount", 34}, column{"First needed", 28}, column{"Back", 15})
-	group := packlist.Group("")
+	var named, rest []packlist.Item
 	for _, it := range l.Items {
-		if it.Group != group {
-			group = it.Group
-			t.row(say(""), loud(strings.ToUpper(string(group)[:1])+string(group)[1:]), say(""), say(""), say(""))
+		if it.House || it.Group == packlist.Papers {
+			rest = append(rest, it)
+		} else {
+			named = append(named, it)
 		}
-		day := ""
-		if it.Day != 0 {
-			day = agenda.When(it.Day, agenda.Zone(k.work, k.work.Window.Place))
-		}
-		t.row(write(), whatOf(it), amountCell(it), say(day), write())
 	}
-	for i := range 3 { // room for what the list does not know
-		if i > 0 && p.y+3*boxHeight+8*lineHeight(body) > p.bottom {
-			break
-		}
-		t.row(write(), cell{blank: true}, cell{blank: true}, cell{blank: true}, write())
-	}
-	t.end()
+	k.namedThings(named)
+	k.otherThings(rest)
 	if l.Mass > 0 {
 		text := fmt.Sprintf("Together %s kg, as far as masses are known.", origin.Trim(math.Ceil(l.Mass)))
 		if len(l.Unknown) > 0 {
@@ -53,33 +43,112 @@ func (k *pack) packing() {
 	p.fields(3, field{label: "Packed and seen by", units: 2}, field{label: "Date"})
 }
 
-// whatOf says what it is, for what, and what stands in for it.
-func whatOf(it packlist.Item) cell {
-	c := loud(it.What)
-	if len(it.For) > 0 {
-		c.lines = append(c.lines, line{text: "for " + strings.Join(it.For, ", ")})
+// namedThings lists what tasks name, with amounts, masses and the day on which it is first needed.
+func (k *pack) namedThings(list []packlist.Item) {
+	if len(list) == 0 {
+		return
 	}
+	t := k.p.table(column{"Out", 12.5}, column{"What", 92}, column{"Amount", 42}, column{"Needed", 25}, column{"Back", 13})
+	group := packlist.Group("")
+	for _, it := range list {
+		if it.Group != group {
+			group = it.Group
+			t.row(say(""), loud(upper(string(group))), say(""), say(""), say(""))
+		}
+		day := ""
+		if it.Day != 0 {
+			day = agenda.ShortDay(it.Day, agenda.Zone(k.work, k.work.Window.Place))
+		}
+		t.row(write(), whatOf(it), amountCell(it), say(day), write())
+	}
+	t.end()
+}
+
+// otherThings lists papers and the house list, two in a row, and has rows for what the list does not know.
+func (k *pack) otherThings(list []packlist.Item) {
+	p := k.p
+	t := p.table(column{"Out", 12.5}, column{"What", 66.5}, column{"Back", 13}, column{"Out", 12.5}, column{"What", 66.5}, column{"Back", 13})
+	row := func(cells ...cell) {
+		for len(cells) < 6 {
+			cells = append(cells, say(""))
+		}
+		t.row(cells...)
+	}
+	var cells []cell
+	head := ""
+	for _, it := range list {
+		c := cell{}
+		name := upper(string(it.Group))
+		if it.House {
+			name += ", house list"
+		}
+		if name != head { // the first of a group says which
+			head = name
+			c = loud(name + ":")
+		}
+		amount := it.Amount
+		if amount == "1" || amount == "house list" {
+			amount = ""
+		}
+		c.lines = append(c.lines, line{text: joined(": ", marked(it), amount)})
+		if where := stowed(it); where != "" {
+			c.lines = append(c.lines, line{text: where})
+		}
+		if cells = append(cells, write(), c, write()); len(cells) == 6 {
+			row(cells...)
+			cells = nil
+		}
+	}
+	if len(cells) > 0 {
+		row(cells...)
+	}
+	for i := range 3 { // room for what the list does not know
+		if i > 0 && p.y+3*boxHeight+8*lineHeight(body) > p.bottom {
+			break
+		}
+		row(write(), cell{blank: true}, write(), write(), cell{blank: true}, write())
+	}
+	t.end()
+}
+
+// marked is the thing's name, with the mark of what the job stops without.
+func marked(it packlist.Item) string {
 	if it.Stops {
-		c.lines = append(c.lines, line{"Job stops without it.", true})
+		return "! " + it.What
 	}
+	return it.What
+}
+
+// stowed says which box and vehicle a thing goes in.
+func stowed(it packlist.Item) string {
+	return joined("; ", prefixed("in box ", it.Box), strings.Join(it.Where, ", "))
+}
+
+// whatOf says what it is, for what, what stands in for it, and where it goes.
+func whatOf(it packlist.Item) cell {
+	c := loud(marked(it))
+	spare := ""
 	switch {
 	case it.Spare != "":
-		c.lines = append(c.lines, line{text: "spare: " + it.Spare})
-	case it.Stops && it.Group != packlist.Papers && it.Group != packlist.Loads:
-		c.lines = append(c.lines, line{text: "spare: none named"})
+		spare = "spare: " + it.Spare
+	case it.Stops && it.Group != packlist.Loads:
+		spare = "no spare named"
 	}
-	if where := joined("; ", prefixed("in box ", it.Box), strings.Join(it.Where, ", ")); where != "" {
-		c.lines = append(c.lines, line{text: where})
+	if s := joined("; ", prefixed("for ", strings.Join(it.For, ", ")), spare, stowed(it)); s != "" {
+		c.lines = append(c.lines, line{text: s})
 	}
 	return c
 }
 
 func amountCell(it packlist.Item) cell {
-	c := say(it.Amount)
+	mass := ""
 	if it.Mass > 0 {
-		c.lines = append(c.lines, line{text: origin.Trim(it.Mass) + " kg in all"})
+		mass = origin.Trim(it.Mass) + " kg in all"
 	}
-	return c
+	if it.Amount == "1" {
+		return say(joined(", ", it.Amount, strings.TrimSuffix(mass, " in all")))
+	}
+	return say(it.Amount, mass)
 }
 
 // vehicleLoads prints boxes, what goes in which vehicle in the order of loading, straps and flags.

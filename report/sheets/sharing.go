@@ -7,12 +7,14 @@ import (
 	"sailby/report/agenda"
 )
 
-// form is how a shift is laid out: with room, drawn together, or drawn together below another.
+// form is how a shift is laid out: with room, drawn together, drawn together as far as can still
+// be read, or so and below another.
 type form int
 
 const (
 	loose form = iota
 	compact
+	dense
 	followed
 )
 
@@ -54,9 +56,8 @@ func (k *pack) shared(list []*agenda.Shift) {
 		head += " to " + heads[len(heads)-1]
 	}
 	k.p.begin(head, "shift "+strings.Join(names, ", "), true)
-	how := loose
-	open, _ := k.trial(list[0], loose)
-	if drawn, _ := k.trial(list[0], compact); len(list) > 1 || drawn < open {
+	how := k.formOf(list[0])
+	if len(list) > 1 {
 		how = compact
 	}
 	for i, s := range list {
@@ -68,6 +69,17 @@ func (k *pack) shared(list []*agenda.Shift) {
 		}
 		k.shift(s, how)
 	}
+}
+
+// formOf gives the roomiest form in which a shift takes no more pages than in the tightest.
+func (k *pack) formOf(s *agenda.Shift) form {
+	least, _ := k.trial(s, dense)
+	for _, how := range []form{loose, compact} {
+		if n, _ := k.trial(s, how); n <= least {
+			return how
+		}
+	}
+	return dense
 }
 
 // height gives the height of a shift drawn together in mm, more than a page where it takes more

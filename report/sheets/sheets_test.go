@@ -172,6 +172,10 @@ func TestPages(t *testing.T) {
 	}
 	if s := packed(t, fixture.Report(), Options{SiteOnly: true}); strings.Contains(flat(s, "shift"), "Home workshop") {
 		t.Error("site only, and a sheet for the workshop")
+	} else if list := flat(s, "lift"); strings.Contains(list, "Home workshop") || !strings.Contains(list, "hang frame") && !strings.Contains(list, "landing frame") {
+		t.Error("site only, and the lift sheets are not those of the site alone")
+	} else if list := flat(s, "weld list"); strings.Contains(list, "Home workshop") || !strings.Contains(list, "L1-L4") {
+		t.Error("site only, and the weld list is not that of the site alone")
 	}
 }
 
@@ -232,14 +236,14 @@ func TestSheetsSay(t *testing.T) {
 		{"shift 2027-04-03, 2027-04-05", "the day of leaving"},
 		{"weld list", "L1-L4"},
 		{"weld list", "procedure site fillet"},
-		{"weld list", "136 flux-cored, preheat 50 °C"},
+		{"weld list", "procedure site fillet, 136 flux-cored, preheat 50 °C"},
 		{"paint log", "steel above the dew point at least 3 K"},
 		{"lift hang frame", "451 kg"},
 		{"lift hang frame", "9.8 m/s gust"},
 		{"lift hang frame", "Planned by a competent person, signature"},
 		{"packing", "flux-cored wire 1.2 mm"},
 		{"packing", "1.1 kg and 0.3 kg spare"}, // the wire of the shop's weld is not taken along
-		{"packing", "Job stops without it."},
+		{"packing", "! mig set for weld lugs; no spare named"},
 		{"cautions", "Isocyanate paint"},
 		{"cautions", agenda.Care},
 	} {

@@ -17,7 +17,7 @@ const taskShare = 77
 
 // taskCell says what the task is, where and who beside the boxes; how much of what, what holds and
 // by when below them. Notes that several tasks of the shift share come once below the table.
-func (k *pack) taskCell(s *agenda.Shift, st *expand.Step, shared []string) cell {
+func (k *pack) taskCell(s *agenda.Shift, st *expand.Step, shared []string, how form) cell {
 	c := loud(agenda.StepLabel(k.work, st))
 	who := joined(": ", where(s, st), strings.Join(workers(s, st), ", "))
 	rules := ""
@@ -45,11 +45,17 @@ func (k *pack) taskCell(s *agenda.Shift, st *expand.Step, shared []string) cell 
 		}
 	}
 	latest, bold := k.byWhen(st, s)
-	add(false, upper(joined("; ", words...)))
+	texts := []string{upper(joined("; ", words...))}
 	for _, n := range notesOf(st) {
 		if !slices.Contains(shared, n) {
-			add(false, upper(n))
+			texts = append(texts, upper(n))
 		}
+	}
+	if how == dense {
+		texts = []string{joined(". ", texts...)}
+	}
+	for _, s := range texts {
+		add(false, s)
 	}
 	for _, e := range s.Entries {
 		if e.Step == st && e.Watch {
@@ -69,9 +75,9 @@ func (k *pack) taskCell(s *agenda.Shift, st *expand.Step, shared []string) cell 
 // latest.
 func (k *pack) plannedCell(s *agenda.Shift, st *expand.Step) cell {
 	var times []string
-	for _, e := range s.Entries {
+	for _, e := range agenda.Merged(s.Entries) {
 		if e.Step == st && !e.Watch {
-			times = append(times, agenda.Between(e.Span, s.Zone))
+			times = append(times, agenda.Between(e.Span, s.Zone), agenda.Breaks(e, s.Zone))
 		}
 	}
 	if latest, bold := k.byWhen(st, s); !bold && latest != "" {

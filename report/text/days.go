@@ -89,18 +89,23 @@ func personRows(a *plan.Answer, s *agenda.Shift, q agenda.Person) [][2]string {
 	if s.Place != nil {
 		open = agenda.PlaceHours(a.Work, s.Place)
 	}
-	for i, e := range q.Entries {
+	entries := agenda.Merged(q.Entries)
+	for i, e := range entries {
 		if i > 0 {
-			gap := hours.Span{From: q.Entries[i-1].To, To: e.From}
+			gap := hours.Span{From: entries[i-1].To, To: e.From}
 			if gap.Len() > 0 {
 				word := "free"
-				if open.Count(gap) == 0 || q.Entries[i-1].Step == e.Step && !e.Watch {
+				if open.Count(gap) == 0 || entries[i-1].Step == e.Step && !e.Watch {
 					word = "break"
 				}
 				out = append(out, [2]string{agenda.Between(gap, s.Zone), word})
 			}
 		}
-		out = append(out, [2]string{agenda.Between(e.Span, s.Zone), entryWords(a, e)})
+		words := entryWords(a, e)
+		if pause := agenda.Breaks(e, s.Zone); pause != "" {
+			words += ", with the " + pause
+		}
+		out = append(out, [2]string{agenda.Between(e.Span, s.Zone), words})
 	}
 	return out
 }

@@ -95,7 +95,7 @@ func (p *daysPage) lines(s *agenda.Shift, n int) []line {
 	d := dayStrips{a: a, s: s, n: n, letters: letters(s)}
 	body = append(body, d.lines()...)
 	body = append(body, line{})
-	for _, e := range s.Entries {
+	for _, e := range agenda.Merged(s.Entries) {
 		body = append(body, p.entry(d, e))
 	}
 	for _, st := range s.Standing {
@@ -116,6 +116,9 @@ func (p *daysPage) entry(d dayStrips, e agenda.Entry) line {
 	}
 	if e.Goes {
 		what += " (goes on)"
+	}
+	if pause := agenda.Breaks(e, d.s.Zone); pause != "" {
+		what += " (" + pause + ")"
 	}
 	who := strings.Join(e.People, ", ")
 	if who == "" {
