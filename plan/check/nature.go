@@ -8,7 +8,6 @@ import (
 	"sailby/tasks"
 	"sailby/tasks/expand"
 	"sailby/tasks/hours"
-	"sailby/tasks/site"
 )
 
 // Limits of R25 where a paint or preparation does not say, and how far the arithmetic of others may be off.
@@ -23,104 +22,6 @@ const (
 )
 
 var usualWind = map[string]float64{"brush": 10, "roller": 10, "airless": 6.7, "air spray": 6.7}
-
-// magnus is the exponent of the vapour pressure over water at t °C.
-func magnus(t float64) float64 { return 17.62 * t / (243.12 + t) }
-
-// settles gives the temperature at which water or, below freezing, frost settles out of air.
-func settles(w site.Weather, frozen bool) float64 {
-	dew := math.Min(w.Dew, w.Air)
-	if dew >= 0 || !frozen {
-		return dew
-	}
-	g := magnus(dew)
-	return 272.62 * g / (22.46 - g)
-}
-
-// felt gives the hour's weather at a step's workface; ok is false where nothing is known, all where no weather
-// holds.
-func felt(s *expand.Step, t hours.Minute) (w site.Weather, ok, none bool) {
-	series := s.Place.Hourly(s.Face)
-	if series == nil {
-		return w, false, true
-	}
-	w, ok = series.At(int64(t))
-	if s.Face != nil && s.Face.Sheltered {
-		w.Wet, w.Wind, w.Gust = false, 0, 0
-	}
-	return w, ok, false
-}
-
-// paintable says whether a coat may be put on in a minute, what comes after left aside (R25).
-func paintable(s *expand.Step, w site.Weather) bool {
-	p := s.Paint
-	method := s.Task.Method
-	if method == "" || s.Name == "stripe" {
-		method = "brush"
-	}
-	wind := p.WindMax[method]
-	if wind == 0 {
-		wind = usualWind[method]
-	}
-	above := p.DewSpread
-	if above == 0 {
-		above = spread
-	}
-	humid := math.Exp(magnus(math.Min(w.Dew, w.Air)) - magnus(w.Steel))
-	return w.Steel >= p.ApplyMin-slackK && w.Air >= p.ApplyMin-slackK && w.Steel <= p.ApplyMax+slackK &&
-		w.Steel-settles(w, w.Steel < above) >= above-slackK &&
-		(p.RHMax == 0 || w.RH <= p.RHMax+slackShare) && (p.RHMin == 0 || humid >= p.RHMin-slackShare) &&
-		w.Wind <= wind+slackK && !w.Wet
-}
-
-// keeps dry says whether a fresh film is not lost in a minute.
-func keepsDry(s *expand.Step, w site.Weather) bool {
-	return w.Steel >= s.Paint.ApplyMin-slackK && w.Steel >= settles(w, w.Steel < 0)-slackK && !w.Wet
-}
-
-// weather adds what R25 asks to be open for a coat or a preparation.
-func (c *checker) weather(r *row, need func(line, string, string, string)) {
-	s := r.s
-	if s.Class != expand.Hands || s.Working == 0 || s.Place.Hourly(s.Face) == nil {
-		return
-	}
-	switch {
-	case s.Paint != nil:
-		l := c.line(false)
-		stays := hours.Minute(math.Ceil(s.Paint.DryHours*60 - 1e-6))
-		bad := c.hi + stays + 1 // the next minute in which the film would be lost
-		for t := c.hi + stays; t >= c.lo; t-- {
-			w, ok, _ := felt(s, t)
-			if t < c.hi {
-				l.on[t-c.lo] = ok && paintable(s, w) && bad > t+stays
-			}
-			if !ok || !keepsDry(s, w) {
-				bad = t
-			}
-		}
-		need(l, "R25", s.Paint.Name, "may not be put on: weather, or what would be lost in it")
-	case s.Task.Kind == tasks.Prep && !wipes(s.Task):
-		need(c.dryAir(s), "R25", "surface preparation", "would turn: damp or wet")
-	case s.Gust.Value > 0:
-		l := c.line(false)
-		for t := c.lo; t < c.hi; t++ {
-			w, ok, _ := felt(s, t)
-			l.on[t-c.lo] = ok && w.Gust <= s.Gust.Value*(1+1e-6)
-		}
-		need(l, "R25", "the wind", "is stronger than it may be lifted in")
-	}
-}
-
-// dryAir is when prepared steel keeps its grade.
-func (c *checker) dryAir(s *expand.Step) line {
-	l := c.line(true)
-	for t := c.lo; t < c.hi; t++ {
-		if w, ok, none := felt(s, t); !none {
-			l.on[t-c.lo] = ok && w.Steel-settles(w, w.Steel < spread) >= spread-slackK && !w.Wet
-		}
-	}
-	return l
-}
 
 // wipes says whether a preparation is only washing or wiping.
 func wipes(t *tasks.Task) bool {
@@ -207,13 +108,13 @@ func (c *checker) water(r *row) {
 				c.add("R26", r, "1", share(cured), "%s is covered by water at %s before it is fit for it", s.Paint.Name, c.when(m, s.Place))
 				return
 			}
-			cured += immersed(s, m)
+			cured += gains(s, s.Paint.ImmersionMin.Rate, m)
 		}
 	}
 }
 
-// immersed gives the share of the way to being fit for water that a film gains in a minute (R11).
-func immersed(s *expand.Step, m hours.Minute) float64 {
+// gains gives the share of the way to a state that a film gains in a minute (R11).
+func gains(s *expand.Step, rate func(celsius float64) float64, m hours.Minute) float64 {
 	p, steel, humid := s.Paint, usualSteel, math.Inf(1)
 	if s.Place.Steel.Pos.Given() {
 		steel = s.Place.Steel.Value
@@ -224,7 +125,7 @@ func immersed(s *expand.Step, m hours.Minute) float64 {
 	if steel < p.ApplyMin || p.RHMin > 0 && humid < p.RHMin-slackShare {
 		return 0
 	}
-	return p.ImmersionMin.Rate(steel)
+	return rate(steel)
 }
 
 // holds checks the time from preparation to the first coat that waits for it (R25).

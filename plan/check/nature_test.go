@@ -77,8 +77,14 @@ func TestWeatherForCoats(t *testing.T) {
 		{"wet just before", in(32, 33, func(w *site.Weather) { w.Wet = true }), ""},
 		{"wet within the four hours", in(37, 38, func(w *site.Weather) { w.Wet = true }), "R25"},
 		{"dew within the four hours", in(37, 38, func(w *site.Weather) { w.Steel = 4.9 }), "R25"},
-		{"humid is no harm by then", in(37, 38, func(w *site.Weather) { w.Air, w.Dew, w.Steel = 15, 12.7, 17 }), ""},
-		{"wet after the four hours", in(38, 39, func(w *site.Weather) { w.Wet = true }), ""},
+		{"humid before it is touch dry", in(37, 38, func(w *site.Weather) { w.Air, w.Dew, w.Steel = 15, 12.7, 17 }), "R25"},
+		{"2 K above the dew point before it is touch dry", in(37, 38, func(w *site.Weather) { w.Steel = 7 }), "R25"},
+		{"wind before it is touch dry", in(37, 38, func(w *site.Weather) { w.Wind = 10.1 }), "R25"},
+		{"wind in the hour in which it gets touch dry", in(38, 39, func(w *site.Weather) { w.Wind = 10.1 }), "R25"}, // 4.18 h at 14 C
+		{"wet, damp and windy after that", in(39, 60, func(w *site.Weather) { w.Wet, w.Wind, w.Steel = true, 12, 4.9 }), ""},
+		{"steel hot and air cold before it is touch dry", in(36, 37, func(w *site.Weather) { w.Steel, w.Air, w.Dew = 45, 4, 0 }), ""},
+		{"frost before it is hard dry", in(44, 45, func(w *site.Weather) { w.Steel = -0.1 }), "R25"}, // 13.3 h at 14 C, one of them lost
+		{"frost after it is hard dry", in(48, 49, func(w *site.Weather) { w.Steel = -0.1 }), ""},
 	} {
 		t.Run(c.what, func(t *testing.T) {
 			f := newFix(t)
@@ -87,7 +93,18 @@ func TestWeatherForCoats(t *testing.T) {
 			f.broken(c.rule, "may not be put on")
 		})
 	}
+	windy := in(38, 44, func(w *site.Weather) { w.Wind = 10.1 })
+	for until, rule := range map[string]string{"applied": "", "touch dry": "R25", "hard dry": "R25"} {
+		f := newFix(t)
+		f.weather(windy)
+		f.coated("paint", f.deck, "04-06 09:00-10:00").Paint.LimitsUntil = until
+		f.broken(rule, "may not be put on")
+	}
 	f := newFix(t)
+	f.weather(in(43, 44, func(w *site.Weather) { w.Wind = 10.1 }))
+	f.coated("paint", f.deck, "04-06 09:00-10:00").Paint.LimitsUntil = "hard dry"
+	f.broken("R25", "may not be put on")
+	f = newFix(t)
 	f.weather(func(_ int, w *site.Weather) { w.Wet, w.Wind = true, 20 })
 	f.coated("paint", f.deck, "04-06 09:00-10:00")
 	f.deck.Sheltered = true

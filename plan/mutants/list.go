@@ -140,4 +140,8 @@ var mutants = []mutant{
 		`l.fill(hours.Span{From: from, To: min(to, from+hours.Minute(head)-1)}, false)`, byChecker},
 	{"plan/check/pieces.go", `	case before >= clear:`,
 		`	case before >= clear+1:`, byChecker},
+	{"plan/check/weather.go", `		if bad < first {`,
+		`		if bad < first-1 {`, byChecker},
+	{"plan/check/weather.go", `		sum += gained[i]`,
+		`		sum += 2 * gained[i]`, byChecker},
 }

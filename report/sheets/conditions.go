@@ -96,13 +96,13 @@ func (k *pack) limits(steps []*expand.Step) (lines []string, bare bool) {
 			continue
 		}
 		var parts []string
-		for _, f := range st.Paint.Limits(st.Task.Method) {
+		for _, f := range st.Paint.Limits(st.Method()) {
 			parts = append(parts, f.Name+" "+signs(f.Amount()))
 		}
 		if len(parts) == 0 {
 			continue
 		}
-		line := joined(" by ", paper(st.Paint.Name), paper(st.Task.Method)) + ": " + strings.Join(parts, "; ") + "."
+		line := joined(" by ", paper(st.Paint.Name), paper(st.Method())) + ": " + strings.Join(parts, "; ") + "."
 		if !slices.Contains(lines, line) {
 			lines = append(lines, line)
 		}

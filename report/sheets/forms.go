@@ -167,7 +167,7 @@ func (k *pack) coatBlock(s *expand.Step) {
 		}
 		film = origin.Trim(q.DFT) + " µm"
 		var limits []string
-		for _, f := range q.Limits(s.Task.Method) {
+		for _, f := range q.Limits(s.Method()) {
 			limits = append(limits, f.Name+" "+signs(f.Amount()))
 		}
 		if len(limits) > 0 {

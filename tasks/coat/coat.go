@@ -56,6 +56,7 @@ type Paint struct {
 	ImmersionMin       Curve              // before it may go under water
 	ImmersionMax       Curve              // and the longest it may wait for it
 	DryHours           float64            // hours after application that must stay dry and above ApplyMin
+	LimitsUntil        string             // what its limits hold until, one of Untils; empty is "touch dry"
 	PackSizes          []float64          // litres of mixed paint in one tin or kit
 	MixRatio           [2]float64         // base to hardener by volume; zero for one-pack paints
 	Induction          float64            // minutes the mix must stand before use
@@ -64,7 +65,7 @@ type Paint struct {
 	Origin             origin.Origin // where the figures come from
 	// Sources tells where single figures come from, by name: those of States, "volume solids", "dft",
 	// "pot life", "induction", "next coat", "next coat max", "apply", "humidity", "dew spread",
-	// "wind" and "dry hours". What is not in it comes from Origin.
+	// "wind", "dry hours" and "limits until". What is not in it comes from Origin.
 	Sources map[string]origin.Origin
 }
 

@@ -42,39 +42,86 @@ func (p Paint) ownWind(method string) float64 {
 
 // MayApply says whether a paint may be applied in the air and on the steel of one moment, and if not
 // gives every reason with both numbers. air and steel are C, rh a share, wind m/s. With an empty
-// method the wind is not judged: that is the question for the hours after application, in which the
-// film must stay above its least temperature and off the dew point. Rain is not judged here.
+// method the wind is not judged. Rain is not judged here; what must hold afterwards is MayStay's question.
 //
 // A reading that is not a number closes the hour: what is not known is not open.
 func MayApply(p Paint, air, steel, rh, wind float64, method string) (ok bool, reasons []string) {
-	closed := func(format string, args ...any) { reasons = append(reasons, fmt.Sprintf(format, args...)) }
-	dew := DewPoint(air, rh)
-	for _, v := range []struct {
-		name string
-		bad  bool
-	}{{"air temperature", !(air >= coldestAir && air <= hottest)}, {"steel temperature", !(steel >= coldestAir && steel <= highCelsius)},
-		{"humidity", !(rh > 0 && rh <= 1)}, {"wind", word(method) != "" && !(wind >= 0 && wind < 200)}} {
-		if v.bad {
-			closed("%s is not known", v.name)
-		}
-	}
-	if len(reasons) > 0 {
+	if reasons = unknown(air, steel, rh, wind, method); len(reasons) > 0 {
 		return false, reasons
 	}
-	if short := p.ApplyMin - steel; short > limitSlack {
-		closed("steel %.1f C is below the least %.1f C (%.1f K short)", steel, p.ApplyMin, short)
-	}
+	closed := func(format string, args ...any) { reasons = append(reasons, fmt.Sprintf(format, args...)) }
+	reasons = coldReasons(p, steel)
 	if short := p.ApplyMin - air; short > limitSlack {
 		closed("air %.1f C is below the least %.1f C (%.1f K short)", air, p.ApplyMin, short)
 	}
 	if over := steel - p.ApplyMax; over > limitSlack {
 		closed("steel %.1f C is above the greatest %.1f C (%.1f K over)", steel, p.ApplyMax, over)
 	}
-	reasons = append(reasons, dampReasons(p, air, steel, rh, dew)...)
+	reasons = append(reasons, dampReasons(p, air, steel, rh, DewPoint(air, rh))...)
 	if word(method) != "" {
 		reasons = append(reasons, windReasons(p, wind, method)...)
 	}
 	return len(reasons) == 0, reasons
+}
+
+// The states until which the limits of application may hold.
+const (
+	untilApplied  = "applied"
+	untilTouchDry = "touch dry"
+	untilHardDry  = "hard dry"
+)
+
+// Untils lists what a paint's limits may hold until: only while it is applied, until it is touch dry
+// (the usual: a wet film takes up damp and dust), until it is hard dry.
+func Untils() []string { return []string{untilApplied, untilTouchDry, untilHardDry} }
+
+// HeldUntil gives what the paint's limits hold until, one of Untils.
+func (p Paint) HeldUntil() string {
+	if p.LimitsUntil == "" {
+		return untilTouchDry
+	}
+	return p.LimitsUntil
+}
+
+// MayStay says whether a film that is not yet dry may be left in the air of one moment: the steel no colder
+// than the paint's least and as far above the dew point as it asks, the air no more humid and the wind no stronger
+// than it allows by the method. Units, unknown readings and rain are those of MayApply. How hot the steel is and how
+// cold the air no longer matters, nor that the air is too dry, in which a paint that wants moisture only waits.
+func MayStay(p Paint, air, steel, rh, wind float64, method string) (ok bool, reasons []string) {
+	if reasons = unknown(air, steel, rh, wind, method); len(reasons) > 0 {
+		return false, reasons
+	}
+	p.RHMin = 0
+	reasons = append(coldReasons(p, steel), dampReasons(p, air, steel, rh, DewPoint(air, rh))...)
+	if word(method) != "" {
+		reasons = append(reasons, windReasons(p, wind, method)...)
+	}
+	return len(reasons) == 0, reasons
+}
+
+// Freezes says whether frost would spoil a film that is not hard dry: a US federal road specification lets nothing be
+// painted where 32 F is expected before it is dry. A paint that may go on colder is held to its own least.
+func Freezes(p Paint, steel float64) bool { return steel < math.Min(0, p.ApplyMin) }
+
+// unknown lists the readings that are missing.
+func unknown(air, steel, rh, wind float64, method string) (reasons []string) {
+	for _, v := range []struct {
+		name string
+		bad  bool
+	}{{"air temperature", !(air >= coldestAir && air <= hottest)}, {"steel temperature", !(steel >= coldestAir && steel <= highCelsius)},
+		{"humidity", !(rh > 0 && rh <= 1)}, {"wind", word(method) != "" && !(wind >= 0 && wind < 200)}} {
+		if v.bad {
+			reasons = append(reasons, v.name+" is not known")
+		}
+	}
+	return reasons
+}
+
+func coldReasons(p Paint, steel float64) []string {
+	if short := p.ApplyMin - steel; short > limitSlack {
+		return []string{fmt.Sprintf("steel %.1f C is below the least %.1f C (%.1f K short)", steel, p.ApplyMin, short)}
+	}
+	return nil
 }
 
 // dampReasons judges dew, frost and humidity.
@@ -140,6 +187,13 @@ func (p Paint) Limits(method string) []origin.Figure {
 		} else {
 			out = append(out, origin.Recalled(name, usualWind[m], "m/s", "usual limit; the published guides give no number"))
 		}
+	}
+	if until := p.HeldUntil(); until != untilApplied {
+		from := origin.Origin{Kind: origin.Judgement, Source: "a wet film takes up damp and dust"}
+		if o, ok := p.Sources["limits until"]; ok {
+			from = o
+		}
+		out = append(out, origin.Word("cold, dew, damp and wind kept off until", until, from))
 	}
 	add("dry hours", "dry and warm after it for", p.DryHours, "h")
 	return out

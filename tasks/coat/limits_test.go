@@ -120,17 +120,61 @@ func TestLimits(t *testing.T) {
 		byName[f.Name] = f
 	}
 	for name, want := range map[string]string{"steel at least": "5 C", "steel at most": "40 C", "steel above the dew point at least": "3 K",
-		"humidity at most": "95 %", "humidity at the steel at least": "50 %", "wind at most by airless": "6.7 m/s", "dry and warm after it for": "8 h"} {
+		"humidity at most": "95 %", "humidity at the steel at least": "50 %", "wind at most by airless": "6.7 m/s", "dry and warm after it for": "8 h", "cold, dew, damp and wind kept off until": "touch dry"} {
 		if got := byName[name].Amount(); got != want || byName[name].Origin.String() == "" {
 			t.Errorf("%s: %q from %v, want %q", name, got, byName[name].Origin, want)
 		}
 	}
 	bare := Paint{ApplyMin: 4, ApplyMax: 52}.Limits("brush")
-	if len(bare) != 4 || bare[2].Origin.Kind != origin.Table || bare[3].Origin.Kind != origin.Memory {
+	if len(bare) != 5 || bare[2].Origin.Kind != origin.Table || bare[3].Origin.Kind != origin.Memory {
 		t.Errorf("a paint without limits of its own: %+v", bare)
 	}
-	if n := len(plain.Limits("mop")); n != 4 {
-		t.Errorf("%d limits for no method, want 4", n)
+	if n := len(plain.Limits("mop")); n != 5 {
+		t.Errorf("%d limits for no method, want 5", n)
+	}
+}
+
+// What must hold until the film is dry: not how hot the steel is, nor how cold the air or how dry.
+func TestMayStay(t *testing.T) {
+	silicate, _ := Defaults("zinc ethyl silicate")
+	for _, c := range []struct {
+		name                 string
+		paint                Paint
+		air, steel, rh, wind float64
+		says                 string
+	}{
+		{"fine", plain, 15, 15, 0.7, 3, ""},
+		{"sun on it", plain, 20, 60, 0.5, 3, ""},
+		{"cold air, warm steel", plain, 1, 8, 0.5, 3, ""},
+		{"too dry for zinc silicate", silicate, 30, 40, 0.5, 3, ""},
+		{"cold steel", plain, 5, 3, 0.3, 3, "steel 3.0 C is below the least 4.0 C (1.0 K short)"},
+		{"2 K above the dew point", plain, 10, 8.7, 0.8, 1, "steel 8.7 C is only 2.0 K above the dew point 6.7 C; 3.0 K are wanted"},
+		{"damp air", plain, 20, 25, 0.86, 1, "humidity 86 % is above the greatest 85 %"},
+		{"gale", plain, 15, 15, 0.5, 11, "wind 11.0 m/s is above the greatest 10.0 m/s for brush"},
+		{"nothing known", plain, 15, math.NaN(), 0.5, 1, "steel temperature is not known"},
+	} {
+		ok, reasons := MayStay(c.paint, c.air, c.steel, c.rh, c.wind, Brush)
+		if ok != (c.says == "") || strings.Join(reasons, "|") != c.says {
+			t.Errorf("%s: %v %q, want %q", c.name, ok, reasons, c.says)
+		}
+	}
+	for steel, want := range map[float64]bool{-0.1: true, 0: false, 3: false} {
+		if Freezes(plain, steel) != want || Freezes(Paint{ApplyMin: -5}, steel) {
+			t.Errorf("frost at %v C: %v", steel, Freezes(plain, steel))
+		}
+	}
+	for _, until := range Untils() {
+		if p := (Paint{LimitsUntil: until}); p.HeldUntil() != until {
+			t.Errorf("limits hold until %q, want %q", p.HeldUntil(), until)
+		}
+	}
+	if p := primer(); p.HeldUntil() != "touch dry" {
+		t.Errorf("limits hold until %q", p.HeldUntil())
+	}
+	p := primer()
+	p.LimitsUntil = "christmas"
+	if err := p.Validate(); err == nil || hint(err) == "" {
+		t.Error("limits until christmas are taken")
 	}
 }
 

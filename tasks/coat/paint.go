@@ -24,6 +24,9 @@ func (p Paint) Validate() error {
 	if p.RHMax > 0 && p.RHMin >= p.RHMax {
 		return p.in(fault("one of the two is wrong", "least humidity %s leaves no room below the greatest %s", amount(p.RHMin*100, "%"), amount(p.RHMax*100, "%")))
 	}
+	if !contains(Untils(), p.HeldUntil()) {
+		return p.in(fault("write "+oneOf(Untils()), "its limits hold until %q", p.LimitsUntil))
+	}
 	for _, m := range sorted(p.WindMax) {
 		if err := within("the wind limit for "+m, p.WindMax[m], 0.1, 40, "m/s", "give it in m/s"); err != nil {
 			return p.in(err)

@@ -56,10 +56,7 @@ func (w *Work) coatWeather(s *Step, in hours.Span) []site.Span {
 	if series == nil {
 		return nil
 	}
-	p, method := s.Paint.Paint, coatMethod(s.Task)
-	if s.Name == "stripe" {
-		method = coat.Brush
-	}
+	p, method := s.Paint.Paint, s.Method()
 	from, to := int64(in.From), int64(in.To)
 	out := series.ClosedBy(func(h site.Weather) []string {
 		h = felt(s.Task, h)
@@ -69,6 +66,7 @@ func (w *Work) coatWeather(s *Step, in hours.Span) []site.Span {
 		}
 		return reasons
 	}, from, to)
+	out = append(out, w.wetFilm(s, in)...)
 	stays := int64(math.Ceil(p.DryHours*60 - 1e-6))
 	if stays <= 0 {
 		return out
@@ -76,10 +74,59 @@ func (w *Work) coatWeather(s *Step, in hours.Span) []site.Span {
 	lost := series.ClosedBy(func(h site.Weather) []string { return spoilt(p, felt(s.Task, h)) }, from, to+stays)
 	for _, b := range lost {
 		if a := max(from, b.From-stays); a < b.To-1 {
-			out = append(out, site.Span{From: a, To: min(b.To-1, to), Why: fmt.Sprintf("must stay dry for %s: %s at %s", quantity.Hours(int(stays)), b.Why,
-				hours.Minute(b.From).In(zone(s.Place)).Format("Mon 15:04"))})
+			out = append(out, site.Span{From: a, To: min(b.To-1, to), Why: fmt.Sprintf("must stay dry for %s: %s at %s", quantity.Hours(int(stays)), b.Why, w.told(s, b.From))})
 		}
 	}
+	return out
+}
+
+func (w *Work) told(s *Step, at int64) string {
+	return hours.Minute(at).In(zone(s.Place)).Format("Mon 15:04")
+}
+
+// Method gives how a coat is put on: the stripe by brush.
+func (s *Step) Method() string {
+	if s.Name == "stripe" {
+		return coat.Brush
+	}
+	return coatMethod(s.Task)
+}
+
+// wetFilm gives when a coat may not be put on because, before it has dried so far, an hour comes that is bad for it:
+// the paint's own limits until touch dry (or what it says), frost until hard dry. Each bad hour closes the
+// minutes whose film is not yet so far when it comes; as a later film is never dry earlier, these end where it begins.
+func (w *Work) wetFilm(s *Step, in hours.Span) (out []site.Span) {
+	p, series := s.Paint.Paint, s.Place.Hourly(s.Face)
+	hold := func(state, must string, judge func(site.Weather) []string) {
+		curve, ok := p.State(state)
+		if !ok {
+			return
+		}
+		film := (&expander{w: w}).film(curve, s.Paint, s.Task)
+		end := min(film.finish(in.To), w.Span.To) // what would be dry only beyond the span is judged as far as that
+		for _, b := range series.ClosedBy(func(h site.Weather) []string { return judge(felt(s.Task, h)) }, int64(in.From), int64(max(in.To, end))) {
+			to := min(hours.Minute(b.From), in.To)
+			n := sort.Search(max(0, int(to-in.From)), func(k int) bool { return film.finish(in.From+hours.Minute(k)+1) > hours.Minute(b.From) })
+			if a := in.From + hours.Minute(n); a < to {
+				out = append(out, site.Span{From: int64(a), To: int64(to), Why: fmt.Sprintf("%s until %s: %s at %s", must, state, b.Why, w.told(s, b.From))})
+			}
+		}
+	}
+	if until := p.HeldUntil(); until != "applied" {
+		hold(until, "must keep within its limits", func(h site.Weather) []string {
+			_, why := coat.MayStay(p, h.Air, h.Steel, h.RH, h.Wind, s.Method())
+			if h.Wet {
+				why = append(why, "wet")
+			}
+			return why
+		})
+	}
+	hold("hard dry", "must not freeze", func(h site.Weather) []string {
+		if coat.Freezes(p, h.Steel) {
+			return []string{fmt.Sprintf("steel %.1f C", h.Steel)}
+		}
+		return nil
+	})
 	return out
 }
 

@@ -59,15 +59,21 @@ func TestClosedHoursAreThoseThatBreakALimit(t *testing.T) {
 	const n = 60
 	rapid.Check(t, func(rt *rapid.T) {
 		days := make([]site.Weather, n)
+		bad := rapid.IntRange(0, 30).Draw(rt, "bad hours in a hundred")
 		for i := range days {
-			air := rapid.Float64Range(-2, 20).Draw(rt, "air")
+			days[i] = fine()
+			if rapid.IntRange(0, 99).Draw(rt, "hour") >= bad {
+				days[i].Steel += rapid.Float64Range(-5, 5).Draw(rt, "steel")
+				continue
+			}
+			air := rapid.Float64Range(-4, 20).Draw(rt, "air")
 			days[i] = site.Weather{Air: air, Steel: air + rapid.Float64Range(-6, 10).Draw(rt, "over"), Dew: air - rapid.Float64Range(0, 12).Draw(rt, "dry"),
 				Wind: rapid.Float64Range(0, 14).Draw(rt, "wind"), Wet: rapid.IntRange(0, 9).Draw(rt, "wet") == 0}
 		}
 		of := func(h int) site.Weather { return days[((h%n)+n)%n] }
 		w := under(t, of, coatAndGrind)
 		p, g := w.step(t, "paint / coat 1"), w.step(t, "grind / surface prep")
-		paint, grind := w.Nature(p), w.Nature(g)
+		grind := w.Nature(g)
 		series := p.Place.Climate.Hourly
 		mayPaint := func(h site.Weather) bool {
 			ok, _ := coat.MayApply(p.Paint.Paint, h.Air, h.Steel, h.RH, h.Wind, coat.Brush)
@@ -80,13 +86,29 @@ func TestClosedHoursAreThoseThatBreakALimit(t *testing.T) {
 			}
 			return h.Steel >= p.Paint.ApplyMin && h.Steel >= frost && !h.Wet
 		}
-		for range 40 {
+		p.Paint.LimitsUntil = rapid.SampledFrom(coat.Untils()).Draw(rt, "limits until")
+		p.Paint.DryHours = rapid.SampledFrom([]float64{0, 2, 8}).Draw(rt, "stays dry")
+		paint := w.Nature(p)
+		steel := func(m int) float64 { h, _ := series.At(int64(m)); return h.Steel }
+		for range 15 {
 			m := w.Span.From + hours.Minute(rapid.IntRange(0, 6*1440).Draw(rt, "minute"))
 			h, _ := series.At(int64(m))
 			open := mayPaint(h)
-			for k := hours.Minute(1); k <= 8*60; k++ {
+			for k := hours.Minute(1); k <= hours.Minute(p.Paint.DryHours*60); k++ {
 				a, _ := series.At(int64(m + k))
 				open = open && stays(a)
+			}
+			if curve, ok := p.Paint.State(p.Paint.LimitsUntil); ok {
+				dry, _ := coat.Cure(int(m)+1, curve, p.Paint.ApplyMin, steel, int(w.Span.To))
+				for k := int(m) + 1; k < dry; k++ {
+					a, _ := series.At(int64(k))
+					kept, _ := coat.MayStay(p.Paint.Paint, a.Air, a.Steel, a.RH, a.Wind, coat.Brush)
+					open = open && kept && !a.Wet
+				}
+			}
+			hard, _ := coat.Cure(int(m)+1, p.Paint.HardDry, p.Paint.ApplyMin, steel, int(w.Span.To))
+			for k := int(m) + 1; k < hard; k++ {
+				open = open && steel(k) >= 0
 			}
 			if closedAt(paint, m) == open {
 				rt.Fatalf("coat at minute %d: closed %v, open by the limits %v", m-w.Span.From, !open, open)

@@ -38,6 +38,7 @@ var paintSection = section{name: "Paint", where: "paints / NAME", host: "paints/
 	points("immersion min", "{10 C: 24 h}", "before it may go under water"),
 	points("immersion max", "{10 C: 90 d}", "the longest it may wait to go under water"),
 	{name: "stays dry", takes: anAmount, dim: quantity.Time, low: 0, high: 14 * 1440, usual: "8 h", example: "8 h", says: "after the coat it must be dry for so long"},
+	{name: "limits until", takes: aWord, words: coat.Untils(), usual: "touch dry (house judgement)", example: "hard dry", says: "what its limits of cold, dew point, humidity and wind hold until (R25)"},
 	{name: "packs", takes: itsOwn, form: "volumes", shape: textOrList, usual: "that of its kind", example: "[5 L, 20 L]", says: "mixed paint in one tin or kit"},
 	{name: "mix", takes: itsOwn, form: "base to hardener by volume", shape: anyText, usual: "that of its kind", example: "\"4:1\"", says: "mixing ratio"},
 	{name: "induction", takes: anAmount, dim: quantity.Time, low: 0, high: 240, usual: "that of its kind", example: "15 min", says: "the mix stands before use"},
@@ -93,6 +94,10 @@ func (r *reader) paint(name string, at *yaml.Node, f *fields) *tasks.Paint {
 	}
 	if b := f.yesOrNot("isocyanate"); b != nil {
 		p.Isocyanate = *b
+	}
+	if u := f.choice("limits until", ""); u != "" {
+		p.LimitsUntil = u
+		p.Sources["limits until"] = f.pos("limits until").Origin("")
 	}
 	f.paintLimits(p)
 	for _, c := range []struct {
@@ -155,6 +160,7 @@ func (f *fields) paintLimits(p *tasks.Paint) {
 				p.WindMax = map[string]float64{}
 			}
 			p.WindMax[m] = v
+			p.Sources["wind"] = f.pos("wind").Origin("")
 		}
 	}
 }
