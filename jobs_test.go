@@ -89,6 +89,9 @@ func said(rep *plan.Report, key string) string {
 	case "getting off":
 		for _, g := range agenda.Getaways(a.Work) {
 			if g.Neaped {
+				if s := agenda.Sentence(a, false); !strings.HasPrefix(s, "Fits, but neaped:") || agenda.Word(a) != "fits, but neaped" {
+					return "the first line says " + s
+				}
 				return "neaped"
 			}
 		}

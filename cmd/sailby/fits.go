@@ -7,6 +7,7 @@ import (
 	"github.com/spf13/cobra"
 
 	"sailby/plan"
+	"sailby/report/agenda"
 	"sailby/report/text"
 )
 
@@ -20,7 +21,7 @@ func newFits(g *globals, st streams) *cobra.Command {
 	c := &cobra.Command{
 		Use:               "fits JOB",
 		Short:             "Whether the work fits the window, by how much, and what governs that",
-		Long:              "Says whether the work fits: on likely hours, with every maybe, and at the high end of the hours. The exit\nstatus is 0 if it fits on likely hours, and 3 if that was not shown.",
+		Long:              "Says whether the work fits: on likely hours, with every maybe, and at the high end of the hours. The exit\nstatus is 0 if it fits on likely hours, and 3 if that was not shown or a craft is neaped.",
 		Example:           "  sailby fits slip/job.yaml\n  sailby fits pier/job.yaml --trip \"five days\"",
 		Args:              takes(false, "JOB"),
 		ValidArgsFunction: jobFiles,
@@ -46,7 +47,7 @@ func runFits(ctx context.Context, o *fitsOptions, st streams, args []string) err
 	if err := st.print(write); err != nil {
 		return err
 	}
-	if r.Likely.Verdict != plan.Fits {
+	if r.Likely.Verdict != plan.Fits || agenda.Neaped(r.Likely) {
 		return errNotShown
 	}
 	return nil

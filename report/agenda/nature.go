@@ -3,9 +3,12 @@ package agenda
 import (
 	"fmt"
 	"math"
+	"regexp"
 	"slices"
 	"strings"
+	"time"
 
+	"sailby/plan"
 	"sailby/report/clean"
 	"sailby/tasks"
 	"sailby/tasks/expand"
@@ -276,10 +279,29 @@ func Getaways(w *expand.Work) []Getaway {
 		if level != c.Needs.Value {
 			g.Words += fmt.Sprintf(" (%.2f m and the allowance for pressure and surge)", c.Needs.Value)
 		}
-		g.Words = "Getting off again at " + PlaceLabel(p) + ": " + clean.Line(g.Words)
+		g.Words = "Getting off again at " + PlaceLabel(p) + ": " + local(clean.Line(g.Words), Zone(w, p))
 		out = append(out, g)
 	}
 	return out
+}
+
+// utc is a moment as tide tables write it.
+var utc = regexp.MustCompile(`\d{4}-\d\d-\d\d \d\d:\d\d UTC`)
+
+// local turns the moments of a text, which are UTC, into those of the place.
+func local(text string, zone *time.Location) string {
+	return utc.ReplaceAllStringFunc(text, func(s string) string {
+		at, err := time.Parse("2006-01-02 15:04 UTC", s)
+		if err != nil {
+			return s
+		}
+		return When(hours.Minute(at.Unix()/60), zone)
+	})
+}
+
+// Neaped says whether some craft of an answer's job is not shown to get off again in time.
+func Neaped(a *plan.Answer) bool {
+	return a != nil && a.Work != nil && slices.ContainsFunc(Getaways(a.Work), func(g Getaway) bool { return g.Neaped })
 }
 
 // DayWords gives what nature does on a day at a place, a sentence each: sun, tide, weather, and the hours in which

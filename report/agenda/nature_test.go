@@ -90,7 +90,7 @@ func TestHoursThatNatureLeaves(t *testing.T) {
 func TestGettingOffAgain(t *testing.T) {
 	w := work(t, "neaped.yaml")
 	got := agenda.Getaways(w)
-	if len(got) != 1 || !got[0].Neaped || !strings.Contains(got[0].Words, "neaped: 4.15 m needed to get off, the highest water before 2027-06-08 19:00 UTC is 4.00 m (0.15 m short)") {
+	if len(got) != 1 || !got[0].Neaped || !strings.Contains(got[0].Words, "neaped: 4.15 m needed to get off, the highest water before Tue 8 Jun 20:00 is 4.00 m (0.15 m short)") {
 		t.Errorf("%+v", got)
 	}
 	craft := w.Window.Place.Sea.Craft

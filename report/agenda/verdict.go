@@ -29,11 +29,11 @@ func BasisWords(b expand.Basis) string {
 	return s
 }
 
-// Word is the verdict as people read it: "fits", "cannot fit", "not settled".
-func Word(v plan.Verdict) string {
-	switch v {
+// Word is an answer's verdict as people read it: "fits", "fits, but neaped", "cannot fit", "not settled".
+func Word(a *plan.Answer) string {
+	switch a.Verdict {
 	case plan.Fits:
-		return "fits"
+		return "fits" + butNeaped(a)
 	case plan.CannotFit:
 		return "cannot fit"
 	}
@@ -47,8 +47,12 @@ func Sentence(a *plan.Answer, low bool) string {
 	basis := BasisWords(a.Work.Basis)
 	switch a.Verdict {
 	case plan.Fits:
-		return fmt.Sprintf("Fits: %s the work at %s is finished by %s, %s before the window closes.",
-			basis, PlaceLabel(a.Work.Window.Place), When(a.Finish, zone), quantity.Hours(a.InHand))
+		s := fmt.Sprintf("Fits%s: %s the work at %s is finished by %s, %s before the window closes",
+			butNeaped(a), basis, PlaceLabel(a.Work.Window.Place), When(a.Finish, zone), quantity.Hours(a.InHand))
+		if butNeaped(a) != "" {
+			s += "; what came in on the tide stays"
+		}
+		return s + "."
 	case plan.CannotFit:
 		if low {
 			basis = "even at the low end of every range"
@@ -65,6 +69,14 @@ func Sentence(a *plan.Answer, low bool) string {
 		return s + "."
 	}
 	return "Not settled: " + basis + " " + unsettled(a) + "."
+}
+
+// butNeaped is what a verdict adds where a craft is not shown to get off again (R26): the work fits, the craft stays.
+func butNeaped(a *plan.Answer) string {
+	if Neaped(a) {
+		return ", but neaped"
+	}
+	return ""
 }
 
 func unsettled(a *plan.Answer) string {

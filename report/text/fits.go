@@ -66,7 +66,7 @@ func (p *page) sideBySide(r *plan.Report) {
 		high = "high end of the hours (no range)"
 	}
 	p.row(widths, "", "likely hours", maybes, high)
-	line("verdict", func(a *plan.Answer) string { return agenda.Word(a.Verdict) })
+	line("verdict", func(a *plan.Answer) string { return agenda.Word(a) })
 	line("site finish", agenda.Finish)
 	line("time in hand", func(a *plan.Answer) string { return agenda.InHand(a, a.InHand) })
 	line("earliest possible", func(a *plan.Answer) string {

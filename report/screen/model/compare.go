@@ -20,7 +20,7 @@ func compare(m *Model, before, after *plan.Answer, n int) []line {
 		return line{text: columns(n, widths, name, x, y, diff)}
 	}
 	out := []line{{columns(n, widths, "", "as in the file", "with the changes", "difference"), Head, nil}}
-	out = append(out, row("verdict", agenda.Word(before.Verdict), agenda.Word(after.Verdict), ""))
+	out = append(out, row("verdict", agenda.Word(before), agenda.Word(after), ""))
 	finish, hand := "", ""
 	if before.Plan != nil && after.Plan != nil {
 		finish = later(int(after.Finish - before.Finish))

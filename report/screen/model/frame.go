@@ -107,10 +107,12 @@ func (m *Model) bar(n int) string {
 // status is the row with the job's name, and the verdict at its right end.
 func (m *Model) status(n int) Row {
 	a := m.answer()
-	verdict, mark := agenda.Word(a.Verdict), Plain
+	verdict, mark := agenda.Word(a), Plain
 	switch {
 	case a.Verdict == plan.Fits:
-		mark = Good
+		if !agenda.Neaped(a) {
+			mark = Good
+		}
 		verdict += ", " + agenda.InHand(a, a.InHand) + " in hand"
 	case a.Verdict == plan.CannotFit:
 		mark = Bad

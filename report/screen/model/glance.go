@@ -30,7 +30,9 @@ func (p *glancePage) lay(n int) ([]Row, []line) {
 	mark := Plain
 	switch a.Verdict {
 	case plan.Fits:
-		mark = Good
+		if !agenda.Neaped(a) {
+			mark = Good
+		}
 	case plan.CannotFit:
 		mark = Bad
 	}
@@ -91,7 +93,7 @@ func sideBySide(r *plan.Report, only bool, n int) []line {
 	}
 	return []line{
 		{columns(n, widths, "", "likely hours", "every maybe", "high end"), Head, nil},
-		row("verdict", func(a *plan.Answer) string { return agenda.Word(a.Verdict) }),
+		row("verdict", func(a *plan.Answer) string { return agenda.Word(a) }),
 		row("site finish", agenda.Finish),
 		row("time in hand", func(a *plan.Answer) string { return agenda.InHand(a, a.InHand) }),
 		row("earliest possible", func(a *plan.Answer) string {
