@@ -21,6 +21,7 @@ func (c *checker) lifts() {
 			continue
 		}
 		c.stage(r)
+		c.hooks(r)
 		if l := t.Lifting; l != nil {
 			if l.Proved != nil {
 				c.sides(r, l.Proved, true)
@@ -29,6 +30,26 @@ func (c *checker) lifts() {
 				c.sides(r, l.Secured, false)
 			}
 		}
+	}
+}
+
+// hooks checks that what holds each of two hooks is taken (R24).
+func (c *checker) hooks(r *row) {
+	l := r.s.Task.Lifting
+	if l == nil || l.Second == nil || l.Second.Kit == nil {
+		return
+	}
+	want, have := 1, 0
+	if r.s.Task.By == l.Second.Kit.Name {
+		want = 2
+	}
+	for _, u := range r.s.Kit {
+		if u.Kit == l.Second.Kit {
+			have += u.Count
+		}
+	}
+	if have < want {
+		c.add("R24", r, fmt.Sprint(want), fmt.Sprint(have), "hangs on two hooks and does not take %s for both", l.Second.Kit.Name)
 	}
 }
 

@@ -206,3 +206,20 @@ func TestWindForLifts(t *testing.T) {
 		}
 	}
 }
+
+// Both hooks take their gear: another lift with the second's gear at the same time is found, and so is an
+// estimate that forgot it.
+func TestTwoHooksTakeTheirGear(t *testing.T) {
+	w := liftJob(t, "{chain hoist: {rated: 1 t}, lever hoist: {rated: 1 t}}", `  up: {kind: lift, at: dock, lifts: gate/skin, by: chain hoist, hours: 1 h, second hook: {by: lever hoist, at: [0 mm, 2 m]}}
+  pull: {at: dock, hours: 1 h, kit: lever hoist, people: 0}`)
+	if got := broken(w, planOf(t, w, "up 1, pull 2")); got != "" {
+		t.Errorf("one after the other: %q", got)
+	}
+	if got := broken(w, planOf(t, w, "up 1, pull 1")); !strings.Contains(got, "R7 takes more than there is: lever hoist") {
+		t.Errorf("at once: %q", got)
+	}
+	w.Steps[0].Kit = w.Steps[0].Kit[:1]
+	if got := broken(w, planOf(t, w, "up 1, pull 2")); !strings.Contains(got, "R24 hangs on two hooks and does not take lever hoist for both") {
+		t.Errorf("forgotten: %q", got)
+	}
+}

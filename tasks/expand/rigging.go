@@ -51,13 +51,17 @@ type Judgement struct {
 // rigging collects what is known about a lift or move.
 func (x *expander) rigging(t *tasks.Task) *Rigging {
 	r := &Rigging{Task: t, Way: lift.ByChainHoist, s: x.stager, site: x.atSite(t), crew: max(2, t.People, x.crewSize(t))}
+	by := x.kitNamed(t.By)
+	if by != nil && !by.HasKind && by.Chart == nil {
+		by = nil
+	}
 	for _, u := range t.Kit {
-		if u.Kit.HasKind || u.Kit.Chart != nil {
+		if (u.Kit.HasKind || u.Kit.Chart != nil) && (by == nil || u.Kit == by) {
 			r.Kit, r.Count = u.Kit, u.Count
 		}
 	}
-	if k := x.kitNamed(t.By); r.Kit == nil && k != nil && (k.HasKind || k.Chart != nil) {
-		r.Kit, r.Count = k, 1
+	if r.Kit == nil && by != nil {
+		r.Kit, r.Count = by, 1
 	}
 	switch {
 	case t.By == "hands" || t.By == "by hand":

@@ -4,6 +4,7 @@ import (
 	"sailby/tasks"
 	"sailby/tasks/hours"
 	"sailby/tasks/origin"
+	"slices"
 )
 
 // kindRule is what a kind of task does at closing time (R6).
@@ -158,6 +159,7 @@ func (x *expander) kit(t *tasks.Task, s *Step, h hands) {
 	if k := x.kitNamed(t.By); k != nil && !uses(use, k) {
 		use = append(use, tasks.Use{Kit: k, Count: 1, Pos: t.Pos})
 	}
+	use = x.bothHooks(t, use)
 	drawn := false
 	for _, u := range use {
 		if u.Kit.At != nil && u.Kit.At != t.Place {
@@ -170,6 +172,29 @@ func (x *expander) kit(t *tasks.Task, s *Step, h hands) {
 	if !drawn {
 		s.Power = h.power
 	}
+}
+
+// bothHooks adds what holds the second hook of a lift (R24): one more where both hang on kit of one name, unless the
+// task takes as many anyway.
+func (x *expander) bothHooks(t *tasks.Task, use []tasks.Use) []tasks.Use {
+	if t.Lifting == nil || t.Lifting.Second == nil || t.Lifting.Second.Kit == nil {
+		return use
+	}
+	second := t.Lifting.Second
+	want := 1
+	if x.kitNamed(t.By) == second.Kit {
+		want = 2
+	}
+	out := append([]tasks.Use(nil), use...)
+	i := slices.IndexFunc(out, func(u tasks.Use) bool { return u.Kit == second.Kit })
+	if i < 0 {
+		out, i = append(out, tasks.Use{Kit: second.Kit, Pos: second.Pos}), len(out)
+	}
+	out[i].Count = max(out[i].Count, want)
+	if out[i].Count > second.Kit.Count {
+		x.fault(second.Pos, "name two things under `by`, or give its `count`", "task %q: its two hooks take %d of %q, and there is %d", t.Name, out[i].Count, second.Kit.Name, second.Kit.Count)
+	}
+	return out
 }
 
 func (x *expander) kitNamed(name string) *tasks.Kit {
