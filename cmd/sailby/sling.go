@@ -2,6 +2,7 @@ package main
 
 import (
 	"io"
+	"slices"
 	"strings"
 
 	"github.com/spf13/cobra"
@@ -18,32 +19,38 @@ type slingOptions struct {
 	legs      int
 	equalised bool
 	json      bool
+	way       wayFlags
 }
 
 func newSling(st streams) *cobra.Command {
 	o := &slingOptions{amounts: map[string]*string{}, words: map[string]*string{}}
 	c := &cobra.Command{
 		Use:   "sling --mass MASS",
-		Short: "One lift: load on the hook, pull in each leg, hoist, anchor, crane and wind, every step with its origin",
+		Short: "One lift: hands, trolley, slings, hoist and anchor, crane, two hooks, wind; every step with its origin",
 		Long: "Works out one lift from flags: the load with its allowances, the pull in each leg of the slings against their rating,\n" +
-			"and, where they are given, the hoist and what it hangs from, the crane by its chart, the gust and the landing place.\n" +
+			"and, where they are given, the hoist and what it hangs from, the crane by its chart, the gust and the landing place;\n" +
+			"or a lift by hands (HSE guideline figures, the NIOSH equation on request), on a trolley, on jacks, or on two hooks.\n" +
 			"An angle is given with its datum. What is refused names the number that fails and the nearest gear that would do; then\n" +
 			"the exit status is 3. It does not stand for the decision of a competent person. Slings are known by their tag, or by\n" +
 			strings.Join(lift.SlingTables(), ", ") + ".",
 		Example: "  sailby sling --mass 410kg --legs 2 --angle \"40 deg from horizontal\" --span 1.8m --rated 1t\n" +
-			"  sailby sling --mass 1.2t --known weighed --span 2m --cg 1.2m --hook-above 1.5m --table \"EN 818-4 grade 8\" --size 8mm --by crane --chart \"4m: 2.4t, 6m: 1.5t\" --radius 5m",
+			"  sailby sling --mass 1.2t --known weighed --span 2m --cg 1.2m --hook-above 1.5m --table \"EN 818-4 grade 8\" --size 8mm --by crane --chart \"4m: 2.4t, 6m: 1.5t\" --radius 5m\n" +
+			"  sailby sling --mass 30kg --known weighed --by hands --men 2 --through \"floor, knuckle to elbow\"\n" +
+			"  sailby sling --mass 400kg --by trolley --men 2 --ramp \"1 in 12\"\n" +
+			"  sailby sling --mass 1t --hoist 1t --second-hook 1t --span 3m --cg 1.2m --tilt 3deg --off 200mm",
 		Args: takes(false),
 		RunE: func(*cobra.Command, []string) error { return runSling(o, st) },
 	}
 	f := c.Flags()
-	for _, a := range slingAmounts {
+	for _, a := range append(slices.Clone(slingAmounts), wayAmounts...) {
 		o.amounts[a.name] = f.String(a.name, "", a.says)
 	}
-	for _, w := range slingWords {
+	for _, w := range append(slices.Clone(slingWords), wayWords...) {
 		o.words[w[0]] = f.String(w[0], "", w[1])
 	}
 	f.IntVar(&o.legs, "legs", 0, "how many legs, 1 to 4")
 	f.BoolVar(&o.equalised, "equalised", false, "four legs are made to share")
+	o.way.add(f)
 	f.BoolVar(&o.json, "json", false, "print for machines")
 	return c
 }
@@ -79,16 +86,20 @@ func runSling(o *slingOptions, st streams) error {
 // judge makes every check that the flags give the numbers for.
 func (i *slingInput) judge() (slingTold, error) {
 	hook := i.load.Hook()
-	t := slingTold{steps: append([]origin.Figure{hook}, i.shapes...)}
-	add := func(r lift.Result, err error) error {
+	first := hook
+	if (i.way.byHands || i.way.byTrolley) && !i.slung && !i.hung && !i.craned {
+		first = i.load.Heavy()
+	}
+	t := slingTold{steps: append([]origin.Figure{first}, i.shapes...)}
+	tell := func(r lift.Result, err error, within, over string) error {
 		if err != nil {
 			return err
 		}
 		line := r.Reason
 		if r.OK {
-			line = "within: " + line
+			line = within + line
 		} else {
-			line, t.refused = "REFUSED: "+line, true
+			line, t.refused = over+line, true
 		}
 		t.head = append(t.head, line)
 		if !r.OK && r.Nearest != "" {
@@ -97,6 +108,13 @@ func (i *slingInput) judge() (slingTold, error) {
 		t.steps = append(t.steps, r.Figure, r.Limit)
 		t.notes = append(t.notes, r.Warnings...)
 		return nil
+	}
+	add := func(r lift.Result, err error) error { return tell(r, err, "within: ", "REFUSED: ") }
+	guide := func(r lift.Result, err error) error {
+		return tell(r, err, "within the guideline: ", "OVER THE GUIDELINE: ")
+	}
+	if err := i.byPeopleAndPairs(&t, add, guide); err != nil {
+		return t, err
 	}
 	if i.slung {
 		r, err := lift.Slings(i.load, i.rig)
@@ -142,11 +160,12 @@ func (i *slingInput) judge() (slingTold, error) {
 		t.head = []string{"load on the hook: " + hook.Amount()}
 		t.notes = append(t.notes, "nothing says what carries it: give the slings (--legs, --angle, --rated), the hoist (--hoist) or the crane (--chart, --radius)")
 	}
-	if i.given["span"] && !i.given["lugs-above"] {
+	if i.given["span"] && !i.given["lugs-above"] && !i.way.two {
 		t.notes = append(t.notes, "the lugs are taken to be above the centre of gravity: a load hung below it rolls over (--lugs-above)")
 	}
-	clear, err := lift.Exclusion(i.crane.Raise, max(i.load.Length, i.load.Width, i.span))
-	if err == nil {
+	if i.way.byHands || i.way.byTrolley {
+		t.notes = append(t.notes, "the figures are filters, no limits: over them look closer, or use gear")
+	} else if clear, err := lift.Exclusion(i.crane.Raise, max(i.load.Length, i.load.Width, i.span)); err == nil {
 		t.steps = append(t.steps, clear)
 	}
 	t.notes = append(t.notes, "planned, supervised and carried out as a competent person decides; nobody below the load")

@@ -24,6 +24,7 @@ type slingInput struct {
 	given                    map[string]bool
 	shapes                   []origin.Figure // how the shape of the slings came about
 	slung, hung, craned, air bool
+	way                      slingWay
 }
 
 // slingAmount is one flag that takes an amount.
@@ -77,13 +78,13 @@ var slingAmounts = []slingAmount{
 // slingWords are the flags that take a word.
 var slingWords = [][2]string{{"angle", "of a leg, with its datum: \"40 deg from horizontal\""}, {"known", "how the mass is known: weighed, drawn or guessed (default: guessed)"},
 	{"hitch", "straight, choked, basket or endless (default: straight)"}, {"table", "table of the slings, as \"EN 818-4 grade 8\""},
-	{"size", "of chain or rope, or t of webbing"}, {"by", "chain hoist, lever hoist, gantry or crane (default: by the other flags)"},
+	{"size", "of chain or rope, or t of webbing"}, {"by", "hands, trolley, jack, chain hoist, lever hoist, gantry or crane (default: by the other flags)"},
 	{"chart", "of the crane: \"4m: 2.4t, 6m: 1.5t\""}, {"water", "inshore or offshore: lifted from or onto a boat"}, {"body", "box or round, to the wind"}}
 
 // read puts the flags into the input.
 func (i *slingInput) read(o *slingOptions) error {
 	i.given = map[string]bool{}
-	for _, a := range slingAmounts {
+	for _, a := range append(slices.Clone(slingAmounts), wayAmounts...) {
 		text := *o.amounts[a.name]
 		if text == "" {
 			continue
@@ -105,16 +106,34 @@ func (i *slingInput) read(o *slingOptions) error {
 	if err := i.words(o); err != nil {
 		return err
 	}
-	any := func(names ...string) bool {
-		return slices.ContainsFunc(names, func(n string) bool { return i.given[n] })
-	}
-	i.slung = any("rated", "table", "angle", "leg-length", "hook-above", "span", "lug-rated", "coupling-rated") || o.legs > 0
-	i.hung = any("hoist", "anchor") && !i.craned
-	i.air = any("gust", "gust-limit", "sail-area") || i.craned && i.load.Length > 0
+	i.slung = i.any("rated", "table", "angle", "leg-length", "hook-above", "span", "lug-rated", "coupling-rated") || o.legs > 0
+	i.hung = i.any("hoist", "anchor") && !i.craned
+	i.air = i.any("gust", "gust-limit", "sail-area") || i.craned && i.load.Length > 0
 	if !i.given["mass"] {
 		return misuse("--mass 410kg", "nothing says what is lifted")
 	}
+	if err := i.ways(o, *o.words["by"]); err != nil {
+		return err
+	}
+	if i.way.two {
+		i.slung, i.hung = false, false
+		return i.between()
+	}
 	return i.spread()
+}
+
+// any says whether one of these flags is given.
+func (i *slingInput) any(names ...string) bool {
+	return slices.ContainsFunc(names, func(n string) bool { return i.given[n] })
+}
+
+// between puts the centre of gravity between two hooks.
+func (i *slingInput) between() error {
+	if !i.given["cg"] {
+		i.cg = i.span / 2
+	}
+	i.load.CG = [3]float64{i.cg, 0, 0}
+	return nil
 }
 
 func (i *slingInput) words(o *slingOptions) error {
@@ -161,7 +180,8 @@ func (i *slingInput) words(o *slingOptions) error {
 		i.load.Dynamic = f.Value
 		i.shapes = append(i.shapes, f)
 	}
-	by, err := one("by", map[string]int{"": int(lift.ByChainHoist), "chain hoist": int(lift.ByChainHoist), "lever hoist": int(lift.ByLeverHoist), "gantry": int(lift.ByGantry), "crane": int(lift.ByLoaderCrane)})
+	by, err := one("by", map[string]int{"": int(lift.ByChainHoist), "chain hoist": int(lift.ByChainHoist), "lever hoist": int(lift.ByLeverHoist), "gantry": int(lift.ByGantry), "crane": int(lift.ByLoaderCrane), "loader crane": int(lift.ByLoaderCrane),
+		"hands": int(lift.ByHands), "trolley": int(lift.ByTrolley), "jack": int(lift.ByJack)})
 	if err != nil {
 		return err
 	}

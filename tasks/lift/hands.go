@@ -30,6 +30,19 @@ var hseBoxes = [5][4]float64{{10, 5, 7, 3}, {20, 10, 13, 7}, {25, 15, 16, 10}, {
 
 var zoneNames = [...]string{"shoulder", "elbow to shoulder", "knuckle to elbow", "lower leg to knuckle", "floor"}
 
+// ZoneNames lists the zones from the top, in the words that ParseZone takes.
+func ZoneNames() []string { return zoneNames[:] }
+
+// ParseZone reads the name of a zone.
+func ParseZone(name string) (Zone, bool) {
+	for i, n := range zoneNames {
+		if n == name {
+			return Zone(i), true
+		}
+	}
+	return 0, false
+}
+
 // Handling is people lifting by hand.
 type Handling struct {
 	Men, Women int     // who lifts; both 0 is one man
