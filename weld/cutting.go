@@ -16,17 +16,20 @@ type Labour struct {
 	Warnings []string
 	Hours    origin.Figure // the tree of HandsOn
 	Wait     origin.Figure // the tree of Standing; no name where nothing is waited for
+
+	Consumables []Consumable // what it uses up, spares included
 }
 
 // Cut is a cut through plate or section.
 type Cut struct {
-	Method    string  // "plasma", "oxy-fuel" or "disc"
-	Thickness float64 // mm
-	Length    float64 // mm in all
-	Bevel     float64 // deg off square; the torch goes through the longer way
-	Pierces   int     // starts inside the plate
-	Current   float64 // A of a plasma set; default 40
-	Speed     float64 // mm/min, given
+	Method    string    // "plasma", "oxy-fuel" or "disc"
+	Thickness float64   // mm
+	Length    float64   // mm in all
+	Bevel     float64   // deg off square; the torch goes through the longer way
+	Pierces   int       // starts inside the plate
+	Current   float64   // A of a plasma set; default 40
+	Speed     float64   // mm/min, given
+	Table     *CutTable // the house's own speeds, in place of those here
 	Site      bool
 	Origin    origin.Origin
 }
@@ -63,6 +66,10 @@ func (c Cut) speed() (origin.Figure, []string, error) {
 	}
 	way := c.Thickness / math.Cos(c.Bevel*math.Pi/180)
 	through := origin.Worked("way through", way, "mm", "thickness / cos(bevel)", origin.Written("thickness", c.Thickness, "mm", c.Origin), origin.Written("bevel", c.Bevel, "deg", c.Origin))
+	if c.Table != nil {
+		f, err := c.Table.speed(through)
+		return c.given(f), nil, err
+	}
 	switch c.Method {
 	case "plasma":
 		return c.plasma(through)
@@ -144,10 +151,14 @@ func (c Cut) Work() (Labour, error) {
 		return Labour{}, err
 	}
 	share := origin.House("cutting share", bySite(c.Site, 0.3, 0.4), "", "cutting over hands-on time; marking, guides, dross and moving are the rest")
+	each := origin.Recalled("piercing", pierceMin, "min", "5 to 30 s each")
+	if t := c.Table; t != nil {
+		share, each = t.or("cutting share", t.Share, share), t.or("piercing", t.Pierce, each)
+	}
 	length := origin.Written("length", c.Length, "mm", c.Origin)
 	pierces := origin.Written("pierces", float64(c.Pierces), "", c.Origin)
-	each := origin.Recalled("piercing", pierceMin, "min", "5 to 30 s each")
-	m := (c.Length/v.Value + float64(c.Pierces)*pierceMin) / share.Value
-	f := origin.Worked("hands-on time", m, "min", "(length / cutting speed + pierces x piercing) / cutting share", length, v, pierces, each, share)
-	return Labour{HandsOn: quantity.HandsOn(m), Warnings: warn, Hours: f}, nil
+	burning := origin.Worked("cutting time", c.Length/v.Value+float64(c.Pierces)*each.Value, "min", "length / cutting speed + pierces x piercing", length, v, pierces, each)
+	m := burning.Value / share.Value
+	f := origin.Worked("hands-on time", m, "min", "cutting time / cutting share", burning, share)
+	return Labour{HandsOn: quantity.HandsOn(m), Warnings: warn, Hours: f, Consumables: c.uses(burning)}, nil
 }

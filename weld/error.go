@@ -22,9 +22,9 @@ func within(name string, v, lo, hi float64, unit string) error {
 	}
 	switch {
 	case math.IsNaN(v) || math.IsInf(v, 0):
-		return fault(name, fmt.Sprintf("give a %s from %g to %g%s", name, lo, hi, unit), "%s is not a number", name)
+		return fault(name, fmt.Sprintf("give %s from %g to %g%s", name, lo, hi, unit), "%s is not a number", name)
 	case v < lo || v > hi:
-		return fault(name, fmt.Sprintf("give a %s from %g to %g%s", name, lo, hi, unit),
+		return fault(name, fmt.Sprintf("give %s from %g to %g%s", name, lo, hi, unit),
 			"%s %.6g%s is outside %g to %g%s", name, v, unit, lo, hi, unit)
 	}
 	return nil

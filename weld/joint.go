@@ -27,7 +27,8 @@ type Joint struct {
 	Angle        float64 // included angle: single and double V by position 60, 60, 70, 80 (PA, PC, PF, PE); bevel 50; U 16; J 15
 	Angle2       float64 // of the second side of a double joint; default Angle
 	Radius       float64 // of a U or J; default 6 and 8
-	PartialDepth float64 // depth of a weld of partial penetration; default all through
+	FirstDepth   float64 // height of the preparation on the first side of a double joint; default half of it
+	PartialDepth float64 // depth of a weld of partial penetration, of a double joint both sides together; default all through
 	Cap          float64 // height above flush; default 1.5 where overweld is on, else none
 	Backing      bool    // welded on a backing strip that stays
 	BackGouge    bool    // root gouged from behind and welded again
@@ -81,6 +82,7 @@ func (j Joint) check() error {
 		optional("angle", j.Angle, 1, 120, "deg"),
 		optional("second angle", j.Angle2, 1, 120, "deg"),
 		optional("radius", j.Radius, 1, 40, "mm"),
+		optional("first depth", j.FirstDepth, 0.5, maxThick, "mm"),
 		optional("depth", j.PartialDepth, 0.5, maxThick, "mm"),
 		optional("cap", bare(j.Cap), 0, 10, "mm"),
 		optional("gap", bare(j.Gap), 0, 40, "mm"),
@@ -92,7 +94,7 @@ func (j Joint) check() error {
 	if err != nil {
 		return err
 	}
-	return j.checkNeeds()
+	return first(j.checkBelongs(), j.checkNeeds())
 }
 
 // checkNeeds asks for the figures that no default can stand for.

@@ -78,7 +78,34 @@ func Prepare(activity string, amount, thickness, rate float64) (Labour, error) {
 	if a.Unit == "min each" {
 		m, how = amount*r.Value*slow, "amount x rate x thicker"
 	}
-	return Labour{HandsOn: quantity.HandsOn(m), Hours: origin.Worked("hands-on time", m, "min", how, n, r, s)}, nil
+	f := origin.Worked("hands-on time", m, "min", how, n, r, s)
+	return Labour{HandsOn: quantity.HandsOn(m), Hours: f, Consumables: a.uses(amount, f)}, nil
+}
+
+// What preparing uses up (house judgement).
+const (
+	discHour  = 60.0 // min of grinding that a 125 mm disc lasts
+	holesEach = 50.0 // holes that a cutter lasts
+	gougeDisc = 4.0  // m of gouge that a disc grinds clean
+)
+
+// uses lists what an amount of the activity uses up.
+func (a Activity) uses(amount float64, time origin.Figure) []Consumable {
+	const discs = "grinding discs 125 mm"
+	piece := func(name string, n float64, note string, from ...origin.Figure) []Consumable {
+		f := origin.House(name, n, "", note)
+		f.From = from
+		return []Consumable{{Name: name, Amount: n, Unit: "pieces", Spare: n * spareShare, Why: f}}
+	}
+	switch a.Name {
+	case "bevel by disc", "dress flush", "remove mill scale", "grind away":
+		return piece(discs, time.Value/discHour, "one for an hour of grinding", time)
+	case "back-gouge", "gouge out":
+		return piece(discs, amount/gougeDisc, "one for 4 m of gouge ground clean")
+	case "drill":
+		return piece("cutters for the magnetic drill", amount/holesEach, "one for 50 holes")
+	}
+	return nil
 }
 
 func plainName(s string) string { return strings.ToLower(strings.Join(strings.Fields(s), " ")) }
@@ -97,6 +124,15 @@ var carbons = []Carbon{
 	{8.0, 250, 350, 11, 13, 6, 9},
 	{9.5, 350, 450, 13, 15, 8, 12},
 	{12.7, 800, 900, 15, 19, 10, 16},
+}
+
+const carbonMetres = 1.0 // m of groove that a carbon of 305 mm lasts (house judgement)
+
+// Carbons gives the carbons for a groove of a length in mm, with spares.
+func (c Carbon) Carbons(length float64) Consumable {
+	name := "gouging carbons " + origin.Trim(c.Diameter) + " mm"
+	n := length / 1000 / carbonMetres
+	return Consumable{Name: name, Amount: n, Unit: "pieces", Spare: n * spareShare, Why: origin.House(name, n, "", "one for a metre of groove")}
 }
 
 // GougeWith gives the smallest carbon that cuts a groove of a depth in mm in one pass; ok is

@@ -98,10 +98,23 @@ func (p Procedure) check() error {
 	return p.Set.check()
 }
 
+// fits refuses a wire for stick welding, and a stick electrode for the rest.
+func (p Procedure) fits(d process) error {
+	switch {
+	case d.stick && p.WireDiameter > 0:
+		return fault("wire", "give electrode, or the process of the wire", "%s has electrodes, no wire of %.3g mm", p.Process, p.WireDiameter)
+	case d.stick && p.WireFeed > 0:
+		return fault("wire feed", "give current or deposition, or the process of the wire", "%s has no wire feed", p.Process)
+	case !d.stick && p.ElectrodeDiameter > 0:
+		return fault("electrode", "give wire, or process 111", "%s has wire, no stick electrode of %.3g mm", p.Process, p.ElectrodeDiameter)
+	}
+	return nil
+}
+
 // size gives the wire or electrode in use.
 func (p Procedure) size(d process) origin.Figure {
 	switch {
-	case d.stick && p.ElectrodeDiameter > 0:
+	case p.ElectrodeDiameter > 0:
 		return p.given("electrode", p.ElectrodeDiameter, "mm")
 	case p.WireDiameter > 0:
 		return p.given("wire", p.WireDiameter, "mm")

@@ -29,17 +29,27 @@ func drawJoint(t *rapid.T) Joint {
 		}
 	case Plug, Slot:
 		j.Diameter = drawNumber(t, "diameter", 10, 40)
-		j.Bead = j.Diameter + drawNumber(t, "slot", 0, 100)
+		if j.Type == Slot {
+			j.Bead = j.Diameter + drawNumber(t, "slot", 0, 100)
+		}
 		j.Count = rapid.IntRange(1, 20).Draw(t, "count")
 	case DoubleU, DoubleJ:
 		j.Thickness += 20
 	}
-	if rapid.Bool().Draw(t, "gap") {
+	if j.Type.twoSided() {
+		if rapid.Bool().Draw(t, "unlike") {
+			j.FirstDepth = j.Thickness * 0.6
+		}
+		if j.Type < SingleU && rapid.Bool().Draw(t, "two angles") {
+			j.Angle, j.Angle2 = 60, drawNumber(t, "second angle", 40, 70)
+		}
+	}
+	if j.Type != Plug && j.Type != Slot && rapid.Bool().Draw(t, "gap") {
 		j.Gap = drawNumber(t, "fit-up gap", 0.5, 3)
 	}
 	if j.Type.groove() {
 		j.BackGouge = rapid.Bool().Draw(t, "back-gouge")
-		if j.Type != Square && j.Type < SingleU && rapid.Bool().Draw(t, "partial") {
+		if j.Type != Square && j.Type < SingleU && j.FirstDepth == 0 && rapid.Bool().Draw(t, "partial") {
 			j.PartialDepth = j.Thickness / 2
 		}
 		if rapid.Bool().Draw(t, "flush") {
@@ -59,7 +69,9 @@ func drawSeam(t *rapid.T) Seam {
 		p.Deposition = drawNumber(t, "deposition", 0.5, 6)
 		p.Position = s.Position
 	case 2:
-		p.WireFeed, p.Travel = drawNumber(t, "wire feed", 3, 12), drawNumber(t, "travel", 100, 600)
+		if p.Travel = drawNumber(t, "travel", 100, 600); p.Process != 111 {
+			p.WireFeed = drawNumber(t, "wire feed", 3, 12)
+		}
 	case 3:
 		p.Set, p.Current = Set{RatedCurrent: 200, DutyCycle: 0.25}, 200
 		p.MaxHeatInput = 1.5
@@ -175,12 +187,14 @@ func TestTwoSidesAreTwice(t *testing.T) {
 func TestUpwardsIsNeverLess(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		s := drawSeam(t)
-		s.Joint.Angle = drawNumber(t, "angle", 16, 70)
+		switch {
+		case s.Joint.Type == SingleJ || s.Joint.Type == DoubleJ:
+			s.Joint.Angle = 15
+		case s.Joint.Type.groove() && s.Joint.Type != Square:
+			s.Joint.Angle = drawNumber(t, "angle", 16, 70)
+		}
 		at := func(pos Position) Estimate {
 			s.Position, s.Procedure = pos, fixed(pos)
-			if s.Joint.Type == SingleJ || s.Joint.Type == DoubleJ {
-				s.Joint.Angle = 15
-			}
 			return mustWork(t, Circumstances{}, s)
 		}
 		a, f := at(PA), at(PF)

@@ -166,14 +166,39 @@ func (p Procedure) runsFor(j Joint, s Section, d process, pos Position, bead, ho
 		r.why = origin.Worked("runs", c*n, "", "ceil(area laid / sides / area of a run) x sides", s.Why, sides, bead)
 		r.large = origin.Worked(largestRun, r.area, "mm2", "area laid / runs", s.Why, r.why)
 	default:
-		root := math.Min(each, rootShare*bead.Value)
-		c := 1 + math.Ceil((each-root)/bead.Value-1e-9)
-		r.count, r.area = int(c*n), math.Min(bead.Value, math.Max(root, each-root))
-		first := origin.Worked("root run", rootShare*bead.Value, "mm2", "area of a run x root share", bead, origin.House("root share", rootShare, "", "the root lays less than a fill run"))
-		r.why = origin.Worked("runs", c*n, "", "(1 + ceil(max(0, area laid / sides - root run) / area of a run)) x sides", s.Why, sides, first, bead)
-		r.large = origin.Worked(largestRun, r.area, "mm2", "min(area of a run, max(min(area laid / sides, root run), area laid / sides - root run))", s.Why, sides, first, bead)
+		r = buttRuns(j, s, bead)
 	}
 	r.warn = ceilings(p, j, s, d, pos, bead, r)
+	return r
+}
+
+// buttRuns fills each side of a butt: a root run, then runs of the bead. Sides that are not alike
+// are counted one by one.
+func buttRuns(j Joint, s Section, bead origin.Figure) runs {
+	n := float64(s.Sides)
+	each := s.Area / n
+	first := origin.Worked("root run", rootShare*bead.Value, "mm2", "area of a run x root share", bead, origin.House("root share", rootShare, "", "the root lays less than a fill run"))
+	count := func(area float64) float64 {
+		return 1 + math.Ceil((area-math.Min(area, first.Value))/bead.Value-1e-9)
+	}
+	sides := origin.Written("sides", n, "", j.Origin)
+	var r runs
+	c := count(each) * n
+	r.why = origin.Worked("runs", c, "", "(1 + ceil(max(0, area laid / sides - root run) / area of a run)) x sides", s.Why, sides, first, bead)
+	large, how := each, "area laid / sides"
+	from := []origin.Figure{s.Why, sides, first, bead}
+	if s.first.Name != "" {
+		a := origin.Worked("area of the first side", s.Area*s.first.Value, "mm2", "area laid x share of the first side", s.Why, s.first)
+		b := origin.Worked("area of the second side", s.Area-a.Value, "mm2", "area laid - area of the first side", s.Why, a)
+		c = count(a.Value) + count(b.Value)
+		r.why = origin.Worked("runs", c, "", "2 + ceil(max(0, area of the first side - root run) / area of a run) + ceil(max(0, area of the second side - root run) / area of a run)", a, b, first, bead)
+		large, how = math.Max(a.Value, b.Value), "max(area of the first side, area of the second side)"
+		from = []origin.Figure{a, b, first, bead}
+	}
+	r.count = int(c)
+	root := math.Min(large, first.Value)
+	r.area = math.Min(bead.Value, math.Max(root, large-root))
+	r.large = origin.Worked(largestRun, r.area, "mm2", "min(area of a run, max(min("+how+", root run), "+how+" - root run))", from...)
 	return r
 }
 

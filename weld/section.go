@@ -21,6 +21,8 @@ type Section struct {
 	Size        float64 // the a or s that waiting times go by: throat, depth or thickness, mm
 	Sides       int     // how many sides are welded: runs are counted for each
 	Why         origin.Figure
+
+	first origin.Figure // share of Area on the first of two sides that are not alike; no name: alike
 }
 
 // Section gives the cross-section of j in a position. With overweld, fillets are laid 1 mm over
@@ -134,14 +136,14 @@ func (j shape) butt(pos Position) (Section, error) {
 	if j.Type.twoSided() || j.faces() == 2 {
 		sides = 2
 	}
-	prep, open, err := j.prepared(j.height(d))
+	prep, open, err := j.bothFaces(d)
 	if err != nil {
 		return Section{}, err
 	}
 	width := gap.Value + open + capWiden
 	body := gap.Value*deep + prep.Value
 	fac := j.depositFactor(pos)
-	s := Section{Drawn: body, Width: width, Height: deep + sides*j.Cap, Size: deep, Sides: int(sides)}
+	s := Section{Drawn: body, Width: width, Height: deep + sides*j.Cap, Size: deep, Sides: int(sides), first: j.firstShare(gap, d, prep)}
 	s.Area = body*fac.Value + sides*2/3*width*j.Cap
 	s.Why = origin.Worked("area laid", s.Area, "mm2", "("+gap.Name+" x depth + faces) x position factor on metal + cap area x sides",
 		gap, d, prep, fac, j.capFigure(width), j.drawn("sides", sides, ""))
@@ -151,15 +153,70 @@ func (j shape) butt(pos Position) (Section, error) {
 // height is that of the preparation on one side: depth less root face, halved where both faces
 // are prepared. A given depth is the preparation's own.
 func (j shape) height(d origin.Figure) origin.Figure {
-	const name = "height of the preparation"
-	how, h := "depth - root face", d.Value-j.RootFace
+	how, h := "depth - root face", j.prepHeight()
 	if d.Value < j.Thickness {
-		how, h = "depth", d.Value
+		how = "depth"
 	}
 	if j.Type.twoSided() {
 		how, h = "("+how+") / 2", h/2
 	}
-	return origin.Worked(name, h, "mm", how, d, j.drawn("root face", j.RootFace, "mm"))
+	return origin.Worked(prepName, h, "mm", how, d, j.drawn("root face", j.RootFace, "mm"))
+}
+
+const prepName = "height of the preparation"
+
+// single is the joint that one side of a double one is.
+var single = map[JointType]JointType{DoubleV: SingleV, DoubleBevel: SingleBevel, DoubleU: SingleU, DoubleJ: SingleJ}
+
+// bothFaces is prepared for all faces; those of a double joint with a depth of its own on the
+// first side are worked out one by one.
+func (j shape) bothFaces(d origin.Figure) (area origin.Figure, open float64, err error) {
+	if j.FirstDepth == 0 {
+		return j.prepared(j.height(d))
+	}
+	one, two := j, j
+	one.Type, two.Type, two.Angle = single[j.Type], single[j.Type], j.Angle2
+	h := origin.Written("first depth", j.FirstDepth, "mm", j.Origin)
+	rest := origin.Worked("rest of the preparation", j.prepHeight()-j.FirstDepth, "mm", "depth - root face - first depth", d, j.drawn("root face", j.RootFace, "mm"), h)
+	if d.Value < j.Thickness {
+		rest.Origin.Source = "depth - first depth"
+	}
+	a, wide, err := one.prepared(origin.Worked(prepName, j.FirstDepth, "mm", "first depth", h))
+	if err != nil {
+		return a, 0, err
+	}
+	b, _, err := two.prepared(origin.Worked(prepName, rest.Value, "mm", "rest of the preparation", rest))
+	return origin.Worked("faces", a.Value+b.Value, "mm2", "first side + second side", renamed(a, "first side"), renamed(b, "second side")), wide, err
+}
+
+// firstShare is the first side's part of the metal of a double joint: of its faces, and of the
+// gap by the height of its preparation.
+func (j shape) firstShare(gap, d, prep origin.Figure) origin.Figure {
+	const name = "share of the first side"
+	body := gap.Value*d.Value + prep.Value
+	switch {
+	case !j.Type.twoSided() || body <= 0:
+		return origin.Figure{}
+	case j.FirstDepth > 0:
+		a := prep.From[0]
+		whole := origin.Worked("height of both", j.prepHeight(), "mm", "depth - root face", d, j.drawn("root face", j.RootFace, "mm"))
+		if d.Value < j.Thickness {
+			whole.Origin.Source = "depth"
+		}
+		return origin.Worked(name, (gap.Value*d.Value*j.FirstDepth/whole.Value+a.Value)/body, "",
+			"("+gap.Name+" x depth x first depth / height of both + first side) / ("+gap.Name+" x depth + faces)",
+			gap, d, origin.Written("first depth", j.FirstDepth, "mm", j.Origin), whole, a, prep)
+	case j.Angle2 == j.Angle || j.Type == DoubleU || j.Type == DoubleJ:
+		return origin.Figure{}
+	}
+	lean, how := func(a float64) float64 { return tanDeg(a / 2) }, "tan(included angle / 2) / (tan(included angle / 2) + tan(second angle / 2))"
+	if j.Type == DoubleBevel {
+		lean, how = tanDeg, "tan(included angle) / (tan(included angle) + tan(second angle))"
+	}
+	part := origin.Worked("part of the faces", lean(j.Angle)/(lean(j.Angle)+lean(j.Angle2)), "", how,
+		j.drawn("included angle", j.Angle, "deg"), j.drawn("second angle", j.Angle2, "deg"))
+	return origin.Worked(name, (gap.Value*d.Value/2+prep.Value*part.Value)/body, "",
+		"("+gap.Name+" x depth / 2 + faces x part of the faces) / ("+gap.Name+" x depth + faces)", gap, d, prep, part)
 }
 
 // prepared gives the area of the bevelled or gouged faces of height H (each side of a double

@@ -113,10 +113,25 @@ func (j *shape) measured() error {
 	if j.PartialDepth > j.Thickness {
 		return fault("depth", "give a depth up to the thickness", "partial penetration of %.4g mm is more than the thickness %.4g mm", j.PartialDepth, j.Thickness)
 	}
+	if j.Type == Square && j.PartialDepth < j.Thickness && j.RootGap+j.Gap == 0 && j.Cap == 0 {
+		return fault("root gap", "give the root gap, or a cap", "a square butt %.4g mm deep without a gap has no room for metal", j.PartialDepth)
+	}
 	if j.Type.groove() && j.PartialDepth == j.Thickness && j.RootFace >= j.Thickness && j.Type != Square {
 		return fault("root face", "give a root face below the thickness", "root face %.4g mm leaves nothing of %.4g mm to weld", j.RootFace, j.Thickness)
 	}
+	if whole := j.prepHeight(); j.FirstDepth > 0 && j.FirstDepth >= whole {
+		return fault("first depth", "leave something for the second side", "a first side %.4g mm deep leaves nothing of the %.4g mm that are prepared", j.FirstDepth, whole)
+	}
 	return nil
+}
+
+// prepHeight is the height of the preparation of both sides together: the thickness less the
+// root face; a given depth is the preparation's own.
+func (j shape) prepHeight() float64 {
+	if j.PartialDepth < j.Thickness {
+		return j.PartialDepth
+	}
+	return j.Thickness - j.RootFace
 }
 
 // usualGap is the root gap where none is given, with its origin.

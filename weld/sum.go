@@ -40,6 +40,8 @@ func sum(parts []*seamWork, c Circumstances) Estimate {
 	w.Drop = largest(pick(func(e *seamWork) origin.Figure { return e.drop }))
 	w.SupplyDrop = largest(pick(func(e *seamWork) origin.Figure { return e.supplyDrop }))
 	w.T85 = smallest(pick(func(e *seamWork) origin.Figure { return e.cooling.Why }))
+	w.Combined = largest(pick(func(e *seamWork) origin.Figure { return e.combined }))
+	w.Scale = largest(pick(func(e *seamWork) origin.Figure { return e.scale }))
 	if f := c.Steel.CE(); f.Value > 0 {
 		w.CE = f
 	}
@@ -133,7 +135,7 @@ func warnings(parts []*seamWork) []string {
 // cables, consumables.
 func (e Estimate) Steps() []origin.Figure {
 	w := e.Why
-	all := []origin.Figure{w.Metal, w.Passes, w.Arc, e.Hours, w.SetUp, w.SafeStop, w.HeatInput, w.CE, w.CET, w.Preheat, w.Soak, w.T85, w.Cooling, w.BeforeNDT, w.Power, w.Generator, w.Drop, w.SupplyDrop}
+	all := []origin.Figure{w.Metal, w.Passes, w.Arc, e.Hours, w.SetUp, w.SafeStop, w.HeatInput, w.CE, w.CET, w.Combined, w.Scale, w.Preheat, w.Soak, w.T85, w.Cooling, w.BeforeNDT, w.Power, w.Generator, w.Drop, w.SupplyDrop}
 	for _, c := range e.Consumables {
 		all = append(all, renamed(c.Why, c.Name))
 	}

@@ -21,9 +21,10 @@ type Seam struct {
 // on and no contract standard.
 type Circumstances struct {
 	Site            bool
-	Ambient         float64 // C, of air and steel; zero is 20: give 0.01 for freezing point
-	Execution       string  // "EN 1090-2", "AWS D1.1" or nothing
-	PreheatStandard string  // "EN 1011-2 A", "EN 1011-2 B", "AWS D1.1" or nothing; AWS work defaults to its own
+	Ambient         float64        // C, of air and steel; zero is 20: give 0.01 for freezing point
+	Execution       string         // "EN 1090-2", "AWS D1.1" or nothing
+	PreheatStandard string         // "EN 1011-2 A", "EN 1011-2 B", "AWS D1.1" or nothing; AWS work defaults to its own
+	Chart           []ChartReading // what the user read from method A's charts
 	Steel           Steel
 	NoOverweld      bool    // lay exactly what is drawn; default: legs 1 mm over, caps 1.5 mm
 	FittedUp        bool    // fit-up and tacks are a task of their own
@@ -59,6 +60,7 @@ type Estimate struct {
 // apply has no name.
 type Figures struct {
 	Metal, Arc, Passes, HeatInput, Preheat, CE, CET, T85 origin.Figure
+	Combined, Scale                                      origin.Figure // EN 1011-2 method A: combined thickness, and the hydrogen scale as a word
 	SetUp, SafeStop, Soak, Cooling, BeforeNDT            origin.Figure
 	Power, Generator, Drop, SupplyDrop                   origin.Figure // Generator: kVA that a generator for the set gives; drops in V
 }
@@ -85,7 +87,8 @@ type SeamEstimate struct {
 //
 // Special cases are:
 //   - no seam is an error, and so is a figure outside what is welded (see Error);
-//   - a seam without procedure is welded with 111 on site and 135 in the shop, usual settings;
+//   - a seam without procedure is welded with 111 on site and 135 in the shop, usual settings; where only
+//     an electrode is given, with 111;
 //   - what contradicts without stopping the work is in Warnings, each once, in order of seams.
 func Work(seams []Seam, c Circumstances) (Estimate, error) {
 	if len(seams) == 0 {
@@ -121,6 +124,11 @@ func (c Circumstances) check() error {
 	if hold == None {
 		hold = 0
 	}
+	for _, r := range c.Chart {
+		if err := r.check(); err != nil {
+			return err
+		}
+	}
 	return first(
 		optional("ambient", c.Ambient, -40, 60, "C"),
 		optional("hold", hold, 0, 1000, "h"),
@@ -150,6 +158,7 @@ type seamWork struct {
 	size, rate, bead, current, volts, travel, heat origin.Figure
 	metal, arc, welding, fitUp, hours              origin.Figure
 	heatTo, soak, setUp, safe, standBy, cool, hold origin.Figure
+	combined, scale                                origin.Figure
 	cooling                                        CoolingTime
 	power, generator, drop, supplyDrop             origin.Figure
 	warn                                           []string
@@ -173,11 +182,14 @@ func workSeam(s Seam, c Circumstances) (*seamWork, error) {
 	}
 	if e.proc.Process == 0 {
 		e.proc.Process = 135
-		if c.Site {
+		if c.Site || e.proc.ElectrodeDiameter > 0 {
 			e.proc.Process = 111
 		}
 	}
 	e.data, _ = processData(e.proc.Process)
+	if err := e.proc.fits(e.data); err != nil {
+		return nil, err
+	}
 	e.pos = s.Position
 	if e.pos == 0 {
 		e.pos = e.proc.Position

@@ -138,7 +138,7 @@ func jointTold(e weld.Estimate, in jointInput) (head []string, steps []origin.Fi
 		origin.Worked("width of the weld", s.Section.Width, "mm", "across the face"),
 		origin.Worked("height of the weld", s.Section.Height, "mm", "throat of a fillet, thickness with caps of a butt")}
 	for i, f := range e.Steps() {
-		if f.Value != 0 { // nothing to wait for: nothing said
+		if f.Value != 0 || f.Text != "" { // nothing to wait for: nothing said
 			steps = append(steps, f)
 		}
 		if i == 0 {

@@ -15,6 +15,8 @@ type jointInput struct {
 	seam weld.Seam
 	proc weld.Procedure
 	c    weld.Circumstances
+
+	chart float64 // C read from method A's chart; 0 is none read
 }
 
 // jointAmount is one flag that takes an amount.
@@ -40,6 +42,7 @@ var jointAmounts = []jointAmount{
 	{name: "angle", dim: quantity.Angle, to: func(i *jointInput) *float64 { return &i.seam.Joint.Angle }, says: "included angle of the preparation (default: by position)"},
 	{name: "second-angle", dim: quantity.Angle, to: func(i *jointInput) *float64 { return &i.seam.Joint.Angle2 }, says: "of the second side"},
 	{name: "radius", dim: quantity.Length, to: func(i *jointInput) *float64 { return &i.seam.Joint.Radius }, says: "of a U or J"},
+	{name: "first-depth", dim: quantity.Length, to: func(i *jointInput) *float64 { return &i.seam.Joint.FirstDepth }, says: "preparation of the first side of a double joint (default: half)"},
 	{name: "depth", dim: quantity.Length, to: func(i *jointInput) *float64 { return &i.seam.Joint.PartialDepth }, says: "of a weld of partial penetration"},
 	{name: "cap", dim: quantity.Length, none: true, to: func(i *jointInput) *float64 { return &i.seam.Joint.Cap }, says: "height above flush, or none"},
 	{name: "gap", dim: quantity.Length, none: true, to: func(i *jointInput) *float64 { return &i.seam.Joint.Gap }, says: "fit-up gap beyond the drawing"},
@@ -62,6 +65,7 @@ var jointAmounts = []jointAmount{
 	{name: "heat-efficiency", dim: quantity.Number, to: func(i *jointInput) *float64 { return &i.proc.HeatEfficiency }, says: "k of EN 1011-1"},
 	{name: "bead-area", dim: quantity.Area, scale: 1e6, to: func(i *jointInput) *float64 { return &i.proc.BeadArea }, says: "cross-section that one run lays"},
 	{name: "preheat", dim: quantity.Temperature, none: true, to: func(i *jointInput) *float64 { return &i.proc.Preheat }, says: "least temperature before welding, or none"},
+	{name: "chart-preheat", dim: quantity.Temperature, none: true, field: "chart preheat", to: func(i *jointInput) *float64 { return &i.chart }, says: "what you read for this joint from the chart of EN 1011-2 method A, or none"},
 	{name: "interpass", dim: quantity.Temperature, to: func(i *jointInput) *float64 { return &i.proc.Interpass }, says: "greatest temperature between runs"},
 	{name: "min-heat-input", dim: quantity.HeatInput, field: "least heat input", to: func(i *jointInput) *float64 { return &i.proc.MinHeatInput }, says: "least heat input of the procedure"},
 	{name: "max-heat-input", dim: quantity.HeatInput, field: "most heat input", to: func(i *jointInput) *float64 { return &i.proc.MaxHeatInput }, says: "most heat input of the procedure"},
@@ -110,6 +114,9 @@ func (in *jointInput) read(o *jointOptions) error {
 		if err := in.amount(a, *o.amounts[a.name]); err != nil {
 			return err
 		}
+	}
+	if in.chart != 0 {
+		in.c.Chart = []weld.ChartReading{{Preheat: in.chart, Origin: given("--chart-preheat, read from the chart for this joint")}}
 	}
 	j := &in.seam.Joint
 	j.BothSides, j.Backing, j.BackGouge = *o.yes["both-sides"], *o.yes["backing"], *o.yes["back-gouge"]

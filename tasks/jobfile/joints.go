@@ -31,8 +31,9 @@ var jointSection = section{name: "Joint", where: "tasks / NAME / joints / item /
 	mmOrNone("root face", "1 mm", "none; 3 mm for U and J", "blunt part of the edge"),
 	{name: "angle", takes: anAmount, dim: quantity.Angle, low: 1, high: 120, usual: "by type and position", example: "60 deg", says: "included angle of the preparation"},
 	{name: "second angle", takes: anAmount, dim: quantity.Angle, low: 1, high: 120, usual: "angle", example: "60 deg", says: "of the second side"},
+	mm("first depth", 0.5, 400, "10 mm", "half of it", "height of the preparation on the first side of a double joint"),
 	mm("radius", 1, 40, "6 mm", "6 mm for U, 8 mm for J", "of a U or J"),
-	mm("depth", 0.5, 400, "8 mm", "all through", "depth of a weld of partial penetration"),
+	mm("depth", 0.5, 400, "8 mm", "all through", "depth of a weld of partial penetration; of a double joint both sides together"),
 	mmOrNone("cap", "1.5 mm", "1.5 mm", "height above flush"),
 	{name: "backing", takes: yesNo, usual: "no", example: "yes", says: "welded on a strip that stays"},
 	{name: "back gouge", takes: yesNo, usual: "no", example: "yes", says: "root gouged from behind and welded again"},
@@ -53,6 +54,15 @@ var seamSection = section{name: "Seam", where: "tasks / NAME / joints / item", h
 	{name: "access", takes: aNumber, low: 1, high: 5, usual: "1", example: "1.3", says: "hands-on time times this where access is bad: ladder or rope 1.3 to 1.5, closed space 1.3 to 1.6"},
 	{name: "at", takes: itsOwn, form: "[x, y, z]", shape: anyList, example: "[600 mm, 0, 12 mm]", says: "its middle in the axes of the assembly, for `advise order`"},
 }}
+
+func init() { // the keys that a single V lacks stand in other joints of the example job
+	const fillet, lugs = "tasks/weld frame/joints/1/fillet", "tasks/weld lugs/joints/"
+	for name, host := range map[string]string{"leg": fillet, "second leg": fillet, "both sides": fillet, "bead": lugs + "4/slot", "pitch": fillet,
+		"throat": fillet, "second angle": lugs + "2/double V", "first depth": lugs + "2/double V", "radius": lugs + "3/single U"} {
+		jointSection.find(name).host = host
+	}
+	jointSection.find("throat").without = "leg"
+}
 
 func init() { // a key for each type of joint
 	for _, name := range weld.JointTypes() {
@@ -171,7 +181,7 @@ func (r *reader) joint(f *fields) weld.Joint {
 	return weld.Joint{
 		Leg: f.value("leg"), Leg2: f.value("second leg"), Throat: f.value("throat"), Thickness: f.value("thickness"), Thickness2: f.value("second thickness"),
 		RootGap: none("root gap", 40), RootFace: none("root face", 400), Angle: f.value("angle"), Angle2: f.value("second angle"),
-		Radius: f.value("radius"), PartialDepth: f.value("depth"), Cap: none("cap", 10), Backing: f.yes("backing"), BackGouge: f.yes("back gouge"),
+		Radius: f.value("radius"), PartialDepth: f.value("depth"), FirstDepth: f.value("first depth"), Cap: none("cap", 10), Backing: f.yes("backing"), BackGouge: f.yes("back gouge"),
 		Gap: none("gap", 40), BothSides: f.yes("both sides"), Bead: f.value("bead"), Pitch: f.value("pitch"), Diameter: f.value("diameter"),
 	}
 }

@@ -47,6 +47,7 @@ type key struct {
 	shape     string // for itsOwn: JSON schema of the value
 	beside    string // for the test of the example: "key: value" that must stand beside it
 	without   string // and the key that must not
+	host      string // where that example stands, if not with the section's
 }
 
 // section is a mapping of the job file with its keys.

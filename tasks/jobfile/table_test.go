@@ -73,9 +73,13 @@ func TestKeysAreDescribed(t *testing.T) {
 // exampleJob puts the example of a key into the example job of its section.
 func exampleJob(t *testing.T, s *section, k *key) []byte {
 	t.Helper()
-	file, path, ok := strings.Cut(s.host, ":")
+	host := s.host
+	if k.host != "" {
+		host = k.host
+	}
+	file, path, ok := strings.Cut(host, ":")
 	if !ok {
-		file, path = "host", s.host
+		file, path = "host", host
 	}
 	if s == &topSection {
 		file, path = "minimal", ""
