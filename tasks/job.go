@@ -281,6 +281,7 @@ type Procedure struct {
 	Pos Pos
 	Kit string        // the set it runs on, for kVA and count; ""
 	By  []PersonRates // people who weld it at rates of their own
+	For *HoldsFor     // joints that need not name it; nil: only those that do
 }
 
 // Paint is a paint of the job file.

@@ -72,41 +72,43 @@ type Task struct {
 	Light     bool
 
 	// By kind.
-	Seams     []Seam   // weld
-	Repairs   *Task    // weld: of this one, what testing may find
-	Steel     string   // weld: a grade, or a name under Welding.Steels; "" is that of its part, else of the job
-	Hold      Amount   // weld: hours before final NDT; Pos.Given overrules the job's, weld.None for none
-	Overweld  *bool    // weld: nil is as for the job
-	Advise    bool     // weld: an order of its seams that keeps shrinkage in balance is worked out
-	By        string   // cut: plasma, oxy-fuel, ...; lift: a kit or "hands"; test: method
-	Length    Amount   // mm: cut
-	Thickness Amount   // mm: cut
-	Bevel     Amount   // deg off square: cut
-	Pierces   int      // starts inside the plate: cut
-	Current   Amount   // A of a plasma set: cut
-	Speed     Amount   // mm/min of the torch or disc: cut
-	Count     int      // holes or tacks: cut
-	Dwell     Amount   // minutes, as the test's procedure says: test
-	Pressure  Amount   // bar: test
-	Warm      Amount   // °C of the steel: test; else that of the place
-	Surface   []string // surface prep, coat: assemblies or assembly/part
-	Area      Amount   // m2: overrules the surface
-	Grade     string   // surface prep, coat
-	Method    string   // surface prep, coat: how
-	Shape     string   // surface prep, coat: flat, sections or lattice; "" is sections
-	Condition string   // surface prep: new, light rust, heavy rust or painted; "" is new
-	Coats     []string // coat: paints in order
-	Lifts     string   // lift, move: assembly (or assembly/part)
-	Mass      Amount   // kg: stated
-	Height    Amount   // mm of hook travel
-	Travel    Amount   // mm on the level
-	Radius    Amount   // mm, crane
-	To        *Place   // move
-	Parts     []string // cut, fit-up, weld: assembly/part it works on
-	Joints    int      // fit-up: count of joints; 0 unknown
-	Lifting   *Lifting // lift, move
-	Joins     []Named  // fit-up, weld: assemblies or parts that hang together from its finish on
-	FitProved []string // fit-up: survey, template or trial fit that proves that it fits
+	Seams     []Seam    // weld
+	Repairs   *Task     // weld: of this one, what testing may find
+	Steel     string    // weld: a grade, or a name under Welding.Steels; "" is that of its part, else of the job
+	Hold      Amount    // weld: hours before final NDT; Pos.Given overrules the job's, weld.None for none
+	Overweld  *bool     // weld: nil is as for the job
+	Advise    bool      // weld: an order of its seams that keeps shrinkage in balance is worked out
+	By        string    // cut: plasma, oxy-fuel, ...; lift: a kit or "hands"; test: method
+	Length    Amount    // mm: cut
+	Thickness Amount    // mm: cut
+	Bevel     Amount    // deg off square: cut
+	Pierces   int       // starts inside the plate: cut
+	Current   Amount    // A of a plasma set: cut
+	Speed     Amount    // mm/min of the torch or disc: cut
+	CutBy     *CutTable // the house's own speeds: cut; nil: the usual ones
+	Second    Amount    // mm4, second moment of area of what is welded, for the bow: weld
+	Count     int       // holes or tacks: cut
+	Dwell     Amount    // minutes, as the test's procedure says: test
+	Pressure  Amount    // bar: test
+	Warm      Amount    // °C of the steel: test; else that of the place
+	Surface   []string  // surface prep, coat: assemblies or assembly/part
+	Area      Amount    // m2: overrules the surface
+	Grade     string    // surface prep, coat
+	Method    string    // surface prep, coat: how
+	Shape     string    // surface prep, coat: flat, sections or lattice; "" is sections
+	Condition string    // surface prep: new, light rust, heavy rust or painted; "" is new
+	Coats     []string  // coat: paints in order
+	Lifts     string    // lift, move: assembly (or assembly/part)
+	Mass      Amount    // kg: stated
+	Height    Amount    // mm of hook travel
+	Travel    Amount    // mm on the level
+	Radius    Amount    // mm, crane
+	To        *Place    // move
+	Parts     []string  // cut, fit-up, weld: assembly/part it works on
+	Joints    int       // fit-up: count of joints; 0 unknown
+	Lifting   *Lifting  // lift, move
+	Joins     []Named   // fit-up, weld: assemblies or parts that hang together from its finish on
+	FitProved []string  // fit-up: survey, template or trial fit that proves that it fits
 	TaskNature
 	SentOut string // plain: galvanizing, machining, profile cutting or other work sent out
 }
@@ -122,6 +124,7 @@ type Use struct {
 type Seam struct {
 	weld.Seam
 	Procedure string
+	Picked    string // why this procedure, where the joint names none; "" where it does
 	Name      string // joint number on the weld list
 	At        [3]float64
 	HasAt     bool // At is its middle, mm in the assembly's axes

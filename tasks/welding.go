@@ -11,6 +11,26 @@ type Welding struct {
 	Hold       Amount            // hours before final NDT; weld.None for none
 	NoOverweld bool              // exactly what is drawn is laid
 	Steels     []*Steel
+	Chart      []weld.ChartReading // read from the charts of EN 1011-2 method A
+	Cutting    []*CutTable
+}
+
+// CutTable is the house's own table of cutting speeds, by name.
+type CutTable struct {
+	weld.CutTable
+	Pos Pos
+}
+
+// HoldsFor is what a procedure is for: joints that name none are welded by the one procedure
+// that holds for them. What is left empty holds for all.
+type HoldsFor struct {
+	Pos       Pos
+	Joints    []string // "fillet", "butt" or a joint's own name
+	Positions []weld.Position
+	Thickness [2]float64 // mm of the thinner part, from and to; zero is all
+	Leg       [2]float64 // mm, of fillets and laps
+	Places    []string
+	People    []string // where the task names its people, all of them are among these
 }
 
 // Steel is a steel of the job file, by name.

@@ -9,12 +9,13 @@ type belonging struct {
 	has         func(JointType) bool
 }
 
-func (t JointType) legs() bool { return t == Fillet || t == Lap || t == Corner }
+// HasLegs says whether the joint has legs: a fillet, a lap or a corner.
+func (t JointType) HasLegs() bool { return t == Fillet || t == Lap || t == Corner }
 
 var belongings = []belonging{
-	{"leg", "give thickness and preparation", func(j Joint) bool { return j.Leg > 0 }, JointType.legs},
-	{"second leg", "give thickness and preparation", func(j Joint) bool { return j.Leg2 > 0 }, JointType.legs},
-	{"throat", "give thickness, and depth where it does not go through", func(j Joint) bool { return j.Throat > 0 }, JointType.legs},
+	{"leg", "give thickness and preparation", func(j Joint) bool { return j.Leg > 0 }, JointType.HasLegs},
+	{"second leg", "give thickness and preparation", func(j Joint) bool { return j.Leg2 > 0 }, JointType.HasLegs},
+	{"throat", "give thickness, and depth where it does not go through", func(j Joint) bool { return j.Throat > 0 }, JointType.HasLegs},
 	{"root gap", "the gap that poor fit-up leaves is `gap`", func(j Joint) bool { return j.RootGap > 0 }, JointType.groove},
 	{"root face", "leave it out", func(j Joint) bool { return j.RootFace > 0 }, func(t JointType) bool { return t.groove() && t != Square }},
 	{"angle", "leave it out", func(j Joint) bool { return j.Angle > 0 }, func(t JointType) bool { return t.groove() && t != Square }},
@@ -26,7 +27,7 @@ var belongings = []belonging{
 	{"backing", "leave it out", func(j Joint) bool { return j.Backing }, JointType.groove},
 	{"back-gouge", "a weld right through a T is a single or double bevel", func(j Joint) bool { return j.BackGouge }, JointType.groove},
 	{"both sides", "a joint welded from both faces is a double one, or one with back-gouge", func(j Joint) bool { return j.BothSides },
-		func(t JointType) bool { return t.legs() || t == Square }},
+		func(t JointType) bool { return t.HasLegs() || t == Square }},
 	{"gap", "leave it out", func(j Joint) bool { return j.Gap > 0 }, func(t JointType) bool { return t != Plug && t != Slot }},
 	{"bead", "a long hole is a slot", func(j Joint) bool { return j.Bead > 0 }, func(t JointType) bool { return t != Plug }},
 	{"pitch", "give count", func(j Joint) bool { return j.Pitch > 0 }, func(t JointType) bool { return t != Plug && t != Slot }},

@@ -45,7 +45,7 @@ func (e *seamWork) deposit(c Circumstances) {
 	if j.Gap > wideGap {
 		e.warnf("a fit-up gap of %.3g mm is above %.0f mm: ask before welding it up", j.Gap, wideGap)
 	}
-	if t := math.Min(j.Thickness, j.Thickness2); j.Type.legs() && e.seam.Joint.Thickness > 0 && math.Max(j.Leg, j.Leg2) > mostLeg*t {
+	if t := math.Min(j.Thickness, j.Thickness2); j.Type.HasLegs() && e.seam.Joint.Thickness > 0 && math.Max(j.Leg, j.Leg2) > mostLeg*t {
 		e.warnf("a leg of %.3g mm is a lot on %.3g mm: check the drawing", math.Max(j.Leg, j.Leg2), t)
 	}
 	if strings.HasPrefix(c.Execution, "AWS") && j.Type == Fillet && e.seam.Joint.Thickness > 0 && j.Leg < MinFillet(math.Max(j.Thickness, j.Thickness2))-0.05 {

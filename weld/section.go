@@ -30,16 +30,16 @@ type Section struct {
 //
 // Errors: a *Error for a missing or impossible size.
 func (j Joint) Section(pos Position, overweld bool) (Section, error) {
-	f, err := j.filled(usualPosition(j.Type, pos), overweld)
+	f, err := j.filled(UsualPosition(j.Type, pos), overweld)
 	if err != nil {
 		return Section{}, err
 	}
-	return f.section(usualPosition(j.Type, pos), overweld)
+	return f.section(UsualPosition(j.Type, pos), overweld)
 }
 
-// usualPosition gives the position meant where none is given, and puts fillets into fillet
-// positions: PC is PB for them, PE is PD.
-func usualPosition(t JointType, pos Position) Position {
+// UsualPosition gives the position meant for a joint where pos is zero, PB for fillets and laps and
+// PA for the rest, and puts fillets into fillet positions: PC is PB for them, PE is PD.
+func UsualPosition(t JointType, pos Position) Position {
 	legs := t == Fillet || t == Lap
 	switch {
 	case pos == 0 && legs, legs && pos == PC:

@@ -194,8 +194,8 @@ func workSeam(s Seam, c Circumstances) (*seamWork, error) {
 	if e.pos == 0 {
 		e.pos = e.proc.Position
 	}
-	e.pos = usualPosition(s.Joint.Type, e.pos)
-	if p := usualPosition(s.Joint.Type, e.proc.Position); e.proc.Position != 0 && p != e.pos {
+	e.pos = UsualPosition(s.Joint.Type, e.pos)
+	if p := UsualPosition(s.Joint.Type, e.proc.Position); e.proc.Position != 0 && p != e.pos {
 		e.warnf("the procedure %sis for %s, the seam is in %s", spaced(e.proc.Name), e.proc.Position, e.pos)
 	}
 	var err error

@@ -48,7 +48,8 @@ var seamSection = section{name: "Seam", where: "tasks / NAME / joints / item", h
 	{name: "length", takes: itsOwn, form: "length, `... in all` or `... each`", shape: anyText, usual: "once round a tube, times its count", example: "9.6 m in all", says: "length of the seam, or of all of them; `1.2 m each` is taken times the count"},
 	{name: "count", takes: aCount, low: 1, high: 1e5, usual: "1", example: "4", says: "how many seams the length is made of"},
 	{name: "position", takes: itsOwn, form: "ISO 6947 position", shape: anyText, usual: "PB for fillets and laps, else PA", example: "PF", says: "welding position"},
-	{name: "procedure", takes: aName, usual: "the usual settings of the place's process", example: "site fillet", says: "how it is made"},
+	{name: "process", takes: itsOwn, form: "process, by ISO 4063 number or its usual name", shape: anyText, usual: "that of the procedure", example: "136", says: "the process, where no procedure is named: one that is for the joint is taken, else usual settings"},
+	{name: "procedure", takes: aName, usual: "the one that is for such joints, else the usual settings of the process", example: "site fillet", says: "how it is made"},
 	{name: "name", takes: aText, example: "W1", says: "joint number on the weld list"},
 	{name: "turns", takes: aCount, low: 0, high: 100, usual: "0", example: "1", says: "how often the part is turned over while it is welded"},
 	{name: "access", takes: aNumber, low: 1, high: 5, usual: "1", example: "1.3", says: "hands-on time times this where access is bad: ladder or rope 1.3 to 1.5, closed space 1.3 to 1.6"},
@@ -152,10 +153,17 @@ func (r *reader) seam(n *yaml.Node, what string) (tasks.Seam, bool) {
 	if f.has("at") {
 		s.At, s.HasAt = f.point(f.node("at"))
 	}
+	process := f.process("process")
+	if process != 0 {
+		s.Seam.Procedure = &weld.Procedure{Process: process}
+	}
 	if ref, ok := f.name("procedure"); ok {
 		s.Procedure = ref.text
 		if p := r.procedureOf(ref.text); p != nil {
 			s.Seam.Procedure = &p.Procedure
+			if process != 0 && p.Process != 0 && process != p.Process {
+				f.fault("process", "leave one of the two out", "the joint is to be %s, procedure %q is %s", process, p.Name, p.Process)
+			}
 		} else {
 			r.unknown(ref.pos, f.lead("procedure"), "procedure", ref.text, r.procedureNames())
 		}

@@ -48,17 +48,18 @@ var (
 		holdKey,
 		{name: "overweld", takes: yesNo, usual: "as for the job", example: "no", says: "more is laid than is drawn"},
 		{name: "advise order", takes: yesNo, usual: "no", example: "yes", says: "advise an order of its joints that keeps shrinkage in balance; each joint says `at`"},
+		{name: "second moment", takes: anAmount, dim: quantity.SecondMoment, low: 1, high: 1e15, example: "2400 cm4", says: "second moment of area of the whole about the axis it bows about: the advice then says the bow"},
 		offKey,
 		{name: "repair of", takes: aName, example: "weld frame", without: "joints", says: "a weld task: this one is what testing may find to repair; hours, `chance` and wait are worked out from it"},
 	}}
 	cutKeys = section{name: "Cut", where: "tasks / NAME of kind cut", host: "tasks/cut lugs", says: "a cut", more: &taskSection, keys: []key{
-		with(byKey, "oxy-fuel", "plasma, oxy-fuel, disc, saw; a preparing job as under `rates` ("+activityNames()+"); or another way with hours"),
+		with(byKey, "oxy-fuel", "plasma, oxy-fuel, disc, saw; a table under `cutting`; a preparing job as under `rates` ("+activityNames()+"); or another way with hours"),
 		with(lengthKey, "1.9 m", "length of cut, or of edge prepared"),
 		{name: "count", takes: aCount, low: 1, high: 1e5, example: "12", says: "holes to drill, or tacks"},
 		{name: "mass", takes: anAmount, dim: quantity.Mass, low: 0.01, high: 1e4, example: "4 kg", says: "metal to grind away"},
 		{name: "bevel", takes: anAmount, dim: quantity.Angle, low: 0, high: 70, usual: "0 deg", example: "30 deg", says: "off square: the cut goes through the longer way"},
 		{name: "pierces", takes: aCount, low: 0, high: 1e5, usual: "0", example: "4", says: "starts inside the plate"},
-		{name: "current", takes: anAmount, dim: quantity.Current, low: 15, high: 400, usual: "40 A", example: "65 A", says: "of a plasma set: it cuts so much and no more"},
+		{name: "current", takes: anAmount, dim: quantity.Current, low: 15, high: 1000, usual: "40 A", example: "65 A", says: "of a plasma set: it cuts so much and no more; of gouging: by air carbon-arc"},
 		{name: "speed", takes: anAmount, dim: quantity.Travel, low: 5, high: 20000, usual: "by way and thickness", example: "400 mm/min", says: "cutting speed, in place of the table's"},
 		{name: "thickness", takes: anAmount, dim: quantity.Length, low: 0.1, high: 500, example: "16 mm", says: "thickness cut"},
 		partKey, offKey,
@@ -160,10 +161,12 @@ func (r *reader) byKind(t *tasks.Task, f *fields) {
 		if !f.tried("joints") && !timed && !f.tried("repair of") {
 			f.fault("", "add `joints: [{fillet: {leg: 6 mm}, length: 2 m, position: PB}]`, or `hours`", "it has neither joints nor hours")
 		}
+		t.Second = f.amount("second moment", 0)
 	case tasks.Cut:
 		t.Thickness, t.PaintOff = f.amount("thickness", 0), f.yes("paint off first")
 		t.Bevel, t.Current, t.Speed, t.Mass = f.amount("bevel", 0), f.amount("current", 0), f.amount("speed", 0), f.amount("mass", 0)
 		t.Pierces, t.Count = f.count("pierces", 0), f.count("count", 0)
+		r.cutBy(t, f)
 		if !timed && !f.tried("part") && !(f.tried("length") && f.tried("thickness")) && !weld.IsActivity(t.By) {
 			f.fault("", "add `length: 1.9 m` and `thickness: 16 mm`, `part: frame/base`, or `hours`", "nothing says how much is cut")
 		}

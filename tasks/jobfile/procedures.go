@@ -93,6 +93,7 @@ func (r *reader) procedure(name string, at *yaml.Node, f *fields) *tasks.Procedu
 		p.SetFrom(k.Set)
 	}
 	r.byPerson(p, f)
+	r.holdsFor(p, f)
 	return p
 }
 

@@ -98,6 +98,7 @@ func (r *reader) read(root *yaml.Node) {
 	for _, l := range libs {
 		r.readProcedures(l)
 		r.readRates(l)
+		r.readCutting(l)
 		r.readSteels(l)
 		r.readPaints(l)
 		r.readClashes(l)
@@ -110,6 +111,7 @@ func (r *reader) read(root *yaml.Node) {
 	for _, d := range r.drafts {
 		r.job.Tasks = append(r.job.Tasks, d.t)
 	}
+	r.pickProcedures()
 	r.resolveLinks()
 	r.resolveRepairs()
 	r.resolveLifting()

@@ -13,7 +13,7 @@ import (
 func sections() []*section {
 	out := []*section{&topSection, &placeSection, &faceSection, &permitSection, &tideSection, &craftSection, &climateSection, &monthSection,
 		&tripSection, &outSection, &backSection, &windowSection, &personSection, &ticketSection, &kitSection, &hireSection,
-		&procedureSection, &byPersonSection, &setSection, &cableSection, &ratesSection, &steelSection, &paintSection, &assemblySection, &partSection, &taskSection, &stopSection, &linkSection, &slingsSection, &secondSection, &handsSection, &nioshSection, &pushSection}
+		&procedureSection, &byPersonSection, &forSection, &setSection, &cableSection, &ratesSection, &cuttingSection, &readingSection, &steelSection, &paintSection, &assemblySection, &partSection, &taskSection, &stopSection, &linkSection, &slingsSection, &secondSection, &handsSection, &nioshSection, &pushSection}
 	out = append(out, kindSections()...)
 	return append(out, &seamSection, &jointSection, &blockSection, &orderSection, &clashSection, &dutySection, &emergencySection, &vehicleSection, &carriageSection, &drivingSection, &bandSection, &packingSection, &boxSection, &extraSection, &changeSection)
 }

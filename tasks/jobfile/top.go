@@ -12,7 +12,7 @@ var topSection = section{name: "Job", where: "top of the file", host: "", says: 
 	{name: "client", takes: aText, example: "Tarskay Harbour Trust", says: "printed on the sheets"},
 	{name: "drawing", takes: aText, example: "RH-01 rev C", says: "number and revision, printed on the weld list"},
 	{name: "zone", takes: itsOwn, form: "time zone", shape: anyText, usual: "none: each place states its own", example: "Europe/London", says: "time zone of home, and of the places that state none"},
-	{name: "use", takes: names, example: "[house.yaml]", says: "libraries: files with procedures, rates, steels, paints, people, kit, hire and clashes; later ones win, the job file's own win over all"},
+	{name: "use", takes: names, example: "[house.yaml]", says: "libraries: files with procedures, rates, cutting, steels, paints, people, kit, hire and clashes; later ones win, the job file's own win over all"},
 	{name: "places", takes: namedOf, sub: &placeSection, need: true, example: "{shop: {open: Mon-Fri 07:30-17:30}, pier: {open: always, workfaces: {deck: {people: 2}}}}", says: "where work happens"},
 	{name: "trips", takes: listOf, sub: &tripSection, example: "[{name: a, place: pier, out: {leave: 2027-04-05 06:00}, back: {leave: 2027-04-06 18:00}}]", says: "bookings that could be made; in place of `window`"},
 	{name: "window", takes: keysOf, sub: &windowSection, example: "{place: pier, opens: 2027-04-05 08:00, closes: 2027-04-14 20:00}", without: "trips", says: "a plain window; in place of `trips`"},
@@ -22,6 +22,7 @@ var topSection = section{name: "Job", where: "top of the file", host: "", says: 
 	{name: "hire", takes: namedOf, sub: &hireSection, example: "{loader crane: {slots: [2027-04-06 08:00-12:00]}}", says: "kit that is there only in slots"},
 	{name: "procedures", takes: namedOf, sub: &procedureSection, example: "{site fillet: {process: 136}}", says: "how welds are made"},
 	{name: "rates", takes: keysOf, sub: &ratesSection, example: "{fit-up: 8 min/m, set-up: 15 min}", says: "the crew's own rates for welding"},
+	{name: "cutting", takes: namedOf, sub: &cuttingSection, example: "{small plasma: {by: plasma, speeds: {6 mm: 1400 mm/min, 12 mm: 450 mm/min}}}", says: "the house's own cutting speeds, by set or torch"},
 	{name: "steels", takes: namedOf, sub: &steelSection, example: "{S355 plate: {grade: S355J2, C: 0.17 %, Mn: 1.45 %}}", says: "steels with what their certificates say"},
 	{name: "paints", takes: namedOf, sub: &paintSection, example: "{primer: {kind: two-pack epoxy}}", says: "paints, as their sheets describe them"},
 	{name: "assemblies", takes: namedOf, sub: &assemblySection, example: "{frame: {mass: 410 kg}}", says: "what is built, fitted or moved"},
@@ -33,6 +34,7 @@ var topSection = section{name: "Job", where: "top of the file", host: "", says: 
 	{name: "to standard", takes: aWord, words: []string{"EN 1090-2", "AWS D1.1"}, usual: "none", example: "EN 1090-2", says: "the standard that the contract is to"},
 	{name: "steel", takes: aText, usual: "S355", example: "S355", says: "grade where an assembly states none, or a name under `steels`"},
 	{name: "preheat by", takes: aWord, words: []string{"EN 1011-2 A", "EN 1011-2 B", "AWS D1.1"}, usual: "AWS D1.1 where the contract is to it, else as the procedures say", example: "EN 1011-2 B", says: "the standard that preheat is worked out by where a procedure says none"},
+	{name: "preheat readings", takes: listOf, sub: &readingSection, example: "[{CE: 0.45, hydrogen scale: C, combined thickness: 80 mm, heat input: 1.2 kJ/mm, preheat: 75 C}]", says: "what you read from the charts of EN 1011-2 method A; the least of those that hold for a seam is taken"},
 	holdKey,
 	{name: "overweld", takes: yesNo, usual: "yes", example: "no", says: "more is laid than is drawn: legs 1 mm, caps 1.5 mm"},
 	{name: "emergency", takes: keysOf, sub: &emergencySection, example: "{phone: 01 555 0102}", says: "the emergency block of the sheets"},
@@ -81,7 +83,7 @@ var librarySection = section{name: "Library", where: "a file under use", says: "
 
 func libraryKeys() []key {
 	var out []key
-	for _, name := range []string{"people", "kit", "hire", "procedures", "rates", "steels", "paints", "clashes"} {
+	for _, name := range []string{"people", "kit", "hire", "procedures", "rates", "cutting", "steels", "paints", "clashes"} {
 		k := *topSection.find(name)
 		out = append(out, k)
 	}

@@ -146,6 +146,7 @@ func (r *reader) readWelding(f *fields) {
 	w := &r.job.Welding
 	w.Preheat = f.choice("preheat by", "")
 	w.Hold = f.hold()
+	w.Chart = r.readings(f)
 	if lay := f.yesOrNot("overweld"); lay != nil {
 		w.NoOverweld = !*lay
 	}

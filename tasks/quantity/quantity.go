@@ -16,35 +16,36 @@ type Dim uint8
 
 // The dimensions, each with its base unit.
 const (
-	Number      Dim = iota // a pure number, no unit
-	Length                 // millimetre
-	Mass                   // kilogram
-	Time                   // minute
-	Temperature            // degree Celsius
-	Area                   // square metre
-	Volume                 // litre
-	Percent                // share from 0 to 1 and beyond ("35 %" is 0.35)
-	Film                   // micrometre
-	Current                // ampere
-	Voltage                // volt
-	Power                  // kilovolt-ampere
-	Travel                 // millimetre a minute
-	Feed                   // metre a minute (wire feed)
-	Deposition             // kilogram an hour
-	Coverage               // square metre an hour
-	Spreading              // square metre a litre
-	Speed                  // metre a second (wind)
-	Angle                  // degree
-	Flow                   // litre a minute
-	Pressure               // bar
-	HeatInput              // kilojoule a millimetre
-	Force                  // newton
-	Density                // kilogram a cubic metre
-	LineMass               // kilogram a metre
-	Pace                   // minute a metre
-	Hydrogen               // millilitre in 100 g of weld metal
-	Section                // square millimetre (of a cable)
-	Stress                 // newton a square millimetre
+	Number       Dim = iota // a pure number, no unit
+	Length                  // millimetre
+	Mass                    // kilogram
+	Time                    // minute
+	Temperature             // degree Celsius
+	Area                    // square metre
+	Volume                  // litre
+	Percent                 // share from 0 to 1 and beyond ("35 %" is 0.35)
+	Film                    // micrometre
+	Current                 // ampere
+	Voltage                 // volt
+	Power                   // kilovolt-ampere
+	Travel                  // millimetre a minute
+	Feed                    // metre a minute (wire feed)
+	Deposition              // kilogram an hour
+	Coverage                // square metre an hour
+	Spreading               // square metre a litre
+	Speed                   // metre a second (wind)
+	Angle                   // degree
+	Flow                    // litre a minute
+	Pressure                // bar
+	HeatInput               // kilojoule a millimetre
+	Force                   // newton
+	Density                 // kilogram a cubic metre
+	LineMass                // kilogram a metre
+	Pace                    // minute a metre
+	Hydrogen                // millilitre in 100 g of weld metal
+	Section                 // square millimetre (of a cable)
+	Stress                  // newton a square millimetre
+	SecondMoment            // millimetre to the fourth
 )
 
 // Error is what was wrong with a written amount. Problem is one sentence; Hint a way out.
