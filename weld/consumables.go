@@ -22,7 +22,7 @@ type Consumable struct {
 }
 
 const (
-	spareShare = 0.15    // taken beyond the reckoned amount (house judgement)
+	SpareShare = 0.15    // taken beyond the reckoned amount (house judgement)
 	spoolMass  = 15.0    // kg (common practice)
 	bottleGas  = 10000.0 // L in a 50 L bottle at 200 bar (common practice)
 	siteGas    = 1.25    // more gas on site: 20 to 30 % (from memory)
@@ -150,29 +150,29 @@ func rank(unit string) int {
 
 // spares rounds to what can be taken: whole pieces, whole bottles, half kilograms of filler.
 func (n *Consumable) spares() {
-	with := n.Amount * (1 + spareShare)
+	with := n.Amount * (1 + SpareShare)
 	switch {
 	case n.Unit == "pieces":
 		n.Amount = math.Max(1, math.Ceil(n.Amount-1e-9))
-		n.Spare = math.Max(1, math.Ceil(n.Amount*spareShare-1e-9))
+		n.Spare = math.Max(1, math.Ceil(n.Amount*SpareShare-1e-9))
 		n.Mass = (n.Amount + n.Spare) * 0.2
 	case n.Packed == "electrodes":
 		one := n.Amount / math.Max(1, float64(n.Pieces))
 		n.Each = one
-		n.Pieces = int(math.Ceil(float64(n.Pieces)*(1+spareShare) - 1e-9))
-		n.Spare = n.Amount * spareShare
+		n.Pieces = int(math.Ceil(float64(n.Pieces)*(1+SpareShare) - 1e-9))
+		n.Spare = n.Amount * SpareShare
 		n.Mass = float64(n.Pieces) * one
 	case n.Packed == "spools of 15 kg":
-		n.Spare = n.Amount * spareShare
+		n.Spare = n.Amount * SpareShare
 		n.Each = spoolMass
 		n.Pieces = int(math.Ceil(with/spoolMass - 1e-9))
 		n.Mass = with
 	case n.Unit == "L":
-		n.Spare = n.Amount * spareShare
+		n.Spare = n.Amount * SpareShare
 		n.Each = bottleGas
 		n.Pieces = int(math.Ceil(with/bottleGas - 1e-9))
 	default:
-		n.Spare = n.Amount * spareShare
+		n.Spare = n.Amount * SpareShare
 		n.Mass = with
 	}
 }

@@ -114,7 +114,7 @@ func (c Cut) uses(burning origin.Figure) []Consumable {
 	piece := func(name string, n float64, note string, from ...origin.Figure) Consumable {
 		f := origin.House(name, n, "", note)
 		f.From = from
-		return Consumable{Name: name, Amount: n, Unit: "pieces", Spare: n * spareShare, Why: f}
+		return Consumable{Name: name, Amount: n, Unit: "pieces", Spare: n * SpareShare, Why: f}
 	}
 	method := c.Method
 	if c.Table != nil {
@@ -133,8 +133,8 @@ func (c Cut) uses(burning origin.Figure) []Consumable {
 		rate := origin.House("propane", fuelPerHour, "kg/h", "usual heating flame")
 		fuel := origin.Worked("propane for cutting", fuelPerHour*flameOver*t/60, "kg", "propane x flame over cutting time x cutting time / 60", rate, over, burning)
 		return []Consumable{
-			{Name: "oxygen", Amount: oxygen.Value, Unit: "L", Spare: oxygen.Value * spareShare, Packed: "bottles of 10 m3", Each: bottleGas, Why: oxygen},
-			{Name: "propane for cutting", Amount: fuel.Value, Unit: "kg", Spare: fuel.Value * spareShare, Mass: fuel.Value * (1 + spareShare), Packed: "bottles of 11 kg", Each: fuelBottle, Why: fuel},
+			{Name: "oxygen", Amount: oxygen.Value, Unit: "L", Spare: oxygen.Value * SpareShare, Packed: "bottles of 10 m3", Each: bottleGas, Why: oxygen},
+			{Name: "propane for cutting", Amount: fuel.Value, Unit: "kg", Spare: fuel.Value * SpareShare, Mass: fuel.Value * (1 + SpareShare), Packed: "bottles of 11 kg", Each: fuelBottle, Why: fuel},
 		}
 	case "disc":
 		way := c.Thickness / math.Cos(c.Bevel*math.Pi/180)

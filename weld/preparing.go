@@ -95,7 +95,7 @@ func (a Activity) uses(amount float64, time origin.Figure) []Consumable {
 	piece := func(name string, n float64, note string, from ...origin.Figure) []Consumable {
 		f := origin.House(name, n, "", note)
 		f.From = from
-		return []Consumable{{Name: name, Amount: n, Unit: "pieces", Spare: n * spareShare, Why: f}}
+		return []Consumable{{Name: name, Amount: n, Unit: "pieces", Spare: n * SpareShare, Why: f}}
 	}
 	switch a.Name {
 	case "bevel by disc", "dress flush", "remove mill scale", "grind away":
@@ -132,7 +132,7 @@ const carbonMetres = 1.0 // m of groove that a carbon of 305 mm lasts (house jud
 func (c Carbon) Carbons(length float64) Consumable {
 	name := "gouging carbons " + origin.Trim(c.Diameter) + " mm"
 	n := length / 1000 / carbonMetres
-	return Consumable{Name: name, Amount: n, Unit: "pieces", Spare: n * spareShare, Why: origin.House(name, n, "", "one for a metre of groove")}
+	return Consumable{Name: name, Amount: n, Unit: "pieces", Spare: n * SpareShare, Why: origin.House(name, n, "", "one for a metre of groove")}
 }
 
 // GougeWith gives the smallest carbon that cuts a groove of a depth in mm in one pass; ok is

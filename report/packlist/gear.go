@@ -174,6 +174,9 @@ func groupOf(what string) Group {
 
 // sold rounds a consumable up to what it is sold in, and gives its mass and class.
 func (m *maker) sold(u *used) {
+	if u.unit == "pieces" {
+		u.sum, u.spare = math.Ceil(u.sum-1e-9), math.Ceil(u.spare-1e-9)
+	}
 	total := u.sum + u.spare
 	u.Amount = origin.Trim(roundUp(u.sum)) + " " + u.unit
 	if u.spare > 0 {

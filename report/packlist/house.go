@@ -22,6 +22,11 @@ func of(kinds ...tasks.Kind) func(*maker, *expand.Step) bool {
 	}
 }
 
+// uses says whether a step's estimate counts something out.
+func uses(s *expand.Step, what string) bool {
+	return slices.ContainsFunc(s.Estimate.Consumables, func(c expand.Consumable) bool { return c.What == what })
+}
+
 func hot(_ *maker, s *expand.Step) bool { return s.Hot }
 
 func powered(_ *maker, s *expand.Step) bool { return s.Power > 0 }
@@ -42,7 +47,7 @@ var usuals = []usual{
 	{Tools, "return clamp, chipping hammer, wire brushes, temperature sticks, spare torch parts", of(tasks.Weld)},
 	{Tools, "angle grinders, cutting and flap discs, spanners for them", of(tasks.Weld, tasks.Cut, tasks.Prep)},
 	{Tools, "torch set, nozzles, flashback arrestors, lighter", func(_ *maker, s *expand.Step) bool { return s.Task.Kind == tasks.Cut && s.Task.By == "oxy-fuel" }},
-	{Gas, "oxygen and fuel gas for the torch: count the bottles by the cut", func(_ *maker, s *expand.Step) bool { return s.Task.Kind == tasks.Cut && s.Task.By == "oxy-fuel" }},
+	{Gas, "oxygen and fuel gas for the torch: count the bottles by the cut", func(_ *maker, s *expand.Step) bool { return s.Task.Kind == tasks.Cut && s.Task.By == "oxy-fuel" && !uses(s, "oxygen") }},
 	{Tools, "clamps, wedges, dogs, levels, squares, tape, scriber, podger spanners, drifts", of(tasks.FitUp)},
 	{Tools, "mixing paddle, brushes, rollers, masking tape, rags in a tin, steel thermometer, hygrometer, wet film comb, film gauge", of(tasks.Coat)},
 	{Tools, "blast hoses, nozzles, dead-man handle, sheeting to catch the grit", func(_ *maker, s *expand.Step) bool {

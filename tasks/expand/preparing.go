@@ -45,9 +45,13 @@ func (x *expander) prepareJob(t *tasks.Task, h hands) hands {
 		}
 	}
 	h.minutes, h.est.Figure, h.est.Notes = spread(float64(l.HandsOn)), f, l.Warnings
+	h.uses(l.Consumables, 1)
 	if c, ok := weld.GougeWith(t.Thickness.Value); ok && (a.Name == "gouge out" || a.Name == "back-gouge") {
 		h.est.Notes = append(h.est.Notes, fmt.Sprintf("where it is gouged by air carbon-arc: a carbon of %s mm at %s to %s A cuts %s mm deep in one pass",
 			origin.Trim(c.Diameter), origin.Trim(c.MinCurrent), origin.Trim(c.MaxCurrent), origin.Trim(t.Thickness.Value)))
+		if t.Current.Pos.Given() { // by carbon
+			h.uses([]weld.Consumable{c.Carbons(t.Length.Value)}, 1)
+		}
 	}
 	return h
 }

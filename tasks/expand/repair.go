@@ -30,10 +30,7 @@ func (x *expander) repair(t *tasks.Task, h hands, e weld.Estimate, c weld.Circum
 	if r.Standing > 0 {
 		h.est.Facts = append(h.est.Facts, e.Why.BeforeNDT)
 	}
-	for _, n := range e.Consumables {
-		k := r.Length / length
-		h.est.Consumables = append(h.est.Consumables, Consumable{What: n.Name, Amount: n.Amount * k, Unit: n.Unit, Spare: n.Spare * k, Each: n.Each, Packed: n.Packed})
-	}
+	h.uses(e.Consumables, r.Length/length)
 	h.warnings = nil // said of the weld itself
 	e.HandsOn = quantity.HandsOn(hours.Value)
 	x.welded[t] = e

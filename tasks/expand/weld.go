@@ -45,12 +45,12 @@ func (x *expander) weld(t *tasks.Task) hands {
 	h.setUp, h.safe = float64(e.SetUp)+float64(e.Soak), float64(e.SafeStop)*part
 	h.power = e.Power * float64(h.welders)
 	h.facts(e, hours, part)
+	h.est.Facts = append(x.procedures(t, e), h.est.Facts...)
+	h.est.Facts = append(h.est.Facts, x.metresADay(t, e))
 	if t.Repairs != nil {
 		return x.repair(t, h, e, c, part)
 	}
-	for _, n := range e.Consumables {
-		h.est.Consumables = append(h.est.Consumables, Consumable{What: n.Name, Amount: n.Amount, Unit: n.Unit, Spare: n.Spare, Each: n.Each, Packed: n.Packed})
-	}
+	h.uses(e.Consumables, 1)
 	h.minutes, h.est.Figure = spread(hours.Value), hours
 	x.advise(t, e, &h)
 	x.welded[t] = e
@@ -69,17 +69,67 @@ func (h *hands) facts(e weld.Estimate, hours origin.Figure, part float64) {
 	if soak.Name != "" {
 		soak = origin.Worked("soak, at every start", soak.Value, "min", "soak", soak)
 	}
+	for _, f := range []origin.Figure{w.Metal, w.Arc, w.Passes, w.HeatInput, w.CE, w.CET, w.Combined, w.Scale, w.Preheat, w.T85, w.SetUp, soak,
+		safe, w.Cooling, w.BeforeNDT, w.Power, w.Generator, w.Drop, w.SupplyDrop} {
+		if f.Name != "" && (f.Value != 0 || f.Text != "") {
+			h.est.Facts = append(h.est.Facts, f)
+		}
+	}
+}
+
+// metresADay is the figure by which the trade checks an estimate: what one welder finishes in ten
+// hours at the place, all in but set-up.
+func (x *expander) metresADay(t *tasks.Task, e weld.Estimate) origin.Figure {
 	metres := 0.0
 	for _, s := range e.Seams {
 		metres += s.Length / 1000
 	}
-	day := origin.Worked("metres in ten hours at the face", metres*600/hours.Value, "m", "length welded x 600 / hands-on time",
-		origin.Worked("length welded", metres, "m", "sum of the joints"), hours)
-	for _, f := range []origin.Figure{w.Metal, w.Arc, w.Passes, day, w.HeatInput, w.CE, w.CET, w.Preheat, w.T85, w.SetUp, soak,
-		safe, w.Cooling, w.BeforeNDT, w.Power, w.Generator, w.Drop, w.SupplyDrop} {
-		if f.Name != "" && f.Value != 0 {
-			h.est.Facts = append(h.est.Facts, f)
+	face := x.faceFactor(t.Place)
+	return origin.Worked("metres a welder in a ten-hour day", metres*600*face.Value/e.Hours.Value, "m", "length welded x 600 x face factor / time of one welder; on site practice knows 5 to 8 m of 6 to 8 mm fillet",
+		origin.Worked("length welded", metres, "m", "sum of the joints"), face, renamed(e.Hours, "time of one welder"))
+}
+
+// procedures says by which procedure each joint is welded where it names none: the one picked, or
+// the usual settings of its process. Joints alike are said once.
+func (x *expander) procedures(t *tasks.Task, e weld.Estimate) []origin.Figure {
+	var out []origin.Figure
+	said := map[string]bool{}
+	if len(x.w.Job.Procedures) == 0 {
+		return nil
+	}
+	for i, s := range t.Welds() {
+		text, o := s.Procedure, origin.Origin{Kind: origin.Given, Source: s.Picked}
+		switch {
+		case s.Picked != "":
+			for _, p := range x.w.Job.Procedures {
+				if p.Name == s.Procedure {
+					o = p.For.Pos.Origin(s.Picked)
+				}
+			}
+		case s.Procedure == "":
+			text = "usual settings of " + e.Seams[i].Process.String()
+			o = origin.Origin{Kind: origin.Judgement, Source: "the joint names no procedure, and none is for it"}
+		default:
+			continue // named in the joint
 		}
+		if !said[text+o.String()] {
+			said[text+o.String()] = true
+			out = append(out, origin.Word("procedure of "+seamName(t, i), text, o))
+		}
+	}
+	return out
+}
+
+// uses puts a share of what is used up on the estimate. Pieces are not rounded here: they are
+// rounded once, when all tasks are summed.
+func (h *hands) uses(list []weld.Consumable, share float64) {
+	for _, n := range list {
+		amount, spare := n.Amount, n.Spare
+		if n.Unit == "pieces" && n.Why.Name != "" {
+			amount = n.Why.Value
+			spare = amount * weld.SpareShare
+		}
+		h.est.Consumables = append(h.est.Consumables, Consumable{What: n.Name, Amount: amount * share, Unit: n.Unit, Spare: spare * share, Each: n.Each, Packed: n.Packed})
 	}
 }
 
@@ -97,7 +147,7 @@ func (x *expander) circumstances(t *tasks.Task) weld.Circumstances {
 		word = x.grade(t)
 	}
 	c := weld.Circumstances{Site: x.atSite(t), Ambient: notZero(x.steel(t.Place)), Execution: job.Execution, PreheatStandard: w.Preheat,
-		Steel: w.Steel(word), NoOverweld: w.NoOverweld, FittedUp: x.fittedUp(t), ByParts: w.ByParts, Hold: w.Hold.Value, Rates: w.Rates,
+		Steel: w.Steel(word), NoOverweld: w.NoOverweld, FittedUp: x.fittedUp(t), ByParts: w.ByParts, Hold: w.Hold.Value, Rates: w.Rates, Chart: w.Chart,
 		Origins: map[string]origin.Origin{"hold": w.Hold.Pos.Origin(""), "ambient": {Source: fmt.Sprintf("steel at %s, not given", t.Place.Name)}}}
 	if p := t.Place.Steel.Pos; p.Given() {
 		c.Origins["ambient"] = p.Origin("steel temperature of " + t.Place.Name)

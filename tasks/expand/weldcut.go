@@ -114,14 +114,23 @@ func (x *expander) cut(t *tasks.Task) hands {
 		return x.saw(t, h)
 	}
 	l, err := weld.Cut{Method: by, Thickness: t.Thickness.Value, Length: t.Length.Value, Site: x.atSite(t),
-		Bevel: t.Bevel.Value, Pierces: t.Pierces, Current: t.Current.Value, Speed: t.Speed.Value, Origin: t.Length.Pos.Origin("")}.Work()
+		Bevel: t.Bevel.Value, Pierces: t.Pierces, Current: t.Current.Value, Speed: t.Speed.Value, Table: ownSpeeds(t), Origin: t.Length.Pos.Origin("")}.Work()
 	if err != nil {
 		return h.failed(err)
 	}
 	h.minutes = spread(float64(l.HandsOn))
 	h.est.Figure, h.est.Notes = l.Hours, l.Warnings
 	h.warnings = l.Warnings
+	h.uses(l.Consumables, 1)
 	return h
+}
+
+// ownSpeeds is the house's table that the cut is timed by, if any.
+func ownSpeeds(t *tasks.Task) *weld.CutTable {
+	if t.CutBy == nil {
+		return nil
+	}
+	return &t.CutBy.CutTable
 }
 
 // plates gives a task that cuts parts and says no length the outline and thickness of the plates

@@ -54,7 +54,30 @@ func (x *expander) advise(t *tasks.Task, e weld.Estimate, h *hands) {
 	h.est.Notes = append(h.est.Notes, fmt.Sprintf("order of welding, as advice (drawing, WPS and jig come first): %s", strings.Join(names, ", ")),
 		fmt.Sprintf("imbalance of shrinkage after each joint, in 1000 mm3: as listed %s; as advised %s", thousands(o.Before), thousands(o.After)))
 	from := "weld area x length over the longest x lever arm about the centre of mass, at most, after any joint"
+	h.bow(t, o, longest)
 	h.est.Facts = append(h.est.Facts, origin.Worked("imbalance as listed", o.PeakBefore, "mm3", from), origin.Worked("imbalance as advised", o.PeakAfter, "mm3", from))
+}
+
+// bow says how far the assembly bows, where its second moment of area is given: when all is
+// welded, and at the worst moment of either order.
+func (h *hands) bow(t *tasks.Task, o weld.Order, length float64) {
+	if !t.Second.Pos.Given() {
+		return
+	}
+	second := origin.Written("second moment of area", t.Second.Value, "mm4", t.Second.Pos.Origin("second moment"))
+	for _, b := range []struct {
+		name   string
+		moment float64
+	}{{"bow when all is welded", o.After[len(o.After)-1]}, {"most bow as listed", o.PeakBefore}, {"most bow as advised", o.PeakAfter}} {
+		v, err := weld.Bow(b.moment, length, t.Second.Value)
+		if err != nil {
+			h.fault, h.hint = err, "look at the second moment of area"
+			return
+		}
+		h.est.Facts = append(h.est.Facts, origin.Figure{Name: b.name, Value: v, Unit: "mm", Origin: origin.Origin{Kind: origin.Memory,
+			Source: "0.005 x moment x length^2 / second moment of area (Blodgett, Design of Welded Structures)"},
+			From: []origin.Figure{origin.Worked("moment", b.moment, "mm3", "weld area x lever arm about the centre of mass"), origin.Worked("length", length, "mm", "of the longest joint"), second}})
+	}
 }
 
 func thousands(list []float64) string {
