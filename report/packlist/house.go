@@ -47,7 +47,9 @@ var usuals = []usual{
 	{Tools, "return clamp, chipping hammer, wire brushes, temperature sticks, spare torch parts", of(tasks.Weld)},
 	{Tools, "angle grinders, cutting and flap discs, spanners for them", of(tasks.Weld, tasks.Cut, tasks.Prep)},
 	{Tools, "torch set, nozzles, flashback arrestors, lighter", func(_ *maker, s *expand.Step) bool { return s.Task.Kind == tasks.Cut && s.Task.By == "oxy-fuel" }},
-	{Gas, "oxygen and fuel gas for the torch: count the bottles by the cut", func(_ *maker, s *expand.Step) bool { return s.Task.Kind == tasks.Cut && s.Task.By == "oxy-fuel" && !uses(s, "oxygen") }},
+	{Gas, "oxygen and fuel gas for the torch: count the bottles by the cut", func(_ *maker, s *expand.Step) bool {
+		return s.Task.Kind == tasks.Cut && s.Task.By == "oxy-fuel" && !uses(s, "oxygen")
+	}},
 	{Tools, "clamps, wedges, dogs, levels, squares, tape, scriber, podger spanners, drifts", of(tasks.FitUp)},
 	{Tools, "mixing paddle, brushes, rollers, masking tape, rags in a tin, steel thermometer, hygrometer, wet film comb, film gauge", of(tasks.Coat)},
 	{Tools, "blast hoses, nozzles, dead-man handle, sheeting to catch the grit", func(_ *maker, s *expand.Step) bool {
