@@ -35,6 +35,9 @@ func (e *engine) ask(f fact, cur int32) int {
 // so that reasons see the bounds as they were. It gives the level to go back to; the clause is in
 // e.learnt, its first fact the one that will be raised. ok is false if the clash holds at level 0.
 func (e *engine) analyse() (level int32, ok bool) {
+	if e.log != nil {
+		e.log.clash()
+	}
 	cur := int32(0)
 	for _, f := range e.clash {
 		cur = max(cur, e.list[e.entry(f)].level)
@@ -156,8 +159,15 @@ func (e *engine) spread() int32 {
 func (e *engine) learn() bool {
 	level, ok := e.analyse()
 	if !ok {
+		if e.log != nil {
+			e.log.none()
+		}
 		e.dead = true
 		return false
+	}
+	id := int32(0)
+	if e.log != nil {
+		id = e.log.learnt(e.learnt)
 	}
 	n := e.spread()
 	for _, s := range e.asked {
@@ -169,12 +179,16 @@ func (e *engine) learn() bool {
 	f := e.learnt[0]
 	if len(e.learnt) == 1 {
 		if !e.raise(f.s, f.v, why{kind: whyRoot}) {
+			if e.log != nil {
+				e.log.none()
+			}
 			e.dead = true
 			return false
 		}
 		return true
 	}
 	ref := e.keep(e.learnt, n)
+	e.facts[ref-1].v = id
 	e.atoms.claim(e.learnt)
 	if !e.raise(f.s, f.v, why{kind: whyClause, id: ref}) {
 		e.dead = true

@@ -9,6 +9,7 @@ type arc struct {
 	w        int32
 	on       fact // condition; s < 0: always
 	how      curve
+	label    label // what it stands for in the problem
 }
 
 // curve is a monotone function between sides.
@@ -52,6 +53,7 @@ func (e *engine) join(from, to side, w int32, on fact) {
 
 func (e *engine) addArc(a arc) {
 	id := int32(len(e.arcs.all))
+	a.label = e.label
 	e.arcs.all = append(e.arcs.all, a)
 	if a.on.s < 0 && a.how == nil {
 		e.arcs.plain[a.from] = append(e.arcs.plain[a.from], plain{a.to, a.w, id})

@@ -7,7 +7,8 @@ import (
 
 // store keeps the clauses: each is a run of facts, at least one of which holds. Two facts of
 // each clause are watched: it is looked at only when one of them fails (Moskewicz et al. 2001).
-// The clause at ref has its header in facts[ref-2] and facts[ref-1].
+// The clause at ref has its header in facts[ref-2] and facts[ref-1]: size, levels, activity, and its
+// number in the log.
 type store struct {
 	facts []fact
 	refs  []int32 // the clauses in the order learnt
@@ -127,6 +128,9 @@ func (e *engine) reduce() {
 	for _, r := range order[:len(order)/2] {
 		if e.levels(r) > 2 && !locked[r] {
 			drop[r] = true
+			if e.log != nil {
+				e.log.drop(e.facts[r-1].v)
+			}
 			e.atoms.release(e.clause(r))
 		}
 	}

@@ -106,6 +106,7 @@ func (e *engine) behind(f fact) []fact {
 // member is tried: Needed says that a way was found to keep the others without it. each bounds the conflicts
 // of one such trial.
 func Contradiction(p *problem.Problem, each int64, o Options) []Limit {
+	o.Log = nil
 	m, ok := build(p, guarded)
 	if !ok {
 		return nil

@@ -14,7 +14,10 @@ type engine struct {
 	queue    []int32
 	done     int // trail entries propagated
 
-	clash []fact // facts that cannot hold together, after a failed raise
+	clash []fact  // facts that cannot hold together, after a failed raise
+	fell  why     // what says so, if a rule itself does; nobody if a raise has failed
+	log   *record // writes the refutation; nil: nobody wants it
+	label label   // what the arcs that are being added stand for
 	ticks int64
 
 	// scratch of the conflict analysis
@@ -34,7 +37,8 @@ type engine struct {
 	dead      bool                               // no solution at all under the root facts
 }
 
-// rule is a propagator: it raises sides from the bounds of several variables, and can say why.
+// rule is a propagator: it raises sides from the bounds of several variables, and can say why. A rule
+// that fills the clash itself says so in fell. For the log it is a witness, too.
 // With explain, out gets facts that held before entry idx and lead to f; w is what run gave
 // as the reason.
 type rule interface {
@@ -43,7 +47,7 @@ type rule interface {
 }
 
 func newEngine() *engine {
-	return &engine{atoms: newAtoms(), store: store{bump: 1}, proven: map[int64]int8{}}
+	return &engine{atoms: newAtoms(), store: store{bump: 1}, proven: map[int64]int8{}, fell: nobody}
 }
 
 // variable makes a variable and the lists that go by its sides.
@@ -80,6 +84,10 @@ func (e *engine) raise(s side, v int32, w why) bool {
 	}
 	if e.now[s^1] >= 1-v {
 		least := 1 - e.now[s^1] // the least value that is impossible
+		e.fell = nobody
+		if e.log != nil {
+			e.log.begin()
+		}
 		e.clash = e.reason(fact{s, least}, w, int32(len(e.list)), e.clash[:0])
 		e.clash = append(e.clash, fact{s ^ 1, 1 - least})
 		return false
@@ -91,6 +99,18 @@ func (e *engine) raise(s side, v int32, w why) bool {
 // reason gives the facts behind f, raised for w at entry idx.
 func (e *engine) reason(f fact, w why, idx int32, out []fact) []fact {
 	base := len(out)
+	out = e.because(f, w, idx, out)
+	if e.heard != nil {
+		e.heard(f, w, out[base:])
+	}
+	if e.log != nil {
+		e.log.note(idx, f, w, out[base:])
+	}
+	return out
+}
+
+// because is reason, of which nobody is told.
+func (e *engine) because(f fact, w why, idx int32, out []fact) []fact {
 	switch w.kind {
 	case whyClause:
 		for _, g := range e.clause(w.id) {
@@ -104,9 +124,6 @@ func (e *engine) reason(f fact, w why, idx int32, out []fact) []fact {
 		out = e.offReason(w.id, idx, out)
 	case whyRule:
 		out = e.rules[w.id].explain(e, f, w, idx, out)
-	}
-	if e.heard != nil {
-		e.heard(f, w, out[base:])
 	}
 	return out
 }

@@ -5,6 +5,8 @@
 package learn
 
 import (
+	"io"
+
 	"sailby/plan/problem"
 )
 
@@ -17,6 +19,7 @@ type Options struct {
 	Hint  []int                          // starts of a known plan, where the search begins; nil: none
 	Modes []int                          // its modes; nil: not known
 	Found func(starts []int, finish int) // called for each better plan; nil: not
+	Log   io.Writer                      // gets the refutation for plan/proof to replay; nil: nobody wants it
 }
 
 // Status says what is known at the end of a search.
@@ -41,6 +44,7 @@ type Result struct {
 	Bound     int    // no plan finishes before it; problem.Inf if there is none
 	Ticks     int64
 	Conflicts int64
+	LogErr    error // why Log is no good
 }
 
 // Kept is a fire watch after a piece of activity Act, kept by person Who.
@@ -53,38 +57,41 @@ const pollEvery = 100_000
 // is at the site), with named people. What the model leaves out can only make plans worse:
 // a bound and an Infeasible hold for the problem as it is, and Exact says whether the plan does.
 func Solve(p *problem.Problem, o Options) Result {
-	m, ok := build(p, named)
+	log := newRecord(o.Log)
+	m, ok := buildFor(p, named, log)
 	if !ok {
-		return none()
+		return log.close(none())
 	}
 	s := &search{model: m, opt: o, people: !m.plain}
 	r := s.minimise()
 	r.Exact = m.exact()
-	return r
+	return log.close(r)
 }
 
 // Relax looks for the earliest finish with who does what left out: of a set of people who can do
 // some work only their number counts, and every activity takes the kindest of its timings. Its Bound
 // holds for the problem, its Starts are no plan.
 func Relax(p *problem.Problem, o Options) Result {
-	m, ok := build(p, relaxed)
+	log := newRecord(o.Log)
+	m, ok := buildFor(p, relaxed, log)
 	if !ok {
-		return none()
+		return log.close(none())
 	}
 	s := &search{model: m, opt: o}
-	return s.minimise()
+	return log.close(s.minimise())
 }
 
 // Within asks the same of one finish only: Infeasible is a proof that no plan finishes by then,
 // Feasible that the relaxed problem has a solution that does.
 func Within(p *problem.Problem, finish int, o Options) Result {
-	m, ok := build(p, relaxed)
+	log := newRecord(o.Log)
+	m, ok := buildFor(p, relaxed, log)
 	if !ok || finish < 0 {
-		return none()
+		return log.close(none())
 	}
 	o.Best = min(finish, p.End) + 1
 	s := &search{model: m, opt: o, once: true}
-	return s.minimise()
+	return log.close(s.minimise())
 }
 
 func none() Result {

@@ -15,6 +15,7 @@ type model struct {
 	length  []int32 // the finish is the value of side finish plus this
 	end     side    // the finish of the whole
 	lags    []lag   // every lag of fixed length between two starts
+	forced  []pair  // the pairs whose order the lags decide, in the order decided
 	team    []int   // by activity: its workface, for watches that may be shared
 	plain   bool    // every activity has one fixed length and one mode
 	kept    []Kept  // the fire watches of the last leaf
@@ -41,6 +42,8 @@ type act struct {
 type lag struct {
 	i, j int
 	lag  int32
+	link int  // which says so
+	back bool // by its longest wait
 }
 
 // latest is the longest horizon: above it minutes would not leave room for sums.
@@ -58,41 +61,56 @@ const (
 )
 
 // build makes the model; ok is false if the problem contradicts itself at sight.
-func build(p *problem.Problem, kind kind) (*model, bool) {
+func build(p *problem.Problem, kind kind) (*model, bool) { return buildFor(p, kind, nil) }
+
+// buildFor is build with the log told, unless it is nil.
+func buildFor(p *problem.Problem, kind kind, log *record) (*model, bool) {
 	m := &model{engine: newEngine(), p: p, plain: kind != guarded, guarded: kind == guarded, grids: map[*problem.Timing]*grid{}, steady: map[*problem.Timing]spans{}}
-	if p.End < 0 || p.End > latest {
-		return nil, false
+	if log != nil {
+		log.listen(m)
 	}
+	ok := p.End >= 0 && p.End <= latest && m.fill(kind)
+	if !ok && log != nil {
+		log.none()
+	}
+	return m, ok
+}
+
+// fill puts everything into the model.
+func (m *model) fill(kind kind) bool {
+	p := m.p
 	if m.guarded {
 		m.zero = m.variable(0, 0)
 	}
 	for i := range p.Acts {
 		if !m.activity(i) {
-			return nil, false
+			return false
 		}
 	}
 	m.workfaces()
 	m.end = m.variable(0, int32(p.End))
+	m.called(m.end, "e")
 	for i := range m.acts {
 		m.timed(i)
 	}
 	m.aim()
 	for i := range p.Links {
-		if !m.wait(&p.Links[i], m.guard(ByLink, i)) {
-			return nil, false
+		m.label = label{forLink, i, 0}
+		if !m.wait(i, m.guard(ByLink, i)) {
+			return false
 		}
 	}
 	if !m.guarded && !m.orders() || !m.apart() || !m.rules() {
-		return nil, false
+		return false
 	}
 	if !m.resources() {
-		return nil, false
+		return false
 	}
 	if kind == named {
-		return m, m.crews()
+		return m.crews()
 	}
 	m.groups()
-	return m, true
+	return true
 }
 
 // activity makes the variables of activity i: its start, and its finish unless that is the
@@ -100,6 +118,7 @@ func build(p *problem.Problem, kind kind) (*model, bool) {
 func (m *model) activity(i int) bool {
 	a := &m.p.Acts[i]
 	if len(a.Modes) == 0 {
+		m.never("shut %d", i)
 		return false
 	}
 	x := act{times: a.Timings()}
@@ -140,9 +159,11 @@ func (m *model) activity(i int) bool {
 		return false
 	}
 	s := m.variable(int32(from), int32(upTo-d))
+	m.called(s, "s%d", i)
 	m.start, m.finish, m.length = append(m.start, s), append(m.finish, s), append(m.length, int32(d))
 	if !fixed {
 		m.finish[i] = m.variable(int32(from), int32(upTo))
+		m.called(m.finish[i], "f%d", i)
 	}
 	if m.guarded {
 		m.limit(i, last)
@@ -156,6 +177,7 @@ func (m *model) timed(i int) {
 		return
 	}
 	on := m.guard(ByHours, i)
+	m.label = label{forHours, i, 0}
 	m.tie(i, m.acts[i].grids, on)
 	if on.s >= 0 { // without its hours it still takes its minutes
 		least := m.acts[i].times[0].Length()
@@ -182,6 +204,7 @@ func (m *model) aim() {
 	}
 	for i := range m.p.Acts {
 		if m.p.Acts[i].Site || !site {
+			m.label = label{forEnd, i, 0}
 			m.join(m.finish[i], m.end, m.length[i]+m.acts[i].watch, always)
 		}
 	}

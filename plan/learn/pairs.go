@@ -17,16 +17,19 @@ func (m *model) orders() bool {
 			w.put(a.i, a.j, a.lag)
 		}
 		if !w.close() {
+			m.circle()
 			return false
 		}
 		before := append([]int32(nil), w.lag...)
 		var ok bool
-		if open, ok = w.force(pairs, m.length); !ok {
+		if open, ok = w.force(pairs, m.length, &m.forced); !ok {
+			m.circle()
 			return false
 		}
 		for _, p := range pairs {
 			for _, q := range []pair{p, {p.b, p.a}} {
 				if v := w.get(q.a, q.b); v >= m.length[q.a] && before[q.a*n+q.b] < m.length[q.a] {
+					m.label = label{forForced, q.a, q.b}
 					m.join(m.start[q.a], m.start[q.b], m.length[q.a], always)
 				}
 			}
@@ -37,6 +40,7 @@ func (m *model) orders() bool {
 	}
 	for _, p := range open {
 		x := m.variable(0, 1)
+		m.told(x, "order %d %d", p.a, p.b)
 		m.join(m.start[p.a], m.start[p.b], m.length[p.a], fact{x, 1})
 		m.join(m.start[p.b], m.start[p.a], m.length[p.b], fact{x ^ 1, 0})
 	}
@@ -78,9 +82,9 @@ func (m *model) crowded() []pair {
 }
 
 // force decides the pairs whose order the network leaves no choice in, until nothing changes: if
-// b cannot be over before a starts, a goes first. Those still open are given back; false: there is
-// no plan. O(rounds x pairs + forced x n^2).
-func (w *network) force(pairs []pair, length []int32) (open []pair, ok bool) {
+// b cannot be over before a starts, a goes first. Those still open are given back, those decided are
+// added to forced, the one that goes first first; false: there is no plan. O(rounds x pairs + forced x n^2).
+func (w *network) force(pairs []pair, length []int32, forced *[]pair) (open []pair, ok bool) {
 	for again := true; again; {
 		again = false
 		open = nil
@@ -90,11 +94,14 @@ func (w *network) force(pairs []pair, length []int32) (open []pair, ok bool) {
 			case ab >= length[p.a] || ba >= length[p.b]:
 				continue // in order already
 			case ab > -length[p.b] && ba > -length[p.a]:
+				*forced = append(*forced, p)
 				return nil, false
 			case ab > -length[p.b]:
+				*forced = append(*forced, p)
 				ok = w.add(p.a, p.b, length[p.a])
 				again = true
 			case ba > -length[p.a]:
+				*forced = append(*forced, pair{p.b, p.a})
 				ok = w.add(p.b, p.a, length[p.b])
 				again = true
 			default:
@@ -118,6 +125,7 @@ func (m *model) apart() bool {
 			continue
 		}
 		x := m.variable(0, 1)
+		m.told(x, "pair %d", k)
 		first, second := fact{x, 1}, fact{x ^ 1, 0}
 		if on := m.guard(ByPair, k); on.s >= 0 { // neither order, if the pair is left out
 			second = fact{m.variable(0, 1), 1}
@@ -144,22 +152,26 @@ func (m *model) rules() bool {
 		o := &m.p.Orders[k]
 		guard := m.guard(ByOrder, k)
 		if len(o.Choices) == 0 && guard.s < 0 {
+			m.never("rule %d 0", k)
 			return false
 		}
 		if len(o.Choices) == 1 {
+			m.label = label{forRule, k, 0}
 			m.choice(o.Choices[0], guard)
 			continue
 		}
 		var any []fact
-		for _, c := range o.Choices {
+		for n, c := range o.Choices {
 			on := fact{m.variable(0, 1), 1}
+			m.told(on.s, "choice %d %d", k, n)
+			m.label = label{forRule, k, n}
 			any = append(any, on)
 			m.choice(c, on)
 		}
 		if guard.s >= 0 {
 			any = append(any, guard.not())
 		}
-		if !m.add(any) {
+		if !m.axiom(any, "some %d", k) {
 			return false
 		}
 	}

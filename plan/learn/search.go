@@ -127,6 +127,10 @@ func (s *search) take() bool {
 // ok settles the root.
 func (s *search) ok() bool {
 	if !s.settle() {
+		if s.log != nil {
+			s.log.clash()
+			s.log.none()
+		}
 		s.dead = true
 	}
 	return !s.dead
@@ -134,7 +138,13 @@ func (s *search) ok() bool {
 
 // tighten asks for finishes before value; false if there are none.
 func (s *search) tighten() bool {
+	if s.log != nil && int(s.value) <= s.p.End {
+		s.log.line("until %d", s.value-1)
+	}
 	if !s.raise(s.end^1, 1-s.value, why{kind: whyRoot}) {
+		if s.log != nil {
+			s.log.none()
+		}
 		s.dead = true
 	}
 	return !s.dead

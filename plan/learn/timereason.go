@@ -58,3 +58,20 @@ func (c *timetable) covers(e *engine, t, skip, idx int32, out []fact) []fact {
 	}
 	return out
 }
+
+// witness gives the point that the facts are about.
+func (c *timetable) witness(f fact, w why, behind []fact) (from, to int32) {
+	t := w.at
+	if f.s >= 0 {
+		t = c.users[w.who].point(f, behind[0])
+	}
+	return t, t + 1
+}
+
+// point gives the minute that the first fact behind f, a bound of user u, is about.
+func (u *user) point(f, first fact) int32 {
+	if f.s == u.start {
+		return first.v + u.length - 1 // it finishes after it
+	}
+	return -first.v // it starts at it or before
+}

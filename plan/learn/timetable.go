@@ -139,6 +139,7 @@ func (c *timetable) run(e *engine) bool {
 			k++
 		}
 		t := c.from[k] + (c.from[k+1]-c.from[k])/2
+		e.fell = why{whyRule, c.id, t, -1}
 		e.clash = c.covers(e, t, -1, int32(len(e.list)), e.clash[:0])
 		return false
 	}

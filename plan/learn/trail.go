@@ -25,6 +25,9 @@ const (
 	whyRule                 // propagator id, with its own note at
 )
 
+// nobody is no reason.
+var nobody = why{kind: whyRule, id: -1}
+
 // why is the reason for a raise; the facts behind it are worked out only when they are asked for.
 type why struct {
 	kind uint8

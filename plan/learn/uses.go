@@ -17,6 +17,7 @@ func (m *model) resources() bool {
 		for i := range m.p.Acts {
 			for _, w := range m.uses(i, k) {
 				if w.amount > clip(m.p.Res[k].Capacity) && !m.acts[i].empty && !m.guarded {
+					m.never("excess %d %d", k, i)
 					return false
 				}
 				calm = calm && w.mask == nil && w.team == 0
@@ -30,8 +31,10 @@ func (m *model) resources() bool {
 		switch {
 		case len(us) == 0:
 		case calm:
+			m.titled("use %d", k)
 			newTimetable(m.engine, capacity, us)
 		default:
+			m.titled("use %d", k)
 			newWorktable(m.engine, capacity, ws)
 		}
 	}
@@ -159,6 +162,7 @@ func (m *model) group(g []int) {
 			m.guards[len(m.guards)-1].People = g
 		}
 		m.only(ws, on)
+		m.titledCrew(g)
 		newWorktable(m.engine, int32(len(g)), ws)
 	}
 }

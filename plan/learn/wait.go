@@ -7,7 +7,8 @@ import (
 
 // wait makes the arcs of a link: its minimum one way, its maximum the other. Waits in clock time
 // are arcs of fixed length, the others curves. It gives false if the link cannot hold.
-func (m *model) wait(l *problem.Link, on fact) bool {
+func (m *model) wait(k int, on fact) bool {
+	l := &m.p.Links[k]
 	to, b := m.endOf(l.To, l.ToEnd)
 	if l.From < 0 {
 		return m.fromStart(l, to, b, on)
@@ -22,7 +23,7 @@ func (m *model) wait(l *problem.Link, on fact) bool {
 		w := clip(l.Min) + a - b
 		m.join(from, to, w, on)
 		if whole {
-			m.lags = append(m.lags, lag{l.From, l.To, w})
+			m.lags = append(m.lags, lag{l.From, l.To, w, k, false})
 		}
 	}
 	switch {
@@ -38,7 +39,7 @@ func (m *model) wait(l *problem.Link, on fact) bool {
 		w := -clip(l.Max) + b - a
 		m.join(to, from, w, on)
 		if whole {
-			m.lags = append(m.lags, lag{l.To, l.From, w})
+			m.lags = append(m.lags, lag{l.To, l.From, w, k, true})
 		}
 	}
 	return true
@@ -56,8 +57,8 @@ func (m *model) fromStart(l *problem.Link, to side, b int32, on fact) bool {
 		}
 		return true
 	}
-	if l.Min > expand.NoMin && !m.raise(to, clip(l.Earliest(0))-b, why{kind: whyRoot}) {
+	if l.Min > expand.NoMin && !m.given(fact{to, clip(l.Earliest(0)) - b}) {
 		return false
 	}
-	return last >= problem.Inf || m.raise(to^1, b-clip(last), why{kind: whyRoot})
+	return last >= problem.Inf || m.given(fact{to ^ 1, b - clip(last)})
 }

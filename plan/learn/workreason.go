@@ -89,3 +89,14 @@ func (c *worktable) shared(team int, k, last int32) bool {
 	}
 	return false
 }
+
+// witness gives the minute that the facts are about.
+func (c *worktable) witness(f fact, w why, behind []fact) (from, to int32) {
+	t := w.at
+	if f.s >= 0 {
+		if u := &c.all[w.who]; f.s == u.start || f.s == u.finish^1 {
+			t = u.point(f, behind[0])
+		}
+	}
+	return t, t + 1
+}

@@ -80,6 +80,7 @@ func (c *worktable) run(e *engine) bool {
 		for c.level[k] <= c.capacity {
 			k++
 		}
+		e.fell = why{whyRule, c.id, c.from[k], -1}
 		e.clash = c.covers(e, c.from[k], -1, int32(len(e.list)), e.clash[:0])
 		return false
 	}

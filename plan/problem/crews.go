@@ -112,10 +112,12 @@ func (m *crewMaker) modes(s *expand.Step, a *Act) ([]Mode, string) {
 		room = room || mode.Time.cal != nil && len(mode.Time.cal.spans) > 0
 		if mode.Time.Start(0) < Inf {
 			out = append(out, mode)
+		} else {
+			a.Tried = append(a.Tried, mode.Time)
 		}
 	}
 	if s.ChangeHands {
-		out = append(out, m.relays(s, teams, base, access)...)
+		out = append(out, m.relays(s, a, teams, base, access)...)
 	}
 	if a.Cut = cut || len(out) >= MaxModes; a.Cut { // anybody may be in it, for all that a bound may say
 		a.Times = []*Timing{Worked(m.shift(base), m.shift(base.Joined(Meal, access)), Rules{Work: s.Working, SetUp: s.SetUp,
@@ -282,18 +284,20 @@ func (m *crewMaker) together(s *expand.Step, crew []int, base hours.Set) hours.S
 }
 
 // relays lists the modes in which two teams take turns; they may have members in common.
-func (m *crewMaker) relays(s *expand.Step, teams []team, base, access hours.Set) []Mode {
+func (m *crewMaker) relays(s *expand.Step, a *Act, teams []team, base, access hours.Set) []Mode {
 	var out []Mode
-	for i, a := range teams {
-		for j, b := range teams {
-			if i == j || len(out) >= MaxModes || m.classes(a.crew) == m.classes(b.crew) {
+	for i, first := range teams {
+		for j, second := range teams {
+			if i == j || len(out) >= MaxModes || m.classes(first.crew) == m.classes(second.crew) {
 				continue
 			}
-			mode := Mode{Crew: a.crew, Watch: a.watch, Relief: b.crew}
-			mode.Keepers, mode.Stay = m.keepers(s, append(append([]int(nil), a.crew...), b.crew...))
+			mode := Mode{Crew: first.crew, Watch: first.watch, Relief: second.crew}
+			mode.Keepers, mode.Stay = m.keepers(s, append(append([]int(nil), first.crew...), second.crew...))
 			mode.Time = m.timing(s, base, access, &mode)
 			if mode.Time.Start(0) < Inf {
 				out = append(out, mode)
+			} else {
+				a.Tried = append(a.Tried, mode.Time)
 			}
 		}
 	}

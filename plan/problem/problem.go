@@ -32,6 +32,7 @@ type Act struct {
 	Step      *expand.Step // nil for an open instance
 	Modes     []Mode       // at least one, unless Hopeless says why there is none
 	Times     []*Timing    // the distinct timings of Modes
+	Tried     []*Timing    // of teams for whom no start is possible
 	Hopeless  string       // why no mode exists: "no opening is long enough", "nobody has the ticket"
 	Cut       bool         // there are more choices of people than Modes holds: bounds must not rest on who is in them
 	Uses      []Use
