@@ -32,6 +32,7 @@ type row struct {
 	wrong      string // what is wrong with the answer, "" if nothing is
 	conflicts  int64
 	ticks      int64
+	replay     *replay // of its proof; nil: not asked for
 }
 
 var columns = []string{"instance", "activities", "status", "makespan", "bound", "best_known", "first_s", "best_s", "proof_s", "checked"}
@@ -80,7 +81,12 @@ func solveInstance(ctx context.Context, path string, o settings, f *folder) (*ro
 		r.known = &k
 	}
 	since := func() float64 { return time.Since(begin).Seconds() }
+	log, err := openLog(o.proofs, in.Name)
+	if err != nil {
+		return nil, err
+	}
 	got := learn.Solve(in.Problem(), learn.Options{
+		Log:  log.writer(),
 		Stop: func() bool { return ctx.Err() != nil || time.Since(begin) > o.limit },
 		Found: func([]int, int) {
 			r.best = since()
@@ -93,6 +99,9 @@ func solveInstance(ctx context.Context, path string, o settings, f *folder) (*ro
 	r.status, r.finish, r.bound = got.Status, got.Finish, got.Bound
 	r.conflicts, r.ticks = got.Conflicts, got.Ticks
 	r.judge(in, got.Starts)
+	if r.replay, err = log.replay(in.Problem(), got); err != nil && r.wrong == "" {
+		r.wrong = err.Error()
+	}
 	return r, nil
 }
 
@@ -166,7 +175,7 @@ func benchFolder(ctx context.Context, f *folder, o settings, talk io.Writer) ([]
 				rows[i], errs[i] = r, err
 				if err == nil && o.verbose {
 					say.Lock()
-					fmt.Fprintf(talk, "%s conflicts=%d ticks=%dk %s\n", strings.Join(r.fields(), ","), r.conflicts, r.ticks/1000, r.wrong)
+					fmt.Fprintf(talk, "%s conflicts=%d ticks=%dk %s%s\n", strings.Join(r.fields(), ","), r.conflicts, r.ticks/1000, r.replay, r.wrong)
 					say.Unlock()
 				}
 			}
@@ -222,6 +231,7 @@ func summary(out io.Writer, name string, rows []*row) int {
 	}
 	fmt.Fprintf(out, "%-8s %3d instances: %d settled (%d without a plan), %d with a plan, %d with nothing; wrong %d; mean gap to best known %.2f %%; slowest settled %.1f s\n",
 		name, len(rows), proved, none, plans, len(rows)-plans-none, wrong, mean, slowest)
+	tellReplays(out, rows)
 	return wrong
 }
 

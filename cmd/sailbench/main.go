@@ -31,6 +31,7 @@ type settings struct {
 	offset  int
 	verbose bool
 	random  randomJobs
+	proofs  string
 }
 
 // run reads the flags, solves the instances and prints the rows and the summary. A wrong answer
@@ -54,6 +55,7 @@ func run(ctx context.Context, args []string, out, talk io.Writer) error {
 	fl.Uint64Var(&o.random.seed, "seed", 1, "seed of the first random job; the next have the next numbers")
 	fl.StringVar(&o.random.class, "class", "", "one class of random jobs: slack, snug, tight or over; else all in turn")
 	fl.BoolVar(&o.random.lattice, "lattice", false, "random jobs in which every time is a half hour")
+	fl.StringVar(&o.proofs, "proof", "", "write the proof of each instance to this folder, and replay it")
 	if err := fl.Parse(args); err != nil {
 		return err
 	}

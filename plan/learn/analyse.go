@@ -120,7 +120,7 @@ func (e *engine) follows(f fact, i int32, depth int) bool {
 		return v > 0
 	}
 	e.proven[key] = -1
-	base := len(e.scratch)
+	base, noted := len(e.scratch), e.log.size()
 	e.scratch = e.reason(f, r.why, i, e.scratch)
 	yes := true
 	for k := base; k < len(e.scratch) && yes; k++ {
@@ -133,6 +133,8 @@ func (e *engine) follows(f fact, i int32, depth int) bool {
 	e.scratch = e.scratch[:base]
 	if yes {
 		e.proven[key] = 1
+	} else {
+		e.log.void(noted)
 	}
 	return yes
 }

@@ -193,6 +193,20 @@ func (r *record) note(at int32, f fact, w why, behind []fact) {
 	r.notes = append(r.notes, note{at, f, w, n, len(r.facts)})
 }
 
+// size gives the number of reasons noted; void takes one back that has led nowhere. Both may be asked of no log.
+func (r *record) size() int {
+	if r == nil {
+		return 0
+	}
+	return len(r.notes)
+}
+
+func (r *record) void(k int) {
+	if r != nil && k < len(r.notes) {
+		r.notes[k].at = -1
+	}
+}
+
 // learnt writes a clause with the reasons behind it and gives its number.
 func (r *record) learnt(clause []fact) int32 {
 	against := make([]fact, len(clause))
@@ -246,6 +260,9 @@ func (r *record) flush(clash, given []fact) {
 	wish(clash)
 	kept := r.notes[:0]
 	for _, n := range r.notes {
+		if n.at < 0 {
+			break // void
+		}
 		if n.from > 0 { // the first says what the contradiction is
 			if r.want[n.f.s] == -far || r.want[n.f.s] > n.f.v {
 				continue
@@ -264,13 +281,13 @@ func (r *record) flush(clash, given []fact) {
 			r.want[f.s] = -far
 			r.root(f)
 		}
+		r.prepare(n.why)
 	}
 	for _, f := range given {
 		r.have[f.s] = -far
 	}
 	for k := len(kept) - 1; k >= 0; k-- {
 		n := kept[k]
-		r.prepare(n.why)
 		r.reason(n.f, n.why, r.facts[n.from:n.to])
 	}
 	r.begin()

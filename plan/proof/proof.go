@@ -18,15 +18,12 @@
 //	var x8 pair 2           the same for the activities of pair 2, tails included
 //	var x9 choice 3 0       x9 may be 1 only if choice 0 of order rule 3 holds; in some plan's way of setting
 //	                        these, one is 1
-//	var x10 mode 5 1        x10 is 1 where activity 5 is done in mode 1
 //	some 3 12               clause 12: a choice of order rule 3 holds
-//	one 5 13                clause 13: a mode of activity 5 holds
 //
 // A lemma says that its facts cannot all hold, for a reason that is verified at once:
 //
 //	link 2 : s0>=4 s1<=8    the waits of link 2
 //	hours 5 : s5>=4 f5<=9   no possible start of activity 5 lies, and leads to a finish, within these
-//	hours 5 1 : x10>=1 ...  the same in mode 1
 //	end 5 : f5>=50 e<=49    the whole is not over before activity 5
 //	apart x7 : x7>=1 ...    what x7 means
 //	rule 3 0 : x9>=1 ...    choice 0 of order rule 3
