@@ -36,7 +36,7 @@ var mayImport = map[string][]string{
 	"plan/solve":    {"plan", "plan/network", "plan/problem", "tasks", "tasks/expand"},
 	"plan/learn":    {"plan/problem", "plan/network", "tasks", "tasks/expand"},
 	"plan/instance": {"plan", "plan/problem", "plan/check", "tasks", "tasks/expand"},
-	"plan/proof":    {"plan/problem", "tasks", "tasks/expand"}, // never network, solve, learn
+	"plan/proof":    {"plan/problem", "tasks", "tasks/expand"},                     // never network, solve, learn
 	"plan/check":    {"plan", "tasks", "tasks/expand", "tasks/lift", "tasks/site"}, // never problem, network, solve, learn
 	"plan/settle":   {"plan", "plan/check", "plan/network", "plan/problem", "plan/solve", "plan/learn", "plan/proof", "tasks", "tasks/expand"},
 	"plan/mutants":  {},
