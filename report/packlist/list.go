@@ -72,11 +72,13 @@ type List struct {
 	Mass     float64  // kg, as far as known
 	Unknown  []string // things without a mass
 	Vehicles []Vehicle
-	OK       bool     // everything has a vehicle; true without vehicles
-	Reason   string   // of the load plan
-	Nearest  string   // where it does not fit: what would
-	Proved   bool     // where it does not fit: no split can
-	Flags    []string // carriage, driving and bands: flagged, never decided
+	OK       bool      // everything has a vehicle; true without vehicles
+	Reason   string    // of the load plan
+	Nearest  string    // where it does not fit: what would
+	Proved   bool      // where it does not fit: no split can
+	Split    []Vehicle // where it does not fit: what goes on which run, with as many more runs as that takes
+	Runs     string    // what the further runs of Vehicles or Split ask for, in hours; empty is one run
+	Flags    []string  // carriage, driving and bands: flagged, never decided
 	Notes    []string
 }
 
@@ -87,6 +89,7 @@ type maker struct {
 	job   *tasks.Job
 	items []Item
 	list  *List
+	days  []hours.Minute // of the ranks, from 1
 }
 
 // Make works out what to take for an answer's plan; without a plan the days are left out. An

@@ -5,7 +5,6 @@ import (
 	"fmt"
 	"math"
 	"slices"
-	"strings"
 
 	"sailby/tasks"
 	"sailby/tasks/hours"
@@ -67,37 +66,46 @@ func (m *maker) vehicles() {
 	m.list.OK, m.list.Reason, m.list.Nearest, m.list.Proved = p.OK, p.Reason, p.Nearest, p.Proved
 	m.list.Notes = append(m.list.Notes, p.Warnings...)
 	if !p.OK {
+		m.inMoreRuns(goods, list)
 		return
 	}
 	for _, breach := range lift.CheckLoads(goods, list, p.Trips) {
 		m.list.OK = false
 		m.list.Flags = append(m.list.Flags, "the load plan does not hold: "+breach)
 	}
-	runs := false
+	m.list.Vehicles = m.stow(goods, p.Trips)
 	for _, t := range p.Trips {
 		v := m.job.Vehicles[t.Vehicle]
-		out := Vehicle{Name: v.Name, Run: t.Number, Mass: roundUp(t.Mass), Payload: math.Floor(t.Payload), Nose: t.Nose}
-		runs = runs || t.Number > 1
 		where := v.Name
 		if v.Trips > 1 {
 			where = fmt.Sprintf("%s, run %d", v.Name, t.Number)
 		}
 		for _, s := range t.Stowed {
-			g := goods[s.Goods]
-			out.Goods = append(out.Goods, Stowed{What: g.Name, Mass: g.Mass, X: s.X, Y: s.Y, Z: s.Z, Loose: s.Loose})
 			from[s.Goods](where)
-			if g.Mass >= heavyGoods && s.On < 0 {
-				out.Straps = append(out.Straps, m.straps(g, v))
-			}
 		}
 		for _, f := range lift.Carriage(goods, t, m.job.Carriage) {
 			m.flag(v.Name + ": " + f)
 		}
-		m.list.Vehicles = append(m.list.Vehicles, out)
 	}
-	if runs {
-		m.list.Notes = append(m.list.Notes, "what goes on a second run is at the site only after it: the plan has one arrival, so see that nothing of it is needed before")
+	m.costOfRuns(goods, p.Trips)
+}
+
+// stow writes runs of vehicles out, with the straps of what is heavy.
+func (m *maker) stow(goods []lift.Goods, trips []lift.Trip) []Vehicle {
+	var list []Vehicle
+	for _, t := range trips {
+		v := m.job.Vehicles[t.Vehicle]
+		out := Vehicle{Name: v.Name, Run: t.Number, Mass: roundUp(t.Mass), Payload: math.Floor(t.Payload), Nose: t.Nose}
+		for _, s := range t.Stowed {
+			g := goods[s.Goods]
+			out.Goods = append(out.Goods, Stowed{What: g.Name, Mass: g.Mass, X: s.X, Y: s.Y, Z: s.Z, Loose: s.Loose})
+			if g.Mass >= heavyGoods && s.On < 0 {
+				out.Straps = append(out.Straps, m.straps(g, v))
+			}
+		}
+		list = append(list, out)
 	}
+	return list
 }
 
 func (m *maker) flag(s string) {
@@ -169,6 +177,7 @@ func (m *maker) ranks() map[hours.Minute]int {
 		}
 	}
 	slices.SortFunc(days, func(a, b hours.Minute) int { return cmp.Compare(a, b) })
+	m.days = days
 	out := map[hours.Minute]int{0: len(days) + 1}
 	for i, d := range days {
 		out[d] = i + 1
@@ -187,49 +196,6 @@ func (m *maker) straps(g lift.Goods, v *tasks.Vehicle) Straps {
 		return Straps{What: g.Name, Notes: []string{"straps not counted: " + err.Error()}}
 	}
 	return Straps{What: g.Name, Count: res.Straps, Governs: res.Governs, Edition: res.Edition, Notes: res.Warnings}
-}
-
-// driving flags what the rules of the job file say of the drivers' day on the way out.
-func (m *maker) driving() {
-	if m.w.Trip == nil || len(m.job.Driving) == 0 {
-		return
-	}
-	var d lift.Duty
-	run := 0.0
-	for i, l := range m.w.Trip.Out {
-		span := float64(l.To - l.From)
-		if strings.HasPrefix(l.What, "drive") {
-			d.Drive += span
-			run += span
-			d.LongestDrive = max(d.LongestDrive, run)
-		} else if span >= 45 {
-			run = 0
-		}
-		if i == 0 {
-			d.OnDuty = float64(m.w.Trip.Out[len(m.w.Trip.Out)-1].To - l.From)
-		}
-	}
-	for _, v := range m.job.Vehicles {
-		if v.TowedBy != "" {
-			continue
-		}
-		one := d
-		one.Driver, one.Gross, one.OwnWorkTools = v.Driver, v.Gross, v.OwnTools
-		if one.Driver == "" {
-			one.Driver = "the driver of " + v.Name
-		}
-		if one.Gross == 0 {
-			one.Gross = v.Empty + v.Payload
-		}
-		for _, t := range m.job.Vehicles {
-			if t.TowedBy == v.Name {
-				one.Gross += max(t.Gross, t.Empty+t.Payload)
-			}
-		}
-		for _, f := range lift.Driving(one, m.job.Driving) {
-			m.flag(f + "; check it, it is not decided here")
-		}
-	}
 }
 
 // bands finds the ferry's band for each vehicle, with its trailer.

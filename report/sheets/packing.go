@@ -3,6 +3,7 @@ package sheets
 import (
 	"fmt"
 	"math"
+	"slices"
 	"strings"
 
 	"sailby/report/agenda"
@@ -163,7 +164,10 @@ func (k *pack) vehicleLoads(l *packlist.List) {
 	if len(l.Vehicles) > 0 || l.Reason != "" {
 		p.heading("Vehicles", 3*lineHeight(body))
 		p.para(joined("; ", l.Reason, prefixed("would do: ", l.Nearest)), body, !l.OK)
-		for _, v := range l.Vehicles {
+		if l.Runs != "" {
+			p.para(l.Runs, body, true)
+		}
+		for _, v := range append(slices.Clone(l.Vehicles), l.Split...) {
 			p.para(v.Line()+", in the order of loading:", body, true)
 			for n, g := range v.Goods {
 				at := "in a corner"

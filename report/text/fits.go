@@ -7,6 +7,7 @@ import (
 
 	"sailby/plan"
 	"sailby/report/agenda"
+	"sailby/report/packlist"
 	"sailby/tasks/hours"
 	"sailby/tasks/quantity"
 )
@@ -178,11 +179,15 @@ func even(low bool) string {
 }
 
 func (p *page) notes(r *plan.Report) {
-	if len(r.Job.Notes) == 0 {
+	load := packlist.Make(r.Likely).Verdict()
+	if len(r.Job.Notes)+len(load) == 0 {
 		return
 	}
 	p.gap()
 	p.raw("Notes")
+	for _, line := range load {
+		p.para("  - ", line)
+	}
 	for _, n := range r.Job.Notes {
 		p.para("  - ", n.Text+inFile(agenda.At(n.Pos)))
 	}

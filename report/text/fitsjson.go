@@ -6,6 +6,7 @@ import (
 	"sailby/plan"
 	"sailby/report/agenda"
 	"sailby/report/clean"
+	"sailby/report/packlist"
 	"sailby/tasks/expand"
 )
 
@@ -73,6 +74,9 @@ func FitsJSON(w io.Writer, r *plan.Report) error {
 				f.Orders = append(f.Orders, noteForm{clean.Line(o.Text), at(o.Pos)})
 			}
 		}
+	}
+	for _, line := range packlist.Make(r.Likely).Verdict() {
+		f.Notes = append(f.Notes, noteForm{Text: clean.Line(line)})
 	}
 	for _, n := range r.Job.Notes {
 		f.Notes = append(f.Notes, noteForm{clean.Line(n.Text), at(n.Pos)})

@@ -3,6 +3,7 @@ package text
 import (
 	"fmt"
 	"io"
+	"slices"
 	"strings"
 	"time"
 
@@ -103,7 +104,10 @@ func (p *page) boxesAndVehicles(l *packlist.List) {
 	if l.Nearest != "" {
 		p.para("  ", "would do: "+l.Nearest)
 	}
-	for _, v := range l.Vehicles {
+	if l.Runs != "" {
+		p.para("  ", l.Runs)
+	}
+	for _, v := range append(slices.Clone(l.Vehicles), l.Split...) {
 		p.para("  ", v.Line())
 		for n, g := range v.Goods {
 			at := "in a corner"
@@ -182,6 +186,8 @@ type packForm struct {
 	Nearest  string        `json:"would_do,omitempty"`
 	Proved   bool          `json:"proved,omitempty"`
 	Vehicles []packVehicle `json:"vehicles"`
+	Split    []packVehicle `json:"split,omitempty"`
+	Runs     string        `json:"runs,omitempty"`
 	Flags    []string      `json:"flags"`
 	Notes    []string      `json:"notes"`
 	Care     string        `json:"care"`
@@ -199,7 +205,13 @@ func PackJSON(w io.Writer, r *plan.Report, o Options) error {
 	for _, b := range l.Boxes {
 		f.Boxes = append(f.Boxes, packBox{clean.Line(b.Name), b.Mass, lines(b.Items), b.Where})
 	}
-	for _, v := range l.Vehicles {
+	f.Runs, f.Vehicles, f.Split = clean.Line(l.Runs), vehicleForms(l.Vehicles), vehicleForms(l.Split)
+	return writeJSON(w, f)
+}
+
+func vehicleForms(list []packlist.Vehicle) []packVehicle {
+	all := []packVehicle{}
+	for _, v := range list {
 		out := packVehicle{clean.Line(v.Name), v.Run, v.Mass, v.Payload, v.Nose, []packGoods{}, []string{}}
 		for _, g := range v.Goods {
 			out.Goods = append(out.Goods, packGoods{clean.Line(g.What), g.Mass, g.X, g.Y, g.Z, g.Loose})
@@ -207,9 +219,9 @@ func PackJSON(w io.Writer, r *plan.Report, o Options) error {
 		for _, s := range v.Straps {
 			out.Straps = append(out.Straps, clean.Line(s.Line()))
 		}
-		f.Vehicles = append(f.Vehicles, out)
+		all = append(all, out)
 	}
-	return writeJSON(w, f)
+	return all
 }
 
 // PackCSV is Pack as a table.

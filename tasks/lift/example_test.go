@@ -110,8 +110,8 @@ func ExampleLoadVehicles() {
 		fmt.Printf("trip %d: %.0f of %.0f kg\n", t.Number, t.Mass, t.Payload)
 	}
 	// Output:
-	// false 1040 kg of goods is 40 kg over the 1000 kg that all trips take
-	// try: another trip or vehicle for at least 40 kg, or send "plates" (160 kg) ahead
+	// false 1040 kg of goods is 40 kg over the 1000 kg that all runs take
+	// try: another run or vehicle for at least 40 kg, or send "plates" (160 kg) ahead
 	// trip 1: 880 of 1000 kg
 	// trip 2: 160 of 1000 kg
 }

@@ -40,7 +40,7 @@ func TestFortyKilosOver(t *testing.T) {
 	twice := van
 	twice.Trips = 2
 	p := loads(t, goods, twice)
-	if !p.OK || len(p.Trips) != 2 || !strings.Contains(p.Reason, "40 kg over; it goes in 2 trips") || len(p.Warnings) != 0 {
+	if !p.OK || len(p.Trips) != 2 || !strings.Contains(p.Reason, "40 kg over; it goes in 2 runs") || len(p.Warnings) != 0 {
 		t.Errorf("%+v", p)
 	}
 	for _, s := range p.Trips[1].Stowed { // in the order of use: nothing of the first day on the second trip
