@@ -38,7 +38,8 @@ var mayImport = map[string][]string{
 	"plan/instance": {"plan", "plan/problem", "plan/check", "tasks", "tasks/expand"},
 	"plan/proof":    {"plan/problem", "tasks", "tasks/expand"},                     // never network, solve, learn
 	"plan/check":    {"plan", "tasks", "tasks/expand", "tasks/lift", "tasks/site"}, // never problem, network, solve, learn
-	"plan/settle":   {"plan", "plan/check", "plan/network", "plan/problem", "plan/solve", "plan/learn", "plan/proof", "tasks", "tasks/expand"},
+	"plan/settle":   {"plan", "plan/check", "plan/limits", "plan/network", "plan/problem", "plan/solve", "plan/learn", "plan/proof", "tasks", "tasks/expand"},
+	"plan/limits":   {"plan", "plan/network", "plan/problem", "plan/solve", "plan/learn", "tasks", "tasks/expand"},
 	"plan/mutants":  {},
 	"plan/random":   {},
 

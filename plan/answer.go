@@ -105,6 +105,7 @@ type ProofLine struct {
 	Minutes int
 	Pos     tasks.Pos
 	Needed  bool // shown to be needed: without it the others can hold
+	Limit   Limit
 }
 
 // Report is the whole answer to a job: three bases side by side.

@@ -30,6 +30,17 @@ func (p Pos) Origin(what string) origin.Origin {
 	return origin.Origin{Kind: origin.Given, Source: what, File: p.File, Line: p.Line, Col: p.Col}
 }
 
+// Keys are the places of the values of a mapping of the job file, by key.
+type Keys map[string]Pos
+
+// At gives the place of a key's value; other where the key is left out.
+func (k Keys) At(key string, other Pos) Pos {
+	if p, ok := k[key]; ok {
+		return p
+	}
+	return other
+}
+
 // Given says whether the job file says it (rather than a default).
 func (p Pos) Given() bool { return p.Line > 0 }
 
@@ -92,6 +103,7 @@ type Emergency struct {
 type Place struct {
 	Name, Title string
 	Pos         Pos
+	Keys        Keys
 	Zone        *time.Location
 	Lat, Lon    float64 // degrees, north and east positive
 	HasAt       bool
@@ -128,6 +140,7 @@ type Workface struct {
 	Name                  string
 	Place                 *Place
 	Pos                   Pos
+	Keys                  Keys
 	People                int // room for so many at work at once; 0 is no limit
 	NextTo                []string
 	Level                 Amount // m on the tide table's datum; Pos.Given tells whether there is one
@@ -156,6 +169,7 @@ type Permit struct {
 type Trip struct {
 	Name   string
 	Pos    Pos
+	Keys   Keys
 	Place  *Place
 	Booked bool
 	Out    []Leg
@@ -192,6 +206,7 @@ type Closure struct {
 	Place         *Place
 	Opens, Closes hours.Minute
 	Pos           Pos
+	Keys          Keys
 }
 
 // Moment is a wall-clock time of the job file: absolute, or on a day of the window.
@@ -216,6 +231,7 @@ type Slot struct {
 type Person struct {
 	Name    string
 	Pos     Pos
+	Keys    Keys
 	Tickets []Ticket
 	Hours   hours.Pattern // nil: as the place is open
 	From    *Moment       // there from
@@ -252,6 +268,7 @@ type Need struct {
 type Kit struct {
 	Name    string
 	Pos     Pos
+	Keys    Keys
 	Count   int
 	Gives   float64 // kVA
 	Draws   float64 // kVA while used

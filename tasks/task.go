@@ -32,6 +32,7 @@ type Task struct {
 	Title   string // printed; "" is Name
 	Kind    Kind
 	Pos     Pos
+	Keys    Keys
 	Place   *Place
 	Face    *Workface // nil: the place as a whole
 	Drawing string    // joint or drawing number

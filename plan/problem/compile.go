@@ -197,6 +197,13 @@ func (p *Problem) pairs() {
 	}
 }
 
+// Pairs gives the steps of a work that must not overlap, by their index, and why; without their tails' times.
+func Pairs(w *expand.Work) []Pair {
+	p := &Problem{Work: w, Base: w.Span.From}
+	p.pairs()
+	return p.Pairs
+}
+
 // pair says whether two steps must not overlap, and why.
 func (p *Problem) pair(a, b *expand.Step, clash tasks.ClashTable) (Pair, bool) {
 	pr := Pair{A: a.Index, B: b.Index}

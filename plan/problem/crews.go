@@ -153,6 +153,9 @@ func (m *crewMaker) noOpening(s *expand.Step, teams []team, base hours.Set, room
 	for _, t := range teams {
 		most = max(most, m.together(s, t.crew, base).Total())
 	}
+	if s.Watch > 0 {
+		return fmt.Sprintf("its %d min, and %d min of fire watch after every piece, do not fit into the %d min that are open to those who can do it", need, s.Watch, most)
+	}
 	return fmt.Sprintf("its %d min do not fit into the %d min that are open to those who can do it", need, most)
 }
 

@@ -32,6 +32,7 @@ type asked struct {
 	carry  *problem.Problem // with hours carried on past the window
 	bounds network.Bounds
 	out    *plan.Answer
+	plain  bool // that there is a proof is enough: what it needs is not asked for
 }
 
 // answer settles one basis. explain adds leeway and what sets every start.
@@ -57,6 +58,7 @@ func cannot(ctx context.Context, job *tasks.Job, b expand.Basis, o Options) bool
 	if err != nil {
 		return false
 	}
+	a.plain = true
 	a.prove()
 	return a.out.Proof != nil
 }

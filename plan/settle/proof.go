@@ -4,6 +4,7 @@ import (
 	"fmt"
 
 	"sailby/plan"
+	"sailby/plan/limits"
 	"sailby/plan/network"
 	"sailby/plan/problem"
 	"sailby/plan/solve"
@@ -32,12 +33,14 @@ func scope(s string) string {
 func (a *asked) noOpening(i int) *plan.Proof {
 	act := &a.p.Acts[i]
 	s := act.Step
-	return &plan.Proof{Kind: plan.ByNoOpening,
+	p := &plan.Proof{Kind: plan.ByNoOpening,
 		Summary: fmt.Sprintf("%q cannot be done at all: %s", s.Task.Label(), act.Hopeless),
 		Lines: []plan.ProofLine{
 			{Text: fmt.Sprintf("%q at %s: %s of working time", s.Task.Label(), s.Task.Where(), span(s.Working+s.SetUp)), Minutes: s.Working + s.SetUp, Pos: s.Task.Pos, Needed: true},
 			{Text: act.Hopeless, Pos: s.Place.OpenPos, Needed: true},
 		}}
+	a.members(p, []int{i}, nil)
+	return p
 }
 
 // shrinkLimit bounds the links for which every one is tried out when a proof is made small.
@@ -49,6 +52,52 @@ func (a *asked) chain(c *network.Conflict) *plan.Proof {
 	off := a.core(c)
 	_, left := network.Propagate(a.p, off)
 	return a.chainText(off, left)
+}
+
+// members puts in place of a proof's lines the limits of some steps that cannot all hold, each tried by itself. Of the
+// lines for steps those that are there already stay as they are said.
+func (a *asked) members(p *plan.Proof, acts []int, said map[*expand.Step]string) {
+	if a.plain || a.stop() {
+		return
+	}
+	a.say("what the proof needs")
+	lines := limits.Find(a.work, limits.Steps(a.p, acts), limits.Options{Stop: a.stop})
+	if lines == nil {
+		return
+	}
+	for i := range lines {
+		l := &lines[i]
+		if text := said[l.Limit.Step]; text != "" && (l.Limit.Kind == plan.LimitLength || l.Limit.Kind == plan.LimitStanding) {
+			l.Text = text
+		}
+	}
+	p.Lines = lines
+}
+
+// linked gives some activities and all that links tie to them, near or far.
+func (a *asked) linked(acts []int) []int {
+	next := make([][]int, len(a.p.Acts))
+	for k := range a.p.Links {
+		if l := &a.p.Links[k]; l.From >= 0 {
+			next[l.From] = append(next[l.From], l.To)
+			next[l.To] = append(next[l.To], l.From)
+		}
+	}
+	in := make([]bool, len(a.p.Acts))
+	list := append([]int(nil), acts...)
+	for k := 0; k < len(list); k++ {
+		if i := list[k]; !in[i] {
+			in[i] = true
+			list = append(list, next[i]...)
+		}
+	}
+	var out []int
+	for i, yes := range in {
+		if yes {
+			out = append(out, i)
+		}
+	}
+	return out
 }
 
 // core leaves out every link and date that a contradiction does not need: what is left is one still, and
@@ -128,6 +177,8 @@ func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 	}
 	note(end)
 	sortBy(involved, b.Start)
+	said := map[*expand.Step]string{}
+	defer func() { a.members(p, involved, said) }()
 	for _, i := range involved {
 		act := &a.p.Acts[i]
 		if !dated { // any date will do: lengths alone say it
@@ -139,6 +190,7 @@ func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 		if s, _ := earliest(act, b.Start[i]); s >= problem.Inf {
 			text = fmt.Sprintf("%s: %s, not before %s, and no opening after that is long enough", stepName(act.Step), a.length(act), a.clockAt(b.Start[i], act.Step.Place))
 		}
+		said[act.Step] = text
 		p.Lines = append(p.Lines, plan.ProofLine{Text: text, Minutes: act.Step.Minutes() + act.Step.SetUp, Pos: act.Pos(), Needed: a.needed(off, i)})
 	}
 	for _, l := range links {
@@ -250,5 +302,6 @@ func (a *asked) overload(o *solve.Overload) *plan.Proof {
 	p.Lines = append(p.Lines, plan.ProofLine{
 		Text:    fmt.Sprintf("open for %s%s from %s to %s: %s", o.Load.Who, scope(o.Load.Scope), from, to, span(o.Have)),
 		Minutes: o.Have, Pos: a.work.Window.Pos, Needed: true})
+	a.members(p, a.linked(o.Acts), nil)
 	return p
 }

@@ -105,14 +105,69 @@ func (a *asked) contradiction(o learn.Options) *plan.Proof {
 	p := &plan.Proof{Kind: plan.BySearch,
 		Summary: "the search has shown that what follows cannot all hold"}
 	a.say("what the proof needs")
+	var acts []int
 	for _, l := range learn.Contradiction(a.p, memberConflicts, o) {
 		text, pos := a.limit(l)
 		p.Lines = append(p.Lines, plan.ProofLine{Text: text, Pos: pos, Needed: l.Needed})
+		acts = append(acts, a.bearsOn(l)...)
+	}
+	if len(acts) > 0 {
+		a.members(p, acts, nil)
 	}
 	if len(p.Lines) == 0 {
 		p.Summary = "the search has gone through every order of the work and found none that meets the window and the deadlines; a smaller reason was not found in the time allowed"
 	}
 	return p
+}
+
+// bearsOn gives the activities that a limit bears on.
+func (a *asked) bearsOn(l learn.Limit) (out []int) {
+	p := a.p
+	switch l.Kind {
+	case learn.ByPair:
+		return []int{p.Pairs[l.Index].A, p.Pairs[l.Index].B}
+	case learn.ByOrder:
+		for _, c := range p.Orders[l.Index].Choices {
+			for _, b := range c {
+				out = append(out, b.First, b.Then)
+			}
+		}
+	case learn.ByResource:
+		for i := range p.Acts {
+			for _, u := range p.Acts[i].Uses {
+				if u.Res == l.Index {
+					out = append(out, i)
+				}
+			}
+		}
+	case learn.ByPeople:
+		for i := range p.Acts {
+			for k := range p.Acts[i].Modes {
+				if anyIn(p.Acts[i].Modes[k].Crew, l.People) || anyIn(p.Acts[i].Modes[k].Keepers, l.People) {
+					out = append(out, i)
+					break
+				}
+			}
+		}
+	case learn.ByLink:
+		if out = []int{p.Links[l.Index].To}; p.Links[l.Index].From >= 0 {
+			out = append(out, p.Links[l.Index].From)
+		}
+	default:
+		return []int{l.Index}
+	}
+	return out
+}
+
+func anyIn(list, of []int) bool {
+	for _, x := range list {
+		for _, y := range of {
+			if x == y {
+				return true
+			}
+		}
+	}
+	return false
 }
 
 // limit says one limit in the job's words.

@@ -178,13 +178,18 @@ func (w *Work) legs(name string, legs []tasks.Leg) {
 func (w *Work) Carry() *Work {
 	c := *w
 	c.Carried = true
-	c.Presence, c.Travel = map[string][]Stay{}, map[string][]hours.Span{}
-	for _, p := range c.Job.People {
+	c.Settle()
+	return &c
+}
+
+// Settle works out anew where everybody is, after people or the trip have been changed.
+func (w *Work) Settle() {
+	w.Presence, w.Travel = map[string][]Stay{}, map[string][]hours.Span{}
+	for _, p := range w.Job.People {
 		if !p.Outside {
-			c.stays(p)
+			w.stays(p)
 		}
 	}
-	return &c
 }
 
 // Remain gives the carried work in which nobody goes home either: the legs back are left out, as

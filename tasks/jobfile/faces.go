@@ -37,7 +37,7 @@ var fileSection = section{name: "File", where: "reach written as a file", says: 
 
 func (r *reader) face(p *tasks.Place, name string, at, n *yaml.Node) *tasks.Workface {
 	f := r.open(n, &faceSection, fmt.Sprintf("workface %q", p.Name+"/"+name))
-	w := &tasks.Workface{Name: name, Place: p, Pos: r.pos(at), People: f.count("people", 0)}
+	w := &tasks.Workface{Name: name, Place: p, Pos: r.pos(at), Keys: f.keys(), People: f.count("people", 0)}
 	w.NextTo = texts(f.names("next to"))
 	w.Level = f.metres("level")
 	w.CoversAt = f.metres("covers at")

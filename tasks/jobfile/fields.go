@@ -115,6 +115,15 @@ func (f *fields) pos(name string) tasks.Pos {
 	return tasks.Pos{}
 }
 
+// keys gives the places of all values.
+func (f *fields) keys() tasks.Keys {
+	out := tasks.Keys{}
+	for k, n := range f.vals {
+		out[k] = f.r.pos(n)
+	}
+	return out
+}
+
 // fault reports a value; the key's name stands in front of the message.
 func (f *fields) fault(name, hint, format string, args ...any) {
 	n := f.vals[name]

@@ -63,7 +63,7 @@ func (r *reader) readKit(f *fields) {
 }
 
 func (r *reader) kit(name string, at *yaml.Node, f *fields) *tasks.Kit {
-	k := &tasks.Kit{Name: name, Pos: r.pos(at), Count: f.count("count", 1), Gives: f.value("gives"), Draws: f.value("draws"),
+	k := &tasks.Kit{Name: name, Pos: r.pos(at), Keys: f.keys(), Count: f.count("count", 1), Gives: f.value("gives"), Draws: f.value("draws"),
 		Stays: f.yes("stays"), At: f.place("at"), Rated: f.amount("rated", 0), Speed: f.amount("speed", 0), Mass: f.amount("mass", 0)}
 	k.Speed.Value /= 1000
 	k.Closed, k.HungAt, k.Stowing = f.amount("closed height", 0), f.amount("hung at", 0), f.stowing()

@@ -68,7 +68,7 @@ func (r *reader) addPerson(p *tasks.Person) {
 
 func (r *reader) person(name string, at, n *yaml.Node) *tasks.Person {
 	f := r.open(n, &personSection, fmt.Sprintf("person %q", name))
-	p := &tasks.Person{Name: name, Pos: r.pos(at), Trade: f.line("trade"), Outside: f.yes("outside")}
+	p := &tasks.Person{Name: name, Pos: r.pos(at), Keys: f.keys(), Trade: f.line("trade"), Outside: f.yes("outside")}
 	for _, t := range f.items("tickets") {
 		faults := len(r.faults)
 		if ticket, ok := r.ticket(t, f.lead("tickets")); ok {

@@ -77,7 +77,7 @@ func (r *reader) readPlaces(f *fields) {
 func (r *reader) place(name string, at, n *yaml.Node) *tasks.Place {
 	what := fmt.Sprintf("place %q", name)
 	f := r.open(n, &placeSection, what)
-	p := &tasks.Place{Name: name, Title: f.line("title"), Pos: r.pos(at), Zone: r.home}
+	p := &tasks.Place{Name: name, Title: f.line("title"), Pos: r.pos(at), Keys: f.keys(), Zone: r.home}
 	if f.has("zone") {
 		p.Zone = f.zone("zone")
 	} else if r.home == nil && !r.zoneTried {

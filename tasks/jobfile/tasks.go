@@ -132,7 +132,7 @@ func (r *reader) task(name string, at, n *yaml.Node) *draft {
 	}
 	f := r.open(n, kindSection(kind), what)
 	f.choice("kind", "plain")
-	t := &tasks.Task{Name: name, Kind: kind, Pos: r.pos(at), Title: f.line("title"), Drawing: f.line("drawing"), Note: f.line("note")}
+	t := &tasks.Task{Name: name, Kind: kind, Pos: r.pos(at), Keys: f.keys(), Title: f.line("title"), Drawing: f.line("drawing"), Note: f.line("note")}
 	r.taskPlace(t, f)
 	zone := r.home
 	if t.Place != nil {

@@ -140,7 +140,7 @@ func (r *reader) plainWindow(f *fields) {
 	}
 	w := window{"the window", p.Zone, a, b}
 	if r.windowStands(w, f.pos("closes")) {
-		r.job.Window = &tasks.Closure{Place: p, Opens: a, Closes: b, Pos: r.pos(f.at)}
+		r.job.Window = &tasks.Closure{Place: p, Opens: a, Closes: b, Pos: r.pos(f.at), Keys: f.keys()}
 		r.windows = append(r.windows, w)
 	}
 }
@@ -166,7 +166,7 @@ func (r *reader) trip(i int, n *yaml.Node) *tasks.Trip {
 		r.newName(f.vals["name"], "trip", true)
 		f.what = fmt.Sprintf("trip %q", name)
 	}
-	t := &tasks.Trip{Name: name, Pos: r.pos(n), Booked: f.yes("booked"), Place: f.place("place")}
+	t := &tasks.Trip{Name: name, Pos: r.pos(n), Keys: f.keys(), Booked: f.yes("booked"), Place: f.place("place")}
 	t.People = texts(r.people(f, "people"))
 	t.Prices = f.prices("price")
 	if t.Place == nil {
