@@ -167,17 +167,18 @@ type Permit struct {
 
 // Trip is one booking that could be made.
 type Trip struct {
-	Name   string
-	Pos    Pos
-	Keys   Keys
-	Place  *Place
-	Booked bool
-	Out    []Leg
-	Back   []Leg
-	People []string // who goes; nil: everybody who is not tied to another place
-	Prices []Price
-	Bands  []lift.Band // lengths and heights that the ferry books vehicles by
-	Sea    lift.Sea    // of the crossing
+	Name              string
+	Pos               Pos
+	Keys              Keys
+	OutKeys, BackKeys Keys
+	Place             *Place
+	Booked            bool
+	Out               []Leg
+	Back              []Leg
+	People            []string // who goes; nil: everybody who is not tied to another place
+	Prices            []Price
+	Bands             []lift.Band // lengths and heights that the ferry books vehicles by
+	Sea               lift.Sea    // of the crossing
 
 	Leaves  hours.Minute // home, for the site
 	Arrives hours.Minute // at the site, before unloading

@@ -142,33 +142,45 @@ func (l *lister) links() {
 			pos = k.To.Task.Pos
 		}
 		if k.Max < expand.NoMax || k.MaxCure != nil {
-			text := "%s: %s"
-			switch {
-			case k.MaxCure != nil:
-				text += ", no later than the longest wait allowed"
-			case k.Max == 0 && k.Min == 0:
-				text += ", at once"
-			default:
-				text += ", at most " + span(k.Max) + working(k.MaxWorking)
-			}
 			l.add(plan.Limit{Kind: plan.LimitMaxWait, Link: k}, pos, func(c *slice) {
 				if q := c.link(l.w, k); q != nil {
 					q.Max, q.MaxCure = expand.NoMax, nil
 				}
-			}, text, Name(k.To), k.Why)
+			}, "%s", maxText(k))
 		}
 		if k.Min > expand.NoMin {
-			text := "%s: %s"
-			if k.Min > 0 {
-				text += ", at least " + span(k.Min) + working(k.Working)
-			}
 			l.add(plan.Limit{Kind: plan.LimitMinWait, Link: k}, pos, func(c *slice) {
 				if q := c.link(l.w, k); q != nil {
 					q.Min = expand.NoMin
 				}
-			}, text, Name(k.To), k.Why)
+			}, "%s", minText(k))
 		}
 	}
+}
+
+// follows says whether a link ties a step to the step before it in the same task.
+func follows(k *expand.Link) bool { return k.From != nil && k.From.Task == k.To.Task && k.Max == 0 }
+
+func minText(k *expand.Link) string {
+	switch {
+	case follows(k):
+		return Name(k.To) + " comes after " + Name(k.From)
+	case k.Min > 0:
+		return Name(k.To) + ": " + k.Why + ", at least " + span(k.Min) + working(k.Working)
+	}
+	return Name(k.To) + ": " + k.Why
+}
+
+func maxText(k *expand.Link) string {
+	switch {
+	case k.MaxCure != nil:
+		return Name(k.To) + ": " + k.Why + ", no later than the longest wait allowed"
+	case follows(k):
+		return Name(k.To) + " begins when " + Name(k.From) + " ends"
+	case k.Max == 0:
+		return Name(k.To) + ": " + k.Why + ", at once"
+	}
+	return Name(k.To) + ": " + k.Why + ", at most " + span(k.Max) + working(k.MaxWorking)
 }
 
 func working(yes bool) string {

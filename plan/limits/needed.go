@@ -18,6 +18,13 @@ type Options struct {
 	Stop  func() bool // true ends the work; nil: never
 }
 
+// Found is a set of limits that cannot all hold.
+type Found struct {
+	Lines   []plan.ProofLine
+	Problem *problem.Problem // of these limits alone
+	Over    *solve.Overload  // the work that is too much, where the set is refuted by that; nil else
+}
+
 // verdict is what is known of a part of a job.
 type verdict uint8
 
@@ -32,11 +39,11 @@ type finder struct {
 	w     *expand.Work
 	o     Options
 	ticks int64 // left
+	plain bool  // questions are put to the network and to sums of work only
 	in    map[*expand.Step]bool
 	list  []Limit
 	off   []bool
 	sure  []bool // shown to be needed
-	asks  int
 }
 
 // Find gives a set of limits that cannot all hold, as small as was found, begun with all of those that
@@ -44,7 +51,7 @@ type finder struct {
 // bounds. Each limit that is marked Needed has been taken away by itself: then the others can hold, who does what
 // left out. Method: deletion by halves (Bakker, Dikker, Tempelman and Wognum 1993; Junker 2004). Cost: some k log n
 // questions for k limits left of n, each a network, a sum of work and a bounded search.
-func Find(w *expand.Work, steps []*expand.Step, o Options) []plan.ProofLine {
+func Find(w *expand.Work, steps []*expand.Step, o Options) *Found {
 	f := &finder{w: w, o: o, in: map[*expand.Step]bool{}}
 	if f.ticks = o.Ticks; f.ticks == 0 {
 		f.ticks = 30_000_000
@@ -60,14 +67,32 @@ func Find(w *expand.Work, steps []*expand.Step, o Options) []plan.ProofLine {
 			f.in[s] = true
 		}
 	}
+	f.plain = true // what a sum or a chain shows is easier to follow than what a search has gone through
 	if f.ask() != refuted {
-		return nil
+		if f.plain = false; f.ask() != refuted {
+			return nil
+		}
 	}
 	f.fewer()
 	f.list = list(w, f.has)
 	f.off, f.sure = make([]bool, len(f.list)), make([]bool, len(f.list))
 	f.leave(0, len(f.list))
-	return f.lines()
+	if f.plain {
+		f.plain = false
+		if !f.confirm() {
+			f.leave(0, len(f.list)) // a search can do with less
+		}
+	}
+	out := &Found{Lines: f.lines(), Problem: f.left()}
+	for i := range out.Problem.Acts {
+		if len(out.Problem.Acts[i].Modes) == 0 {
+			return out
+		}
+	}
+	if b, c := network.Propagate(out.Problem, network.Off{}); c == nil {
+		out.Over = solve.FindOverload(solve.Loads(out.Problem), b)
+	}
+	return out
 }
 
 func (f *finder) has(s *expand.Step) bool { return f.in[s] }
@@ -109,38 +134,54 @@ func (f *finder) fewer() {
 
 // leave leaves out limits lo to hi, by halves, while what is left is refuted.
 func (f *finder) leave(lo, hi int) {
-	if lo >= hi || f.stopped() {
+	var on []int // those that are still there
+	for k := lo; k < hi; k++ {
+		if !f.off[k] {
+			on = append(on, k)
+		}
+	}
+	if len(on) == 0 || len(on) == 1 && f.sure[on[0]] || f.stopped() {
 		return
 	}
-	for k := lo; k < hi; k++ {
+	for _, k := range on {
 		f.off[k] = true
 	}
 	v := f.ask()
 	if v == refuted {
 		return
 	}
-	for k := lo; k < hi; k++ {
+	for _, k := range on {
 		f.off[k] = false
 	}
-	if hi-lo == 1 {
-		f.sure[lo] = v == holds
+	if len(on) == 1 {
+		f.sure[on[0]] = v == holds
 		return
 	}
-	mid := (lo + hi) / 2
+	mid := on[len(on)/2]
 	f.leave(lo, mid)
 	f.leave(mid, hi)
 }
 
+// confirm asks of every limit left whether the others can hold without it; false where it has found one that
+// they do not need.
+func (f *finder) confirm() bool {
+	all := true
+	for k := range f.list {
+		if f.off[k] || f.stopped() {
+			continue
+		}
+		f.off[k] = true
+		v := f.ask()
+		f.off[k] = false
+		f.sure[k] = v == holds
+		all = all && v != refuted
+	}
+	return all
+}
+
 // ask says what is known of the steps and limits that are left.
 func (f *finder) ask() verdict {
-	f.asks++
-	s := cut(f.w, f.has)
-	for k := range f.list {
-		if f.off[k] {
-			f.list[k].take(s)
-		}
-	}
-	p := s.compile()
+	p := f.left()
 	for i := range p.Acts {
 		if len(p.Acts[i].Modes) == 0 {
 			return refuted
@@ -153,6 +194,9 @@ func (f *finder) ask() verdict {
 	if solve.FindOverload(solve.Loads(p), b) != nil {
 		return refuted
 	}
+	if f.plain {
+		return unknown
+	}
 	r := learn.Within(p, p.End, learn.Options{Ticks: min(f.o.Each, f.ticks), Stop: f.o.Stop})
 	f.ticks -= max(r.Ticks, 1000)
 	switch r.Status {
@@ -162,6 +206,17 @@ func (f *finder) ask() verdict {
 		return holds
 	}
 	return unknown
+}
+
+// left is the problem of the steps and limits that are left.
+func (f *finder) left() *problem.Problem {
+	s := cut(f.w, f.has)
+	for k := range f.list {
+		if f.off[k] {
+			f.list[k].take(s)
+		}
+	}
+	return s.compile()
 }
 
 // lines gives what is left, in the order in which it reads best.

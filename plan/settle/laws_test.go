@@ -127,6 +127,11 @@ func TestEqualAnswers(t *testing.T) {
 		for i := range a.Deadlines {
 			a.Deadlines[i].Step, a.Deadlines[i].Task, b.Deadlines[i].Step, b.Deadlines[i].Task = nil, nil, nil, nil
 		}
+		for _, p := range []*plan.Proof{a.Proof, b.Proof} {
+			for i := 0; p != nil && i < len(p.Lines); i++ { // each points into its own work
+				p.Lines[i].Limit = plan.Limit{Kind: p.Lines[i].Limit.Kind}
+			}
+		}
 		if !reflect.DeepEqual(a, b) {
 			rt.Fatalf("asked twice:\n%+v\n%+v\n%s", a, b, s.yaml())
 		}

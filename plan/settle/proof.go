@@ -10,6 +10,7 @@ import (
 	"sailby/plan/solve"
 	"sailby/tasks"
 	"sailby/tasks/expand"
+	"sailby/tasks/hours"
 	"sailby/tasks/quantity"
 )
 
@@ -56,15 +57,16 @@ func (a *asked) chain(c *network.Conflict) *plan.Proof {
 
 // members puts in place of a proof's lines the limits of some steps that cannot all hold, each tried by itself. Of the
 // lines for steps those that are there already stay as they are said.
-func (a *asked) members(p *plan.Proof, acts []int, said map[*expand.Step]string) {
+func (a *asked) members(p *plan.Proof, acts []int, said map[*expand.Step]string) *limits.Found {
 	if a.plain || a.stop() {
-		return
+		return nil
 	}
 	a.say("what the proof needs")
-	lines := limits.Find(a.work, limits.Steps(a.p, acts), limits.Options{Stop: a.stop})
-	if lines == nil {
-		return
+	found := limits.Find(a.work, limits.Steps(a.p, acts), limits.Options{Stop: a.stop})
+	if found == nil {
+		return nil
 	}
+	lines := found.Lines
 	for i := range lines {
 		l := &lines[i]
 		if text := said[l.Limit.Step]; text != "" && (l.Limit.Kind == plan.LimitLength || l.Limit.Kind == plan.LimitStanding) {
@@ -72,6 +74,7 @@ func (a *asked) members(p *plan.Proof, acts []int, said map[*expand.Step]string)
 		}
 	}
 	p.Lines = lines
+	return found
 }
 
 // linked gives some activities and all that links tie to them, near or far.
@@ -293,8 +296,7 @@ func (a *asked) overload(o *solve.Overload) *plan.Proof {
 	p := &plan.Proof{Kind: plan.ByWork, Over: o.Total - o.Have}
 	place := a.p.Acts[o.Acts[0]].Step.Place
 	from, to := a.clockAt(o.From, place), a.clockAt(o.To, place)
-	p.Summary = fmt.Sprintf("%s%s: %s of work between %s and %s, and %s open for it; %s over",
-		o.Load.Who, scope(o.Load.Scope), span(o.Total), from, to, span(o.Have), span(p.Over))
+	p.Summary = a.sum(o, a.p)
 	for k, i := range o.Acts {
 		act := &a.p.Acts[i]
 		p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s: %s", stepName(act.Step), span(o.Need[k])), Minutes: o.Need[k], Pos: act.Pos(), Needed: o.Total-o.Need[k] <= o.Have})
@@ -302,6 +304,19 @@ func (a *asked) overload(o *solve.Overload) *plan.Proof {
 	p.Lines = append(p.Lines, plan.ProofLine{
 		Text:    fmt.Sprintf("open for %s%s from %s to %s: %s", o.Load.Who, scope(o.Load.Scope), from, to, span(o.Have)),
 		Minutes: o.Have, Pos: a.work.Window.Pos, Needed: true})
-	a.members(p, a.linked(o.Acts), nil)
+	switch found := a.members(p, a.linked(o.Acts), nil); {
+	case found != nil && found.Over != nil: // of the members alone: what else there is, may be too much too
+		p.Over, p.Summary = found.Over.Total-found.Over.Have, a.sum(found.Over, found.Problem)
+	case found != nil:
+		p.Kind, p.Over, p.Summary = plan.BySearch, 0, bySearch
+	}
 	return p
+}
+
+// sum says how much work there is for how many hours.
+func (a *asked) sum(o *solve.Overload, p *problem.Problem) string {
+	place := p.Acts[o.Acts[0]].Step.Place
+	clock := func(t int) string { return limits.When(p.Base+hours.Minute(t), place) }
+	return fmt.Sprintf("%s%s: %s of work between %s and %s, and %s open for it; %s over",
+		o.Load.Who, scope(o.Load.Scope), span(o.Total), clock(o.From), clock(o.To), span(o.Have), span(o.Total-o.Have))
 }

@@ -22,6 +22,8 @@ const (
 	memberConflicts  = 2_000
 )
 
+const bySearch = "the search has shown that what follows cannot all hold"
+
 const searched = "the search has shown that no plan does, whoever works"
 
 // learning asks the learning search for what generation and bounds have left open: a plan that
@@ -103,7 +105,7 @@ func keptWatches(p *problem.Problem, kept []learn.Kept) [][]solve.Watch {
 // contradiction writes the set of limits that the search has shown cannot all hold.
 func (a *asked) contradiction(o learn.Options) *plan.Proof {
 	p := &plan.Proof{Kind: plan.BySearch,
-		Summary: "the search has shown that what follows cannot all hold"}
+		Summary: bySearch}
 	a.say("what the proof needs")
 	var acts []int
 	for _, l := range learn.Contradiction(a.p, memberConflicts, o) {

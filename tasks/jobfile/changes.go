@@ -93,6 +93,21 @@ func (r *reader) change(root *yaml.Node, sets []tasks.Setting) {
 	}
 }
 
+// settingsOf gives the settings that are for one file: the job file, unless they say that they stand in a library.
+func (r *reader) settingsOf(file string) []tasks.Setting {
+	var out []tasks.Setting
+	for _, s := range r.sets {
+		whose := r.name
+		if s.Pos.Line == 0 && s.Pos.File != "" {
+			whose = s.Pos.File
+		}
+		if whose == file {
+			out = append(out, s)
+		}
+	}
+	return out
+}
+
 func (r *reader) setPos(s tasks.Setting) tasks.Pos {
 	if s.Pos.Line == 0 {
 		return tasks.Pos{File: r.name, Line: 1, Col: 1}

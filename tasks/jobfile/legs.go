@@ -43,6 +43,7 @@ func (f *fields) leg(name, what string) tasks.Leg {
 func (r *reader) legs(f *fields, t *tasks.Trip) {
 	out := r.open(f.node("out"), &outSection, f.what+": out")
 	back := r.open(f.node("back"), &backSection, f.what+": back")
+	t.OutKeys, t.BackKeys = out.keys(), back.keys()
 	site := t.Place.Zone
 	zones := [4]zoneOf{out.legsZone("sail zone", r.home), out.legsZone("land zone", site), back.legsZone("sail zone", site), back.legsZone("land zone", r.home)}
 	if slices.Contains(zones[:], nil) {

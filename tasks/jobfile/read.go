@@ -26,7 +26,7 @@ func Read(path string) (*tasks.Job, error) {
 
 // ReadChanged reads a job file with some of its values replaced, for what-if. Positions are those of
 // the file as it is; a replaced value stands where its setting is written, or, where the setting
-// has no place, where the value stood before. Errors as for Read.
+// has no place, where the value stood before. A setting whose place is in a library changes that. Errors as for Read.
 func ReadChanged(path string, changes []tasks.Setting) (*tasks.Job, error) {
 	return withFolder(path, func(data []byte, fsys fs.FS) (*tasks.Job, error) {
 		return ReadBytesChanged(path, data, fsys, changes)
@@ -62,7 +62,8 @@ func ReadBytesChanged(name string, data []byte, fsys fs.FS, changes []tasks.Sett
 	r := newReader(name, fsys)
 	root := r.parse(name, data)
 	if root != nil {
-		r.change(root, changes)
+		r.sets = changes
+		r.change(root, r.settingsOf(name))
 		r.read(root)
 	}
 	if len(r.faults) > 0 {

@@ -17,6 +17,7 @@ type reader struct {
 	fsys  fs.FS  // the folder of the job file; nil: nothing else is read
 	files map[*yaml.Node]string
 	job   *tasks.Job
+	sets  []tasks.Setting // what is replaced in it and in its libraries
 
 	faults  tasks.Faults
 	unsaid  int // faults beyond maxFaults

@@ -103,6 +103,7 @@ func (r *reader) readLibraries(f *fields) []*fields {
 			continue
 		}
 		if root := r.parse(shown, data); root != nil {
+			r.change(root, r.settingsOf(shown))
 			out = append(out, r.open(root, &librarySection, ""))
 		}
 	}
