@@ -55,9 +55,9 @@ func TestWhatAJointHas(t *testing.T) {
 }
 
 // TestSidesThatAreNotAlike by hand: a double V of 30 mm, gap 3, face 2, 18 mm deep at 60 degrees and 10 mm
-// at 90: 3 x 30 + 18^2 tan 30 + 10^2 tan 45 = 90 + 187.06 + 100 mm2. The gap goes with the depths, 18 to 10: the first side
-// has 57.86 + 187.06 = 244.92 mm2, the second 132.14. Runs of 30 with a root of 24: 1 + ceil(220.92 / 30) = 9, and
-// 1 + ceil(108.14 / 30) = 5.
+// at 90: 3 x 30 + 18^2 tan 30 + 10^2 tan 45 = 90 + 187.06 + 100 mm2. The first side has the gap to the middle of the face:
+// 3 x 19 + 187.06 = 244.06 mm2, the second 133. Runs of 30 with a root of 24: 1 + ceil(220.06 / 30) = 9, and
+// 1 + ceil(109 / 30) = 5.
 func TestSidesThatAreNotAlike(t *testing.T) {
 	j := Joint{Type: DoubleV, Thickness: 30, RootGap: 3, RootFace: 2, FirstDepth: 18, Angle: 60, Angle2: 90, Length: 1000}
 	e := mustWork(t, plain, Seam{Joint: j, Procedure: &Procedure{Process: 136, BeadArea: 30}})

@@ -3,8 +3,11 @@ package weld
 import (
 	"fmt"
 	"math"
+	"strconv"
 	"strings"
 	"testing"
+
+	"pgregory.net/rapid"
 
 	"sailby/tasks/origin"
 	"sailby/tasks/quantity"
@@ -199,6 +202,33 @@ func TestGrades(t *testing.T) {
 	for grade, want := range map[string]float64{"S235": 235, "s355J2": 355, "S460N": 460, "S690QL": 690, "": 355, "A36": 355, "A514": 690, "Sxyz": 355, "S": 355} {
 		near(t, grade, Steel{Grade: grade}.yield(), want, 0)
 	}
+}
+
+// TestUnitsThereAndBack: what is written in one unit and read again is the same weld, whatever the
+// size: inches, feet, pounds an hour, inches a minute, Fahrenheit.
+func TestUnitsThereAndBack(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		read := func(v float64, unit string, d quantity.Dim) float64 {
+			got, err := quantity.Parse(strconv.FormatFloat(v, 'f', 12, 64)+" "+unit, d)
+			if err != nil {
+				t.Fatal(err)
+			}
+			return got
+		}
+		leg, length := drawNumber(t, "leg", 3, 25), drawNumber(t, "length", 50, 9000)
+		rate, travel, warm := drawNumber(t, "rate", 1, 9), drawNumber(t, "travel", 100, 900), drawNumber(t, "preheat", 30, 250)
+		work := func(leg, length, rate, travel, warm float64) Estimate {
+			return mustWork(t, plain, Seam{Joint: Joint{Type: Fillet, Leg: leg, Length: length}, Procedure: &Procedure{Process: 136, Deposition: rate, Travel: travel, Preheat: warm}})
+		}
+		si := work(leg, length, rate, travel, warm)
+		us := work(read(leg/inch, "in", quantity.Length), read(length/inch/12, "ft", quantity.Length), read(rate/pound, "lb/h", quantity.Deposition),
+			read(travel/inch, "in/min", quantity.Travel), read(warm*1.8+32, "F", quantity.Temperature))
+		for _, c := range [][2]float64{{us.Metal, si.Metal}, {float64(us.Arc), float64(si.Arc)}, {float64(us.HandsOn), float64(si.HandsOn)}, {us.HeatInput, si.HeatInput}, {us.Seams[0].Preheat, si.Seams[0].Preheat}} {
+			if math.Abs(c[0]-c[1]) > 1e-7*math.Abs(c[1]) || !(c[1] > 0) {
+				t.Errorf("%v in inches and pounds, %v in metres and kilograms", c[0], c[1])
+			}
+		}
+	})
 }
 
 // TestUnitsRoundTrip: sizes written in inches, pounds and Fahrenheit give the same weld.

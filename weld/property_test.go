@@ -144,6 +144,9 @@ func TestGrowsWithLengthAndSplits(t *testing.T) {
 		if !near9(e2.Metal, 2*whole.Metal) || !near9(float64(e2.Arc), 2*float64(whole.Arc)) {
 			t.Errorf("twice the length: %v kg %v min, once %v kg %v min", e2.Metal, e2.Arc, whole.Metal, whole.Arc)
 		}
+		if !(whole.Metal > 0) || !(whole.Arc > 0) || whole.Passes != e2.Passes || whole.Passes != parts.Passes {
+			t.Errorf("%v kg, %v min, %d runs; %d of twice the length, %d of halves", whole.Metal, whole.Arc, whole.Passes, e2.Passes, parts.Passes)
+		}
 		if !near9(parts.Metal, whole.Metal) || !near9(float64(parts.Arc), float64(whole.Arc)) {
 			t.Errorf("two halves: %v kg, whole %v kg", parts.Metal, whole.Metal)
 		}
@@ -164,7 +167,7 @@ func TestGrowsWithSize(t *testing.T) {
 			more.Joint.Thickness += step
 		}
 		a, b := mustWork(t, c, s), mustWork(t, c, more)
-		if !less(a.Metal, b.Metal) || !less(float64(a.Arc), float64(b.Arc)) || a.Passes > b.Passes {
+		if !(a.Metal < b.Metal) || !(a.Arc < b.Arc) || a.Passes > b.Passes {
 			t.Errorf("%s: %v kg, %v min, %d runs; %v larger %v kg, %v min, %d runs", s.Joint.Type, a.Metal, a.Arc, a.Passes, step, b.Metal, b.Arc, b.Passes)
 		}
 	})
@@ -173,6 +176,15 @@ func TestGrowsWithSize(t *testing.T) {
 func TestTwoSidesAreTwice(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		s := Seam{Joint: Joint{Type: Fillet, Leg: drawNumber(t, "leg", 3, 25), Length: drawNumber(t, "length", 50, 9000)}, Procedure: fixed(PB)}
+		if rapid.Bool().Draw(t, "lap") {
+			s.Joint.Type, s.Joint.Thickness = Lap, 12
+		}
+		if rapid.Bool().Draw(t, "unequal") {
+			s.Joint.Leg2 = drawNumber(t, "second leg", 3, 25)
+		}
+		if rapid.Bool().Draw(t, "intermittent") {
+			s.Joint.Bead, s.Joint.Pitch = 50, drawNumber(t, "pitch", 50, 300)
+		}
 		both := s
 		both.Joint.BothSides = true
 		a, b := mustWork(t, Circumstances{}, s), mustWork(t, Circumstances{}, both)
@@ -198,8 +210,29 @@ func TestUpwardsIsNeverLess(t *testing.T) {
 			return mustWork(t, Circumstances{}, s)
 		}
 		a, f := at(PA), at(PF)
-		if !less(a.Metal, f.Metal) || !less(float64(a.Arc), float64(f.Arc)) {
+		if !less(a.Metal, f.Metal) || !less(float64(a.Arc), float64(f.Arc)) || !(a.Metal > 0) || f.Seams[0].Position != PF {
 			t.Errorf("%s: PA %v kg, PF %v kg", s.Joint.Type, a.Metal, f.Metal)
+		}
+	})
+}
+
+// TestUpwardsIsMore: with the preparation that each position has by default a V takes strictly
+// more metal and more arc time upwards, and with usual settings a fillet of equal metal takes longer.
+func TestUpwardsIsMore(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		at := func(j Joint, pos Position, p *Procedure) Estimate {
+			return mustWork(t, plain, Seam{Joint: j, Position: pos, Procedure: p})
+		}
+		v := Joint{Type: rapid.SampledFrom([]JointType{SingleV, DoubleV}).Draw(t, "type"), Thickness: drawNumber(t, "thickness", 8, 40), Length: 1000}
+		a, f := at(v, PA, fixed(PA)), at(v, PF, fixed(PF))
+		if !(f.Metal > a.Metal*1.01) || !(f.Arc > a.Arc) {
+			t.Errorf("%+v: flat %v kg, upwards %v kg", v, a.Metal, f.Metal)
+		}
+		leg := Joint{Type: Fillet, Leg: drawNumber(t, "leg", 4, 10), Length: 1000}
+		p := &Procedure{Process: rapid.SampledFrom([]Process{111, 135, 136}).Draw(t, "process")}
+		a, f = at(leg, PB, p), at(leg, PF, p)
+		if !near9(a.Metal, f.Metal) || !(f.Arc > a.Arc*1.1) {
+			t.Errorf("%+v: horizontal %v kg %v min, upwards %v kg %v min", leg, a.Metal, a.Arc, f.Metal, f.Arc)
 		}
 	})
 }

@@ -188,7 +188,7 @@ func buttRuns(j Joint, s Section, bead origin.Figure) runs {
 	large, how := each, "area laid / sides"
 	from := []origin.Figure{s.Why, sides, first, bead}
 	if s.first.Name != "" {
-		a := origin.Worked("area of the first side", s.Area*s.first.Value, "mm2", "area laid x share of the first side", s.Why, s.first)
+		a := s.first
 		b := origin.Worked("area of the second side", s.Area-a.Value, "mm2", "area laid - area of the first side", s.Why, a)
 		c = count(a.Value) + count(b.Value)
 		r.why = origin.Worked("runs", c, "", "2 + ceil(max(0, area of the first side - root run) / area of a run) + ceil(max(0, area of the second side - root run) / area of a run)", a, b, first, bead)

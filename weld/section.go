@@ -22,7 +22,7 @@ type Section struct {
 	Sides       int     // how many sides are welded: runs are counted for each
 	Why         origin.Figure
 
-	first origin.Figure // share of Area on the first of two sides that are not alike; no name: alike
+	first origin.Figure // area laid on the first of two sides that are not alike; no name: alike
 }
 
 // Section gives the cross-section of j in a position. With overweld, fillets are laid 1 mm over
@@ -143,8 +143,9 @@ func (j shape) butt(pos Position) (Section, error) {
 	width := gap.Value + open + capWiden
 	body := gap.Value*deep + prep.Value
 	fac := j.depositFactor(pos)
-	s := Section{Drawn: body, Width: width, Height: deep + sides*j.Cap, Size: deep, Sides: int(sides), first: j.firstShare(gap, d, prep)}
+	s := Section{Drawn: body, Width: width, Height: deep + sides*j.Cap, Size: deep, Sides: int(sides)}
 	s.Area = body*fac.Value + sides*2/3*width*j.Cap
+	s.first = j.firstSide(gap, d, prep, fac, j.capFigure(width))
 	s.Why = origin.Worked("area laid", s.Area, "mm2", "("+gap.Name+" x depth + faces) x position factor on metal + cap area x sides",
 		gap, d, prep, fac, j.capFigure(width), j.drawn("sides", sides, ""))
 	return s, nil
@@ -189,34 +190,31 @@ func (j shape) bothFaces(d origin.Figure) (area origin.Figure, open float64, err
 	return origin.Worked("faces", a.Value+b.Value, "mm2", "first side + second side", renamed(a, "first side"), renamed(b, "second side")), wide, err
 }
 
-// firstShare is the first side's part of the metal of a double joint: of its faces, and of the
-// gap by the height of its preparation.
-func (j shape) firstShare(gap, d, prep origin.Figure) origin.Figure {
-	const name = "share of the first side"
-	body := gap.Value*d.Value + prep.Value
-	switch {
-	case !j.Type.twoSided() || body <= 0:
+// firstSide is the area laid on the first side of a double joint whose sides are not alike: its
+// faces, the gap as far as half the root face, and a cap.
+func (j shape) firstSide(gap, d, prep, fac, top origin.Figure) origin.Figure {
+	if !j.Type.twoSided() || j.FirstDepth == 0 && (j.Angle2 == j.Angle || j.Type == DoubleU || j.Type == DoubleJ) {
 		return origin.Figure{}
-	case j.FirstDepth > 0:
-		a := prep.From[0]
-		whole := origin.Worked("height of both", j.prepHeight(), "mm", "depth - root face", d, j.drawn("root face", j.RootFace, "mm"))
+	}
+	deep := origin.Worked("depth of the first side", d.Value/2, "mm", "depth / 2", d)
+	face := origin.Worked("faces of the first side", prep.Value, "mm2", "first side", prep)
+	if j.FirstDepth > 0 {
+		face = renamed(prep.From[0], face.Name)
+		first := origin.Written("first depth", j.FirstDepth, "mm", j.Origin)
+		deep = origin.Worked(deep.Name, j.FirstDepth+j.RootFace/2, "mm", "first depth + root face / 2", first, j.drawn("root face", j.RootFace, "mm"))
 		if d.Value < j.Thickness {
-			whole.Origin.Source = "depth"
+			deep = origin.Worked(deep.Name, j.FirstDepth, "mm", "first depth", first)
 		}
-		return origin.Worked(name, (gap.Value*d.Value*j.FirstDepth/whole.Value+a.Value)/body, "",
-			"("+gap.Name+" x depth x first depth / height of both + first side) / ("+gap.Name+" x depth + faces)",
-			gap, d, origin.Written("first depth", j.FirstDepth, "mm", j.Origin), whole, a, prep)
-	case j.Angle2 == j.Angle || j.Type == DoubleU || j.Type == DoubleJ:
-		return origin.Figure{}
+	} else {
+		lean, how := func(a float64) float64 { return tanDeg(a / 2) }, "faces x tan(included angle / 2) / (tan(included angle / 2) + tan(second angle / 2))"
+		if j.Type == DoubleBevel {
+			lean, how = tanDeg, "faces x tan(included angle) / (tan(included angle) + tan(second angle))"
+		}
+		face = origin.Worked(face.Name, prep.Value*lean(j.Angle)/(lean(j.Angle)+lean(j.Angle2)), "mm2", how,
+			prep, j.drawn("included angle", j.Angle, "deg"), j.drawn("second angle", j.Angle2, "deg"))
 	}
-	lean, how := func(a float64) float64 { return tanDeg(a / 2) }, "tan(included angle / 2) / (tan(included angle / 2) + tan(second angle / 2))"
-	if j.Type == DoubleBevel {
-		lean, how = tanDeg, "tan(included angle) / (tan(included angle) + tan(second angle))"
-	}
-	part := origin.Worked("part of the faces", lean(j.Angle)/(lean(j.Angle)+lean(j.Angle2)), "", how,
-		j.drawn("included angle", j.Angle, "deg"), j.drawn("second angle", j.Angle2, "deg"))
-	return origin.Worked(name, (gap.Value*d.Value/2+prep.Value*part.Value)/body, "",
-		"("+gap.Name+" x depth / 2 + faces x part of the faces) / ("+gap.Name+" x depth + faces)", gap, d, prep, part)
+	v := (gap.Value*deep.Value+face.Value)*fac.Value + top.Value
+	return origin.Worked("area of the first side", v, "mm2", "("+gap.Name+" x depth of the first side + faces of the first side) x position factor on metal + cap area", gap, deep, face, fac, top)
 }
 
 // prepared gives the area of the bevelled or gouged faces of height H (each side of a double
