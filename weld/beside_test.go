@@ -266,12 +266,3 @@ func ExampleCut_Work() {
 	// a plasma set of 40 A cuts to 25 mm, the cut goes through 30 mm
 	// try: use oxy-fuel, or a larger set
 }
-
-func BenchmarkWork(b *testing.B) {
-	s := Seam{Joint: Joint{Type: SingleV, Thickness: 20, Length: 3000}, Position: PF, Procedure: &Procedure{Process: 136}}
-	for b.Loop() {
-		if _, err := Work([]Seam{s}, Circumstances{Site: true, Execution: "EN 1090-2"}); err != nil {
-			b.Fatal(err)
-		}
-	}
-}

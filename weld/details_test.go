@@ -104,6 +104,9 @@ func TestRatesOverride(t *testing.T) {
 	slow := s
 	slow.Access = 1.5
 	near(t, "access", float64(mustWork(t, Circumstances{Site: true}, slow).Seams[0].Welding), 1.5*float64(base.Seams[0].Welding), 1e-9)
+	if _, err := Work([]Seam{s}, Circumstances{Rates: Rates{Gouging: None}}); err == nil {
+		t.Error("gouging of nothing an hour ends")
+	}
 	if _, err := Work([]Seam{s}, Circumstances{Rates: Rates{Moving: -1}}); err == nil {
 		t.Error("leads move in less than no time")
 	}

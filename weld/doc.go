@@ -24,6 +24,9 @@
 //  7. Heat: EN 1011-1 heat input, preheat by the procedure or the standard that the job names,
 //     t8/5, waits between runs, cooling, and the hours before final testing.
 //
+// Zero in a field means the usual value, and the figure says so; [None] means that there is truly
+// nothing. What a joint does not have is refused, not left unsaid.
+//
 // # The operating factor
 //
 // It is arc time over hands-on welding time. It holds slag, electrode changes, moving along the
@@ -42,10 +45,31 @@
 // times that at the most current of the set, and no less. A welding cable may lose 4 V, a supply
 // cable 5 % of the supply's volts, there and back, before a warning says so.
 //
-// # What is not here
+// # Preheat
 //
-// EN 1011-2 method A is a set of charts; the package says with what to enter them and takes the
-// reading as the procedure's preheat. What a WPS says governs; calculation stands beside it.
+// What the procedure says governs. Else the standard that the job names: AWS D1.1 by its table,
+// EN 1011-2 method B by its formula where the CET is known, each with its range, and a warning that
+// names the figure which lies outside. Method A is a set of charts that are not here: the package
+// works out the carbon equivalent, the combined thickness, the hydrogen scale and the heat input with
+// which to enter them, and takes a [ChartReading] for every seam that asks for no more of the
+// chart. Plain thin steel is left in peace.
+//
+// # Cutting, preparing, testing, repair
+//
+// [Cut] goes by a table of speeds with its limit, or by the house's own [CutTable]; [Prepare] by
+// the rates of [Activities], all of them house judgement; [Test] has dwell times and pressure
+// limits; [Estimate.Repair] is the repair to allow for, with its chance. Each gives the hands-on
+// time and what it uses up.
+//
+// # Order of welding
+//
+// [OrderOf] advises an order in which the shrinkage moment, weld area times lever arm, stays small
+// about the neutral axis; [Bow] turns a moment into millimetres. Drawing, WPS and jig come first.
+//
+// # A check for the whole
+//
+// [Day] and [SiteDay] give metres a welder in a day: on site practice knows 5 to 8 m of 6 to 8 mm
+// fillet in ten hours, all in. An estimate far from that is wrong, whatever its parts say.
 //
 // # Sources
 //

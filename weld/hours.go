@@ -28,12 +28,12 @@ func (r Rates) check() error {
 		v, max float64
 	}{{"operating factor", r.OperatingFactor, 1}, {"fit-up", r.FitUp, 600}, {"moving", r.Moving, 600}, {"cleaning", r.Cleaning, 100},
 		{"electrode change", r.ElectrodeChange, 600}, {"starting", r.Starting, 100}, {"gouging", r.Gouging, 100}, {"set-up", r.SetUp, 1440}, {"turn", r.Turn, 1440}} {
-		if f.v == None {
-			continue
-		}
 		lo := 0.0
-		if f.name == "operating factor" || f.name == "gouging" {
+		switch {
+		case f.name == "operating factor" || f.name == "gouging": // none of it would never end
 			lo = 0.01
+		case f.v == None:
+			continue
 		}
 		if err := optional(f.name, f.v, lo, f.max, ""); err != nil {
 			return err
