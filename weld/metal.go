@@ -10,6 +10,7 @@ import (
 // deposit works out metal, rate, runs and arc time.
 func (e *seamWork) deposit(c Circumstances) {
 	density := c.Steel.density()
+	e.density = density
 	j, p := e.joint, e.proc
 	e.size = p.size(e.data)
 	rate, warn := p.rate(e.data, e.pos, density)
@@ -19,6 +20,10 @@ func (e *seamWork) deposit(c Circumstances) {
 	hottest := e.hottest(density)
 	e.bead = p.bead(e.data, e.pos, e.size, e.rate, hottest, density)
 	e.runs = p.runsFor(j.Joint, e.section, e.data, e.pos, e.bead, hottest)
+	if j.BackGouge {
+		e.runs.count++
+		e.runs.why = origin.Worked("runs", float64(e.runs.count), "", "runs before the backing run + 1", renamed(e.runs.why, "runs before the backing run"))
+	}
 	e.warn = append(e.warn, e.runs.warn...)
 	e.length = j.Length * j.share()
 

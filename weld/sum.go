@@ -67,7 +67,7 @@ func (e *seamWork) estimate() SeamEstimate {
 	return SeamEstimate{
 		Title: e.title(), Section: e.section, Position: e.pos, Process: e.proc.Process, Length: e.length, Metal: e.metal.Value, Passes: e.runs.count,
 		Arc: quantity.Arc(e.arc.Value), HandsOn: quantity.HandsOn(e.hours.Value), Welding: quantity.HandsOn(e.welding.Value),
-		HeatInput: e.heat.Value, Preheat: e.heatTo.Value, Hours: e.hours,
+		HeatInput: e.heat.Value, Preheat: e.heatTo.Value, Hours: e.hours, Runs: e.runList(),
 	}
 }
 

@@ -80,6 +80,7 @@ type SeamEstimate struct {
 	HeatInput float64          // kJ/mm
 	Preheat   float64          // C at least, 0 for none
 	Hours     origin.Figure
+	Runs      []Run
 }
 
 // Work gives hours, heat and consumables for the seams of one task, welded one after the other
@@ -153,6 +154,7 @@ type seamWork struct {
 	section Section
 	runs    runs
 	length  float64 // mm welded on a side
+	density float64 // kg/m3
 	share   origin.Figure
 
 	size, rate, bead, current, volts, travel, heat origin.Figure

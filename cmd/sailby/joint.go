@@ -144,6 +144,11 @@ func jointTold(e weld.Estimate, in jointInput) (head []string, steps []origin.Fi
 		if i == 0 {
 			steps = append(steps, perMetre)
 		}
+		if f.Name == e.Hours.Name {
+			for _, r := range s.Runs {
+				steps = append(steps, r.Arc, r.Welding)
+			}
+		}
 	}
 	face := 0.85
 	if in.c.Site {
@@ -151,6 +156,9 @@ func jointTold(e weld.Estimate, in jointInput) (head []string, steps []origin.Fi
 	}
 	if day, err := weld.Day(in.seam, in.c, 10, face); err == nil {
 		steps = append(steps, day)
+		if in.c.Site && in.seam.Joint.Type == weld.Fillet {
+			steps = append(steps, origin.Word("a ten-hour day on site", "5 to 8 m of 6 to 8 mm fillet a welder, all in", origin.Origin{Kind: origin.Practice, Source: "to hold the figure above against"}))
+		}
 	}
 	r := e.Repair(in.c, in.seam.Access > 1)
 	steps = append(steps, origin.House("chance of a repair", roundTo(r.Chance*100, 0.1), "%", "Poisson count of repairs of 150 mm with the share of length below"))

@@ -144,7 +144,7 @@ func TestEveryFlagCounts(t *testing.T) {
 	base := map[string]string{
 		"": "fillet|--leg=8mm|--thickness=15mm|--length=3m|--process=136|--current=200A|--site", "butt": "single V|--thickness=30mm|--length=3m|--process=136|--current=200A|--site",
 		"double": "double V|--thickness=30mm|--length=3m", "U": "single U|--thickness=30mm|--length=3m", "stick": "fillet|--leg=8mm|--length=3m|--process=111", "tube": "fillet|--leg=6mm", "slot": "slot|--thickness=10mm|--diameter=20mm|--bead=40mm|--length=600mm",
-		"set": "fillet|--leg=8mm|--length=3m|--process=136|--current=200A|--rated=210A|--duty-cycle=30%", "hot": "single V|--thickness=40mm|--length=3m|--preheat-by=EN 1011-2 B|--cet=0.35", "chart": "single V|--thickness=40mm|--length=3m|--preheat-by=EN 1011-2 A|--cev=0.43", "ce": "single V|--thickness=40mm|--length=3m",
+		"set": "fillet|--leg=8mm|--length=3m|--process=136|--current=200A|--rated=210A|--duty-cycle=30%", "hot": "single V|--thickness=40mm|--length=3m|--preheat-by=EN 1011-2 B|--cet=0.35", "parts": "fillet|--leg=8mm|--length=3m|--process=111|--by-parts", "gouged": "single V|--thickness=20mm|--length=3m|--back-gouge", "turned": "fillet|--leg=8mm|--length=3m|--turns=2", "chart": "single V|--thickness=40mm|--length=3m|--preheat-by=EN 1011-2 A|--cev=0.43", "ce": "single V|--thickness=40mm|--length=3m",
 		"cables": "fillet|--leg=8mm|--length=3m|--cable=20m|--cable-section=35mm2|--supply=20m|--supply-section=4mm2", "short": "single V|--thickness=10mm|--length=300mm|--process=136|--current=250A|--operating-factor=90%", "hold": "fillet|--leg=8mm|--length=3m|--to-standard=EN 1090-2", "pitch": "fillet|--leg=8mm|--length=3m|--bead=50mm|--pitch=100mm", "limit": "single V|--thickness=30mm|--length=3m|--process=136|--current=200A",
 	}
 	cases := map[string]string{"length": "|4m", "leg": "tube|7mm|--length=1m", "second-leg": "|10mm", "throat": "tube|5mm", "thickness": "|20mm", "second-thickness": "hot|60mm", "root-gap": "butt|none", "root-face": "butt|3mm",
@@ -152,7 +152,7 @@ func TestEveryFlagCounts(t *testing.T) {
 		"wire": "|1.6mm", "electrode": "stick|3.2mm", "electrode-length": "stick|300mm", "stub": "stick|80mm", "current": "|180A", "volts": "|30V", "travel": "|250mm/min", "wire-feed": "|8m/min", "deposition": "|2kg/h", "efficiency": "|80%",
 		"operating-factor": "|12%", "heat-efficiency": "|0.7", "bead-area": "|20mm2", "preheat": "|120C", "interpass": "short|60C", "min-heat-input": "limit|2kJ/mm", "max-heat-input": "limit|0.5kJ/mm", "gas-flow": "|25L/min", "hydrogen": "hot|12ml/100g",
 		"rated": "set|250A", "duty-cycle": "set|20%", "most-current": "set|300A", "set-efficiency": "|70%", "power-factor": "|0.9", "cable": "cables|50m", "cable-section": "cables|50mm2", "supply": "cables|50m", "supply-section": "cables|2.5mm2", "supply-volts": "cables|110V",
-		"ambient": "hot|1C", "hold": "hold|30h", "yield": "hold|460N/mm2", "density": "|2700kg/m3", "cev": "ce|0.43", "cet": "ce|0.32", "fit-up": "|none", "moving": "|2min/m", "set-up": "|none"}
+		"ambient": "hot|1C", "hold": "hold|30h", "yield": "hold|460N/mm2", "density": "|2700kg/m3", "cev": "ce|0.43", "cet": "ce|0.32", "fit-up": "|none", "moving": "|2min/m", "cleaning": "parts|3min/m", "starting": "parts|none", "electrode-change": "parts|20s", "gouging": "gouged|2m/h", "turn": "turned|25min", "set-up": "|none"}
 	for _, a := range jointAmounts {
 		kind, rest, ok := strings.Cut(cases[a.name], "|")
 		if !ok {

@@ -91,6 +91,11 @@ var jointAmounts = []jointAmount{
 	{name: "cet", dim: quantity.Number, field: "CET", to: func(i *jointInput) *float64 { return &i.c.Steel.Cet }, says: "carbon equivalent CET on the certificate"},
 	{name: "fit-up", dim: quantity.Pace, none: true, to: func(i *jointInput) *float64 { return &i.c.Rates.FitUp }, says: "pulling up and tacks, as 12min/m, or none"},
 	{name: "moving", dim: quantity.Pace, none: true, to: func(i *jointInput) *float64 { return &i.c.Rates.Moving }, says: "leads and staging, as 5min/m, or none"},
+	{name: "cleaning", dim: quantity.Pace, none: true, to: func(i *jointInput) *float64 { return &i.c.Rates.Cleaning }, says: "by parts: slag and interpass cleaning, a metre of run, or none"},
+	{name: "starting", dim: quantity.Pace, none: true, to: func(i *jointInput) *float64 { return &i.c.Rates.Starting }, says: "by parts: getting to the seam, hood, looking, a metre of run, or none"},
+	{name: "electrode-change", dim: quantity.Time, scale: 60, none: true, to: func(i *jointInput) *float64 { return &i.c.Rates.ElectrodeChange }, says: "by parts: each, as 15s, or none"},
+	{name: "gouging", dim: quantity.Travel, scale: 60.0 / 1000, to: func(i *jointInput) *float64 { return &i.c.Rates.Gouging }, says: "back-gouging and grinding clean, as 3m/h"},
+	{name: "turn", dim: quantity.Time, none: true, to: func(i *jointInput) *float64 { return &i.c.Rates.Turn }, says: "turning the part once, or none"},
 	{name: "set-up", dim: quantity.Time, none: true, to: func(i *jointInput) *float64 { return &i.c.Rates.SetUp }, says: "leading out and making ready, or none"},
 }
 
@@ -218,9 +223,7 @@ func (in *jointInput) amount(a jointAmount, s string) error {
 	if key == "" {
 		key = strings.ReplaceAll(a.name, "-", " ")
 	}
-	if a.name == "fit-up" || a.name == "set-up" || a.name == "moving" {
-		in.c.Rates.Origins[a.name] = given("--" + a.name)
-	}
+	in.c.Rates.Origins[a.name], in.c.Rates.Origins[key] = given("--"+a.name), given("--"+a.name)
 	in.proc.Origins[key], in.c.Origins[key] = given("--"+a.name), given("--"+a.name)
 	if strings.HasPrefix(key, "welding cable") || strings.HasPrefix(key, "supply cable") {
 		in.proc.Origins[strings.Join(strings.Fields(key)[:2], " ")] = given("command line")

@@ -178,9 +178,13 @@ func (m *maker) sold(u *used) {
 		u.sum, u.spare = math.Ceil(u.sum-1e-9), math.Ceil(u.spare-1e-9)
 	}
 	total := u.sum + u.spare
-	u.Amount = origin.Trim(roundUp(u.sum)) + " " + u.unit
+	unit := " " + u.unit
+	if u.unit == "pieces" {
+		unit = ""
+	}
+	u.Amount = origin.Trim(roundUp(u.sum)) + unit
 	if u.spare > 0 {
-		u.Amount += " and " + origin.Trim(roundUp(u.spare)) + " " + u.unit + " spare"
+		u.Amount += " and " + origin.Trim(roundUp(u.spare)) + unit + " spare"
 	}
 	size, own := m.packOf(u.What)
 	count := 0

@@ -85,7 +85,14 @@ func (x *expander) metresADay(t *tasks.Task, e weld.Estimate) origin.Figure {
 		metres += s.Length / 1000
 	}
 	face := x.faceFactor(t.Place)
-	return origin.Worked("metres a welder in a ten-hour day", metres*600*face.Value/e.Hours.Value, "m", "length welded x 600 x face factor / time of one welder; on site practice knows 5 to 8 m of 6 to 8 mm fillet",
+	how := "length welded x 600 x face factor / time of one welder"
+	switch {
+	case x.fittedUp(t):
+		how += "; fit-up is a task of its own and not in it"
+	case x.atSite(t):
+		how += "; on site practice knows 5 to 8 m of 6 to 8 mm fillet, all in"
+	}
+	return origin.Worked("metres a welder in a ten-hour day", metres*600*face.Value/e.Hours.Value, "m", how,
 		origin.Worked("length welded", metres, "m", "sum of the joints"), face, renamed(e.Hours, "time of one welder"))
 }
 
