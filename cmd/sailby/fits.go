@@ -2,6 +2,7 @@ package main
 
 import (
 	"context"
+	"fmt"
 	"io"
 
 	"github.com/spf13/cobra"
@@ -13,7 +14,8 @@ import (
 
 type fitsOptions struct {
 	*globals
-	json bool
+	json  bool
+	proof string
 }
 
 func newFits(g *globals, st streams) *cobra.Command {
@@ -28,6 +30,7 @@ func newFits(g *globals, st streams) *cobra.Command {
 		RunE:              func(c *cobra.Command, args []string) error { return runFits(c.Context(), o, st, args) },
 	}
 	c.Flags().BoolVar(&o.json, "json", false, "print for machines")
+	c.Flags().StringVar(&o.proof, "proof", "", "write why no plan fits, or finishes earlier, to this file, step by step, and have a second program verify it")
 	return c
 }
 
@@ -47,8 +50,33 @@ func runFits(ctx context.Context, o *fitsOptions, st streams, args []string) err
 	if err := st.print(write); err != nil {
 		return err
 	}
+	if o.proof != "" {
+		if err := o.prove(ctx, st, r.Likely); err != nil {
+			return err
+		}
+	}
 	if r.Likely.Verdict != plan.Fits || agenda.Neaped(r.Likely) {
 		return errNotShown
 	}
 	return nil
+}
+
+// prove writes the proof of the likely answer and says what came of it; for machines, to standard error.
+func (o *fitsOptions) prove(ctx context.Context, st streams, a *plan.Answer) error {
+	limited, cancel := context.WithTimeout(ctx, o.limit)
+	defer cancel()
+	text, err := writeProof(limited, o.proof, a)
+	switch {
+	case ctx.Err() != nil:
+		return errStopped
+	case err != nil:
+		return err
+	case o.json:
+		st.say("%s", text)
+		return nil
+	}
+	return st.print(func(w io.Writer) error {
+		_, err := fmt.Fprintf(w, "\n%s\n", text)
+		return err
+	})
 }

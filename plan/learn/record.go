@@ -124,17 +124,21 @@ func (m *model) titled(format string, args ...any) {
 }
 
 func (m *model) titledCrew(who []int) {
-	if m.log == nil {
-		return
+	if m.log != nil {
+		m.titled("crew %s", list(who))
 	}
-	text := "crew "
-	for k, p := range who {
+}
+
+// list writes numbers with commas between them.
+func list(numbers []int) string {
+	var b []byte
+	for k, n := range numbers {
 		if k > 0 {
-			text += ","
+			b = append(b, ',')
 		}
-		text += strconv.Itoa(p)
+		b = strconv.AppendInt(b, int64(n), 10)
 	}
-	m.titled("%s", text)
+	return string(b)
 }
 
 // never says that a lemma without facts makes an end of it.

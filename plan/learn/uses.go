@@ -178,7 +178,7 @@ func allIn(list []int, in []bool) bool {
 
 // keepers lists everybody who may keep the fire watch after activity i in some mode.
 func (m *model) keepers(i int) []int {
-	if m.acts[i].watch == 0 {
+	if m.acts[i].watch == 0 || m.p.Acts[i].Cut {
 		return nil
 	}
 	who := make([]bool, len(m.p.People))
@@ -226,7 +226,7 @@ func watches(watch []bool, c int) bool { return c < len(watch) && watch[c] }
 // the mode and whichever team is at work, and whether one of the group watches.
 func (m *model) atLeast(j int, in []bool) (work int32, watch bool) {
 	a := &m.p.Acts[j]
-	if m.start[j] == m.finish[j] && m.length[j] == 0 {
+	if a.Cut || m.start[j] == m.finish[j] && m.length[j] == 0 {
 		return 0, false
 	}
 	work, watch = int32(len(in))+1, true

@@ -13,13 +13,15 @@ import (
 // Load is a set of activities that only some people, or one kit or workface, can carry, and the
 // minutes in which those are there for them: the work content argument.
 type Load struct {
-	Who   string // "Ines and Tom", "kit mig set", "room at pier/hinge"
-	Scope string // "", or what the activities have in common: "at pier/hinge"
-	acts  []int
-	need  []int       // minutes each activity needs of the group, set-up once included
-	avail []hours.Set // by person (or one set, Capacity times)
-	times int         // how often avail counts
-	sum   []int32     // minutes available before each minute
+	Who    string // "Ines and Tom", "kit mig set", "room at pier/hinge"
+	Scope  string // "", or what the activities have in common: "at pier/hinge"
+	People []int  // indices into Problem.People; nil where it is a resource
+	Res    int    // then the index into Problem.Res
+	acts   []int
+	need   []int       // minutes each activity needs of the group, set-up once included
+	avail  []hours.Set // by person (or one set, Capacity times)
+	times  int         // how often avail counts
+	sum    []int32     // minutes available before each minute
 }
 
 // Overload is a load that does not fit between two minutes: the proof that no plan does.
@@ -105,7 +107,7 @@ func (b *loadBuilder) groups(i int) {
 			if b.seen[key] != nil {
 				continue
 			}
-			l := &Load{Who: b.names(n.who), Scope: scope, times: 1}
+			l := &Load{Who: b.names(n.who), Scope: scope, People: n.who, times: 1}
 			b.seen[key] = l
 			b.sets[l] = n.who
 			b.loads = append(b.loads, l)
@@ -204,7 +206,7 @@ func (b *loadBuilder) resources() {
 		if res.Kind == problem.Power {
 			continue
 		}
-		l := &Load{Who: map[problem.ResourceKind]string{problem.Kit: "kit ", problem.Room: "room at "}[res.Kind] + res.Name, times: res.Capacity}
+		l := &Load{Who: map[problem.ResourceKind]string{problem.Kit: "kit ", problem.Room: "room at "}[res.Kind] + res.Name, Res: r, times: res.Capacity}
 		for i := range b.p.Acts {
 			a := &b.p.Acts[i]
 			for _, u := range a.Uses {
