@@ -185,13 +185,13 @@ func (c *checker) crew(who []int, win hours.Span, v view) error {
 		in[p] = true
 	}
 	have, used := int64(0), int64(0)
-	for _, close := range [2]bool{false, true} {
-		l := c.newLoad(v, win, close)
+	for _, way := range [3]struct{ close, after bool }{{false, true}, {true, true}, {true, false}} {
+		l := c.newLoad(v, win, way.close)
 		for _, i := range l.acts {
-			l.people(i, in)
+			l.people(i, in, way.after)
 		}
 		used, have = l.sum(), int64(len(who))*int64(win.Len())
-		if close {
+		if !way.after { // then all that is counted is done in the hours of the activities
 			have = 0
 			for _, p := range who {
 				have += l.hoursFor(p)
@@ -204,8 +204,8 @@ func (c *checker) crew(who []int, win hours.Span, v view) error {
 	return fmt.Errorf("people %v have at least %d min to do from %d to %d, and %d to do it in", who, used, win.From, win.To, have)
 }
 
-// people adds what activity i asks of a set of people, whoever does it.
-func (l *load) people(i int, in []bool) {
+// people adds what activity i asks of a set of people, whoever does it, with or without the watch after it.
+func (l *load) people(i int, in []bool, after bool) {
 	a := &l.c.p.Acts[i]
 	if a.Cut {
 		return
@@ -226,7 +226,7 @@ func (l *load) people(i int, in []bool) {
 		l.share(i, l.overlap(i, false))
 	}
 	for k := range a.Modes {
-		if len(a.Modes[k].Keepers) == 0 {
+		if len(a.Modes[k].Keepers) == 0 || !after {
 			return
 		}
 		for _, p := range a.Modes[k].Keepers {
@@ -238,7 +238,7 @@ func (l *load) people(i int, in []bool) {
 	l.watchAfter(i)
 }
 
-// hoursFor gives the minutes of the window in which person p can do anything of what is counted.
+// hoursFor gives the minutes of the window in which person p can be at work on any of the activities.
 func (l *load) hoursFor(p int) int64 {
 	l.avail, l.always = l.avail[:0], false
 	for _, i := range l.acts {
@@ -247,9 +247,6 @@ func (l *load) hoursFor(p int) int64 {
 			md := &a.Modes[k]
 			if has(md.Crew, p) || has(md.Relief, p) {
 				l.hoursOf(md.Time)
-			}
-			if has(md.Keepers, p) {
-				l.always = true
 			}
 		}
 	}

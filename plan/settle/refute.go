@@ -23,7 +23,7 @@ type Refutation struct {
 }
 
 // refuteTicks bounds the search for a refutation: some seconds.
-const refuteTicks = 400_000_000
+const refuteTicks = 120_000_000
 
 // ErrNoRefutation says that no refutation was found: the answer may rest on who does what, which is not told to logs,
 // or the search was too long.
