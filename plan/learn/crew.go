@@ -17,8 +17,9 @@ func (m *model) crews() bool {
 			return false
 		}
 	}
-	for _, ws := range c.byPerson {
+	for p, ws := range c.byPerson {
 		if len(ws) > 1 {
+			m.titled("person %d", p)
 			newWorktable(m.engine, 1, ws)
 		}
 	}
@@ -51,6 +52,8 @@ func (c *crewer) crew(i int) bool {
 		times[k] = -1
 		if len(x.times) > 1 {
 			times[k] = c.variable(0, 1)
+			c.told(times[k], "timing %d %d", i, k)
+			c.label = label{forHours, i, 0}
 			c.tie(i, grids{x.grids[k]}, fact{times[k], 1})
 		}
 	}
@@ -58,6 +61,8 @@ func (c *crewer) crew(i int) bool {
 	var any []fact
 	for k := range a.Modes {
 		mode := c.variable(0, 1)
+		c.told(mode, "mode %d %d", i, k)
+		c.label = label{forModes, i, 0}
 		x.modes, x.byMode = append(x.modes, mode), append(x.byMode, c.grids[a.Modes[k].Time])
 		any = append(any, fact{mode, 1})
 		if t := times[c.timeOf(i, k)]; t >= 0 {
@@ -65,7 +70,7 @@ func (c *crewer) crew(i int) bool {
 		}
 		c.hands(i, k, fact{mode, 1})
 	}
-	return c.add(any)
+	return c.axiom(any, "modes %d", i)
 }
 
 // hands makes the work of the people of mode k, which holds if on does. Modes with the same
@@ -95,9 +100,11 @@ func (c *crewer) hands(i, k int, on fact) {
 		y, ok := c.known[key]
 		if !ok {
 			y = c.variable(0, 1)
+			c.told(y, "part %d %d %d %d", i, p, key.time, count(key.watch))
 			c.known[key] = y
 			c.work(i, p, key.watch, fact{y, 1}, sure)
 		}
+		c.label = label{forModes, i, 0}
 		c.join(on.s, y, 0, always)
 	}
 }
@@ -128,6 +135,8 @@ func (c *crewer) watchAfter(i int) bool {
 			y, ok := keep[p]
 			if !ok {
 				y = c.variable(0, 1)
+				c.told(y, "keep %d %d", i, p)
+				c.label = label{forStay, int(y), 0}
 				keep[p] = y
 				x.keepers = append(x.keepers, keeper{p, y})
 				f := c.finish[i]
@@ -140,11 +149,18 @@ func (c *crewer) watchAfter(i int) bool {
 		if len(x.modes) > 0 {
 			any = append(any, fact{x.modes[k] ^ 1, 0})
 		}
-		if !c.add(any) {
+		if !c.axiom(any, "keepers %d", i) {
 			return false
 		}
 	}
 	return true
+}
+
+func count(yes bool) int {
+	if yes {
+		return 1
+	}
+	return 0
 }
 
 // keeper is somebody who may keep the watch after an activity, with the side that says so.

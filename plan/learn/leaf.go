@@ -1,6 +1,7 @@
 package learn
 
 import (
+	"errors"
 	"sort"
 
 	"sailby/plan/problem"
@@ -30,16 +31,21 @@ func (m *model) leaf() bool {
 	for i := range m.p.Acts {
 		h.add(i)
 	}
-	for _, list := range h.people {
-		if !m.within(list, 1) {
+	for p, list := range h.people {
+		if !m.within(list, 1, why{kind: whyLeaf, who: int32(p)}) {
 			return false
 		}
 	}
 	if !h.watchStops() {
+		m.fell = nobody
+		if m.log != nil {
+			m.log.begin()
+			m.log.lost = ErrUnsaid
+		}
 		return false
 	}
 	for k, list := range h.res {
-		if !m.within(list, clip(m.p.Res[k].Capacity)) {
+		if !m.within(list, clip(m.p.Res[k].Capacity), why{kind: whyLeaf, id: 1, who: int32(k)}) {
 			return false
 		}
 	}
@@ -57,6 +63,9 @@ func (m *model) leaf() bool {
 	})
 	return true
 }
+
+// ErrUnsaid says that the log knows no lemma for what the search has come upon.
+var ErrUnsaid = errors.New("the search rests on who keeps the fire watches at stops on the way, which logs do not tell")
 
 // holdings collects the uses of a plan.
 type holdings struct {
@@ -127,8 +136,8 @@ func (h *holdings) watch(i, p int, from, to int32) {
 }
 
 // within says whether the holdings never add up to more than capacity; if they do, the clash is
-// that of the activities at work when they first do.
-func (m *model) within(list []holding, capacity int32) bool {
+// that of the activities at work when they first do; says names it.
+func (m *model) within(list []holding, capacity int32, says why) bool {
 	sort.SliceStable(list, func(i, j int) bool { return list[i].from < list[j].from })
 	for i := range list {
 		if list[i].from >= list[i].to {
@@ -144,6 +153,8 @@ func (m *model) within(list []holding, capacity int32) bool {
 			m.place(list[j].act)
 		}
 		if used > capacity {
+			m.fell = says
+			m.fell.at = list[i].from
 			return false
 		}
 	}

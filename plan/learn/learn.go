@@ -5,7 +5,6 @@
 package learn
 
 import (
-	"errors"
 	"io"
 
 	"sailby/plan/problem"
@@ -59,9 +58,6 @@ const pollEvery = 100_000
 // a bound and an Infeasible hold for the problem as it is, and Exact says whether the plan does.
 func Solve(p *problem.Problem, o Options) Result {
 	log := newRecord(o.Log)
-	if log != nil && len(p.People) > 0 {
-		return Result{LogErr: errNamed}
-	}
 	m, ok := buildFor(p, named, log)
 	if !ok {
 		return log.close(none())
@@ -71,9 +67,6 @@ func Solve(p *problem.Problem, o Options) Result {
 	r.Exact = m.exact()
 	return log.close(r)
 }
-
-// errNamed says that who does what is not told to logs.
-var errNamed = errors.New("a search that names people writes no log: ask Relax or Within")
 
 // Relax looks for the earliest finish with who does what left out: of a set of people who can do
 // some work only their number counts, and every activity takes the kindest of its timings. Its Bound

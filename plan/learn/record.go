@@ -27,6 +27,7 @@ type record struct {
 	order  map[pair]int     // by forced pair: where it stands in model.forced
 	orders []bool           // by forced pair: it is in the log
 	ended  bool
+	lost   error // what cannot be said
 }
 
 // note is a reason: these facts, and not f, cannot all hold; f.s < 0: the facts alone.
@@ -51,6 +52,8 @@ const (
 	forApart   // variable a says which of two goes first
 	forForced  // activity a goes before activity b, as the links leave no choice
 	forRule    // choice b of order rule a
+	forModes   // what the mode of activity a brings with it
+	forStay    // variable a says who keeps the watch after an activity
 )
 
 // witness is a rule that can name its lemmas: the stretch of time that the facts behind f are about.
@@ -90,6 +93,9 @@ func (r *record) close(res Result) Result {
 		} else {
 			res.LogErr = errors.New("the search has ended without a word to the log")
 		}
+	}
+	if r.lost != nil {
+		res.LogErr = r.lost
 	}
 	if err := r.w.Flush(); err != nil {
 		res.LogErr = err
@@ -159,18 +165,28 @@ func (m *model) given(f fact) bool {
 	return m.raise(f.s, f.v, why{kind: whyRoot})
 }
 
-// axiom adds a clause that the problem states.
+// axiom adds a clause that the problem states, under the name of the lemma that says so.
 func (m *model) axiom(fs []fact, format string, args ...any) bool {
-	if m.log != nil && len(fs) > 1 {
-		m.log.line(format+" %d", append(args, m.log.next)...)
+	id := int32(0)
+	if m.log != nil {
+		against := make([]fact, len(fs))
+		for i, f := range fs {
+			against[i] = f.not()
+		}
+		m.log.lemma(fmt.Sprintf(format, args...), against, fact{s: -1})
+		if len(fs) > 1 {
+			id = m.log.next
+			m.log.next++
+		}
+		m.log.so(id, against)
 	}
-	before := len(m.refs)
-	ok := m.add(fs)
-	if m.log != nil && len(m.refs) > before {
-		m.store.facts[m.refs[before]-1].v = m.log.next
-		m.log.next++
+	if !m.add(fs) {
+		return false
 	}
-	return ok
+	if id > 0 {
+		m.store.facts[m.refs[len(m.refs)-1]-1].v = id
+	}
+	return true
 }
 
 // begin forgets the reasons of the last contradiction.
@@ -351,6 +367,8 @@ func (r *record) reason(f fact, w why, behind []fact) {
 			return
 		}
 		r.lemma(r.called(l), behind, f)
+	case whyLeaf:
+		r.lemma(fmt.Sprintf("%s %d %d %d", [2]string{"person", "use"}[w.id], w.who, w.at, w.at+1), behind, f)
 	case whyRule:
 		text := r.titles[w.id]
 		if x, ok := r.m.engine.rules[w.id].(witness); ok {
@@ -374,6 +392,10 @@ func (r *record) called(l label) string {
 		return "apart " + r.names[l.a/2]
 	case forRule:
 		return fmt.Sprintf("rule %d %d", l.a, l.b)
+	case forModes:
+		return fmt.Sprintf("modes %d", l.a)
+	case forStay:
+		return "stay " + r.names[l.a/2]
 	}
 	return "nothing"
 }

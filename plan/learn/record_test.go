@@ -44,7 +44,10 @@ func TestRandomRefutationsReplay(t *testing.T) {
 		if round%2 == 0 {
 			crowd(r, p)
 		}
-		res, got := replayed(t, "problem", p, Relax, Options{})
+		res, got := replayed(t, "relaxed problem", p, Relax, Options{})
+		if _, named := replayed(t, "problem", p, Solve, Options{}); named.Finish < got.Finish {
+			t.Fatalf("problem %d: with people named nothing finishes before %d is shown, without %d", round, named.Finish, got.Finish)
+		}
 		switch res.Status {
 		case Infeasible:
 			none++

@@ -11,19 +11,22 @@ type Busy struct {
 	Acts     []int
 }
 
-// Refute writes to o.Log why no plan finishes by a minute (problem.Inf: why there is none), with who does what
-// left out; Infeasible is success. Where busy holds under the bounds that the links and hours give, it is the reason, the
+// Refute writes to o.Log why no plan finishes by a minute (problem.Inf: why there is none), with people named
+// or with who does what left out; Infeasible is success. Where busy holds under the bounds that the links and hours give, it is the reason, the
 // first of them that does; else the learning search looks for one.
-func Refute(p *problem.Problem, finish int, busy []Busy, o Options) Result {
-	log := newRecord(o.Log)
-	m, ok := buildFor(p, relaxed, log)
+func Refute(p *problem.Problem, finish int, people bool, busy []Busy, o Options) Result {
+	log, kind := newRecord(o.Log), relaxed
+	if people {
+		kind = named
+	}
+	m, ok := buildFor(p, kind, log)
 	if !ok {
 		return log.close(none())
 	}
 	if finish < p.End {
 		o.Best = max(finish, 0) + 1
 	}
-	s := &search{model: m, opt: o, once: true}
+	s := &search{model: m, opt: o, once: true, people: people && !m.plain}
 	if s.begin() {
 		for _, b := range busy {
 			if log != nil && m.tooMuch(b) {

@@ -23,6 +23,7 @@ const (
 	whyArc                  // arc id
 	whyOff                  // arc id cannot hold, so its condition does not
 	whyRule                 // propagator id, with its own note at
+	whyLeaf                 // person (id 0) or resource (id 1) who is used too much at minute at by a settled plan
 )
 
 // nobody is no reason.

@@ -189,20 +189,25 @@ func (b *book) sure(i int) hours.Set {
 	}
 	out := hours.Set{{From: 0, To: hours.Minute(b.p.End)}}
 	for _, w := range b.p.Acts[i].Timings() {
-		if w.Calendar() == nil {
-			continue
-		}
-		t := b.table(w)
-		var worked []hours.Span
-		for k, o := range t.open {
-			if !t.skips[k] {
-				worked = append(worked, o...)
-			}
-		}
-		out = out.And(hours.NewSet(worked...))
+		out = out.And(b.steady(w))
 	}
 	b.sures[i] = out
 	return out
+}
+
+// steady gives the same for one timing.
+func (b *book) steady(w *problem.Timing) hours.Set {
+	if w.Calendar() == nil {
+		return hours.Set{{From: 0, To: hours.Minute(b.p.End)}}
+	}
+	t := b.table(w)
+	var worked []hours.Span
+	for k, o := range t.open {
+		if !t.skips[k] {
+			worked = append(worked, o...)
+		}
+	}
+	return hours.NewSet(worked...)
 }
 
 // pieces tells the worked minutes from a possible start.

@@ -11,8 +11,10 @@ import (
 
 // meaning is what a declared variable stands for, or whose start or finish it is.
 type meaning struct {
-	kind string // "start", "finish", "end", "order", "pair", "choice"
-	a, b int
+	kind  string // "start", "finish", "end", "order", "pair", "choice", "mode", "timing", "part", "keep"
+	a, b  int
+	time  int  // of a part: the number of its timing
+	watch bool // of a part: hot work is only watched
 }
 
 // tail is one of the two tails of a pair.
@@ -41,38 +43,43 @@ func (c *checker) variables() {
 		case d >= 0:
 			s.hi -= d
 		default:
-			c.add(fmt.Sprintf("f%d", i), s, meaning{"finish", i, 0})
+			c.add(fmt.Sprintf("f%d", i), s, meaning{kind: "finish", a: i})
 		}
 		c.rigid, c.start = append(c.rigid, d), append(c.start, int32(len(c.root)))
-		c.add(fmt.Sprintf("s%d", i), s, meaning{"start", i, 0})
+		c.add(fmt.Sprintf("s%d", i), s, meaning{kind: "start", a: i})
 	}
-	c.add("e", span{0, int32(p.End)}, meaning{"end", 0, 0})
+	c.add("e", span{0, int32(p.End)}, meaning{kind: "end"})
 	c.domain = append([]span(nil), c.root...)
 }
 
 // declare makes a variable of a log's own.
-func (c *checker) declare(name, kind string, a, b int) error {
+func (c *checker) declare(name, kind string, args []int) error {
 	if _, taken := c.vars[name]; taken {
 		return fmt.Errorf("%q is declared already", name)
 	}
+	if want := map[string]int{"order": 2, "pair": 1, "choice": 2, "mode": 2, "timing": 2, "keep": 2, "part": 4}[kind]; want != len(args) {
+		return fmt.Errorf("%q with %d numbers means nothing", kind, len(args))
+	}
 	p := c.p
+	m := meaning{kind: kind, a: args[0], b: append(args, 0)[1]}
+	a, b := m.a, m.b
 	switch kind {
 	case "order":
-		if a < 0 || b < 0 || a >= len(p.Acts) || b >= len(p.Acts) || a == b {
+		if a >= len(p.Acts) || b >= len(p.Acts) || a == b {
 			return fmt.Errorf("no activities %d and %d", a, b)
 		}
 		if !c.overfill(a, b) {
 			return fmt.Errorf("nothing keeps activities %d and %d from being worked at once", a, b)
 		}
 	case "pair":
-		if a < 0 || a >= len(p.Pairs) || b != 0 {
+		if a >= len(p.Pairs) {
 			return fmt.Errorf("no pair %d", a)
 		}
 		if pr := &p.Pairs[a]; c.book.mayBeNothing(pr.A) || c.book.mayBeNothing(pr.B) {
 			return fmt.Errorf("the activities of pair %d need not take any time", a)
 		}
 	case "choice":
-		if a < 0 || b < 0 || a >= len(p.Orders) || b >= len(p.Orders[a].Choices) {
+		if a >= len(p.Orders) || b >= len(p.Orders[a].Choices) {
 			return fmt.Errorf("no choice %d of order rule %d", b, a)
 		}
 		if _, taken := c.choices[[2]int{a, b}]; taken {
@@ -80,9 +87,14 @@ func (c *checker) declare(name, kind string, a, b int) error {
 		}
 		c.choices[[2]int{a, b}] = int32(len(c.root))
 	default:
-		return fmt.Errorf("a variable cannot mean %q", kind)
+		if a >= len(p.Acts) || p.Acts[a].Cut {
+			return fmt.Errorf("not all that may do activity %d is known", a)
+		}
+		if kind == "part" {
+			m.time, m.watch = args[2], args[3] == 1
+		}
 	}
-	c.add(name, span{0, 1}, meaning{kind, a, b})
+	c.add(name, span{0, 1}, m)
 	c.domain = append(c.domain, span{0, 1})
 	return nil
 }
@@ -108,20 +120,14 @@ func (c *checker) overfill(a, b int) bool {
 	return false
 }
 
-// some is the clause that a choice of order rule r holds, as facts that cannot all hold.
-func (c *checker) some(r int) ([]fact, error) {
-	if r < 0 || r >= len(c.p.Orders) {
-		return nil, fmt.Errorf("no order rule %d", r)
-	}
-	var none []fact
+// some verifies that every choice of order rule r is denied.
+func (c *checker) some(r int, v view) error {
 	for k := range c.p.Orders[r].Choices {
-		x, ok := c.choices[[2]int{r, k}]
-		if !ok {
-			return nil, fmt.Errorf("choice %d of order rule %d has no variable", k, r)
+		if x, ok := c.choices[[2]int{r, k}]; !ok || v.of(x).hi > 0 {
+			return fmt.Errorf("choice %d of order rule %d may hold", k, r)
 		}
-		none = append(none, fact{x, true, 0})
 	}
-	return none, nil
+	return nil
 }
 
 // view is the bounds of a lemma's facts; for all else those that the problem gives.
@@ -261,7 +267,7 @@ func (b *book) clear(k tail) []int32 {
 // hours verifies that no possible start of activity i agrees with the bounds.
 func (c *checker) hours(i int, v view) error {
 	s, f := v.act(i)
-	for _, w := range c.p.Acts[i].Timings() {
+	for _, w := range v.timings(i) {
 		if c.book.table(w).possible(s, f) {
 			return fmt.Errorf("activity %d can start from %d to %d and finish from %d to %d", i, s.lo, s.hi, f.lo, f.hi)
 		}

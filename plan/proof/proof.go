@@ -16,21 +16,28 @@
 //	var x7 order 0 1        x7 is 1 where activity 0 is over before activity 1 starts, 0 where it is the other
 //	                        way round: they overfill a resource together and hold it without a pause
 //	var x8 pair 2           the same for the activities of pair 2, tails included
-//	var x9 choice 3 0       x9 may be 1 only if choice 0 of order rule 3 holds; in some plan's way of setting
-//	                        these, one is 1
-//	some 3 12               clause 12: a choice of order rule 3 holds
+//	var x9 choice 3 0       x9 is 1 where choice 0 of order rule 3 holds
+//	var x10 mode 5 1        x10 is 1 where activity 5 is done in mode 1; "timing 5 0": in a mode with its timing 0;
+//	                        "part 5 2 0 1": in one with that timing, without a relief, in which person 2 only
+//	                        watches (0: works); "keep 5 2": person 2 keeps the watch that follows it
 //
 // A lemma says that its facts cannot all hold, for a reason that is verified at once:
 //
 //	link 2 : s0>=4 s1<=8    the waits of link 2
-//	hours 5 : s5>=4 f5<=9   no possible start of activity 5 lies, and leads to a finish, within these
+//	hours 5 : s5>=4 f5<=9   no possible start of activity 5 lies, and leads to a finish, within these, in none of the
+//	                        modes that agree with the facts
 //	end 5 : f5>=50 e<=49    the whole is not over before activity 5
 //	apart x7 : x7>=1 ...    what x7 means
 //	rule 3 0 : x9>=1 ...    choice 0 of order rule 3
+//	some 3 : x9<=0 ...      some choice of it holds
+//	modes 5 : x10<=0 ...    no mode of activity 5 agrees
+//	keepers 5 : x11<=0 ...  somebody keeps the watch that follows activity 5
+//	stay x11 : x11>=1 ...   who keeps it stays it out
 //	path min2 max4 x7 !x8 : ...  links and orders (!: with the second first) from a start to a start add up to more
 //	use 0 30 31 : ...       resource 0 from minute 30 to 31: the least that activities use within these facts
 //	                        is more than there is
 //	crew 0,3 30 90 : ...    the same for people 0 and 3
+//	person 2 30 31 : ...    the same for what person 2 does in all modes that agree with the facts
 //	excess 0 5 :            activity 5 takes more of resource 0 than there is
 //	shut 5 :                activity 5 has no possible start at all
 //

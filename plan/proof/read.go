@@ -81,10 +81,10 @@ func (c *checker) order(name string, args []string) error {
 			return fmt.Errorf("want var, a name of its own, and a meaning")
 		}
 		list, err := numbers(args[2:], -1)
-		if err != nil || len(list) > 2 {
-			return fmt.Errorf("want one or two numbers after %q", args[1])
+		if err != nil {
+			return err
 		}
-		return c.declare(args[0], args[1], list[0], append(list, 0)[1])
+		return c.declare(args[0], args[1], list)
 	case "by":
 		list, err := numbers(args, 1)
 		if err != nil {
@@ -96,16 +96,6 @@ func (c *checker) order(name string, args []string) error {
 		}
 		c.steps = append(c.steps, fs)
 		return nil
-	case "some":
-		list, err := numbers(args, 2)
-		if err != nil {
-			return err
-		}
-		fs, err := c.some(list[0])
-		if err != nil {
-			return err
-		}
-		return c.keep(list[1], fs)
 	case "drop":
 		list, err := numbers(args, 1)
 		if err != nil {
@@ -149,23 +139,29 @@ func (c *checker) lemma(name string, args []string, fs []fact) error {
 	switch name {
 	case "path":
 		return c.path(args, v)
-	case "apart":
+	case "apart", "stay":
 		if len(args) != 1 {
 			return fmt.Errorf("want the name of one variable")
 		}
 		x, ok := c.vars[args[0]]
-		if !ok || c.means[x].kind != "order" && c.means[x].kind != "pair" {
-			return fmt.Errorf("%q is no variable of an order", args[0])
+		if !ok {
+			return fmt.Errorf("nothing is called %q", args[0])
 		}
-		if !open {
+		switch kind := c.means[x].kind; {
+		case name == "apart" && kind != "order" && kind != "pair", name == "stay" && kind != "keep":
+			return fmt.Errorf("%s does not mean what %q is about", args[0], name)
+		case !open:
 			return nil
+		case name == "stay":
+			return c.stay(x, v)
 		}
 		return c.apart(x, v)
 	case "crew":
 		return c.crewLemma(args, v, open)
 	}
 	shape, ok := map[string][]int{"link": {len(p.Links)}, "hours": {len(p.Acts)}, "end": {len(p.Acts)}, "shut": {len(p.Acts)},
-		"rule": {len(p.Orders), furthest}, "excess": {len(p.Res), len(p.Acts)}, "use": {len(p.Res), p.End + 1, p.End + 1}}[name]
+		"rule": {len(p.Orders), furthest}, "excess": {len(p.Res), len(p.Acts)}, "use": {len(p.Res), p.End + 1, p.End + 1},
+		"some": {len(p.Orders)}, "modes": {len(p.Acts)}, "keepers": {len(p.Acts)}, "person": {len(p.People), p.End + 1, p.End + 1}}[name]
 	if !ok {
 		return fmt.Errorf("%q is no kind of lemma", name)
 	}
@@ -194,8 +190,18 @@ func (c *checker) lemma(name string, args []string, fs []fact) error {
 		return c.excess(list[0], list[1])
 	case "shut":
 		return c.shut(list[0])
+	case "some":
+		return c.some(list[0], v)
+	case "modes":
+		return c.modes(list[0], v)
+	case "keepers":
+		return c.keepers(list[0], v)
 	}
-	return c.use(list[0], hours.Span{From: hours.Minute(list[1]), To: hours.Minute(list[2])}, v)
+	win := hours.Span{From: hours.Minute(list[1]), To: hours.Minute(list[2])}
+	if name == "person" {
+		return c.person(list[0], win, v)
+	}
+	return c.use(list[0], win, v)
 }
 
 // crewLemma reads a lemma about people.

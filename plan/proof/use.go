@@ -51,8 +51,14 @@ func (l *load) overlap(i int, stays bool) int64 {
 		return int64(l.c.book.sure(i).Count(both))
 	}
 	least := int64(-1)
-	for _, w := range l.c.p.Acts[i].Timings() {
-		if n := l.c.book.overlap(w, s, f, l.win, stays); n >= 0 && (least < 0 || n < least) {
+	for _, w := range l.v.timings(i) {
+		n := int64(0)
+		if stays {
+			n = l.c.book.span(w, s, f, l.inside)
+		} else {
+			n = l.c.book.overlap(w, s, f, func(from, to int) int64 { return l.inside(int32(from), int32(to)) })
+		}
+		if n >= 0 && (least < 0 || n < least) {
 			least = n
 		}
 	}
@@ -67,29 +73,31 @@ func (l *load) inside(a, b int32) int64 {
 	return int64(hours.Span{From: max(l.win.From, hours.Minute(a)), To: min(l.win.To, hours.Minute(b))}.Len())
 }
 
-// overlap is a timing's least share of a window, over all possible starts within bounds; -1 if there is none.
-func (b *book) overlap(w *problem.Timing, s, f span, win hours.Span, stays bool) int64 {
+// overlap gives the least that the pieces from a possible start within bounds count for, -1 if there is no start.
+func (b *book) overlap(w *problem.Timing, s, f span, count func(from, to int) int64) int64 {
 	t := b.table(w)
+	return t.least(s, f, func(s, f int32) int64 {
+		n := int64(0)
+		t.pieces(s, f, func(from, to int) { n += count(from, to) })
+		return n
+	})
+}
+
+// span gives the same for all of the time from start to finish.
+func (b *book) span(w *problem.Timing, s, f span, count func(from, to int32) int64) int64 {
+	return b.table(w).least(s, f, count)
+}
+
+// least gives the least of a count over all starts within bounds, -1 if there are none.
+func (t *starts) least(s, f span, count func(s, f int32) int64) int64 {
 	least := int64(-1)
 	k := sort.Search(len(t.at), func(k int) bool { return t.at[k] >= s.lo })
-	for ; k < len(t.at) && t.at[k] <= s.hi; k++ {
+	for ; k < len(t.at) && t.at[k] <= s.hi && least != 0; k++ {
 		if t.end[k] < f.lo || t.end[k] > f.hi {
 			continue
 		}
-		n := int64(0)
-		count := func(from, to int) {
-			n += int64(hours.Span{From: max(win.From, hours.Minute(from)), To: min(win.To, hours.Minute(to))}.Len())
-		}
-		if stays {
-			count(int(t.at[k]), int(t.end[k]))
-		} else {
-			t.pieces(t.at[k], t.end[k], count)
-		}
-		if least < 0 || n < least {
+		if n := count(t.at[k], t.end[k]); least < 0 || n < least {
 			least = n
-		}
-		if least == 0 {
-			break
 		}
 	}
 	return least

@@ -22,19 +22,25 @@ type Refutation struct {
 	Lemmas  int
 }
 
-// refuteTicks bounds the search for a refutation: some seconds.
-const refuteTicks = 120_000_000
+// Refutation ticks: the search with who does what left out is tried first, for a shorter time.
+const (
+	relaxedTicks = 40_000_000
+	namedTicks   = 200_000_000
+)
 
-// ErrNoRefutation says that no refutation was found: the answer may rest on who does what, which is not told to logs,
-// or the search was too long.
+// ErrNoRefutation says that no refutation was found in the time for it, or that there is nothing to refute.
 var ErrNoRefutation = errors.New("no refutation was found")
 
-// Refute writes to log why no plan fits, if the answer says so, else why no plan finishes before its bound, with who
-// does what left out (R22); and has the log verified by package proof, which knows nothing of the search.
+// ErrReplay is a refutation that the second program has refused.
+var ErrReplay = errors.New("the refutation was refused when it was replayed")
+
+// Refute writes to log why no plan fits, if the answer says so, else why no plan finishes before its bound; and has
+// the log verified by package proof, which knows nothing of the search. Who does what is left out
+// if it can be (R22).
 //
 // Errors: ErrNoRefutation, wrapped with what was looked for; what log returns; and ErrReplay, where the log was
 // refused: a fault of this program.
-func Refute(ctx context.Context, a *plan.Answer, log io.ReadWriteSeeker) (*Refutation, error) {
+func Refute(ctx context.Context, a *plan.Answer, log Log) (*Refutation, error) {
 	p := problem.Compile(a.Work)
 	finish := problem.Inf
 	if a.Verdict != plan.CannotFit {
@@ -43,15 +49,8 @@ func Refute(ctx context.Context, a *plan.Answer, log io.ReadWriteSeeker) (*Refut
 		}
 		finish = int(a.Bound-p.Base) - 1
 	}
-	stop := func() bool { return ctx.Err() != nil }
-	r := learn.Refute(p, finish, tooBusy(p, finish), learn.Options{Ticks: refuteTicks, Stop: stop, Log: log})
-	switch {
-	case r.LogErr != nil:
-		return nil, r.LogErr
-	case r.Status != learn.Infeasible && finish < problem.Inf:
-		return nil, fmt.Errorf("%w for a finish before %s, with who does what left out", ErrNoRefutation, a.Bound.In(a.Work.Window.Place.Zone).Format("Mon 2 Jan 15:04"))
-	case r.Status != learn.Infeasible:
-		return nil, fmt.Errorf("%w, with who does what left out", ErrNoRefutation)
+	if err := search(ctx, p, finish, log); err != nil {
+		return nil, err
 	}
 	if _, err := log.Seek(0, io.SeekStart); err != nil {
 		return nil, err
@@ -70,8 +69,46 @@ func Refute(ctx context.Context, a *plan.Answer, log io.ReadWriteSeeker) (*Refut
 	return out, nil
 }
 
-// ErrReplay is a refutation that the second program has refused.
-var ErrReplay = errors.New("the refutation was refused when it was replayed")
+// Log is a file that a refutation is written to and read again from.
+type Log interface {
+	io.ReadWriteSeeker
+	Truncate(size int64) error
+}
+
+// search writes a refutation: with who does what left out, else with people named.
+func search(ctx context.Context, p *problem.Problem, finish int, log Log) error {
+	stop := func() bool { return ctx.Err() != nil }
+	busy := tooBusy(p, finish)
+	r := learn.Refute(p, finish, false, busy, learn.Options{Ticks: relaxedTicks, Stop: stop, Log: log})
+	if r.Status != learn.Infeasible && r.LogErr == nil && allNamed(p) {
+		if _, err := log.Seek(0, io.SeekStart); err != nil {
+			return err
+		}
+		if err := log.Truncate(0); err != nil {
+			return err
+		}
+		r = learn.Refute(p, finish, true, nil, learn.Options{Ticks: namedTicks, Stop: stop, Log: log})
+	}
+	switch {
+	case errors.Is(r.LogErr, learn.ErrUnsaid):
+		return fmt.Errorf("%w: %w", ErrNoRefutation, r.LogErr)
+	case r.LogErr != nil:
+		return r.LogErr
+	case r.Status != learn.Infeasible:
+		return fmt.Errorf("%w in the time for it", ErrNoRefutation)
+	}
+	return nil
+}
+
+// allNamed says whether the problem holds every choice of people.
+func allNamed(p *problem.Problem) bool {
+	for i := range p.Acts {
+		if p.Acts[i].Cut {
+			return false
+		}
+	}
+	return true
+}
 
 // tooBusy gives the plain reasons of work against hours.
 func tooBusy(p *problem.Problem, finish int) []learn.Busy {
