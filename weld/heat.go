@@ -43,17 +43,18 @@ type CoolingTime struct {
 	Seconds    float64
 	TwoD       float64 // as in thin plate, s
 	ThreeD     float64 // as in thick plate, s
-	Transition float64 // mm: thinner plate cools as 2D
+	Transition float64 // mm: thinner plate cools as 2D, thicker as 3D
 	Why        origin.Figure
 }
 
 // Cool gives t8/5 for a heat input in kJ/mm, a thickness in mm and a plate temperature in C
 // before the run. f2 and f3 are the shape factors: 1 and 1 for a bead on plate, 0.9 and 0.9
 // between runs of a butt, 0.9 and 0.67 for a corner fillet, 0.45 to 0.67 and 0.67 for a T
-// fillet. The larger of both times counts; at the transition thickness they are equal (F2 = F3 = 1).
+// fillet. The larger of both times counts; at the transition thickness they are equal.
 //
 //	2D: (4300 - 4.3 T) 1e5 (Q/d)^2 [1/(500-T)^2 - 1/(800-T)^2] F2
 //	3D: (6700 - 5 T) Q [1/(500-T) - 1/(800-T)] F3
+//	transition: sqrt of (4300 - 4.3 T)/(6700 - 5 T) 1e5 Q [1/(500-T) + 1/(800-T)] F2/F3
 //
 // Errors: a *Error outside 0.1 to 20 kJ/mm, 1 to 400 mm, -40 to 400 C, factors 0.1 to 1.5.
 func Cool(heat, thickness, temperature, f2, f3 float64) (CoolingTime, error) {
@@ -69,7 +70,7 @@ func Cool(heat, thickness, temperature, f2, f3 float64) (CoolingTime, error) {
 	c := CoolingTime{
 		TwoD:       two * 1e5 * heat * heat / (thickness * thickness) * (a*a - b*b) * f2,
 		ThreeD:     three * heat * (a - b) * f3,
-		Transition: math.Sqrt(two / three * 1e5 * heat * (a + b)),
+		Transition: math.Sqrt(two / three * 1e5 * heat * (a + b) * f2 / f3),
 	}
 	c.Seconds = math.Max(c.TwoD, c.ThreeD)
 	c.Why = c.why(origin.Written("heat input", heat, "kJ/mm", origin.Origin{}), origin.Written("plate temperature", temperature, "C", origin.Origin{}),
@@ -80,9 +81,12 @@ func Cool(heat, thickness, temperature, f2, f3 float64) (CoolingTime, error) {
 // why is the tree of the time, from the figures it was made from.
 func (c CoolingTime) why(q, T, d origin.Figure, f2, f3 float64) origin.Figure {
 	F2, F3 := origin.Recalled("shape factor F2", f2, "", "EN 1011-2 Annex D"), origin.Recalled("shape factor F3", f3, "", "EN 1011-2 Annex D")
+	change := origin.Worked("transition thickness", c.Transition, "mm",
+		"sqrt((4300 - 4.3 x plate temperature) / (6700 - 5 x plate temperature) x 100000 x heat input x (1 / (500 - plate temperature) + 1 / (800 - plate temperature)) x shape factor F2 / shape factor F3)", T, q, F2, F3)
 	return origin.Worked("t8/5", c.Seconds, "s", "max(2D time, 3D time)",
 		origin.Worked("2D time", c.TwoD, "s", "(4300 - 4.3 x plate temperature) x 100000 x (heat input / thickness)^2 x (1 / (500 - plate temperature)^2 - 1 / (800 - plate temperature)^2) x shape factor F2", T, q, d, F2),
-		origin.Worked("3D time", c.ThreeD, "s", "(6700 - 5 x plate temperature) x heat input x (1 / (500 - plate temperature) - 1 / (800 - plate temperature)) x shape factor F3", T, q, F3))
+		origin.Worked("3D time", c.ThreeD, "s", "(6700 - 5 x plate temperature) x heat input x (1 / (500 - plate temperature) - 1 / (800 - plate temperature)) x shape factor F3", T, q, F3),
+		change)
 }
 
 // shapeFactors are F2 and F3 for a joint (from memory of EN 1011-2 Annex D).

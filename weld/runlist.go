@@ -2,13 +2,14 @@ package weld
 
 import (
 	"math"
+	"strings"
 
 	"sailby/tasks/origin"
 )
 
 // Run is one kind of run of a seam with what a run of it takes.
 type Run struct {
-	Name    string        // "root", "fill", "backing"; "run" of a fillet, plug or slot
+	Name    string        // "root", "fill", "backing", where sides are not alike "root of the first side"; "run" of a fillet
 	Count   int           // of all sides
 	Area    float64       // mm2 that one lays
 	Arc     origin.Figure // min of arc of one, along the whole seam
@@ -27,14 +28,14 @@ func (e *seamWork) runList() []Run {
 		backing = backRun(e.pos, e.joint.Thickness).Value / e.density * 1e6
 		count--
 	}
-	if !e.joint.Type.groove() && e.joint.Type != Corner {
+	switch {
+	case !e.joint.Type.groove() && e.joint.Type != Corner && e.joint.Type != Plug && e.joint.Type != Slot:
 		list = append(list, Run{Name: "run", Count: count, Area: all / float64(count)})
-	} else {
-		root := math.Min(all/float64(sides), rootShare*e.bead.Value)
-		list = append(list, Run{Name: "root", Count: sides, Area: root})
-		if fills := count - sides; fills > 0 {
-			list = append(list, Run{Name: "fill", Count: fills, Area: (all - root*float64(sides)) / float64(fills)})
-		}
+	case e.section.first.Name != "":
+		a := e.section.first.Value
+		list = append(e.sideRuns(a, 1, " of the first side"), e.sideRuns(all-a, 1, " of the second side")...)
+	default:
+		list = e.sideRuns(all/float64(sides), sides, "")
 	}
 	if backing > 0 {
 		list = append(list, Run{Name: "backing", Count: 1, Area: backing})
@@ -47,12 +48,26 @@ func (e *seamWork) runList() []Run {
 	for i := range list {
 		r := &list[i]
 		area := origin.House("area of the run", r.Area, "mm2", "the root lays less, fills share what is left alike")
-		name := "the " + r.Name + " run"
-		if r.Name == "run" || r.Name == "fill" {
-			name = map[string]string{"run": "a run", "fill": "a fill run"}[r.Name]
+		name := "a " + r.Name
+		switch {
+		case strings.HasPrefix(r.Name, "fill"):
+			name = "a fill run" + strings.TrimPrefix(r.Name, "fill")
+		case r.Name != "run":
+			first, rest, _ := strings.Cut(r.Name, " ")
+			name = strings.TrimSpace("the " + first + " run " + rest)
 		}
 		r.Arc = origin.Worked("arc time of "+name, r.Area/total.Value*e.arc.Value, "min", "area of the run / area of all runs x arc time", area, total, renamed(e.arc, "arc time"))
 		r.Welding = origin.Worked("welding time of "+name, r.Area/total.Value*e.welding.Value, "min", "area of the run / area of all runs x welding", area, total, renamed(e.welding, "welding"))
+	}
+	return list
+}
+
+// sideRuns are root and fills of a side with an area, times so many sides alike.
+func (e *seamWork) sideRuns(area float64, sides int, of string) []Run {
+	root := math.Min(area, rootShare*e.bead.Value)
+	list := []Run{{Name: "root" + of, Count: sides, Area: root}}
+	if fills := math.Ceil((area-root)/e.bead.Value - 1e-9); fills > 0 {
+		list = append(list, Run{Name: "fill" + of, Count: int(fills) * sides, Area: (area - root) / fills})
 	}
 	return list
 }

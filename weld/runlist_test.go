@@ -19,7 +19,7 @@ func TestRunsAddUp(t *testing.T) {
 			arc += float64(r.Count) * r.Arc.Value
 			welding += float64(r.Count) * r.Welding.Value
 			if r.Count < 1 || !(r.Area > 0) {
-				t.Errorf("%+v", r)
+				t.Errorf("%d of %s, %v mm2", r.Count, r.Name, r.Area)
 			}
 			checkTree(t, r.Arc)
 			checkTree(t, r.Welding)

@@ -93,10 +93,9 @@ func (r *reader) cutBy(t *tasks.Task, f *fields) {
 		}
 	}
 	switch {
-	case t.Speed.Pos.Given() || f.tried("hours") || f.tried("man-hours"):
 	case len(fit) == 1:
 		t.CutBy = fit[0]
-	case len(fit) > 1:
+	case len(fit) > 1 && !t.Speed.Pos.Given() && !f.tried("hours") && !f.tried("man-hours"):
 		var all []string
 		for _, c := range fit {
 			all = append(all, short(c.Name))
