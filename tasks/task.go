@@ -109,6 +109,7 @@ type Task struct {
 	Joints    int       // fit-up: count of joints; 0 unknown
 	Lifting   *Lifting  // lift, move
 	Joins     []Named   // fit-up, weld: assemblies or parts that hang together from its finish on
+	TakesOff  []Named   // cut, fit-up, plain: assemblies or parts that hang on nothing else from its finish on
 	FitProved []string  // fit-up: survey, template or trial fit that proves that it fits
 	TaskNature
 	SentOut string // plain: galvanizing, machining, profile cutting or other work sent out

@@ -71,17 +71,27 @@ func (c *checker) sides(r *row, n *tasks.Named, before bool) {
 // stage weighs what is taken up and holds it against the gear.
 func (c *checker) stage(r *row) {
 	t := r.s.Task
-	begun := map[string]bool{}
+	begun, busy := map[string]bool{}, map[string]bool{}
 	for _, o := range c.list {
-		if o.s.Class == expand.Hands && !o.bad && !o.s.Absent && o.s.Task != t && o.p.Start < r.p.Finish {
+		if o.s.Class != expand.Hands || o.bad || o.s.Absent || o.s.Task == t {
+			continue
+		}
+		if o.p.Start < r.p.Finish {
 			begun[o.s.Task.Name] = true
+		}
+		if o.p.Finish > r.p.Start {
+			busy[o.s.Task.Name] = true
 		}
 	}
 	if r.s.Rigging == nil {
 		return // its hours are given, and nothing says what it lifts
 	}
-	pieces := c.hanging(t, begun)
-	joined := r.s.Rigging.Among(func(u *tasks.Task) bool { return begun[u.Name] })
+	done := map[string]bool{}
+	for name := range begun {
+		done[name] = !busy[name]
+	}
+	pieces := c.hanging(t, begun, done)
+	joined := r.s.Rigging.Among(func(u *tasks.Task) bool { return begun[u.Name] }, func(u *tasks.Task) bool { return done[u.Name] })
 	j, err := r.s.Rigging.Judge(joined)
 	if err != nil {
 		return
@@ -111,99 +121,6 @@ func (c *checker) stage(r *row) {
 			}
 		}
 	}
-}
-
-// onLater lists the parts that come onto their assembly by a `joins` that names them.
-func (c *checker) onLater() map[string]bool {
-	out := map[string]bool{}
-	for _, t := range c.w.Job.Tasks {
-		for _, n := range t.Joins {
-			out[n.Name] = out[n.Name] || strings.Contains(n.Name, "/")
-		}
-	}
-	return out
-}
-
-// pieces24 lists what a name stands for: the parts of an assembly that no `joins` names by
-// themselves, an assembly without parts, or the one part.
-func (c *checker) pieces24(name string, later map[string]bool) []string {
-	if strings.Contains(name, "/") {
-		return []string{name}
-	}
-	i := slices.IndexFunc(c.w.Job.Assemblies, func(a *tasks.Assembly) bool { return a.Name == name })
-	if i < 0 {
-		return nil
-	}
-	a := c.w.Job.Assemblies[i]
-	var out []string
-	for _, p := range a.Parts {
-		if !later[name+"/"+p.Name] {
-			out = append(out, name+"/"+p.Name)
-		}
-	}
-	if len(a.Parts) == 0 {
-		out = []string{name}
-	}
-	return out
-}
-
-// hanging gives the pieces that are taken up with what a task lifts: groups of pieces are merged,
-// task by task, and the group that holds it counts.
-func (c *checker) hanging(t *tasks.Task, begun map[string]bool) []string {
-	later := c.onLater()
-	group := map[string]int{}
-	var order []string
-	number := func(p string) int {
-		if _, ok := group[p]; !ok {
-			group[p] = len(group) + 1
-		}
-		return group[p]
-	}
-	merge := func(all []string) {
-		for _, p := range all {
-			from, to := number(p), number(all[0])
-			for q, g := range group {
-				if g == from {
-					group[q] = to
-				}
-			}
-		}
-	}
-	for _, a := range c.w.Job.Assemblies {
-		if len(a.Parts) == 0 {
-			order = append(order, a.Name)
-		}
-		for _, p := range a.Parts {
-			order = append(order, a.Name+"/"+p.Name)
-		}
-	}
-	for _, p := range order {
-		number(p)
-	}
-	mine := c.pieces24(t.Lifts, later)
-	merge(mine)
-	for _, o := range c.w.Job.Tasks {
-		if !begun[o.Name] || o.Kind != tasks.FitUp && o.Kind != tasks.Weld {
-			continue
-		}
-		var all []string
-		for _, n := range o.Joins {
-			all = append(all, c.pieces24(n.Name, later)...)
-		}
-		if len(o.Joins) == 0 {
-			all = partsOfOne(o.Parts)
-		}
-		if len(all) > 1 {
-			merge(all)
-		}
-	}
-	var out []string
-	for _, p := range order {
-		if len(mine) > 0 && group[p] == group[mine[0]] {
-			out = append(out, p)
-		}
-	}
-	return out
 }
 
 // partsOfOne gives the parts among names, if there are two or more and all of one assembly.

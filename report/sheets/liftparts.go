@@ -19,13 +19,19 @@ func (k *pack) judged(s *expand.Step) (expand.Judgement, bool) {
 		return expand.Judgement{}, false
 	}
 	end := k.planned(s).Finish
-	begun := map[*tasks.Task]bool{}
+	begun, unfinished := map[*tasks.Task]bool{}, map[*tasks.Task]bool{}
 	for i, o := range k.work.Steps {
-		if o.Class == expand.Hands && !o.Absent && i < len(k.a.Plan.Steps) && k.a.Plan.Steps[i].Start < end {
+		if o.Class != expand.Hands || o.Absent || i >= len(k.a.Plan.Steps) {
+			continue
+		}
+		if k.a.Plan.Steps[i].Start < end {
 			begun[o.Task] = true
 		}
+		if k.a.Plan.Steps[i].Finish > k.planned(s).Start {
+			unfinished[o.Task] = true
+		}
 	}
-	j, err := s.Rigging.Judge(s.Rigging.Among(func(t *tasks.Task) bool { return begun[t] }))
+	j, err := s.Rigging.Judge(s.Rigging.Among(func(t *tasks.Task) bool { return begun[t] }, func(t *tasks.Task) bool { return begun[t] && !unfinished[t] }))
 	return j, err == nil
 }
 

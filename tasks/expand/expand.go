@@ -24,7 +24,7 @@ func Expand(job *tasks.Job, b Basis) (*Work, tasks.Faults) {
 		return nil, tasks.Faults{*f}
 	}
 	w.lay()
-	x := &expander{w: w, first: map[*tasks.Task][]*Step{}, absent: map[*tasks.Task]bool{}, states: map[string]*Step{}, welded: map[*tasks.Task]weld.Estimate{}, stager: newStager(job)}
+	x := &expander{w: w, first: map[*tasks.Task][]*Step{}, absent: map[*tasks.Task]bool{}, states: map[string]*Step{}, welded: map[*tasks.Task]weld.Estimate{}, stager: newStager(job, w.Window.Place)}
 	x.maybes()
 	for _, t := range job.Tasks {
 		x.task(t)
@@ -58,6 +58,7 @@ type expander struct {
 	byName map[string]*tasks.Task
 	welded map[*tasks.Task]weld.Estimate
 	stager *stager
+	late   []tasks.Note      // told when all is written out
 	after  map[*Step][]*Step // steps that surely come after one, by links; made when first asked
 }
 

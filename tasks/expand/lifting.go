@@ -18,7 +18,8 @@ func (x *expander) lift(t *tasks.Task) hands {
 		h.fault, h.hint = fmt.Errorf("nothing says what it lifts"), "write lifts: frame, or mass: 410 kg, or hours"
 		return h
 	}
-	j, err := r.Judge(r.Among(func(u *tasks.Task) bool { return x.linkedBefore(u, t) }))
+	linked := func(u *tasks.Task) bool { return x.linkedBefore(u, t) }
+	j, err := r.Judge(r.Among(linked, linked))
 	if err != nil {
 		h.rigging = nil
 		h.fault, h.hint = err, "give its parts, or mass: 410 kg on the task"

@@ -45,8 +45,8 @@ func (x *expander) stopGust(s *Step) (origin.Figure, bool) {
 	}
 	sure, open := x.split(s)
 	low := r.gearLimit()
-	least, err1 := r.s.stage(r.Task, sure)
-	if most, err2 := r.s.stage(r.Task, append(sure[:len(sure):len(sure)], open...)); err1 == nil && err2 == nil {
+	least, err1 := r.s.stage(r.Task, onto(sure, open, true))
+	if most, err2 := r.s.stage(r.Task, onto(sure, open, false)); err1 == nil && err2 == nil {
 		load := most.Load
 		load.Mass, load.From = least.Load.Mass, least.Load.From
 		if res, known, err := r.wind(load); known && err == nil {

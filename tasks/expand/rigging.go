@@ -79,8 +79,8 @@ func (x *expander) rigging(t *tasks.Task) *Rigging {
 		}
 	}
 	for _, u := range x.w.Job.Tasks {
-		if j, ok := joinOf(u); ok && !x.absent[u] && u != t {
-			r.Joins = append(r.Joins, j)
+		if !x.absent[u] && u != t {
+			r.Joins = append(r.Joins, joinsOf(u)...)
 		}
 	}
 	r.near()
@@ -95,13 +95,19 @@ func (x *expander) rigging(t *tasks.Task) *Rigging {
 // near leaves out the joining tasks that have nothing to do with what is lifted, whatever is joined.
 func (r *Rigging) near() {
 	all := map[string]bool{}
-	for _, p := range r.s.hanging(r.Task.Lifts, r.Joins) {
+	var only []Join
+	for _, j := range r.Joins {
+		if !j.Off {
+			only = append(only, j)
+		}
+	}
+	for _, p := range r.s.hanging(r.Task.Lifts, only) {
 		all[p] = true
 	}
 	var out []Join
 	for _, j := range r.Joins {
 		if slices.ContainsFunc(j.Things, func(t string) bool {
-			return slices.ContainsFunc(r.s.pieces(t), func(p string) bool { return all[p] })
+			return slices.ContainsFunc(r.s.all(t), func(p string) bool { return all[p] })
 		}) {
 			out = append(out, j)
 		}
@@ -124,11 +130,12 @@ func (r *Rigging) lifting() *tasks.Lifting {
 	return &tasks.Lifting{}
 }
 
-// Among picks, of the joining tasks, those for which begun holds.
-func (r *Rigging) Among(begun func(*tasks.Task) bool) []Join {
+// Among picks, of the joining tasks, those for which begun holds, and of those that take off, those for
+// which done holds.
+func (r *Rigging) Among(begun, done func(*tasks.Task) bool) []Join {
 	var out []Join
 	for _, j := range r.Joins {
-		if begun(j.Task) {
+		if !j.Off && begun(j.Task) || j.Off && done(j.Task) {
 			out = append(out, j)
 		}
 	}

@@ -32,6 +32,9 @@ func (x *expander) aside(add func(tasks.Pos, string, ...any)) {
 		}
 	}
 	x.windNotes(add)
+	for _, n := range x.late {
+		add(n.Pos, "%s", n.Text)
+	}
 	for _, t := range x.w.Job.Tasks {
 		switch {
 		case x.absent[t]:

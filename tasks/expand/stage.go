@@ -14,16 +14,25 @@ import (
 // What is lifted grows with the work (R24): a stage is the set of pieces that hang together by then.
 // A piece is a part of an assembly, or an assembly without parts.
 
-// Join is a task that makes things hang together from its start on.
+// Join is a task that makes things hang together from its start on, or takes things off from its finish on.
 type Join struct {
 	Task   *tasks.Task
 	Things []string // assemblies, or parts as frame/base
+	Off    bool     // they come off what they hung on
 }
 
-// joinOf gives what a task joins; nothing for most.
-func joinOf(t *tasks.Task) (Join, bool) {
+// joinsOf gives what a task joins and takes off; nothing for most.
+func joinsOf(t *tasks.Task) []Join {
+	var out []Join
+	if len(t.TakesOff) > 0 {
+		off := Join{Task: t, Off: true}
+		for _, n := range t.TakesOff {
+			off.Things = append(off.Things, n.Name)
+		}
+		out = append(out, off)
+	}
 	if t.Kind != tasks.FitUp && t.Kind != tasks.Weld {
-		return Join{}, false
+		return out
 	}
 	j := Join{Task: t}
 	for _, n := range t.Joins {
@@ -42,88 +51,8 @@ func joinOf(t *tasks.Task) (Join, bool) {
 			}
 		}
 	}
-	return j, len(j.Things) > 1
-}
-
-// stager knows what hangs together.
-type stager struct {
-	job   *tasks.Job
-	loose map[string]bool // parts that come onto their assembly by a `joins` of their own
-}
-
-func newStager(job *tasks.Job) *stager {
-	s := &stager{job: job, loose: map[string]bool{}}
-	for _, t := range job.Tasks {
-		for _, n := range t.Joins {
-			if strings.Contains(n.Name, "/") {
-				s.loose[n.Name] = true
-			}
-		}
-	}
-	return s
-}
-
-// pieces lists the pieces that a name stands for: an assembly without those that come onto it
-// later, or a part.
-func (s *stager) pieces(name string) []string {
-	if strings.Contains(name, "/") {
-		return []string{name}
-	}
-	var out []string
-	for _, a := range s.job.Assemblies {
-		if a.Name != name {
-			continue
-		}
-		if len(a.Parts) == 0 {
-			return []string{name}
-		}
-		for _, p := range a.Parts {
-			if !s.loose[name+"/"+p.Name] {
-				out = append(out, name+"/"+p.Name)
-			}
-		}
-	}
-	return out
-}
-
-// hanging gives all pieces that are taken up with a thing when these tasks have joined, in the order
-// of the job's assemblies.
-func (s *stager) hanging(thing string, joined []Join) []string {
-	on := map[string]bool{}
-	for _, p := range s.pieces(thing) {
-		on[p] = true
-	}
-	for grown := true; grown; {
-		grown = false
-		for _, j := range joined {
-			var all []string
-			touches := false
-			for _, t := range j.Things {
-				for _, p := range s.pieces(t) {
-					all = append(all, p)
-					touches = touches || on[p]
-				}
-			}
-			if !touches {
-				continue
-			}
-			for _, p := range all {
-				if !on[p] {
-					on[p], grown = true, true
-				}
-			}
-		}
-	}
-	var out []string
-	for _, a := range s.job.Assemblies {
-		if on[a.Name] {
-			out = append(out, a.Name)
-		}
-		for _, p := range a.Parts {
-			if name := a.Name + "/" + p.Name; on[name] {
-				out = append(out, name)
-			}
-		}
+	if len(j.Things) > 1 {
+		out = append(out, j)
 	}
 	return out
 }
@@ -300,15 +229,15 @@ type Piece struct {
 // Travels gives an assembly as it leaves for the site: in one piece, or in those that only tasks at
 // the site join.
 func Travels(w *Work, a *tasks.Assembly) []Piece {
-	s := newStager(w.Job)
+	s := newStager(w.Job, w.Window.Place)
 	var joined []Join
 	absent := map[*tasks.Task]bool{}
 	for _, st := range w.Steps {
 		absent[st.Task] = absent[st.Task] || st.Absent
 	}
 	for _, t := range w.Job.Tasks {
-		if j, ok := joinOf(t); ok && !absent[t] && t.Place != w.Window.Place {
-			joined = append(joined, j)
+		if !absent[t] && t.Place != w.Window.Place {
+			joined = append(joined, joinsOf(t)...)
 		}
 	}
 	if len(a.Parts) == 0 {

@@ -2,7 +2,6 @@ package expand
 
 import (
 	"fmt"
-	"math/bits"
 	"strings"
 
 	"sailby/tasks"
@@ -10,13 +9,10 @@ import (
 	"sailby/tasks/origin"
 )
 
-// mostOpen bounds the joining tasks whose order about a lift is open and that are tried in every
-// combination: 2 to the power of it stages are judged.
-const mostOpen = 10
-
 // stages looks at every lift at every stage that the order of the work leaves open (R24): a lift
 // that no order allows is a fault; where only some orders allow it, they become a rule (R17).
 func (x *expander) stages() {
+	x.offAndOn()
 	for _, s := range x.w.Steps {
 		if s.Rigging == nil || s.Absent || s.HandsOn == 0 {
 			continue
@@ -26,54 +22,15 @@ func (x *expander) stages() {
 	}
 }
 
-func (x *expander) stageOf(s *Step) {
-	r := s.Rigging
-	sure, open := x.split(s)
-	open = r.relevant(sure, open)
-	now, err := r.Judge(sure)
-	if err != nil {
-		return // the estimate has told
-	}
-	if !now.OK {
-		x.refuse(s, now, "")
-		return
-	}
-	must, ok := x.stiffen(s, sure, open)
-	if !ok {
-		return
-	}
-	if len(open) > mostOpen {
-		open = open[:mostOpen] // the checker judges what the plan makes of the others
-	}
-	if all, err := r.Judge(append(sure[:len(sure):len(sure)], open...)); err == nil && all.OK && r.byMassAlone() {
-		return // what carries all of it carries less
-	}
-	var bad []uint
-	for n := 1; n <= len(open); n++ {
-		for set := uint(1); set < 1<<len(open); set++ {
-			if bits.OnesCount(set) != n || covered(bad, set) {
-				continue
-			}
-			some := picked(open, set)
-			j, err := r.Judge(append(sure[:len(sure):len(sure)], some...))
-			if err != nil || j.OK {
-				continue
-			}
-			bad = append(bad, set)
-			if must != nil && len(some) == 1 && must[some[0].Task] && len(must) == 1 {
-				x.refuse(s, j, fmt.Sprintf(" with %s on, without which it is too floppy", some[0].Task.Label()))
-				return
-			}
-			x.before(s, some, j)
-		}
-	}
-}
-
 // split gives the joining tasks that are surely done before a lift, and those that may be.
 func (x *expander) split(s *Step) (sure, open []Join) {
 	for _, j := range s.Rigging.Joins {
-		switch first := x.first[j.Task][0]; {
-		case x.ahead(first, s):
+		first, done := x.first[j.Task][0], x.first[j.Task][0]
+		if list := x.handsOf(j.Task); j.Off && len(list) > 0 {
+			done = list[len(list)-1]
+		}
+		switch {
+		case x.ahead(done, s):
 			sure = append(sure, j)
 		case x.ahead(s, first):
 		default:
@@ -81,61 +38,6 @@ func (x *expander) split(s *Step) (sure, open []Join) {
 		}
 	}
 	return sure, open
-}
-
-// byMassAlone says whether more on the hook is never easier: no lugs or second hook whose share
-// hangs on where the centre of gravity is.
-func (r *Rigging) byMassAlone() bool {
-	l := r.lifting()
-	return l.Second == nil && (l.Slings == nil || len(l.Slings.Lugs) == 0)
-}
-
-// relevant leaves out the tasks that change nothing about what is lifted.
-func (r *Rigging) relevant(sure, open []Join) []Join {
-	var out []Join
-	all := append(append([]Join(nil), sure...), open...)
-	most := len(r.Pieces(all))
-	for i, j := range open {
-		rest := append(append([]Join(nil), sure...), open[:i]...)
-		rest = append(rest, open[i+1:]...)
-		alone := append(append([]Join(nil), sure...), j)
-		if len(r.Pieces(rest)) < most || len(r.Pieces(alone)) > len(r.Pieces(sure)) {
-			out = append(out, j)
-		}
-	}
-	return out
-}
-
-func covered(bad []uint, set uint) bool {
-	for _, b := range bad {
-		if set&b == b {
-			return true
-		}
-	}
-	return false
-}
-
-func picked(open []Join, set uint) []Join {
-	var out []Join
-	for i, j := range open {
-		if set>>i&1 == 1 {
-			out = append(out, j)
-		}
-	}
-	return out
-}
-
-// before makes the rule that not all of these are joined before the lift.
-func (x *expander) before(s *Step, some []Join, j Judgement) {
-	var names []string
-	var out Order
-	for _, o := range some {
-		names = append(names, o.Task.Label())
-		out.Choices = append(out.Choices, Before{First: []*Step{s}, Then: x.handsOf(o.Task)})
-	}
-	out.Pos, out.Made = s.Task.Pos, true
-	out.Text = fmt.Sprintf("%s before %s: with that on, %s", s.Task.Label(), strings.Join(names, " or "), j.Refused.Result.Reason)
-	x.w.Orders = append(x.w.Orders, out)
 }
 
 // stiffen makes the rules for what must be on before the lift; must names the tasks that can put

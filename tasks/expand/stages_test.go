@@ -58,7 +58,7 @@ func TestStages(t *testing.T) {
 		{"lift plain", "tack, brace on", "plain/one plain/two", 200},
 	} {
 		r := w.step(t, tc.lift+" / lift").Rigging
-		j, err := r.Judge(r.Among(func(u *tasks.Task) bool { return strings.Contains(tc.joined, u.Name) }))
+		j, err := r.Judge(r.Among(both(func(u *tasks.Task) bool { return strings.Contains(tc.joined, u.Name) })))
 		if err != nil {
 			t.Fatal(err)
 		}
@@ -215,8 +215,8 @@ func TestMoreJoinedIsNeverLighter(t *testing.T) {
 			more[j.Task.Name] = rapid.Bool().Draw(t, "more "+j.Task.Name)
 			few[j.Task.Name] = more[j.Task.Name] && rapid.Bool().Draw(t, "few "+j.Task.Name)
 		}
-		a, err1 := r.Judge(r.Among(func(u *tasks.Task) bool { return few[u.Name] }))
-		b, err2 := r.Judge(r.Among(func(u *tasks.Task) bool { return more[u.Name] }))
+		a, err1 := r.Judge(r.Among(both(func(u *tasks.Task) bool { return few[u.Name] })))
+		b, err2 := r.Judge(r.Among(both(func(u *tasks.Task) bool { return more[u.Name] })))
 		if err1 != nil || err2 != nil || a.Load.Mass > b.Load.Mass+1e-9 || len(a.Pieces) > len(b.Pieces) {
 			t.Fatalf("%v kg of %v, then %v kg of %v", a.Load.Mass, a.Pieces, b.Load.Mass, b.Pieces)
 		}
@@ -245,3 +245,6 @@ func TestSentOutAndTrialFit(t *testing.T) {
 		}
 	}
 }
+
+// both takes one condition for joining and for taking off.
+func both(f func(*tasks.Task) bool) (begun, done func(*tasks.Task) bool) { return f, f }

@@ -118,13 +118,16 @@ var moveOnlyKeys = []key{
 
 var joinsKey = key{name: "joins", takes: names, example: "[frame/base, frame/posts]", says: "assemblies or parts that hang together from its finish on: a lift after it lifts all of them (R24)"}
 
+var takesOffKey = key{name: "takes off", takes: names, example: "frame/posts", says: "assemblies or parts that hang on nothing else any more from its finish on: each by itself, with what hangs on it alone (R24)"}
+
 func init() {
 	liftKeys.keys = slices.Concat(liftKeys.keys, liftOnlyKeys, bothKeys)
 	moveKeys.keys = slices.Concat(moveKeys.keys, moveOnlyKeys, bothKeys)
 	weldKeys.keys = append(weldKeys.keys, joinsKey)
-	fitKeys.keys = append(fitKeys.keys, joinsKey,
+	cutKeys.keys = append(cutKeys.keys, takesOffKey)
+	fitKeys.keys = append(fitKeys.keys, joinsKey, takesOffKey,
 		key{name: "fit proved by", takes: names, example: "resin", says: "survey, template or trial fit; a site fit-up with none is warned of"})
-	plainKeys.keys = append(plainKeys.keys,
+	plainKeys.keys = append(plainKeys.keys, takesOffKey,
 		key{name: "sent out", takes: aText, beside: "standing: 5 d", example: "galvanizing", says: "work done elsewhere, its lead time and collection being the standing time: galvanizing, machining, profile cutting or other"})
 	kitSection.keys = append(kitSection.keys, stowKeys...)
 	kitSection.keys = append(kitSection.keys, length("closed height", 1e4, "350 mm", "of a hoist, from what it hangs from to the hook when fully up"),
@@ -151,6 +154,12 @@ func (r *reader) liftingOf(t *tasks.Task, f *fields) {
 		if r.partNames(f, "joins"); len(t.Joins) == 1 {
 			f.fault("joins", "name two things, for instance joins: [gate, frame]", "one thing alone is not joined to anything")
 		}
+	}
+	if f.sec.find("takes off") != nil {
+		for _, ref := range f.names("takes off") {
+			t.TakesOff = append(t.TakesOff, tasks.Named{Name: ref.text, Pos: ref.pos})
+		}
+		r.partNames(f, "takes off")
 	}
 	if f.sec.find("sent out") != nil {
 		if t.SentOut = f.line("sent out"); t.SentOut != "" && !f.tried("standing") {
