@@ -159,7 +159,10 @@ func (c *checker) loosen(ties []tie, thing string) {
 	whole, _, part := strings.Cut(thing, "/")
 	for i, one := range ties {
 		rest := slices.DeleteFunc(slices.Clone(one.pieces), func(p string) bool { return slices.Contains(mine, p) })
-		if slices.ContainsFunc(rest, func(p string) bool { a, _, _ := strings.Cut(p, "/"); return !part || a == whole || slices.Contains(one.wholes, whole) }) {
+		if slices.ContainsFunc(rest, func(p string) bool {
+			a, _, _ := strings.Cut(p, "/")
+			return !part || a == whole || slices.Contains(one.wholes, whole)
+		}) {
 			ties[i].pieces = rest
 		}
 	}
