@@ -11,7 +11,6 @@ import (
 	"strconv"
 	"strings"
 	"sync"
-	"time"
 
 	"sailby/plan/instance"
 	"sailby/plan/learn"
@@ -71,7 +70,7 @@ func (r *row) fields() []string {
 
 // solveInstance runs one instance and judges the answer.
 func solveInstance(ctx context.Context, path string, o settings, f *folder) (*row, error) {
-	begin := time.Now()
+	since := watch(o.cpu)
 	in, err := instance.Read(path)
 	if err != nil {
 		return nil, err
@@ -80,14 +79,13 @@ func solveInstance(ctx context.Context, path string, o settings, f *folder) (*ro
 	if k, ok := f.known[strings.ToLower(in.Name)]; ok {
 		r.known = &k
 	}
-	since := func() float64 { return time.Since(begin).Seconds() }
 	log, err := openLog(o.proofs, in.Name)
 	if err != nil {
 		return nil, err
 	}
 	got := learn.Solve(in.Problem(), learn.Options{
 		Log:  log.writer(),
-		Stop: func() bool { return ctx.Err() != nil || time.Since(begin) > o.limit },
+		Stop: func() bool { return ctx.Err() != nil || since() > o.limit.Seconds() },
 		Found: func([]int, int) {
 			r.best = since()
 			if r.first == 0 {

@@ -32,6 +32,7 @@ type settings struct {
 	verbose bool
 	random  randomJobs
 	proofs  string
+	cpu     bool
 }
 
 // run reads the flags, solves the instances and prints the rows and the summary. A wrong answer
@@ -56,11 +57,15 @@ func run(ctx context.Context, args []string, out, talk io.Writer) error {
 	fl.StringVar(&o.random.class, "class", "", "one class of random jobs: slack, snug, tight or over; else all in turn")
 	fl.BoolVar(&o.random.lattice, "lattice", false, "random jobs in which every time is a half hour")
 	fl.StringVar(&o.proofs, "proof", "", "write the proof of each instance to this folder, and replay it")
+	fl.BoolVar(&o.cpu, "cpu", false, "count processor seconds of this process, not those of the clock: for a machine that others use too; with one worker only")
 	if err := fl.Parse(args); err != nil {
 		return err
 	}
 	if o.limit <= 0 || o.workers < 1 || o.every < 1 || o.offset < 0 {
 		return fmt.Errorf("-limit, -workers and -every must be above 0, -from at least 0")
+	}
+	if _, ok := processor(); o.cpu && (!ok || o.workers > 1 || o.random.count != 0) {
+		return fmt.Errorf("-cpu wants instances, one worker and a system that tells processor time")
 	}
 	if o.random.count != 0 {
 		if o.random.count < 0 || fl.NArg() > 0 {

@@ -3,7 +3,7 @@ package learn
 // breed makes some schedules.
 func (s *search) breed(b *breeder) outcome {
 	for k := 0; k < breedAtOne; k++ {
-		s.ticks += int64(b.n) * 16
+		s.ticks += int64(b.n) * 8
 		b.step()
 		if b.best.end < s.value && !s.adopt(b.best) {
 			return over

@@ -35,7 +35,11 @@ func newBreeder(h *shop, seed uint64) *breeder {
 }
 
 func (b *breeder) fresh() *beast {
-	return &beast{order: make([]int32, b.n), start: make([]int32, b.n)}
+	x := &beast{order: make([]int32, b.n), start: make([]int32, b.n)}
+	for i := range x.order {
+		x.order[i] = int32(i)
+	}
+	return x
 }
 
 // found makes a beast from nothing: latest finishes of the justified plan with noise.

@@ -12,7 +12,12 @@ type engine struct {
 	watching [][]int32 // by side: the rules that look at it
 	dirty    []bool
 	queue    []int32
-	done     int // trail entries propagated
+	late     []bool  // by rule: it runs only when nothing else is left to do
+	lateOnes []int32 // their queue
+	done     int     // trail entries propagated
+
+	energetic bool  // the energy rules are at work
+	worth     int64 // contradictions that they have found
 
 	clash []fact  // facts that cannot hold together, after a failed raise
 	fell  why     // what says so, if a rule itself does; nobody if a raise has failed
@@ -67,13 +72,46 @@ func (e *engine) variable(lo, hi int32) side {
 }
 
 // attach adds a rule that is woken by raises of the sides.
-func (e *engine) attach(r rule, sides []side) {
+func (e *engine) attach(r rule, sides []side) { e.enter(r, sides, false) }
+
+// attachLate adds one that waits until the others are done.
+func (e *engine) attachLate(r rule, sides []side) { e.enter(r, sides, true) }
+
+func (e *engine) enter(r rule, sides []side, late bool) {
 	id := int32(len(e.rules))
 	e.rules = append(e.rules, r)
-	e.dirty = append(e.dirty, true)
-	e.queue = append(e.queue, id)
+	e.late = append(e.late, late)
+	e.dirty = append(e.dirty, false)
+	e.wake(id)
 	for _, s := range sides {
 		e.watching[s] = append(e.watching[s], id)
+	}
+}
+
+// wake puts a rule in its queue.
+func (e *engine) wake(id int32) {
+	if e.dirty[id] {
+		return
+	}
+	e.dirty[id] = true
+	if e.late[id] {
+		e.lateOnes = append(e.lateOnes, id)
+	} else {
+		e.queue = append(e.queue, id)
+	}
+}
+
+// energize switches the energy rules on or off; only at level 0. All rules have another look, as the
+// profiles may still be those of a deeper level.
+func (e *engine) energize(on bool) {
+	if e.energetic == on {
+		return
+	}
+	e.energetic = on
+	for id := range e.rules {
+		if on {
+			e.wake(int32(id))
+		}
 	}
 }
 
@@ -141,20 +179,21 @@ func (e *engine) settle() bool {
 				continue
 			}
 			for _, id := range e.watching[s] {
-				if !e.dirty[id] {
-					e.dirty[id] = true
-					e.queue = append(e.queue, id)
-				}
+				e.wake(id)
 			}
 			if !e.follow(s) || !e.visit(s) {
 				return false
 			}
 		}
-		if len(e.queue) == 0 {
+		from := &e.queue
+		if len(*from) == 0 {
+			from = &e.lateOnes
+		}
+		if len(*from) == 0 {
 			return true
 		}
-		id := e.queue[0]
-		e.queue = append(e.queue[:0], e.queue[1:]...)
+		id := (*from)[0]
+		*from = append((*from)[:0], (*from)[1:]...)
 		e.dirty[id] = false
 		if !e.rules[id].run(e) {
 			return false
@@ -172,7 +211,10 @@ func (e *engine) retreat(k int32) {
 	for _, id := range e.queue {
 		e.dirty[id] = false
 	}
-	e.queue = e.queue[:0]
+	for _, id := range e.lateOnes {
+		e.dirty[id] = false
+	}
+	e.queue, e.lateOnes = e.queue[:0], e.lateOnes[:0]
 	e.atoms.back(k)
 }
 

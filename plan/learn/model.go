@@ -180,12 +180,17 @@ func (m *model) timed(i int) {
 	m.label = label{forHours, i, 0}
 	m.tie(i, m.acts[i].grids, on)
 	if on.s >= 0 { // without its hours it still takes its minutes
-		least := m.acts[i].times[0].Length()
-		for _, w := range m.acts[i].times {
-			least = min(least, w.Length())
-		}
-		m.join(m.start[i], m.finish[i], int32(least), always)
+		m.join(m.start[i], m.finish[i], m.least(i), always)
 	}
+}
+
+// least gives the fewest minutes from start to finish of activity i.
+func (m *model) least(i int) int32 {
+	least := m.acts[i].times[0].Length()
+	for _, w := range m.acts[i].times {
+		least = min(least, w.Length())
+	}
+	return int32(least)
 }
 
 // tie says that activity i starts where one of gs lets it, and finishes when that leads to.

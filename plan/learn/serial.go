@@ -1,6 +1,6 @@
 package learn
 
-import "sort"
+import "slices"
 
 // shop builds schedules for activities with fixed lengths and minimum lags, one activity after
 // the other, each as early as the lags and the resources let it (serial generation: Kelley 1963).
@@ -13,8 +13,9 @@ type shop struct {
 	before [][]lagTo // lags into each activity
 	after  [][]lagTo // the same in mirrored time
 	rank   []int32   // an order in which every activity comes after those it waits for
-	prof   *profile
-	idle   []bool // asks for nothing
+	room   room
+	idle   []bool  // asks for nothing
+	key    []int64 // what byTime sorts by
 }
 
 type lagTo struct{ other, lag int32 }
@@ -33,7 +34,7 @@ func newShop(m *model) *shop {
 	}
 	l := newLanes(capacity)
 	h := &shop{n: n, length: m.length, before: make([][]lagTo, n), after: make([][]lagTo, n),
-		prof: newProfile(l, l.pack(capacity)), want: make([][]uint64, n), idle: make([]bool, n), from: make([]int32, n)}
+		room: newRoom(l, l.pack(capacity), p.End), want: make([][]uint64, n), idle: make([]bool, n), from: make([]int32, n), key: make([]int64, n)}
 	for i := range p.Acts {
 		use := make([]int32, len(p.Res))
 		h.idle[i] = true
@@ -94,7 +95,7 @@ func (h *shop) sort() bool {
 // forward schedules in the given order, in which every activity comes after those it waits for,
 // and gives the finish.
 func (h *shop) forward(order, start []int32) int32 {
-	h.prof.clear()
+	h.room.reset(0)
 	end := int32(0)
 	for _, i := range order {
 		t := h.from[i]
@@ -102,9 +103,7 @@ func (h *shop) forward(order, start []int32) int32 {
 			t = max(t, start[a.other]+a.lag)
 		}
 		if !h.idle[i] {
-			var k int
-			t, k = h.prof.find(t, h.length[i], h.want[i])
-			h.prof.use(t, h.length[i], h.want[i], k)
+			t = h.room.place(t, h.length[i], h.want[i])
 		}
 		start[i] = t
 		end = max(end, t+h.length[i])
@@ -115,16 +114,14 @@ func (h *shop) forward(order, start []int32) int32 {
 // backward schedules in mirrored time: the same, with activities in an order in which each comes
 // before those it waits for. start gets minus the finishes, from -end on.
 func (h *shop) backward(order, start []int32, end int32) {
-	h.prof.clear()
+	h.room.reset(-end)
 	for _, i := range order {
 		t := -end
 		for _, a := range h.after[i] {
 			t = max(t, start[a.other]+a.lag)
 		}
 		if !h.idle[i] {
-			var k int
-			t, k = h.prof.find(t, h.length[i], h.want[i])
-			h.prof.use(t, h.length[i], h.want[i], k)
+			t = h.room.place(t, h.length[i], h.want[i])
 		}
 		start[i] = t
 	}
@@ -137,25 +134,34 @@ func (h *shop) justify(order, start, tmp []int32, end int32) int32 {
 	for i := range start {
 		tmp[i] = -(start[i] + h.length[i])
 	}
+	slices.Reverse(order)
 	h.byTime(order, tmp, true)
 	h.backward(order, tmp, end)
 	for i := range start {
 		tmp[i] = -tmp[i] - h.length[i]
 	}
+	slices.Reverse(order)
 	h.byTime(order, tmp, false)
 	return h.forward(order, start)
 }
 
-// byTime sorts all activities by time; equal ones go by rank, which is turned round in mirrored time.
+// byTime sorts all activities by time; equal ones go by rank, which is turned round in mirrored
+// time. The order given is where it begins: each is put in its place among those before it, so that it
+// costs O(n) where little changes.
 func (h *shop) byTime(order, time []int32, mirrored bool) {
-	for i := range order {
-		order[i] = int32(i)
+	turn := int64(1)
+	if mirrored {
+		turn = -1
 	}
-	sort.Slice(order, func(x, y int) bool {
-		a, b := order[x], order[y]
-		if time[a] != time[b] {
-			return time[a] < time[b]
+	for i, t := range time {
+		h.key[i] = int64(t)<<32 + turn*int64(h.rank[i])
+	}
+	for k := 1; k < len(order); k++ {
+		i := order[k]
+		v, j := h.key[i], k
+		for ; j > 0 && h.key[order[j-1]] > v; j-- {
+			order[j] = order[j-1]
 		}
-		return (h.rank[a] < h.rank[b]) != mirrored
-	})
+		order[j] = i
+	}
 }

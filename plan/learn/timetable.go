@@ -27,19 +27,27 @@ type timetable struct {
 	most     int32     // its greatest level
 }
 
-func newTimetable(e *engine, capacity int32, users []user) {
+func newTimetable(e *engine, capacity int32, users []user) *timetable {
 	c := &timetable{id: int32(len(e.rules)), capacity: capacity, users: users, key: make([]int32, len(users)),
 		parts: make([]stretch, len(users)), seen: make([]view, len(users))}
-	var sides []side
-	for i, u := range users {
+	for i := range users {
 		c.byStart = append(c.byStart, int32(i))
 		c.byFinish = append(c.byFinish, int32(i))
-		sides = append(sides, u.start, u.start^1)
+	}
+	e.attach(c, c.sides())
+	return c
+}
+
+// sides are those that the profile depends on.
+func (c *timetable) sides() []side {
+	var out []side
+	for _, u := range c.users {
+		out = append(out, u.start, u.start^1)
 		if u.finish != u.start {
-			sides = append(sides, u.finish, u.finish^1)
+			out = append(out, u.finish, u.finish^1)
 		}
 	}
-	e.attach(c, sides)
+	return out
 }
 
 // order sorts ids by key; they are nearly in order already.
@@ -139,7 +147,7 @@ func (c *timetable) run(e *engine) bool {
 			k++
 		}
 		t := c.from[k] + (c.from[k+1]-c.from[k])/2
-		e.fell = why{whyRule, c.id, t, -1}
+		e.fell = why{kind: whyRule, id: c.id, at: t, who: -1}
 		e.clash = c.covers(e, t, -1, int32(len(e.list)), e.clash[:0])
 		return false
 	}
@@ -193,7 +201,7 @@ func (c *timetable) later(e *engine, i int32) bool {
 			if t < c.from[k] || t < e.now[u.start] {
 				break
 			}
-			if !e.raise(u.start, t+1, why{whyRule, c.id, t, i}) {
+			if !e.raise(u.start, t+1, why{kind: whyRule, id: c.id, at: t, who: i}) {
 				return false
 			}
 		}
@@ -220,7 +228,7 @@ func (c *timetable) earlier(e *engine, i int32) bool {
 				break
 			}
 			f := u.finishBy(t)
-			if !e.raise(f.s, f.v, why{whyRule, c.id, t, i}) {
+			if !e.raise(f.s, f.v, why{kind: whyRule, id: c.id, at: t, who: i}) {
 				return false
 			}
 		}

@@ -35,6 +35,7 @@ type why struct {
 	id   int32
 	at   int32 // a propagator's note: the minute
 	who  int32 // and the activity, as it counts them
+	upTo int32 // where the note is an interval: its end
 }
 
 // raised is an entry of the trail.

@@ -6,6 +6,7 @@ type user struct {
 	finish side  // the finish is the lower side of this, plus length
 	length int32 // where finish is start: the fixed length; else 0
 	amount int32
+	least  int32 // it takes as long as this at least
 }
 
 func (e *engine) latestStart(u *user) int32    { return -e.now[u.start^1] }

@@ -32,7 +32,9 @@ func (m *model) resources() bool {
 		case len(us) == 0:
 		case calm:
 			m.titled("use %d", k)
-			newTimetable(m.engine, capacity, us)
+			c := newTimetable(m.engine, capacity, us)
+			m.titled("use %d", k)
+			newEnergy(m.engine, c)
 		default:
 			m.titled("use %d", k)
 			newWorktable(m.engine, capacity, ws)
@@ -87,7 +89,7 @@ func (m *model) watchers(i int) int32 {
 
 // afterWatch is the fire watch after the last piece of activity i.
 func (m *model) afterWatch(i int) user {
-	return user{m.finish[i], m.finish[i], m.acts[i].watch, 1}
+	return user{m.finish[i], m.finish[i], m.acts[i].watch, 1, m.acts[i].watch}
 }
 
 // workfaces numbers the workfaces, from 1 on, for the watches that may be shared in each. Hot work
@@ -107,7 +109,7 @@ func (m *model) workfaces() {
 }
 
 func (m *model) user(i int, amount int32) user {
-	return user{m.start[i], m.finish[i], m.length[i], amount}
+	return user{m.start[i], m.finish[i], m.length[i], amount, m.least(i)}
 }
 
 // groups makes a rule for each set of people that some need leaves the choice among, and for all

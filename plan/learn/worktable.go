@@ -80,7 +80,7 @@ func (c *worktable) run(e *engine) bool {
 		for c.level[k] <= c.capacity {
 			k++
 		}
-		e.fell = why{whyRule, c.id, c.from[k], -1}
+		e.fell = why{kind: whyRule, id: c.id, at: c.from[k], who: -1}
 		e.clash = c.covers(e, c.from[k], -1, int32(len(e.list)), e.clash[:0])
 		return false
 	}
@@ -126,7 +126,7 @@ func (c *worktable) deny(e *engine, i int32) bool {
 		}
 		if t := w.mask.firstFrom(max(from, c.from[k])); t < min(to, c.from[k+1]) {
 			f := w.on.not()
-			return e.raise(f.s, f.v, why{whyRule, c.id, t, i})
+			return e.raise(f.s, f.v, why{kind: whyRule, id: c.id, at: t, who: i})
 		}
 	}
 	return true
@@ -153,7 +153,7 @@ func (c *worktable) later(e *engine, i int32) bool {
 		if t < max(c.from[k], e.now[w.start]) {
 			continue
 		}
-		if !e.raise(w.start, t+1, why{whyRule, c.id, t, i}) {
+		if !e.raise(w.start, t+1, why{kind: whyRule, id: c.id, at: t, who: i}) {
 			return false
 		}
 		k-- // a fixed length has moved the finish too: the rest of the segment may be reached
@@ -183,7 +183,7 @@ func (c *worktable) earlier(e *engine, i int32) bool {
 			continue
 		}
 		f := w.finishBy(t)
-		if !e.raise(f.s, f.v, why{whyRule, c.id, t, i}) {
+		if !e.raise(f.s, f.v, why{kind: whyRule, id: c.id, at: t, who: i}) {
 			return false
 		}
 		k++
