@@ -14,6 +14,7 @@ type breeder struct {
 	tmp   []int32
 	made  int64 // schedules made
 	stale int   // children since the last improvement of the herd's best
+	size  int   // beasts in the herd
 }
 
 // beast is a schedule with its order.
@@ -27,11 +28,11 @@ type beast struct {
 const (
 	herdSize = 80
 	swapOne  = 8    // one in so many neighbours is swapped in a child
-	staleAt  = 4000 // children without improvement before the herd is renewed
+	staleAt  = 50 // children for each of the herd without improvement before it is renewed
 )
 
 func newBreeder(h *shop, seed uint64) *breeder {
-	return &breeder{shop: h, rnd: rand.New(rand.NewPCG(seed, 17)), taken: make([]bool, h.n), tmp: make([]int32, h.n)}
+	return &breeder{shop: h, rnd: rand.New(rand.NewPCG(seed, 17)), size: herdSize, taken: make([]bool, h.n), tmp: make([]int32, h.n)}
 }
 
 func (b *breeder) fresh() *beast {
@@ -99,7 +100,7 @@ func (b *breeder) finish(x *beast) {
 // step makes one beast more and gives true if it is the best so far.
 func (b *breeder) step() bool {
 	old := b.best
-	if len(b.herd) < herdSize {
+	if len(b.herd) < b.size {
 		spread := 0.1 + 0.6*b.rnd.Float64()
 		if len(b.herd) == 0 && old == nil {
 			spread = 0
@@ -107,8 +108,9 @@ func (b *breeder) step() bool {
 		b.herd = append(b.herd, b.found(spread))
 		return b.best != old
 	}
-	if b.stale++; b.stale > staleAt {
+	if b.stale++; b.stale > staleAt*b.size {
 		b.stale = 0
+		b.size += b.size / 2
 		b.herd = b.herd[:0]
 		if b.rnd.IntN(3) > 0 { // two times in three the best stays in the herd
 			b.herd = append(b.herd, b.best)
@@ -130,7 +132,7 @@ func (b *breeder) welcome(starts []int) {
 	}
 	b.byTime(x.order, x.start, false)
 	b.finish(x)
-	if len(b.herd) < herdSize {
+	if len(b.herd) < b.size {
 		b.herd = append(b.herd, x)
 		return
 	}
