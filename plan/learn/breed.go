@@ -27,7 +27,7 @@ type beast struct {
 // chosen by their finish, rarer swaps and repeated justification all came out worse.
 const (
 	herdSize = 80
-	swapOne  = 8    // one in so many neighbours is swapped in a child
+	swapOne  = 8  // one in so many neighbours is swapped in a child
 	staleAt  = 50 // children for each of the herd without improvement before it is renewed
 )
 
