@@ -168,6 +168,9 @@ func sorted[V any](m map[string]V) []string {
 	return keys
 }
 
+// From says where one of the paint's figures comes from; names are those of Sources.
+func (p Paint) From(name string) origin.Origin { return p.source(name) }
+
 // source says where one of the paint's figures comes from.
 func (p Paint) source(name string) origin.Origin {
 	if o, ok := p.Sources[name]; ok {

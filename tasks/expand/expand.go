@@ -44,6 +44,7 @@ func Expand(job *tasks.Job, b Basis) (*Work, tasks.Faults) {
 	for i, s := range w.Steps {
 		s.Index = i
 	}
+	x.tins()
 	x.notes()
 	return w, nil
 }

@@ -281,6 +281,7 @@ func (x *expander) coatHours(t *tasks.Task, p *tasks.Paint, k int) hands {
 		return h
 	}
 	h.share(a.Range, a.Hours, h.people, t)
+	h.stands(p, a.Induction)
 	h.est.Notes = a.Warnings
 	h.est.Facts = append(h.est.Facts, area, a.Volume)
 	mixed(&h, p, a, j.Celsius)

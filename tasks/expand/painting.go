@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"math"
 	"slices"
+	"strings"
 
 	"sailby/tasks"
 	"sailby/tasks/coat"
@@ -108,15 +109,56 @@ func mixed(h *hands, p *tasks.Paint, a coat.Application, temperatureOf float64) 
 		}
 		h.est.Notes = append(h.est.Notes, note)
 	}
-	if len(a.Tins) > 0 {
-		note := "open"
-		for i, t := range a.Tins {
-			if i > 0 {
-				note += " and"
+}
+
+// stands adds the time that the first mix must stand before it is used, waited out at the work; later mixes stand
+// while the one before is used.
+func (h *hands) stands(p *tasks.Paint, induction quantity.Clock) {
+	if !p.TwoPack() || induction <= 0 {
+		return
+	}
+	wait := float64(induction)
+	h.minutes = quantity.Range{Low: h.minutes.Low + wait, Likely: h.minutes.Likely + wait, High: h.minutes.High + wait}
+	h.est.Figure = origin.Worked("hands-on time", h.minutes.Likely, "min", "work + standing of the first mix, waited out at the work", h.est.Figure,
+		origin.Figure{Name: "induction", Value: wait, Unit: "min", Origin: p.From("induction")})
+}
+
+// tins says for every coat what tins all coats of its paint open: what is left of base and hardener in a tin is closed
+// and kept for the next, so that they are picked for the sum, and not coat by coat.
+func (x *expander) tins() {
+	for _, p := range x.w.Job.Paints {
+		sum, coats := 0.0, []*Step{}
+		for _, s := range x.w.Steps {
+			if s.Paint != p || s.Absent {
+				continue
 			}
-			note += fmt.Sprintf(" %d of %s L", t.Count, origin.Trim(t.Size))
+			for _, c := range s.Estimate.Consumables {
+				if c.What == "paint "+p.Name {
+					sum += c.Amount
+					coats = append(coats, s)
+				}
+			}
 		}
-		h.est.Notes = append(h.est.Notes, note+" of "+p.Name)
+		tins, err := coat.Tins(sum, p.PackSizes)
+		if err != nil || len(tins) == 0 {
+			continue
+		}
+		var words []string
+		for _, t := range tins {
+			words = append(words, fmt.Sprintf("%d of %s L", t.Count, origin.Trim(t.Size)))
+		}
+		note := "open " + strings.Join(words, " and ") + " of " + p.Name
+		if len(coats) > 1 {
+			note += fmt.Sprintf(" for all %d coats of it, %s L in all", len(coats), origin.Trim(math.Ceil(sum*100)/100))
+		}
+		if len(coats) > 1 && p.TwoPack() {
+			note += "; a part-used tin of base or hardener is closed and kept, a mix is not"
+		} else if len(coats) > 1 {
+			note += "; a part-used tin is closed and kept"
+		}
+		for _, s := range coats {
+			s.Estimate.Notes = append(s.Estimate.Notes, note)
+		}
 	}
 }
 
@@ -142,6 +184,7 @@ func (x *expander) stripe(t *tasks.Task, p *tasks.Paint) *Step {
 		h.fault, h.hint = err, "complete the paint, or leave the stripe out"
 	} else {
 		h.share(spread(float64(a.Stripe.Minutes)), a.Stripe.Hours, h.people, t)
+		h.stands(p, a.Induction)
 		h.est.Range = [3]int{whole(h.minutes.Low), whole(h.minutes.Likely), whole(h.minutes.High)}
 		h.est.Consumables = append(h.est.Consumables, Consumable{What: "paint " + p.Name, Amount: a.Stripe.Litres, Unit: "L", Spare: a.Stripe.Litres * 0.1})
 		h.est.Notes = []string{"by brush: edges, welds, bolts, 25 mm to each side"}

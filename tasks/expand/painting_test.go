@@ -6,14 +6,16 @@ import (
 	"testing"
 
 	"sailby/tasks"
+	"sailby/tasks/origin"
 )
 
 func TestAStripeIsACoatOfItsOwnWithItsWait(t *testing.T) {
 	w := likely(t, "tasks: {paint: {kind: coat, at: shop, area: 4 m2, stripe: 12 m, coats: [primer, primer]}, next: {at: shop, hours: 1 h, after: {paint: applied}}}")
 	same(t, "steps", w.keys(), "paint / stripe, paint / stripe touch dry, paint / coat 1, paint / dry 1, paint / coat 2, next / plain")
 	stripe, full := w.step(t, "paint / stripe"), w.step(t, "paint / coat 1")
-	// 12 m at 60 m/h are 12 min, and half of a brush's 20 min of setting up and cleaning (house judgement, by hand)
-	same(t, "minutes of the stripe", stripe.HandsOn, 22)
+	// 12 m at 60 m/h are 12 min, half of a brush's 20 min of setting up and cleaning (house judgement, by hand), and
+	// the mix stands 15 min
+	same(t, "minutes of the stripe", stripe.HandsOn, 37)
 	same(t, "states of a stripe", states(stripe), "people, wet film, soft film, solvent")
 	same(t, "the full coat waits until it is touch dry", w.linksOf(full), "paint / stripe touch dry finish -> start")
 	if want := 1 / between(360, 180); math.Abs(w.step(t, "paint / stripe touch dry").Rate(0)-want) > 1e-12 {
@@ -55,6 +57,53 @@ func TestStripsAlongSeamsStayBareAndArePatched(t *testing.T) {
 		t.Errorf("taping takes %d min, want 30", got)
 	}
 	refused(t, "are more than its surface", "tasks: {it: {at: shop, kind: coat, surface: frame, coats: primer, leave bare: 900 m}}")
+}
+
+// The first mix stands before it is used: that is planned, whoever shares the rest of the work; it is no part of hours that
+// the file gives, nor of a paint of one part.
+func TestTheFirstMixStands(t *testing.T) {
+	minutes := func(paint, more string) int {
+		w := likely(t, "paints: {own: {kind: "+paint+"}}", "tasks: {it: {at: shop, kind: coat, area: 6 m2, coats: own"+more+"}}")
+		return w.step(t, "it / coat 1").HandsOn
+	}
+	for _, c := range []struct {
+		what, paint, more string
+		want              int
+	}{
+		{"one painter", "two-pack epoxy", "", 40},
+		{"two painters", "two-pack epoxy", ", people: 2", 40},
+		{"hours given", "two-pack epoxy", ", hours: 3 h", 0},
+		{"one part", "alkyd", "", 0},
+	} {
+		if got := minutes(c.paint+", induction: 40 min", c.more) - minutes(c.paint+", induction: 0 min", c.more); got != c.want {
+			t.Errorf("%s: standing takes %d min of the plan, want %d", c.what, got, c.want)
+		}
+	}
+	w := likely(t, "paints: {own: {kind: two-pack epoxy, induction: 40 min}}", "tasks: {it: {at: shop, kind: coat, area: 6 m2, coats: own}}")
+	found := false
+	w.Steps[0].Estimate.Figure.Walk(func(f origin.Figure, _ int) {
+		found = found || f.Name == "induction" && f.Value == 40 && f.Origin.File == "job.yaml"
+	})
+	if !found {
+		t.Errorf("why does not tell where the standing comes from: %+v", w.Steps[0].Estimate.Figure)
+	}
+}
+
+// Two coats of 15 m2 at 75 um and 60 % with an eighth lost take 2.143 L each: by themselves a tin of 5 L each, in all
+// 4.29 L out of one tin (by hand).
+func TestTinsArePickedForTheSum(t *testing.T) {
+	const paint = "paints: {own: {kind: two-pack epoxy, dft: 75 um, volume solids: 60 %, packs: [5 L]}, enamel: {kind: alkyd}}"
+	w := likely(t, paint, "tasks: {a: {at: shop, kind: coat, area: 15 m2, coats: own}, b: {at: shop, kind: coat, area: 15 m2, coats: own, after: a}, c: {at: shop, kind: coat, area: 2 m2, coats: enamel}}")
+	const want = "open 1 of 5 L of own for all 2 coats of it, 4.29 L in all; a part-used tin of base or hardener is closed and kept, a mix is not"
+	for _, key := range []string{"a / coat 1", "b / coat 1"} {
+		if notes := strings.Join(w.step(t, key).Estimate.Notes, "|"); !strings.Contains(notes, want) {
+			t.Errorf("%s: no %q in %q", key, want, notes)
+		}
+	}
+	// 2 m2 at 50 um and 45 %: 0.254 L
+	if notes := strings.Join(w.step(t, "c / coat 1").Estimate.Notes, "|"); !strings.Contains(notes, "open 1 of 1 L of enamel") || strings.Contains(notes, "for all") {
+		t.Errorf("one coat: %q", notes)
+	}
 }
 
 func TestPreparationHoldsForSoLong(t *testing.T) {
