@@ -222,7 +222,8 @@ func (c *checker) paint() {
 				continue
 			}
 			t := k.s.Task
-			if !h.s.Task.PaintOff && !t.Bare.Pos.Given() && meet(h.s.Task.Parts, t.Surface) && h.p.Finish > k.p.Start {
+			on, back := meet(h.s.Task.Parts, t.Surface) && !t.Bare.Pos.Given(), meet(h.s.Task.Parts, t.Behind)
+			if !h.s.Task.PaintOff && (on || back) && h.p.Finish > k.p.Start {
 				c.add("R27", h, c.when(k.p.Start, h.s.Place), c.when(h.p.Finish, h.s.Place), "hot work on what %s coats", t.Label()).Other = k.s.Key()
 			}
 			if f := h.s.Face; f != nil && f.Closed && k.s.Face != nil && near(f, k.s.Face) && k.p.Start < h.p.Finish && !tested {

@@ -242,6 +242,12 @@ func TestHotWorkAndPaint(t *testing.T) {
 		{"after it on another part", "04-08 08:30-09:30", func(b, p *tasks.Task) { b.Parts, p.Surface = []string{"frame/base"}, []string{"frame/posts"} }, ""},
 		{"on a part of what is coated", "04-08 08:30-09:30", func(b, _ *tasks.Task) { b.Parts = []string{"frame/base"} }, "R27"},
 		{"seams left bare", "04-08 08:30-09:30", func(_, p *tasks.Task) { p.Bare = tasks.Amount{Value: 900, Pos: tasks.Pos{Line: 1}} }, ""},
+		{"behind it", "04-08 08:30-09:30", func(b, p *tasks.Task) { b.Parts, p.Behind = []string{"hull/side"}, []string{"hull"} }, "R27"},
+		{"behind it, before it", "04-06 08:30-09:30", func(b, p *tasks.Task) { b.Parts, p.Behind = []string{"hull/side"}, []string{"hull"} }, ""},
+		{"seams left bare do not help behind it", "04-08 08:30-09:30", func(b, p *tasks.Task) {
+			b.Parts, p.Behind, p.Bare = []string{"hull"}, []string{"hull/side"}, tasks.Amount{Value: 900, Pos: tasks.Pos{Line: 1}}
+		}, "R27"},
+		{"behind something else", "04-08 08:30-09:30", func(b, p *tasks.Task) { b.Parts, p.Behind = []string{"hull/deck"}, []string{"hull/side"} }, ""},
 		{"paint taken off first", "04-08 08:30-09:30", func(b, _ *tasks.Task) { b.PaintOff = true }, ""},
 	} {
 		t.Run(c.what, func(t *testing.T) {

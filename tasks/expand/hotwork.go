@@ -92,7 +92,7 @@ func (x *expander) comesAfter(t, before *tasks.Task) bool {
 	return look(t)
 }
 
-// hotOverCoats keeps hot work before the coats on the same part: burning and welding through a film is
+// hotOverCoats keeps hot work before the coats on the same part, or behind it: burning and welding through a film is
 // forbidden, cured or not (R27).
 func (x *expander) hotOverCoats() {
 	for _, h := range x.w.Job.Tasks {
@@ -100,18 +100,26 @@ func (x *expander) hotOverCoats() {
 			continue
 		}
 		for _, c := range x.w.Job.Tasks {
-			if c.Kind != tasks.Coat || x.absent[c] || c.Bare.Pos.Given() || !meet(h.Parts, c.Surface) || x.comesAfter(c, h) {
+			if c.Kind != tasks.Coat || x.absent[c] || !burns(h, c) || x.comesAfter(c, h) {
 				continue
 			}
 			if x.comesAfter(h, c) {
-				x.fault(h.Pos, "put it before the coat, write `leave bare: 2 m` (its seams) on the coat, or `paint off first: yes` here",
-					"task %q: hot work on what %q has coated", h.Name, c.Name)
+				what, way := "on what %q has coated", "put it before the coat, write `leave bare: 2 m` (its seams) on the coat, or `paint off first: yes` here"
+				if meet(h.Parts, c.Behind) {
+					what, way = "behind what %q has coated", "put it before the coat, or write `paint off first: yes` here"
+				}
+				x.fault(h.Pos, way, "task %q: hot work "+what, h.Name, c.Name)
 				continue
 			}
 			x.w.Orders = append(x.w.Orders, Order{Pos: c.Pos, Text: fmt.Sprintf("%s before %s: no hot work on paint", h.Name, c.Name),
 				Choices: []Before{{First: x.handsOf(h), Then: x.handsOf(c)}}})
 		}
 	}
+}
+
+// burns says whether hot work h harms coat c: on what it coats, unless the seams are left bare, or on what it is behind.
+func burns(h, c *tasks.Task) bool {
+	return !c.Bare.Pos.Given() && meet(h.Parts, c.Surface) || meet(h.Parts, c.Behind)
 }
 
 func (x *expander) hot(t *tasks.Task) bool {

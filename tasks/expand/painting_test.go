@@ -193,6 +193,14 @@ func TestHotWorkComesBeforePaint(t *testing.T) {
 			t.Errorf("%s: orders %+v", c.what, w.Orders)
 		}
 	}
+	behind := "paint: {kind: coat, at: shop, area: 4 m2, coats: primer, behind: frame}"
+	if w := likely(t, "tasks: {"+hotOnFrame+"}, "+behind+"}"); len(w.Orders) != 1 || len(w.Orders[0].Choices) != 1 || w.Orders[0].Choices[0].First[0].Task.Name != "weld" {
+		t.Errorf("behind the coat: orders %+v", w.Orders)
+	}
+	if w := likely(t, "tasks: {"+hotOnFrame+", paint off first: yes, after: paint}, "+behind+"}"); len(w.Orders) != 0 {
+		t.Errorf("behind the coat, paint taken off first: orders %+v", w.Orders)
+	}
+	refused(t, `hot work behind what "paint" has coated`, "tasks: {"+hotOnFrame+", after: paint}, "+strings.Replace(behind, "behind", "leave bare: 1 m, behind", 1)+"}")
 	refused(t, `hot work on what "paint" has coated`, "tasks: {"+hotOnFrame+", after: paint}, "+paint+"}}")
 }
 
