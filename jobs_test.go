@@ -96,6 +96,14 @@ func said(rep *plan.Report, key string) string {
 			}
 		}
 		return "gets off"
+	case "mended":
+		var names []string
+		for _, m := range a.Work.Rescues {
+			if m.Mended {
+				names = append(names, m.Name)
+			}
+		}
+		return strings.Join(names, ", ")
 	case "with maybes":
 		return fmt.Sprintf("%s %s", rep.Maybes.Verdict, stamp(rep.Maybes.Finish, zone))
 	}

@@ -99,6 +99,7 @@ type Task struct {
 	Shape     string    // surface prep, coat: flat, sections or lattice; "" is sections
 	Condition string    // surface prep: new, light rust, heavy rust or painted; "" is new
 	Coats     []string  // coat: paints in order
+	Rescue    *bool     // coat: whether a longest wait before it may be mended; nil: it may
 	Behind    []string  // coat: assemblies or assembly/part whose other face it is, or that are close beside it
 	Lifts     string    // lift, move: assembly (or assembly/part)
 	Mass      Amount    // kg: stated

@@ -143,7 +143,7 @@ func (c *checker) weather(r *row, need func(line, string, string, string)) {
 		}
 		c.untilDry(l, s)
 		need(l, "R25", s.Paint.Name, "may not be put on: weather, or what would be lost in it")
-	case s.Task.Kind == tasks.Prep && !wipes(s.Task):
+	case s.Task.Kind == tasks.Prep && !wipes(s.Task), s.Mends:
 		need(c.dryAir(s), "R25", "surface preparation", "would turn: damp or wet")
 	case s.Gust.Value > 0:
 		l := c.line(false)

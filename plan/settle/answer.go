@@ -35,8 +35,17 @@ type asked struct {
 	plain  bool // that there is a proof is enough: what it needs is not asked for
 }
 
-// answer settles one basis. explain adds leeway and what sets every start.
+// answer settles one basis; where nothing fits, with what mends longest waits that cannot be kept.
 func answer(ctx context.Context, job *tasks.Job, b expand.Basis, o Options, explain bool) (*plan.Answer, error) {
+	first, err := alone(ctx, job, b, o, explain)
+	if err != nil {
+		return nil, err
+	}
+	return mended(ctx, job, first, o, explain)
+}
+
+// alone settles one basis as it is. explain adds leeway and what sets every start.
+func alone(ctx context.Context, job *tasks.Job, b expand.Basis, o Options, explain bool) (*plan.Answer, error) {
 	a, err := ask(ctx, job, b, o)
 	if err != nil {
 		return nil, err

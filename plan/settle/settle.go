@@ -116,7 +116,7 @@ func settle(ctx context.Context, job *tasks.Job, o Options, sofar *atomic.Pointe
 		return nil, err
 	}
 	if rep.Likely.Verdict == plan.CannotFit {
-		rep.LowToo = cannot(ctx, job, expand.Basis{Trip: o.Trip, End: expand.Low}, o)
+		rep.LowToo = impossible(ctx, job, expand.Basis{Trip: o.Trip, End: expand.Low}, o)
 		if rep.Likely.Proof != nil {
 			rep.Likely.Proof.Even = rep.LowToo
 		}

@@ -2,6 +2,7 @@ package agenda
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 
 	"sailby/plan"
@@ -29,10 +30,13 @@ func BasisWords(b expand.Basis) string {
 	return s
 }
 
-// Word is an answer's verdict as people read it: "fits", "fits, but neaped", "cannot fit", "not settled".
+// Word is an answer's verdict as people read it: "fits", "fits, with a rescue", "fits, but neaped", "cannot fit", "not settled".
 func Word(a *plan.Answer) string {
 	switch a.Verdict {
 	case plan.Fits:
+		if slices.ContainsFunc(a.Work.Rescues, func(m expand.Rescue) bool { return m.Mended }) {
+			return "fits, with a rescue" + butNeaped(a)
+		}
 		return "fits" + butNeaped(a)
 	case plan.CannotFit:
 		return "cannot fit"
@@ -49,6 +53,12 @@ func Sentence(a *plan.Answer, low bool) string {
 	case plan.Fits:
 		s := fmt.Sprintf("Fits%s: %s the work at %s is finished by %s, %s before the window closes",
 			butNeaped(a), basis, PlaceLabel(a.Work.Window.Place), When(a.Finish, zone), quantity.Hours(a.InHand))
+		for _, m := range a.Work.Rescues {
+			if m.Mended {
+				s += fmt.Sprintf("; the longest wait of %s before %s cannot be kept and costs %s of %s: ask the paint's maker first",
+					clean.Line(m.Paint.Name), TaskLabel(m.Task), quantity.Hours(m.Step.HandsOn), m.Name)
+			}
+		}
 		if butNeaped(a) != "" {
 			s += "; what came in on the tide stays"
 		}

@@ -30,6 +30,7 @@ func Expand(job *tasks.Job, b Basis) (*Work, tasks.Faults) {
 		x.task(t)
 	}
 	x.links()
+	x.mend()
 	x.holds()
 	x.hotOverCoats()
 	x.homeward()

@@ -213,10 +213,18 @@ func (x *expander) swapLast(t *tasks.Task, s, b *Step) {
 // longest adds the longest wait for the next coat, from start to start and from finish to
 // finish (R10), shortening with heat (R11).
 func (x *expander) longest(t *tasks.Task, a, b *Step, p *tasks.Paint, max coat.Curve) {
+	if x.mendable(t, a, b, p) {
+		return
+	}
 	why := "longest recoat of " + p.Name
 	if r := x.rescue(a); r != "" {
 		why += " (missed: " + r + ")"
 	}
+	x.bound(t, a, b, p, max, why)
+}
+
+// bound adds a longest wait between two coats.
+func (x *expander) bound(t *tasks.Task, a, b *Step, p *tasks.Paint, max coat.Curve, why string) {
 	series := t.Place.WarmHourly(t.Face)
 	add := func(l Link) {
 		for _, end := range []tasks.LinkEnd{tasks.Start, tasks.Finish} {

@@ -1,12 +1,14 @@
 package expand
 
 import (
+	"fmt"
 	"math"
 	"strings"
 	"testing"
 
 	"sailby/tasks"
 	"sailby/tasks/origin"
+	"sailby/tasks/site"
 )
 
 func TestAStripeIsACoatOfItsOwnWithItsWait(t *testing.T) {
@@ -160,6 +162,87 @@ func TestAMissedLongestWaitHasItsRescue(t *testing.T) {
 	same(t, "the link names it (tack coat over epoxy: UFGS-09971)", why, "longest recoat of primer (missed: tack coat)")
 	if notes := strings.Join(w.Steps[0].Estimate.Notes, "\n"); strings.Count(notes, "if the longest wait to the next coat is missed: tack coat") != 1 {
 		t.Errorf("the coat notes it once: %s", notes)
+	}
+}
+
+// A longest wait that is mended does not hold; what mends it is a step before the coat that would come too late.
+func TestMendedWait(t *testing.T) {
+	with := func(tasksText, paint string, rescue ...string) *Work {
+		w, faults := Expand(read(t, "tasks: {"+tasksText+"}", paint), Basis{Rescue: rescue})
+		if len(faults) > 0 {
+			t.Fatal(faults)
+		}
+		return w
+	}
+	const epoxy = "paints: {p: {kind: two-pack epoxy, induction: 0 min, next coat: {p: {10 C: {min: 8 h, max: 2 d}}}}}"
+	const enamel = "paints: {p: {kind: alkyd, next coat: {p: {10 C: {min: 8 h, max: 2 d}}}}}"
+	const two = "it: {kind: coat, at: shop, area: 8 m2, coats: [p, p]}"
+	w := with(two, epoxy, "it / coat 2")
+	same(t, "steps", w.keys(), "it / coat 1, it / dry 1, it / tack coat before coat 2, it / coat 2")
+	tack := w.step(t, "it / tack coat before coat 2")
+	same(t, "it comes after the least wait", w.linksOf(tack), "it / dry 1 finish -> start")
+	// 92.99 min by hand (testdata/jobs/corners/missed-recoat.yaml), 20 of tools, 10 of mixing
+	same(t, "minutes", tack.HandsOn, 123)
+	same(t, "states", states(tack), "people, wet film, soft film, solvent")
+	if tack.Paint == nil || !tack.Mends || !tack.InOneGo || tack.Estimate.Consumables[0].What != "paint p" {
+		t.Errorf("the tack coat is no coat: %+v", tack)
+	}
+	waits := ""
+	for _, l := range w.Links {
+		if l.To.Key() == "it / coat 2" {
+			ends := map[tasks.LinkEnd]string{tasks.Start: "start", tasks.Finish: "finish"}
+			waits += fmt.Sprintf("%s %s->%s %d..%d; ", l.From.Name, ends[l.FromEnd], ends[l.ToEnd], l.Min, l.Max)
+		}
+	}
+	// the longest wait of 2 d at 10 °C is 2 d / root of 2 at the shop's 15 °C
+	same(t, "the coat after it", waits, fmt.Sprintf("tack coat before coat 2 finish->start 240..%d; tack coat before coat 2 start->start %d..2036; tack coat before coat 2 finish->finish %d..2036; ", NoMax, NoMin, NoMin))
+
+	w = with(two, enamel, "it / coat 2")
+	abraded := w.step(t, "it / abrade and wipe before coat 2")
+	// 8 m2 at 5 and 12 m2/h, halved on sections: (192 + 80)/2 min
+	same(t, "minutes of abrading", abraded.HandsOn, 136)
+	same(t, "states of abrading", states(abraded), "people, grit")
+	if abraded.Paint != nil || abraded.InOneGo || !abraded.OverMeals || !abraded.Mends {
+		t.Errorf("abrading: %+v", abraded)
+	}
+	damp := w.NatureIn(abraded, w.Span)
+	same(t, "no weather, nothing closed", len(damp), 0)
+
+	w = with("first: {kind: coat, at: shop, area: 8 m2, coats: p}, look: {at: shop, hours: 1 h}, next: {kind: coat, at: shop, area: 8 m2, stripe: 3 m, coats: p, after: [first, look]}", epoxy, "next / coat 1")
+	same(t, "before the stripe", strings.Contains(w.keys(), "next / tack coat before stripe, next / stripe, next / stripe touch dry, next / coat 1"), true)
+	same(t, "it waits for what the task waits for", w.linksOf(w.step(t, "next / tack coat before stripe")), "first / recoat finish -> start; look / plain finish -> start")
+
+	w = with(strings.Replace(two, "area", "rescue: no, area", 1), epoxy, "it / coat 2")
+	same(t, "not wanted", w.keys()+fmt.Sprint(len(w.Rescues)), "it / coat 1, it / dry 1, it / coat 20")
+	plain, loose := with(two, epoxy), func() *Work {
+		w, _ := Expand(read(t, "tasks: {"+two+"}", epoxy), Basis{Unbound: true})
+		return w
+	}()
+	same(t, "longest waits that hold, and that do not", fmt.Sprint(len(plain.Links)-len(loose.Links), len(plain.Rescues), len(loose.Rescues)), "2 1 1")
+}
+
+// Abrading is closed in damp air, a tack coat as any coat is.
+func TestMendingWaitsForWeather(t *testing.T) {
+	for _, kind := range []string{"alkyd", "two-pack epoxy"} {
+		job := read(t, "tasks: {it: {kind: coat, at: pier/hinge, area: 8 m2, coats: [p, p]}}", "paints: {p: {kind: "+kind+", next coat: {p: {10 C: {min: 8 h, max: 2 d}}}}}")
+		b := Basis{Rescue: []string{"it / coat 2"}}
+		w, faults := Expand(job, b)
+		if len(faults) > 0 {
+			t.Fatal(faults)
+		}
+		job.Places[1].Climate = &tasks.Climate{Hourly: weatherOf(w.Span, func(h int) site.Weather {
+			x := fine()
+			if h%48 == 0 {
+				x.Steel = 7
+			}
+			return x
+		})}
+		w, _ = Expand(job, b)
+		for _, s := range w.Steps {
+			if s.Mends && len(w.Nature(s)) == 0 {
+				t.Errorf("%s: %s is done in damp air", kind, s.Name)
+			}
+		}
 	}
 }
 

@@ -27,6 +27,8 @@ func (w *Work) NatureIn(s *Step, in hours.Span) []site.Span {
 	switch {
 	case s.Paint != nil:
 		out = w.coatWeather(s, in)
+	case s.Mends:
+		out = w.dampAir(s.Task, in)
 	case s.Task.Kind == tasks.Prep:
 		out = w.damp(s.Task, in)
 	case s.Gust.Name != "":
@@ -157,11 +159,19 @@ func settles(dew, steel float64) float64 {
 // damp gives when surface preparation may not be done and prepared steel turns; nil where weather
 // does not bear on it.
 func (w *Work) damp(t *tasks.Task, in hours.Span) []site.Span {
-	series := t.Place.Hourly(t.Face)
-	if series == nil {
+	if t.Place.Hourly(t.Face) == nil {
 		return nil
 	}
 	if p, ok := (&expander{w: w}).preparation(t); !ok || p.MaxWait <= 0 {
+		return nil
+	}
+	return w.dampAir(t, in)
+}
+
+// dampAir gives when steel that is bared or abraded would not keep its grade.
+func (w *Work) dampAir(t *tasks.Task, in hours.Span) []site.Span {
+	series := t.Place.Hourly(t.Face)
+	if series == nil {
 		return nil
 	}
 	return series.ClosedBy(func(h site.Weather) []string {

@@ -29,6 +29,9 @@ type Basis struct {
 	Trip   string // "" is the booked trip, else the first
 	End    End
 	Maybes bool // every maybe happens
+
+	Rescue  []string // longest waits that are mended, by Rescue.Key
+	Unbound bool     // longest waits that may be mended do not hold and are not mended: for proofs, too kind to the job
 }
 
 // Work is a job written out for one basis: what plan/problem compiles and what plan/check
@@ -48,6 +51,7 @@ type Work struct {
 	Travel    map[string][]hours.Span // by person: legs of the trip, which count as duty
 	Deadlines []Deadline
 	Notes     []tasks.Note // what is worth saying that is no fault
+	Rescues   []Rescue     // longest waits that may be mended, in file order
 }
 
 // Window is when the site can be worked.
@@ -107,7 +111,8 @@ type Step struct {
 	Moves   string       // assembly that it moves: exclusive with all other work on it
 	Works   []string     // assemblies it works on
 	Wants   []string     // permits wanted, by Permit.Name
-	Paint   *tasks.Paint // of a coat or a stripe; nil for all others
+	Paint   *tasks.Paint // of a coat, a stripe or a tack coat; nil for all others
+	Mends   bool         // mends a longest wait that is not kept (R11): a tack coat, or abrading where it has no Paint
 
 	NotBefore hours.Minute // hours.Never if free
 	Deadline  hours.Minute // hours.Far if free; includes the window for site work

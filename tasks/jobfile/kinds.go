@@ -77,6 +77,7 @@ var (
 		patchKey,
 		{name: "stripe", takes: anAmount, dim: quantity.Length, low: 0, high: 1e7, example: "12 m", says: "edges and welds striped by brush before the first full coat, with a wait of its own (R11)"},
 		{name: "leave bare", takes: anAmount, dim: quantity.Length, low: 0, high: 1e7, example: "9.6 m", says: "seams kept bare and taped, 50 mm to each side: taken off the area of the surface (R27)"},
+		{name: "rescue", takes: yesNo, usual: "yes", example: "no", says: "where the longest wait to one of its coats cannot be kept, a tack coat or abrading may mend it (R11)"},
 		{name: "behind", takes: names, example: "frame/base", says: "assemblies or parts behind or close beside what it coats, of which it is the other face: hot work on them burns it (R27)"},
 		{name: "profile", takes: anAmount, dim: quantity.Film, low: 0, high: 150, usual: "0 um", example: "60 um", says: "of blasted steel, Rz, that the first coat fills"},
 		{name: "coats", takes: names, need: true, example: "[primer, primer]", says: "paints in order"},
@@ -175,6 +176,7 @@ func (r *reader) byKind(t *tasks.Task, f *fields) {
 		t.Condition, t.HoldsFor = f.choice("condition", ""), f.amount("holds", 0)
 	case tasks.Coat:
 		r.coats(t, f)
+		t.Rescue = f.yesOrNot("rescue")
 		t.Behind = r.partNames(f, "behind")
 		t.Stripe, t.Bare, t.Profile = f.amount("stripe", 0), f.amount("leave bare", 0), f.amount("profile", 0)
 	case tasks.Lift:
