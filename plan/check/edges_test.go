@@ -131,6 +131,45 @@ func TestMealOrStop(t *testing.T) {
 	f.wants("")
 }
 
+// TestOpeningUpOfAWorkface: opening up passes once the place is open and the crew has come, clearing up before it
+// closes, and not in the night before or after (R5).
+func TestOpeningUpOfAWorkface(t *testing.T) {
+	for _, tc := range []struct{ when, rule string }{
+		{"04-06 08:15-09:15", ""}, {"04-06 08:14-09:14", "R5"}, {"04-06 16:50-17:50", ""}, {"04-06 16:51-17:51", "R5"},
+		{"04-05 12:45-13:45", ""}, {"04-05 12:44-13:44", "R5"},
+	} {
+		f := newFix(t)
+		f.slip.Reach = []tasks.Slot{slot(t, "04-05 02:00-20:00"), slot(t, "04-06 02:00-22:00")}
+		f.slip.OpeningUp.Value, f.slip.ClearingUp.Value = 15, 10
+		opens := at(t, "04-05 12:30") // the boat is unloaded
+		f.w.Window.Opens, f.job.Trips[0].Opens, f.job.Trips[0].Out[1].To = opens, opens, opens
+		s := f.work("fit", tasks.FitUp, f.slip, 60, need("fitter"))
+		f.put(s, "Tom", tc.when)
+		f.wants(tc.rule)
+	}
+}
+
+// TestWatchesWithoutAWorkface: one person keeps two watches in one workface, but not where no workface is named (R13).
+func TestWatchesWithoutAWorkface(t *testing.T) {
+	for _, tc := range []struct {
+		named bool
+		rule  string
+	}{{true, ""}, {false, "R13"}} {
+		f := newFix(t)
+		face := f.slip
+		if !tc.named {
+			face = nil
+		}
+		for i, name := range []string{"cut", "burn"} {
+			s := f.step(f.task(name, tasks.Cut, f.pier, face), "cut", 30, need("fitter"))
+			s.Hot, s.Lone = true, true
+			who := []string{"Tom", "Ruaridh"}[i]
+			f.watch(f.put(s, who, "04-06 09:00-09:30"), "Tom", "04-06 09:30-10:30")
+		}
+		f.wants(tc.rule)
+	}
+}
+
 // TestClockChange: the hours of an opening that the clocks jump into are not there to be worked.
 func TestClockChange(t *testing.T) {
 	f := newFix(t)

@@ -65,7 +65,16 @@ func (c *checker) layPlace(p *tasks.Place) {
 	closed := func(d hours.Date) bool { _, no := p.Closed[d]; return no }
 	open := c.slots(c.pattern(p.Open, p.Zone, closed), p.AlsoOpen)
 	work := line{open.from, slices.Clone(open.on)}
-	work.trim(int(p.OpeningUp.Value), int(p.ClearingUp.Value), meal)
+	up, down := int(p.OpeningUp.Value), int(p.ClearingUp.Value)
+	work.trim(up, down, meal)
+	if win := c.w.Window; p == win.Place && up > 0 { // nobody opens up before they come
+		in := line{open.from, slices.Clone(open.on)}
+		in.fill(hours.Span{From: c.lo, To: win.Opens}, false)
+		in.trim(up, down, meal)
+		for t := max(win.Opens, c.lo); t < c.hi; t++ {
+			work.on[t-c.lo] = in.has(t)
+		}
+	}
 	out := &place{open: open, work: work}
 	if p.Noisy != nil {
 		out.noisy = c.pattern(p.Noisy, p.Zone, nil)
@@ -76,12 +85,13 @@ func (c *checker) layPlace(p *tasks.Place) {
 		out.valid = append(out.valid, valid)
 	}
 	for _, f := range p.Workfaces {
-		c.faces[f] = c.layFace(p, f)
+		c.faces[f] = c.layFace(p, f, work)
 	}
 	c.places[p] = out
 }
 
-func (c *checker) layFace(p *tasks.Place, f *tasks.Workface) face {
+// layFace lays out when a workface can be reached; work has the minutes in which its place can be worked.
+func (c *checker) layFace(p *tasks.Place, f *tasks.Workface, work line) face {
 	out := face{reach: c.line(true), limited: f.Reach != nil, weather: f.Dry != nil}
 	if f.Reach != nil {
 		out.reach = c.slots(c.line(false), f.Reach)
@@ -95,12 +105,49 @@ func (c *checker) layFace(p *tasks.Place, f *tasks.Workface) face {
 		}
 	}
 	if out.limited {
-		out.reach.trim(int(f.OpeningUp.Value), int(max(f.WayOff.Value, f.ClearingUp.Value)), 0)
+		c.ready(p, f, work, out.reach)
 	}
 	if f.Dry != nil {
 		out.dry = c.slots(c.line(false), f.Dry)
 	}
 	return out
+}
+
+// ready takes way off, opening up and clearing up off every run of a workface's reach. Opening up begins with
+// the first minute of the run in which the place can be worked, at the site not before the window opens;
+// clearing up ends with the last (R5).
+func (c *checker) ready(p *tasks.Place, f *tasks.Workface, work, reach line) {
+	up, down := hours.Minute(f.OpeningUp.Value), hours.Minute(f.ClearingUp.Value)
+	open := func(t hours.Minute) bool {
+		return work.has(t) && (p != c.w.Window.Place || t >= c.w.Window.Opens)
+	}
+	for from := c.lo; from < c.hi; {
+		to := from
+		for to < c.hi && reach.has(to) {
+			to++
+		}
+		if to == from {
+			from++
+			continue
+		}
+		first, last := from, to
+		for first < to && !open(first) {
+			first++
+		}
+		for last > first && !open(last-1) {
+			last--
+		}
+		if to < c.hi {
+			reach.fill(hours.Span{From: to - hours.Minute(f.WayOff.Value), To: to}, false)
+		}
+		if up > 0 || down > 0 && first == to {
+			reach.fill(hours.Span{From: from, To: min(first+up, to)}, false)
+		}
+		if down > 0 && (last < to || to < c.hi) {
+			reach.fill(hours.Span{From: max(last-down, from), To: to}, false)
+		}
+		from = to
+	}
 }
 
 // daylight lays out a place's light minute by minute.

@@ -140,7 +140,7 @@ func (c *checker) oneThing() {
 		sweep(by[p.Name], func(t hours.Minute, running []use) {
 			for i, a := range running {
 				for _, b := range running[:i] {
-					together := a.watch && b.watch && a.r.s.Place == b.r.s.Place && a.r.s.Face == b.r.s.Face
+					together := a.watch && b.watch && a.r.s.Face != nil && a.r.s.Face == b.r.s.Face
 					if together || told[[2]*row{a.r, b.r}] {
 						continue
 					}

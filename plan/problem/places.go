@@ -48,7 +48,7 @@ func (g *ground) place(p *tasks.Place) {
 	wide := hours.Span{From: g.span.From - 2*1440, To: g.span.To + 2*1440}
 	open := p.Open.Spans(p.Zone, wide, closed).Or(g.work.Window.Slots(p.AlsoOpen))
 	g.open[p] = open.Within(g.span)
-	g.face[p] = trimmed(open, open.Joined(Meal, nil), minutes(p.OpeningUp), minutes(p.ClearingUp)).Within(g.span)
+	g.face[p] = g.worked(p, open).Within(g.span)
 	if p.Noisy != nil {
 		g.noise[p] = p.Noisy.Spans(p.Zone, g.span, nil)
 	}
@@ -77,12 +77,56 @@ func (g *ground) face2(f *tasks.Workface) (hours.Set, bool) {
 		set, limited = set.And(g.tide(f)), true
 	}
 	if limited {
-		set = trimmed(set, set, minutes(f.OpeningUp), max(minutes(f.WayOff), minutes(f.ClearingUp)))
+		set = g.readied(f, set)
 	}
 	if f.Dry != nil {
 		set, limited = set.And(g.work.Window.Slots(f.Dry)), true
 	}
 	return set.Within(g.span), limited
+}
+
+// readied takes way off, opening up and clearing up off each reach of a workface. The last two pass while
+// the place is open and its own opening up and clearing up are not going on (R5).
+func (g *ground) readied(f *tasks.Workface, reach hours.Set) hours.Set {
+	up, down := hours.Minute(minutes(f.OpeningUp)), hours.Minute(minutes(f.ClearingUp))
+	var keep []hours.Span
+	for _, s := range reach {
+		off := s.To - hours.Minute(minutes(f.WayOff))
+		open := g.face[f.Place].Within(s)
+		if f.Place == g.work.Window.Place {
+			open = open.Within(g.manned())
+		}
+		if len(open) == 0 && up+down > 0 {
+			continue
+		}
+		if up > 0 {
+			s.From = open[0].From + up
+		}
+		if down > 0 {
+			s.To = open[len(open)-1].To - down
+		}
+		s.To = min(s.To, off)
+		keep = append(keep, s)
+	}
+	return hours.NewSet(keep...)
+}
+
+// worked gives a place's openings less opening up and clearing up. At the site nobody opens up before the
+// window opens: an opening in which it opens begins there.
+func (g *ground) worked(p *tasks.Place, open hours.Set) hours.Set {
+	less := func(set hours.Set) hours.Set {
+		return trimmed(set, set.Joined(Meal, nil), minutes(p.OpeningUp), minutes(p.ClearingUp))
+	}
+	if p != g.work.Window.Place {
+		return less(open)
+	}
+	in := g.manned()
+	return less(open).Less(hours.Set{in}).Or(less(open.Within(in)))
+}
+
+// manned is when the crew can be at the site; when they leave is asked of people and not of hours.
+func (g *ground) manned() hours.Span {
+	return hours.Span{From: g.work.Window.Opens, To: g.span.To + 4*1440}
 }
 
 // tide gives the minutes in which the water is below the workface's level. Where the table says

@@ -24,6 +24,10 @@ func TestWhenWorkIsOpen(t *testing.T) {
 		{what: "quiet work, at any", pier: "open: daily 07:00-19:00, noisy work: daily 08:00-18:00", want: all},
 		{what: "given reach", face: "reach: [2027-04-06 08:00-12:00, day 3 13:00-15:00]", want: "04-06 08:00-12:00, 04-07 13:00-15:00"},
 		{what: "off in good time, and time to get there", face: "reach: [2027-04-06 08:00-12:00], way off before: 30 min, opening up: 15 min, clearing up: 20 min", want: "04-06 08:15-11:30"},
+		{what: "opening up and clearing up while the place is open", face: "reach: [2027-04-06 03:00-23:00], opening up: 15 min, clearing up: 20 min", want: "04-06 07:15-18:40"},
+		{what: "after the place's own opening up, before its clearing up", pier: "open: daily 07:00-19:00, opening up: 20 min, clearing up: 40 min",
+			face: "reach: [2027-04-06 06:50-23:00], opening up: 15 min, clearing up: 20 min", want: "04-06 07:35-18:00"},
+		{what: "a reach in which the place is never open", face: "reach: [2027-04-06 02:00-06:00, 2027-04-07 08:00-09:00], opening up: 15 min", want: "04-07 08:15-09:00"},
 		{what: "dry hours", face: "dry hours: [2027-04-06 09:00-16:00]", want: "04-06 09:00-16:00"},
 		{what: "a level: 3 m is passed at nine and at three", face: "level: 3.01 m", want: "04-06 09:00-15:00, 04-07 09:00-15:00"},
 		{what: "covered only from another height on", face: "level: 1 m, covers at: 3.01 m, way off before: 30 min", want: "04-06 09:00-14:30, 04-07 09:00-14:30"},
@@ -43,6 +47,21 @@ func TestWhenWorkIsOpen(t *testing.T) {
 			"window: {place: pier, opens: 2027-04-05 06:00, closes: 2027-04-09 19:00}", "people: {Ines: {}, Tom: {}}", tc.more,
 			"tasks: {it: {at: pier/hinge, hours: 10 min, alone: yes, "+tc.task+"}}")
 		same(t, tc.what, p.calendar(t, "it", "04-06 00:00"), tc.want)
+	}
+}
+
+// Who comes in the middle of an opening opens up then, the place first and the workface after it; what was open
+// before they came is nobody's (R5). The window opens on 5 April at 14:30.
+func TestOpeningUpBeginsWhenTheCrewComes(t *testing.T) {
+	for _, tc := range []struct{ what, pier, face, want string }{
+		{"the place", "opening up: 20 min", "", "04-05 14:50-19:00"},
+		{"the workface", "opening up: 0 min", "reach: [2027-04-05 08:00-20:00], opening up: 15 min", "04-05 14:45-19:00"},
+		{"both", "opening up: 20 min, clearing up: 10 min", "reach: [2027-04-05 08:00-17:00], opening up: 15 min, way off before: 30 min", "04-05 15:05-16:30"},
+	} {
+		p := compiled(t, "places: {shop: {open: Sun 09:00-10:00}, pier: {open: Mon 07:00-19:00, "+tc.pier+", face factor: 1, workfaces: {hinge: {"+tc.face+"}}}}",
+			"window: {place: pier, opens: 2027-04-05 14:30, closes: 2027-04-09 19:00}", "people: {Ines: {}, Tom: {}}",
+			"tasks: {it: {at: pier/hinge, hours: 10 min, alone: yes}}")
+		same(t, tc.what, p.calendar(t, "it", "04-05 00:00"), tc.want)
 	}
 }
 

@@ -211,6 +211,9 @@ func (s *small) pierHours(d dice) {
 		}
 		if d.one("reach", 3) {
 			s.faces[f] = append(s.faces[f], "reach: [%d0 09:00-14:00, %d1 10:00-15:00, %d2 11:00-16:00]")
+			if d.one("ready", 3) { // reached in the night: opening up waits for the place
+				s.faces[f][len(s.faces[f])-1] = "reach: [%d0 03:00-14:00, %d1 10:00-23:00, %d2 11:00-16:00], opening up: 30 min, clearing up: 30 min"
+			}
 			if d.one("way off", 2) {
 				s.faces[f] = append(s.faces[f], "way off before: 30 min")
 			}
@@ -266,7 +269,7 @@ func (s *small) task(d dice, i int) smallTask {
 	key("at: %s", at)
 	if kind == "standing" {
 		key("standing: %s", d.span("standing", 1, 12))
-		if f := strings.Join(s.faces[0], "") + strings.Join(s.faces[1], ""); d.one("keeps", 3) && !strings.Contains(f, "water") {
+		if d.one("keeps", 3) {
 			key("keeps: {anybody: 1}")
 		}
 	} else {

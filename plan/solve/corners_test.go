@@ -51,6 +51,9 @@ func TestCorners(t *testing.T) {
 		// In two workfaces he cannot; Ann or Bob keep the watch after theirs, so the second weld runs 10 to 12 and is watched until 13.
 		{"but not in two", "people: {Ann: {}, Bob: {}, Cid: {tickets: [fire watch]}}",
 			"  v: {kind: weld, at: quay/deck, hours: 2 h, needs: {Ann: 1}}\n  w: {kind: weld, at: quay/hold, hours: 2 h, needs: {Bob: 1}}", "05 13:00"},
+		// Without a workface nobody knows how far apart they are: as in two.
+		{"nor where no workface is named", "people: {Ann: {}, Bob: {}, Cid: {tickets: [fire watch]}}",
+			"  v: {kind: weld, at: quay, hours: 2 h, needs: {Ann: 1}}\n  w: {kind: weld, at: quay, hours: 2 h, needs: {Bob: 1}}", "05 13:00"},
 		// Two sets of 6 kVA on mains of 10: one after another.
 		{"power", "people: {Ann: {}, Bob: {}}\nkit: {set: {count: 2, draws: 6 kVA}}",
 			"  a: {at: quay, hours: 2 h, who: Ann, kit: set}\n  b: {at: quay, hours: 2 h, who: Bob, kit: set}", "05 12:00"},

@@ -18,7 +18,7 @@ const tight = 60
 
 // watchList prints what can spoil the plan, worst first.
 func (k *pack) watchList() {
-	list := slices.Concat(k.lateSides(), k.tightTasks(), k.slots(), k.onlyOnes(), k.maybes())
+	list := slices.Concat(k.lateSides(), k.tightTasks(), k.slots(), k.onlyOnes(), k.maybes(), cleaned(agenda.NoMeals(k.a)))
 	if len(list) == 0 {
 		return
 	}
@@ -26,6 +26,14 @@ func (k *pack) watchList() {
 	for _, s := range list {
 		k.p.point("-", s, false)
 	}
+}
+
+func cleaned(list []string) []string {
+	var out []string
+	for _, s := range list {
+		out = append(out, paper(s))
+	}
+	return out
 }
 
 // lateSides names the other two answers where they do not fit.

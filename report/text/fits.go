@@ -179,13 +179,13 @@ func even(low bool) string {
 }
 
 func (p *page) notes(r *plan.Report) {
-	load := packlist.Make(r.Likely).Verdict()
-	if len(r.Job.Notes)+len(load) == 0 {
+	said := append(packlist.Make(r.Likely).Verdict(), agenda.NoMeals(r.Likely)...)
+	if len(r.Job.Notes)+len(said) == 0 {
 		return
 	}
 	p.gap()
 	p.raw("Notes")
-	for _, line := range load {
+	for _, line := range said {
 		p.para("  - ", line)
 	}
 	for _, n := range r.Job.Notes {

@@ -75,7 +75,7 @@ func FitsJSON(w io.Writer, r *plan.Report) error {
 			}
 		}
 	}
-	for _, line := range packlist.Make(r.Likely).Verdict() {
+	for _, line := range append(packlist.Make(r.Likely).Verdict(), agenda.NoMeals(r.Likely)...) {
 		f.Notes = append(f.Notes, noteForm{Text: clean.Line(line)})
 	}
 	for _, n := range r.Job.Notes {

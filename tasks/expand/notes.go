@@ -2,6 +2,7 @@ package expand
 
 import (
 	"fmt"
+	"slices"
 
 	"sailby/tasks"
 	"sailby/tasks/origin"
@@ -33,10 +34,33 @@ func (x *expander) notes() {
 			}
 		}
 	}
+	x.meals(add)
 	x.aside(add)
 	for _, k := range x.w.Job.Kit {
 		if k.Gives > 0 {
 			x.generator(k, add)
+		}
+	}
+}
+
+// unbroken is the longest opening without a break of which nothing is said, minutes (common practice).
+const unbroken = 360
+
+// meals says which places have more work in an opening than anybody should do without a break, and no break:
+// what the plan gives comes from opening hours and people's hours alone.
+func (x *expander) meals(add func(tasks.Pos, string, ...any)) {
+	for _, p := range x.w.Job.Places {
+		work := 0
+		for _, s := range x.w.Steps {
+			if s.Place == p && s.Class == Hands && !s.Absent {
+				work += s.Working
+			}
+		}
+		whole := func(q *tasks.Person) bool {
+			return !q.Outside && (len(q.Places) == 0 || slices.Contains(q.Places, p.Name)) && (q.Hours == nil || q.Hours.Longest(0) > unbroken)
+		}
+		if work > unbroken && p.Open.Longest(0) > unbroken && slices.ContainsFunc(x.w.Job.People, whole) {
+			add(p.OpenPos, "%s is open for more than 6 h without a break, so nobody is given a meal there: write breaks into its opening hours (daily 07:00-12:00 12:30-19:00), or into people's hours", p.Name)
 		}
 	}
 }
