@@ -93,7 +93,7 @@ func (g *globals) read(path string) (*tasks.Job, error) {
 		return nil, &advice{err, "sailby start DIR, which writes a job to begin with"}
 	}
 	if err != nil {
-		return nil, err
+		return nil, g.early(path, err)
 	}
 	if job, err = g.changed(path, job); err != nil {
 		return nil, err
@@ -102,6 +102,23 @@ func (g *globals) read(path string) (*tasks.Job, error) {
 		return nil, err
 	}
 	return job, g.knownTrip(job)
+}
+
+// early adds to faults of reading those that only the hours of the tasks show, as far as the tasks that read
+// without fault have any: so they are not told in a second round.
+func (g *globals) early(path string, err error) error {
+	var faults tasks.Faults
+	if !errors.As(err, &faults) {
+		return err
+	}
+	job := jobfile.Sound(path)
+	if job == nil || g.knownTrip(job) != nil {
+		return err
+	}
+	for _, maybes := range []bool{false, true} {
+		faults = append(faults, settle.Early(job, expand.Basis{Trip: g.trip, Maybes: maybes})...)
+	}
+	return faults.Sorted()
 }
 
 // changed reads the job again with the changes asked for; the file stays as it is.

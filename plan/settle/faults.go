@@ -16,7 +16,21 @@ import (
 func Faults(job *tasks.Job, b expand.Basis) tasks.Faults {
 	w, faults := expand.Expand(job, b)
 	if len(faults) > 0 {
-		return faults
+		w, _ = expand.Hours(job, b)
+	}
+	return append(faults, tooLong(w)...).Sorted()
+}
+
+// Early gives those faults that the hours of single tasks show, for a job of which not all could be read.
+func Early(job *tasks.Job, b expand.Basis) tasks.Faults {
+	w, faults := expand.Hours(job, b)
+	return append(faults, tooLong(w)...).Sorted()
+}
+
+// tooLong reports work that goes in one go and is longer than any opening of its place.
+func tooLong(w *expand.Work) (faults tasks.Faults) {
+	if w == nil {
+		return nil
 	}
 	for _, s := range w.Steps {
 		if s.Absent || !s.InOneGo || s.Class != expand.Hands || s.Working == 0 {
@@ -29,7 +43,7 @@ func Faults(job *tasks.Job, b expand.Basis) tasks.Faults {
 				Hint: "write in one go: no, longer opening hours, more people, or split the task"})
 		}
 	}
-	return faults.Sorted()
+	return faults
 }
 
 // longestOpening gives the most working minutes that a step can have at one go in a week of its

@@ -19,16 +19,11 @@ const (
 // Expand writes a job out for one basis. The faults are those that only estimates and the
 // choice of a window show; with any, the work is nil.
 func Expand(job *tasks.Job, b Basis) (*Work, tasks.Faults) {
-	w := &Work{Job: job, Basis: b}
-	if f := w.choose(b.Trip); f != nil {
+	x, f := begun(job, b)
+	if f != nil {
 		return nil, tasks.Faults{*f}
 	}
-	w.lay()
-	x := &expander{w: w, first: map[*tasks.Task][]*Step{}, absent: map[*tasks.Task]bool{}, states: map[string]*Step{}, welded: map[*tasks.Task]weld.Estimate{}, stager: newStager(job, w.Window.Place)}
-	x.maybes()
-	for _, t := range job.Tasks {
-		x.task(t)
-	}
+	w := x.w
 	x.links()
 	x.mend()
 	x.holds()
@@ -48,6 +43,31 @@ func Expand(job *tasks.Job, b Basis) (*Work, tasks.Faults) {
 	x.tins()
 	x.notes()
 	return w, nil
+}
+
+// Hours works out the hours of every task and no more: no links, deadlines or stages. The work is nil where no
+// window can be chosen; otherwise steps with a fault have no minutes. It is for telling faults.
+func Hours(job *tasks.Job, b Basis) (*Work, tasks.Faults) {
+	x, f := begun(job, b)
+	if f != nil {
+		return nil, tasks.Faults{*f}
+	}
+	return x.w, x.faults.Sorted()
+}
+
+// begun chooses the window and makes the steps of every task.
+func begun(job *tasks.Job, b Basis) (*expander, *tasks.Fault) {
+	w := &Work{Job: job, Basis: b}
+	if f := w.choose(b.Trip); f != nil {
+		return nil, f
+	}
+	w.lay()
+	x := &expander{w: w, first: map[*tasks.Task][]*Step{}, absent: map[*tasks.Task]bool{}, states: map[string]*Step{}, welded: map[*tasks.Task]weld.Estimate{}, stager: newStager(job, w.Window.Place)}
+	x.maybes()
+	for _, t := range job.Tasks {
+		x.task(t)
+	}
+	return x, nil
 }
 
 // expander holds what is needed while tasks become steps.

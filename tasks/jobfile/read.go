@@ -7,6 +7,7 @@
 package jobfile
 
 import (
+	"errors"
 	"fmt"
 	"io"
 	"io/fs"
@@ -70,10 +71,16 @@ func ReadBytesChanged(name string, data []byte, fsys fs.FS, changes []tasks.Sett
 		return nil, r.sorted()
 	}
 	if len(changes) == 0 {
+		var faults tasks.Faults
 		for _, c := range r.job.Changes {
-			if err := r.tryChange(name, data, fsys, c); err != nil {
+			if err := r.tryChange(name, data, fsys, c); errors.As(err, &faults) {
+				r.faults = append(r.faults, faults...)
+			} else if err != nil {
 				return nil, err
 			}
+		}
+		if len(r.faults) > 0 {
+			return nil, r.sorted()
 		}
 	}
 	return r.job, nil
