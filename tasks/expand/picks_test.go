@@ -50,6 +50,17 @@ func TestProcedureIsPicked(t *testing.T) {
 	}
 }
 
+// A repair is welded as the weld that it repairs, and a round of a repeated block as every other.
+func TestPickedInRoundsAndRepairs(t *testing.T) {
+	w := on(t, Basis{Maybes: true}, wps, "repeat: {bay: {count: 2, tasks: {seam: {kind: weld, at: pier, joints: [{fillet: {leg: 6 mm}, length: 2 m}]}, mend: {kind: weld, at: pier, repair of: seam, after: seam}}}}")
+	for _, name := range []string{"seam 1", "seam 2", "mend 1", "mend 2"} {
+		s := stepOf(t, w, name, "weld")
+		if p := s.Task.Welds()[0]; p.Procedure != "flat fillet" || p.Picked == "" {
+			t.Errorf("%s is welded by %q", name, p.Procedure)
+		}
+	}
+}
+
 // A set that does not give a procedure's current is not welded with by that procedure.
 func TestProcedureIsPickedByTheSet(t *testing.T) {
 	both := `procedures:
@@ -101,7 +112,7 @@ func TestOwnCuttingSpeeds(t *testing.T) {
 		{"by: plasma, length: 1.4 m, thickness: 6 mm", 1 / 0.4, "row 6 mm"},
 		{"by: plasma, current: 40 A, length: 1.05 m, thickness: 6 mm", 1 / 0.4, "40 A hand air plasma"}, // not that set
 		{"by: oxy-fuel, length: 4.2 m, thickness: 12 mm, pierces: 4", (10 + 2) / 0.5, "table torch, row 12 mm"},
-		{"by: oxy-fuel, length: 1 m, thickness: 12 mm, speed: 500 mm/min", 2 / 0.4, "speed"},
+		{"by: oxy-fuel, length: 1 m, thickness: 12 mm, speed: 500 mm/min", 2 / 0.5, "speed"}, // its share holds
 	} {
 		s := likely(t, cuttingTables, "tasks: {it: {kind: cut, at: shop, "+c.task+"}}").Steps[0]
 		if s.HandsOn != up(c.minutes) {

@@ -89,7 +89,7 @@ func thousands(list []float64) string {
 }
 
 func seamName(t *tasks.Task, i int) string {
-	if n := t.Seams[i].Name; n != "" {
+	if n := t.Welds()[i].Name; n != "" {
 		return n
 	}
 	return fmt.Sprintf("joint %d", i+1)
