@@ -40,6 +40,7 @@ var mayImport = map[string][]string{
 	"plan/check":    {"plan", "tasks", "tasks/expand", "tasks/lift", "tasks/site"}, // never problem, network, solve, learn
 	"plan/settle":   {"plan", "plan/check", "plan/limits", "plan/network", "plan/problem", "plan/solve", "plan/learn", "plan/proof", "tasks", "tasks/expand"},
 	"plan/limits":   {"plan", "plan/network", "plan/problem", "plan/solve", "plan/learn", "tasks", "tasks/expand"},
+	"plan/ways":     {"plan", "plan/problem", "plan/settle", "tasks", "tasks/expand"},
 	"plan/mutants":  {},
 	"plan/random":   {},
 
@@ -54,7 +55,7 @@ var mayImport = map[string][]string{
 	"report/screen":       {"plan", "report/clean", "report/screen/model", "tasks"},
 	"report/fixture":      {"plan", "tasks", "tasks/coat", "tasks/expand", "weld"}, // for tests only
 
-	"cmd/sailby": {"plan", "plan/settle", "tasks", "tasks/jobfile", "tasks/expand", "tasks/coat", "tasks/lift", "weld",
+	"cmd/sailby": {"plan", "plan/settle", "plan/ways", "tasks", "tasks/jobfile", "tasks/expand", "tasks/coat", "tasks/lift", "weld",
 		"report/agenda", "report/clean", "report/export", "report/pdf", "report/screen", "report/sheets", "report/text"},
 	"cmd/sailbench": {"plan", "plan/network", "plan/random", "plan/settle", "tasks", "tasks/expand", "tasks/jobfile", "plan/check", "plan/instance", "plan/learn", "plan/problem", "plan/solve", "plan/proof"},
 }

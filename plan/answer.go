@@ -115,4 +115,5 @@ type Report struct {
 	Maybes *Answer // nil if the job has no maybes: the same as Likely
 	High   *Answer // nil if no range has width: the same as Likely
 	LowToo bool    // a CannotFit on likely hours holds at the low ends too
+	Ways   *Ways   // what would make it fit, on likely hours; nil if it was not asked
 }

@@ -353,7 +353,8 @@ type Change struct {
 	Sets []Setting
 }
 
-// Setting replaces one value of the job file: Path is the keys down to it.
+// Setting replaces one value of the job file: Path is the keys down to it. Without a Value the key is taken away. A Pos
+// with a file and no line is in that library.
 type Setting struct {
 	Path  []string
 	Value string

@@ -37,7 +37,7 @@ the work fits, what to do when, and why.
 	root.SetFlagErrorFunc(flagError)
 	g.flags(root.PersistentFlags())
 	g.complete(root)
-	root.AddCommand(newStart(st), newCheck(g, st), newFits(g, st), newDays(g, st), newWhy(g, st), newSheets(g, st),
+	root.AddCommand(newStart(st), newCheck(g, st), newFits(g, st), newWays(g, st), newDays(g, st), newWhy(g, st), newSheets(g, st),
 		newBrowse(g, st), newExport(g, st), newPack(g, st), newSling(st), newJoint(st), newCoat(st), newSchema(st))
 	root.InitDefaultCompletionCmd()
 	root.SetHelpCommand(newHelp(root))

@@ -3,6 +3,7 @@ package problem
 import (
 	"fmt"
 	"sort"
+	"strconv"
 	"strings"
 
 	"sailby/tasks"
@@ -224,7 +225,9 @@ func (m *crewMaker) teams(slots []slot) (out []team, cut bool) {
 func crewKey(crew []int, watch []bool) string {
 	tags := make([]string, len(crew))
 	for i, c := range crew {
-		tags[i] = fmt.Sprint(c, watch[i])
+		if tags[i] = strconv.Itoa(c); watch[i] {
+			tags[i] += "w"
+		}
 	}
 	sort.Strings(tags)
 	return strings.Join(tags, ",")
@@ -255,7 +258,7 @@ func (m *crewMaker) keepers(s *expand.Step, crew []int) (out []int, stay []hours
 
 // timing gives the timing of a team (with relief, of two that take turns) for a step.
 func (m *crewMaker) timing(s *expand.Step, base, access hours.Set, mode *Mode) *Timing {
-	key := fmt.Sprint(s.Index, "|", m.classes(mode.Crew), "|", m.classes(mode.Keepers))
+	key := strconv.Itoa(s.Index) + "|" + m.classes(mode.Crew) + "|" + m.classes(mode.Keepers)
 	if mode.Relief == nil {
 		if t, ok := m.cache[key]; ok {
 			return t
@@ -289,9 +292,13 @@ func (m *crewMaker) together(s *expand.Step, crew []int, base hours.Set) hours.S
 // relays lists the modes in which two teams take turns; they may have members in common.
 func (m *crewMaker) relays(s *expand.Step, a *Act, teams []team, base, access hours.Set) []Mode {
 	var out []Mode
+	alike := make([]string, len(teams))
+	for i := range teams {
+		alike[i] = m.classes(teams[i].crew)
+	}
 	for i, first := range teams {
 		for j, second := range teams {
-			if i == j || len(out) >= MaxModes || m.classes(first.crew) == m.classes(second.crew) {
+			if i == j || len(out) >= MaxModes || alike[i] == alike[j] {
 				continue
 			}
 			mode := Mode{Crew: first.crew, Watch: first.watch, Relief: second.crew}
@@ -324,5 +331,9 @@ func (m *crewMaker) classes(crew []int) string {
 		cs[i] = m.class[p]
 	}
 	sort.Ints(cs)
-	return fmt.Sprint(cs)
+	key := make([]byte, 0, 3*len(cs))
+	for _, c := range cs {
+		key = append(strconv.AppendInt(key, int64(c), 10), ' ')
+	}
+	return string(key)
 }

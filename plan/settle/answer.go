@@ -33,6 +33,7 @@ type asked struct {
 	bounds network.Bounds
 	out    *plan.Answer
 	plain  bool // that there is a proof is enough: what it needs is not asked for
+	once   bool // the first plan that fits is enough
 }
 
 // answer settles one basis; where nothing fits, with what mends longest waits that cannot be kept.

@@ -50,7 +50,11 @@ func (a *asked) learning(best *solve.Schedule) *solve.Schedule {
 	if fits {
 		o.Best, o.Hint = best.Score.Finish, best.Start
 	}
-	o.Found = func([]int, int) { a.found() }
+	got := false
+	o.Found = func([]int, int) { got = true; a.found() }
+	if a.once {
+		o.Stop = func() bool { return got || a.stop() }
+	}
 	r := learn.Solve(a.p, o)
 	a.out.Steps += r.Ticks
 	if a.choicesLeftOut() { // then it knows too little to prove anything
@@ -60,6 +64,9 @@ func (a *asked) learning(best *solve.Schedule) *solve.Schedule {
 		}
 	}
 	switch {
+	case r.Status == learn.Infeasible && !fits && a.plain:
+		a.out.Proof = &plan.Proof{Kind: plan.BySearch, Summary: bySearch}
+		return best
 	case r.Status == learn.Infeasible && !fits:
 		a.out.Proof = a.contradiction(o)
 		if late := learn.Relax(a.p, o); a.out.Proof != nil && len(a.out.Proof.Lines) == 0 && late.Status != learn.Infeasible {

@@ -38,6 +38,7 @@ func Fits(w io.Writer, r *plan.Report, o Options) error {
 			p.proof(side, r.LowToo && side == r.Likely)
 		}
 	}
+	p.ways(r.Ways)
 	p.orders(a)
 	p.notes(r)
 	p.gap()

@@ -51,7 +51,8 @@ type fitsForm struct {
 	answerForm
 	Maybes answerForm `json:"with_maybes"`
 	High   answerForm `json:"high_hours"`
-	Orders []noteForm `json:"orders_held"` // because a lift is allowed in no other (R24)
+	Ways   *waysForm  `json:"ways,omitempty"` // what would make it fit; left out where it fits
+	Orders []noteForm `json:"orders_held"`    // because a lift is allowed in no other (R24)
 	Notes  []noteForm `json:"notes"`
 	Care   string     `json:"care"`
 }
@@ -67,7 +68,7 @@ func FitsJSON(w io.Writer, r *plan.Report) error {
 		high = r.Likely
 	}
 	f := fitsForm{Job: clean.Line(r.Job.Name), File: r.Job.File, answerForm: answerOf(r.Likely, "likely", r.LowToo),
-		Maybes: answerOf(maybes, "with-maybes", false), High: answerOf(high, "high", false), Orders: []noteForm{}, Notes: []noteForm{}, Care: agenda.Care}
+		Maybes: answerOf(maybes, "with-maybes", false), High: answerOf(high, "high", false), Ways: waysOf(r), Orders: []noteForm{}, Notes: []noteForm{}, Care: agenda.Care}
 	if r.Likely.Work != nil {
 		for _, o := range r.Likely.Work.Orders {
 			if o.Made {

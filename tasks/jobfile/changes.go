@@ -77,6 +77,10 @@ func (r *reader) tryChange(name string, data []byte, fsys fs.FS, c tasks.Change)
 // change replaces values among the nodes of the job file.
 func (r *reader) change(root *yaml.Node, sets []tasks.Setting) {
 	for _, s := range sets {
+		if s.Value == "" {
+			drop(root, strings.Join(s.Path, "/"))
+			continue
+		}
 		value, err := parseValue(s)
 		if err != nil {
 			r.faultAt(r.setPos(s), "write a value as it would stand in the file", "%s: %s is no value", strings.Join(s.Path, "/"), short(s.Value))
@@ -172,6 +176,23 @@ func put(at *yaml.Node, path string, value *yaml.Node) (reached *yaml.Node, rest
 		default:
 			return at, path
 		}
+	}
+}
+
+// drop takes a key of a mapping and its value away, if they are there.
+func drop(at *yaml.Node, path string) {
+	for {
+		i, rest, found := step(at, path)
+		switch {
+		case !found:
+			return
+		case rest == "" && at.Kind == yaml.MappingNode:
+			at.Content = append(at.Content[:i-1:i-1], at.Content[i+1:]...)
+			return
+		case rest == "":
+			return
+		}
+		at, path = at.Content[i], rest
 	}
 }
 
