@@ -142,14 +142,29 @@ func readCoat(o *coatOptions, kind string) (coatInput, error) {
 	if !in.given["area"] {
 		return in, misuse("for instance --area 12m2", "--area: nothing says how much is coated")
 	}
+	if !(v["area"] > 0) {
+		return in, misuse("give the steel to coat, both faces, for instance --area 12m2", "--area: %s m2 is no area to coat", origin.Trim(v["area"]))
+	}
 	in.bare = v["leave-bare"] / 1000 * 0.1
 	if in.bare >= v["area"] {
 		return in, misuse("give the seams in the area alone", "--leave-bare: strips of 50 mm to each side are %s m2, the area is %s m2", origin.Trim(in.bare), origin.Trim(v["area"]))
 	}
 	in.job = coat.Job{Paint: p, Area: v["area"] - in.bare, Method: o.method, Surface: o.surface, Celsius: v["steel"], Site: o.site,
-		Stripe: v["stripe"] / 1000, Mask: 2 * v["leave-bare"] / 1000, Profile: v["profile"], Loss: v["loss"]}
+		Stripe: v["stripe"] / 1000, Mask: 2 * v["leave-bare"] / 1000, Profile: v["profile"], Loss: v["loss"], NoLoss: in.given["loss"] && v["loss"] == 0}
 	if in.given["air"] != in.given["rh"] {
 		return in, misuse("for instance --air 9C --rh 82%", "--air and --rh go together")
+	}
+	switch {
+	case in.given["wind"] && !in.given["air"]:
+		return in, misuse("for instance --air 9C --rh 82% --wind 6m/s", "--wind: it is judged together with --air and --rh")
+	case in.given["wind"] && !(v["wind"] >= 0 && v["wind"] < 200):
+		return in, misuse("from 0 to 200 m/s", "--wind: %s m/s is no wind", origin.Trim(v["wind"]))
+	case in.given["rh"] && !(v["rh"] > 0 && v["rh"] <= 1):
+		return in, misuse("above 0 % and at most 100 %", "--rh: %s %% is no humidity", origin.Trim(v["rh"]*100))
+	case in.given["air"] && math.IsNaN(coat.DewPoint(v["air"], v["rh"])):
+		return in, misuse("from -45 C to 60 C", "--air: %s C is outside what the formula of the dew point holds for", origin.Trim(v["air"]))
+	case in.given["air"] && math.IsNaN(coat.SteelHumidity(v["air"], v["rh"], v["steel"])):
+		return in, misuse("from -45 C to 120 C", "--steel: %s C is outside what the humidity at the steel can be worked out for", origin.Trim(v["steel"]))
 	}
 	in.air, in.rh, in.wind, in.aired = v["air"], v["rh"], v["wind"], in.given["air"]
 	if o.grade != "" || o.prepBy != "" {

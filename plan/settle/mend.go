@@ -26,6 +26,9 @@ func mended(ctx context.Context, job *tasks.Job, first *plan.Answer, o Options, 
 		return first, nil
 	}
 	b := first.Work.Basis
+	if impossible(ctx, job, b, o) {
+		return first, nil
+	}
 	b.Unbound = true
 	kind, err := alone(ctx, job, b, o, false)
 	if err != nil || kind.Verdict == plan.CannotFit {

@@ -14,6 +14,33 @@ import (
 	"sailby/tasks/site"
 )
 
+// The far north has days on which the sun does not set, and days on which it does not rise (npm suncalc 2.0.2 has no rise at
+// 70 N 20 E on 21 June 2027 and none on 21 December).
+func TestSunInTheFarNorth(t *testing.T) {
+	at := func(lat float64, d hours.Date) string {
+		return agenda.SunWords(&agenda.Shift{Place: &tasks.Place{HasAt: true, Lat: lat, Lon: 20}, Date: d, Zone: time.UTC})
+	}
+	for _, c := range []struct {
+		lat  float64
+		date hours.Date
+		want string
+	}{
+		{70, hours.Date{Year: 2027, Month: 4, Day: 5}, "sun 03:26 to 18:02"},
+		{70, hours.Date{Year: 2027, Month: 6, Day: 21}, "sun up all day"},
+		{84, hours.Date{Year: 2027, Month: 12, Day: 21}, "sun not up all day, no light"},
+	} {
+		if got := at(c.lat, c.date); got != c.want {
+			t.Errorf("%v N, %v: %q, want %q", c.lat, c.date, got, c.want)
+		}
+	}
+	if got := at(70, hours.Date{Year: 2027, Month: 12, Day: 21}); !strings.HasPrefix(got, "sun not up all day, light enough to work from ") {
+		t.Errorf("polar night: %q", got)
+	}
+	if agenda.SunWords(&agenda.Shift{Place: &tasks.Place{}, Zone: time.UTC}) != "" {
+		t.Error("sun without a position")
+	}
+}
+
 func london(t *testing.T) *time.Location {
 	t.Helper()
 	z, err := time.LoadLocation("Europe/London")

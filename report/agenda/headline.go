@@ -71,8 +71,8 @@ func Day(w *expand.Work, s *Shift) string { return facts(w, s, nil) }
 
 func facts(w *expand.Work, s *Shift, nature []string) string {
 	var parts []string
-	if rise, set, ok := Sun(s); ok {
-		parts = append(parts, fmt.Sprintf("sun %s to %s", rise, set))
+	if t := SunWords(s); t != "" {
+		parts = append(parts, t)
 	}
 	if t := Tides(w, s.Place, s.Date); t != "" {
 		parts = append(parts, t)

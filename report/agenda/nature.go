@@ -312,8 +312,8 @@ func DayWords(w *expand.Work, p *tasks.Place, d hours.Date) []string {
 	}
 	var out []string
 	s := &Shift{Place: p, Date: d, Zone: Zone(w, p)}
-	if rise, set, ok := Sun(s); ok {
-		out = append(out, "sun "+rise+" to "+set)
+	if t := SunWords(s); t != "" {
+		out = append(out, t)
 	}
 	if t := Tides(w, p, d); t != "" {
 		out = append(out, t)

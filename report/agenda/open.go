@@ -123,6 +123,35 @@ func Sun(s *Shift) (rise, set string, ok bool) {
 	return Clock(hours.Minute(d.Rise), s.Zone), Clock(hours.Minute(d.Set), s.Zone), true
 }
 
+// SunWords says when the sun is up at the shift's place on its day: "sun 06:31 to 20:02", "sun up all day", "sun
+// not up all day, light enough from 10:20 to 13:40"; "" where the job file gives no position.
+func SunWords(s *Shift) string {
+	if rise, set, ok := Sun(s); ok {
+		return "sun " + rise + " to " + set
+	}
+	if s.Place == nil || !s.Place.HasAt {
+		return ""
+	}
+	midnight, _ := hours.Instant(s.Date, 0, s.Zone)
+	d, err := site.Sun(s.Place.Lat, s.Place.Lon, int64(midnight))
+	clock := func(m site.Minute) string { return Clock(hours.Minute(m), s.Zone) }
+	switch {
+	case err != nil:
+		return ""
+	case d.PolarDay:
+		return "sun up all day"
+	case d.PolarNight && d.HasDawn && d.HasDusk:
+		return "sun not up all day, light enough to work from " + clock(d.CivilDawn) + " to " + clock(d.CivilDusk)
+	case d.PolarNight:
+		return "sun not up all day, no light"
+	case d.HasRise:
+		return "sun from " + clock(d.Rise) + " on"
+	case d.HasSet:
+		return "sun until " + clock(d.Set)
+	}
+	return ""
+}
+
 // Ready is a step that could be worked in a shift before its time, from a moment on.
 type Ready struct {
 	Step *expand.Step

@@ -21,6 +21,7 @@ type Job struct {
 	Profile float64 // blast profile Rz in um that this coat must fill, 0 to 150; 0 over another coat
 	Rate    float64 // own rate in m2 an hour of one painter; 0 is the table's
 	Loss    float64 // own loss, share of the paint; 0 is the table's
+	NoLoss  bool    // nothing is lost: the theoretical spreading rate
 }
 
 // Application is what one coat takes. Minutes are one painter's hands-on minutes without face
@@ -140,7 +141,7 @@ func (j Job) volume(a *Application) (low, high float64) {
 	p := j.Paint
 	l := methodLoss(j.Method, j.Surface)
 	figs := []origin.Figure{l.from("loss by "+j.Method, l.likely)}
-	if j.Loss > 0 {
+	if j.Loss > 0 || j.NoLoss {
 		l = loss{j.Loss, j.Loss, j.Loss, nil}
 		figs = []origin.Figure{{Name: "loss", Value: j.Loss, Origin: origin.Origin{Kind: origin.Given, Source: "own loss"}}}
 	} else if spray(j.Method) && j.Site {

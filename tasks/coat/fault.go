@@ -38,8 +38,11 @@ func share(name string, v, lo, hi float64, hint string) error {
 	return within(name, v*100, lo*100, hi*100, "%", hint)
 }
 
-// amount writes a number with its unit: short, without needless zeros.
+// amount writes a number with its unit: short, without needless zeros; large ones in full.
 func amount(v float64, unit string) string {
+	if math.Abs(v) >= 1e4 && math.Abs(v) < 1e15 {
+		return strings.TrimSpace(fmt.Sprintf("%.0f", v) + " " + unit)
+	}
 	return strings.TrimSpace(strings.TrimSuffix(fmt.Sprintf("%.4g", v), ".0") + " " + unit)
 }
 

@@ -122,7 +122,7 @@ func (r *reader) judgeSea() {
 		}
 		for _, w := range p.Workfaces {
 			if w.Level.Pos.Given() || w.CoversAt.Pos.Given() {
-				r.note(p.Pos, "place %q: no allowance for pressure and surge is taken off its levels; 0.3 m is kept where neither is known (`tide: {pressure: {min: 985 hPa}, surge: 0.2 m}`)", p.Name)
+				r.note(p.Pos, "place %q: no allowance for pressure and surge is taken off its levels: name the least pressure and the surge (`tide: {pressure: {min: 985 hPa}, surge: 0.2 m}`)", p.Name)
 				break
 			}
 		}
