@@ -200,6 +200,17 @@ func TestMassLaws(t *testing.T) {
 		if !near1(a.Mass, b.Mass, 1e-9*a.Mass) || !near1(a.Mass, total, 1e-9*total) {
 			t.Fatalf("%v, %v, %v kg", a.Mass, b.Mass, total)
 		}
+		for range 4 { // inside the hull of the parts: no further in any direction than the furthest of them
+			d := [3]float64{rapid.Float64Range(-1, 1).Draw(t, "i"), rapid.Float64Range(-1, 1).Draw(t, "j"), rapid.Float64Range(-1, 1).Draw(t, "k")}
+			far := math.Inf(-1)
+			for i := range parts {
+				one, _ := Mass(parts[i : i+1])
+				far = math.Max(far, dot(one.CG, d))
+			}
+			if dot(a.CG, d) > far+1e-6 {
+				t.Fatalf("centre %v is %v out in direction %v, the furthest part %v", a.CG, dot(a.CG, d), d, far)
+			}
+		}
 		for k := range 3 {
 			if !near1(a.CG[k], b.CG[k], 1e-6) || a.CG[k] < a.Low[k]-1e-6 || a.CG[k] > a.High[k]+1e-6 {
 				t.Fatalf("centre %v or %v in %v to %v", a.CG, b.CG, a.Low, a.High)
