@@ -75,6 +75,10 @@ var slingAmounts = []slingAmount{
 	{name: "floor", dim: quantity.Pressure, scale: 100, to: func(i *slingInput) *float64 { return &i.floor }, says: "what the landing place may carry, as 5kPa"},
 }
 
+// mayBeZero are the amounts that may be nothing and still say something.
+var mayBeZero = map[string]bool{"cg": true, "lugs-above": true, "hot": true, "hoist-mass": true, "side-pull": true, "tackle": true, "twist": true, "carry": true,
+	"distance": true, "trolley-mass": true, "tilt": true, "off": true, "raise": true, "gust": true}
+
 // slingWords are the flags that take a word.
 var slingWords = [][2]string{{"angle", "of a leg, with its datum: \"40 deg from horizontal\""}, {"known", "how the mass is known: weighed, drawn or guessed (default: guessed)"},
 	{"hitch", "straight, choked, basket or endless (default: straight)"}, {"table", "table of the slings, as \"EN 818-4 grade 8\""},
@@ -98,6 +102,9 @@ func (i *slingInput) read(o *slingOptions) error {
 		}
 		if math.IsNaN(v) || math.IsInf(v, 0) || v < 0 {
 			return misuse("an amount above zero", "--%s %s is below zero", a.name, text)
+		}
+		if v == 0 && !mayBeZero[a.name] {
+			return misuse("leave it out if it is not known", "--%s %s is nothing", a.name, text)
 		}
 		*a.to(i) = v
 		i.given[a.name] = true

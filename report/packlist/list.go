@@ -52,7 +52,8 @@ type Item struct {
 	Where  []string     // vehicles that take it, "van, run 2"; nil without vehicles
 	pieces int          // so many goods of it
 	stow   tasks.Stowing
-	flat   bool // no mass to carry: papers
+	over   float64 // weight allowance on its mass; 0 is none
+	flat   bool    // no mass to carry: papers
 }
 
 // Box is a box with what is in it.
@@ -89,7 +90,8 @@ type maker struct {
 	job   *tasks.Job
 	items []Item
 	list  *List
-	days  []hours.Minute // of the ranks, from 1
+	over  map[string]float64 // weight allowance of goods by name
+	days  []hours.Minute     // of the ranks, from 1
 }
 
 // Make works out what to take for an answer's plan; without a plan the days are left out. An
@@ -185,7 +187,7 @@ func (m *maker) loads() {
 			if i > 0 {
 				one.stow = tasks.Stowing{}
 			}
-			one.Mass = roundUp(g.Total.Mass)
+			one.Mass, one.over = roundUp(g.Total.Mass), g.Total.Allowance
 			if one.stow.Size == [3]float64{} {
 				for k := range 3 {
 					one.stow.Size[k] = g.Total.High[k] - g.Total.Low[k]

@@ -120,3 +120,23 @@ func TestRunsAndDutyWithAPlan(t *testing.T) {
 		t.Errorf("5 h 30 min on the way out: %s", flags)
 	}
 }
+
+// Straps over a weighed load of 760 kg on the most slippery bed, by hand to EN 12195-1:2010, forward:
+// 1.25 x (0.8 - 0.2) x 760 x 1.03 x 9.81 / (2 x 0.2 x 4000 N) = 3.6; guessed, with a quarter more, 4.4.
+func TestStrapsByHowTheMassIsKnown(t *testing.T) {
+	for how, want := range map[string]int{"weighed": 4, "guessed": 5} {
+		l := listOf(t, strings.Replace(strings.Replace(road, "payload: 500 kg", "payload: 2 t", 1), "kit: {press", "assemblies: {gate: {mass: 760 kg, known: "+how+", size: [2 m, 1 m, 300 mm]}}\nkit: {press", 1)+
+			"  make: {kind: fit-up, at: shop, hours: 1 h, part: gate}\n  set: {kind: fit-up, at: pier, hours: 1 h, part: gate}\n")
+		found := 0
+		for _, v := range append(l.Vehicles, l.Split...) {
+			for _, s := range v.Straps {
+				if s.What == "gate" {
+					found = s.Count
+				}
+			}
+		}
+		if found != want {
+			t.Errorf("%s: %d straps, want %d (%s)", how, found, want, l.Reason)
+		}
+	}
+}

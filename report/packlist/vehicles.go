@@ -117,6 +117,7 @@ func (m *maker) flag(s string) {
 // goods writes the list as things to stow: boxes, and what is loose. from marks where a thing went.
 func (m *maker) goods() (goods []lift.Goods, from []func(where string)) {
 	rank := m.ranks()
+	m.over = map[string]float64{}
 	boxed := map[string]int{}
 	for i := range m.items {
 		it := &m.items[i]
@@ -161,6 +162,7 @@ func (m *maker) goods() (goods []lift.Goods, from []func(where string)) {
 			s := it.stow
 			goods = append(goods, lift.Goods{Name: name, Mass: it.Mass / float64(n), Length: s.Size[0], Width: s.Size[1], Height: s.Size[2],
 				Needed: rank[it.Day], Stack: s.Stack, Class: s.Class, Amount: s.Of})
+			m.over[name] = it.over
 			from = append(from, mark)
 		}
 	}
@@ -185,13 +187,14 @@ func (m *maker) ranks() map[hours.Minute]int {
 	return out
 }
 
-// straps counts the straps over one load.
+// straps counts the straps over one load: with the weight allowance of how an assembly's mass is known; what else is
+// taken has its mass from its plate.
 func (m *maker) straps(g lift.Goods, v *tasks.Vehicle) Straps {
 	c := lift.Cargo{On: v.Bed, Old: v.Edition}
 	if m.w.Trip != nil {
 		c.Sea = m.w.Trip.Sea
 	}
-	res, err := lift.Secure(lift.Load{Name: g.Name, Mass: g.Mass, Length: g.Length, Width: g.Width, Height: g.Height}, c, v.Lashing)
+	res, err := lift.Secure(lift.Load{Name: g.Name, Mass: g.Mass, Allowance: max(1, m.over[g.Name]), Length: g.Length, Width: g.Width, Height: g.Height}, c, v.Lashing)
 	if err != nil {
 		return Straps{What: g.Name, Notes: []string{"straps not counted: " + err.Error()}}
 	}
