@@ -96,8 +96,14 @@ func (k *pack) liftLimits(s *expand.Step, j expand.Judgement) {
 		tb.row(cells, loud(r.Figure.Amount()), say(r.Limit.Amount()+", "+r.Limit.Name), loud(word, or(r.Nearest, "")))
 	}
 	if rig := s.Rigging.Slung(); rig != nil {
+		most, at := 0.0, 0
 		for i, l := range j.Legs {
-			tb.row(loud(fmt.Sprintf("leg %d", i+1)), loud(origin.Trim(math.Ceil(l.Tension))+" kg"), say(legLimits(rig)), say(""))
+			if l.Tension > most+1e-9 {
+				most, at = l.Tension, i
+			}
+		}
+		if most > 0 {
+			tb.row(loud(fmt.Sprintf("leg %d, the heaviest", at+1)), loud(origin.Trim(math.Ceil(most))+" kg"), say(legLimits(rig)), say(""))
 		}
 	}
 	tb.end()

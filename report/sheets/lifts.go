@@ -35,7 +35,7 @@ func (k *pack) liftSheet(s *expand.Step) {
 		k.liftLimits(s, j)
 	}
 	p.heading("What the plan counted with", 3*lineHeight(body))
-	k.liftFacts(s)
+	k.liftFacts(s) // one line after the other: the front of the sheet tells, its back is for those who decide and sign
 	for _, n := range s.Estimate.Notes {
 		p.point("!", n, true)
 	}
@@ -75,7 +75,7 @@ func (k *pack) liftFacts(s *expand.Step) {
 	for _, f := range s.Estimate.Facts {
 		add(f.Name, f.Amount(), soft(f.Origin))
 		for _, g := range f.From {
-			if len(f.From) > 3 {
+			if len(f.From) > 3 || len(f.From) == 1 {
 				break // the parts of a sum: `sailby why` lists them
 			}
 			add("of which "+g.Name, g.Amount(), soft(g.Origin))
@@ -95,11 +95,11 @@ func (k *pack) liftFacts(s *expand.Step) {
 		}
 		add(paper(u.Kit.Name)+" chart", strings.Join(chart, ", "), "job file")
 	}
-	tb := p.table(column{"What", 60}, column{"Figure", 45}, column{"From", 78})
+	var words []string
 	for _, f := range facts {
-		tb.row(say(f.what), loud(f.value), say(f.from))
+		words = append(words, f.what+": "+f.value+" ("+f.from+")")
 	}
-	tb.end()
+	p.para(strings.Join(words, "; ")+".", body, false)
 }
 
 // soft says where a figure comes from, and marks defaults that nothing stands behind.

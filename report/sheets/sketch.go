@@ -10,11 +10,14 @@ import (
 )
 
 // The sketch of a lift: the assembly from the front, x to the right and z up, to scale, with its
-// centre of gravity, the hook over it and the slings. What it is drawn from stands beside it.
+// centre of gravity, the hook over it and the slings; where the file gives the lugs, also from above, y up the
+// page, at the same scale. What it is drawn from stands beside it.
 
 const (
 	sketchWide = 104.0 // mm
 	sketchTall = 84.0  // mm, at most
+	planTall   = 104.0 // mm, at most, for both views
+	viewGap    = 9.0   // mm between the views
 	markSize   = 2.2   // mm from the middle of the mark of the centre of gravity to its edge
 )
 
@@ -30,6 +33,9 @@ type sketch struct {
 	legs      []lift.Leg
 	assumed   bool // lugs are not given: drawn at the ends
 	low, high [2]float64
+	plan      bool       // drawn from above as well
+	lugsY     []float64  // of the lugs
+	deep      [2]float64 // y from and to
 }
 
 // sketchOf collects what is drawn; ok is false where nothing has sizes.
@@ -50,7 +56,22 @@ func sketchOf(r *expand.Rigging, j expand.Judgement) (sketch, bool) {
 	}
 	s.rigged(r.Slung())
 	s.reach(s.cg[0], s.cg[2])
+	s.fromAbove()
 	return s, s.high[0]-s.low[0] > 0 && s.high[1]-s.low[1] > 0
+}
+
+// fromAbove readies the view from above, where the lugs are known.
+func (s *sketch) fromAbove() {
+	if len(s.lugsY) == 0 {
+		return
+	}
+	s.plan, s.deep = true, [2]float64{s.cg[1], s.cg[1]}
+	for _, y := range s.lugsY {
+		s.deep = [2]float64{min(s.deep[0], y), max(s.deep[1], y)}
+	}
+	for _, b := range s.boxes {
+		s.deep = [2]float64{min(s.deep[0], b.Low[1]), max(s.deep[1], b.High[1])}
+	}
 }
 
 func (s *sketch) reach(x, z float64) {
@@ -67,7 +88,7 @@ func (s *sketch) rigged(rig *lift.Rig) {
 	s.hook[0] = s.cg[0]
 	if len(rig.Lugs) > 0 {
 		for _, l := range rig.Lugs {
-			s.lugs = append(s.lugs, [2]float64{l[0], l[2]})
+			s.lugs, s.lugsY = append(s.lugs, [2]float64{l[0], l[2]}), append(s.lugsY, l[1])
 			s.hook[1] = max(s.hook[1], l[2]+rig.Rise)
 		}
 	} else {
@@ -99,13 +120,18 @@ func (s *sketch) rigged(rig *lift.Rig) {
 // scale gives the first scale at which the sketch has room, and its height on paper.
 func (s sketch) scale() (n, tall float64) {
 	wide, high := s.high[0]-s.low[0], s.high[1]-s.low[1]
+	most, gap := sketchTall-8, 0.0
+	if s.plan {
+		high += s.deep[1] - s.deep[0]
+		most, gap = planTall-8-viewGap, viewGap
+	}
 	for _, n := range scales {
-		if wide/n <= sketchWide-8 && high/n <= sketchTall-8 {
-			return n, high/n + 8
+		if wide/n <= sketchWide-8 && high/n <= most {
+			return n, high/n + 8 + gap
 		}
 	}
-	n = math.Ceil(max(wide/(sketchWide-8), high/(sketchTall-8)))
-	return n, high/n + 8
+	n = math.Ceil(max(wide/(sketchWide-8), high/most))
+	return n, high/n + 8 + gap
 }
 
 // draw lays the sketch at the left of the page with words beside it.
@@ -113,7 +139,11 @@ func (s sketch) draw(p *pen, words []string) {
 	n, tall := s.scale()
 	var lines []string
 	room := p.wide() - sketchWide - 4
-	words = append([]string{fmt.Sprintf("To scale 1 : %s, from the front: x to the right, z up.", origin.Trim(n))}, words...)
+	view := "from the front: x to the right, z up."
+	if s.plan {
+		view = "from the front: x to the right, z up; below it from above: y up the page."
+	}
+	words = append([]string{fmt.Sprintf("To scale 1 : %s, %s", origin.Trim(n), view)}, words...)
 	for _, w := range words {
 		lines = append(lines, wrapText(w, body, false, room)...)
 	}
@@ -144,11 +174,9 @@ func (s sketch) draw(p *pen, words []string) {
 		p.line(hx, hy-3, hx, hy, thick)
 	}
 	cx, cy := at(s.cg[0], s.cg[2])
-	p.line(cx-markSize, cy, cx+markSize, cy, thick)
-	p.line(cx, cy-markSize, cx, cy+markSize, thick)
-	for _, d := range [][4]float64{{-1, 0, 0, -1}, {0, -1, 1, 0}, {1, 0, 0, 1}, {0, 1, -1, 0}} {
-		const r = markSize * 0.7
-		p.line(cx+d[0]*r, cy+d[1]*r, cx+d[2]*r, cy+d[3]*r, thin)
+	p.cross(cx, cy)
+	if s.plan {
+		s.drawPlan(p, n, x0, top+4+(s.high[1]-s.low[1])/n+viewGap)
 	}
 	y := top
 	for _, l := range lines {
@@ -159,6 +187,40 @@ func (s sketch) draw(p *pen, words []string) {
 		y += lineHeight(body)
 	}
 	p.y = min(top+h+1, p.bottom)
+}
+
+// drawPlan draws the view from above; x0 is the paper's x of the sketch's least x, top the paper's y of its greatest y.
+func (s sketch) drawPlan(p *pen, n, x0, top float64) {
+	at := func(x, y float64) (float64, float64) { return x0 + (x-s.low[0])/n, top + (s.deep[1]-y)/n }
+	for _, b := range s.boxes {
+		x, y := at(b.Low[0], b.High[1])
+		w, t := max((b.High[0]-b.Low[0])/n, 0.3), max((b.High[1]-b.Low[1])/n, 0.3)
+		p.put(Item{Kind: Shade, X: x, Y: y, W: w, H: t, Grey: 0.88})
+	}
+	for _, b := range s.boxes {
+		x, y := at(b.Low[0], b.High[1])
+		w, t := max((b.High[0]-b.Low[0])/n, 0.3), max((b.High[1]-b.Low[1])/n, 0.3)
+		for _, l := range [][4]float64{{x, y, w, 0}, {x, y + t, w, 0}, {x, y, 0, t}, {x + w, y, 0, t}} {
+			p.put(Item{Kind: Rule, X: l[0], Y: l[1], W: l[2], H: l[3], Stroke: thin})
+		}
+	}
+	cx, cy := at(s.cg[0], s.cg[1])
+	for i, l := range s.lugs {
+		x, y := at(l[0], s.lugsY[i])
+		p.line(x, y, cx, cy, thick)
+		p.run(x-0.8, y-1.2, fmt.Sprint(i+1), body, true)
+	}
+	p.cross(cx, cy)
+}
+
+// cross marks a centre of gravity.
+func (p *pen) cross(cx, cy float64) {
+	p.line(cx-markSize, cy, cx+markSize, cy, thick)
+	p.line(cx, cy-markSize, cx, cy+markSize, thick)
+	for _, d := range [][4]float64{{-1, 0, 0, -1}, {0, -1, 1, 0}, {1, 0, 0, 1}, {0, 1, -1, 0}} {
+		const r = markSize * 0.7
+		p.line(cx+d[0]*r, cy+d[1]*r, cx+d[2]*r, cy+d[3]*r, thin)
+	}
 }
 
 // line draws a straight line between two points.

@@ -56,11 +56,13 @@ func TestSketchIsToScale(t *testing.T) {
 	if f := faults(doc); len(f) > 0 {
 		t.Errorf("%v", f)
 	}
-	var shade Item
+	var shade, above Item
 	var legs []Item
 	for _, it := range doc.Pages[0].Items {
-		if it.Kind == Shade {
+		if it.Kind == Shade && shade.W == 0 {
 			shade = it
+		} else if it.Kind == Shade {
+			above = it
 		}
 		if it.Kind == Rule && it.W > 5 && math.Abs(it.H) > 5 {
 			legs = append(legs, it)
@@ -68,6 +70,10 @@ func TestSketchIsToScale(t *testing.T) {
 	}
 	if math.Abs(shade.W-2000/n) > 1e-6 || math.Abs(shade.H-1800/n) > 1e-6 {
 		t.Errorf("the gate is %.2f by %.2f mm on paper at 1:%g", shade.W, shade.H, n)
+	}
+	// from above: 2.0 m by 10 mm at the same scale, below the view from the front and in line with it
+	if math.Abs(above.W-2000/n) > 1e-6 || math.Abs(above.H-max(10/n, 0.3)) > 1e-6 || math.Abs(above.X-shade.X) > 1e-6 || above.Y < shade.Y+shade.H {
+		t.Errorf("from above: %+v, from the front %+v", above, shade)
 	}
 	if len(legs) != 2 {
 		t.Fatalf("%d slanted lines, want two slings", len(legs))
