@@ -53,7 +53,7 @@ func TestProcedureIsPicked(t *testing.T) {
 // A repair is welded as the weld that it repairs, and a round of a repeated block as every other.
 func TestPickedInRoundsAndRepairs(t *testing.T) {
 	w := on(t, Basis{Maybes: true}, wps, "repeat: {bay: {count: 2, tasks: {seam: {kind: weld, at: pier, joints: [{fillet: {leg: 6 mm}, length: 2 m}]}, mend: {kind: weld, at: pier, repair of: seam, after: seam}}}}")
-	for _, name := range []string{"seam 1", "seam 2", "mend 1", "mend 2"} {
+	for _, name := range []string{"seam bay 1", "seam bay 2", "mend bay 1", "mend bay 2"} {
 		s := stepOf(t, w, name, "weld")
 		if p := s.Task.Welds()[0]; p.Procedure != "flat fillet" || p.Picked == "" {
 			t.Errorf("%s is welded by %q", name, p.Procedure)
