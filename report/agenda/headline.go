@@ -32,6 +32,9 @@ func DayOf(w *expand.Work, s *Shift) string {
 	if s.Site {
 		first := w.Window.DayOne()
 		last := hours.DateOf((w.Window.Closes - 1).In(Zone(w, w.Window.Place)))
+		if n := days(last, s.Date); n > 0 { // a late plan
+			return counted(n, "day") + " after the window closes"
+		}
 		return fmt.Sprintf("day %d of %d", days(first, s.Date)+1, days(first, last)+1)
 	}
 	goes, what := w.Window.Opens, "the window opens"
@@ -49,6 +52,13 @@ func DayOf(w *expand.Work, s *Shift) string {
 		return fmt.Sprintf("%d days before %s", n, what)
 	}
 	return ""
+}
+
+func counted(n int, what string) string {
+	if n == 1 {
+		return "1 " + what
+	}
+	return fmt.Sprintf("%d %ss", n, what)
 }
 
 // days counts the days from a to b.
@@ -80,8 +90,10 @@ func facts(w *expand.Work, s *Shift, nature []string) string {
 	if len(nature) > 0 {
 		parts = append(parts, "weather and water leave "+strings.Join(nature, ", "))
 	}
-	if s.Site {
-		parts = append(parts, fmt.Sprintf("at the start %s left to the window's end", quantity.Hours(int(w.Window.Closes-s.From))))
+	if left := int(w.Window.Closes - s.From); s.Site && left >= 0 {
+		parts = append(parts, fmt.Sprintf("at the start %s left to the window's end", quantity.Hours(left)))
+	} else if s.Site {
+		parts = append(parts, fmt.Sprintf("at the start %s past the window's end", quantity.Hours(-left)))
 	}
 	return strings.Join(append(parts, "times "+s.From.In(s.Zone).Format("MST")), "; ")
 }

@@ -59,7 +59,7 @@ func joins(o, e Entry, list []Entry) bool {
 func Breaks(e Entry, zone *time.Location) string {
 	var parts []string
 	for _, p := range e.Pauses {
-		parts = append(parts, Between(p, zone))
+		parts = append(parts, Within(p, zone))
 	}
 	if len(parts) == 0 {
 		return ""

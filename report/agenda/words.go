@@ -60,6 +60,19 @@ func Between(s hours.Span, zone *time.Location) string {
 	return Clock(s.From, zone) + "-" + When(s.To, zone)
 }
 
+// Within writes a span of a shift: as Between does, but without the day of an end that the night alone parts
+// from its start.
+func Within(s hours.Span, zone *time.Location) string {
+	if s.Len() < 12*60 {
+		to := Clock(s.To, zone)
+		if to == "00:00" {
+			to = "24:00"
+		}
+		return Clock(s.From, zone) + "-" + to
+	}
+	return Between(s, zone)
+}
+
 func unknown(m hours.Minute) bool { return m >= hours.Far || m <= hours.Never }
 
 func or(z *time.Location) *time.Location {

@@ -59,7 +59,7 @@ func (k *pack) taskCell(s *agenda.Shift, st *expand.Step, shared []string, how f
 	}
 	for _, e := range s.Entries {
 		if e.Step == st && e.Watch {
-			add(true, fmt.Sprintf("Fire watch %s: %s", agenda.Between(e.Span, s.Zone), strings.Join(names(e.People), ", ")))
+			add(true, fmt.Sprintf("Fire watch %s: %s", agenda.Within(e.Span, s.Zone), strings.Join(names(e.People), ", ")))
 		}
 	}
 	if st.Task.Deadline != nil && st.Deadline < hours.Far {
@@ -77,7 +77,7 @@ func (k *pack) plannedCell(s *agenda.Shift, st *expand.Step) cell {
 	var times []string
 	for _, e := range agenda.Merged(s.Entries) {
 		if e.Step == st && !e.Watch {
-			times = append(times, agenda.Between(e.Span, s.Zone), agenda.Breaks(e, s.Zone))
+			times = append(times, agenda.Within(e.Span, s.Zone), agenda.Breaks(e, s.Zone))
 		}
 	}
 	if latest, bold := k.byWhen(st, s); !bold && latest != "" {

@@ -59,7 +59,7 @@ func (p *page) shift(a *plan.Answer, s *agenda.Shift) {
 		who := q.Name
 		rows := personRows(a, s, q)
 		if len(rows) == 0 {
-			p.row(widths, "", who, agenda.Between(q.On, s.Zone), "no task: free, or standing by")
+			p.row(widths, "", who, agenda.Within(q.On, s.Zone), "no task: free, or standing by")
 		}
 		for _, r := range rows {
 			p.row(widths, "", who, r[0], r[1])
@@ -68,7 +68,7 @@ func (p *page) shift(a *plan.Answer, s *agenda.Shift) {
 	}
 	for _, e := range s.Entries {
 		if len(e.People) == 0 {
-			p.row(widths, "", "nobody", agenda.Between(e.Span, s.Zone), entryWords(a, e))
+			p.row(widths, "", "nobody", agenda.Within(e.Span, s.Zone), entryWords(a, e))
 		}
 	}
 	for _, st := range s.Standing {
@@ -98,14 +98,14 @@ func personRows(a *plan.Answer, s *agenda.Shift, q agenda.Person) [][2]string {
 				if open.Count(gap) == 0 || entries[i-1].Step == e.Step && !e.Watch {
 					word = "break"
 				}
-				out = append(out, [2]string{agenda.Between(gap, s.Zone), word})
+				out = append(out, [2]string{agenda.Within(gap, s.Zone), word})
 			}
 		}
 		words := entryWords(a, e)
 		if pause := agenda.Breaks(e, s.Zone); pause != "" {
 			words += ", with the " + pause
 		}
-		out = append(out, [2]string{agenda.Between(e.Span, s.Zone), words})
+		out = append(out, [2]string{agenda.Within(e.Span, s.Zone), words})
 	}
 	return out
 }

@@ -44,7 +44,7 @@ func (x *expander) notes() {
 }
 
 // unbroken is the longest opening without a break of which nothing is said, minutes (common practice).
-const unbroken = 360
+const unbroken = 480
 
 // meals says which places have more work in an opening than anybody should do without a break, and no break:
 // what the plan gives comes from opening hours and people's hours alone.
@@ -60,7 +60,7 @@ func (x *expander) meals(add func(tasks.Pos, string, ...any)) {
 			return !q.Outside && (len(q.Places) == 0 || slices.Contains(q.Places, p.Name)) && (q.Hours == nil || q.Hours.Longest(0) > unbroken)
 		}
 		if work > unbroken && p.Open.Longest(0) > unbroken && slices.ContainsFunc(x.w.Job.People, whole) {
-			add(p.OpenPos, "%s is open for more than 6 h without a break, so nobody is given a meal there: write breaks into its opening hours (daily 07:00-12:00 12:30-19:00), or into people's hours", p.Name)
+			add(p.OpenPos, "%s is open for more than 8 h without a break, so nobody is given a meal there: write breaks into its opening hours (daily 07:00-12:00 12:30-19:00), or into people's hours", p.Name)
 		}
 	}
 }

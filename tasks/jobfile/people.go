@@ -106,7 +106,11 @@ func (r *reader) person(name string, at, n *yaml.Node) *tasks.Person {
 	}
 	switch {
 	case p.Outside && !f.tried("places"):
-		f.fault("outside", "add `places: pier`", "somebody from outside has no place")
+		at := "pier"
+		if f.r.site != nil {
+			at = f.r.site.Name
+		}
+		f.fault("outside", "add `places: "+at+"`", "somebody from outside has no place")
 	case p.Outside && len(f.names("places")) > 1:
 		f.fault("places", "name the one place they come to", "somebody from outside comes to one place")
 	case p.Outside && !f.tried("booked"):

@@ -135,7 +135,7 @@ func (p *daysPage) entry(d dayStrips, e agenda.Entry) line {
 	if d.n > 110 {
 		widths = []int{14, d.n - 14 - 20 - 45, 20}
 	}
-	text := columns(d.n, widths, string(d.letters[e.Step])+" "+agenda.Between(e.Span, d.s.Zone), what, where, who)
+	text := columns(d.n, widths, string(d.letters[e.Step])+" "+agenda.Within(e.Span, d.s.Zone), what, where, who)
 	return line{text: text, do: func() Ask { return p.m.open(newTask(p.m, task)) }}
 }
 
