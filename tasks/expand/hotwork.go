@@ -20,10 +20,30 @@ func (x *expander) washed(t *tasks.Task, s *Step) float64 {
 		return 0
 	}
 	f := t.Face.WashTime()
+	if x.neverCovered(t.Face) {
+		return 0
+	}
 	if f.Value > 0 {
 		s.Estimate.Facts = append(s.Estimate.Facts, f)
 	}
 	return f.Value
+}
+
+// neverCovered says whether the tide table shows no water, up to the first that comes after the window, that covers a
+// workface: nothing is washed there.
+func (x *expander) neverCovered(f *tasks.Workface) bool {
+	if f == nil || f.Place == nil || f.Place.Tide == nil || !f.Level.Pos.Given() && !f.CoversAt.Pos.Given() {
+		return false
+	}
+	for _, w := range f.Place.Tide.Waters {
+		if w.Metres >= f.Covers() {
+			return false
+		}
+		if w.At > int64(x.w.Window.Closes) && w.High {
+			break
+		}
+	}
+	return true
 }
 
 // gasTest puts the gas test before hot work in a closed space where there is paint (R27).

@@ -231,7 +231,10 @@ func TestDryHoursDoNotCureZincSilicate(t *testing.T) {
 
 // tidal is a pier whose water stands below 2.6 m from 172 min 22 s after high water on; high water at 16:00,
 // 04:00 and so on by UTC: free from 06:53 to 13:07 (cosine between the waters, by hand).
-func tidal(t *testing.T, task string) *Work {
+func tidal(t *testing.T, task string) *Work { t.Helper(); return tidalAt(t, 2.6, task) }
+
+// tidalAt is tidal with the workface at another level; high waters are 4 m.
+func tidalAt(t *testing.T, level float64, task string) *Work {
 	t.Helper()
 	job := read(t, "tasks: {it: {at: pier/hinge, "+task+"}}", `paints: {quick: {kind: two-pack epoxy, immersion min: {10 C: 2 h}}}`,
 		"places: {shop: {open: always}, pier: {open: always, steel temperature: 10 C, workfaces: {hinge: {between tides: yes, reach: [2027-04-05 08:00-14:00, 2027-04-06 08:00-14:00]}}}}")
@@ -245,7 +248,7 @@ func tidal(t *testing.T, task string) *Work {
 	}
 	pier := job.Places[1]
 	pier.Tide, pier.Workfaces[0].Reach = tide, nil
-	pier.Workfaces[0].Level = tasks.Amount{Value: 2.6, Pos: tasks.Pos{Line: 1}}
+	pier.Workfaces[0].Level = tasks.Amount{Value: level, Pos: tasks.Pos{Line: 1}}
 	w, faults := Expand(job, Basis{})
 	if len(faults) > 0 {
 		t.Fatal(faults)
@@ -301,6 +304,11 @@ func TestWhatTheTideHasCoveredIsWashedFirst(t *testing.T) {
 	} {
 		if got := tidal(t, c.task).Steps[0].SetUp; got != c.want {
 			t.Errorf("%s: set-up %d, want %d", c.task, got, c.want)
+		}
+	}
+	for level, want := range map[float64]int{4: 22, 4.01: 0} { // no high water covers what is higher than all of them
+		if got := tidalAt(t, level, "kind: coat, hours: 1 h, coats: quick").Steps[0].SetUp; got != want {
+			t.Errorf("at %v m: set-up %d, want %d", level, got, want)
 		}
 	}
 	refused(t, "does not say when it may go under water", "tasks: {it: {kind: coat, at: pier/hinge, hours: 1 h, coats: dry}}", "paints: {dry: {kind: alkyd}}",
