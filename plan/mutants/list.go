@@ -148,4 +148,12 @@ var mutants = []mutant{
 		`		if bad < first-1 {`, byChecker},
 	{"plan/check/weather.go", `		sum += gained[i]`,
 		`		sum += 2 * gained[i]`, byChecker},
+	{"plan/check/weather.go", `w.Gust <= s.Gust.Value*(1+1e-6)`,
+		`w.Gust <= s.Gust.Value*2`, byChecker},
+	{"plan/check/liftwind.go", `r.s.Gust.Value > limit+slackWind ||`,
+		`r.s.Gust.Value > 2*limit ||`, byChecker},
+	{"plan/check/lifts.go", `if have < want {`,
+		`if have < want-1 {`, byChecker},
+	{"plan/check/hanging.go", `up[p] = p == t.Lifts || !gone[p]`,
+		`up[p] = true`, byChecker},
 }
