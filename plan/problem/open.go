@@ -9,6 +9,9 @@ func (w *Timing) Rules() Rules {
 	return Rules{Work: w.length, SetUp: w.setUp, Least: w.least, Safe: w.safe, InOneGo: w.inOneGo, OverMeals: w.overMeals}
 }
 
+// Standing says whether a timing runs on any minute of the clock: no calendar, though it may be a film's.
+func (w *Timing) Standing() bool { return w.cal == nil }
+
 // Openings gives the worked spans, opening by opening (R8); nil for standing work.
 func (w *Timing) Openings() []hours.Set {
 	if w.cal == nil {

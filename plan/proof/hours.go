@@ -32,7 +32,7 @@ func newBook(p *problem.Problem) book {
 
 // length gives the clock minutes that a timing takes from any start, -1 if that depends on the start.
 func length(w *problem.Timing) int32 {
-	if w.Cured() != nil || w.Calendar() != nil {
+	if w.Cured() != nil || !w.Standing() {
 		return -1
 	}
 	return int32(w.Length())
@@ -99,7 +99,7 @@ func (b *book) table(w *problem.Timing) *starts {
 				add(s, u)
 			}
 		}
-	case w.Calendar() == nil || w.Length() == 0:
+	case w.Standing() || w.Length() == 0:
 		for s := 0; s <= b.p.End; s++ {
 			add(s, s+w.Length())
 		}
@@ -197,7 +197,7 @@ func (b *book) sure(i int) hours.Set {
 
 // steady gives the same for one timing.
 func (b *book) steady(w *problem.Timing) hours.Set {
-	if w.Calendar() == nil {
+	if w.Standing() {
 		return hours.Set{{From: 0, To: hours.Minute(b.p.End)}}
 	}
 	t := b.table(w)
@@ -212,7 +212,7 @@ func (b *book) steady(w *problem.Timing) hours.Set {
 
 // pieces tells the worked minutes from a possible start.
 func (t *starts) pieces(s, end int32, piece func(from, to int)) {
-	if len(t.open) == 0 || t.w.Length() == 0 {
+	if t.w.Standing() || t.w.Length() == 0 {
 		if end > s {
 			piece(int(s), int(end))
 		}
