@@ -58,3 +58,37 @@ func TestRandomRefutationsReplay(t *testing.T) {
 	}
 	t.Logf("%d without a plan, %d bounds, %d lemmas", none, best, lemmas)
 }
+
+// TestOpenRefutationsReplay has longer searches: many conflicts, many pairs forced by lags and by each other.
+func TestOpenRefutationsReplay(t *testing.T) {
+	r := rand.New(rand.NewPCG(31, 7))
+	forced, conflicts := 0, int64(0)
+	for round := range 36 {
+		p := randomOpen(r, 14+r.IntN(12), round%3 > 0)
+		if round%2 == 0 { // everything takes most of something
+			for i := range p.Acts {
+				p.Acts[i].Uses = []problem.Use{{Res: round % 4 / 2, Amount: 2 + r.IntN(2)}}
+			}
+		}
+		res, _ := replayed(t, "instance", p, Solve, Options{Ticks: 400_000})
+		conflicts += res.Conflicts
+		if m, ok := build(p, relaxed); ok {
+			for k, q := range m.forced {
+				if longest(len(m.start), m.hops(0), q.a, q.b) == nil || k > 0 && sum(longest(len(m.start), m.hops(k), q.a, q.b)) > sum(longest(len(m.start), m.hops(0), q.a, q.b)) {
+					forced++
+				}
+			}
+		}
+	}
+	if forced < 5 || conflicts < 5000 {
+		t.Errorf("%d pairs forced by forced pairs, %d conflicts: too few to tell", forced, conflicts)
+	}
+}
+
+func sum(path []hop) int32 {
+	n := int32(0)
+	for _, h := range path {
+		n += h.w
+	}
+	return n
+}

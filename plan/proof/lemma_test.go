@@ -52,7 +52,8 @@ func TestLemmas(t *testing.T) {
 		{"longest wait", "", "link 0 : s0<=10 s1>=36", "link 0 : s0<=10 s1>=35"},         // 10 + 5 + 20 = 35
 		{"working wait", "", "link 1 : f2>=19 s3<=31", "link 1 : f2>=19 s3<=32"},         // 1 min to 20, 2 from 30 on
 		{"working wait at most", "", "link 2 : f2<=18 s3>=34", "link 2 : f2<=18 s3>=33"}, // 2 to 20, 3 more to 33, none over it
-		{"shortening wait", "", "link 3 : s0<=4 s6>=12", "link 3 : s0<=4 s6>=11"},        // 4 + 9 - 2 = 11
+		{"working wait at most, to closing time", "", "link 2 : f2<=15 s3>=31", "link 2 : f2<=15 s3>=30"},
+		{"shortening wait", "", "link 3 : s0<=4 s6>=12", "link 3 : s0<=4 s6>=11"}, // 4 + 9 - 2 = 11
 		{"from minute 0", "", "link 4 : s3<=11", "link 4 : s3<=12"},
 		{"two pieces", "", "hours 2 : s2>=11 f2<=34", "hours 2 : s2>=11 f2<=35"},           // set-up and 8 to 20, set-up and 4 from 30
 		{"over a meal", "", "hours 3 : s3>=36 f3<=42", "hours 3 : s3>=36 f3<=43"},          // 4 to 40, 2 from 41
@@ -127,5 +128,14 @@ func TestWhatVariablesMean(t *testing.T) {
 		if (err == nil) != c.ok {
 			t.Errorf("%q gives %v, want it to hold: %v", c.line, err, c.ok)
 		}
+	}
+}
+
+// TestRoomForBoth has no order for two activities that there is just enough for.
+func TestRoomForBoth(t *testing.T) {
+	p := yard()
+	p.Res[0].Capacity, p.Res[1].Capacity = 2, 4
+	if _, err := Replay(p, strings.NewReader(head+"var x1 order 0 1\nbound 0\n")); err == nil {
+		t.Error("an order for two that can be worked at once")
 	}
 }
