@@ -166,6 +166,9 @@ func (k *pack) coatBlock(s *expand.Step) {
 			continue
 		}
 		film = origin.Trim(q.DFT) + " µm"
+		if s.Mends { // a thin wet film, no coat of its own
+			film = "-"
+		}
 		var limits []string
 		for _, f := range q.Limits(s.Method()) {
 			limits = append(limits, f.Name+" "+signs(f.Amount()))
