@@ -149,6 +149,19 @@ func (a *asked) bound(loads []*solve.Load) {
 		a.out.BoundWhy = fmt.Sprintf("%s of work for %s%s from %s", span(why.Total), why.Load.Who, scope(why.Load.Scope), a.clock(why.From))
 	}
 	a.out.Bound = a.at(best)
+	t, why := solve.Squeeze(a.p, loads, best, a.p.Close+1, a.stop)
+	switch {
+	case t <= best:
+		return
+	case t > a.p.Close && why != nil:
+		a.out.Proof = a.overload(why)
+		return
+	case why == nil:
+		a.out.BoundWhy = "the links, however many people there are"
+	default:
+		a.out.BoundWhy = fmt.Sprintf("with an earlier finish there would be %s of work for %s%s between %s and %s, and %s open for it", span(why.Total), why.Load.Who, scope(why.Load.Scope), a.clock(why.From), a.clock(why.To), span(why.Have))
+	}
+	a.out.Bound = a.at(t)
 }
 
 // find searches for a plan and has it checked.

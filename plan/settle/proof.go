@@ -299,7 +299,11 @@ func (a *asked) overload(o *solve.Overload) *plan.Proof {
 	p.Summary = a.sum(o, a.p)
 	for k, i := range o.Acts {
 		act := &a.p.Acts[i]
-		p.Lines = append(p.Lines, plan.ProofLine{Text: fmt.Sprintf("%s: %s", stepName(act.Step), span(o.Need[k])), Minutes: o.Need[k], Pos: act.Pos(), Needed: o.Total-o.Need[k] <= o.Have})
+		text := fmt.Sprintf("%s: %s", stepName(act.Step), span(o.Need[k]))
+		if all := o.All(k); all > o.Need[k] {
+			text += fmt.Sprintf(" at least of its %s", span(all))
+		}
+		p.Lines = append(p.Lines, plan.ProofLine{Text: text, Minutes: o.Need[k], Pos: act.Pos(), Needed: o.Total-o.Need[k] <= o.Have})
 	}
 	p.Lines = append(p.Lines, plan.ProofLine{
 		Text:    fmt.Sprintf("open for %s%s from %s to %s: %s", o.Load.Who, scope(o.Load.Scope), from, to, span(o.Have)),

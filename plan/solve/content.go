@@ -2,6 +2,7 @@ package solve
 
 import (
 	"fmt"
+	"slices"
 	"sort"
 	"strings"
 
@@ -18,7 +19,8 @@ type Load struct {
 	People []int  // indices into Problem.People; nil where it is a resource
 	Res    int    // then the index into Problem.Res
 	acts   []int
-	need   []int       // minutes each activity needs of the group, set-up once included
+	need   []int       // minutes each activity needs of the group, set-up once included, by all of those it needs
+	count  []int       // by activity: how many of the group it needs at once
 	avail  []hours.Set // by person (or one set, Capacity times)
 	times  int         // how often avail counts
 	sum    []int32     // minutes available before each minute
@@ -33,6 +35,11 @@ type Overload struct {
 	Total, Have int
 }
 
+// All gives the minutes that the k-th of the overload's activities needs of the load in all.
+func (o *Overload) All(k int) int {
+	return o.Load.need[slices.Index(o.Load.acts, o.Acts[k])]
+}
+
 // Loads collects the loads of a problem: for every set of people that a need leaves the choice
 // among, all of their work, and their work in each workface; for every kit and workface the work
 // that uses it. Fire watches, which may be shared, are left out.
@@ -41,6 +48,7 @@ func Loads(p *problem.Problem) []*Load {
 	for i := range p.Acts {
 		b.groups(i)
 	}
+	b.unions()
 	b.fill()
 	b.resources()
 	return b.loads
@@ -115,6 +123,33 @@ func (b *loadBuilder) groups(i int) {
 	}
 }
 
+// mostUnions is how many loads of two sets together are opened.
+const mostUnions = 24
+
+// unions opens loads for two sets of people taken together.
+func (b *loadBuilder) unions() {
+	sets := make([][]int, 0, len(b.loads))
+	for _, l := range b.loads {
+		if l.Scope == "" {
+			sets = append(sets, b.sets[l])
+		}
+	}
+	left := mostUnions
+	for i := range sets {
+		for j := range i {
+			both := slices.Concat(sets[i], sets[j])
+			slices.Sort(both)
+			both = slices.Compact(both)
+			if key := fmt.Sprint(both, ""); b.seen[key] == nil && left > 0 {
+				left--
+				l := &Load{Who: b.names(both), People: both, times: 1}
+				b.seen[key], b.sets[l] = l, both
+				b.loads = append(b.loads, l)
+			}
+		}
+	}
+}
+
 func (b *loadBuilder) names(who []int) string {
 	var out []string
 	for _, p := range who {
@@ -150,8 +185,7 @@ func (b *loadBuilder) fill() {
 				}
 			}
 			if count > 0 {
-				l.acts = append(l.acts, i)
-				l.need = append(l.need, count*(a.Step.Working+a.Step.SetUp))
+				l.add(i, count, a.Step.Working+a.Step.SetUp)
 			}
 		}
 	}
@@ -160,7 +194,7 @@ func (b *loadBuilder) fill() {
 		for k, person := range b.sets[l] {
 			l.avail[k] = b.calendars(l.acts, person)
 		}
-		l.count(b.p.End)
+		l.tally(b.p.End)
 	}
 }
 
@@ -200,33 +234,64 @@ func hasPerson(list []int, p int) bool {
 	return false
 }
 
-// resources adds a load for each kit and each workface with room for so many.
+// add gives the load an activity that needs so many of the group for so many minutes.
+func (l *Load) add(i, count, minutes int) {
+	l.acts, l.count, l.need = append(l.acts, i), append(l.count, count), append(l.need, count*minutes)
+}
+
+// resources adds loads for each kit, each workface with room for so many, and the power of each place.
 func (b *loadBuilder) resources() {
-	for r, res := range b.p.Res {
-		if res.Kind == problem.Power {
-			continue
-		}
-		l := &Load{Who: map[problem.ResourceKind]string{problem.Kit: "kit ", problem.Room: "room at "}[res.Kind] + res.Name, Res: r, times: res.Capacity}
-		for i := range b.p.Acts {
-			a := &b.p.Acts[i]
-			for _, u := range a.Uses {
-				if u.Res == r && !a.Cut && a.Modes[0].Time.Calendar() != nil {
-					l.acts = append(l.acts, i)
-					l.need = append(l.need, u.Amount*(a.Step.Working+a.Step.SetUp))
-				}
+	for r := range b.p.Res {
+		res := &b.p.Res[r]
+		switch res.Kind {
+		case problem.Power:
+			for k := 1; k <= atOnce; k++ {
+				b.power(r, k)
 			}
+		case problem.Kit:
+			b.resource(r, "kit "+res.Name, res.Capacity, func(amount int) int { return amount })
+		case problem.Room:
+			b.resource(r, "room at "+res.Name, res.Capacity, func(amount int) int { return amount })
 		}
-		if len(l.acts) == 0 {
-			continue
-		}
-		l.avail = []hours.Set{b.calendars(l.acts, -1)}
-		l.count(b.p.End)
-		b.loads = append(b.loads, l)
 	}
 }
 
-// count sums up the minutes available.
-func (l *Load) count(end int) {
+// atOnce is up to how many things at once the power of a place is counted by.
+const atOnce = 4
+
+// power adds the load of what draws more than a share of the power: of things that draw more than one part in k+1 no
+// more than k run at once, and one that draws more than twice that counts twice (a dual feasible function, Fekete
+// and Schepers 2001).
+func (b *loadBuilder) power(r, k int) {
+	res := &b.p.Res[r]
+	if res.Capacity <= 0 {
+		return
+	}
+	b.resource(r, fmt.Sprintf("%s, %d at once of what draws more than %.3g kVA", res.Name, k, float64(res.Capacity)/float64(k+1)/1000), k,
+		func(amount int) int { return (amount*(k+1)+res.Capacity-1)/res.Capacity - 1 })
+}
+
+// resource adds the load of a resource, with the amounts weighed.
+func (b *loadBuilder) resource(r int, who string, capacity int, weigh func(amount int) int) {
+	l := &Load{Who: who, Res: r, times: capacity}
+	for i := range b.p.Acts {
+		a := &b.p.Acts[i]
+		for _, u := range a.Uses {
+			if n := weigh(u.Amount); u.Res == r && n > 0 && !a.Cut && a.Modes[0].Time.Calendar() != nil {
+				l.add(i, n, a.Step.Working+a.Step.SetUp)
+			}
+		}
+	}
+	if len(l.acts) == 0 {
+		return
+	}
+	l.avail = []hours.Set{b.calendars(l.acts, -1)}
+	l.tally(b.p.End)
+	b.loads = append(b.loads, l)
+}
+
+// tally sums up the minutes available.
+func (l *Load) tally(end int) {
 	l.sum = make([]int32, end+2)
 	for _, set := range l.avail {
 		for _, s := range set {
