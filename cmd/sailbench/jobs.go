@@ -8,6 +8,7 @@ import (
 	"slices"
 	"strings"
 	"sync"
+	"sync/atomic"
 	"time"
 
 	"sailby/plan"
@@ -65,11 +66,10 @@ type jobRow struct {
 // solveJob asks a job as `sailby fits` does, on likely hours, and has the plan checked once more.
 func solveJob(ctx context.Context, name string, job *tasks.Job, o settings) *jobRow {
 	r := &jobRow{row: row{name: name}}
-	begin := time.Now()
-	since := func() float64 { return time.Since(begin).Seconds() }
-	limited, cancel := context.WithTimeout(ctx, o.limit)
+	since := watch(o.cpu)
+	limited, cancel := within(ctx, o.limit, since)
 	defer cancel()
-	rep, err := settle.Ask(limited, job, settle.Options{Only: true, Found: func() {
+	rep, err := settle.Ask(limited, job, settle.Options{Only: true, Thorough: true, Found: func() {
 		r.best = since()
 		if r.first == 0 {
 			r.first = r.best
@@ -89,6 +89,47 @@ func solveJob(ctx context.Context, name string, job *tasks.Job, o settings) *job
 	}
 	r.take(rep.Likely)
 	return r
+}
+
+// within gives a context that ends with the limit, by the given stopwatch.
+func within(ctx context.Context, limit time.Duration, since func() float64) (context.Context, func()) {
+	l := &limited{Context: ctx, done: make(chan struct{})}
+	gone := make(chan struct{})
+	go func() {
+		defer close(l.done)
+		for {
+			select {
+			case <-ctx.Done():
+				return
+			case <-gone:
+				return
+			case <-time.After(time.Millisecond):
+				if since() >= limit.Seconds() {
+					l.over.Store(true)
+					return
+				}
+			}
+		}
+	}()
+	return l, sync.OnceFunc(func() { close(gone) })
+}
+
+// limited is a context with a limit of its own.
+type limited struct {
+	context.Context
+	done chan struct{}
+	over atomic.Bool
+}
+
+// Done is closed when the limit or the context behind it has ended.
+func (l *limited) Done() <-chan struct{} { return l.done }
+
+// Err says which of the two it was.
+func (l *limited) Err() error {
+	if l.over.Load() {
+		return context.DeadlineExceeded
+	}
+	return l.Context.Err()
 }
 
 // take fills the row from an answer.

@@ -30,6 +30,7 @@ type settings struct {
 	every   int
 	offset  int
 	verbose bool
+	cpu     bool
 	random  randomJobs
 	proofs  string
 	cpu     bool
@@ -51,6 +52,7 @@ func run(ctx context.Context, args []string, out, talk io.Writer) error {
 	fl.IntVar(&o.every, "every", 1, "take one in so many instances of each folder")
 	fl.IntVar(&o.offset, "from", 0, "the first one taken, counted from 0")
 	fl.BoolVar(&o.verbose, "v", false, "print each row when it is done")
+	fl.BoolVar(&o.cpu, "cpu", false, "count processor time in place of the clock's; with one worker")
 	fl.IntVar(&o.random.count, "jobs", 0, "make so many jobs at random and solve these; no PATH")
 	fl.IntVar(&o.random.size, "size", 60, "activities of a random job, about")
 	fl.Uint64Var(&o.random.seed, "seed", 1, "seed of the first random job; the next have the next numbers")

@@ -57,6 +57,9 @@ func (c *crewer) crew(i int) bool {
 			c.tie(i, grids{x.grids[k]}, fact{times[k], 1})
 		}
 	}
+	if len(x.times) > 1 {
+		x.timed = times
+	}
 	c.known = map[part]side{}
 	var any []fact
 	for k := range a.Modes {

@@ -34,6 +34,7 @@ type act struct {
 	sure    spans    // minutes in which it is worked if it runs over them, whoever does it
 	watch   int32    // minutes of fire watch that follow at least
 	byMode  []*grid  // with people: the timing of each mode
+	timed   []side   // with people: a variable for each timing, if there are several
 	keepers []keeper // with people: who may keep the watch after it
 	modes   []side   // with people: a variable for each mode, if there are several
 }
@@ -103,11 +104,11 @@ func (m *model) fill(kind kind) bool {
 	if !m.guarded && !m.orders() || !m.apart() || !m.rules() {
 		return false
 	}
+	if kind == named {
+		return m.crews() && m.resources()
+	}
 	if !m.resources() {
 		return false
-	}
-	if kind == named {
-		return m.crews()
 	}
 	m.groups()
 	return true

@@ -12,6 +12,7 @@ import (
 type slicer struct {
 	rnd   *rand.Rand
 	size  float64 // activities in a slice
+	step  int32   // with calendars: minutes by which a slice must shorten the whole
 	order []int
 }
 
@@ -62,12 +63,19 @@ func (s *search) finishOf(i int) int32 { return s.best[s.finish[i]/2] + s.length
 func (s *search) slices(c *slicer) outcome {
 	for k := 0; k < slicesAtOne; k++ {
 		s.assume = c.pick(s, s.assume[:0])
+		if c.step = min(c.step, (s.value-s.now[s.end])/2); c.step > 1 && !s.plain {
+			s.assume = append(s.assume, fact{s.end ^ 1, c.step - s.value})
+		}
 		switch o := s.run(s.assume, sliceWork, false); o {
 		case over, stopped:
 			return o
+		case found:
+			c.step = max(2*c.step, 2)
 		case refused:
+			c.step = max(1, c.step/2)
 			c.size = min(c.size*1.03+0.1, float64(len(s.start)))
 		case tired:
+			c.step = max(1, c.step/2)
 			c.size = max(c.size*0.98, smallSlice)
 		}
 	}

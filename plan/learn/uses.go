@@ -25,7 +25,7 @@ func (m *model) resources() bool {
 			}
 		}
 		capacity := clip(m.p.Res[k].Capacity)
-		if len(us) > 0 {
+		if len(us) > 0 && m.guarded {
 			calm = m.only(ws, m.guard(ByResource, k)) && calm
 		}
 		switch {
@@ -58,6 +58,7 @@ func (m *model) uses(i, k int) []worker {
 		}
 		if a.WatchRoom-1 != k {
 			out = append(out, w)
+			out = append(out, m.byTiming(i, w)...)
 			continue
 		}
 		if n := m.watchers(i); n > 0 {
@@ -68,9 +69,27 @@ func (m *model) uses(i, k int) []worker {
 		}
 		if w.amount > 0 {
 			out = append(out, w)
+			out = append(out, m.byTiming(i, w)...)
 		}
 		if x.watch > 0 {
 			out = append(out, worker{user: m.afterWatch(i), on: always, team: m.team[i]})
+		}
+	}
+	return out
+}
+
+// byTiming gives what activity i takes, with each of its timings, in the minutes in which it is at work with that one
+// and need not be with another.
+func (m *model) byTiming(i int, w worker) []worker {
+	x := &m.acts[i]
+	if w.mask == nil {
+		return nil
+	}
+	var out []worker
+	for k, on := range x.timed {
+		if more := m.steady[x.times[k]].less(x.sure); len(more) > 0 {
+			w.on, w.mask = fact{on, 1}, more
+			out = append(out, w)
 		}
 	}
 	return out

@@ -223,9 +223,12 @@ func (a *asked) find(explain bool) error {
 	}
 	a.out.Steps = res.Ticks
 	if a.carry == a.p || a.carry.Work.Trip == a.work.Trip { // the learning search knows the window as it is
-		res.Best = a.learning(res.Best)
+		res.Best = a.learning(res.Best, 1)
+		if a.o.Thorough {
+			res.Best = a.onward(res.Best, b, o)
+		}
 	} else {
-		a.learning(nil)
+		a.learning(nil, 1)
 	}
 	a.out.CutShort = a.stop()
 	if a.o.left() {
@@ -236,6 +239,21 @@ func (a *asked) find(explain bool) error {
 		return nil
 	}
 	return a.keep(solve.Compact(a.carry, res.Best), explain)
+}
+
+// onward searches for plans and proofs in turn, each round for longer, until the answer is settled or
+// the search is stopped.
+func (a *asked) onward(best *solve.Schedule, b network.Bounds, o solve.Options) *solve.Schedule {
+	o.Good = func(s solve.Score) bool { return a.out.Proof == nil && s.Late == 0 && a.at(s.Finish) <= a.out.Bound }
+	for round := 1; !a.stop() && a.out.Proof == nil && (best == nil || !o.Good(best.Score)); round++ {
+		a.say("better plans, round %d", round)
+		o.Ticks, o.Seed, o.From = a.o.ticks(len(a.carry.Acts))<<min(round, 6), a.o.Seed+uint64(round), best
+		if again := solve.Find(a.carry, b, o); again.Best != nil {
+			best = again.Best
+		}
+		best = a.learning(best, int64(1)<<min(round, 10))
+	}
+	return best
 }
 
 // undated gives the bounds of a problem without its deadlines; ok is false where it cannot be

@@ -2,6 +2,7 @@ package settle
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 
 	"sailby/plan"
@@ -27,8 +28,8 @@ const bySearch = "the search has shown that what follows cannot all hold"
 const searched = "the search has shown that no plan does, whoever works"
 
 // learning asks the learning search for what generation and bounds have left open: a plan that
-// fits, a better one, a proof that none is better, or that none fits.
-func (a *asked) learning(best *solve.Schedule) *solve.Schedule {
+// fits, a better one, a proof that none is better, or that none fits. It works so many times as long as usual.
+func (a *asked) learning(best *solve.Schedule, times int64) *solve.Schedule {
 	if a.out.Proof != nil || a.stop() {
 		return best
 	}
@@ -47,8 +48,9 @@ func (a *asked) learning(best *solve.Schedule) *solve.Schedule {
 	if a.o.Ticks > 0 {
 		o.Ticks = min(o.Ticks, 8*a.o.Ticks)
 	}
+	o.Ticks *= times
 	if fits {
-		o.Best, o.Hint = best.Score.Finish, best.Start
+		o.Best, o.Hint, o.Modes = best.Score.Finish, best.Start, a.modes(best)
 	}
 	got := false
 	o.Found = func([]int, int) { got = true; a.found() }
@@ -85,10 +87,27 @@ func (a *asked) learning(best *solve.Schedule) *solve.Schedule {
 		return best
 	}
 	found := solve.Restore(a.carry, r.Starts, r.Modes, keptWatches(a.carry, r.Watches))
-	if found == nil || best != nil && found.Score.Compare(best.Score, false) >= 0 {
+	switch {
+	case found == nil, best != nil && found.Score.Compare(best.Score, false) >= 0 && (found.Score.Late > 0 || a.at(found.Score.Finish) > a.out.Bound):
 		return best
 	}
 	return found
+}
+
+// modes gives the choices of people of a schedule in the problem of the window as it is; nil where one
+// of them is none there.
+func (a *asked) modes(s *solve.Schedule) []int {
+	out := make([]int, len(s.Mode))
+	for i, m := range s.Mode {
+		old := &a.carry.Acts[i].Modes[m]
+		out[i] = slices.IndexFunc(a.p.Acts[i].Modes, func(x problem.Mode) bool {
+			return slices.Equal(x.Crew, old.Crew) && slices.Equal(x.Relief, old.Relief)
+		})
+		if out[i] < 0 {
+			return nil
+		}
+	}
+	return out
 }
 
 // choicesLeftOut says whether some step has more choices of people than the problem holds.

@@ -18,6 +18,7 @@ type Options struct {
 	Trip     string            // a trip by name; "" is the booked one, else the first
 	Seed     uint64            // for the search; equal seeds and ticks give equal answers
 	Ticks    int64             // starts tried for each basis; 0 is by the size of the job
+	Thorough bool              // go on until the plan is proved to be the best, or the context ends
 	Only     bool              // likely hours only: no maybes, no high end (for what-if)
 	Progress func(text string) // called now and then with what is being done; may be nil
 

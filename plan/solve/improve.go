@@ -25,6 +25,7 @@ type Options struct {
 	Stop  func() bool // asked often; true ends the search after the schedule that is being made
 	Quit  func() bool // asked more often; true ends it in the middle of a schedule
 	Seed  uint64
+	From  *Schedule        // a schedule of the same problem to begin with; nil for none
 	Good  func(Score) bool // true ends the search: nothing better is wanted
 	Found func(Score)      // called for each schedule that is better than all before; may be nil
 }
@@ -48,12 +49,25 @@ func Find(p *problem.Problem, b network.Bounds, o Options) Result {
 	f.leaning = newLeaning(len(p.Acts))
 	f.holdable, f.calmable = f.g.yielding()
 	f.g.stop = o.Stop
+	if o.From != nil {
+		f.take(o.From)
+	}
 	f.rules()
 	if f.best != nil {
 		f.justify()
 	}
 	f.climb()
 	return Result{Best: f.best, Ticks: f.g.ticks, Cut: f.cut}
+}
+
+// take makes a known schedule the best so far, and its starts the list.
+func (f *finder) take(s *Schedule) {
+	f.best = s
+	f.list = make([]int, len(s.Start))
+	for i := range f.list {
+		f.list[i] = i
+	}
+	slices.SortStableFunc(f.list, func(a, b int) int { return s.Start[a] - s.Start[b] })
 }
 
 type finder struct {
@@ -66,7 +80,8 @@ type finder struct {
 	list               []int   // the list that made best
 	leaning            leaning // what best was made with beside it
 	holdable, calmable []int
-	after              []int // by activity: the longest chain of work from it on
+	loads              []*Load // the most loaded, most first
+	after              []int   // by activity: the longest chain of work from it on
 	cut                bool
 }
 

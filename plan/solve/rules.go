@@ -36,6 +36,22 @@ func (f *finder) rules() {
 	}
 	if f.best != nil {
 		copy(f.g.choice, f.best.Choice)
+		f.loads = f.mostLoaded()
+		for k := 0; k < len(f.loads)*len(keys) && !f.over(); k++ { // what is most loaded first
+			early, much := f.early(f.loads[k/len(keys)]), f.best.Score.Finish/2
+			order := make([]int, n)
+			for i := range order {
+				order[i] = i
+			}
+			key := func(i int) int {
+				if early[i] {
+					return keys[k%len(keys)](i) - much
+				}
+				return keys[k%len(keys)](i)
+			}
+			slices.SortStableFunc(order, func(a, b int) int { return key(a) - key(b) })
+			f.try(order)
+		}
 		for k := 0; k < samples && !f.over(); k++ {
 			f.try(f.biased())
 		}
@@ -51,23 +67,25 @@ func (f *finder) biased() []int {
 	after := f.after
 	lean := map[string]float64{}
 	span := float64(max(1, f.best.Score.Finish-f.p.Open))
-	noise := span * 0.1 * f.rng.Float64()
+	noise := span * 0.15 * f.rng.Float64()
+	far := span * float64(f.rng.IntN(2))
 	rule := f.rng.IntN(3)
 	key := make([]float64, len(f.p.Acts))
+	f.press(key, span)
 	for i := range key {
 		switch rule {
 		case 0:
-			key[i] = float64(f.b.LastStart[i])
+			key[i] += float64(f.b.LastStart[i])
 		case 1:
-			key[i] = -float64(after[i])
+			key[i] -= float64(after[i])
 		default:
-			key[i] = float64(f.b.Start[i])
+			key[i] += float64(f.b.Start[i])
 		}
 		key[i] += noise * f.rng.Float64()
-		if s := f.p.Acts[i].Step; s != nil {
+		if s := f.p.Acts[i].Step; s != nil && far > 0 {
 			name := string(s.Task.Kind) + " " + s.Task.Where()
 			if _, ok := lean[name]; !ok {
-				lean[name] = span * (f.rng.Float64() - 0.5)
+				lean[name] = far * (f.rng.Float64() - 0.5)
 			}
 			key[i] += lean[name]
 		}
@@ -78,6 +96,59 @@ func (f *finder) biased() []int {
 	}
 	slices.SortStableFunc(order, func(a, b int) int { return cmp.Compare(key[a], key[b]) })
 	return order
+}
+
+// press brings the work of up to two of the most loaded groups, kits or workfaces, and what comes
+// before it, to the front of a list.
+func (f *finder) press(key []float64, span float64) {
+	if len(f.loads) == 0 {
+		return
+	}
+	for range f.rng.IntN(3) {
+		early := f.early(f.loads[f.rng.IntN(len(f.loads))])
+		much := span * f.rng.Float64()
+		for i := range key {
+			if early[i] {
+				key[i] -= much
+			}
+		}
+	}
+}
+
+// early gives the work of a load and what comes before it.
+func (f *finder) early(l *Load) map[int]bool {
+	out := map[int]bool{}
+	for _, i := range l.acts {
+		f.before(i, out)
+	}
+	return out
+}
+
+// mostPressed is how many loads are looked at.
+const mostPressed = 6
+
+// mostLoaded gives the loads with the least time to spare between the window's opening and the best finish.
+func (f *finder) mostLoaded() []*Load {
+	type spare struct {
+		l    *Load
+		left float64
+	}
+	var all []spare
+	for _, l := range Loads(f.p) {
+		total := 0
+		for _, n := range l.need {
+			total += n
+		}
+		if have := l.have(f.p.Open, f.best.Score.Finish); have > 0 && len(l.acts) > 2 && 2*len(l.acts) < len(f.p.Acts) {
+			all = append(all, spare{l, float64(have-total) / float64(have)})
+		}
+	}
+	slices.SortStableFunc(all, func(a, b spare) int { return cmp.Compare(a.left, b.left) })
+	out := []*Load{}
+	for k := 0; k < len(all) && k < mostPressed; k++ {
+		out = append(out, all[k].l)
+	}
+	return out
 }
 
 // choices counts the combinations of order choices that are tried by the rules.
