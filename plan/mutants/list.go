@@ -13,6 +13,7 @@ var (
 	byNetwork = []string{"./plan/network -rapid.shrinktime=1ms"}
 	byProblem = []string{"./plan/problem", "./plan/settle -run TestLattice -rapid.shrinktime=1ms"}
 	byContent = []string{"./plan/solve"}
+	bySqueeze = []string{"./plan/solve -run TestSqueeze"}
 	byPlans   = []string{"./plan/solve", "./plan/settle -run TestBoundAndPlan -rapid.shrinktime=1ms", "./plan/settle -run TestLattice|TestOffLattice -rapid.shrinktime=1ms"}
 	bySetBy   = []string{"./plan/settle -run TestSetBy -rapid.shrinktime=1ms"}
 	byLeeway  = []string{"./plan/settle -run TestLeeway -rapid.shrinktime=1ms"}
@@ -94,8 +95,16 @@ var mutants = []mutant{
 		`		g.after(i, func(j int) { g.pending[j] = 1 })`, byPlans},
 	{"plan/solve/content.go", `to := b.Last[i]; total > l.have(from, to)`,
 		`to := b.Last[i]; total >= l.have(from, to)`, byContent},
-	{"plan/solve/content.go", `				l.need = append(l.need, count*(a.Step.Working+a.Step.SetUp))`,
-		`				l.need = append(l.need, count*a.Step.Working)`, byContent},
+	{"plan/solve/content.go", `				l.add(i, count, a.Step.Working+a.Step.SetUp)`,
+		`				l.add(i, count, a.Step.Working)`, byContent},
+	{"plan/solve/content.go", `(amount*(k+1)+res.Capacity-1)/res.Capacity - 1 })`,
+		`(amount*(k+1)+res.Capacity-1)/res.Capacity })`, bySqueeze},
+	{"plan/solve/squeeze.go", `max(0, l.need[k]-outside*l.count[k])`,
+		`max(0, l.need[k])`, bySqueeze},
+	{"plan/solve/squeeze.go", `a.By = min(a.By, finish-leastWatch(a))`,
+		`a.By = min(a.By, finish)`, bySqueeze},
+	{"plan/solve/squeeze.go", `			lo, why = mid+1, over`,
+		`			lo, why = mid, over`, bySqueeze},
 	{"plan/solve/content.go", `		if n.Watch {`,
 		`		if false {`, byContent},
 	{"plan/solve/content.go", `			if within(n.who, b.sets[l]) {`,

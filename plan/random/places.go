@@ -22,7 +22,7 @@ func (m *maker) crew() {
 	h := hours[m.rng.IntN(len(hours))]
 	m.open, m.hours = h.text, h.n
 	names := strings.Fields("Ann Bob Cid Dot Eva Finn Gus Hal Ivy Jon Lou Mia Ned Oda Pip Ron")
-	n := min(len(names), 2+m.rng.IntN(2)+min(3, m.Size/15)+m.Size/100)
+	n := min(len(names), 2+m.rng.IntN(2)+min(2, m.Size/25)+m.Size/100)
 	for i := range n {
 		p := person{name: names[i]}
 		switch {

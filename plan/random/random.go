@@ -105,7 +105,7 @@ func (m *maker) length() {
 	const busy = 0.62 // of a crew's open minutes, between waits, tides and each other's way (judgement, from such jobs)
 	need := float64(m.manMins) / (60 * m.hours * busy * float64(min(len(m.people)-1, 2+m.Size/10)))
 	long := m.longest() / (60 * m.hours)
-	m.days = max(2, int(need*m.Class.days()+0.999), int(long*max(1.1, m.Class.days())+1.5))
+	m.days = max(2, int(need*m.Class.days()+0.999), int(long*max(1.45, m.Class.days())+2))
 	m.before = 3 + m.homes
 }
 

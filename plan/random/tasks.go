@@ -5,7 +5,7 @@ import "fmt"
 // tasks draws tasks until there are as many activities as are wanted, those at home first.
 func (m *maker) tasks() {
 	for made := 0; made < m.Size; {
-		home := len(m.work) < m.Size/6 && len(m.work) == m.homes && !m.one(4)
+		home := !m.Lattice && len(m.work) < m.Size/6 && len(m.work) == m.homes && !m.one(4)
 		if home {
 			m.homes++
 		}
@@ -23,6 +23,9 @@ func (m *maker) task(home bool) int {
 	t := task{name: fmt.Sprint("t", i), home: home, links: map[string][]string{}}
 	key := func(format string, args ...any) { t.keys = append(t.keys, fmt.Sprintf(format, args...)) }
 	kind := drawn[m.rng.IntN(len(drawn))]
+	if kind == "prep" && m.Lattice { // it holds for so long from its finish
+		kind = "fit-up"
+	}
 	at := "pier/" + faces[m.rng.IntN(len(faces))]
 	if at == "pier/"+faces[0] && (m.one(2) || kind == "sign-off" || kind == "lift") { // the tide leaves no room for all of it
 		at = "pier/" + faces[1]
@@ -49,7 +52,7 @@ func (m *maker) task(home bool) int {
 	if !home {
 		switch {
 		case m.one(25):
-			t.late = min(0.99, max(0.5, m.chain[i]/m.longest())+0.25+0.3*m.rng.Float64())
+			t.late = min(0.99, max(0.5, m.chain[i]/m.longest())+0.35+0.3*m.rng.Float64())
 		case m.one(20):
 			t.soon = 0.4 * m.rng.Float64()
 		}
