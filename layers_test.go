@@ -57,7 +57,8 @@ var mayImport = map[string][]string{
 
 	"cmd/sailby": {"plan", "plan/settle", "plan/ways", "tasks", "tasks/jobfile", "tasks/expand", "tasks/coat", "tasks/lift", "weld",
 		"report/agenda", "report/clean", "report/export", "report/pdf", "report/screen", "report/sheets", "report/text"},
-	"cmd/sailbench": {"plan", "plan/network", "plan/random", "plan/settle", "tasks", "tasks/expand", "tasks/jobfile", "plan/check", "plan/instance", "plan/learn", "plan/problem", "plan/solve", "plan/proof"},
+	"cmd/sailbench/sidebyside": {"plan/instance"},
+	"cmd/sailbench":            {"plan", "plan/network", "plan/random", "plan/settle", "tasks", "tasks/expand", "tasks/jobfile", "plan/check", "plan/instance", "plan/learn", "plan/problem", "plan/solve", "plan/proof"},
 }
 
 // onlyHere holds modules to the one package that may import them.
