@@ -30,7 +30,6 @@ type settings struct {
 	every   int
 	offset  int
 	verbose bool
-	cpu     bool
 	random  randomJobs
 	proofs  string
 	cpu     bool
@@ -59,7 +58,6 @@ func run(ctx context.Context, args []string, out, talk io.Writer) error {
 	fl.StringVar(&o.random.class, "class", "", "one class of random jobs: slack, snug, tight or over; else all in turn")
 	fl.BoolVar(&o.random.lattice, "lattice", false, "random jobs in which every time is a half hour")
 	fl.StringVar(&o.proofs, "proof", "", "write the proof of each instance to this folder, and replay it")
-	fl.BoolVar(&o.cpu, "cpu", false, "count processor seconds of this process, not those of the clock: for a machine that others use too; with one worker only")
 	if err := fl.Parse(args); err != nil {
 		return err
 	}

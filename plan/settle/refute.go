@@ -5,6 +5,7 @@ import (
 	"errors"
 	"fmt"
 	"io"
+	"slices"
 
 	"sailby/plan"
 	"sailby/plan/learn"
@@ -121,7 +122,9 @@ func tooBusy(p *problem.Problem, finish int) []learn.Busy {
 	if conflict != nil {
 		return nil
 	}
-	loads := solve.Loads(p)
+	loads := slices.DeleteFunc(solve.Loads(p), func(l *solve.Load) bool { // power is weighed there by what can run at once
+		return l.People == nil && p.Res[l.Res].Kind == problem.Power
+	})
 	if o := solve.FindOverload(loads, b); o != nil {
 		return []learn.Busy{{People: o.Load.People, Res: o.Load.Res, From: o.From, To: o.To, Acts: o.Acts}}
 	}

@@ -63,7 +63,7 @@ func (a *asked) first() error {
 	if a.o.Ticks = trialTicks; a.stop() {
 		return nil
 	}
-	if best := a.learning(nil); best != nil && best.Score.Late == 0 {
+	if best := a.learning(nil, 1); best != nil && best.Score.Late == 0 {
 		return a.keep(best, false)
 	}
 	return nil

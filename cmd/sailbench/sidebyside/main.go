@@ -280,6 +280,15 @@ func summary(out io.Writer, solvers []solver, all [][]answer, limit float64) {
 	for k, s := range solvers {
 		p, w, c := count(all[k])
 		fmt.Fprintf(out, "%-9s proved %d of %d; median time to proof %.2f s, of the processor %.2f s", s.name, p, len(all[k]), w, c)
+		failed := 0
+		for _, a := range all[k] {
+			if a.err != "" {
+				failed++
+			}
+		}
+		if failed > 0 {
+			fmt.Fprintf(out, "; did not run on %d", failed)
+		}
 		if k > 0 && p > 0 {
 			fmt.Fprintf(out, "; ours to it: %.2f on proofs, %.2f on time, %.2f on processor time", float64(p0)/float64(p), w0/max(w, 0.01), c0/max(c, 0.01))
 		}
