@@ -64,8 +64,8 @@ func run(ctx context.Context, args []string, out, talk io.Writer) error {
 	if o.limit <= 0 || o.workers < 1 || o.every < 1 || o.offset < 0 {
 		return fmt.Errorf("-limit, -workers and -every must be above 0, -from at least 0")
 	}
-	if _, ok := processor(); o.cpu && (!ok || o.workers > 1 || o.random.count != 0) {
-		return fmt.Errorf("-cpu wants instances, one worker and a system that tells processor time")
+	if _, ok := processor(); o.cpu && (!ok || o.workers > 1) {
+		return fmt.Errorf("-cpu wants one worker, and a system that tells processor time")
 	}
 	if o.random.count != 0 {
 		if o.random.count < 0 || fl.NArg() > 0 {
