@@ -57,6 +57,7 @@ type flags struct {
 	sailbench     string
 	here          string
 	every, offset int
+	cpu           bool
 }
 
 func run(args []string, out, talk io.Writer) error {
@@ -64,6 +65,7 @@ func run(args []string, out, talk io.Writer) error {
 	fl := flag.NewFlagSet("sidebyside", flag.ContinueOnError)
 	fl.SetOutput(talk)
 	fl.DurationVar(&o.limit, "limit", 30*time.Second, "most time of the clock for each solver and instance")
+	fl.BoolVar(&o.cpu, "cpu", false, "the limit is one of processor time: for a machine that others use too")
 	fl.StringVar(&o.sailbench, "sailbench", "sailbench", "this project's benchmark command")
 	fl.StringVar(&o.here, "here", "cmd/sailbench/sidebyside", "the folder of plain.mzn and wasm.mjs")
 	fl.IntVar(&o.every, "every", 1, "take one in so many instances of each folder")
@@ -101,13 +103,13 @@ func run(args []string, out, talk io.Writer) error {
 		}
 		fmt.Fprintf(out, "%s,%d", in.Name, len(in.Length)-2)
 		for k, s := range solvers {
-			ctx, cancel := context.WithTimeout(context.Background(), o.limit+20*time.Second)
+			ctx, cancel := context.WithTimeout(context.Background(), o.clock()+20*time.Second)
 			a := s.run(ctx, f, data)
 			cancel()
 			if a.err != "" {
 				fmt.Fprintf(talk, "%s on %s: %s\n", s.name, in.Name, a.err)
 			}
-			if (a.wall > o.limit.Seconds() || a.cpu > o.limit.Seconds()) && a.proved() { // too late
+			if used := map[bool]float64{false: a.wall, true: a.cpu}[o.cpu]; used > o.limit.Seconds() && a.proved() { // too late
 				a.status = map[string]string{"optimal": "feasible", "infeasible": "unknown"}[a.status]
 			}
 			all[k] = append(all[k], a)
@@ -117,6 +119,24 @@ func run(args []string, out, talk io.Writer) error {
 	}
 	summary(out, solvers, all, o.limit.Seconds())
 	return disagreements(solvers, all)
+}
+
+// clock is the most time of the clock that a solver gets: where processor time counts, so much that
+// only that limits it.
+func (o flags) clock() time.Duration {
+	if o.cpu {
+		return 100 * o.limit
+	}
+	return o.limit
+}
+
+// process runs a command within the limit and times it.
+func (o flags) process(ctx context.Context, name string, args ...string) (string, answer) {
+	if o.cpu { // the shell's limit is of whole seconds, and ends the process
+		args = append([]string{"-c", fmt.Sprintf("ulimit -t %d; exec \"$@\"", int(o.limit.Seconds()+1)), "sh", name}, args...)
+		name = "sh"
+	}
+	return process(ctx, name, args...)
 }
 
 // gather lists the instances of files and folders, each one taken as the flags say.
@@ -154,7 +174,7 @@ func found(o flags, talk io.Writer) []solver {
 	out := []solver{{"ours", o.ours}}
 	if _, err := exec.LookPath("minizinc"); err == nil {
 		out = append(out, solver{"gecode", func(ctx context.Context, _, data string) answer {
-			return o.minizinc(ctx, "minizinc", "--solver", "gecode", "--time-limit", fmt.Sprint(o.limit.Milliseconds()), filepath.Join(o.here, "plain.mzn"), data)
+			return o.minizinc(ctx, "minizinc", "--solver", "gecode", "-i", "--time-limit", fmt.Sprint(o.clock().Milliseconds()), filepath.Join(o.here, "plain.mzn"), data)
 		}})
 	} else {
 		fmt.Fprintln(talk, "left out: gecode (no command minizinc)")
@@ -162,7 +182,7 @@ func found(o flags, talk io.Writer) []solver {
 	_, err := exec.LookPath("node")
 	if _, err2 := os.Stat(filepath.Join(os.Getenv("MINIZINC_DIST"), "minizinc-worker.js")); err == nil && err2 == nil {
 		out = append(out, solver{"learning", func(ctx context.Context, _, data string) answer {
-			return o.minizinc(ctx, "node", filepath.Join(o.here, "wasm.mjs"), "org.minizinc.chuffed", fmt.Sprint(o.limit.Seconds()), filepath.Join(o.here, "plain.mzn"), data, "-f")
+			return o.minizinc(ctx, "node", filepath.Join(o.here, "wasm.mjs"), "org.minizinc.chuffed", fmt.Sprint(o.clock().Seconds()), filepath.Join(o.here, "plain.mzn"), data, "-f")
 		}})
 	} else {
 		fmt.Fprintln(talk, "left out: learning (no node, or MINIZINC_DIST is not the dist folder of the npm package minizinc)")
@@ -181,11 +201,14 @@ func process(ctx context.Context, name string, args ...string) (string, answer) 
 	if c.ProcessState != nil {
 		a.cpu = (c.ProcessState.UserTime() + c.ProcessState.SystemTime()).Seconds()
 	}
-	if err != nil && ctx.Err() == nil {
+	if err != nil && ctx.Err() == nil && !killed(c) {
 		a.err = fmt.Sprintf("%v: %.300s", err, text.String())
 	}
 	return text.String(), a
 }
+
+// killed says whether a process was ended by a signal, as by the limit on its processor time.
+func killed(c *exec.Cmd) bool { return c.ProcessState != nil && c.ProcessState.ExitCode() < 0 }
 
 // ours asks this project's engine through its benchmark command.
 func (o flags) ours(ctx context.Context, file, _ string) answer {
@@ -195,7 +218,7 @@ func (o flags) ours(ctx context.Context, file, _ string) answer {
 	}
 	rows.Close()
 	defer os.Remove(rows.Name())
-	_, a := process(ctx, o.sailbench, "-limit", o.limit.String(), "-csv", rows.Name(), file)
+	_, a := o.process(ctx, o.sailbench, "-limit", o.limit.String(), fmt.Sprintf("-cpu=%v", o.cpu), "-csv", rows.Name(), file)
 	f, err := os.Open(rows.Name())
 	if err != nil {
 		a.err = err.Error()
@@ -215,7 +238,7 @@ var finishes = regexp.MustCompile(`finish=(\d+)`)
 
 // minizinc asks a solver through MiniZinc, and reads what it prints or the runner's JSON.
 func (o flags) minizinc(ctx context.Context, name string, args ...string) answer {
-	text, a := process(ctx, name, args...)
+	text, a := o.process(ctx, name, args...)
 	return read(text, a)
 }
 
