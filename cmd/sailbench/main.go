@@ -31,6 +31,7 @@ type settings struct {
 	offset  int
 	verbose bool
 	random  randomJobs
+	curve   bool
 	proofs  string
 	cpu     bool
 }
@@ -58,6 +59,7 @@ func run(ctx context.Context, args []string, out, talk io.Writer) error {
 	fl.StringVar(&o.random.class, "class", "", "one class of random jobs: slack, snug, tight or over; else all in turn")
 	fl.BoolVar(&o.random.lattice, "lattice", false, "random jobs in which every time is a half hour")
 	fl.StringVar(&o.proofs, "proof", "", "write the proof of each instance to this folder, and replay it")
+	fl.BoolVar(&o.curve, "curve", false, "print a table of time and memory against the size of random jobs; no PATH")
 	if err := fl.Parse(args); err != nil {
 		return err
 	}
@@ -66,6 +68,9 @@ func run(ctx context.Context, args []string, out, talk io.Writer) error {
 	}
 	if _, ok := processor(); o.cpu && (!ok || o.workers > 1) {
 		return fmt.Errorf("-cpu wants one worker, and a system that tells processor time")
+	}
+	if o.curve {
+		return curve(ctx, o, curveSizes, out)
 	}
 	if o.random.count != 0 {
 		if o.random.count < 0 || fl.NArg() > 0 {
