@@ -7,7 +7,7 @@ here=$(dirname "$0")
 echo "job,status,finish" >"$2"
 for d in "$1"/*.dzn; do
   text=$(node "$here/../../../../cmd/sailbench/sidebyside/wasm.mjs" org.minizinc.chuffed "${3:-60}" "$here/job.mzn" "$d" -f)
-  finish=$(printf '%s\n' "$text" | sed -n 's/.*finish=\([0-9]*\).*/\1/p' | tail -1)
+  finish=$(printf '%s\n' "$text" | sed -n 's/.*"default":"finish=\([0-9]*\).*/\1/p' | tail -1)
   case $text in
   *UNSATISFIABLE*) status=infeasible finish= ;;
   *==========* | *OPTIMAL_SOLUTION*) status=optimal ;;
