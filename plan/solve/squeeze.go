@@ -1,8 +1,10 @@
 package solve
 
 import (
+	"fmt"
 	"slices"
 	"sort"
+	"strings"
 
 	"sailby/plan/network"
 	"sailby/plan/problem"
@@ -18,7 +20,7 @@ import (
 //
 // Cost: O(log(hi - lo) x loads x starts x ends x acts), starts and ends kept few in large jobs.
 func Squeeze(p *problem.Problem, loads []*Load, lo, hi int, stop func() bool) (finish int, why *Overload) {
-	q := &squeezer{p: p, loads: slices.Clone(loads), cover: map[*Load][]hours.Set{}}
+	q := &squeezer{p: p, loads: slices.Clone(loads), byAct: make([]hours.Set, len(p.Acts)), shared: map[string]hours.Set{}}
 	for lo < hi {
 		mid := (lo + hi) / 2
 		if stop != nil && stop() {
@@ -34,9 +36,10 @@ func Squeeze(p *problem.Problem, loads []*Load, lo, hi int, stop func() bool) (f
 }
 
 type squeezer struct {
-	p     *problem.Problem
-	loads []*Load // those that ruled something out last come first
-	cover map[*Load][]hours.Set
+	p      *problem.Problem
+	loads  []*Load     // those that ruled something out last come first
+	byAct  []hours.Set // by activity: when it may be worked on, nil where nobody has asked
+	shared map[string]hours.Set
 }
 
 // by is the problem with a finish as a deadline of all site work.
@@ -161,31 +164,37 @@ func spread(list []int, n int) []int {
 	return out
 }
 
-// covers gives, for every activity of a load, all minutes in which it may be worked on.
+// covers gives, for every activity of a load, all minutes in which it may be worked on. Activities with
+// the same timings share them.
 func (q *squeezer) covers(l *Load) []hours.Set {
-	if c, known := q.cover[l]; known {
-		return c
-	}
 	out := make([]hours.Set, len(l.acts))
-	same := map[*problem.Timing]hours.Set{}
 	for k, i := range l.acts {
-		a := &q.p.Acts[i]
-		times := a.Timings()
-		if set, known := same[times[0]]; known && len(times) == 1 {
-			out[k] = set
-			continue
+		if q.byAct[i] == nil {
+			q.byAct[i] = q.coverOf(q.p.Acts[i].Timings())
 		}
+		out[k] = q.byAct[i]
+	}
+	return out
+}
+
+func (q *squeezer) coverOf(times []*problem.Timing) hours.Set {
+	if len(times) == 1 {
+		return times[0].Calendar()
+	}
+	var key strings.Builder
+	for _, w := range times {
+		fmt.Fprintf(&key, "%p ", w)
+	}
+	set, known := q.shared[key.String()]
+	if !known {
 		var spans []hours.Span
 		for _, w := range times {
 			spans = append(spans, w.Calendar()...)
 		}
-		out[k] = hours.NewSet(spans...)
-		if len(times) == 1 {
-			same[times[0]] = out[k]
-		}
+		set = hours.NewSet(spans...)
+		q.shared[key.String()] = set
 	}
-	q.cover[l] = out
-	return out
+	return set
 }
 
 // counted gives the minutes of a set from one minute to another.
