@@ -16,6 +16,7 @@ type Answer struct {
 	Bound     hours.Minute // earliest possible: no plan finishes before it
 	BoundWhy  string       // what proves the bound, in the job's words
 	Best      bool         // Finish is proved to be the earliest
+	HandBest  bool         // no plan with this finish has more time in hand at the tightest of the deadlines other than the window: shown
 	InHand    int          // minutes between Finish and the window's close; negative if late
 	Deadlines []DeadlineResult
 	Governing []Cause              // what sets the finish, step by step, last first

@@ -230,6 +230,7 @@ func (a *asked) find(explain bool) error {
 	} else {
 		a.learning(nil, 1)
 	}
+	res.Best = a.second(res.Best)
 	a.out.CutShort = a.stop()
 	if a.o.left() {
 		return nil

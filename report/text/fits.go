@@ -125,6 +125,9 @@ func (p *page) deadlines(a *plan.Answer) {
 			p.para("    ", "last start that still makes it: "+agenda.Moment(a, d.LastStart))
 		}
 	}
+	if a.HandBest && a.Plan != nil {
+		p.para("  ", "With this finish no plan has more in hand at the tightest deadline but the window's: shown.")
+	}
 }
 
 func (p *page) governing(a *plan.Answer) {

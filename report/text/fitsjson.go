@@ -23,6 +23,7 @@ type answerForm struct {
 	Late      bool           `json:"late"`
 	InHand    *int           `json:"in_hand_min"`
 	Gap       *int           `json:"gap_min"`
+	HandBest  bool           `json:"in_hand_best"` // the least in hand over the deadlines inside the window is shown to be the most that this finish allows
 	Deadlines []deadlineForm `json:"deadlines"`
 	Governing []causeForm    `json:"governing"`
 	Proof     *proofForm     `json:"proof"`
@@ -88,7 +89,7 @@ func FitsJSON(w io.Writer, r *plan.Report) error {
 func answerOf(a *plan.Answer, basis string, low bool) answerForm {
 	f := answerForm{
 		Verdict: a.Verdict.String(), Basis: basis, Says: agenda.Sentence(a, low), Window: windowOf(a),
-		Earliest: siteMoment(a, a.Bound), Why: clean.Line(a.BoundWhy), Best: a.Best, Late: a.Late, InHand: count(a, a.InHand),
+		Earliest: siteMoment(a, a.Bound), Why: clean.Line(a.BoundWhy), Best: a.Best, Late: a.Late, InHand: count(a, a.InHand), HandBest: a.HandBest,
 		Deadlines: deadlinesOf(a), Governing: causesOf(a, a.Governing), Proof: proofOf(a, low), CutShort: a.CutShort,
 	}
 	f.Days, f.Getaways = daysOfNature(a), getaways(a)
