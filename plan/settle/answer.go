@@ -34,6 +34,8 @@ type asked struct {
 	out    *plan.Answer
 	plain  bool // that there is a proof is enough: what it needs is not asked for
 	once   bool // the first plan that fits is enough
+	bare   bool // what explains a plan is left out
+	made   int  // schedules made so far
 }
 
 // answer settles one basis; where nothing fits, with what mends longest waits that cannot be kept.
@@ -188,7 +190,9 @@ func (a *asked) find(explain bool) error {
 			a.found()
 		}
 	}
+	o.Made = a.early
 	res := solve.Find(a.carry, b, o)
+	o.Made = nil
 	if a.out.Proof == nil && a.o.Ticks == 0 && (res.Best == nil || res.Best.Score.Late > 0) && !a.stop() {
 		a.say("plans, for longer")
 		o.Ticks, o.Seed = longer*o.Ticks, o.Seed+1
@@ -310,7 +314,7 @@ func (a *asked) keep(s *solve.Schedule, explain bool) error {
 	a.out.Finish = a.at(s.Score.Finish)
 	a.out.InHand = int(a.work.Window.Closes - a.out.Finish)
 	a.deadlines(s)
-	if explain || len(p.Steps) <= explainAll {
+	if !a.bare && (explain || len(p.Steps) <= explainAll) {
 		a.out.Rows = solve.Rows(a.carry, s, a.stop)
 		a.out.Governing = solve.Governing(a.carry, s, a.out.Rows)
 		a.lastStarts(s)

@@ -24,7 +24,8 @@ type Options struct {
 
 	Found func() // called each time a plan that fits, or a better one, is found; may be nil
 
-	gone *atomic.Bool // nobody waits for the answer any more
+	gone  *atomic.Bool       // nobody waits for the answer any more
+	early func(*plan.Answer) // told of plans before the answer is whole; may be nil
 }
 
 // left says whether the asker has gone away: the rest of the work is for nobody.
@@ -54,7 +55,7 @@ func (o Options) ticks(n int) int64 {
 // Ask settles a job for one window: likely hours, with every maybe, and at the high end.
 //
 // Errors: tasks.Faults where estimates or the choice of the window show faults in the job file;
-// ErrStopped where a large job is cancelled before there is any answer. A cancelled context or
+// ErrStopped where a large job is cancelled before there is any plan. A cancelled context or
 // a deadline otherwise gives the best answer so far, marked as cut short, and no error; after a
 // cancel it comes within milliseconds, and what is still running ends by itself.
 func Ask(ctx context.Context, job *tasks.Job, o Options) (*plan.Report, error) {
@@ -113,9 +114,11 @@ func settle(ctx context.Context, job *tasks.Job, o Options, sofar *atomic.Pointe
 	}
 	likely := expand.Basis{Trip: o.Trip}
 	var err error
+	o.early = func(a *plan.Answer) { sofar.Store(&plan.Report{Job: job, Likely: a}) }
 	if rep.Likely, err = answer(ctx, job, likely, o, true); err != nil {
 		return nil, err
 	}
+	o.early = nil
 	if rep.Likely.Verdict == plan.CannotFit {
 		rep.LowToo = impossible(ctx, job, expand.Basis{Trip: o.Trip, End: expand.Low}, o)
 		if rep.Likely.Proof != nil {

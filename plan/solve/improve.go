@@ -28,6 +28,7 @@ type Options struct {
 	From  *Schedule        // a schedule of the same problem to begin with; nil for none
 	Good  func(Score) bool // true ends the search: nothing better is wanted
 	Found func(Score)      // called for each schedule that is better than all before; may be nil
+	Made  func(*Schedule)  // the same with the schedule, which is not to be changed; may be nil
 }
 
 // Result is what a search found.
@@ -111,6 +112,9 @@ func (f *finder) try(order []int) (Score, bool) {
 		f.best = f.g.snapshot(sc)
 		f.list = append(f.list[:0], order...)
 		f.leaning.set(f.g.lean)
+		if f.o.Made != nil {
+			f.o.Made(f.best)
+		}
 		if f.o.Found != nil {
 			f.o.Found(sc)
 		}
