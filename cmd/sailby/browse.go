@@ -11,6 +11,7 @@ import (
 	"github.com/spf13/cobra"
 
 	"sailby/plan"
+	"sailby/plan/ways"
 	"sailby/report/screen"
 	"sailby/tasks"
 	"sailby/tasks/jobfile"
@@ -70,6 +71,13 @@ func runBrowse(ctx context.Context, o *browseOptions, st streams, args []string)
 type planner struct {
 	*globals
 	path string
+}
+
+// Ways looks for what would make the job of a report fit.
+func (p *planner) Ways(ctx context.Context, r *plan.Report) *plan.Ways {
+	ctx, cancel := context.WithTimeout(ctx, p.limit)
+	defer cancel()
+	return ways.Find(ctx, r.Job, r.Likely, ways.Options{Trip: p.trip, Seed: p.seed, Read: p.rereader(p.path, r.Job)})
 }
 
 // Replan gives the plan on likely hours.

@@ -43,7 +43,7 @@ func runFits(ctx context.Context, o *fitsOptions, st streams, args []string) err
 	if err != nil {
 		return err
 	}
-	o.lookForWays(ctx, st, args[0], r)
+	o.lookForWays(ctx, st, args[0], r, o.limit/2)
 	write := func(w io.Writer) error { return text.Fits(w, r, text.Options{Width: st.width}) }
 	if o.json {
 		write = func(w io.Writer) error { return text.FitsJSON(w, r) }

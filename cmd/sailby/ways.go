@@ -3,6 +3,7 @@ package main
 import (
 	"context"
 	"io"
+	"time"
 
 	"github.com/spf13/cobra"
 
@@ -44,7 +45,7 @@ func runWays(ctx context.Context, o *waysOptions, st streams, args []string) err
 	if err != nil {
 		return err
 	}
-	o.lookForWays(ctx, st, args[0], r)
+	o.lookForWays(ctx, st, args[0], r, o.limit)
 	write := func(w io.Writer) error { return text.Ways(w, r, text.Options{Width: st.width}) }
 	if o.json {
 		write = func(w io.Writer) error { return text.FitsJSON(w, r) }
@@ -58,14 +59,14 @@ func runWays(ctx context.Context, o *waysOptions, st streams, args []string) err
 	return nil
 }
 
-// lookForWays adds to a report what would make its job fit, within the limit.
-func (g *globals) lookForWays(ctx context.Context, st streams, path string, r *plan.Report) {
+// lookForWays adds to a report what would make its job fit, within a limit.
+func (g *globals) lookForWays(ctx context.Context, st streams, path string, r *plan.Report, limit time.Duration) {
 	if r.Likely.Verdict == plan.Fits || ctx.Err() != nil {
 		return
 	}
 	show, done := st.progress()
 	defer done()
-	limited, cancel := context.WithTimeout(ctx, g.limit)
+	limited, cancel := context.WithTimeout(ctx, limit)
 	defer cancel()
 	r.Ways = ways.Find(limited, r.Job, r.Likely, ways.Options{Trip: g.trip, Seed: g.seed, Progress: show, Read: g.rereader(path, r.Job)})
 }

@@ -259,6 +259,9 @@ func (l *lister) manner(s *expand.Step) {
 		if who := l.fillers(n); len(who) < len(l.w.Job.People) {
 			l.add(plan.Limit{Kind: plan.LimitNeed, Step: s, Need: n}, n.Pos, func(c *slice) {
 				q := &c.steps[s].Needs[i]
+				if l.outside(who) { // nobody of the crew takes the place of one from outside
+					q.Count = 0
+				}
 				q.Who, q.Ticket, q.Also = nil, tasks.Ticket{}, nil
 			}, "%s", needText(s, n, who))
 			if !n.Pos.Given() {
@@ -276,6 +279,16 @@ func (l *lister) fillers(n *tasks.Need) []string {
 		}
 	}
 	return out
+}
+
+// outside says whether somebody of these is from outside.
+func (l *lister) outside(who []string) bool {
+	for _, p := range l.w.Job.People {
+		if p.Outside && has(who, p.Name) {
+			return true
+		}
+	}
+	return false
 }
 
 func needText(s *expand.Step, n *tasks.Need, who []string) string {

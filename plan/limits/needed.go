@@ -15,6 +15,7 @@ import (
 type Options struct {
 	Ticks int64       // of the learning search, in all; 0 is 30 million
 	Each  int64       // of one question; 0 is 3 million
+	Lines int         // most limits that are given where not all of them were tried; 0 is 60
 	Stop  func() bool // true ends the work; nil: never
 }
 
@@ -24,6 +25,12 @@ type Found struct {
 	Problem *problem.Problem // of these limits alone
 	Over    *solve.Overload  // the work that is too much, where the set is refuted by that; nil else
 }
+
+// mostLines is how many limits are worth printing where not all of them were tried: more explain nothing.
+const mostLines = 60
+
+// stepTicks is the work of laying out one step, in ticks of the search.
+const stepTicks = 5000
 
 // verdict is what is known of a part of a job.
 type verdict uint8
@@ -40,6 +47,7 @@ type finder struct {
 	o     Options
 	ticks int64 // left
 	plain bool  // questions are put to the network and to sums of work only
+	tired bool  // the bounds ended it before all was asked
 	in    map[*expand.Step]bool
 	list  []Limit
 	off   []bool
@@ -83,6 +91,12 @@ func Find(w *expand.Work, steps []*expand.Step, o Options) *Found {
 			f.leave(0, len(f.list)) // a search can do with less
 		}
 	}
+	if f.o.Lines == 0 {
+		f.o.Lines = mostLines
+	}
+	if f.tired && len(f.lines()) > f.o.Lines {
+		return nil
+	}
 	out := &Found{Lines: f.lines(), Problem: f.left()}
 	for i := range out.Problem.Acts {
 		if len(out.Problem.Acts[i].Modes) == 0 {
@@ -97,7 +111,12 @@ func Find(w *expand.Work, steps []*expand.Step, o Options) *Found {
 
 func (f *finder) has(s *expand.Step) bool { return f.in[s] }
 
-func (f *finder) stopped() bool { return f.ticks <= 0 || f.o.Stop != nil && f.o.Stop() }
+func (f *finder) stopped() bool {
+	if f.ticks <= 0 || f.o.Stop != nil && f.o.Stop() {
+		f.tired = true
+	}
+	return f.tired
+}
 
 // fewer leaves out steps, by halves, while what is left is refuted.
 func (f *finder) fewer() {
@@ -181,6 +200,7 @@ func (f *finder) confirm() bool {
 
 // ask says what is known of the steps and limits that are left.
 func (f *finder) ask() verdict {
+	f.ticks -= stepTicks * int64(len(f.in))
 	p := f.left()
 	for i := range p.Acts {
 		if len(p.Acts[i].Modes) == 0 {

@@ -52,7 +52,7 @@ func (g *ground) place(p *tasks.Place) {
 	if p.Noisy != nil {
 		g.noise[p] = p.Noisy.Spans(p.Zone, g.span, nil)
 	}
-	if p.HasAt {
+	if p.HasAt && g.wantsLight(p) {
 		g.light[p] = daylight(p, g.span)
 	}
 	g.valid[p] = map[string]hours.Set{}
@@ -65,6 +65,16 @@ func (g *ground) place(p *tasks.Place) {
 			g.reach[f] = set
 		}
 	}
+}
+
+// wantsLight says whether some step at the place needs daylight: laying it out is most of the work of a place.
+func (g *ground) wantsLight(p *tasks.Place) bool {
+	for _, s := range g.work.Steps {
+		if s.Place == p && (s.Light || s.Face != nil && s.Face.Light) {
+			return true
+		}
+	}
+	return false
 }
 
 // face2 gives the minutes in which a workface can be worked, and whether anything limits it.

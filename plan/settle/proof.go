@@ -55,6 +55,13 @@ func (a *asked) chain(c *network.Conflict) *plan.Proof {
 	return a.chainText(off, left)
 }
 
+// besideLimits is the work, in ticks of the search, of making a proof small beside the likely hours, and besideLines how many
+// limits it may have there if they are not all tried.
+const (
+	besideLimits = 8_000_000
+	besideLines  = 25
+)
+
 // members puts in place of a proof's lines the limits of some steps that cannot all hold, each tried by itself. Of the
 // lines for steps those that are there already stay as they are said.
 func (a *asked) members(p *plan.Proof, acts []int, said map[*expand.Step]string) *limits.Found {
@@ -62,7 +69,11 @@ func (a *asked) members(p *plan.Proof, acts []int, said map[*expand.Step]string)
 		return nil
 	}
 	a.say("what the proof needs")
-	found := limits.Find(a.work, limits.Steps(a.p, acts), limits.Options{Stop: a.stop})
+	o := limits.Options{Stop: a.stop}
+	if a.work.Basis.Maybes || a.work.Basis.End != expand.Likely {
+		o.Ticks, o.Lines = besideLimits, besideLines
+	}
+	found := limits.Find(a.work, limits.Steps(a.p, acts), o)
 	if found == nil {
 		return nil
 	}
@@ -308,7 +319,11 @@ func (a *asked) overload(o *solve.Overload) *plan.Proof {
 	p.Lines = append(p.Lines, plan.ProofLine{
 		Text:    fmt.Sprintf("open for %s%s from %s to %s: %s", o.Load.Who, scope(o.Load.Scope), from, to, span(o.Have)),
 		Minutes: o.Have, Pos: a.work.Window.Pos, Needed: true})
-	switch found := a.members(p, a.linked(o.Acts), nil); {
+	found := a.members(p, o.Acts, nil)
+	if found == nil {
+		found = a.members(p, a.linked(o.Acts), nil)
+	}
+	switch {
 	case found != nil && found.Over != nil: // of the members alone: what else there is, may be too much too
 		p.Over, p.Summary = found.Over.Total-found.Over.Have, a.sum(found.Over, found.Problem)
 	case found != nil:

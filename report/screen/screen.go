@@ -24,6 +24,13 @@ type Teller interface {
 	ReplanTelling(ctx context.Context, sets []tasks.Setting, tell func(string)) (*plan.Report, error)
 }
 
+// Seeker is a Planner that finds what would make a report's job fit; nil where it fits, or nothing was found out. The
+// report is not changed.
+type Seeker interface {
+	Planner
+	Ways(ctx context.Context, r *plan.Report) *plan.Ways
+}
+
 // Options say how the screen is shown. The zero value opens the terminal, with colours.
 type Options struct {
 	Screen   tcell.Screen // already made, not started; nil: the terminal
@@ -47,7 +54,12 @@ func Run(ctx context.Context, r *plan.Report, p Planner, o Options) (tried []str
 		return nil, errors.Join(ErrNoTerminal, err)
 	}
 	ctx, cancel := context.WithCancel(ctx)
+	seeker, seeks := p.(Seeker)
+	seeks = seeks && r.Likely != nil && r.Likely.Verdict != plan.Fits && r.Ways == nil
 	d := &driver{ctx: ctx, m: model.New(r), planner: p, app: tview.NewApplication()}
+	if seeks {
+		d.m.Looking()
+	}
 	d.app.SetScreen(started{s}).EnablePaste(true).SetRoot(newView(d.m, !o.NoColour, d.do), true)
 	d.app.SetInputCapture(func(e *tcell.EventKey) *tcell.EventKey {
 		if e.Key() == tcell.KeyCtrlC { // tview would stop by itself
@@ -65,6 +77,15 @@ func Run(ctx context.Context, r *plan.Report, p Planner, o Options) (tried []str
 				<-ctx.Done()
 				d.app.Stop()
 			}()
+			if seeks { // the verdict is on the screen
+				d.wait.Add(1)
+				go func() {
+					defer d.wait.Done()
+					asked := *r
+					w := seeker.Ways(ctx, &asked)
+					d.post(func() { d.m.Ways(w) })
+				}()
+			}
 		})
 	})
 	err = d.app.Run()

@@ -52,6 +52,7 @@ func (p *glancePage) lay(n int) ([]Row, []line) {
 		out = append(out, line{})
 		out = append(out, proofLines(a, n)...)
 	}
+	out = append(out, m.waysLines(n)...)
 	if !a.Best && a.BoundWhy != "" && a.Plan != nil {
 		out = append(out, line{})
 		out = append(out, para(n, "", "No plan can finish before "+agenda.Moment(a, a.Bound)+": "+a.BoundWhy+".", Plain, nil)...)

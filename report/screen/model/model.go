@@ -27,15 +27,16 @@ type typist interface {
 
 // Model is the state of the screen. It is not safe for use by several goroutines.
 type Model struct {
-	file  *plan.Report // of the job as it is in the file
-	tried *plan.Report // with the changes tried; nil if none was planned yet
-	shown *plan.Report // one of the two
-	basis basis
-	stack []page // the first is always the window
-	days  map[*plan.Answer][]*agenda.Shift
-	what  *whatPage
-	wide  int // columns and rows as last drawn
-	tall  int
+	file    *plan.Report // of the job as it is in the file
+	tried   *plan.Report // with the changes tried; nil if none was planned yet
+	shown   *plan.Report // one of the two
+	looking bool         // for what would make the job of the file fit
+	basis   basis
+	stack   []page // the first is always the window
+	days    map[*plan.Answer][]*agenda.Shift
+	what    *whatPage
+	wide    int // columns and rows as last drawn
+	tall    int
 }
 
 // basis is which of a report's answers is looked at.
