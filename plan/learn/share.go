@@ -95,7 +95,7 @@ func (s *search) minimise() Result {
 				limit += limit / growth
 			}
 		case slicing:
-			o = s.slices(c)
+			o = s.elsewhere(c, b)
 		case breeding:
 			o = s.breed(b)
 		case lowly:

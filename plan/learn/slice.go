@@ -59,6 +59,30 @@ func (c *slicer) pick(s *search, out []fact) []fact {
 // finishOf gives the finish of activity i in the best plan.
 func (s *search) finishOf(i int) int32 { return s.best[s.finish[i]/2] + s.length[i] }
 
+// elsewhere tries slices of another plan of the herd that is as good as the best, every second time that
+// there is one: where every slice of one has been refused, another may still give way.
+func (s *search) elsewhere(c *slicer, b *breeder) outcome {
+	var x *beast
+	if b != nil && len(b.herd) > 0 && c.rnd.IntN(2) == 0 {
+		x = b.herd[c.rnd.IntN(len(b.herd))]
+	}
+	if x == nil || x.end != s.value {
+		return s.slices(c)
+	}
+	value, base := s.value, s.base
+	best := append([]int32(nil), s.best...)
+	s.base = make([]int, len(x.start))
+	for i, t := range x.start {
+		s.base[i] = int(t)
+		s.best[s.start[i]/2] = t
+	}
+	o := s.slices(c)
+	if s.value == value {
+		s.base, s.best = base, best
+	}
+	return o
+}
+
 // slices tries some slices; what it gives is over, stopped or tired.
 func (s *search) slices(c *slicer) outcome {
 	for k := 0; k < slicesAtOne; k++ {

@@ -17,6 +17,7 @@ var (
 	byPlans   = []string{"./plan/solve", "./plan/settle -run TestBoundAndPlan -rapid.shrinktime=1ms", "./plan/settle -run TestLattice|TestOffLattice -rapid.shrinktime=1ms"}
 	bySetBy   = []string{"./plan/settle -run TestSetBy -rapid.shrinktime=1ms"}
 	byLeeway  = []string{"./plan/settle -run TestLeeway -rapid.shrinktime=1ms"}
+	byRules   = []string{"./plan/learn -run Energy|Load|Slots|ByTime|ReasonsHold|OpenInstances"}
 	byChecker = []string{"./plan/check -rapid.shrinktime=1ms"}
 )
 
@@ -165,4 +166,26 @@ var mutants = []mutant{
 		`if have < want-1 {`, byChecker},
 	{"plan/check/hanging.go", `up[p] = p == t.Lifts || !gone[p]`,
 		`up[p] = true`, byChecker},
+	{"plan/learn/energy.go", `x.ect > a+m && !e.raise(u.start, b-m, note)`,
+		`x.ect > a+m && !e.raise(u.start, b-m+1, note)`, byRules},
+	{"plan/learn/energy.go", `x.lst < b-m && !e.raise`,
+		`x.lst <= b-m && !e.raise`, byRules},
+	{"plan/learn/energy.go", `min(x.length, b-x.lst, x.ect-a, b-a)`,
+		`min(x.length, b-x.lst+1, x.ect-a, b-a)`, byRules},
+	{"plan/learn/energy.go", `int32(len(e.list)), -spare-1, e.clash`,
+		`int32(len(e.list)), -spare, e.clash`, byRules},
+	{"plan/learn/energyreason.go", `int64(m+1)*int64(u.amount)-spare-1, out)`,
+		`int64(m+1)*int64(u.amount)-spare, out)`, byRules},
+	{"plan/learn/energyreason.go", `max(u.least, ect-lst), b-lst, ect-a, b-a`,
+		`max(u.least, ect-lst), b-lst, ect-a+1, b-a`, byRules},
+	{"plan/learn/energyreason.go", `return u.startBy(b - q), u.finishFrom(a + q)`,
+		`return u.startBy(b - q + 1), u.finishFrom(a + q)`, byRules},
+	{"plan/learn/timereason.go", `spare := -c.capacity - 1`,
+		`spare := -c.capacity`, byRules},
+	{"plan/learn/arc.go", `	return v - a.w`,
+		`	return v - a.w - 1`, byRules},
+	{"plan/learn/room.go", `		at = k + 1`,
+		`		at = k + 2`, byRules},
+	{"plan/learn/serial.go", `		turn = -1`,
+		`		turn = 1`, byRules},
 }
