@@ -23,6 +23,26 @@ type lagTo struct{ other, lag int32 }
 // newShop makes a shop, nil if the problem has more to it than such lags and
 // resources.
 func newShop(m *model) *shop {
+	h := m.wants()
+	if h == nil {
+		return nil
+	}
+	h.before, h.after, h.key = make([][]lagTo, h.n), make([][]lagTo, h.n), make([]int64, h.n)
+	for _, a := range m.lags {
+		if a.lag < 0 {
+			return nil
+		}
+		h.before[a.j] = append(h.before[a.j], lagTo{int32(a.i), a.lag})
+		h.after[a.i] = append(h.after[a.i], lagTo{int32(a.j), a.lag + h.length[a.j] - h.length[a.i]})
+	}
+	if !h.sort() {
+		return nil
+	}
+	return h
+}
+
+// wants is a shop without its lags, nil if the problem has more to it than fixed lengths, lags and resources.
+func (m *model) wants() *shop {
 	p := m.p
 	if !m.plain || len(p.Pairs) > 0 || len(p.Orders) > 0 || len(p.People) > 0 {
 		return nil
@@ -33,12 +53,12 @@ func newShop(m *model) *shop {
 		capacity[k] = int32(p.Res[k].Capacity)
 	}
 	l := newLanes(capacity)
-	h := &shop{n: n, length: m.length, before: make([][]lagTo, n), after: make([][]lagTo, n),
-		room: newRoom(l, l.pack(capacity), p.End), want: make([][]uint64, n), idle: make([]bool, n), from: make([]int32, n), key: make([]int64, n)}
+	h := &shop{n: n, length: m.length, room: newRoom(l, l.pack(capacity), p.End),
+		want: make([][]uint64, n), idle: make([]bool, n), from: make([]int32, n)}
 	for i := range p.Acts {
 		use := make([]int32, len(p.Res))
 		h.idle[i] = true
-		if p.Acts[i].By < p.End || p.Acts[i].Site != p.Acts[0].Site {
+		if p.Acts[i].By < p.End || p.Acts[i].Site != p.Acts[0].Site || m.acts[i].watch > 0 {
 			return nil
 		}
 		h.from[i] = int32(p.Acts[i].From)
@@ -50,16 +70,6 @@ func newShop(m *model) *shop {
 			h.idle[i] = h.idle[i] && (u.Amount == 0 || h.length[i] == 0)
 		}
 		h.want[i] = l.pack(use)
-	}
-	for _, a := range m.lags {
-		if a.lag < 0 {
-			return nil
-		}
-		h.before[a.j] = append(h.before[a.j], lagTo{int32(a.i), a.lag})
-		h.after[a.i] = append(h.after[a.i], lagTo{int32(a.j), a.lag + h.length[a.j] - h.length[a.i]})
-	}
-	if !h.sort() {
-		return nil
 	}
 	return h
 }

@@ -24,7 +24,7 @@ const (
 	least    = 0.12
 	farLeast = 0.5
 	farShare = 0.3
-	farParts = 25 // far: more than one part in so many
+	farParts = 10 // far: more than one part in so many
 )
 
 // purse keeps account of the ticks.
@@ -74,16 +74,20 @@ func (s *search) minimise() Result {
 	if h := newShop(s.model); h != nil {
 		b = newBreeder(h, s.opt.Seed)
 	}
+	var f *fitter
+	if b == nil {
+		f = newFitter(s.model, s.opt.Seed)
+	}
 	c := &slicer{rnd: rand.New(rand.NewPCG(s.opt.Seed, 29)), size: firstSlice}
 	var p purse
 	p.able[freely] = true
 	turn, limit, low := 0, int64(firstRun), lowRun{step: 1, limit: firstRun}
 	for round := 0; ; round++ {
 		p.able[slicing] = len(s.base) > 0
-		p.able[breeding] = b != nil
+		p.able[breeding] = b != nil || f != nil && (len(s.base) == 0 || f.attempts < fitInAll)
 		p.able[lowly] = s.now[s.end] < s.value-2
 		m := p.next()
-		if b != nil && round == 0 {
+		if p.able[breeding] && round == 0 {
 			m = breeding
 		}
 		ticks, value := s.ticks, s.value
@@ -97,7 +101,11 @@ func (s *search) minimise() Result {
 		case slicing:
 			o = s.elsewhere(c, b)
 		case breeding:
-			o = s.breed(b)
+			if b != nil {
+				o = s.breed(b)
+			} else {
+				o = s.fit(f)
+			}
 		case lowly:
 			o = low.run(s)
 		}
