@@ -106,6 +106,9 @@ func run(args []string, out, talk io.Writer) error {
 			ctx, cancel := context.WithTimeout(context.Background(), o.clock()+20*time.Second)
 			a := s.run(ctx, f, data)
 			cancel()
+			if a.cpu >= o.limit.Seconds() { // ended by the limit
+				a.err = ""
+			}
 			if a.err != "" {
 				fmt.Fprintf(talk, "%s on %s: %s\n", s.name, in.Name, a.err)
 			}
