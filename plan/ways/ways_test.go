@@ -63,7 +63,7 @@ func find(t interface {
 // TestLeastChange: jobs whose least change is known by hand; the sums stand beside them.
 func TestLeastChange(t *testing.T) {
 	in18 := "  a: {at: pier, hours: 9 h, who: Ines}\n  b: {at: pier, hours: 9 h, after: a, who: Tom}\n" // 18 h in a row, 17 h open
-	for _, tc := range []struct {
+	for i, tc := range []struct {
 		name, top, place, people, work string
 		kind                           plan.LimitKind
 		says                           string
@@ -96,6 +96,9 @@ func TestLeastChange(t *testing.T) {
 		{"noisy work for longer", "", "    noisy work: Mon-Sat 10:00-11:00\n", "", "  a: {at: pier, hours: 3 h, who: Ines, noisy: yes}\n", plan.LimitNoisy, "longer each day", 30, `noisy work: ["Mon-Sat 10:00-11:30"]`},
 		{"the change that the file keeps", "changes: {quick: {says: a faster way, set: {tasks/a/hours: 7 h}}}\n", "", "", in18, plan.LimitOther, `the change "quick" (a faster way)`, 0, `--with "quick", or what stands under it`},
 	} {
+		if testing.Short() && i%3 != 0 {
+			continue
+		}
 		a, w := find(t, file(tc.top, tc.place, tc.people, tc.work), Options{})
 		if a.Verdict != plan.CannotFit || w == nil {
 			t.Errorf("%s: %v", tc.name, a.Verdict)
@@ -200,7 +203,7 @@ func TestWaysHold(t *testing.T) {
 		}
 	})
 	t.Logf("%d ways; %d jobs without", seen, none)
-	if seen == 0 {
+	if seen == 0 && !testing.Short() {
 		t.Error("no way in all these jobs")
 	}
 }
