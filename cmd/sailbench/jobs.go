@@ -88,6 +88,11 @@ func solveJob(ctx context.Context, name string, job *tasks.Job, o settings) *job
 		return r
 	}
 	r.take(rep.Likely)
+	limited, cancel = context.WithTimeout(ctx, o.limit)
+	defer cancel()
+	if r.replay, err = refuteJob(limited, o.proofs, name, rep.Likely); err != nil && r.wrong == "" {
+		r.wrong = err.Error()
+	}
 	return r
 }
 
@@ -221,7 +226,7 @@ func benchJobs(ctx context.Context, o settings, out, talk io.Writer) error {
 				rows[i] = r
 				if o.verbose {
 					say.Lock()
-					fmt.Fprintf(talk, "%s gap=%d min, %.1f %% %s; %s\n", strings.Join(r.fields(), ","), r.gap, r.openGap, r.why, r.wrong)
+					fmt.Fprintf(talk, "%s gap=%d min, %.1f %% %s; %s%s\n", strings.Join(r.fields(), ","), r.gap, r.openGap, r.why, r.replay, r.wrong)
 					say.Unlock()
 				}
 			}
@@ -264,6 +269,7 @@ func reportJobs(rows []*jobRow, o settings, out io.Writer) error {
 	if len(order) > 1 {
 		jobLine(out, "all", rows)
 	}
+	tellReplays(out, all)
 	if o.csv != "" {
 		if err := writeRows(o.csv, all); err != nil {
 			return err

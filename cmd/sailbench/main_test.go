@@ -34,12 +34,12 @@ func folderOf(t *testing.T) string {
 
 func TestRun(t *testing.T) {
 	dir := folderOf(t)
-	rows := filepath.Join(t.TempDir(), "rows.csv")
+	rows, proofs := filepath.Join(t.TempDir(), "rows.csv"), t.TempDir()
 	var out, talk bytes.Buffer
-	if err := run(context.Background(), []string{"-limit", "20s", "-workers", "2", "-csv", rows, "-v", dir}, &out, &talk); err != nil {
+	if err := run(context.Background(), []string{"-limit", "20s", "-workers", "2", "-csv", rows, "-v", "-proof", proofs, dir}, &out, &talk); err != nil {
 		t.Fatal(err, out.String())
 	}
-	if s := out.String(); !strings.Contains(s, "2 instances: 2 settled (1 without a plan)") || !strings.Contains(s, "wrong 0") {
+	if s := out.String(); !strings.Contains(s, "2 instances: 2 settled (1 without a plan)") || !strings.Contains(s, "wrong 0") || !strings.Contains(s, "2 proofs replayed, 2 of them of settled instances") {
 		t.Errorf("summary %q", s)
 	}
 	data, err := os.ReadFile(rows)

@@ -1,15 +1,19 @@
 package main
 
 import (
+	"context"
+	"errors"
 	"fmt"
 	"io"
 	"os"
 	"path/filepath"
 	"time"
 
+	"sailby/plan"
 	"sailby/plan/learn"
 	"sailby/plan/problem"
 	"sailby/plan/proof"
+	"sailby/plan/settle"
 )
 
 // logFile is the proof of one instance being written; nil: nobody wants it.
@@ -27,7 +31,7 @@ func (r *replay) String() string {
 	if r == nil {
 		return ""
 	}
-	return fmt.Sprintf("proof=%dkB clauses=%d lemmas=%d replay_s=%.3f ", r.bytes/1000, r.clauses, r.lemmas, r.seconds)
+	return fmt.Sprintf("proof=%dkB clauses=%d lemmas=%d proof_s=%.3f ", r.bytes/1000, r.clauses, r.lemmas, r.seconds)
 }
 
 // openLog makes the file of an instance's proof in a folder, which is made if need be; no folder, no log.
@@ -84,6 +88,26 @@ func (l *logFile) replay(p *problem.Problem, got learn.Result) (*replay, error) 
 	return &replay{size, shown.Clauses, shown.Lemmas, time.Since(begin).Seconds()}, nil
 }
 
+// refuteJob writes why an answer to a job claims what it does, and has it verified; nil where no refutation was found, or no
+// folder is given.
+func refuteJob(ctx context.Context, folder, name string, a *plan.Answer) (*replay, error) {
+	log, err := openLog(folder, name)
+	if log == nil || err != nil {
+		return nil, err
+	}
+	defer log.file.Close()
+	begin := time.Now()
+	got, err := settle.Refute(ctx, a, log.file)
+	if errors.Is(err, settle.ErrNoRefutation) {
+		return nil, os.Remove(log.file.Name())
+	}
+	if err != nil {
+		return nil, err
+	}
+	size, err := log.file.Seek(0, io.SeekEnd)
+	return &replay{size, got.Clauses, got.Lemmas, time.Since(begin).Seconds()}, err
+}
+
 // tellReplays prints how many proofs were replayed, if any were asked for.
 func tellReplays(out io.Writer, rows []*row) {
 	n, settled, bytes, slowest := 0, 0, int64(0), 0.0
@@ -99,6 +123,6 @@ func tellReplays(out io.Writer, rows []*row) {
 		}
 	}
 	if n > 0 {
-		fmt.Fprintf(out, "         %d proofs replayed, %d of them of settled instances; %.1f MB in all; slowest replay %.1f s\n", n, settled, float64(bytes)/1e6, slowest)
+		fmt.Fprintf(out, "         %d proofs replayed, %d of them of settled instances; %.1f MB in all; slowest %.1f s\n", n, settled, float64(bytes)/1e6, slowest)
 	}
 }

@@ -9,7 +9,6 @@ type arc struct {
 	w        int32
 	on       fact // condition; s < 0: always
 	how      curve
-	label    label // what it stands for in the problem
 }
 
 // curve is a monotone function between sides.
@@ -40,6 +39,7 @@ type plain struct{ to, w, id int32 }
 // arcs holds all arcs by the side that they start from.
 type arcs struct {
 	all   []arc
+	label []label   // what each stands for in the problem
 	plain [][]plain // by from
 	other [][]int32 // by from: arcs with a condition or a curve
 	wakes [][]int32 // by the side of the condition
@@ -53,8 +53,7 @@ func (e *engine) join(from, to side, w int32, on fact) {
 
 func (e *engine) addArc(a arc) {
 	id := int32(len(e.arcs.all))
-	a.label = e.label
-	e.arcs.all = append(e.arcs.all, a)
+	e.arcs.all, e.arcs.label = append(e.arcs.all, a), append(e.arcs.label, e.label)
 	if a.on.s < 0 && a.how == nil {
 		e.arcs.plain[a.from] = append(e.arcs.plain[a.from], plain{a.to, a.w, id})
 		return

@@ -6,7 +6,6 @@ import (
 	"fmt"
 	"io"
 	"slices"
-	"strconv"
 )
 
 // record writes down what a search learns, and why, in the form that package plan/proof replays. Of the reasons
@@ -37,24 +36,6 @@ type note struct {
 	why      why
 	from, to int // in facts
 }
-
-// label says what an arc stands for in the problem.
-type label struct {
-	kind uint8
-	a, b int
-}
-
-const (
-	forNothing = uint8(iota)
-	forLink    // link a
-	forHours   // start and finish of activity a
-	forEnd     // finish of activity a and that of the whole
-	forApart   // variable a says which of two goes first
-	forForced  // activity a goes before activity b, as the links leave no choice
-	forRule    // choice b of order rule a
-	forModes   // what the mode of activity a brings with it
-	forStay    // variable a says who keeps the watch after an activity
-)
 
 // witness is a rule that can name its lemmas: the stretch of time that the facts behind f are about.
 type witness interface {
@@ -101,92 +82,6 @@ func (r *record) close(res Result) Result {
 		res.LogErr = err
 	}
 	return res
-}
-
-// called names a variable, told declares what it means and lets the arcs that follow stand for it.
-func (m *model) called(s side, format string, args ...any) {
-	if m.log == nil {
-		return
-	}
-	for len(m.log.names) <= int(s/2) {
-		m.log.names = append(m.log.names, "")
-	}
-	m.log.names[s/2] = fmt.Sprintf(format, args...)
-}
-
-func (m *model) told(s side, format string, args ...any) {
-	m.label = label{forApart, int(s), 0}
-	if m.log != nil {
-		m.called(s, "x%d", s/2)
-		m.log.line("var x%d "+format, append([]any{s / 2}, args...)...)
-	}
-}
-
-// titled names the lemmas of the rule that is made next.
-func (m *model) titled(format string, args ...any) {
-	if m.log != nil {
-		m.log.titles[int32(len(m.engine.rules))] = fmt.Sprintf(format, args...)
-	}
-}
-
-func (m *model) titledCrew(who []int) {
-	if m.log != nil {
-		m.titled("crew %s", list(who))
-	}
-}
-
-// list writes numbers with commas between them.
-func list(numbers []int) string {
-	var b []byte
-	for k, n := range numbers {
-		if k > 0 {
-			b = append(b, ',')
-		}
-		b = strconv.AppendInt(b, int64(n), 10)
-	}
-	return string(b)
-}
-
-// never says that a lemma without facts makes an end of it.
-func (m *model) never(format string, args ...any) {
-	if m.log != nil {
-		m.log.begin()
-		m.clash = m.clash[:0]
-		m.log.line(format+" :", args...)
-	}
-}
-
-// given raises a side for what the arcs' label says of minute 0.
-func (m *model) given(f fact) bool {
-	if m.log != nil && !m.holds(f) {
-		m.log.lemma(m.log.called(m.label), nil, f)
-		m.log.so(0, []fact{f.not()})
-	}
-	return m.raise(f.s, f.v, why{kind: whyRoot})
-}
-
-// axiom adds a clause that the problem states, under the name of the lemma that says so.
-func (m *model) axiom(fs []fact, format string, args ...any) bool {
-	id := int32(0)
-	if m.log != nil {
-		against := make([]fact, len(fs))
-		for i, f := range fs {
-			against[i] = f.not()
-		}
-		m.log.lemma(fmt.Sprintf(format, args...), against, fact{s: -1})
-		if len(fs) > 1 {
-			id = m.log.next
-			m.log.next++
-		}
-		m.log.so(id, against)
-	}
-	if !m.add(fs) {
-		return false
-	}
-	if id > 0 {
-		m.store.facts[m.refs[len(m.refs)-1]-1].v = id
-	}
-	return true
 }
 
 // begin forgets the reasons of the last contradiction.
@@ -353,90 +248,4 @@ func (r *record) show(i int32) {
 	r.prepare(x.why)
 	r.reason(f, x.why, behind)
 	r.so(0, []fact{f.not()})
-}
-
-// reason writes one reason.
-func (r *record) reason(f fact, w why, behind []fact) {
-	switch w.kind {
-	case whyClause:
-		r.line("by %d", r.m.store.facts[w.id-1].v)
-	case whyArc, whyOff:
-		l := r.m.arcs.all[w.id].label
-		if l.kind == forForced {
-			r.forced(pair{l.a, l.b}, f, behind)
-			return
-		}
-		r.lemma(r.called(l), behind, f)
-	case whyLeaf:
-		r.lemma(fmt.Sprintf("%s %d %d %d", [2]string{"person", "use"}[w.id], w.who, w.at, w.at+1), behind, f)
-	case whyRule:
-		text := r.titles[w.id]
-		if x, ok := r.m.engine.rules[w.id].(witness); ok {
-			from, to := x.witness(f, w, behind)
-			text = fmt.Sprintf("%s %d %d", text, from, to)
-		}
-		r.lemma(text, behind, f)
-	}
-}
-
-// called gives the name of the lemmas of an arc.
-func (r *record) called(l label) string {
-	switch l.kind {
-	case forLink:
-		return fmt.Sprintf("link %d", l.a)
-	case forHours:
-		return fmt.Sprintf("hours %d", l.a)
-	case forEnd:
-		return fmt.Sprintf("end %d", l.a)
-	case forApart:
-		return "apart " + r.names[l.a/2]
-	case forRule:
-		return fmt.Sprintf("rule %d %d", l.a, l.b)
-	case forModes:
-		return fmt.Sprintf("modes %d", l.a)
-	case forStay:
-		return "stay " + r.names[l.a/2]
-	}
-	return "nothing"
-}
-
-// lemma writes that the facts and not f cannot all hold, and so that the facts given cannot.
-func (r *record) lemma(name string, behind []fact, f fact) {
-	r.w.WriteString(name)
-	r.w.WriteString(" :")
-	for _, g := range behind {
-		r.fact(g)
-	}
-	if f.s >= 0 {
-		r.fact(f.not())
-	}
-	r.w.WriteByte('\n')
-}
-
-func (r *record) so(id int32, fs []fact) {
-	r.w.WriteString("so")
-	if id > 0 {
-		r.w.WriteByte(' ')
-		r.w.WriteString(strconv.Itoa(int(id)))
-	}
-	r.w.WriteString(" :")
-	for _, f := range fs {
-		r.fact(f)
-	}
-	r.w.WriteByte('\n')
-}
-
-func (r *record) fact(f fact) {
-	if f.v <= 1-far {
-		return // it holds anyway
-	}
-	r.w.WriteByte(' ')
-	r.w.WriteString(r.names[f.s/2])
-	if f.s&1 == 0 {
-		r.w.WriteString(">=")
-		r.w.WriteString(strconv.Itoa(int(f.v)))
-		return
-	}
-	r.w.WriteString("<=")
-	r.w.WriteString(strconv.Itoa(-int(f.v)))
 }

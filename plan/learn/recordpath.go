@@ -89,7 +89,7 @@ func (r *record) prepare(w why) {
 	if w.kind != whyArc && w.kind != whyOff {
 		return
 	}
-	if l := r.m.arcs.all[w.id].label; l.kind == forForced {
+	if l := r.m.arcs.label[w.id]; l.kind == forForced {
 		for _, h := range r.way(pair{l.a, l.b}) {
 			r.first(h)
 		}
