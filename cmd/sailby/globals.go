@@ -22,7 +22,7 @@ import (
 )
 
 // defaultLimit is the longest that a plan is searched for where --limit does not say.
-const defaultLimit = 20 * time.Second
+const defaultLimit = time.Minute
 
 // globals are the flags that every command takes.
 type globals struct {
@@ -179,7 +179,7 @@ func (g *globals) knownTrip(job *tasks.Job) error {
 
 // longTicks are the starts tried in each default limit of a longer one, where the search has
 // rested without a verdict: more than it tries by itself for any job.
-const longTicks = 5e6
+const longTicks = 15e6
 
 // options are those of the search; only leaves out every maybe and the high end.
 func (g *globals) options(only bool, show func(string)) settle.Options {

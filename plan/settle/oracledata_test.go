@@ -44,14 +44,12 @@ func (x *exported) steps(d *data) {
 		}
 		hands, long = append(hands, h), append(long, l)
 		site = append(site, map[bool]int{true: 1}[s.Site])
-		from, by := 0, x.slots
+		from, by := 0, x.slots+24*60/slot*4 // what cures on past the window
 		if s.NotBefore > x.w.Window.Opens {
 			from = x.whole(int(s.NotBefore - x.w.Window.Opens))
 		}
 		if s.Deadline < hours.Far {
 			by = x.whole(int(s.Deadline - x.w.Window.Opens))
-		} else {
-			by = x.slots + 24*60/slot*4 // what cures on past the window
 		}
 		soonest, latest = append(soonest, from), append(latest, by)
 		first, modes = append(first, len(cal)+1), append(modes, len(choices))

@@ -185,9 +185,7 @@ func (d *dialer) shorter(l plan.Limit) {
 	}
 	full := l.Step.HandsOn
 	var steps []int
-	for _, n := range minuteSteps(full / 2) {
-		steps = append(steps, n)
-	}
+	steps = append(steps, minuteSteps(full/2)...)
 	if len(steps) == 0 && full >= 10 {
 		steps = []int{5}
 	}

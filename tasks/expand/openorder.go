@@ -50,7 +50,7 @@ func (x *expander) stageOf(s *Step) {
 		return
 	}
 	for _, f := range t.forbidden() {
-		if must != nil && len(must) == 1 && len(f.before) == 1 && len(f.after) == 0 && must[open[f.before[0]].Task] {
+		if len(must) == 1 && len(f.before) == 1 && len(f.after) == 0 && must[open[f.before[0]].Task] {
 			x.refuse(s, f.judged, fmt.Sprintf(" with %s on, without which it is too floppy", open[f.before[0]].Task.Label()))
 			return
 		}
