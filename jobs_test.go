@@ -87,7 +87,7 @@ func said(rep *plan.Report, key string) string {
 		}
 		return stamp(a.Finish, zone)
 	case "getting off":
-		for _, g := range agenda.Getaways(a.Work) {
+		for _, g := range agenda.Getaways(a) {
 			if g.Neaped {
 				if s := agenda.Sentence(a, false); !strings.HasPrefix(s, "Fits, but neaped:") || agenda.Word(a) != "fits, but neaped" {
 					return "the first line says " + s

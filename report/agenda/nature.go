@@ -253,9 +253,11 @@ type Getaway struct {
 	Words  string
 }
 
-// Getaways applies the rule for getting off again at every place whose tide names a craft (R26).
-func Getaways(w *expand.Work) []Getaway {
+// Getaways applies the rule for getting off again at every place whose tide names a craft (R26): by the plan, the
+// water must come after the work there.
+func Getaways(answer *plan.Answer) []Getaway {
 	var out []Getaway
+	w := answer.Work
 	for _, p := range w.Job.Places {
 		c := p.Sea.Craft
 		if c == nil || p.Tide == nil {
@@ -269,7 +271,7 @@ func Getaways(w *expand.Work) []Getaway {
 				level = f.Value
 			}
 		}
-		a, err := p.Tide.Neaped(level, int64(in), int64(by))
+		a, err := p.Tide.Neaped(level, int64(in), int64(workDone(answer, p)), int64(by))
 		switch {
 		case err != nil:
 			g.Neaped, g.Words = true, "cannot be said: "+err.Error()
@@ -283,6 +285,25 @@ func Getaways(w *expand.Work) []Getaway {
 		out = append(out, g)
 	}
 	return out
+}
+
+// workDone gives when the work at a place is done in the plan: hands-on work, the standing time of tasks and fire
+// watches; 0 without a plan, or where nothing is done there. Films may still cure.
+func workDone(a *plan.Answer, p *tasks.Place) (done hours.Minute) {
+	if a.Plan == nil {
+		return 0
+	}
+	for i, s := range a.Work.Steps {
+		if s.Place != p || s.Absent || s.Class == expand.Cure {
+			continue
+		}
+		ps := a.Plan.Steps[i]
+		done = max(done, ps.Finish)
+		for _, watch := range ps.Watches {
+			done = max(done, watch.To)
+		}
+	}
+	return done
 }
 
 // utc is a moment as tide tables write it.
@@ -301,7 +322,7 @@ func local(text string, zone *time.Location) string {
 
 // Neaped says whether some craft of an answer's job is not shown to get off again in time.
 func Neaped(a *plan.Answer) bool {
-	return a != nil && a.Work != nil && slices.ContainsFunc(Getaways(a.Work), func(g Getaway) bool { return g.Neaped })
+	return a != nil && a.Work != nil && slices.ContainsFunc(Getaways(a), func(g Getaway) bool { return g.Neaped })
 }
 
 // DayWords gives what nature does on a day at a place, a sentence each: sun, tide, weather, and the hours in which

@@ -5,6 +5,7 @@ import (
 	"testing"
 	"time"
 
+	"sailby/plan"
 	"sailby/report/agenda"
 	"sailby/tasks/expand"
 	"sailby/tasks/hours"
@@ -89,21 +90,32 @@ func TestHoursThatNatureLeaves(t *testing.T) {
 
 func TestGettingOffAgain(t *testing.T) {
 	w := work(t, "neaped.yaml")
-	got := agenda.Getaways(w)
+	a := &plan.Answer{Work: w}
+	got := agenda.Getaways(a)
 	if len(got) != 1 || !got[0].Neaped || !strings.Contains(got[0].Words, "neaped: 4.15 m needed to get off, the highest water before Tue 8 Jun 20:00 is 4.00 m (0.15 m short)") {
 		t.Errorf("%+v", got)
 	}
 	craft := w.Window.Place.Sea.Craft
 	craft.Needs.Value = 3.9
-	if got := agenda.Getaways(w); got[0].Neaped || !strings.Contains(got[0].Words, "gets off at ") {
+	if got := agenda.Getaways(a); got[0].Neaped || !strings.Contains(got[0].Words, "gets off at ") {
 		t.Errorf("with 3.90 m: %+v", got)
 	}
+	a.Plan = &plan.Plan{Steps: make([]plan.Step, len(w.Steps))}
+	a.Plan.Steps[0].Finish = june(t, 8, 9, 18).To // after the only tide that would do, at 05:00
+	if got := agenda.Getaways(a); !got[0].Neaped || !strings.Contains(got[0].Words, "after the work is done at ") {
+		t.Errorf("the work outlasts the tide: %+v", got)
+	}
+	a.Plan.Steps[0].Watches = []plan.Watch{{Span: june(t, 8, 18, 21)}}
+	if got := agenda.Getaways(a); !got[0].Neaped || !strings.Contains(got[0].Words, "the work is done at Tue 8 Jun 21:00, it must be off by Tue 8 Jun 20:00") {
+		t.Errorf("the fire watch counts: %+v", got)
+	}
+	a.Plan = nil
 	craft.Needs.Value = 4.3 // it cannot have come in with 4.20 m
-	if got := agenda.Getaways(w); !got[0].Neaped || !strings.Contains(got[0].Words, "cannot be said") {
+	if got := agenda.Getaways(a); !got[0].Neaped || !strings.Contains(got[0].Words, "cannot be said") {
 		t.Errorf("with 4.30 m: %+v", got)
 	}
 	w.Window.Place.Sea.Craft = nil
-	if agenda.Getaways(w) != nil {
+	if agenda.Getaways(a) != nil {
 		t.Error("no craft, nothing said")
 	}
 }

@@ -53,7 +53,7 @@ func (k *pack) verdicts() {
 	}
 	side(k.report.Maybes, "With every maybe: the same, there are none.")
 	side(k.report.High, "At the high end of the hours: the same, no hours are given as a range.")
-	for _, g := range agenda.Getaways(k.work) {
+	for _, g := range agenda.Getaways(k.a) {
 		p.para(g.Words+".", body, g.Neaped)
 	}
 	if k.a != k.report.Likely {

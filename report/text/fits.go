@@ -24,7 +24,7 @@ func Fits(w io.Writer, r *plan.Report, o Options) error {
 	if a.CutShort && a.Verdict == plan.Unsettled {
 		p.para("", "The search was cut short; a longer limit may settle it.")
 	}
-	for _, g := range agenda.Getaways(a.Work) {
+	for _, g := range agenda.Getaways(a) {
 		p.para("", g.Words+".")
 	}
 	p.gap()

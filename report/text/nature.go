@@ -43,7 +43,7 @@ func daysOfNature(a *plan.Answer) []dayForm {
 
 func getaways(a *plan.Answer) []getawayForm {
 	var out []getawayForm
-	for _, g := range agenda.Getaways(a.Work) {
+	for _, g := range agenda.Getaways(a) {
 		out = append(out, getawayForm{g.Place.Name, g.Neaped, g.Words})
 	}
 	return out

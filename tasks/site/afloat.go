@@ -4,6 +4,7 @@ import (
 	"cmp"
 	"fmt"
 	"slices"
+	"strings"
 
 	"sailby/tasks/origin"
 )
@@ -13,20 +14,20 @@ import (
 type Getaway struct {
 	Level   float64 // water needed, metres above the table's datum
 	Grounds Minute  // when the water first falls below the level; 0 where it never does
-	Off     []Span  // when there is water enough again, each Why names its high water
+	Off     []Span  // when there is water enough again and the work is done, each Why names its high water
 	Neaped  bool    // no later water is enough in time: the work may fit, the boat stays
 	Why     string  // the answer in words, with both heights
 	Next    Water   // where neaped: the first high water after the window that would do; its At is 0 if the table shows none
 }
 
 // Neaped applies the rule for getting off again: what settles when the water falls below level
-// needs a later tide at or above that level before to. From is when it arrives, afloat. The
-// level is what the craft needs there (sill or keel blocks, draught, margin; see Allowance), in
+// needs a tide at or above that level once the work on it is done, at ready, and before to. From is when it arrives,
+// afloat; ready at or before from asks for no more than a tide after it has settled. The level is what the craft needs there (sill or keel blocks, draught, margin; see Allowance), in
 // metres above the table's datum. After springs each tide is lower than the last, so that arriving on the
 // highest of them is the mistake.
 //
 // Errors: as for Reach, and water below the level at from, as it cannot have come in then.
-func (t *TideTable) Neaped(level float64, from, to Minute) (Getaway, error) {
+func (t *TideTable) Neaped(level float64, from, ready, to Minute) (Getaway, error) {
 	open, err := t.Reach(false, level, from, to)
 	if err != nil {
 		return Getaway{}, err
@@ -49,30 +50,41 @@ func (t *TideTable) Neaped(level float64, from, to Minute) (Getaway, error) {
 		g.Grounds = open[0].To
 	}
 	for _, s := range open {
-		if s.From > g.Grounds {
+		if s.From > g.Grounds && s.To > ready {
+			s.From = max(s.From, ready)
 			_, hi := t.extremes(s.From, s.To)
 			s.Why = fmt.Sprintf("water up to %.2f m, %.2f m needed", hi, level)
 			g.Off = append(g.Off, s)
 		}
 	}
-	for _, w := range t.Between(g.Grounds+1, to) { // one that just reaches the level is enough, and has no length
+	for _, w := range t.Between(max(g.Grounds+1, ready), to) { // one that just reaches the level is enough, and has no length
 		if w.High && w.Metres == level {
 			g.Off = append(g.Off, Span{w.At, w.At + 1, fmt.Sprintf("water up to %.2f m, just the %.2f m needed",
 				w.Metres, level)})
 		}
 	}
 	slices.SortFunc(g.Off, func(a, b Span) int { return cmp.Compare(a.From, b.From) })
+	after := ""
+	if ready > g.Grounds {
+		after = " after the work is done at " + moment(ready)
+	}
 	if len(g.Off) > 0 {
-		last := g.Off[len(g.Off)-1]
-		g.Why = fmt.Sprintf("gets off at %s at the latest: %s", moment(last.To), last.Why)
+		first, last := g.Off[0], g.Off[len(g.Off)-1]
+		g.Why = fmt.Sprintf("gets off at %s at the earliest%s, at %s at the latest: %s", moment(first.From), after, moment(last.To), last.Why)
 		return g, nil
 	}
 	g.Neaped = true
-	if best, rises := t.rise(g.Grounds, to); rises {
-		g.Why = fmt.Sprintf("neaped: %.2f m needed to get off, the highest water before %s is %.2f m (%.2f m short)",
-			level, moment(to), best, level-best)
+	best, rises := 0.0, false
+	if ready > to {
+		g.Why = fmt.Sprintf("neaped: the work is done at %s, it must be off by %s", moment(ready), moment(to))
+	} else if best, rises = t.rise(max(g.Grounds, ready), to, ready > g.Grounds); rises {
+		g.Why = fmt.Sprintf("neaped: %.2f m needed to get off, the highest water%s and before %s is %.2f m (%.2f m short)",
+			level, after, moment(to), best, level-best)
 	} else {
 		g.Why = fmt.Sprintf("neaped: %.2f m needed to get off, the water only falls before %s", level, moment(to))
+	}
+	if after == "" {
+		g.Why = strings.Replace(g.Why, "water and before", "water before", 1)
 	}
 	for _, w := range t.Waters[t.after(to):] {
 		if w.High && w.Metres >= level {
@@ -84,8 +96,13 @@ func (t *TideTable) Neaped(level float64, from, to Minute) (Getaway, error) {
 	return g, nil
 }
 
-// rise gives the greatest height between the next low water after from and to, if there is one.
-func (t *TideTable) rise(from, to Minute) (highest float64, ok bool) {
+// rise gives the greatest height between the next low water after from and to, if there is one; settled says that
+// from is past a low water itself.
+func (t *TideTable) rise(from, to Minute, settled bool) (highest float64, ok bool) {
+	if settled && from < to {
+		_, hi := t.extremes(from, to)
+		return hi, true
+	}
 	for _, w := range t.Between(from, to) {
 		if !w.High {
 			_, hi := t.extremes(w.At, to)
