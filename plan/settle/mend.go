@@ -3,13 +3,15 @@ package settle
 import (
 	"context"
 	"math/bits"
+	"slices"
 
 	"sailby/plan"
 	"sailby/tasks"
 	"sailby/tasks/expand"
 )
 
-// Up to everyMended longest waits are tried in every choice, fewest first; of more, each by itself and all of them.
+// Up to everyMended longest waits are tried in every choice, fewest first; of more, each by itself, all of them and all
+// but one, and what then fits is left with as few as still fit.
 const (
 	everyMended = 3
 	mostMended  = 6
@@ -53,7 +55,7 @@ func mended(ctx context.Context, job *tasks.Job, first *plan.Answer, o Options, 
 			return nil, err
 		}
 		if a.Verdict == plan.Fits {
-			return a, nil
+			return fewer(ctx, job, a, b, o, explain)
 		}
 	}
 	if first.Verdict == plan.CannotFit && !refuted {
@@ -64,7 +66,34 @@ func mended(ctx context.Context, job *tasks.Job, first *plan.Answer, o Options, 
 	return first, nil
 }
 
-// choices lists what may be mended together, fewest first.
+// fewer leaves out of what is mended in an answer that fits, one by one, what it fits without too. Up to everyMended
+// every smaller choice has been tried before.
+func fewer(ctx context.Context, job *tasks.Job, a *plan.Answer, b expand.Basis, o Options, explain bool) (*plan.Answer, error) {
+	if len(a.Work.Rescues) <= everyMended {
+		return a, nil
+	}
+	for _, key := range slices.Clone(b.Rescue) {
+		without := slices.DeleteFunc(slices.Clone(b.Rescue), func(k string) bool { return k == key })
+		if len(without) == 0 || ctx.Err() != nil || o.left() {
+			break
+		}
+		try := b
+		try.Rescue = without
+		if cannot(ctx, job, try, o) {
+			continue
+		}
+		next, err := alone(ctx, job, try, o, explain)
+		if err != nil {
+			return nil, err
+		}
+		if next.Verdict == plan.Fits {
+			a, b = next, try
+		}
+	}
+	return a, nil
+}
+
+// choices lists what may be mended together, fewest first where every choice is tried.
 func choices(list []expand.Rescue) (out [][]string) {
 	n := len(list)
 	if n > everyMended {
@@ -75,7 +104,11 @@ func choices(list []expand.Rescue) (out [][]string) {
 				out = append(out, []string{m.Key})
 			}
 		}
-		return append(out, all)
+		out = append(out, all)
+		for i := 0; i < min(n, mostMended); i++ {
+			out = append(out, slices.Delete(slices.Clone(all), i, i+1))
+		}
+		return out
 	}
 	for size := 1; size <= n; size++ {
 		for set := 1; set < 1<<n; set++ {

@@ -69,10 +69,10 @@ func TestMissedRecoatIsMended(t *testing.T) {
 	}
 }
 
-// Every choice of up to three, fewest first; of more, each and all of them.
+// Every choice of up to three, fewest first; of more, each, all of them, and all but one.
 func TestChoices(t *testing.T) {
-	for n, want := range map[int]string{1: "[[0]]", 2: "[[0] [1] [0 1]]", 3: "[[0] [1] [2] [0 1] [0 2] [1 2] [0 1 2]]", 4: "[[0] [1] [2] [3] [0 1 2 3]]",
-		7: "[[0] [1] [2] [3] [4] [5] [0 1 2 3 4 5 6]]"} {
+	for n, want := range map[int]string{1: "[[0]]", 2: "[[0] [1] [0 1]]", 3: "[[0] [1] [2] [0 1] [0 2] [1 2] [0 1 2]]", 4: "[[0] [1] [2] [3] [0 1 2 3] [1 2 3] [0 2 3] [0 1 3] [0 1 2]]",
+		7: "[[0] [1] [2] [3] [4] [5] [0 1 2 3 4 5 6] [1 2 3 4 5 6] [0 2 3 4 5 6] [0 1 3 4 5 6] [0 1 2 4 5 6] [0 1 2 3 5 6] [0 1 2 3 4 6]]"} {
 		list := make([]expand.Rescue, n)
 		for i := range list {
 			list[i].Key = fmt.Sprint(i)
@@ -80,5 +80,19 @@ func TestChoices(t *testing.T) {
 		if got := fmt.Sprint(choices(list)); got != want {
 			t.Errorf("%d: %s, want %s", n, got, want)
 		}
+	}
+}
+
+// Four longest waits, of which two run over the closed Sunday: four tasks of two coats each, two of them with a wait
+// that is long enough. Mended are the two that must be, no more.
+func TestOfFourTheTwoThatMustBeAreMended(t *testing.T) {
+	const plain = "  paint:    {kind: coat, at: slip, area: 8 m2, hours: 2 h, coats: [quick, quick]}"
+	const slow = "  slow: {kind: two-pack epoxy, next coat: {slow: {10 C: {min: 8 h, max: 90 h}}}, hard dry: {10 C: 8 h}, touch dry: {10 C: 2 h}, solvent gone: {10 C: 8 h}}\n\ntasks:"
+	rep := missed(t, plain, `  a: {kind: coat, at: slip, area: 2 m2, hours: 1 h, coats: [quick, quick], who: Bo}
+  b: {kind: coat, at: slip, area: 2 m2, hours: 1 h, coats: [slow, slow], who: Cy}
+  c: {kind: coat, at: slip, area: 2 m2, hours: 1 h, coats: [quick, quick], who: Di}
+  d: {kind: coat, at: slip, area: 2 m2, hours: 1 h, coats: [slow, slow], who: Ed}`, "tasks:", slow, "people:", "people:\n  Cy: {tickets: [painter]}\n  Di: {tickets: [painter]}\n  Ed: {tickets: [painter]}")
+	if got := mendedKeys(rep.Likely); rep.Likely.Verdict != plan.Fits || got != "a / coat 2, c / coat 2" {
+		t.Errorf("%s with %q mended", rep.Likely.Verdict, got)
 	}
 }
