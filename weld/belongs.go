@@ -30,6 +30,7 @@ var belongings = []belonging{
 		func(t JointType) bool { return t.HasLegs() || t == Square }},
 	{"gap", "leave it out", func(j Joint) bool { return j.Gap > 0 }, func(t JointType) bool { return t != Plug && t != Slot }},
 	{"bead", "a long hole is a slot", func(j Joint) bool { return j.Bead > 0 }, func(t JointType) bool { return t != Plug }},
+	{"onto", "leave it out", func(j Joint) bool { return j.Onto > 0 }, func(t JointType) bool { return t != Plug && t != Slot }},
 	{"pitch", "give count", func(j Joint) bool { return j.Pitch > 0 }, func(t JointType) bool { return t != Plug && t != Slot }},
 }
 

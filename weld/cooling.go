@@ -16,6 +16,7 @@ const (
 	givenOff    = 50.0
 	interpassAt = 250.0  // C, where the procedure does not say (house judgement)
 	handWarm    = 50.0   // C at which a weld is looked at and handled
+	plainTo     = 12.0   // mm
 	shortCool   = 15.0   // min of cooling that pass while leads are cleared: counted as none
 	burner      = 6.0    // kW that a preheating torch leaves in the plate (house judgement)
 	heatedAtOne = 1000.0 // mm heated before the first arc, again after every stop
@@ -35,6 +36,9 @@ func (e *seamWork) heating(c Circumstances) error {
 	e.power = p.power(e.volts, e.current)
 	e.generator = p.generator(e.data, e.power)
 	e.drops()
+	if most := p.Set.or().MaxCurrent; most > 0 && e.current.Value > most {
+		e.warnf("the welding set gives %.0f A at most, the weld is reckoned with %.0f A: a smaller electrode or wire, or a larger set", most, e.current.Value)
+	}
 	k := e.heatEfficiency()
 	e.travel = p.travelOf(e.rate, e.runs.large, c.Steel.density())
 	e.heat = heatInput(k, e.volts, e.current, e.travel)
@@ -56,9 +60,19 @@ func (e *seamWork) heating(c Circumstances) error {
 		if e.heatTo.Value > 0 {
 			plate = origin.Worked("plate temperature", from, "C", "max(preheat, ambient)", renamed(e.heatTo, "preheat"), c.ambient())
 		}
-		e.cooling.Why = e.cooling.why(e.heat, plate, e.joint.drawn("thickness", e.joint.Thickness, "mm"), f2, f3)
+		if e.cooling.Why = (origin.Figure{}); !e.plainThin(c) {
+			e.cooling.Why = e.cooling.why(e.heat, plate, e.joint.drawn("thickness", e.joint.Thickness, "mm"), f2, f3)
+		}
 	}
 	return nil
+}
+
+// plainThin says that nobody asks how fast it cools: plain steel to 12 mm (house judgement), not
+// preheated, and nothing given that heat is reckoned from.
+func (e *seamWork) plainThin(c Circumstances) bool {
+	p, asked := e.proc, c.Steel.CE().Value+c.Steel.CET().Value > 0 || c.PreheatStandard != ""
+	asked = asked || p.Volts+p.HeatEfficiency+p.MinHeatInput+p.MaxHeatInput+p.Interpass > 0 || e.heatTo.Value > 0
+	return !asked && c.Steel.yield() <= 355 && math.Max(e.joint.Thickness, e.joint.Thickness2) <= plainTo
 }
 
 // preheating gives the hands-on minutes of heating the seam beyond its first metre, and sets
@@ -82,6 +96,7 @@ func (e *seamWork) preheating(c Circumstances) (along origin.Figure, ok bool) {
 	e.setUp = origin.Worked("set-up", ready.Value+perMetre.Value*one, "min", "set-up of the leads + heating a metre x metres heated first",
 		renamed(ready, "set-up of the leads"), perMetre, first)
 	e.soak = origin.Worked("soak", 2*math.Max(1, t/25), "min", "2 x max(1, thickness / 25)", e.thicker())
+	e.soak.Origin = origin.Origin{Kind: origin.Judgement, Source: "2 min for every 25 mm of thickness, at least 2"}
 	rest := e.joint.Length/1000 - one
 	if rest <= 0 {
 		return along, false

@@ -105,13 +105,13 @@ func rateFactor(pos Position) float64 {
 
 // rate gives the deposition in the position, kg/h with the arc burning: as given, else from the
 // wire feed (mass of wire through the torch), else from current and size. Position slows only
-// rates that are the flat position's: a default current, or a deposition given for no position.
+// rates that are the flat position's: a default current, or a deposition given for PA or no position.
 func (p Procedure) rate(d process, pos Position, density float64) (origin.Figure, []string) {
 	const name = "deposition rate"
 	slow := origin.House("position factor on rate", rateFactor(pos), "", "what "+pos.String()+" leaves of the flat rate")
 	size := p.size(d)
 	switch {
-	case p.Deposition > 0 && (p.Position != 0 || slow.Value == 1):
+	case p.Deposition > 0 && (p.Position > PA || slow.Value == 1):
 		f := p.given("deposition", p.Deposition, "kg/h")
 		f.Name = name
 		return f, nil

@@ -11,7 +11,8 @@
 //
 //  1. Section: the drawn area, and the area laid. Fillets are laid 1 mm over the drawn leg (1.36
 //     times the metal at 6 mm), butts get a cap of 1.5 mm, unless Circumstances.NoOverweld.
-//  2. Metal: area x length x density. A position changes the metal of a butt through its
+//  2. Metal: area x length x density; once round a tube, or round the saddle of a branch, where no
+//     length is given. A position changes the metal of a butt through its
 //     preparation angle and through what is really deposited there.
 //  3. Rate: kilograms an hour with the arc burning; given, from the wire feed, or from current
 //     and size. A position slows it only where the rate is the flat position's.

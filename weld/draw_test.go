@@ -57,6 +57,9 @@ func drawJoint(t *rapid.T) Joint {
 func drawSeam(t *rapid.T) Seam {
 	s := Seam{Joint: drawJoint(t), Position: Position(rapid.IntRange(0, int(lastPosition)).Draw(t, "position"))}
 	p := Procedure{Process: processes[rapid.IntRange(0, len(processes)-1).Draw(t, "process")].number}
+	if p.Process == 121 && s.Position > PC {
+		s.Position = PA
+	}
 	switch rapid.IntRange(0, 4).Draw(t, "how") {
 	case 0:
 		p.Current = drawNumber(t, "current", 90, 300)

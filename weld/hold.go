@@ -64,7 +64,7 @@ func (e *seamWork) holding(c Circumstances) {
 	if f.Value == 0 && f.Name == "" {
 		return
 	}
-	e.hold = origin.Worked("time before NDT in minutes", f.Value*60, "min", "time before NDT x 60", f)
+	e.hold = origin.Worked("wait before NDT", f.Value*60, "min", "time before NDT x 60", f)
 }
 
 // Weather is what a process can stand at the weld, after AWS D1.1.

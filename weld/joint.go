@@ -40,6 +40,7 @@ type Joint struct {
 	Pitch float64 // intermittent: from the start of one weld to the start of the next
 
 	Diameter float64 // outside diameter of a tube, hole of a plug, width of a slot
+	Onto     float64 // outside diameter of a tube that the tube of Diameter stands on, square: Length is that of the saddle
 	Length   float64 // in all; default once round the tube times Count
 	Count    int     // how many seams (or plugs) Length is made of; default 1
 
@@ -89,6 +90,7 @@ func (j Joint) check() error {
 		optional("bead", j.Bead, 5, maxLength, "mm"),
 		optional("pitch", j.Pitch, 5, maxLength, "mm"),
 		optional("diameter", j.Diameter, 3, 1e5, "mm"),
+		optional("onto", j.Onto, 3, 1e5, "mm"),
 		optional("length", j.Length, 0.1, maxLength, "mm"),
 		within("count", float64(j.Count), 0, 1e5, ""))
 	if err != nil {
@@ -110,6 +112,12 @@ func (j Joint) checkNeeds() error {
 		return fault("angle", "a bevel is prepared at 35 to 60 deg", "a bevel of %.4g deg cannot be filled", math.Max(j.Angle, j.Angle2))
 	case (j.Type == Plug || j.Type == Slot) && j.Diameter == 0:
 		return fault("diameter", "give the hole's diameter, or the slot's width", "the %s has no diameter", j.Type)
+	case j.Onto > 0 && j.Diameter == 0:
+		return fault("diameter", "give the outside diameter of the branch", "a branch onto a tube of %.4g mm has no diameter", j.Onto)
+	case j.Onto > 0 && j.Onto < j.Diameter:
+		return fault("onto", "give the outside diameter of the larger tube, which the branch stands on", "a branch of %.4g mm is larger than the tube of %.4g mm", j.Diameter, j.Onto)
+	case j.Onto > 0 && j.Length > 0:
+		return fault("length", "leave one of the two out", "the length of %.4g mm and the saddle on a tube of %.4g mm are both given", j.Length, j.Onto)
 	case j.Type == Slot && j.Bead < j.Diameter:
 		return fault("bead", "give the slot's length, not less than its width", "slot %.4g mm long is shorter than its width %.4g mm", j.Bead, j.Diameter)
 	case j.Pitch > 0 && j.Bead == 0:

@@ -29,7 +29,10 @@ func (e *seamWork) deposit(c Circumstances) {
 
 	length := j.drawn("length", j.Length, "mm")
 	if length.Origin.Kind == origin.Formula {
-		length.From = []origin.Figure{origin.Written("diameter", j.Diameter, "mm", j.Origin), origin.Written("count", float64(j.Count), "", j.Origin)}
+		if j.Onto > 0 {
+			length.From = append(length.From, origin.Written("onto a tube of", j.Onto, "mm", j.Origin))
+		}
+		length.From = append(length.From, origin.Written("diameter", j.Diameter, "mm", j.Origin), origin.Written("count", float64(j.Count), "", j.Origin))
 	}
 	if j.Pitch > 0 {
 		length = origin.Worked("length welded", e.length, "mm", "length x bead / pitch", length,

@@ -36,9 +36,23 @@ func (e *seamWork) preheat(c Circumstances) {
 	if p.Preheat != 0 && rule.Value > e.heatTo.Value+0.5 && rule.Value > c.Ambient {
 		e.warnf("the procedure preheats to %.0f C, %s asks for %.0f C: the procedure governs, ask who wrote it", e.heatTo.Value, std, rule.Value)
 	}
+	if std == "" && p.Preheat == 0 && (thick > unasked || c.Steel.yield() > 420) {
+		e.warnf("no preheat is reckoned for %s of %.4g mm: the procedure gives none, and no standard is named to work it out by (preheat by)", c.Steel.word(), thick)
+	}
 	if c.Ambient < 0 && e.heatTo.Value < 20 {
 		e.heatTo = origin.Recalled("preheat", 20, "C", "AWS D1.1: metal below 0 C is warmed to 20 C")
 	}
+}
+
+// unasked is the thickness in mm above which preheat is worth a word where nothing asks for it: the
+// first step of AWS D1.1 Table 3.3.
+const unasked = 20.0
+
+func (s Steel) word() string {
+	if s.Grade != "" {
+		return s.Grade
+	}
+	return "steel"
 }
 
 // What AWS D1.1 Table 3.3 holds for here: from 3 mm, and to the steels of its third column.

@@ -73,10 +73,10 @@ func Prepare(activity string, amount, thickness, rate float64) (Labour, error) {
 		slow = thickness / 10
 	}
 	n := origin.Written("amount", amount, "", origin.Origin{})
-	s := origin.House("thicker", slow, "", "how much slower at this thickness")
-	m, how := amount/r.Value*60*slow, "amount / rate x 60 x thicker"
+	s := origin.House("thickness factor", slow, "", "how much slower at this thickness")
+	m, how := amount/r.Value*60*slow, "amount / rate x 60 x thickness factor"
 	if a.Unit == "min each" {
-		m, how = amount*r.Value*slow, "amount x rate x thicker"
+		m, how = amount*r.Value*slow, "amount x rate x thickness factor"
 	}
 	f := origin.Worked("hands-on time", m, "min", how, n, r, s)
 	return Labour{HandsOn: quantity.HandsOn(m), Hours: f, Consumables: a.uses(amount, f)}, nil

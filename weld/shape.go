@@ -99,7 +99,9 @@ func (j *shape) measured() error {
 	case Slot:
 		j.Length = j.Bead * float64(j.Count)
 	default:
-		if j.Length == 0 {
+		if j.Onto > 0 {
+			j.onRun()
+		} else if j.Length == 0 {
 			j.Length = math.Pi * j.Diameter * float64(j.Count)
 			j.usual["length"] = origin.Origin{Kind: origin.Formula, Source: "pi x diameter x count"}
 		}

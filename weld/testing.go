@@ -127,7 +127,7 @@ const (
 // Repair gives the repair to allow for after an estimate. The share of the length is published
 // for structures (TWI survey 2011: other structures 1.0 %, mild steel 1.5 %); on site 4 %, in
 // bad access 10 % (house judgement, practice 3 to 5 and 10). Submerged arc and TIG need half.
-// The chance is that of a Poisson count of repairs of usual length with that share.
+// The chance is that of a count (Poisson) of repairs of usual length with that share.
 func (e Estimate) Repair(c Circumstances, badAccess bool) Repair {
 	var length, share, per float64
 	for _, s := range e.Seams {
@@ -164,7 +164,7 @@ func (e Estimate) Repair(c Circumstances, badAccess bool) Repair {
 	r.HandsOn = quantity.HandsOn(m)
 	r.Hours = origin.Worked("hands-on time", m, "min", "repair length x welding a millimetre x effort",
 		origin.Worked("repair length", r.Length, "mm", "min(length, repair share x process factor x length / chance)", rate, easy,
-			origin.Written("length", length, "mm", origin.Origin{Source: "all sides of the seams"}), origin.House("chance", r.Chance, "", "Poisson count of repairs of 150 mm")),
+			origin.Written("length", length, "mm", origin.Origin{Source: "all sides of the seams"}), origin.House("chance", r.Chance, "", "at least one repair of 150 mm, by the repair share")),
 		origin.Worked("welding a millimetre", minutes, "min", "welding / length", welding, origin.Written("length", length, "mm", origin.Origin{Source: "all sides of the seams"})),
 		origin.House("effort", repairEffort, "", "3 to 5 times the first welding: locate, gouge, grind, test, weld again"))
 	return r

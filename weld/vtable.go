@@ -1,6 +1,7 @@
 package weld
 
 import (
+	"fmt"
 	"math"
 	"sort"
 
@@ -63,7 +64,11 @@ func (j shape) depositFactor(pos Position) origin.Figure {
 	same := math.Abs(j.Angle-angle) < 0.01 || angle == 60 && pos != PC && math.Abs(j.Angle-50) < 0.01
 	switch {
 	case j.Type == SingleV && same && j.RootGap == gap && j.RootFace == 0 && j.Gap == 0 && j.Cap == 0 && j.PartialDepth == j.Thickness && !j.Backing:
-		return origin.Published(name, vFactor(pos, j.Thickness, j.Angle), "", vSource)
+		f := origin.Published(name, vFactor(pos, j.Thickness, j.Angle), "", vSource)
+		if first, last := vTable[0].thick, vTable[len(vTable)-1].thick; j.Thickness < first || j.Thickness > last {
+			f = origin.House(name, f.Value, "", fmt.Sprintf("as at the end of the V table, which holds %.0f to %.0f mm", first, last))
+		}
+		return f
 	case pos != PA && pos != PB:
 		return origin.House(name, 1.05, "", "as the V table has it near, out of the flat position")
 	}

@@ -197,6 +197,9 @@ func workSeam(s Seam, c Circumstances) (*seamWork, error) {
 		e.pos = e.proc.Position
 	}
 	e.pos = UsualPosition(s.Joint.Type, e.pos)
+	if e.proc.Process == 121 && e.pos > PC {
+		return nil, fault("position", "PA, PB or PC, or another process", "submerged arc does not weld in %s: flux and pool run off", e.pos)
+	}
 	if p := UsualPosition(s.Joint.Type, e.proc.Position); e.proc.Position != 0 && p != e.pos {
 		e.warnf("the procedure %sis for %s, the seam is in %s", spaced(e.proc.Name), e.proc.Position, e.pos)
 	}
@@ -206,6 +209,9 @@ func workSeam(s Seam, c Circumstances) (*seamWork, error) {
 	}
 	if e.section, err = e.joint.section(e.pos, !c.NoOverweld); err != nil {
 		return nil, err
+	}
+	if d := c.Steel.Density; d > 0 && d < 4000 && e.data.number != 131 && e.data.number != 141 {
+		e.warnf("%.0f kg/m3 is no steel: a light metal is welded with 131 MIG or 141 TIG, not with %s", d, e.proc.Process)
 	}
 	e.data.size = usualSize(e.data, e.joint.Thickness)
 	e.deposit(c)
@@ -240,11 +246,14 @@ func (e *seamWork) title() string {
 	size := ""
 	switch {
 	case e.joint.Type == Fillet || e.joint.Type == Lap:
-		size = origin.Trim(round(e.joint.Leg, 0.1)) + " mm "
+		size = origin.Trim(round(e.joint.Leg, 0.05)) + " mm "
 	case e.joint.Type == Plug || e.joint.Type == Slot:
 		size = origin.Trim(e.joint.Diameter) + " mm "
 	default:
-		size = origin.Trim(round(e.joint.PartialDepth, 0.1)) + " mm "
+		size = origin.Trim(round(e.joint.Thickness, 0.05)) + " mm "
+		if e.joint.PartialDepth < e.joint.Thickness {
+			return fmt.Sprintf("%s%s %s mm deep %s, %s", size, e.joint.Type, origin.Trim(round(e.joint.PartialDepth, 0.05)), e.pos, e.proc.Process)
+		}
 	}
 	return fmt.Sprintf("%s%s %s, %s", size, e.joint.Type, e.pos, e.proc.Process)
 }

@@ -107,9 +107,16 @@ func jointTold(e weld.Estimate, in jointInput) (head []string, steps []origin.Fi
 	s := e.Seams[0]
 	metres := s.Length * float64(s.Section.Sides) / 1000
 	head = []string{
-		fmt.Sprintf("%s, %s m welded", s.Title, origin.Trim(metres)),
+		fmt.Sprintf("%s, %s", s.Title, welded(in.seam.Joint, metres)),
 		fmt.Sprintf("%s kg of metal in %d %s; arc time %s; hands-on time %s, and %s of set-up at every start",
 			origin.Trim(e.Metal), e.Passes, plural("run", e.Passes), span(float64(e.Arc)), span(float64(e.HandsOn)), span(float64(e.SetUp)+float64(e.Soak))),
+	}
+	air := in.c.Ambient
+	if air == 0 {
+		air = 20
+	}
+	if e.Why.Preheat.Value > air {
+		head = append(head, fmt.Sprintf("Preheat to %s C or more", origin.Trim(math.Ceil(e.Why.Preheat.Value-1e-6))))
 	}
 	var waits []string
 	if e.Cooling > 0 {
@@ -124,7 +131,7 @@ func jointTold(e weld.Estimate, in jointInput) (head []string, steps []origin.Fi
 	head = append(head, fmt.Sprintf("Draws %s kVA; a generator for the set gives %s kVA or more", origin.Trim(roundTo(e.Power, 0.1)), origin.Trim(roundTo(e.Why.Generator.Value, 0.1))))
 	var take []string
 	for _, n := range e.Consumables {
-		w := fmt.Sprintf("%s: %s %s", n.Name, origin.Trim(roundTo(n.Amount+n.Spare, 0.1)), n.Unit)
+		w := fmt.Sprintf("%s: %s %s", n.Name, amount(n.Amount+n.Spare), n.Unit)
 		if n.Pieces > 0 {
 			w += " (" + agenda.Packs(n.Pieces, n.Packed) + ")"
 		}
@@ -161,7 +168,7 @@ func jointTold(e weld.Estimate, in jointInput) (head []string, steps []origin.Fi
 		}
 	}
 	r := e.Repair(in.c, in.seam.Access > 1)
-	steps = append(steps, origin.House("chance of a repair", roundTo(r.Chance*100, 0.1), "%", "Poisson count of repairs of 150 mm with the share of length below"))
+	steps = append(steps, origin.House("chance of a repair", roundTo(r.Chance*100, 0.1), "%", "at least one repair of 150 mm, by the share of the length below"))
 	if r.Hours.Name != "" {
 		f := r.Hours
 		f.Name = "hands-on time of a repair"
@@ -177,6 +184,17 @@ func jointTold(e weld.Estimate, in jointInput) (head []string, steps []origin.Fi
 	}
 	return head, steps, append(e.Warnings, notes...)
 }
+
+// welded says how much is welded: metres of seam, or how many plugs or slots.
+func welded(j weld.Joint, metres float64) string {
+	if n := max(1, j.Count); j.Type == weld.Plug || j.Type == weld.Slot {
+		return fmt.Sprintf("%d %s", n, plural(j.Type.String(), n))
+	}
+	return origin.Trim(metres) + " m welded"
+}
+
+// amount rounds what is taken along to a tenth; a little is not nothing.
+func amount(v float64) string { return origin.Trim(math.Max(roundTo(v, 0.1), 0.1)) }
 
 func plural(word string, n int) string {
 	if n == 1 {

@@ -49,6 +49,7 @@ var jointAmounts = []jointAmount{
 	{name: "bead", dim: quantity.Length, to: func(i *jointInput) *float64 { return &i.seam.Joint.Bead }, says: "intermittent: each weld; slot: its length"},
 	{name: "pitch", dim: quantity.Length, to: func(i *jointInput) *float64 { return &i.seam.Joint.Pitch }, says: "intermittent: start to start"},
 	{name: "diameter", dim: quantity.Length, to: func(i *jointInput) *float64 { return &i.seam.Joint.Diameter }, says: "outside diameter of a tube, a plug's hole, a slot's width"},
+	{name: "onto", dim: quantity.Length, to: func(i *jointInput) *float64 { return &i.seam.Joint.Onto }, says: "branch: outside diameter of the tube that the one of --diameter stands on, square"},
 	{name: "access", dim: quantity.Number, to: func(i *jointInput) *float64 { return &i.seam.Access }, says: "hands-on time times this where access is bad: 1 to 10"},
 
 	{name: "wire", dim: quantity.Length, to: func(i *jointInput) *float64 { return &i.proc.WireDiameter }, says: "wire diameter"},
@@ -87,8 +88,8 @@ var jointAmounts = []jointAmount{
 	{name: "hold", dim: quantity.Time, scale: 1.0 / 60, none: true, to: func(i *jointInput) *float64 { return &i.c.Hold }, says: "time before final testing, or none"},
 	{name: "yield", dim: quantity.Stress, to: func(i *jointInput) *float64 { return &i.c.Steel.Yield }, says: "yield strength of the steel"},
 	{name: "density", dim: quantity.Density, to: func(i *jointInput) *float64 { return &i.c.Steel.Density }, says: "of the weld metal"},
-	{name: "cev", dim: quantity.Number, field: "CE", to: func(i *jointInput) *float64 { return &i.c.Steel.CEV }, says: "carbon equivalent CE(IIW) on the certificate"},
-	{name: "cet", dim: quantity.Number, field: "CET", to: func(i *jointInput) *float64 { return &i.c.Steel.Cet }, says: "carbon equivalent CET on the certificate"},
+	{name: "cev", dim: quantity.Number, field: "CE", to: func(i *jointInput) *float64 { return &i.c.Steel.CEV }, says: "carbon equivalent CE(IIW) on the certificate, percent"},
+	{name: "cet", dim: quantity.Number, field: "CET", to: func(i *jointInput) *float64 { return &i.c.Steel.Cet }, says: "carbon equivalent CET on the certificate, percent"},
 	{name: "fit-up", dim: quantity.Pace, none: true, to: func(i *jointInput) *float64 { return &i.c.Rates.FitUp }, says: "pulling up and tacks, as 12min/m, or none"},
 	{name: "moving", dim: quantity.Pace, none: true, to: func(i *jointInput) *float64 { return &i.c.Rates.Moving }, says: "leads and staging, as 5min/m, or none"},
 	{name: "cleaning", dim: quantity.Pace, none: true, to: func(i *jointInput) *float64 { return &i.c.Rates.Cleaning }, says: "by parts: slag and interpass cleaning, a metre of run, or none"},
@@ -107,7 +108,7 @@ var jointYes = [][2]string{
 
 var jointWords = [][2]string{
 	{"position", "ISO 6947 position: PA, PB, PC, PD, PE, PF, PG, PH, PJ, H-L045"}, {"process", "ISO 4063 number or usual name: 111, 135, 136"},
-	{"procedure-position", "position that the procedure's figures hold for"},
+	{"procedure-position", "position that a given deposition holds for (default: that of the joint)"},
 	{"count", "how many seams the length is made of"}, {"turns", "how often the part is turned over"}, {"supply-phases", "1 or 3"},
 	{"steel", "grade, as S355"}, {"analysis", "in percent, as \"C 0.17, Mn 1.45\""},
 	{"to-standard", "the contract's standard: EN 1090-2 or AWS D1.1"}, {"preheat-by", "EN 1011-2 A, EN 1011-2 B or AWS D1.1"},
@@ -138,7 +139,16 @@ func (in *jointInput) read(o *jointOptions) error {
 		among("preheat-by", *o.words["preheat-by"], &in.c.PreheatStandard, "EN 1011-2 A", "EN 1011-2 B", "AWS D1.1"),
 		inPosition("position", *o.words["position"], &in.seam.Position),
 		inPosition("procedure-position", *o.words["procedure-position"], &in.proc.Position),
-		in.names(o))
+		in.names(o), in.own())
+}
+
+// own has a deposition that is given hold for the position of the joint, where no other is named:
+// there is one joint, and what is said of it is said of it there.
+func (in *jointInput) own() error {
+	if in.proc.Deposition > 0 && in.proc.Position == 0 {
+		in.proc.Position = weld.UsualPosition(in.seam.Joint.Type, in.seam.Position)
+	}
+	return nil
 }
 
 func given(what string) origin.Origin { return origin.Origin{Kind: origin.Given, Source: what} }
@@ -231,6 +241,9 @@ func (in *jointInput) amount(a jointAmount, s string) error {
 	if a.none && s == "none" {
 		*to = weld.None
 		return nil
+	}
+	if a.name == "cet" || a.name == "cev" { // certificates print them in percent
+		s = strings.TrimSpace(strings.TrimSuffix(s, "%"))
 	}
 	v, err := quantity.Parse(s, a.dim)
 	if err != nil {

@@ -24,7 +24,7 @@ func (x *expander) repair(t *tasks.Task, h hands, e weld.Estimate, c weld.Circum
 	h.safe *= hours.Value / (float64(e.HandsOn) * part)
 	h.est.Facts = []origin.Figure{
 		origin.Worked("repair length", r.Length, "mm", "expected length where there is any"),
-		origin.House("chance of any repair", r.Chance, "", "Poisson count of repairs of usual length"),
+		origin.House("chance of any repair", r.Chance, "", "at least one repair of usual length, by the repair share"),
 		e.Why.SetUp,
 	}
 	if r.Standing > 0 {

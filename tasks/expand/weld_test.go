@@ -163,7 +163,7 @@ func TestPlainThinSteel(t *testing.T) {
 		if len(holdSteps(w, "it")) > 0 || len(s.Estimate.Notes) > 0 || len(w.Notes) > 0 {
 			t.Errorf("%s: %q, %q, %v", top, holdSteps(w, "it"), s.Estimate.Notes, w.Notes)
 		}
-		for _, name := range []string{"preheat", "soak", "cooling", "time before NDT in minutes"} {
+		for _, name := range []string{"preheat", "soak", "cooling", "wait before NDT"} {
 			if f := fact(s, name); f.Name != "" {
 				t.Errorf("%s: says %s %v", top, name, f.Value)
 			}

@@ -42,6 +42,7 @@ var jointSection = section{name: "Joint", where: "tasks / NAME / joints / item /
 	mm("bead", 5, 1e7, "50 mm", "", "intermittent: each weld; slot: its length"),
 	{name: "pitch", takes: anAmount, dim: quantity.Length, low: 5, high: 1e7, example: "150 mm", beside: "bead: 50 mm", says: "intermittent: start to start"},
 	mm("diameter", 3, 1e5, "48.3 mm", "", "of a tube, a plug's hole, a slot's width"),
+	{name: "onto", takes: anAmount, dim: quantity.Length, low: 3, high: 1e5, example: "114.3 mm", beside: "diameter: 48.3 mm", says: "a branch: outside diameter of the tube that it stands on, square; the seam is the saddle between them, in place of a length"},
 }}
 
 var seamSection = section{name: "Seam", where: "tasks / NAME / joints / item", host: "tasks/weld lugs/joints/1", says: "One seam of a weld task: one joint type with its keys, and these.", keys: []key{
@@ -59,7 +60,7 @@ var seamSection = section{name: "Seam", where: "tasks / NAME / joints / item", h
 func init() { // the keys that a single V lacks stand in other joints of the example job
 	const fillet, lugs = "tasks/weld frame/joints/1/fillet", "tasks/weld lugs/joints/"
 	for name, host := range map[string]string{"leg": fillet, "second leg": fillet, "both sides": fillet, "bead": lugs + "4/slot", "pitch": fillet,
-		"throat": fillet, "second angle": lugs + "2/double V", "first depth": lugs + "2/double V", "radius": lugs + "3/single U"} {
+		"throat": fillet, "second angle": lugs + "2/double V", "first depth": lugs + "2/double V", "radius": lugs + "3/single U", "onto": lugs + "5/fillet"} {
 		jointSection.find(name).host = host
 	}
 	jointSection.find("throat").without = "leg"
@@ -190,7 +191,7 @@ func (r *reader) joint(f *fields) weld.Joint {
 		Leg: f.value("leg"), Leg2: f.value("second leg"), Throat: f.value("throat"), Thickness: f.value("thickness"), Thickness2: f.value("second thickness"),
 		RootGap: none("root gap", 40), RootFace: none("root face", 400), Angle: f.value("angle"), Angle2: f.value("second angle"),
 		Radius: f.value("radius"), PartialDepth: f.value("depth"), FirstDepth: f.value("first depth"), Cap: none("cap", 10), Backing: f.yes("backing"), BackGouge: f.yes("back gouge"),
-		Gap: none("gap", 40), BothSides: f.yes("both sides"), Bead: f.value("bead"), Pitch: f.value("pitch"), Diameter: f.value("diameter"),
+		Gap: none("gap", 40), BothSides: f.yes("both sides"), Bead: f.value("bead"), Pitch: f.value("pitch"), Diameter: f.value("diameter"), Onto: f.value("onto"),
 	}
 }
 

@@ -93,7 +93,7 @@ var (
 		{name: "joints", takes: aCount, low: 0, high: 10000, example: "8", says: "how many joints"},
 	}}
 	testKeys = section{name: "Test", where: "tasks / NAME of kind test", host: "tasks/MT", says: "a test", more: &taskSection, keys: []key{
-		with(byKey, "magnetic particle", "visual, dye penetrant, magnetic particle, ultrasonic, leak, load, or another method with hours"),
+		with(byKey, "magnetic particle", "visual, dye penetrant, magnetic particle, vacuum box, air, hose; or another, as ultrasonic or load, with hours"),
 		with(lengthKey, "1.9 m", "length of seam tested"), partKey,
 		{name: "dwell", takes: anAmount, dim: quantity.Time, low: 1, high: 1440, usual: "by method; penetrant doubled below 10 C", example: "30 min", says: "time that penetrant stands or pressure is held, as a written procedure says; then penetrant is also used below 5 C"},
 		{name: "steel temperature", takes: anAmount, dim: quantity.Temperature, low: -40, high: 150, usual: "that of the place", example: "15 C", says: "of the steel, warmed for the test"},

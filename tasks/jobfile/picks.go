@@ -64,6 +64,12 @@ func (r *reader) holdsFor(p *tasks.Procedure, f *fields) {
 		h.People = append(h.People, ref.text)
 	}
 	p.For = h
+	if p.Position == 0 && len(h.Positions) == 1 { // what is for one position has the figures of that
+		p.Position = h.Positions[0]
+		for i := range p.By {
+			p.By[i].Position = p.Position
+		}
+	}
 }
 
 // fromTo reads a range of lengths, from and to.

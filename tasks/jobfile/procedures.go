@@ -15,7 +15,7 @@ import (
 
 var procedureSection = section{name: "Procedure", where: "procedures / NAME", host: "procedures/site fillet", says: "How a weld is made. What is left out has the usual value of its process.", keys: []key{
 	{name: "process", takes: itsOwn, form: "process, by ISO 4063 number or its usual name", shape: anyText, usual: "111 on site, 135 in the shop", example: "136", says: "the process"},
-	{name: "position", takes: itsOwn, form: "ISO 6947 position", shape: anyText, example: "PF", says: "the position that its figures hold for"},
+	{name: "position", takes: itsOwn, form: "ISO 6947 position", shape: anyText, usual: "the one position under `for`; else a deposition is that in PA", example: "PF", says: "the position that its figures hold for"},
 	{name: "wire", takes: anAmount, dim: quantity.Length, low: 0.6, high: 6.4, example: "1.2 mm", says: "wire diameter"},
 	{name: "electrode", takes: anAmount, dim: quantity.Length, low: 1.6, high: 8, example: "3.2 mm", says: "electrode diameter"},
 	{name: "electrode length", takes: anAmount, dim: quantity.Length, low: 200, high: 1000, usual: "350 mm, 450 mm from 4 mm on", example: "350 mm", says: "length of an electrode"},

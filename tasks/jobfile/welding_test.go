@@ -144,3 +144,21 @@ func TestWeldingFaults(t *testing.T) {
 		}
 	}
 }
+
+// What is for one position has its figures there; what says a position keeps it, and what is for
+// several says none.
+func TestProcedureForOnePosition(t *testing.T) {
+	job := welds(t, `procedures:
+  up: {process: 136, deposition: 2.4 kg/h, for: {positions: [PF]}, by person: {Ines: {deposition: 2.6 kg/h}}}
+  said: {process: 136, deposition: 2.4 kg/h, position: PB, for: {positions: [PF]}}
+  both: {process: 136, deposition: 2.4 kg/h, for: {positions: [PB, PF]}}
+`+oneWeld)
+	for i, want := range []weld.Position{weld.PF, weld.PB, 0} {
+		if p := job.Procedures[i]; p.Position != want {
+			t.Errorf("%s: %v, want %v", p.Name, p.Position, want)
+		}
+	}
+	if by := job.Procedures[0].By[0]; by.Position != weld.PF {
+		t.Errorf("by person: %v", by.Position)
+	}
+}
