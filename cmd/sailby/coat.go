@@ -198,9 +198,14 @@ func coatTold(a coat.Application, in coatInput) (head []string, steps []origin.F
 		fmt.Sprintf("%s by %s, %s m2 at %s C", p.Kind, j.Method, origin.Trim(j.Area), origin.Trim(j.Celsius)),
 		fmt.Sprintf("Hands-on time %s; %s L of paint; wet film %s um", span(float64(a.Minutes)), origin.Trim(roundTo(a.Litres, 0.01)), origin.Trim(math.Round(a.Wet))),
 	}
+	if c := j.Celsius; c < p.ApplyMin {
+		head = append(head, fmt.Sprintf("It may not go on at %s C, and does not cure: its least is %s C", origin.Trim(c), origin.Trim(p.ApplyMin)))
+	} else if c > p.ApplyMax {
+		head = append(head, fmt.Sprintf("It may not go on at %s C: its greatest is %s C", origin.Trim(c), origin.Trim(p.ApplyMax)))
+	}
 	if a.Batches > 0 {
 		head = append(head, fmt.Sprintf("%d %s of %s L, used within %s of mixing; %s L base and %s L hardener in all; stands %s first", a.Batches, mixWord(a.Batches),
-			origin.Trim(roundTo(a.BatchLitres, 0.01)), span(float64(a.UseWithin)), origin.Trim(roundTo(a.Base, 0.01)), origin.Trim(roundTo(a.Hardener, 0.01)), span(float64(a.Induction))))
+			origin.Trim(roundTo(a.BatchLitres, 0.01)), span(math.Floor(float64(a.UseWithin)+1e-9)), origin.Trim(roundTo(a.Base, 0.01)), origin.Trim(roundTo(a.Hardener, 0.01)), span(float64(a.Induction))))
 	}
 	if len(a.Tins) > 0 {
 		var tins []string
@@ -261,7 +266,7 @@ func coatWaits(in coatInput) (steps []origin.Figure, notes []string) {
 	}
 	least, most, err := p.Window(in.next, c)
 	if err != nil {
-		return steps, append(notes, err.Error())
+		return steps, append(notes, "next coat: "+err.Error())
 	}
 	least.Name, most.Name = "least wait to "+in.next.Kind, "longest wait to "+in.next.Kind
 	steps = append(steps, least, most)

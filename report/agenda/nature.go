@@ -5,6 +5,7 @@ import (
 	"math"
 	"regexp"
 	"slices"
+	"sort"
 	"strings"
 	"time"
 
@@ -106,13 +107,29 @@ func Fit(w *expand.Work, p *tasks.Place, in hours.Span) []Weathered {
 			continue
 		}
 		seen[name] = true
-		x := Weathered{Name: name, Step: s, Closed: w.NatureIn(s, in)}
+		x := Weathered{Name: name, Step: s, Closed: append(w.NatureIn(s, in), underWater(w, s.Face, in)...)}
+		sort.SliceStable(x.Closed, func(i, j int) bool { return x.Closed[i].From < x.Closed[j].From })
 		var shut []hours.Span
 		for _, c := range x.Closed {
 			shut = append(shut, hours.Span{From: hours.Minute(c.From), To: hours.Minute(c.To)})
 		}
 		x.Open = hours.Set{in}.Less(hours.NewSet(shut...))
 		out = append(out, x)
+	}
+	return out
+}
+
+// underWater gives when nobody works at a workface for the water: covered, or on the way off.
+func underWater(w *expand.Work, f *tasks.Workface, in hours.Span) (out []site.Span) {
+	covered, _ := w.Covered(f)
+	add := func(from, to hours.Minute, why string) {
+		if from, to = max(from, in.From), min(to, in.To); from < to {
+			out = append(out, site.Span{From: int64(from), To: int64(to), Why: why})
+		}
+	}
+	for _, s := range covered {
+		add(s.From-hours.Minute(f.WayOff.Value), s.From, "way off before the water")
+		add(s.From, s.To, "covered by the water")
 	}
 	return out
 }

@@ -7,6 +7,7 @@ import (
 
 	"sailby/plan"
 	"sailby/report/agenda"
+	"sailby/tasks"
 	"sailby/tasks/expand"
 	"sailby/tasks/hours"
 	"sailby/tasks/jobfile"
@@ -117,5 +118,31 @@ func TestGettingOffAgain(t *testing.T) {
 	w.Window.Place.Sea.Craft = nil
 	if agenda.Getaways(a) != nil {
 		t.Error("no craft, nothing said")
+	}
+}
+
+// The paintable hours of a day leave out those under water and the way off: at 2.6 m the slip is covered until 06:53 and from
+// 13:07 (covered-coat.yaml), and a paint that may go under at once could be put on up to then.
+func TestHoursUnderWaterAreNotPaintable(t *testing.T) {
+	w := work(t, "covered-coat.yaml")
+	slip := w.Window.Place
+	got := agenda.FitWords(w, slip, june(t, 8, 5, 18))
+	if len(got) != 1 || got[0] != "quick by brush at foot: 06:53-11:07" && got[0] != "quick by brush at foot: 06:52-11:07" {
+		t.Errorf("two hours to the water: %q", got)
+	}
+	slip.Workfaces[0].WayOff.Value = 30
+	for _, s := range w.Steps {
+		if s.Task.Kind == tasks.Coat {
+			yes := true
+			s.Task.Covered = &yes
+		}
+	}
+	fit := agenda.Fit(w, slip, june(t, 8, 5, 18))
+	closed := strings.Join(agenda.ClosedWords(w, slip, fit[0]), "\n")
+	if !strings.Contains(closed, "way off before the water") || !strings.Contains(closed, "covered by the water") {
+		t.Errorf("closed: %s", closed)
+	}
+	if n := fit[0].Open.Total(); n < 343 || n > 345 { // 06:53 to 12:37
+		t.Errorf("%d minutes open: %v", n, fit[0].Open)
 	}
 }

@@ -46,6 +46,8 @@ type Application struct {
 	Warnings    []string
 	Hours       origin.Figure // Minutes, with what it was made from
 	Volume      origin.Figure // Litres, with what it was made from
+
+	clock origin.Figure // time of applying by the clock, of two-pack paint: what the mixes are counted by
 }
 
 // Stripe is the stripe coat that goes before the full coat: a task and a wait of its own.

@@ -104,6 +104,8 @@ func (j Job) mixes(a *Application, work pace) error {
 		face = faceSite
 	}
 	elapsed := work.slow / face
+	a.clock = origin.Worked("clock time of applying", elapsed, "min", "time at the slow rate / hands-on share of it",
+		given("applying at the slow rate", work.slow, "min"), origin.House("hands-on share", face, "", "0.85 in a shop, 0.7 out of doors"))
 	n := math.Ceil(elapsed/use - 1e-9)
 	if n > mostBatches {
 		return fault("divide the area into tasks, or spray", "the coat would take %s mixes, at most %d are reckoned", amount(n, ""), mostBatches)
@@ -148,7 +150,7 @@ func (j Job) hours(a *Application, work pace) {
 func (j Job) mixing(a Application) origin.Figure {
 	if j.Paint.TwoPack() {
 		_, life, _ := j.Paint.Pot(j.Celsius)
-		n := origin.Worked("mixes", float64(a.Batches), "", "clock time of applying / usable pot life, rounded up", life,
+		n := origin.Worked("mixes", float64(a.Batches), "", "clock time of applying / usable pot life, rounded up", a.clock, life,
 			origin.House("usable share of the pot life", potShare, "", "the last fifth drags"),
 			j.Paint.fig("induction", j.Paint.Induction, "min"))
 		return origin.Worked("mixing", mixTwoPack*float64(a.Batches), "min", "mixes x minutes a mix", n,
