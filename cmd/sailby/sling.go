@@ -102,10 +102,23 @@ func (i *slingInput) judge() (slingTold, error) {
 			line, t.refused = over+line, true
 		}
 		t.head = append(t.head, line)
+		for _, o := range r.Others {
+			if o.OK {
+				t.head = append(t.head, within+o.Reason)
+			} else {
+				t.head = append(t.head, over+o.Reason)
+			}
+		}
 		if !r.OK && r.Nearest != "" {
 			t.head = append(t.head, "would do: "+r.Nearest)
 		}
-		t.steps = append(t.steps, r.Figure, r.Limit)
+		if r.Need > 0 { // no gust, for instance, is none that was given
+			t.steps = append(t.steps, r.Figure)
+		}
+		t.steps = append(t.steps, r.Limit)
+		for _, o := range r.Others {
+			t.steps = append(t.steps, o.Figure, o.Limit)
+		}
 		t.notes = append(t.notes, r.Warnings...)
 		return nil
 	}

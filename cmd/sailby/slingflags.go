@@ -126,6 +126,9 @@ func (i *slingInput) read(o *slingOptions) error {
 		i.slung, i.hung = false, false
 		return i.between()
 	}
+	if i.way.byJack && !i.any("legs", "angle", "leg-length", "hook-above", "rated", "table") {
+		i.slung = i.slung && !i.any("span")
+	}
 	return i.spread()
 }
 
@@ -265,6 +268,9 @@ func (i *slingInput) spread() error {
 	}
 	if i.cg > i.span {
 		return misuse("a centre of gravity between the lugs", "--cg: %s mm is outside the span of %s mm", origin.Trim(i.cg), origin.Trim(i.span))
+	}
+	if i.way.byJack && !i.any("legs", "angle", "leg-length", "hook-above", "rated", "table") {
+		return nil // from jack to jack
 	}
 	even := math.Abs(i.cg-i.span/2) < 1e-9
 	span := origin.Written("span", i.span, "mm", origin.Origin{Kind: origin.Given, Source: "--span"})

@@ -38,7 +38,7 @@ var wayAmounts = []slingAmount{
 	{name: "distance", dim: quantity.Length, to: func(i *slingInput) *float64 { return &i.way.push.Distance }, says: "trolley: pushed or pulled so far"},
 	{name: "trolley-mass", dim: quantity.Mass, to: func(i *slingInput) *float64 { return &i.way.push.Own }, says: "of the trolley itself"},
 	{name: "trolley-rated", dim: quantity.Mass, to: func(i *slingInput) *float64 { return &i.way.push.Rated }, says: "what the trolley may carry"},
-	{name: "jack-rated", dim: quantity.Mass, to: func(i *slingInput) *float64 { return &i.way.jack }, says: "of each jack"},
+	{name: "jack-rated", dim: quantity.Mass, to: func(i *slingInput) *float64 { return &i.way.jack }, says: "of each jack; --span is from jack to jack, --cg from the first"},
 	{name: "second-hook", dim: quantity.Mass, to: func(i *slingInput) *float64 { return &i.way.pair.RatedB }, says: "rating of a second hook on the same load; --hoist is that of the first, --span between them, --cg from the first"},
 	{name: "tilt", dim: quantity.Angle, to: func(i *slingInput) *float64 { return &i.way.pair.Tilt }, says: "two hooks: how far it may go out of level"},
 	{name: "off", dim: quantity.Length, to: func(i *slingInput) *float64 { return &i.way.pair.Offset }, says: "two hooks: centre of gravity square to the line of the hooks"},
@@ -227,7 +227,7 @@ func (i *slingInput) byPeopleAndPairs(t *slingTold, add, guide func(lift.Result,
 		if n == 0 {
 			n = 4
 		}
-		if err := add(lift.Jacks(i.load, n, w.jack)); err != nil {
+		if err := add(lift.JacksAt(i.load, n, w.jack, i.span, i.cg)); err != nil {
 			return err
 		}
 	}

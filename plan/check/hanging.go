@@ -91,6 +91,23 @@ func (c *checker) pieces24(name string, later map[string]bool) []string {
 	return slices.DeleteFunc(c.parts24(name), func(p string) bool { return p != name && later[p] })
 }
 
+// whole24 is pieces24; where `joins` name every part of an assembly, those that have been joined.
+func (c *checker) whole24(name string, later, begun map[string]bool) []string {
+	out := c.pieces24(name, later)
+	if len(out) > 0 || strings.Contains(name, "/") {
+		return out
+	}
+	on := map[string]bool{}
+	for _, t := range c.w.Job.Tasks {
+		if begun[t.Name] && (t.Kind == tasks.FitUp || t.Kind == tasks.Weld) {
+			for _, n := range t.Joins {
+				on[n.Name] = true
+			}
+		}
+	}
+	return slices.DeleteFunc(c.parts24(name), func(p string) bool { return !on[p] })
+}
+
 // hanging gives the pieces that are taken up with what a task lifts, in the order of the job.
 func (c *checker) hanging(t *tasks.Task, begun, done map[string]bool) []string {
 	later := c.onLater()
@@ -120,7 +137,7 @@ func (c *checker) hanging(t *tasks.Task, begun, done map[string]bool) []string {
 	var ties []tie
 	if !strings.Contains(t.Lifts, "/") || anyOff[t.Lifts] {
 		for _, a := range c.w.Job.Assemblies {
-			ties = append(ties, tie{c.pieces24(a.Name, later), []string{a.Name}})
+			ties = append(ties, tie{c.whole24(a.Name, later, begun), []string{a.Name}})
 		}
 	}
 	gone := map[string]bool{}
@@ -135,7 +152,7 @@ func (c *checker) hanging(t *tasks.Task, begun, done map[string]bool) []string {
 		var one tie
 		for _, n := range e.t.Joins {
 			one.wholes = append(one.wholes, n.Name)
-			for _, p := range c.pieces24(n.Name, later) {
+			for _, p := range c.whole24(n.Name, later, begun) {
 				if p == n.Name || !gone[p] {
 					one.pieces = append(one.pieces, p)
 				}
@@ -147,7 +164,7 @@ func (c *checker) hanging(t *tasks.Task, begun, done map[string]bool) []string {
 		ties = append(ties, one)
 	}
 	up := map[string]bool{}
-	for _, p := range c.pieces24(t.Lifts, later) {
+	for _, p := range c.whole24(t.Lifts, later, begun) {
 		up[p] = p == t.Lifts || !gone[p]
 	}
 	return c.follow(up, ties)

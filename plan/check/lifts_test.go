@@ -173,7 +173,7 @@ func TestProvedAndSecured(t *testing.T) {
 // lifted then may have, by the same arithmetic done by hand: 2 m2 and 157 kg, drag 2.4.
 func TestWindForLifts(t *testing.T) {
 	limit := 9.8 * math.Sqrt(1.2*.157/(2*2.4))
-	weather := func(w *expand.Work, gust float64) {
+	weather := func(w *expand.Work, gust float64, usual bool) {
 		s := &site.Series{Start: int64(w.Window.Opens)}
 		for h := range 24 {
 			g := 1.0
@@ -181,7 +181,7 @@ func TestWindForLifts(t *testing.T) {
 				g = gust
 			}
 			s.Air, s.Steel, s.Dew, s.RH, s.Wet, s.Basis = append(s.Air, 10), append(s.Steel, 10), append(s.Dew, 5), append(s.RH, .7), append(s.Wet, false), append(s.Basis, "test")
-			s.Wind, s.Gust = append(s.Wind, 1), append(s.Gust, g)
+			s.Wind, s.Gust, s.Usual = append(s.Wind, 1), append(s.Gust, g), append(s.Usual, usual)
 		}
 		w.Window.Place.Climate = &tasks.Climate{Hourly: s}
 	}
@@ -192,12 +192,13 @@ func TestWindForLifts(t *testing.T) {
 	}{
 		{"calm", "up 3", limit - .01, limit, ""},
 		{"gusty", "up 3", limit + .01, limit, "R25 is worked when the wind is stronger than it may be lifted in"},
+		{"gusty by the month's normals alone", "up 3", 3 * limit, limit, ""},
 		{"another hour", "up 5", 30, limit, ""},
 		{"planned up to more than its sail may have", "up 5", 1, limit + .1, "R25 is planned up to a gust"},
 		{"no limit at all", "up 5", 1, 0, "R25 is planned up to a gust"},
 	} {
 		w := liftJob(t, "{chain hoist: {rated: 1 t}}", "  up: {kind: lift, at: dock, lifts: gate/skin, by: chain hoist, hours: 1 h}\n")
-		weather(w, tc.gust)
+		weather(w, tc.gust, tc.name == "gusty by the month's normals alone")
 		w.Steps[0].Gust.Value = tc.cap
 		var got string
 		for _, b := range Plan(w, planOf(t, w, tc.text)) {
@@ -243,6 +244,24 @@ func TestTakenOffByThePlansOrder(t *testing.T) {
 		got := broken(w, planOf(t, w, text))
 		if strings.Contains(got, "R24 is lifted when too much hangs on it") != heavy || strings.Contains(got, "other pieces") {
 			t.Errorf("%s: %q", text, got)
+		}
+	}
+}
+
+// Of an assembly whose every part is joined by name, the lift takes up what has been joined: 235.5 kg by hand, 7.85 kg
+// a mm and m2.
+func TestEveryPartJoinedByName(t *testing.T) {
+	w := liftJob(t, "{chain hoist: {rated: 1 t}}", "  make: {kind: fit-up, at: yard, hours: 1 h, joins: [gate/skin, gate/brace]}\n  up: {kind: lift, at: dock, lifts: gate, by: chain hoist, hours: 1 h}\n")
+	if got := broken(w, planOf(t, w, "make 0, up 3")); got != "" {
+		t.Error(got)
+	}
+	for _, s := range w.Steps {
+		if s.Rigging == nil {
+			continue
+		}
+		j, err := s.Rigging.Judge(s.Rigging.Joins)
+		if err != nil || math.Abs(j.Load.Mass-235.5) > 1e-9 {
+			t.Errorf("%v kg, %v", j.Load.Mass, err)
 		}
 	}
 }

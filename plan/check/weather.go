@@ -149,7 +149,7 @@ func (c *checker) weather(r *row, need func(line, string, string, string)) {
 		l := c.line(false)
 		for t := c.lo; t < c.hi; t++ {
 			w, ok, _ := felt(s, t)
-			l.on[t-c.lo] = ok && w.Gust <= s.Gust.Value*(1+1e-6)
+			l.on[t-c.lo] = ok && (w.Usual || w.Gust <= s.Gust.Value*(1+1e-6))
 		}
 		need(l, "R25", "the wind", "is stronger than it may be lifted in")
 	}

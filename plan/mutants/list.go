@@ -160,6 +160,8 @@ var mutants = []mutant{
 		`		sum += 2 * gained[i]`, byChecker},
 	{"plan/check/weather.go", `w.Gust <= s.Gust.Value*(1+1e-6)`,
 		`w.Gust <= s.Gust.Value*2`, byChecker},
+	{"plan/check/weather.go", `ok && (w.Usual || w.Gust`,
+		`ok && (w.Usual && w.Gust < 1 || w.Gust`, byChecker},
 	{"plan/check/liftwind.go", `r.s.Gust.Value > limit+slackWind ||`,
 		`r.s.Gust.Value > 2*limit ||`, byChecker},
 	{"plan/check/lifts.go", `if have < want {`,

@@ -29,11 +29,14 @@ func (m *maker) gear() {
 				m.with(&it, s)
 			}
 		}
+		used := len(it.For) > 0
+		m.spareOf(&it, k)
 		for _, s := range m.steps() { // a source of power serves all that draws
 			if len(it.For) == 0 && k.Gives == 0 {
 				break
 			}
 			if k.Gives > 0 && s.Power > 0 {
+				used = true
 				m.with(&it, s)
 			}
 		}
@@ -43,8 +46,23 @@ func (m *maker) gear() {
 		if k.HasKind {
 			it.Group = LiftGear
 		}
-		it.Stops = it.Stops || k.Count <= 1
+		it.Stops = it.Stops || k.Count <= 1 && used
 		m.add(it)
+	}
+}
+
+// spareOf adds to a kit's reasons that it stands in for another that goes along: kit that is named as a spare
+// goes too.
+func (m *maker) spareOf(it *Item, k *tasks.Kit) {
+	for _, other := range m.job.Kit {
+		if other == k || other.Spare != k.Name || other.Slots != nil || other.At != nil {
+			continue
+		}
+		if slices.ContainsFunc(m.steps(), func(s *expand.Step) bool {
+			return slices.ContainsFunc(s.Kit, func(u expand.Use) bool { return u.Kit == other })
+		}) {
+			it.For = append(it.For, other.Name+", as its spare")
+		}
 	}
 }
 

@@ -157,6 +157,11 @@ func (m *maker) with(it *Item, s *expand.Step) {
 
 func (m *maker) add(it Item) { m.items = append(m.items, it) }
 
+// lifted says whether a lift or move at the site takes an assembly up.
+func (m *maker) lifted(a *tasks.Assembly) bool {
+	return slices.ContainsFunc(m.steps(), func(s *expand.Step) bool { return s.Moves == a.Name })
+}
+
 // loads are the pieces of assemblies that are worked on at home and at the site: what hangs
 // together when the trip leaves travels in one piece.
 func (m *maker) loads() {
@@ -172,6 +177,9 @@ func (m *maker) loads() {
 			} else {
 				home = true
 			}
+		}
+		if !home && len(it.For) > 0 && !a.Old && m.lifted(a) {
+			m.list.Notes = append(m.list.Notes, a.Name+" is not on this list: no task at home has to do with it, so it is taken to stand at the site already (`old: yes` says so); if it goes along, give it a task at home")
 		}
 		if !home || len(it.For) == 0 {
 			continue

@@ -211,3 +211,56 @@ func TestNothingToList(t *testing.T) {
 		t.Error("a list of nothing")
 	}
 }
+
+const ferried = `job: Beam
+zone: Europe/London
+places: {shop: {open: Mon-Fri 07:30-17:30}, pier: {open: daily 08:00-18:00}}
+window: {place: pier, opens: 2027-04-05 08:00, closes: 2027-04-09 18:00}
+people: {Tom: {tickets: [slinger/signaller, lift supervisor]}, Ann: {}}
+kit:
+  chain hoist: {rated: 1 t, mass: 24 kg, spare: lever hoist}
+  lever hoist: {rated: 1 t, mass: 11 kg}
+  oxygen: {class: oxygen, of it: 50, mass: 80 kg}
+  acetylene: {class: acetylene, of it: 40, mass: 70 kg}
+assemblies: {beam: {mass: 250 kg}, frame: {mass: 100 kg}, stump: {mass: 90 kg, old: yes}}
+tasks:
+  make frame: {at: shop, hours: 1 h, kind: fit-up, part: frame}
+  frame in: {kind: lift, at: pier, lifts: frame, by: chain hoist, after: make frame}
+  beam in: {kind: lift, at: pier, lifts: beam, by: chain hoist}
+  free stump: {at: pier, hours: 1 h}
+  stump out: {kind: lift, at: pier, lifts: stump, by: chain hoist, proved free by: free stump}
+  burn: {at: pier, hours: 1 h, kit: [oxygen, acetylene]}
+carriage: {ferry gas: {class: acetylene, most: 20, unit: L, not with: oxygen}}
+`
+
+// An assembly that no task at home has to do with is told of, an old one is not; kit that is named as a spare goes
+// along and does not stop the job.
+func TestWhatIsNotTakenIsTold(t *testing.T) {
+	l := listOf(t, ferried)
+	notes := strings.Join(l.Notes, "\n")
+	if !strings.Contains(notes, "beam is not on this list") || strings.Contains(notes, "stump") || strings.Contains(notes, "frame") {
+		t.Error(notes)
+	}
+	spare := l.find(t, "lever hoist")
+	if spare.Mass != 11 || spare.Stops || len(spare.For) != 1 || spare.For[0] != "chain hoist, as its spare" {
+		t.Errorf("%+v", spare)
+	}
+	if !l.find(t, "chain hoist").Stops {
+		t.Error("the only hoist does not stop the job")
+	}
+	for _, it := range listOf(t, strings.Replace(ferried, ", spare: lever hoist", "", 1)).Items {
+		if it.What == "lever hoist" {
+			t.Errorf("nothing asks for it: %+v", it)
+		}
+	}
+}
+
+// Rules of carriage are flagged whether the goods fit, fit in more runs, or do not fit at all.
+func TestCarriageIsFlaggedWhateverFits(t *testing.T) {
+	for name, payload := range map[string]string{"fits": "900 kg", "in two runs": "200 kg", "not at all": "60 kg"} {
+		l := listOf(t, ferried+"vehicles: {van: {payload: "+payload+", bed: [4 m, 1.7 m, 1.8 m]}}\n")
+		if flags := strings.Join(l.Flags, "\n"); !strings.Contains(flags, "40 L of acetylene is over 20 L") || l.OK != (name == "fits") {
+			t.Errorf("%s: %v %v", name, l.OK, l.Flags)
+		}
+	}
+}

@@ -37,8 +37,16 @@ func (m *maker) inMoreRuns(goods []lift.Goods, list []lift.Vehicle) {
 			way += "; or " + strings.Replace(m.list.Nearest, "another run or vehicle", "another vehicle", 1)
 		}
 		m.list.Nearest = way
+		m.carriage(goods, p.Trips)
 		m.costOfRuns(goods, p.Trips)
 		return
+	}
+	all := lift.Trip{} // no split: the rules on single things, and on all of them together
+	for i := range goods {
+		all.Stowed = append(all.Stowed, lift.Stowed{Goods: i, On: -1})
+	}
+	for _, f := range lift.Carriage(goods, all, m.job.Carriage) {
+		m.flag("all goods together: " + f)
 	}
 }
 

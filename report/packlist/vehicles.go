@@ -83,11 +83,18 @@ func (m *maker) vehicles() {
 		for _, s := range t.Stowed {
 			from[s.Goods](where)
 		}
+	}
+	m.carriage(goods, p.Trips)
+	m.costOfRuns(goods, p.Trips)
+}
+
+// carriage flags what the rules of carriage say of each run.
+func (m *maker) carriage(goods []lift.Goods, trips []lift.Trip) {
+	for _, t := range trips {
 		for _, f := range lift.Carriage(goods, t, m.job.Carriage) {
-			m.flag(v.Name + ": " + f)
+			m.flag(m.job.Vehicles[t.Vehicle].Name + ": " + f)
 		}
 	}
-	m.costOfRuns(goods, p.Trips)
 }
 
 // stow writes runs of vehicles out, with the straps of what is heavy.

@@ -94,6 +94,13 @@ func (k *pack) liftLimits(s *expand.Step, j expand.Judgement) {
 			cells.lines = append(cells.lines, line{text: what})
 		}
 		tb.row(cells, loud(r.Figure.Amount()), say(r.Limit.Amount()+", "+r.Limit.Name), loud(word, or(r.Nearest, "")))
+		for _, o := range r.Others {
+			word := "within"
+			if !o.OK {
+				word = "REFUSED"
+			}
+			tb.row(loud(o.What), loud(o.Figure.Amount()), say(o.Limit.Amount()+", "+o.Limit.Name), loud(word))
+		}
 	}
 	if rig := s.Rigging.Slung(); rig != nil {
 		most, at := 0.0, 0

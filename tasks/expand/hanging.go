@@ -116,6 +116,20 @@ func (s *stager) all(name string) []string {
 	return out
 }
 
+// whole is pieces; of an assembly whose every part is named by some `joins` it is those that these tasks have joined.
+func (s *stager) whole(name string, joined []Join) []string {
+	out := s.pieces(name)
+	if len(out) > 0 || strings.Contains(name, "/") {
+		return out
+	}
+	for _, p := range s.all(name) {
+		if slices.ContainsFunc(joined, func(j Join) bool { return !j.Off && slices.Contains(j.Things, p) }) {
+			out = append(out, p)
+		}
+	}
+	return out
+}
+
 // edges gives the groups of pieces that hang together when these tasks have joined and taken off: the
 // assemblies as they are from the start, and what each joining task joins.
 func (s *stager) edges(joined []Join) [][]string {
@@ -125,7 +139,7 @@ func (s *stager) edges(joined []Join) [][]string {
 			continue
 		}
 		var on []string
-		for _, p := range s.pieces(a.Name) {
+		for _, p := range s.whole(a.Name, joined) {
 			if !takenOff(joined, p) {
 				on = append(on, p)
 			}
@@ -142,7 +156,7 @@ func (s *stager) edges(joined []Join) [][]string {
 				edge = append(edge, t)
 				continue
 			}
-			for _, p := range s.pieces(t) { // what is off by then does not come on with the rest
+			for _, p := range s.whole(t, joined) { // what is off by then does not come on with the rest
 				if p == t || !takenOff(joined, p) {
 					edge = append(edge, p)
 				}
@@ -183,7 +197,7 @@ func (s *stager) less(edge []string, thing string, asWhole bool) []string {
 // of the job's assemblies.
 func (s *stager) hanging(thing string, joined []Join) []string {
 	on := map[string]bool{}
-	for _, p := range s.pieces(thing) {
+	for _, p := range s.whole(thing, joined) {
 		if p == thing || !takenOff(joined, p) {
 			on[p] = true
 		}

@@ -6,6 +6,7 @@ import (
 	"sailby/tasks"
 	"sailby/tasks/lift"
 	"sailby/tasks/origin"
+	"sailby/tasks/quantity"
 )
 
 // lift estimates a lift or a move: rig, trial, travel, land, make fast, unhook; for what surely
@@ -23,6 +24,9 @@ func (x *expander) lift(t *tasks.Task) hands {
 	if err != nil {
 		h.rigging = nil
 		h.fault, h.hint = err, "give its parts, or mass: 410 kg on the task"
+		if way := quantity.Hint(err); way != "" {
+			h.hint = way
+		}
 		return h
 	}
 	mass := j.Total.Figure

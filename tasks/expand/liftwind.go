@@ -3,6 +3,7 @@ package expand
 import (
 	"fmt"
 	"math"
+	"strings"
 
 	"sailby/tasks"
 	"sailby/tasks/hours"
@@ -67,15 +68,57 @@ func (r *Rigging) atTen(low origin.Figure) origin.Figure {
 	return origin.Worked("gust at 10 m above which it is not lifted", low.Value/share.Value, "m/s", "permitted gust / gust at the tip over gust at 10 m", low, share)
 }
 
-// windNotes tells of the lifts that stand still for wind in some hours.
+// windNotes tells of the lifts that stand still for wind in some hours, and of those whose hours nobody has
+// forecast yet: the usual wind closes none of them, and is told as a share of the time.
 func (x *expander) windNotes(add func(tasks.Pos, string, ...any)) {
 	for _, s := range x.w.Steps {
-		if s.Gust.Name == "" || s.Rigging == nil || s.Rigging.lifting().MayGust.Pos.Given() || len(x.w.gusty(s, x.w.Span)) == 0 {
+		if s.Gust.Name == "" {
 			continue
 		}
-		add(s.Task.Pos, "%s: lifted in gusts up to %.1f m/s, by its gear, mass and sail; some hours have more. Whoever plans the lift may state another (`gust limit`)",
-			s.Task.Label(), math.Floor(s.Gust.Value*10)/10)
+		limit, by, way := math.Floor(s.Gust.Value*10)/10, "by its gear, mass and sail", ". Whoever plans the lift may state another (`gust limit`), no higher than the gear's"
+		if r := s.Rigging; r == nil {
+			by, way = "by its gear", ""
+		} else if r.lifting().MayGust.Pos.Given() {
+			by, way = "as whoever plans it says", ""
+		}
+		if len(x.w.gusty(s, x.w.Span)) > 0 && way != "" {
+			add(s.Task.Pos, "%s: lifted in gusts up to %.1f m/s, %s; some hours have more%s", s.Task.Label(), limit, by, way)
+		}
+		if low, high, month := x.usualGusts(s); high >= 0.05 {
+			share := fmt.Sprintf("%.0f", 100*high)
+			if least := fmt.Sprintf("%.0f", 100*low); least != share {
+				share = least + " to " + share
+			}
+			add(s.Task.Pos, "%s: lifted in gusts up to %.1f m/s, %s; no forecast tells its hours yet, and in %s the usual gusts there pass that for %s %% of the time. The plan does not wait for it: keep other hours in hand, and give a forecast when there is one%s",
+				s.Task.Label(), limit, by, month, share, way)
+		}
 	}
+}
+
+// usualGusts gives the least and the greatest share of time, over the hours of the window that no forecast or
+// reading tells, in which gusts pass those of a lift: with mean wind U and gusts g U, P(gust > G) = exp(-pi/4 (G / (g U))^2),
+// Rayleigh's distribution; and the months of those hours.
+func (x *expander) usualGusts(s *Step) (low, high float64, months string) {
+	series := s.Place.Hourly(s.Face)
+	if series == nil || s.Place.Climate.Average == nil || s.Face != nil && s.Face.Sheltered {
+		return 0, 0, ""
+	}
+	low = 1
+	var named []string
+	in := x.w.Window
+	for m := in.Opens; m < in.Closes; m += 60 {
+		h, ok := series.At(int64(m))
+		mean, known := s.Place.Climate.Average.At(int64(m))
+		if !ok || !known || !h.Usual || mean.Gust <= 0 {
+			continue
+		}
+		p := math.Exp(-math.Pi / 4 * math.Pow(s.Gust.Value/mean.Gust, 2))
+		low, high = math.Min(low, p), math.Max(high, p)
+		if n := m.In(zone(s.Place)).Month().String(); len(named) == 0 || named[len(named)-1] != n {
+			named = append(named, n)
+		}
+	}
+	return low, high, strings.Join(named, " and ")
 }
 
 // Swings says whether the load hangs free while it is moved.
@@ -104,14 +147,15 @@ func gearGust(s *Step) (origin.Figure, bool) {
 	return origin.Figure{}, false
 }
 
-// gusty gives when a lift stands still for wind.
+// gusty gives when a lift stands still for wind that was foreseen or measured: what monthly normals give is no
+// reason to close an hour, and no proof (R25).
 func (w *Work) gusty(s *Step, in hours.Span) []site.Span {
 	series := s.Place.Hourly(s.Face)
 	if series == nil || s.Gust.Name == "" {
 		return nil
 	}
 	return series.ClosedBy(func(h site.Weather) []string {
-		if g := felt(s.Task, h).Gust; tooGusty(g, s.Gust.Value) {
+		if g := felt(s.Task, h).Gust; !h.Usual && tooGusty(g, s.Gust.Value) {
 			return []string{fmt.Sprintf("gusts %.1f m/s, lifted up to %.1f m/s (%s)", g, math.Floor(s.Gust.Value*10)/10, h.Basis)}
 		}
 		return nil

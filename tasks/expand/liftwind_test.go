@@ -1,6 +1,7 @@
 package expand
 
 import (
+	"fmt"
 	"math"
 	"strings"
 	"testing"
@@ -78,5 +79,81 @@ func TestWindOverOpenOrder(t *testing.T) {
 	}
 	if got := limit(", after: skin on"); math.Abs(got-sail(147.1)) > 1e-9 {
 		t.Errorf("after it is on: %v, by hand %v", got, sail(147.1))
+	}
+}
+
+// Gusts that are worked out from monthly normals close no hour: they are a share of the time in a note, worked out
+// here from Rayleigh's distribution, P(v > w) = exp(-pi/4 (w/mean)^2), with gusts 1.5 of the wind.
+func TestUsualWindClosesNoLift(t *testing.T) {
+	const kit = "kit: {chain hoist: {rated: 1 t, gust limit: 6 m/s}}"
+	const up = "tasks: {up: {kind: lift, at: pier/hinge, mass: 400 kg, by: chain hoist}}"
+	forecast := map[int]float64{30: 20} // one hour that somebody has forecast
+	gusts := func(usual bool) func(int) site.Weather {
+		return func(h int) site.Weather {
+			w := fine()
+			w.Gust, w.Usual = 15, usual
+			if g, ok := forecast[h]; ok {
+				w.Gust, w.Usual = g, false
+			}
+			return w
+		}
+	}
+	w := under(t, gusts(true), kit, up)
+	s := w.step(t, "up / lift")
+	shut := w.Nature(s)
+	if len(shut) != 1 || shut[0].To-shut[0].From != 60 || !closedAt(shut, w.Span.From+30*60) {
+		t.Fatalf("closed: %v", shut)
+	}
+	if all := under(t, gusts(false), kit, up); len(all.Nature(all.step(t, "up / lift"))) == 0 || !closedAt(all.Nature(all.step(t, "up / lift")), all.Span.From) {
+		t.Error("what was forecast closes nothing")
+	}
+	const mean = 5.0
+	job := w.Job
+	job.Places[1].Climate.Average = weatherOf(w.Span, func(int) site.Weather { return site.Weather{Gust: 1.5 * mean} })
+	again, faults := Expand(job, Basis{})
+	if len(faults) > 0 {
+		t.Fatal(faults)
+	}
+	want := fmt.Sprintf("pass that for %.0f %% of the time", 100*math.Exp(-math.Pi/4*math.Pow(6/1.5/mean, 2)))
+	told := ""
+	for _, n := range again.Notes {
+		told += n.Text + "\n"
+	}
+	if !strings.Contains(told, want) || !strings.Contains(told, "no forecast tells its hours yet") {
+		t.Errorf("want %q in %s", want, told)
+	}
+}
+
+// The size of an assembly is its sail where its parts have no places of their own; parts that span more keep theirs,
+// and a part by itself has not the size of the whole.
+func TestSizeAsSail(t *testing.T) {
+	const kit = "kit: {crane: {kind: loader crane, chart: {4 m: 5 t}, gust limit: 10 m/s}}"
+	for _, tc := range []struct {
+		name, parts, lifts string
+		area, kg           float64
+	}{
+		{"size alone", "{mass: 300 kg, size: [2 m, 1.5 m, 200 mm]}", "gate", 3, 300},
+		{"items without places", "{size: [2 m, 1.5 m, 200 mm], parts: {a: {item: 100 kg}, b: {item: 200 kg}}}", "gate", 3, 300},
+		{"a plate that spans more", "{size: [1 m, 1 m, 200 mm], parts: {a: {plate: [3 m, 2 m, 1 mm]}}}", "gate", 6, 47.1},
+		{"a part of it", "{size: [9 m, 9 m, 200 mm], parts: {a: {plate: [3 m, 2 m, 1 mm]}, b: {item: 200 kg}}}", "gate/a", 6, 47.1},
+	} {
+		w := under(t, func(int) site.Weather { return fine() }, kit, "assemblies: {gate: "+tc.parts+"}",
+			"tasks: {up: {kind: lift, at: pier/hinge, lifts: "+tc.lifts+", by: crane, radius: 4 m}}")
+		want := 10 * math.Min(1, math.Sqrt(1.2*tc.kg/1000/(tc.area*2.4)))
+		if got := w.step(t, "up / lift").Gust.Value; math.Abs(got-want) > 1e-9 {
+			t.Errorf("%s: %v m/s, by hand %v", tc.name, got, want)
+		}
+	}
+}
+
+// Where every part is joined by name, the whole is nothing before that: the fault says so and the ways out hold.
+func TestNothingToLiftYet(t *testing.T) {
+	job := func(joins, lifts string) []string {
+		return []string{"kit: {chain hoist: {rated: 1 t}}", "assemblies: {gate: {parts: {frame: {item: 100 kg}, skin: {item: 50 kg}}}}",
+			"tasks: {on: {kind: fit-up, at: pier/hinge, hours: 1 h, joins: " + joins + "}, up: {kind: lift, at: pier/hinge, by: chain hoist, " + lifts + "}}"}
+	}
+	refused(t, `before its parts are joined "gate" is nothing`, job("[gate/frame, gate/skin]", "lifts: gate")...)
+	for _, ok := range [][]string{job("[gate/frame, gate/skin]", "lifts: gate/frame"), job("[gate, gate/skin]", "lifts: gate"), job("[gate/frame, gate/skin]", "lifts: gate, after: on")} {
+		likely(t, ok...)
 	}
 }

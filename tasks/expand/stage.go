@@ -9,6 +9,7 @@ import (
 	"sailby/tasks"
 	"sailby/tasks/lift"
 	"sailby/tasks/origin"
+	"sailby/tasks/quantity"
 )
 
 // What is lifted grows with the work (R24): a stage is the set of pieces that hang together by then.
@@ -77,7 +78,7 @@ func (s *stager) stage(t *tasks.Task, joined []Join) (Stage, error) {
 	var from []origin.Figure
 	var sum lift.Total
 	own := map[string]bool{}
-	for _, p := range s.pieces(t.Lifts) {
+	for _, p := range s.whole(t.Lifts, joined) {
 		own[p] = true
 	}
 	replaced := false
@@ -102,7 +103,7 @@ func (s *stager) stage(t *tasks.Task, joined []Join) (Stage, error) {
 	}
 	if len(from) == 0 || sum.Mass <= 0 {
 		if len(st.Pieces) == 0 {
-			return st, fmt.Errorf("there is no assembly %q", t.Lifts)
+			return st, s.nothing(t.Lifts)
 		}
 		return st, fmt.Errorf("nothing says what %q weighs", t.Lifts)
 	}
@@ -113,8 +114,37 @@ func (s *stager) stage(t *tasks.Task, joined []Join) (Stage, error) {
 	} else {
 		sum.Figure = origin.Worked("mass of "+t.Lifts+" with what hangs on it", sum.Mass, "kg", "sum of what is joined by then", from...)
 	}
-	st.Total, st.Load = sum, sum.Load(t.Lifts)
+	st.Total, st.Load = sum, s.sized(sum.Load(t.Lifts), t, st.Pieces)
 	return s.allowed(t, st), nil
+}
+
+// nothing says why a name takes up nothing: it is no assembly, or each of its parts is brought on by a joining
+// task that names it by itself.
+func (s *stager) nothing(name string) error {
+	for _, a := range s.job.Assemblies {
+		if a.Name != name || len(a.Parts) == 0 {
+			continue
+		}
+		first := a.Name + "/" + a.Parts[0].Name
+		return &quantity.Error{Problem: fmt.Sprintf("before its parts are joined %q is nothing: `joins` names each of them by itself", name),
+			Hint: fmt.Sprintf("name the part that is lifted, `lifts: %s`, or the whole among what is joined, `joins: [%s, %s/PART]`, or put the joining before the lift", first, a.Name, a.Name)}
+	}
+	return fmt.Errorf("there is no assembly %q", name)
+}
+
+// sized gives a load the `size` of its assembly where that is larger than what its parts span, as parts
+// without positions do: for the sail and for the room to keep clear. It holds for the whole assembly alone.
+func (s *stager) sized(l lift.Load, t *tasks.Task, pieces []string) lift.Load {
+	face := func(x, y, z float64) float64 { return math.Max(x*y, math.Max(x*z, y*z)) }
+	for _, a := range s.job.Assemblies {
+		if a.Name != t.Lifts || face(a.Size[0], a.Size[1], a.Size[2]) <= face(l.Length, l.Width, l.Height) {
+			continue
+		}
+		if _, all := s.of(a, pieces); len(all) == max(1, len(a.Parts)) {
+			l.Length, l.Width, l.Height = a.Size[0], a.Size[1], a.Size[2]
+		}
+	}
+	return l
 }
 
 // allowed puts the task's own factors on a stage's load.

@@ -24,6 +24,7 @@ func weatherOf(span hours.Span, of func(hour int) site.Weather) *site.Series {
 		w.RH = coat.RelativeHumidity(w.Air, w.Dew)
 		s.Air, s.Steel, s.Dew, s.RH = append(s.Air, w.Air), append(s.Steel, w.Steel), append(s.Dew, w.Dew), append(s.RH, w.RH)
 		s.Wind, s.Gust, s.Wet, s.Basis = append(s.Wind, w.Wind), append(s.Gust, w.Gust), append(s.Wet, w.Wet), append(s.Basis, "test")
+		s.Usual = append(s.Usual, w.Usual)
 	}
 	return s
 }

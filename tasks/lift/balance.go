@@ -83,7 +83,11 @@ func (s *stowing) warn(trips []Trip) []string {
 		}
 	}
 	if loose > 0 {
-		out = append(out, fmt.Sprintf("%d things have no sizes: their room is not checked", loose))
+		words := "%d things have no sizes: their room is not checked"
+		if loose == 1 {
+			words = "%d thing has no sizes: its room is not checked"
+		}
+		out = append(out, fmt.Sprintf(words, loose))
 	}
 	if !s.strict {
 		out = append(out, "some things wanted early travel on a later trip: no split in the order of use was found")

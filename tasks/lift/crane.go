@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"math"
 	"sort"
+	"strings"
 
 	"sailby/tasks/origin"
 )
@@ -145,11 +146,23 @@ func (c CraneLift) ask() []string {
 	return out
 }
 
-// nearest names the radius that would do, or the crane.
+// nearest names what would do, for everything that fails.
 func (c CraneLift) nearest(rows []ChartRow, need origin.Figure, r Result) string {
-	switch r.Unit {
+	failed := []Held{{OK: r.OK, Figure: r.Figure, Limit: r.Limit}}
+	var out []string
+	for _, f := range append(failed, r.Others...) {
+		if !f.OK {
+			out = append(out, c.way(rows, need, f))
+		}
+	}
+	return strings.Join(out, "; and ")
+}
+
+// way names what would do for one number that fails.
+func (c CraneLift) way(rows []ChartRow, need origin.Figure, f Held) string {
+	switch f.Figure.Unit {
 	case "mm":
-		return fmt.Sprintf("slings %.0f mm shorter, a shorter radius or a longer boom", math.Ceil(r.Need-r.Have))
+		return fmt.Sprintf("slings %.0f mm shorter, a shorter radius or a longer boom", math.Ceil(f.Figure.Value-f.Limit.Value))
 	case "kN/m2":
 		return fmt.Sprintf("pads of %.2f m2", math.Ceil(c.PadLoad*Gravity/10/c.Ground)/100)
 	}

@@ -35,10 +35,17 @@ func Exclusion(height, length float64) (origin.Figure, error) {
 	if err := checkAll(check{"the height of the lift", height, 0, 1e6, "mm"}, check{"the load's length", length, 0, maxLength, "mm"}); err != nil {
 		return origin.Figure{}, err
 	}
+	var from []origin.Figure // what is not known is not shown as given
+	if height > 0 {
+		from = append(from, given("height", height, "mm"))
+	}
+	if length > 0 {
+		from = append(from, given("length", length, "mm"))
+	}
 	third := origin.Recalled("share of the height", 1.0/3, "", "lift planners' habit")
 	least := origin.Recalled("at least", 3000, "mm", "lift planners' habit")
 	return origin.Worked("keep clear by", math.Max(height*third.Value+length, least.Value), "mm", "height / 3 + length, at least 3 m",
-		given("height", height, "mm"), given("length", length, "mm"), third, least), nil
+		append(from, third, least)...), nil
 }
 
 // Crew names the tickets that a move needs, one person each; nobody is below in any case.

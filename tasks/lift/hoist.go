@@ -3,6 +3,7 @@ package lift
 import (
 	"fmt"
 	"math"
+	"strings"
 
 	"sailby/tasks/origin"
 )
@@ -117,13 +118,24 @@ func (h Hoist) effort() origin.Figure {
 // onAnchor gives what the anchor carries: load, hoist and hand effort.
 func (h Hoist) onAnchor(load origin.Figure) origin.Figure {
 	effort := h.effort()
-	return origin.Worked("load on the anchor", load.Value+h.Own+effort.Value, "kg", "load + hoist + hand effort", load, given("hoist", h.Own, "kg"), effort)
+	return origin.Worked("load on the anchor", load.Value+h.Own+effort.Value, "kg", "load + hoist + hand effort", h.sum(load, effort)...)
+}
+
+// sum lists what hangs on the anchor; a hoist whose own mass is not known is not shown as given.
+func (h Hoist) sum(load, effort origin.Figure) []origin.Figure {
+	if h.Own == 0 {
+		return []origin.Figure{load, effort}
+	}
+	return []origin.Figure{load, given("hoist", h.Own, "kg"), effort}
 }
 
 func (h Hoist) warn(load float64, anchor origin.Figure) []string {
 	var out []string
 	if h.Anchor == 0 {
 		out = append(out, fmt.Sprintf("what the hoist hangs from is not rated: it must carry %.0f kg", math.Ceil(anchor.Value)))
+	}
+	if h.Own == 0 && h.By != ByGantry {
+		out = append(out, "the hoist's own mass is not given: what it hangs from carries that as well")
 	}
 	share := 0.05
 	if h.Marine {
@@ -144,29 +156,41 @@ func (h Hoist) warn(load float64, anchor origin.Figure) []string {
 	return append(out, "trial lift of about 100 mm: wait and watch for brake creep")
 }
 
-// nearest names the gear that would do.
+// nearest names the gear that would do, for everything that fails.
 func (h Hoist) nearest(load, anchor origin.Figure) string {
 	series := chainRatings
 	if h.By == ByLeverHoist {
 		series = leverRatings
 	}
-	switch {
-	case load.Value > h.WLL*(1+rounding):
-		return fmt.Sprintf("%s of %.0f kg", h.By, nextRating(series, load.Value))
-	case h.Anchor > 0 && anchor.Value > h.Anchor:
-		return fmt.Sprintf("an anchor for %.0f kg, or a second one to share it", math.Ceil(anchor.Value))
-	case h.By != ByLeverHoist && h.Pull > maxSidePull:
-		return "the hoist straight above the lifting point, or a second hoist to drift it"
+	var out []string
+	if load.Value > h.WLL*(1+rounding) {
+		out = append(out, fmt.Sprintf("%s of %.0f kg", h.By, nextRating(series, load.Value)))
 	}
-	return fmt.Sprintf("%.0f mm less between lifting point and anchor: shorter slings, a shorter hoist or a higher anchor",
-		math.Ceil(h.Lug+h.Raise+h.Rigging+h.Closed-h.Over))
+	if h.Anchor > 0 && anchor.Value > h.Anchor*(1+rounding) {
+		out = append(out, fmt.Sprintf("an anchor for %.0f kg, or a second one to share it", math.Ceil(anchor.Value)))
+	}
+	if h.By != ByLeverHoist && h.Pull > maxSidePull {
+		out = append(out, "the hoist straight above the lifting point, or a second hoist to drift it")
+	}
+	if short := h.Lug + h.Raise + h.Rigging + h.Closed - h.Over; h.Closed > 0 && h.Over > 0 && short > h.Over*rounding {
+		out = append(out, fmt.Sprintf("%.0f mm less between lifting point and anchor: shorter slings, a shorter hoist or a higher anchor", math.Ceil(short)))
+	}
+	return strings.Join(out, "; and ")
 }
 
 // Jacks judges a load on n jacks of one rating: of four under a rigid load two may take all, so
-// each of two or more is sized for half.
+// each of two or more is sized for half. That holds for two only if the centre of gravity is midway between
+// them, which is not known here, and a warning says so: JacksAt knows it.
 //
 // Errors: no jack, numbers out of range.
-func Jacks(l Load, n int, wll float64) (Result, error) {
+func Jacks(l Load, n int, wll float64) (Result, error) { return JacksAt(l, n, wll, 0, 0) }
+
+// JacksAt is Jacks with the centre of gravity at cg, mm from the first jack (or pair) along the span, mm, to the
+// other: by statics the nearer side carries the greater share, max(cg, span-cg) / span. Of two jacks one takes
+// that share; of three or more one may take all that is on its side. A span of 0 is not known.
+//
+// Errors: no jack, one jack with a span, a centre of gravity outside the span, numbers out of range.
+func JacksAt(l Load, n int, wll, span, cg float64) (Result, error) {
 	if err := l.valid(); err != nil {
 		return Result{}, err
 	}
@@ -177,9 +201,22 @@ func Jacks(l Load, n int, wll float64) (Result, error) {
 	if n == 1 {
 		share = origin.Figure{Name: "share of one jack", Value: 1, Origin: origin.Origin{Kind: origin.Formula, Source: "one jack"}}
 	}
+	if span > 0 {
+		if n == 1 {
+			return Result{}, fault("leave the span out, or give two jacks", "one jack has no span")
+		}
+		if err := checkAll(check{"the span of the jacks", span, tiny, maxLength, "mm"}, check{"the centre of gravity along the span", cg, 0, span, "mm"}); err != nil {
+			return Result{}, err
+		}
+		share = origin.Worked("share of one jack", math.Max(cg, span-cg)/span, "", "greater distance of the centre of gravity / span: the nearer side carries it, by statics",
+			given("span of the jacks", span, "mm"), given("centre of gravity from the first", cg, "mm"))
+	}
 	hook := l.Hook()
 	r := worst(judge{"a jack", origin.Worked("load on a jack", hook.Value*share.Value, "kg", "load x share", hook, share), given("WLL of a jack", wll, "kg")})
 	r.Warnings = []string{"a jack is never the sole support: pack as you go"}
+	if n > 1 && span == 0 {
+		r.Warnings = append(r.Warnings, "a jack is sized for half: the centre of gravity must be midway; off the middle the nearer side carries more than half")
+	}
 	if !r.OK {
 		r.Nearest = fmt.Sprintf("jacks of %.0f kg each", nextRating([]float64{2000, 3000, 5000, 10000, 20000}, r.Need))
 	}

@@ -33,6 +33,7 @@ type Result struct {
 	Figure   origin.Figure // Need, and what it was made from
 	Limit    origin.Figure // Have, and what it was made from
 	Warnings []string      // what to look at or ask though the number passes
+	Others   []Held        // what else was held against a limit, the nearest to failing first
 }
 
 // Load is one thing to move.
@@ -180,14 +181,32 @@ func worst(list ...judge) Result {
 	sort.SliceStable(list, func(i, k int) bool { return list[i].ratio() > list[k].ratio() })
 	j := list[0]
 	r := Result{
-		OK:   j.need.Value <= j.have.Value*(1+rounding),
+		OK:   j.ok(),
 		Need: j.need.Value, Have: j.have.Value, Unit: j.need.Unit,
 		Figure: j.need, Limit: j.have,
 	}
+	r.Reason = j.words()
+	for _, other := range list[1:] {
+		r.Others = append(r.Others, Held{What: other.what, Reason: other.words(), OK: other.ok(), Figure: other.need, Limit: other.have})
+	}
+	return r
+}
+
+func (j judge) ok() bool { return j.need.Value <= j.have.Value*(1+rounding) }
+
+// words writes a check out: what, need, limit.
+func (j judge) words() string {
 	verb := "is within"
-	if !r.OK {
+	if !j.ok() {
 		verb = "exceeds"
 	}
-	r.Reason = fmt.Sprintf("%s: %s %s %s (%s)", j.what, j.need.Amount(), verb, j.have.Amount(), j.have.Name)
-	return r
+	return fmt.Sprintf("%s: %s %s %s (%s)", j.what, j.need.Amount(), verb, j.have.Amount(), j.have.Name)
+}
+
+// Held is one more number that was held against its limit beside the one that comes nearest to failing.
+type Held struct {
+	What          string // "what it hangs from"
+	Reason        string // written out
+	OK            bool
+	Figure, Limit origin.Figure
 }

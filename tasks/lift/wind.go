@@ -85,6 +85,9 @@ func Gust(l Load, w Wind) (WindResult, error) {
 		out.Reason = fmt.Sprintf("stop above a gust of %.1f m/s at the tip", math.Floor(have.Value*10)/10)
 	}
 	out.Warnings = []string{"name who measures the gust, with what, and at what height"}
+	if factor < 1 && w.May == 0 {
+		out.Warnings = append(out.Warnings, "the gust is brought down for the load's sail by crane makers' rule (1.2 m2 a tonne, drag counted), which is strict for light loads: whoever plans the lift may state another, no higher than the gear's")
+	}
 	if factor < 1 {
 		out.Warnings = append(out.Warnings, "large for its weight: tag lines, and nobody between it and a wall")
 	}

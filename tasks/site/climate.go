@@ -115,7 +115,7 @@ func (c Climate) Hourly(from, to Minute, lat, lon float64) (Outlook, error) {
 			a := dayAir(days, i, float64(m)+30) + air
 			w := Weather{Air: a, Steel: steel.hour(a, sunAltitude(lat, lon, float64(m)+30)), Dew: d.dew,
 				Wind: d.wind * wind,
-				Gust: d.wind * wind * gustFactor, Wet: evenly(min(max(i-first, 0), n-1), wet, n), Basis: basis}
+				Gust: d.wind * wind * gustFactor, Wet: evenly(min(max(i-first, 0), n-1), wet, n), Basis: basis, Usual: true}
 			if m >= start {
 				s.add(w)
 			}

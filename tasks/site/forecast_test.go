@@ -5,6 +5,7 @@ import (
 	"math"
 	"strings"
 	"testing"
+	"time"
 )
 
 const forecast = `# zone: UTC+1
@@ -150,4 +151,31 @@ func FuzzReadForecast(f *testing.F) {
 			}
 		}
 	})
+}
+
+// Wind is usual, worked out from normals, until a forecast tells wind or gusts; air and dew alone leave it so.
+func TestUsualWind(t *testing.T) {
+	out, err := Climate{Months: map[time.Month]Normal{time.April: {AirLeast: 4, AirGreatest: 11, Dew: 4, Wind: 6}}}.Hourly(0, 24*60, 57.6, -7.2)
+	if err == nil {
+		t.Fatal("January 1970 has no normals")
+	}
+	start := Minute(time.Date(2027, time.April, 13, 0, 0, 0, 0, time.UTC).Unix() / 60)
+	out, err = Climate{Months: map[time.Month]Normal{time.March: {AirLeast: 3, AirGreatest: 9, Dew: 3, Wind: 6}, time.April: {AirLeast: 4, AirGreatest: 11, Dew: 4, Wind: 6},
+		time.May: {AirLeast: 6, AirGreatest: 13, Dew: 5, Wind: 6}}}.Hourly(start, start+24*60, 57.6, -7.2)
+	if err != nil {
+		t.Fatal(err)
+	}
+	f, err := ReadForecast("f.csv", strings.NewReader("# zone: UTC\ntime,air C,dew C,wind m/s,gust m/s\n2027-04-13 06:00,8,6,4,\n2027-04-13 07:00,8,6,4,\n2027-04-13 12:00,8,6,,\n2027-04-13 18:00,8,6,,9\n"))
+	if err != nil {
+		t.Fatal(err)
+	}
+	s := out.Poor.With(f)
+	for h, usual := range map[Minute]bool{2: true, 6: false, 12: true, 18: false} {
+		if w, ok := s.At(start + h*60); !ok || w.Usual != usual {
+			t.Errorf("%d:00: %+v", h, w)
+		}
+	}
+	if w, _ := (Series{Start: 0, Air: []float64{1}, Steel: []float64{1}, Dew: []float64{1}, RH: []float64{1}, Wind: []float64{1}, Gust: []float64{1}, Wet: []bool{false}, Basis: []string{"b"}}).At(0); w.Usual {
+		t.Error("a series made by hand is usual")
+	}
 }

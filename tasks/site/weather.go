@@ -17,6 +17,7 @@ type Weather struct {
 	Gust  float64 // m/s
 	Wet   bool    // rain, snow, fog or spray: work that must stay dry is closed
 	Basis string  // where the hour comes from: "climate, poor day (one in 5)", "forecast x.csv"
+	Usual bool    // wind and gust are worked out from monthly normals: nothing foreseen or measured tells them
 }
 
 // Series is the weather hour by hour: element i holds from Start+60i for one hour. All slices are
@@ -26,6 +27,7 @@ type Series struct {
 	Air, Steel, Dew, RH, Wind, Gust []float64 // as in Weather
 	Wet                             []bool
 	Basis                           []string
+	Usual                           []bool // may be left out: no hour's wind is worked out from normals
 }
 
 func (s Series) hours() int {
@@ -41,7 +43,8 @@ func (s Series) At(m Minute) (w Weather, ok bool) {
 		return Weather{}, false
 	}
 	i := int((m - s.Start) / 60)
-	return Weather{s.Air[i], s.Steel[i], s.Dew[i], s.RH[i], s.Wind[i], s.Gust[i], s.Wet[i], s.Basis[i]}, true
+	usual := i < len(s.Usual) && s.Usual[i]
+	return Weather{s.Air[i], s.Steel[i], s.Dew[i], s.RH[i], s.Wind[i], s.Gust[i], s.Wet[i], s.Basis[i], usual}, true
 }
 
 // Figures gives the numbers of the hour that m lies in, for `why`; none outside the series.
@@ -68,6 +71,7 @@ func (s *Series) add(w Weather) {
 	s.Air, s.Steel, s.Dew, s.RH = append(s.Air, w.Air), append(s.Steel, w.Steel), append(s.Dew, w.Dew), append(s.RH, w.RH)
 	s.Wind, s.Gust, s.Wet, s.Basis = append(s.Wind, w.Wind), append(s.Gust, w.Gust), append(s.Wet,
 		w.Wet), append(s.Basis, w.Basis)
+	s.Usual = append(s.Usual, w.Usual)
 }
 
 // With gives a copy in which the forecast or the readings stand in place of every hour that they cover.
@@ -98,10 +102,10 @@ func (o observation) over(w Weather, f *Forecast) Weather {
 		w.Steel = o.steel
 	}
 	if !math.IsNaN(o.wind) {
-		w.Wind, w.Gust = o.wind, o.wind*factor
+		w.Wind, w.Gust, w.Usual = o.wind, o.wind*factor, false
 	}
 	if !math.IsNaN(o.gust) {
-		w.Gust = max(o.gust, w.Wind)
+		w.Gust, w.Usual = max(o.gust, w.Wind), false
 	}
 	if o.wetKnown {
 		w.Wet = o.wet
