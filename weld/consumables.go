@@ -19,6 +19,7 @@ type Consumable struct {
 	Packed string  // what Pieces are: "electrodes", "spools of 15 kg", "bottles of 10 m3"
 	Each   float64 // how much of Unit one of the Pieces holds; 0 where it does not apply
 	Why    origin.Figure
+	Count  origin.Figure // electrodes without Spare, of one seam; else it has no name
 }
 
 const (
@@ -27,6 +28,7 @@ const (
 	bottleGas  = 10000.0 // L in a 50 L bottle at 200 bar (common practice)
 	siteGas    = 1.25    // more gas on site: 20 to 30 % (from memory)
 	coating    = 1.6     // electrode over its core by mass, from counts a kilogram (from memory)
+	thinCoat   = 1.5     // the same to 2.5 mm
 	discMetres = 20.0    // metres of run that a grinding disc cleans (house judgement)
 )
 
@@ -39,9 +41,13 @@ func (e *seamWork) bought() origin.Figure {
 // electrodes is the count of electrodes: filler over the mass of one, core and coating.
 func (e *seamWork) electrodes() origin.Figure {
 	length, _ := e.proc.electrode(e.size.Value)
-	one := math.Pi * e.size.Value * e.size.Value / 4 * length.Value * steelDensity / 1e9 * coating
+	over := coating
+	if e.size.Value <= 2.5 {
+		over = thinCoat
+	}
+	one := math.Pi * e.size.Value * e.size.Value / 4 * length.Value * steelDensity / 1e9 * over
 	each := origin.Worked("mass of an electrode", one, "kg", "pi x electrode^2 / 4 x electrode length x 7850 / 1000000000 x coating",
-		renamed(e.size, "electrode"), length, origin.Recalled("coating", coating, "", "electrode over its core by mass"))
+		renamed(e.size, "electrode"), length, origin.Recalled("coating", over, "", "electrode over its core by mass"))
 	b := e.bought()
 	return origin.Worked("electrodes", math.Ceil(b.Value/one), "", "ceil(filler bought / mass of an electrode)", b, each)
 }
@@ -72,7 +78,7 @@ func (e *seamWork) consumables(c Circumstances) []Consumable {
 	switch {
 	case e.data.stick:
 		n := e.electrodes()
-		list = append(list, Consumable{Name: "electrodes " + dia + " mm", Amount: b.Value, Unit: "kg", Packed: "electrodes", Pieces: int(n.Value), Why: b})
+		list = append(list, Consumable{Name: "electrodes " + dia + " mm", Amount: b.Value, Unit: "kg", Packed: "electrodes", Pieces: int(n.Value), Why: b, Count: n})
 	case e.data.number == 141:
 		list = append(list, Consumable{Name: "filler rods " + dia + " mm", Amount: b.Value, Unit: "kg", Why: b})
 	default:
@@ -122,6 +128,7 @@ func gather(parts []*seamWork, c Circumstances) []Consumable {
 			l := &list[i]
 			l.Amount += n.Amount
 			l.Pieces += n.Pieces
+			l.Count = origin.Figure{}
 			if l.Why.Name != "all seams" {
 				l.Why = origin.Figure{Name: "all seams", Unit: l.Unit, Origin: origin.Origin{Kind: origin.Formula, Source: "seam 1"}, From: []origin.Figure{renamed(l.Why, "seam 1")}}
 			}

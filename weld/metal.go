@@ -56,8 +56,8 @@ func (e *seamWork) deposit(c Circumstances) {
 	if t := math.Min(j.Thickness, j.Thickness2); j.Type.HasLegs() && e.seam.Joint.Thickness > 0 && math.Max(j.Leg, j.Leg2) > mostLeg*t {
 		e.warnf("a leg of %.3g mm is a lot on %.3g mm: check the drawing", math.Max(j.Leg, j.Leg2), t)
 	}
-	if strings.HasPrefix(c.Execution, "AWS") && j.Type == Fillet && e.seam.Joint.Thickness > 0 && j.Leg < MinFillet(math.Max(j.Thickness, j.Thickness2))-0.05 {
-		e.warnf("a leg of %.3g mm is below the %.0f mm that AWS D1.1:2020 wants on %.3g mm", j.Leg, MinFillet(math.Max(j.Thickness, j.Thickness2)), math.Max(j.Thickness, j.Thickness2))
+	if strings.HasPrefix(c.Execution, "AWS") && j.Type == Fillet && e.seam.Joint.Thickness > 0 && j.Leg < minFillet(math.Max(j.Thickness, j.Thickness2))-0.05 {
+		e.warnf("a leg of %.3g mm is below the %.0f mm that AWS D1.1:2020 wants on %.3g mm", j.Leg, minFillet(math.Max(j.Thickness, j.Thickness2)), math.Max(j.Thickness, j.Thickness2))
 	}
 }
 

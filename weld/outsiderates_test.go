@@ -112,7 +112,7 @@ func outsideRuns(t *testing.T) []outside {
 	flat, _ := Process(121).Limits(PA)
 	rows = append(rows, outside{"a flat fillet of submerged arc has no limit", aws, seen, true, map[bool]float64{true: 1}[math.IsInf(flat.Fillet, 1)], 1, 0, exact})
 	for _, c := range [][2]float64{{6, 1.0 / 8}, {12, 3.0 / 16}, {20, 1.0 / 4}, {25, 5.0 / 16}} {
-		rows = append(rows, outside{fmt.Sprintf("least fillet on %v mm", c[0]), "AWS D1.1 minimum fillet sizes, inches", seen, true, MinFillet(c[0]), c[1] * inch, 0.4, "the metric column is rounded to whole millimetres"})
+		rows = append(rows, outside{fmt.Sprintf("least fillet on %v mm", c[0]), "AWS D1.1 minimum fillet sizes, inches", seen, true, minFillet(c[0]), c[1] * inch, 0.4, "the metric column is rounded to whole millimetres"})
 	}
 	runs := func(p Process, leg float64) float64 {
 		return float64(mustWork(t, Circumstances{}, Seam{Joint: Joint{Type: Fillet, Leg: leg, Length: 1000}, Position: PB, Procedure: &Procedure{Process: p}}).Passes)

@@ -243,9 +243,9 @@ func heightOf(j Joint, area float64) float64 {
 	return (-g + math.Sqrt(g*g+4*t*area)) / (2 * t)
 }
 
-// MinFillet gives the smallest leg that AWS D1.1:2020 allows for a thickness of base metal in mm
+// minFillet gives the smallest leg that AWS D1.1:2020 allows for a thickness of base metal in mm
 // (minimum fillet size table, single run): 3 to 6 mm thick, 5 to 12, 6 to 20, 8 above.
-func MinFillet(thickness float64) float64 {
+func minFillet(thickness float64) float64 {
 	switch {
 	case thickness <= 6:
 		return 3

@@ -138,6 +138,9 @@ func (e Estimate) Steps() []origin.Figure {
 	all := []origin.Figure{w.Metal, w.Passes, w.Arc, e.Hours, w.SetUp, w.SafeStop, w.HeatInput, w.CE, w.CET, w.Combined, w.Scale, w.Preheat, w.Soak, w.T85, w.Cooling, w.BeforeNDT, w.Power, w.Generator, w.Drop, w.SupplyDrop}
 	for _, c := range e.Consumables {
 		all = append(all, renamed(c.Why, c.Name))
+		if c.Count.Name != "" {
+			all = append(all, renamed(c.Count, c.Name+", count without spare"))
+		}
 	}
 	var steps []origin.Figure
 	for _, f := range all {

@@ -179,11 +179,15 @@ func jointTold(e weld.Estimate, in jointInput) (head []string, steps []origin.Fi
 		if w.MaxWind > 0 {
 			steps = append(steps, w.Why)
 		}
-		steps = append(steps, origin.Published("least air temperature", w.MinAir, "C", "AWS D1.1: no welding below 0 F, or on wet steel"))
+		if air < coldAir {
+			steps = append(steps, origin.Published("least air temperature", w.MinAir, "C", "AWS D1.1: no welding below 0 F, or on wet steel"))
+		}
 		notes = append(notes, w.Stops(0, in.c.Ambient, false)...)
 	}
 	return head, steps, append(e.Warnings, notes...)
 }
+
+const coldAir = 5.0 // C below which the least air temperature is worth a line
 
 // welded says how much is welded: metres of seam, or how many plugs or slots.
 func welded(j weld.Joint, metres float64) string {
