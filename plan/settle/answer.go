@@ -44,7 +44,16 @@ func answer(ctx context.Context, job *tasks.Job, b expand.Basis, o Options, expl
 	if err != nil {
 		return nil, err
 	}
-	return mended(ctx, job, first, o, explain)
+	a, err := mended(ctx, job, first, o, explain)
+	if err != nil || a.Verdict != plan.CannotFit || !a.Work.Shared {
+		return a, err
+	}
+	if b.Unbound, b.Washed = true, true; !cannot(ctx, job, b, o) { // two starts in one tide may need but one wash (R26)
+		open := *a
+		open.Verdict, open.Proof = plan.Unsettled, nil
+		return &open, nil
+	}
+	return a, nil
 }
 
 // alone settles one basis as it is. explain adds leeway and what sets every start.

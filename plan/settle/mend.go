@@ -127,8 +127,9 @@ func choices(list []expand.Rescue) (out [][]string) {
 	return out
 }
 
-// impossible says whether a basis is proved impossible without a search, longest waits that may be mended left out.
+// impossible says whether a basis is proved impossible without a search, longest waits that may be mended and washes
+// that may be shared left out.
 func impossible(ctx context.Context, job *tasks.Job, b expand.Basis, o Options) bool {
-	b.Unbound = true
+	b.Unbound, b.Washed = true, true
 	return cannot(ctx, job, b, o)
 }

@@ -1,6 +1,7 @@
 package settle
 
 import (
+	"context"
 	"fmt"
 	"math/rand/v2"
 	"strings"
@@ -92,5 +93,54 @@ tasks:
 	}
 	if opened < 30 || shut < 60 {
 		t.Errorf("%d open and %d closed: the weather tries too little", opened, shut)
+	}
+}
+
+// Two welds of an hour, each set up in 20 min, at a foot that is dry from 08:00 on, once in the window: with a wash of 15 min each they
+// take 3 h 10 min, with one that they share 2 h 55 min, without any 2 h 40 min. Where it is dry for 3 h, that they cannot fit is not
+// proved by the second wash; where it is for 2 h 35 min, it is proved without any. One weld alone pays for its own: 1 h 35 min do not
+// fit into 1 h 30 min (R26).
+func TestSharedWashProvesNothing(t *testing.T) {
+	job := func(closes, tasks string) string {
+		return `job: Wash
+zone: UTC
+places:
+  home: {open: "Mon-Fri 08:00-16:00"}
+  slip:
+    open: daily 07:00-18:00
+    face factor: 1
+    fire watch: 0 min
+    workfaces: {foot: {between tides: yes, reach: [2027-06-07 08:00-` + closes + `]}}
+window: {place: slip, opens: 2027-06-07 07:00, closes: 2027-06-07 20:00}
+people:
+  Bo: {tickets: [{weld: 111, positions: all, joints: fillet}]}
+  Cy: {}
+procedures: {stick: {process: 111}}
+tasks:
+` + tasks
+	}
+	weld := func(name, hours string) string {
+		return "  " + name + ": {kind: weld, at: slip/foot, hours: " + hours + ", in one go: yes, joints: [{name: W1, fillet: {leg: 5 mm}, length: 0.5 m, position: PB, procedure: stick}]}\n"
+	}
+	for _, c := range []struct {
+		what, closes, tasks string
+		want                plan.Verdict
+	}{
+		{"each its own wash", "11:20", weld("a", "1 h") + weld("b", "1 h"), plan.Fits},
+		{"only by sharing one", "11:00", weld("a", "1 h") + weld("b", "1 h"), plan.Unsettled},
+		{"not even without", "10:35", weld("a", "1 h") + weld("b", "1 h"), plan.CannotFit},
+		{"one alone shares with none", "09:30", weld("a", "1 h"), plan.CannotFit},
+	} {
+		read, err := jobfile.ReadBytes("job.yaml", []byte(job(c.closes, c.tasks)), nil)
+		if err != nil {
+			t.Fatal(c.what, err)
+		}
+		rep, err := Ask(context.Background(), read, Options{Ticks: 20_000, Only: true})
+		if err != nil {
+			t.Fatal(c.what, err)
+		}
+		if rep.Likely.Verdict != c.want || c.want != plan.CannotFit && rep.Likely.Proof != nil {
+			t.Errorf("%s: %s, want %s", c.what, rep.Likely.Verdict, c.want)
+		}
 	}
 }

@@ -23,10 +23,29 @@ func (x *expander) washed(t *tasks.Task, s *Step) float64 {
 	if x.neverCovered(t.Face) {
 		return 0
 	}
+	if f.Value > 0 && x.sharesWash(t) {
+		x.w.Shared = true
+		if x.w.Basis.Washed {
+			return 0
+		}
+	}
 	if f.Value > 0 {
 		s.Estimate.Facts = append(s.Estimate.Facts, f)
 	}
 	return f.Value
+}
+
+// sharesWash says whether another weld or coat at the workface, or another coat of the task, could start in the same tide.
+func (x *expander) sharesWash(t *tasks.Task) bool {
+	if t.Kind == tasks.Coat && (len(t.Coats) > 1 || t.Stripe.Pos.Given()) {
+		return true
+	}
+	for _, o := range x.w.Job.Tasks {
+		if o != t && o.Face == t.Face && (o.Kind == tasks.Weld || o.Kind == tasks.Coat) && !x.absent[o] && !o.SetUp.Pos.Given() {
+			return true
+		}
+	}
+	return false
 }
 
 // neverCovered says whether the tide table shows no water, up to the first that comes after the window, that covers a

@@ -32,6 +32,7 @@ type Basis struct {
 
 	Rescue  []string // longest waits that are mended, by Rescue.Key
 	Unbound bool     // longest waits that may be mended do not hold and are not mended: for proofs, too kind to the job
+	Washed  bool     // starts that may share one wash do not pay for it: for proofs, too kind to the job (R26)
 }
 
 // Work is a job written out for one basis: what plan/problem compiles and what plan/check
@@ -50,6 +51,7 @@ type Work struct {
 	Presence  map[string][]Stay       // by person: where they are, disjoint, in order; stays at home places have Place nil
 	Travel    map[string][]hours.Span // by person: legs of the trip, which count as duty
 	Deadlines []Deadline
+	Shared    bool         // starts pay for a wash that they may share with others in the same tide (R26)
 	Notes     []tasks.Note // what is worth saying that is no fault
 	Rescues   []Rescue     // longest waits that may be mended, in file order
 }
