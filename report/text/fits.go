@@ -3,6 +3,8 @@ package text
 import (
 	"fmt"
 	"io"
+	"sailby/tasks"
+	"slices"
 	"strings"
 
 	"sailby/plan"
@@ -184,7 +186,8 @@ func even(low bool) string {
 
 func (p *page) notes(r *plan.Report) {
 	said := append(packlist.Make(r.Likely).Verdict(), agenda.NoMeals(r.Likely)...)
-	if len(r.Job.Notes)+len(said) == 0 {
+	winds := windsOf(r)
+	if len(r.Job.Notes)+len(said)+len(winds) == 0 {
 		return
 	}
 	p.gap()
@@ -192,7 +195,15 @@ func (p *page) notes(r *plan.Report) {
 	for _, line := range said {
 		p.para("  - ", line)
 	}
-	for _, n := range r.Job.Notes {
+	for _, n := range append(winds, r.Job.Notes...) {
 		p.para("  - ", n.Text+inFile(agenda.At(n.Pos)))
 	}
+}
+
+// windsOf gives what is to be said beside the verdict of lifts whose gusts nobody has forecast.
+func windsOf(r *plan.Report) []tasks.Note {
+	if r.Likely == nil || r.Likely.Work == nil {
+		return nil
+	}
+	return slices.Clone(r.Likely.Work.Winds)
 }

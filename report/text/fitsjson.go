@@ -80,7 +80,7 @@ func FitsJSON(w io.Writer, r *plan.Report) error {
 	for _, line := range append(packlist.Make(r.Likely).Verdict(), agenda.NoMeals(r.Likely)...) {
 		f.Notes = append(f.Notes, noteForm{Text: clean.Line(line)})
 	}
-	for _, n := range r.Job.Notes {
+	for _, n := range append(windsOf(r), r.Job.Notes...) {
 		f.Notes = append(f.Notes, noteForm{clean.Line(n.Text), at(n.Pos)})
 	}
 	return writeJSON(w, f)

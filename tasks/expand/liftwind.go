@@ -89,8 +89,10 @@ func (x *expander) windNotes(add func(tasks.Pos, string, ...any)) {
 			if least := fmt.Sprintf("%.0f", 100*low); least != share {
 				share = least + " to " + share
 			}
-			add(s.Task.Pos, "%s: lifted in gusts up to %.1f m/s, %s; no forecast tells its hours yet, and in %s the usual gusts there pass that for %s %% of the time. The plan does not wait for it: keep other hours in hand, and give a forecast when there is one%s",
+			text := fmt.Sprintf("%s: lifted in gusts up to %.1f m/s, %s; no forecast tells its hours yet, and in %s the usual gusts there pass that for %s %% of the time. The plan does not wait for it: keep other hours in hand, and give a forecast when there is one%s",
 				s.Task.Label(), limit, by, month, share, way)
+			add(s.Task.Pos, "%s", text)
+			x.w.Winds = append(x.w.Winds, tasks.Note{Pos: s.Task.Pos, Text: text})
 		}
 	}
 }

@@ -119,6 +119,9 @@ func TestUsualWindClosesNoLift(t *testing.T) {
 	for _, n := range again.Notes {
 		told += n.Text + "\n"
 	}
+	if len(again.Winds) != 1 || !strings.Contains(again.Winds[0].Text, want) {
+		t.Errorf("beside the verdict: %v", again.Winds)
+	}
 	if !strings.Contains(told, want) || !strings.Contains(told, "no forecast tells its hours yet") {
 		t.Errorf("want %q in %s", want, told)
 	}

@@ -53,6 +53,7 @@ type Work struct {
 	Deadlines []Deadline
 	Shared    bool         // starts pay for a wash that they may share with others in the same tide (R26)
 	Notes     []tasks.Note // what is worth saying that is no fault
+	Winds     []tasks.Note // of those: lifts that no forecast tells the gusts of, beside the verdict (R25)
 	Rescues   []Rescue     // longest waits that may be mended, in file order
 }
 

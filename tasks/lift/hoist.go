@@ -76,7 +76,7 @@ func Hang(l Load, h Hoist) (Result, error) {
 		list = append(list, judge{"side pull", given("pull from the vertical", h.Pull, "deg"),
 			origin.House("straight up within", maxSidePull, "deg", "no hoist is made for side pull")})
 	}
-	if h.Closed > 0 && h.Over > 0 {
+	if h.Closed > 0 && h.Over > 0 && h.Lug+h.Rigging > 0 {
 		need := origin.Worked("height that it takes", h.Lug+h.Raise+h.Rigging+h.Closed, "mm", "lifting point + raise + slings + closed hoist",
 			given("lifting point", h.Lug, "mm"), given("raise", h.Raise, "mm"), given("slings", h.Rigging, "mm"), given("closed hoist", h.Closed, "mm"))
 		list = append(list, judge{"headroom", need, given("height of the anchor", h.Over, "mm")})
@@ -144,6 +144,9 @@ func (h Hoist) warn(load float64, anchor origin.Figure) []string {
 	if load < share*h.WLL && h.By != ByLeverHoist {
 		out = append(out, fmt.Sprintf("common practice: at least %.0f kg on this hoist, or its brake may not hold", share*h.WLL))
 	}
+	if h.Closed > 0 && h.Over > 0 && h.Lug+h.Rigging == 0 {
+		out = append(out, "headroom not checked: give the lifting point's height and that of the slings")
+	}
 	if h.Closed == 0 || h.Over == 0 {
 		out = append(out, "headroom not checked: give the hoist's closed height and the anchor's height")
 	}
@@ -172,7 +175,7 @@ func (h Hoist) nearest(load, anchor origin.Figure) string {
 	if h.By != ByLeverHoist && h.Pull > maxSidePull {
 		out = append(out, "the hoist straight above the lifting point, or a second hoist to drift it")
 	}
-	if short := h.Lug + h.Raise + h.Rigging + h.Closed - h.Over; h.Closed > 0 && h.Over > 0 && short > h.Over*rounding {
+	if short := h.Lug + h.Raise + h.Rigging + h.Closed - h.Over; h.Closed > 0 && h.Over > 0 && h.Lug+h.Rigging > 0 && short > h.Over*rounding {
 		out = append(out, fmt.Sprintf("%.0f mm less between lifting point and anchor: shorter slings, a shorter hoist or a higher anchor", math.Ceil(short)))
 	}
 	return strings.Join(out, "; and ")
