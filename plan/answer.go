@@ -37,10 +37,13 @@ type DeadlineResult struct {
 	LastStart hours.Minute // the last start of the task that still makes it; Far if unknown
 }
 
+// LeewaySteps is how many steps a plan may have for its leeway to be worked out (R20).
+const LeewaySteps = 600
+
 // Row is what is known about one planned step.
 type Row struct {
-	Latest hours.Minute // latest finish with every deadline still met, order and people kept (R20)
-	Leeway int          // minutes
+	Latest hours.Minute // latest finish with every deadline still met, order and people kept (R20); its planned finish where Leeway is below 0
+	Leeway int          // minutes; -1 where it is not known: standing time, or not worked out
 	Shares []string     // tasks that the leeway is shared with
 	SetBy  []Cause      // what sets its start (R21): remove these and it can start earlier
 	Idle   int

@@ -116,6 +116,8 @@ var mutants = []mutant{
 		"\trow.Leeway = lo + 1\n", byLeeway},
 	{"plan/solve/leeway.go", "\t\t\tlo = max(lo, s.Start[j])\n",
 		"\t\t\tlo = max(lo, 0)\n", byLeeway},
+	{"plan/solve/leeway.go", "\t\tgroup := r.tied[first]\n",
+		"\t\tgroup := []int(nil)\n", []string{"./plan/settle -run TestTiedLeeway"}},
 	{"plan/solve/setby.go", `r.earliest(i, limits[k:k+1]) >= r.s.Start[i] {`,
 		`r.earliest(i, limits[k:k+1]) > r.s.Start[i] {`, bySetBy},
 	{"plan/solve/setby.go", `		if len(less) > 0 && r.earliest(i, less) < r.s.Start[i] {`,

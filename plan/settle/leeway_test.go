@@ -5,6 +5,7 @@ import (
 	"testing"
 
 	"sailby/plan"
+	"sailby/tasks"
 	"sailby/tasks/expand"
 	"sailby/tasks/hours"
 
@@ -17,16 +18,14 @@ import (
 func (r *replay) late(i int, moves func(o *option) bool) (ok bool) {
 	order := r.order()
 	done := make([]*option, len(r.all))
-	rank := slices.Index(order, i)
+	rank := slices.IndexFunc(order, func(j int) bool { return slices.Contains(r.tied(i), j) })
 	for _, j := range order[:rank] {
 		done[j] = r.all[j]
 	}
 	for _, j := range order[rank:] {
-		x := r.place(j, done, func(o *option) bool { return j != i || moves(o) })
-		if x == nil {
+		if done[j] == nil && !r.place(r.tied(j), done, func(o *option) bool { return o.s.Index != i || moves(o) }) {
 			return false
 		}
-		done[j] = x
 	}
 	for j, x := range done {
 		if !r.alone(x) {
@@ -56,34 +55,83 @@ func (r *replay) order() []int {
 	return out
 }
 
-// place finds the first start of step j, from its own on, at which it stands beside what is placed
-// and after what it came after.
-func (r *replay) place(j int, done []*option, want func(o *option) bool) *option {
-	own := r.all[j]
-	for t := r.index(own.Start); t < r.index(r.hi); t++ {
-		for _, x := range r.tries(own, t, false) {
-			if !want(&x) || !x.s.Site && x.Finish > r.w.Window.Closes && own.Finish <= r.w.Window.Closes {
-				continue // home work is not put off until everybody is home again
+// tied gives the steps that start with step i by links of no least and no longest wait, step i among them, as they are
+// written.
+func (r *replay) tied(i int) []int {
+	in := map[int]bool{i: true}
+	for again := true; again; {
+		again = false
+		for _, l := range r.w.Links {
+			if l.From == nil || l.FromEnd != tasks.Start || l.ToEnd != tasks.Start || l.Min != 0 || l.Max != 0 || l.MaxWorking || l.MaxCure != nil {
+				continue
 			}
-			fits := true
-			for k, y := range done {
-				if y == nil {
-					continue
-				}
-				if !r.apart(&x, y, &nothing) || !r.linked(y, &x, &nothing) || !r.linked(&x, y, &nothing) || y.Finish > x.Start && r.rivals(r.all[k], own) {
-					fits = false
-					break
-				}
-			}
-			if all := slices.Clone(done); fits {
-				all[j] = &x
-				if r.holds(all, &nothing) {
-					return &x
-				}
+			if a, b := l.From.Index, l.To.Index; in[a] != in[b] {
+				in[a], in[b], again = true, true, true
 			}
 		}
 	}
-	return nil
+	var out []int
+	for _, j := range r.order() {
+		if in[j] {
+			out = append(out, j)
+		}
+	}
+	return out
+}
+
+// place puts steps that start together at their first start, from their own on, at which all stand beside what is placed and
+// after what they came after.
+func (r *replay) place(group []int, done []*option, want func(o *option) bool) bool {
+	for t := r.index(r.all[group[0]].Start); t < r.index(r.hi); t++ {
+		if r.beside(group, t, done, want) {
+			return true
+		}
+	}
+	return false
+}
+
+// beside puts steps at start t beside what is placed.
+func (r *replay) beside(group []int, t int, done []*option, want func(o *option) bool) bool {
+	if len(group) == 0 {
+		return true
+	}
+	own := r.all[group[0]]
+	tries := r.tries(own, t, false)
+	slices.SortStableFunc(tries, func(a, b option) int { return strangers(own, &a) - strangers(own, &b) })
+	for _, x := range tries {
+		if !want(&x) || !x.s.Site && x.Finish > r.w.Window.Closes && own.Finish <= r.w.Window.Closes {
+			continue // home work is not put off until everybody is home again
+		}
+		fits := true
+		for k, y := range done {
+			if y == nil {
+				continue
+			}
+			if !r.apart(&x, y, &nothing) || !r.linked(y, &x, &nothing) || !r.linked(&x, y, &nothing) || y.Finish > x.Start && r.rivals(r.all[k], own) {
+				fits = false
+				break
+			}
+		}
+		if !fits {
+			continue
+		}
+		done[group[0]] = &x
+		if r.holds(done, &nothing) && r.beside(group[1:], t, done, want) {
+			return true
+		}
+		done[group[0]] = nil
+	}
+	return false
+}
+
+// strangers counts the watches that a delay adds and that somebody else keeps than keeps the last of the plan's.
+func strangers(own, x *option) (n int) {
+	for k := len(own.Watches); k > 0 && k < len(x.Watches); k++ {
+		if x.Watches[k].Person != own.Watches[len(own.Watches)-1].Person {
+			n++
+		}
+	}
+	return n
 }
 
 // rivals says whether y begins in the plan only after x has given up what both want: somebody, kit,
@@ -170,6 +218,27 @@ func TestLeeway(t *testing.T) {
 	t.Logf("%d steps, %d deadlines", tried, limited)
 	if tried == 0 || limited == 0 && !testing.Short() {
 		t.Error("no leeway, or no deadline, among all these plans")
+	}
+}
+
+// TestTiedLeeway: two tasks of 2 h and 1 h that start together at 08:00, in a day that ends at 17:00 with a break from 12:00 to 13:00.
+// By hand: the first may end at 17:00 (from 15:00), 7 h later; the second then ends at 16:00, and may by itself end at 16:00 too,
+// since the first would be late after that. Written the other way round the leeway is the same.
+func TestTiedLeeway(t *testing.T) {
+	for _, text := range []string{
+		"  long: {at: quay, hours: 2 h}\n  short: {at: quay, hours: 1 h, starts with: long}\n",
+		"  short: {at: quay, hours: 1 h}\n  long: {at: quay, hours: 2 h, starts with: short}\n",
+	} {
+		a := handJob(t, text)
+		if a.Verdict != plan.Fits {
+			t.Fatalf("%v\n%s", a.Verdict, text)
+		}
+		for i, row := range a.Rows {
+			other := map[string]string{"long": "short", "short": "long"}[a.Work.Steps[i].Task.Name]
+			if row.Leeway != 7*60 || !slices.Equal(row.Shares, []string{other}) {
+				t.Errorf("%s: %d min, shared with %v\n%s", a.Work.Steps[i].Key(), row.Leeway, row.Shares, text)
+			}
+		}
 	}
 }
 

@@ -116,6 +116,9 @@ func (s *small) yaml() string {
 				keys = append(keys, key+": {"+strings.Join(t.links[key], ", ")+"}")
 			}
 		}
+		if with := t.links["starts with"]; len(with) > 0 {
+			keys = append(keys, "starts with: ["+strings.Join(with, ", ")+"]")
+		}
 		line("  %s: {%s}", t.name, strings.Join(keys, ", "))
 	}
 	if len(s.orders) > 0 {
@@ -283,6 +286,10 @@ func (s *small) task(d dice, i int) smallTask {
 	}
 	for j := max(0, i-3); j < i; j++ {
 		if !d.one("linked", 3) {
+			continue
+		}
+		if d.one("tied", 8) {
+			t.links["starts with"] = append(t.links["starts with"], fmt.Sprintf("t%d", j))
 			continue
 		}
 		s.link(d, &t, j)

@@ -1,18 +1,20 @@
 package solve
 
 import (
+	"slices"
+
+	"sailby/plan"
 	"sailby/plan/problem"
+	"sailby/tasks"
 	"sailby/tasks/expand"
 	"sailby/tasks/hours"
 )
-
-const leewaySteps = 600
 
 // inOrder finds for every activity those that it comes after in the plan because both want the
 // same people, more of a resource than there is, or a workface to themselves.
 func (r *rower) inOrder() {
 	r.ahead = make([][]int, len(r.p.Acts))
-	if len(r.p.Acts) > leewaySteps {
+	if len(r.p.Acts) > plan.LeewaySteps {
 		return
 	}
 	for rank, j := range r.order {
@@ -57,7 +59,8 @@ func (r *rower) gives(i, j int) bool {
 	return false
 }
 
-// leeway finds by how much the finish of activity i can move later (R20).
+// leeway finds by how much the finish of activity i can move later (R20); rank is the place in the order of the first that
+// is tied to it.
 func (r *rower) leeway(rank, i int) {
 	row := &r.rows[i]
 	if r.g.standing[i] {
@@ -130,35 +133,116 @@ func (r *rower) waiting(i int, moved []int) bool {
 }
 
 // delayed makes the schedule again, from the activities before rank on, in its order with the finish of i at least l later; false
-// where that breaks a deadline or a maximum wait. moved are the later activities that moved.
+// where that breaks a deadline or a maximum wait. What is tied to start with another is placed with it. moved are the later
+// activities that moved.
 func (r *rower) delayed(rank, i, l int) (moved []int, ok bool) {
 	g, s := r.g, r.s
 	g.restore(&r.prefix)
-	for _, j := range r.order[rank:] {
-		w := r.p.Acts[j].Modes[s.Mode[j]].Time
-		lo, fin := s.Start[j], s.Finish[i]+l
-		if j != i {
-			lo, fin = g.lower(j, nil)
-			lo = max(lo, s.Start[j])
-			for _, k := range r.ahead[j] {
-				lo = max(lo, g.finish[k])
+	for _, first := range r.order[rank:] {
+		if g.placed[first] {
+			continue
+		}
+		group := r.tied[first]
+		if len(group) == 0 {
+			group = []int{first}
+		}
+		if !r.together(group, i, l) {
+			return nil, false
+		}
+		for _, j := range group {
+			a, at, end := &r.p.Acts[j], g.start[j], g.finish[j]
+			watch := a.Modes[s.Mode[j]].Time.Watch()
+			if end > a.By || a.Site && a.By < problem.Inf && watch > 0 && at < end && end+watch > r.p.Close {
+				return nil, false
+			}
+			if j != i && at > s.Start[j] {
+				moved = append(moved, j)
 			}
 		}
-		at := g.earliest(j, s.Mode[j], g.first(j, s.Mode[j], lo, fin), problem.Inf-1, nil)
-		if at >= problem.Inf || g.breaksMax(j, s.Mode[j], at) {
-			return nil, false
-		}
-		end := w.Finish(at)
-		a := &r.p.Acts[j]
-		if end > a.By || a.Site && a.By < problem.Inf && w.Watch() > 0 && at < end && end+w.Watch() > r.p.Close {
-			return nil, false
-		}
-		if j != i && at > s.Start[j] {
-			moved = append(moved, j)
-		}
-		g.put(j, s.Mode[j], at)
 	}
 	return moved, g.whole()
+}
+
+// together places a group that starts at one minute at the first that suits all of it, i with its finish at least l later; false
+// where there is none, or a maximum wait breaks.
+func (r *rower) together(group []int, i, l int) bool {
+	g, s := r.g, r.s
+	for from := -problem.Inf; ; {
+		next := from
+		placed := 0
+		for _, j := range group {
+			lo, fin := s.Start[j], s.Finish[i]+l
+			if j != i {
+				lo, fin = g.lower(j, nil)
+				lo = max(lo, s.Start[j])
+				for _, k := range r.ahead[j] {
+					lo = max(lo, g.finish[k])
+				}
+			}
+			at := g.earliest(j, s.Mode[j], g.first(j, s.Mode[j], max(lo, from), fin), problem.Inf-1, nil)
+			if at >= problem.Inf || len(group) == 1 && g.breaksMax(j, s.Mode[j], at) {
+				return false
+			}
+			if at > from && len(group) > 1 {
+				next = at
+				break
+			}
+			g.put(j, s.Mode[j], at)
+			placed++
+		}
+		if placed == len(group) {
+			return !slices.ContainsFunc(group, func(j int) bool { return g.breaksMax(j, s.Mode[j], g.start[j]) })
+		}
+		for _, j := range group[:placed] {
+			g.take(j)
+		}
+		from = next
+	}
+}
+
+// ties finds for every activity those that start at the same minute as it by `starts with`, itself among them, in
+// the plan's order; nil where there are none.
+func (r *rower) ties() {
+	r.tied = make([][]int, len(r.p.Acts))
+	root := make([]int, len(r.p.Acts))
+	for i := range root {
+		root[i] = i
+	}
+	find := func(i int) int {
+		for root[i] != i {
+			i = root[i]
+		}
+		return i
+	}
+	for k := range r.p.Links {
+		l := &r.p.Links[k]
+		if l.From >= 0 && l.FromEnd == tasks.Start && l.ToEnd == tasks.Start && l.Min == 0 && l.Max == 0 && l.MaxCount == nil && l.Last == nil {
+			root[find(l.To)] = find(l.From)
+		}
+	}
+	groups := map[int][]int{}
+	for _, i := range r.order {
+		groups[find(i)] = append(groups[find(i)], i)
+	}
+	for _, group := range groups {
+		for _, i := range group {
+			if len(group) > 1 {
+				r.tied[i] = group
+			}
+		}
+	}
+}
+
+// front gives the place in the order of the first of those tied to the activity at a place.
+func (r *rower) front(rank int) int {
+	group := r.tied[r.order[rank]]
+	if len(group) == 0 {
+		return rank
+	}
+	for r.order[rank] != group[0] {
+		rank--
+	}
+	return rank
 }
 
 // firstFinishing gives the least start at or after lo with a finish of at least f.

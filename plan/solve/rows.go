@@ -7,12 +7,13 @@ import (
 )
 
 // Rows explains every activity of a schedule: what sets its start (R21) and how much leeway it
-// has (R20). Beyond leewaySteps activities the leeway is left out (-1), as it costs O(n^2).
+// has (R20). Beyond plan.LeewaySteps activities the leeway is left out (-1), as it costs O(n^2).
 func Rows(p *problem.Problem, s *Schedule, stop func() bool) []plan.Row {
 	r := &rower{g: newGenerator(p), p: p, s: s, rows: make([]plan.Row, len(p.Acts))}
 	r.g.load(s)
 	r.order = r.g.list()
 	r.inOrder()
+	r.ties()
 	for i := 0; i < len(p.Acts); i++ {
 		if i%16 == 0 && stop != nil && stop() {
 			for ; i < len(p.Acts); i++ {
@@ -24,17 +25,23 @@ func Rows(p *problem.Problem, s *Schedule, stop func() bool) []plan.Row {
 		r.rows[i].Leeway = -1
 		r.rows[i].Latest = p.Base + hours.Minute(s.Finish[i])
 	}
-	if len(p.Acts) <= leewaySteps {
+	if len(p.Acts) <= plan.LeewaySteps {
 		r.stop = stop
 		r.g.reset()
 		for rank, i := range r.order {
 			if r.stopped() {
 				break
 			}
+			front := r.front(rank)
+			for k := rank - 1; k >= front; k-- {
+				r.g.take(r.order[k])
+			}
 			r.g.save(&r.prefix)
-			r.leeway(rank, i)
+			r.leeway(front, i)
 			r.g.restore(&r.prefix)
-			r.g.put(i, s.Mode[i], s.Start[i])
+			for _, j := range r.order[front : rank+1] {
+				r.g.put(j, s.Mode[j], s.Start[j])
+			}
 		}
 	}
 	return r.rows
@@ -48,6 +55,7 @@ type rower struct {
 	s     *Schedule
 	order []int
 	ahead [][]int // by activity: those that come before it in the plan's order, for want of people, kit, room or a clear workface
+	tied  [][]int // by activity: those tied to start with it, itself among them; nil where none are
 	rows  []plan.Row
 
 	stop   func() bool

@@ -92,7 +92,10 @@ func (k *pack) dayStrip(s *agenda.Shift, steps []*expand.Step, how form) {
 	if how == followed {
 		return
 	}
-	legend := "Grey: there or on shift. Numbers: tasks below. Latest: later, and a deadline is missed."
+	legend := "Grey: there or on shift. Numbers: tasks below."
+	if agenda.LeewayKnown(k.a) {
+		legend += " Latest: later, and a deadline is missed."
+	}
 	if slices.ContainsFunc(s.Entries, func(e agenda.Entry) bool { return e.Watch }) {
 		legend += " w: fire watch."
 	}

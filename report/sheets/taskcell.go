@@ -124,7 +124,7 @@ func sharedNotes(steps []*expand.Step) (notes, numbers []string) {
 // byWhen gives the latest finish that keeps every deadline; bold where there is no leeway. In the
 // next six days the day of the week alone is clear.
 func (k *pack) byWhen(st *expand.Step, s *agenda.Shift) (text string, bold bool) {
-	if st.Index >= len(k.a.Rows) {
+	if st.Index >= len(k.a.Rows) || k.a.Rows[st.Index].Leeway < 0 {
 		return "", false
 	}
 	m := k.a.Rows[st.Index].Latest

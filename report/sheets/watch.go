@@ -66,6 +66,9 @@ func upper(s string) string {
 
 // tightTasks names the tasks at the site with least leeway, at most three.
 func (k *pack) tightTasks() []string {
+	if !agenda.LeewayKnown(k.a) {
+		return []string{"Leeway is " + agenda.NoLeeway(k.a) + "; the sheets give no latest finishes."}
+	}
 	var list []int
 	for i, s := range k.work.Steps {
 		if i < len(k.a.Rows) && s.Site && !s.Absent && s.Class == expand.Hands && k.a.Rows[i].Leeway >= 0 && k.a.Rows[i].Leeway < tight {

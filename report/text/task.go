@@ -160,9 +160,12 @@ func stepOf(a *plan.Answer, i int, m func(hours.Minute) moment, tree bool) stepF
 		f.Pieces = append(f.Pieces, [2]moment{m(p.From), m(p.To)})
 	}
 	if i < len(a.Rows) {
-		f.Latest, f.SetBy = m(a.Rows[i].Latest), causesOf(a, a.Rows[i].SetBy)
+		f.SetBy = causesOf(a, a.Rows[i].SetBy)
 		if n := a.Rows[i].Leeway; n >= 0 { // standing time has none of its own
 			f.Leeway = &n
+		}
+		if f.Leeway != nil || st.Class != expand.Hands { // where it is not known, so is the latest finish
+			f.Latest = m(a.Rows[i].Latest)
 		}
 	}
 	if tree {

@@ -12,7 +12,6 @@ import (
 	"sailby/tasks/expand"
 	"sailby/tasks/hours"
 	"sailby/tasks/origin"
-	"sailby/tasks/quantity"
 )
 
 // UnknownTask says that a job has no task of that name; Near are the names closest to it.
@@ -183,25 +182,16 @@ func (p *page) planned(a *plan.Answer, i int, s *expand.Step) {
 	if i >= len(a.Rows) {
 		return
 	}
-	row := a.Rows[i]
-	for k, c := range row.SetBy {
+	for k, c := range a.Rows[i].SetBy {
 		lead := "  set by    "
 		if k > 0 {
 			lead = "  and by    "
 		}
 		p.para(lead, agenda.CauseText(a.Work, c)+inFile(at(c.Pos)))
 	}
-	if row.Leeway < 0 {
-		return
+	if leeway := agenda.Leeway(a, i); leeway != "" {
+		p.para("  leeway    ", leeway)
 	}
-	leeway := quantity.Hours(row.Leeway)
-	if len(row.Shares) > 0 {
-		leeway += ", shared with " + strings.Join(row.Shares, ", ")
-	}
-	if row.Latest < hours.Far && row.Latest > hours.Never && row.Latest != 0 {
-		leeway += "; latest finish " + agenda.When(row.Latest, zone)
-	}
-	p.para("  leeway    ", leeway)
 }
 
 func people(ps plan.Step) string {

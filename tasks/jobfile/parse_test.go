@@ -33,7 +33,7 @@ func TestSource(t *testing.T) {
 		{"? [a, b]\n: c\n", "a key is a list or a mapping"}, {"~: c\n", "a key is empty"},
 		{"job: *x\n", "stands for an alias"}, {"job: &x y\n", "&x is an anchor"}, {"<<: {a: b}\n", "<< merges"}, {"job: !mine x\n", "is a tag"},
 		{"job: \"open\n", "a quoted text does not end"}, {"job: x\n  zone: y\n", "a second colon"}, {"job: @x\n", "no text may begin with"},
-		{"job: x\n---\njob: y\n", "a second document"}, {"a: b\n c\nd\n", "a key without its colon"}, {"job: \"\\q\"\n", "unknown \\ sign"},
+		{"job: x\n---\njob: y\n", "a second document"}, {"job: x\ntasks:\n  " + strings.Repeat("k", 10000) + ": {hours: 1 h}\n", "3:1: a key of more than 1024 letters"}, {"a: b\n c\nd\n", "a key without its colon"}, {"job: \"\\q\"\n", "unknown \\ sign"},
 	} {
 		job, err := ReadBytes("job.yaml", []byte(c.data), nil)
 		if job != nil || err == nil || !strings.Contains(err.Error(), c.says) {

@@ -47,6 +47,9 @@ func (r *reader) parse(file string, data []byte) *yaml.Node {
 		if tab := tabLine(data); tab > 0 && (line == 0 || line >= tab) {
 			return at(tab, 1, "indent with spaces", "the line begins with a tab")
 		}
+		if key := longKey(data, line); key > 0 {
+			return at(key, 1, "give it a short name, and write the long text under `title` or `note`", "a key of more than %d letters: YAML reads none so long", longestKey)
+		}
 		hint, text := plainSyntax(err.Error())
 		return at(max(line, 1), max(col, 1), hint, "%s", text)
 	}
@@ -105,6 +108,22 @@ func findAlias(data []byte, name string) (line, col int) {
 	}
 	start := bytes.LastIndexByte(data[:i], '\n') + 1
 	return bytes.Count(data[:i], []byte("\n")) + 1, utf8.RuneCount(data[start:i]) + 1
+}
+
+// longestKey is how long a key on one line may be (YAML 1.2.2, 7.4.2: implicit keys).
+const longestKey = 1024
+
+// longKey gives the line, near one that the scanner complains of, whose key is too long for it; 0 if there is none.
+func longKey(data []byte, near int) int {
+	for n, l := range bytes.Split(data, []byte("\n")) {
+		if n+1 < near-1 || n+1 > near+1 {
+			continue
+		}
+		if i := bytes.IndexByte(l, ':'); i > 0 && utf8.RuneCount(bytes.TrimLeft(l[:i], " ")) > longestKey {
+			return n + 1
+		}
+	}
+	return 0
 }
 
 // plainSyntax puts the scanner's complaint into plain words with a way out.
