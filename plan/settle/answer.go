@@ -48,7 +48,8 @@ func answer(ctx context.Context, job *tasks.Job, b expand.Basis, o Options, expl
 	if err != nil || a.Verdict != plan.CannotFit || !a.Work.Shared {
 		return a, err
 	}
-	if b.Unbound, b.Washed = true, true; !cannot(ctx, job, b, o) { // two starts in one tide may need but one wash (R26)
+	b.Unbound, b.Washed = len(a.Work.Rescues) > 0, true // two starts in one tide may need but one wash (R26)
+	if kind, err := alone(ctx, job, b, o, false); err != nil || kind.Verdict != plan.CannotFit {
 		open := *a
 		open.Verdict, open.Proof = plan.Unsettled, nil
 		return &open, nil
