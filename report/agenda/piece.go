@@ -1,6 +1,7 @@
 package agenda
 
 import (
+	"fmt"
 	"slices"
 	"strings"
 	"time"
@@ -53,6 +54,16 @@ func joins(o, e Entry, list []Entry) bool {
 	return !slices.ContainsFunc(list, func(x Entry) bool {
 		return x.Overlaps(gap) && slices.ContainsFunc(x.People, func(who string) bool { return slices.Contains(e.People, who) })
 	})
+}
+
+// Sliver says of a piece that is shorter than remnant minutes, parted from the rest of its step by the end of a shift, how
+// short it is: "only 2 min here". It is printed as it is planned, since what comes after it may wait for it; "" for
+// any other piece.
+func Sliver(e Entry) string {
+	if e.Watch || !e.From0 && !e.Goes || e.Len() >= remnant {
+		return ""
+	}
+	return fmt.Sprintf("only %d min here", e.Len())
 }
 
 // Breaks writes the pauses of a merged entry: "break 12:30-13:00"; "" where there are none.

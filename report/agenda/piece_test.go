@@ -43,3 +43,22 @@ func TestRemnantsAreJoined(t *testing.T) {
 		t.Errorf("the pause is written %q", got)
 	}
 }
+
+// A piece of 2 min at the end of a day keeps its time and says how short it is; one of 5 min, a whole short task, and
+// a fire watch say nothing.
+func TestSliver(t *testing.T) {
+	for _, c := range []struct {
+		e    agenda.Entry
+		want string
+	}{
+		{agenda.Entry{Span: hours.Span{From: 1078, To: 1080}, Goes: true}, "only 2 min here"},
+		{agenda.Entry{Span: hours.Span{From: 480, To: 484}, From0: true}, "only 4 min here"},
+		{agenda.Entry{Span: hours.Span{From: 1075, To: 1080}, Goes: true}, ""},
+		{agenda.Entry{Span: hours.Span{From: 480, To: 482}}, ""},
+		{agenda.Entry{Span: hours.Span{From: 480, To: 482}, Goes: true, Watch: true}, ""},
+	} {
+		if got := agenda.Sliver(c.e); got != c.want {
+			t.Errorf("%v: %q, want %q", c.e.Span, got, c.want)
+		}
+	}
+}

@@ -77,7 +77,7 @@ func (k *pack) plannedCell(s *agenda.Shift, st *expand.Step) cell {
 	var times []string
 	for _, e := range agenda.Merged(s.Entries) {
 		if e.Step == st && !e.Watch {
-			times = append(times, agenda.Within(e.Span, s.Zone), agenda.Breaks(e, s.Zone))
+			times = append(times, agenda.Within(e.Span, s.Zone), agenda.Breaks(e, s.Zone), agenda.Sliver(e))
 		}
 	}
 	if latest, bold := k.byWhen(st, s); !bold && latest != "" {

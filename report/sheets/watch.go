@@ -18,7 +18,7 @@ const tight = 60
 
 // watchList prints what can spoil the plan, worst first.
 func (k *pack) watchList() {
-	list := slices.Concat(k.lateSides(), k.tightTasks(), k.slots(), k.onlyOnes(), k.maybes(), cleaned(agenda.NoMeals(k.a)))
+	list := slices.Concat(k.unprinted(), k.lateSides(), k.tightTasks(), k.slots(), k.onlyOnes(), k.maybes(), cleaned(agenda.NoMeals(k.a)))
 	if len(list) == 0 {
 		return
 	}

@@ -115,6 +115,9 @@ func entryWords(a *plan.Answer, e agenda.Entry) string {
 		return "fire watch after " + agenda.StepLabel(a.Work, e.Step)
 	}
 	s := agenda.StepLabel(a.Work, e.Step) + " (" + agenda.Where(e.Step) + ")"
+	if short := agenda.Sliver(e); short != "" {
+		s += ", " + short
+	}
 	switch {
 	case e.Goes && e.From0:
 		s += ", goes on from before and after"

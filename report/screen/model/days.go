@@ -117,6 +117,9 @@ func (p *daysPage) entry(d dayStrips, e agenda.Entry) line {
 	if e.Goes {
 		what += " (goes on)"
 	}
+	if short := agenda.Sliver(e); short != "" {
+		what += " (" + short + ")"
+	}
 	if pause := agenda.Breaks(e, d.s.Zone); pause != "" {
 		what += " (" + pause + ")"
 	}
