@@ -1,6 +1,9 @@
 package learn
 
-import "sort"
+import (
+	"cmp"
+	"slices"
+)
 
 // ask notes that f, which holds, is needed for the contradiction. Facts of level 0 hold anyway.
 // It gives 1 if one more fact of level cur is asked for, else 0.
@@ -55,10 +58,10 @@ func (e *engine) analyse() (level int32, ok bool) {
 	}
 	idx := int32(len(e.list)) - 1
 	for ; ; idx-- {
-		r := e.list[idx]
-		if e.needAt[r.s] != idx {
+		if e.needAt[e.list[idx].s] != idx {
 			continue
 		}
+		r := e.list[idx]
 		e.atoms.touch(fact{r.s, e.need[r.s]})
 		if open == 1 {
 			break
@@ -82,7 +85,7 @@ func (e *engine) analyse() (level int32, ok bool) {
 func (e *engine) clauseOf(idx int32) int32 {
 	top := e.list[idx].s
 	e.learnt = append(e.learnt[:0], fact{top, e.need[top]}.not())
-	clear(e.proven)
+	e.proven.clear()
 	for _, s := range e.asked {
 		if s == top || e.needAt[s] < 0 {
 			continue
@@ -92,8 +95,8 @@ func (e *engine) clauseOf(idx int32) int32 {
 		}
 	}
 	rest := e.learnt[1:]
-	sort.SliceStable(rest, func(i, j int) bool {
-		return e.list[e.needAt[rest[i].s^1]].level > e.list[e.needAt[rest[j].s^1]].level
+	slices.SortStableFunc(rest, func(f, g fact) int {
+		return cmp.Compare(e.list[e.needAt[g.s^1]].level, e.list[e.needAt[f.s^1]].level)
 	})
 	level := int32(0)
 	if len(rest) > 0 {
@@ -116,10 +119,10 @@ func (e *engine) follows(f fact, i int32, depth int) bool {
 		return false
 	}
 	key := int64(i)<<32 | int64(uint32(f.v))
-	if v, ok := e.proven[key]; ok {
+	if v, ok := e.proven.find(key); ok {
 		return v > 0
 	}
-	e.proven[key] = -1
+	e.proven.put(key, -1)
 	base, noted := len(e.scratch), e.log.size()
 	e.scratch = e.reason(f, r.why, i, e.scratch)
 	yes := true
@@ -132,7 +135,7 @@ func (e *engine) follows(f fact, i int32, depth int) bool {
 	}
 	e.scratch = e.scratch[:base]
 	if yes {
-		e.proven[key] = 1
+		e.proven.put(key, 1)
 	} else {
 		e.log.void(noted)
 	}

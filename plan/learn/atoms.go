@@ -5,7 +5,7 @@ package learn
 // (Moskewicz et al. 2001), so the literals of the search are made only where they matter.
 type atoms struct {
 	list []atom
-	find map[fact]int32
+	ids  table // of the facts
 	free []int32
 	heap []int32 // by activity, the greatest first
 	out  []taken
@@ -21,7 +21,7 @@ type atom struct {
 // taken is an atom taken off the heap at a level; it comes back when the search goes below.
 type taken struct{ id, level int32 }
 
-func newAtoms() atoms { return atoms{find: map[fact]int32{}, bump: 1} }
+func newAtoms() atoms { return atoms{ids: newTable(), bump: 1} }
 
 // lower gives f or its contrary, whichever is on the lower side.
 func lower(f fact) fact {
@@ -35,7 +35,7 @@ func lower(f fact) fact {
 func (a *atoms) claim(fs []fact) {
 	for _, f := range fs {
 		f = lower(f)
-		id, ok := a.find[f]
+		id, ok := a.ids.find(f.key())
 		if !ok {
 			if n := len(a.free); n > 0 {
 				id = a.free[n-1]
@@ -45,7 +45,7 @@ func (a *atoms) claim(fs []fact) {
 				id = int32(len(a.list))
 				a.list = append(a.list, atom{fact: f, place: -1})
 			}
-			a.find[f] = id
+			a.ids.put(f.key(), id)
 			a.push(id)
 		}
 		a.list[id].refs++
@@ -57,12 +57,12 @@ func (a *atoms) claim(fs []fact) {
 func (a *atoms) release(fs []fact) {
 	for _, f := range fs {
 		f = lower(f)
-		id, ok := a.find[f]
+		id, ok := a.ids.find(f.key())
 		if !ok {
 			continue
 		}
 		if a.list[id].refs--; a.list[id].refs == 0 {
-			delete(a.find, f)
+			a.ids.drop(f.key())
 			if a.list[id].place >= 0 {
 				a.remove(id)
 			}
@@ -74,7 +74,7 @@ func (a *atoms) release(fs []fact) {
 
 // touch bumps f if it is an atom.
 func (a *atoms) touch(f fact) {
-	if id, ok := a.find[lower(f)]; ok {
+	if id, ok := a.ids.find(lower(f).key()); ok {
 		a.raise(id)
 	}
 }

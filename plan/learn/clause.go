@@ -66,10 +66,12 @@ func (e *engine) visit(s side) bool {
 	ws := e.watch[s]
 	v := e.now[s]
 	kept := 0
-	for i := 0; i < len(ws); i++ {
+	for i := range ws {
 		w := ws[i]
 		if w.from > v || e.holds(w.ahead) {
-			ws[kept] = w
+			if kept < i {
+				ws[kept] = w
+			}
 			kept++
 			continue
 		}

@@ -86,7 +86,7 @@ func (e *engine) behind(f fact) []fact {
 		e.needAt[r.s] = -1
 		g := fact{r.s, e.need[r.s]}
 		if r.why.kind == whyChoice {
-			out = append(out, fact{r.s, r.v})
+			out = append(out, fact{r.s, e.step[i].v})
 			continue
 		}
 		e.scratch = e.reason(g, r.why, i, e.scratch[:0])

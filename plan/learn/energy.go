@@ -50,6 +50,19 @@ func newEnergy(e *engine, c *timetable) *energy {
 	return g
 }
 
+// order sorts ids by key; they are nearly in order already.
+func order(ids, key []int32) {
+	for i := 1; i < len(ids); i++ {
+		x := ids[i]
+		k := key[x]
+		j := i
+		for ; j > 0 && key[ids[j-1]] > k; j-- {
+			ids[j] = ids[j-1]
+		}
+		ids[j] = x
+	}
+}
+
 // look brings the loads up to date and sorts them.
 func (g *energy) look(e *engine) {
 	for i := range g.users {

@@ -129,12 +129,12 @@ func TestEnergyAgainstBruteForce(t *testing.T) {
 		}
 		for i := int32(len(e.list)) - 1; i >= 0; i-- {
 			x := e.list[i]
-			if ok && x.v > least[x.s] {
-				t.Fatalf("round %d: side %d raised to %d, a schedule has %d", round, x.s, x.v, least[x.s])
+			if v := e.step[i].v; ok && v > least[x.s] {
+				t.Fatalf("round %d: side %d raised to %d, a schedule has %d", round, x.s, v, least[x.s])
 			}
 			if x.why.kind == whyRule && x.why.id == g.id {
 				alone++
-				for v := e.list[x.prev].v + 1; v <= x.v; v++ { // every weaker fact has its reason too
+				for v := e.step[e.step[i].prev].v + 1; v <= e.step[i].v; v++ { // every weaker fact has its reason too
 					e.reason(fact{x.s, v}, x.why, i, nil)
 				}
 			}

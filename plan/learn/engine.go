@@ -32,7 +32,7 @@ type engine struct {
 	listed   []bool
 	learnt   []fact
 	scratch  []fact
-	proven   map[int64]int8
+	proven   table   // by entry and value: 1 if the fact follows, else -1
 	stamp    []int64 // by level
 	stampNow int64
 
@@ -52,7 +52,7 @@ type rule interface {
 }
 
 func newEngine() *engine {
-	return &engine{atoms: newAtoms(), store: store{bump: 1}, proven: map[int64]int8{}, fell: nobody}
+	return &engine{atoms: newAtoms(), store: store{bump: 1}, proven: newTable(), fell: nobody}
 }
 
 // variable makes a variable and the lists that go by its sides.

@@ -237,10 +237,10 @@ func (r *record) show(i int32) {
 	}
 	r.shown[i] = true
 	x := e.list[i]
-	if x.prev < 0 || x.why.kind == whyRoot {
+	if e.step[i].prev < 0 || x.why.kind == whyRoot {
 		return // the problem says it, or the log does already
 	}
-	f := fact{x.s, x.v}
+	f := fact{x.s, e.step[i].v}
 	behind := e.because(f, x.why, i, nil)
 	for _, g := range behind {
 		r.show(e.entry(g))

@@ -1,6 +1,9 @@
 package learn
 
-import "sort"
+import (
+	"cmp"
+	"slices"
+)
 
 // covering is an activity that covers a point, with the later entry of its two facts.
 type covering struct{ user, amount, last int32 }
@@ -38,16 +41,20 @@ func (c *timetable) covers(e *engine, t, skip, idx int32, out []fact) []fact {
 	for k := range c.users {
 		u := &c.users[k]
 		a, b := u.startBy(t), u.finishFrom(t+1)
-		if int32(k) == skip || e.before(a.s, idx) < a.v || e.before(b.s, idx) < b.v {
+		if int32(k) == skip || !e.holds(a) || !e.holds(b) {
+			continue
+		}
+		i, j := e.reached(a, idx), e.reached(b, idx)
+		if i < 0 || j < 0 {
 			continue
 		}
 		spare += u.amount
-		c.cover = append(c.cover, covering{int32(k), u.amount, max(e.entry(a), e.entry(b))})
+		c.cover = append(c.cover, covering{int32(k), u.amount, max(i, j)})
 	}
 	if spare < 0 {
 		return out
 	}
-	sort.SliceStable(c.cover, func(i, j int) bool { return c.cover[i].last > c.cover[j].last })
+	slices.SortStableFunc(c.cover, func(x, y covering) int { return cmp.Compare(y.last, x.last) })
 	for _, k := range c.cover {
 		if k.amount <= spare && e.list[k.last].level > 0 {
 			spare -= k.amount

@@ -9,31 +9,28 @@ package learn
 // [start o <= t] and [finish o >= t+1] for each; if they leave less than j needs at t, then
 // [finish j >= t+1] gives [start j >= t+1], and [start j <= t] gives [finish j <= t].
 //
-// Cost of a run: O(n) where the orders by latest start and earliest finish have changed little,
-// and O(n x segments) for the activities that the highest part keeps from starting.
+// Cost of a run: O(n) to look whose part has changed, O(segments) for each that has, and O(segments)
+// for each activity that the highest part keeps from starting, unless it was looked at before and nothing that
+// was read has changed.
 type timetable struct {
 	id       int32
 	capacity int32
 	users    []user
-	byStart  []int32 // users by latest start
-	byFinish []int32 // users by earliest finish
 	from     []int32 // segments of the profile: where they begin
-	level    []int32 // and how much is used
-	key      []int32
+	level    []int32 // how much is used
+	ends     []int32 // and how many parts begin or end where they begin
 	cover    []covering
 	parts    []stretch // by user: its compulsory part in the profile
-	seen     []view    // by user: the bounds for which it was last looked at in vain
+	seen     []look    // by user: when it was last looked at in vain
 	version  int32     // of the profile
 	most     int32     // its greatest level
+	news     reach     // where this version differs from the one before
+	read     reach     // what has been read of the profile
 }
 
 func newTimetable(e *engine, capacity int32, users []user) *timetable {
-	c := &timetable{id: int32(len(e.rules)), capacity: capacity, users: users, key: make([]int32, len(users)),
-		parts: make([]stretch, len(users)), seen: make([]view, len(users))}
-	for i := range users {
-		c.byStart = append(c.byStart, int32(i))
-		c.byFinish = append(c.byFinish, int32(i))
-	}
+	c := &timetable{id: int32(len(e.rules)), capacity: capacity, users: users,
+		parts: make([]stretch, len(users)), seen: make([]look, len(users))}
 	e.attach(c, c.sides())
 	return c
 }
@@ -50,92 +47,32 @@ func (c *timetable) sides() []side {
 	return out
 }
 
-// order sorts ids by key; they are nearly in order already.
-func order(ids, key []int32) {
-	for i := 1; i < len(ids); i++ {
-		x := ids[i]
-		k := key[x]
-		j := i
-		for ; j > 0 && key[ids[j-1]] > k; j-- {
-			ids[j] = ids[j-1]
-		}
-		ids[j] = x
-	}
-}
-
-// build makes the profile and gives its greatest level.
+// build brings the profile up to date and gives its greatest level.
 func (c *timetable) build(e *engine) int32 {
-	changed := false
+	changed, news := false, c.news // those of the version stay if there is no new one
+	c.news = nothing
 	for i := range c.users {
 		u := &c.users[i]
 		part := stretch{e.latestStart(u), e.earliestFinish(u)}
 		if part.from >= part.to {
 			part = stretch{}
 		}
-		changed = changed || part != c.parts[i]
-		c.parts[i] = part
+		if was := c.parts[i]; part != was {
+			c.replace(was, part, u.amount)
+			c.parts[i], changed = part, true
+		}
 	}
 	if !changed {
+		c.news = news
 		return c.most
 	}
 	c.version++
-	for i := range c.users {
-		c.key[i] = e.latestStart(&c.users[i])
-	}
-	order(c.byStart, c.key)
-	for i := range c.users {
-		c.key[i] = e.earliestFinish(&c.users[i])
-	}
-	order(c.byFinish, c.key)
 	e.ticks += int64(len(c.users))
-	c.from, c.level = c.from[:0], c.level[:0]
-	used, most := int32(0), int32(0)
-	i, j, n := 0, 0, len(c.users)
-	for i < n || j < n {
-		for i < n && !c.compulsory(e, c.byStart[i]) {
-			i++
-		}
-		for j < n && !c.compulsory(e, c.byFinish[j]) {
-			j++
-		}
-		if j == n {
-			break
-		}
-		t := e.earliestFinish(&c.users[c.byFinish[j]])
-		if i < n {
-			t = min(t, e.latestStart(&c.users[c.byStart[i]]))
-		}
-		for i < n {
-			u := &c.users[c.byStart[i]]
-			if c.compulsory(e, c.byStart[i]) {
-				if e.latestStart(u) != t {
-					break
-				}
-				used += u.amount
-			}
-			i++
-		}
-		for j < n {
-			u := &c.users[c.byFinish[j]]
-			if c.compulsory(e, c.byFinish[j]) {
-				if e.earliestFinish(u) != t {
-					break
-				}
-				used -= u.amount
-			}
-			j++
-		}
-		most = max(most, used)
-		c.from = append(c.from, t)
-		c.level = append(c.level, used)
+	c.most = 0
+	for _, l := range c.level {
+		c.most = max(c.most, l)
 	}
-	c.most = most
-	return most
-}
-
-func (c *timetable) compulsory(e *engine, i int32) bool {
-	u := &c.users[i]
-	return e.latestStart(u) < e.earliestFinish(u)
+	return c.most
 }
 
 // run checks the profile and pushes activities out of where it leaves them too little.
@@ -156,44 +93,43 @@ func (c *timetable) run(e *engine) bool {
 		if u.amount+most <= c.capacity || e.fixed(u.start) && e.fixed(u.finish) {
 			continue
 		}
-		look := e.view(u, c.version)
-		if c.seen[i] == look {
+		now, seen := e.view(u, c.version), &c.seen[i]
+		if seen.view == now || c.again(e, seen, now) {
 			continue
 		}
+		c.read = nothing
+		before := e.ticks
 		if !c.later(e, int32(i)) || !c.earlier(e, int32(i)) {
 			return false
 		}
-		if e.view(u, c.version) == look {
-			c.seen[i] = look
+		if e.view(u, c.version) == now {
+			*seen = look{now, c.read, e.ticks - before}
 		}
 	}
 	return true
 }
 
-// at gives the segment that holds t, -1 if t is before the first.
-func (c *timetable) at(t int32) int {
-	lo, hi := 0, len(c.from)
-	for lo < hi {
-		if m := (lo + hi) / 2; c.from[m] <= t {
-			lo = m + 1
-		} else {
-			hi = m
-		}
-	}
-	return lo - 1
-}
-
 // later raises the earliest start of user i over the segments that leave it too little.
 func (c *timetable) later(e *engine, i int32) bool {
 	u := &c.users[i]
-	lst := e.latestStart(u)
-	own := lst < e.earliestFinish(u)
-	for k := max(0, c.at(e.now[u.start])); k < len(c.from)-1; k++ {
+	lst, end, room := e.latestStart(u), e.earliestFinish(u), c.capacity-u.amount
+	own := lst < end
+	if own {
+		end = lst // its own part of the profile begins
+	}
+	k := c.at(e.now[u.start])
+	if k >= 0 {
+		c.read.from = c.from[k]
+	} else {
+		c.read.from, k = -far, 0
+	}
+	for ; k < len(c.from)-1; k++ {
 		e.ticks++
-		if c.from[k] >= e.earliestFinish(u) || own && c.from[k] >= lst {
-			return true // free so far, or in its own part of the profile
+		if c.from[k] >= end {
+			c.read.to = max(c.read.to, c.from[k+1])
+			return true // free so far
 		}
-		if c.level[k]+u.amount <= c.capacity {
+		if c.level[k] <= room {
 			continue
 		}
 		for e.now[u.start] < c.from[k+1] {
@@ -205,21 +141,35 @@ func (c *timetable) later(e *engine, i int32) bool {
 				return false
 			}
 		}
+		if !own {
+			end = e.earliestFinish(u)
+		}
 	}
+	c.read.to = far
 	return true
 }
 
 // earlier lowers the latest finish of user i over the segments that leave it too little.
 func (c *timetable) earlier(e *engine, i int32) bool {
 	u := &c.users[i]
-	ect := e.earliestFinish(u)
-	own := e.latestStart(u) < ect
-	for k := min(len(c.from)-2, c.at(e.latestFinish(u)-1)); k >= 0; k-- {
+	ect, end, room := e.earliestFinish(u), e.latestStart(u), c.capacity-u.amount
+	own := end < ect
+	if own {
+		end = ect
+	}
+	k := c.at(e.latestFinish(u) - 1)
+	if k+1 < len(c.from) {
+		c.read.to = max(c.read.to, c.from[k+1])
+	} else {
+		c.read.to, k = far, k-1
+	}
+	for ; k >= 0; k-- {
 		e.ticks++
-		if c.from[k+1] <= e.latestStart(u) || own && c.from[k+1] <= ect {
+		if c.from[k+1] <= end {
+			c.read.from = min(c.read.from, c.from[k])
 			return true
 		}
-		if c.level[k]+u.amount <= c.capacity {
+		if c.level[k] <= room {
 			continue
 		}
 		for e.latestFinish(u) > c.from[k] {
@@ -232,6 +182,10 @@ func (c *timetable) earlier(e *engine, i int32) bool {
 				return false
 			}
 		}
+		if !own {
+			end = e.latestStart(u)
+		}
 	}
+	c.read.from = -far
 	return true
 }

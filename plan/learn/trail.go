@@ -40,10 +40,14 @@ type why struct {
 
 // raised is an entry of the trail.
 type raised struct {
-	s, v  int32
-	prev  int32 // the entry before it of the same side
-	level int32
-	why   why
+	s, level int32
+	why      why
+}
+
+// step is the rest of an entry, kept apart as it is what is walked most.
+type step struct {
+	v    int32 // what the side was raised to
+	prev int32 // the entry before it of the same side, -1 if it is the first
 }
 
 // trail holds the bounds of all variables and the order in which they were raised. The first
@@ -52,6 +56,7 @@ type trail struct {
 	now  []int32 // value of each side
 	top  []int32 // its last entry
 	list []raised
+	step []step  // by entry
 	head []int32 // list length at which each level above 0 begins
 }
 
@@ -61,7 +66,8 @@ func (t *trail) bounds(lo, hi int32) side {
 	for k, v := range [2]int32{lo, -hi} {
 		t.now = append(t.now, v)
 		t.top = append(t.top, int32(len(t.list)))
-		t.list = append(t.list, raised{s: s + side(k), v: v, prev: -1})
+		t.list = append(t.list, raised{s: s + side(k)})
+		t.step = append(t.step, step{v, -1})
 	}
 	return s
 }
@@ -78,29 +84,44 @@ func (t *trail) fixed(s side) bool { return t.now[s]+t.now[s^1] == 0 }
 
 // entry gives the entry that made f true; f must hold. It costs the number of raises of the
 // side since then.
-func (t *trail) entry(f fact) int32 {
-	i := t.top[f.s]
+func (t *trail) entry(f fact) int32 { return t.first(f, t.top[f.s]) }
+
+// first gives the entry that made f true; entry i is one of its side at which it held.
+func (t *trail) first(f fact, i int32) int32 {
 	for {
-		p := t.list[i].prev
-		if p < 0 || t.list[p].v < f.v {
+		p := t.step[i].prev
+		if p < 0 || t.step[p].v < f.v {
 			return i
 		}
 		i = p
 	}
 }
 
-// before gives the value that side s had before entry idx.
-func (t *trail) before(s side, idx int32) int32 {
+// last gives the last entry of side s before entry idx.
+func (t *trail) last(s side, idx int32) int32 {
 	i := t.top[s]
 	for i >= idx {
-		i = t.list[i].prev
+		i = t.step[i].prev
 	}
-	return t.list[i].v
+	return i
+}
+
+// before gives the value that side s had before entry idx.
+func (t *trail) before(s side, idx int32) int32 { return t.step[t.last(s, idx)].v }
+
+// reached gives the entry before idx that made f true, -1 if f did not hold then.
+func (t *trail) reached(f fact, idx int32) int32 {
+	i := t.last(f.s, idx)
+	if t.step[i].v < f.v {
+		return -1
+	}
+	return t.first(f, i)
 }
 
 // push raises a side; the caller knows that v is above its value and possible.
 func (t *trail) push(s side, v int32, w why) {
-	t.list = append(t.list, raised{s: s, v: v, prev: t.top[s], level: int32(len(t.head)), why: w})
+	t.list = append(t.list, raised{s: s, level: int32(len(t.head)), why: w})
+	t.step = append(t.step, step{v, t.top[s]})
 	t.top[s] = int32(len(t.list) - 1)
 	t.now[s] = v
 }
@@ -108,11 +129,11 @@ func (t *trail) push(s side, v int32, w why) {
 // cut takes back all entries from idx on.
 func (t *trail) cut(idx int32) {
 	for i := int32(len(t.list)) - 1; i >= idx; i-- {
-		e := &t.list[i]
-		t.top[e.s] = e.prev
-		t.now[e.s] = t.list[e.prev].v
+		s, prev := t.list[i].s, t.step[i].prev
+		t.top[s] = prev
+		t.now[s] = t.step[prev].v
 	}
-	t.list = t.list[:idx]
+	t.list, t.step = t.list[:idx], t.step[:idx]
 	n := sort.Search(len(t.head), func(k int) bool { return t.head[k] >= idx })
 	t.head = t.head[:n]
 }
