@@ -59,7 +59,7 @@ func (g *ground) shutOut(s *expand.Step) string {
 	parts := g.parts(s)
 	for _, p := range parts {
 		if len(p.set) == 0 {
-			return p.name + " never come in the time planned over"
+			return p.name + ": none in the time planned over"
 		}
 	}
 	for i, a := range parts {

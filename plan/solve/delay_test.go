@@ -30,6 +30,7 @@ func TestDelayedPlansObeyTheRules(t *testing.T) {
 		r.g.load(s)
 		r.order = r.g.list()
 		r.inOrder()
+		r.ties()
 		r.g.reset()
 		tried := 0
 		for rank, i := range r.order {

@@ -249,9 +249,13 @@ func TestWarmerSteel(t *testing.T) {
 func TestSteadyCureIsTheTime(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		c, celsius := aCurve(t), rapid.Float64Range(-30, 60).Draw(t, "celsius")
-		finish, ok := Cure(0, c, -100, steady(celsius), 1e6)
+		const limit = 1_000_000
+		finish, ok := Cure(0, c, -100, steady(celsius), limit)
 		minutes, _, err := c.Time(celsius)
-		if ok != (err == nil) {
+		if minutes > limit-1 && minutes < limit+1 {
+			t.Skip("on the limit")
+		}
+		if ok != (err == nil && minutes < limit) {
 			t.Fatalf("cure %v, time %v", ok, err)
 		}
 		if ok && (float64(finish) < minutes-1e-5 || float64(finish) > minutes+1+1e-5) {
