@@ -23,11 +23,14 @@ func newFits(g *globals, st streams) *cobra.Command {
 	c := &cobra.Command{
 		Use:               "fits JOB",
 		Short:             "Whether the work fits the window, by how much, and what governs that",
-		Long:              "Says whether the work fits: on likely hours, with every maybe, and at the high end of the hours. The exit\nstatus is 0 if it fits on likely hours, and 3 if that was not shown or a craft is neaped.",
+		Long:              "Says whether the work fits: on likely hours, with every maybe, and at the high end of the hours. The exit\nstatus is 0 if it fits on likely hours, and 3 if that was not shown or a craft is neaped. With --limit the search goes on for so long\nwhere the answer for likely hours is not proved yet.",
 		Example:           "  sailby fits slip/job.yaml\n  sailby fits pier/job.yaml --trip \"five days\"",
 		Args:              takes(false, "JOB"),
 		ValidArgsFunction: jobFiles,
-		RunE:              func(c *cobra.Command, args []string) error { return runFits(c.Context(), o, st, args) },
+		RunE: func(c *cobra.Command, args []string) error {
+			o.thorough = c.Flags().Changed("limit")
+			return runFits(c.Context(), o, st, args)
+		},
 	}
 	c.Flags().BoolVar(&o.json, "json", false, "print for machines")
 	c.Flags().StringVar(&o.proof, "proof", "", "write why no plan fits, or finishes earlier, to this file, step by step, and have a second program verify it")

@@ -32,6 +32,8 @@ type globals struct {
 	zone  string
 	seed  uint64
 	limit time.Duration
+
+	thorough bool // while there is time, go on until the likely answer is proved
 }
 
 func (g *globals) flags(f *pflag.FlagSet) {
@@ -197,12 +199,50 @@ func (g *globals) settle(ctx context.Context, job *tasks.Job, o settle.Options) 
 	return settle.Ask(ctx, job, o)
 }
 
+// goOn searches on for what is left of the limit, where the likely answer is not proved, and keeps what is
+// better: by then every basis has had its usual search.
+func (g *globals) goOn(ctx context.Context, job *tasks.Job, r *plan.Report, show func(string)) {
+	if ctx.Err() != nil || r == nil || !open(r.Likely) {
+		return
+	}
+	o := g.options(true, show)
+	o.Thorough = true
+	more, err := settle.Ask(ctx, job, o)
+	switch {
+	case err != nil || more.Likely == nil: // what there is stands
+		r.Likely.CutShort = r.Likely.CutShort || ctx.Err() != nil
+	case better(more.Likely, r.Likely):
+		r.Likely, r.LowToo = more.Likely, more.LowToo
+	default:
+		r.Likely.CutShort = more.Likely.CutShort
+	}
+}
+
+// open says whether more search could change an answer.
+func open(a *plan.Answer) bool {
+	return a != nil && (a.Verdict == plan.Unsettled || a.Verdict == plan.Fits && !a.Best)
+}
+
+// better says whether answer a says more than b, which is open.
+func better(a, b *plan.Answer) bool {
+	switch {
+	case b.Verdict == plan.Unsettled:
+		return a.Verdict != plan.Unsettled || a.Bound > b.Bound
+	case a.Verdict != plan.Fits || a.Finish > b.Finish:
+		return false
+	}
+	return a.Best || a.Finish < b.Finish || a.Bound > b.Bound
+}
+
 // ask settles the job, with progress shown, and says so where the search was cut.
 func (g *globals) ask(ctx context.Context, st streams, job *tasks.Job) (*plan.Report, error) {
 	show, done := st.progress()
 	limited, cancel := context.WithTimeout(ctx, g.limit)
 	defer cancel()
 	r, err := g.settle(limited, job, g.options(false, show))
+	if err == nil && g.thorough {
+		g.goOn(limited, job, r, show)
+	}
 	done()
 	switch {
 	case err != nil && ctx.Err() != nil, errors.Is(err, settle.ErrStopped):

@@ -3,9 +3,6 @@ package learn
 import (
 	"errors"
 	"sort"
-
-	"sailby/plan/problem"
-	"sailby/tasks/hours"
 )
 
 // A leaf is a state in which everything is settled. The masks of the worktables leave out spans
@@ -72,6 +69,7 @@ type holdings struct {
 	*model
 	res, people [][]holding
 	tries       int
+	crowded     bool // a keeper found no room
 }
 
 // add collects what activity i uses.
@@ -183,72 +181,4 @@ func (m *model) place(i int) {
 			m.clash = append(m.clash, fact{k.on, 1})
 		}
 	}
-}
-
-// stop is a fire watch after a piece that ends in a stop on the way.
-type stop struct {
-	act, from, to int
-	mode          *problem.Mode
-}
-
-// mostTries bounds the search for keepers of the watches on the way; beyond it they are taken to
-// be found.
-const mostTries = 20_000
-
-// watchStops finds somebody for every watch on the way. If there is no way to, the clash is the
-// whole plan.
-func (h *holdings) watchStops() bool {
-	var stops []stop
-	for i := range h.p.Acts {
-		md := &h.p.Acts[i].Modes[h.chosen(i)]
-		if h.acts[i].watch == 0 || len(md.Keepers) == 0 {
-			continue
-		}
-		ends := md.Time.Stops(int(h.now[h.start[i]]))
-		for _, e := range ends[:max(0, len(ends)-1)] {
-			stops = append(stops, stop{i, e, e + md.Time.Watch(), md})
-		}
-	}
-	if h.assign(stops) {
-		return true
-	}
-	h.clash = h.clash[:0]
-	for i := range h.p.Acts {
-		h.place(i)
-	}
-	return false
-}
-
-func (h *holdings) assign(stops []stop) bool {
-	if len(stops) == 0 || h.tries > mostTries {
-		return true
-	}
-	s := stops[0]
-	room := h.p.Acts[s.act].WatchRoom - 1
-	for n, p := range s.mode.Keepers {
-		h.tries++
-		if !s.mode.Stay[n].Covers(hours.Span{From: hours.Minute(s.from), To: hours.Minute(s.to)}) || h.busy(p, s) {
-			continue
-		}
-		old := len(h.people[p])
-		h.watch(s.act, p, int32(s.from), int32(s.to))
-		if h.assign(stops[1:]) {
-			return true
-		}
-		h.people[p] = h.people[p][:old]
-		if room >= 0 {
-			h.res[room] = h.res[room][:len(h.res[room])-1]
-		}
-	}
-	return false
-}
-
-// busy says whether p does something else during a watch.
-func (h *holdings) busy(p int, s stop) bool {
-	for _, x := range h.people[p] {
-		if int(x.from) < s.to && int(x.to) > s.from && x.from < x.to && x.team != h.team[s.act] {
-			return true
-		}
-	}
-	return false
 }

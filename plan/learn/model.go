@@ -24,6 +24,7 @@ type model struct {
 	zero    side    // with guarded: a variable that is 0
 	grids   map[*problem.Timing]*grid
 	steady  map[*problem.Timing]spans
+	stops   map[begun][]int // known stops on the way
 }
 
 // act is what the model knows of an activity beside its sides.
@@ -66,7 +67,7 @@ func build(p *problem.Problem, kind kind) (*model, bool) { return buildFor(p, ki
 
 // buildFor is build with the log told, unless it is nil.
 func buildFor(p *problem.Problem, kind kind, log *record) (*model, bool) {
-	m := &model{engine: newEngine(), p: p, plain: kind != guarded, guarded: kind == guarded, grids: map[*problem.Timing]*grid{}, steady: map[*problem.Timing]spans{}}
+	m := &model{engine: newEngine(), p: p, plain: kind != guarded, guarded: kind == guarded, grids: map[*problem.Timing]*grid{}, steady: map[*problem.Timing]spans{}, stops: map[begun][]int{}}
 	if log != nil {
 		log.listen(m)
 	}

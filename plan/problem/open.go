@@ -6,7 +6,7 @@ import "sailby/tasks/hours"
 
 // Rules gives the stopping rules of hands-on work; for standing work only Work is set.
 func (w *Timing) Rules() Rules {
-	return Rules{Work: w.length, SetUp: w.setUp, Least: w.least, Safe: w.safe, InOneGo: w.inOneGo, OverMeals: w.overMeals}
+	return Rules{Work: w.length, SetUp: w.setUp, Least: w.least, Safe: w.safe, InOneGo: w.inOneGo, OverMeals: w.overMeals, Watch: w.watch}
 }
 
 // Standing says whether a timing runs on any minute of the clock: no calendar, though it may be a film's.

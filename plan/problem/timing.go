@@ -50,13 +50,14 @@ func Curing(rate []float64) *Timing {
 type Rules struct {
 	Work, SetUp, Least, Safe int
 	InOneGo, OverMeals       bool
+	Watch                    int // minutes of fire watch after the last piece and after every stop
 }
 
 // Worked gives the timing of hands-on work: spans are its worked minutes, joined its openings
 // (spans joined over meals), both from base.
 func Worked(spans, joined hours.Set, r Rules) *Timing {
 	return &Timing{length: r.Work, cal: newCalendar(spans, joined), setUp: r.SetUp, least: r.Least, safe: r.Safe,
-		inOneGo: r.InOneGo, overMeals: r.OverMeals}
+		inOneGo: r.InOneGo, overMeals: r.OverMeals, watch: r.Watch}
 }
 
 func newCalendar(spans, joined hours.Set) *calendar {

@@ -13,6 +13,7 @@ import (
 	"sailby/plan"
 	"sailby/plan/network"
 	"sailby/plan/problem"
+	"sailby/plan/random"
 	"sailby/plan/solve"
 	"sailby/tasks"
 	"sailby/tasks/expand"
@@ -101,6 +102,44 @@ func BenchmarkParts(b *testing.B) {
 			for b.Loop() {
 				solve.Find(carry, free, solve.Options{Ticks: 1})
 			}
+		})
+	}
+}
+
+// BenchmarkBytes gives the bytes that are live for each activity of a random job once it is laid out as a problem, and
+// those that are allocated for each while it is asked.
+func BenchmarkBytes(b *testing.B) {
+	for _, size := range []int{60, 200, 1000} {
+		b.Run(fmt.Sprint(size), func(b *testing.B) {
+			job, err := jobfile.ReadBytes("job.yaml", []byte(random.Job(random.Knobs{Size: size, Seed: 1, Class: random.Slack})), nil)
+			if err != nil {
+				b.Fatal(err)
+			}
+			live := func() float64 {
+				runtime.GC()
+				var m runtime.MemStats
+				runtime.ReadMemStats(&m)
+				return float64(m.HeapAlloc)
+			}
+			before := live()
+			w, faults := expand.Expand(job, expand.Basis{})
+			if len(faults) > 0 {
+				b.Fatal(faults)
+			}
+			p := problem.Compile(w)
+			n := float64(len(p.Acts))
+			laid := live() - before
+			runtime.KeepAlive(p)
+			var m0, m1 runtime.MemStats
+			runtime.ReadMemStats(&m0)
+			for b.Loop() {
+				if _, err := Ask(context.Background(), job, Options{Only: true, Ticks: 20_000}); err != nil {
+					b.Fatal(err)
+				}
+			}
+			runtime.ReadMemStats(&m1)
+			b.ReportMetric(laid/n, "bytes/activity")
+			b.ReportMetric(float64(m1.TotalAlloc-m0.TotalAlloc)/n/float64(b.N), "allocated/activity")
 		})
 	}
 }
