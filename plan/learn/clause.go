@@ -64,11 +64,12 @@ func (c *store) watchAt(ref int32, f, ahead fact) {
 // false with the clash filled in if one is false.
 func (e *engine) visit(s side) bool {
 	ws := e.watch[s]
-	v := e.now[s]
+	now := e.now
+	v := now[s]
 	kept := 0
 	for i := range ws {
 		w := ws[i]
-		if w.from > v || e.holds(w.ahead) {
+		if w.from > v || now[w.ahead.s] >= w.ahead.v {
 			if kept < i {
 				ws[kept] = w
 			}

@@ -31,13 +31,13 @@ func (c *timetable) again(e *engine, seen *look, now view) bool {
 func (c *timetable) replace(was, part stretch, amount int32) {
 	switch {
 	case was.from == was.to:
-		c.edge(part.from)
+		k := c.edge(part.from)
 		c.edge(part.to)
-		c.add(part.from, part.to, amount)
+		c.add(k, part.to, amount)
 	case part.from == part.to:
-		c.add(was.from, was.to, -amount)
-		c.drop(was.from)
-		c.drop(was.to)
+		k := c.at(was.from)
+		c.drop(c.add(k, was.to, -amount))
+		c.drop(k)
 	default:
 		c.slide(was.from, part.from, -amount)
 		c.slide(was.to, part.to, amount)
@@ -48,50 +48,56 @@ func (c *timetable) replace(was, part stretch, amount int32) {
 func (c *timetable) slide(from, to, amount int32) {
 	switch {
 	case from < to:
+		k := c.at(from)
 		c.edge(to)
-		c.add(from, to, amount)
-		c.drop(from)
+		c.add(k, to, amount)
+		c.drop(k)
 	case from > to:
-		c.edge(to)
-		c.add(to, from, -amount)
-		c.drop(from)
+		c.drop(c.add(c.edge(to), from, -amount))
 	}
 }
 
-// add uses amount more from one edge to another.
-func (c *timetable) add(from, to, amount int32) {
-	for k := c.at(from); c.from[k] < to; k++ {
+// add uses amount more from segment k to the one that begins at to, which it gives.
+func (c *timetable) add(k int, to, amount int32) int {
+	for ; c.from[k] < to; k++ {
 		c.level[k] += amount
 	}
+	return k
 }
 
-// edge notes that a part begins or ends at t.
-func (c *timetable) edge(t int32) {
-	c.news = reach{min(c.news.from, t), max(c.news.to, t)}
+// edge notes that a part begins or ends at t, and gives the segment that begins there.
+func (c *timetable) edge(t int32) int {
+	c.differ(t)
 	k := c.at(t)
 	if k >= 0 && c.from[k] == t {
 		c.ends[k]++
-		return
+		return k
 	}
 	level := int32(0)
 	if k >= 0 {
 		level = c.level[k]
 	}
-	c.from = slices.Insert(c.from, k+1, t)
-	c.level = slices.Insert(c.level, k+1, level)
-	c.ends = slices.Insert(c.ends, k+1, 1)
+	k++
+	c.from = slices.Insert(c.from, k, t)
+	c.level = slices.Insert(c.level, k, level)
+	c.ends = slices.Insert(c.ends, k, 1)
+	return k
 }
 
-// drop takes one such note back.
-func (c *timetable) drop(t int32) {
-	c.news = reach{min(c.news.from, t), max(c.news.to, t)}
-	k := c.at(t)
+// drop takes back one such note of where segment k begins.
+func (c *timetable) drop(k int) {
+	c.differ(c.from[k])
 	if c.ends[k]--; c.ends[k] > 0 {
 		return
 	}
 	c.from = slices.Delete(c.from, k, k+1)
 	c.level = slices.Delete(c.level, k, k+1)
 	c.ends = slices.Delete(c.ends, k, k+1)
+}
+
+// differ notes that the profile has changed at t.
+func (c *timetable) differ(t int32) {
+	c.news = reach{min(c.news.from, t), max(c.news.to, t)}
 }
 
 // at gives the segment that holds t, -1 if t is before the first.
