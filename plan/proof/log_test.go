@@ -163,6 +163,9 @@ func TestTampering(t *testing.T) {
 	for _, w := range ways {
 		tried, refused := 0, 0
 		for _, l := range logs {
+			if w.name == "a bound claimed" && l.shown >= 100_000 {
+				continue // nothing fits at all: then it is true
+			}
 			var where []int
 			for at := range l.lines {
 				if w.do(l.lines, at) != nil {
