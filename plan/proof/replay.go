@@ -181,6 +181,9 @@ func (c *checker) end(bound int) error {
 		if lo := int(c.root[c.vars["e"]].lo); !c.dead && lo < bound {
 			return fmt.Errorf("no finish before %d is shown, not %d", lo, bound)
 		}
+		if c.until < problem.Inf && bound > c.until+1 {
+			return fmt.Errorf("no finish before %d is shown, not %d", c.until+1, bound)
+		}
 		c.result.Finish = bound
 	}
 	if c.until < problem.Inf {
