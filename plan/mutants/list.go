@@ -73,7 +73,7 @@ var mutants = []mutant{
 	{"plan/problem/places.go", `			s.From = open[0].From + up`,
 		`			s.From += up`, byProblem},
 	{"plan/problem/places.go", `	return less(open).Less(hours.Set{in}).Or(less(open.Within(in)))`,
-		`	return less(open)`, byProblem},
+		`	return less(open.Or(open.Within(in)))`, byProblem},
 	{"plan/solve/inway.go", `	if s.start[j] < endI {`,
 		`	if s.start[j]+1 < endI {`, byPlans},
 	{"plan/solve/inway.go", `	if tailI != nil && s.start[j] >= fin {`,
