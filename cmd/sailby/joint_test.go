@@ -78,7 +78,7 @@ func TestPublishedExamples(t *testing.T) {
 			map[string]float64{"weld metal": 3.014, "arc time": 62.4, "hands-on time": 155.9, "flux-cored wire 1.2 mm": 3.505, "shielding gas for flux-cored": 1029}, 0.001},
 		{"by hand from the ESAB V table (0.57 kg/m): 6 m of 10 mm V flat, 111 at 1.3 kg/h", "single V|--thickness=10mm|--length=6m|--position=PA|--process=111|--deposition=1.3kg/h|--operating-factor=30%|--efficiency=62%",
 			map[string]float64{"weld metal": 3.42, "weld metal a metre": 0.57, "arc time": 2.631 * 60, "hands-on time": 8.769 * 60, "electrodes 4 mm": 5.516}, 0.001},
-		{"the same upwards (0.76 kg/m, 0.75 of the rate)", "single V|--thickness=10mm|--length=6m|--position=PF|--process=111|--deposition=1.3kg/h|--operating-factor=30%|--efficiency=62%",
+		{"the same upwards (0.76 kg/m, 0.75 of the rate)", "single V|--thickness=10mm|--length=6m|--position=PF|--process=111|--deposition=1.3kg/h|--procedure-position=PA|--operating-factor=30%|--efficiency=62%",
 			map[string]float64{"weld metal": 4.56, "arc time": 4.677 * 60, "hands-on time": 15.590 * 60}, 0.001},
 		{"EN 1011-1 by hand: 111, 25 V, 180 A, 300 mm/min give 0.72 kJ/mm", "fillet|--leg=5mm|--length=1m|--process=111|--volts=25V|--current=180A|--travel=300mm/min",
 			map[string]float64{"heat input": 0.72}, 1e-6},

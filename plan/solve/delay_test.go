@@ -70,3 +70,21 @@ func TestAddedWatchIsKeptByTheSame(t *testing.T) {
 		t.Errorf("the weld has %d min of leeway, a day later it works as well", l)
 	}
 }
+
+// TestOnlyLaterMoves: a step that waits for nothing stays where the plan has it when another is delayed, and does not
+// come forward.
+func TestOnlyLaterMoves(t *testing.T) {
+	p := plain(10, 10)
+	s := &Schedule{Start: []int{0, 50}, Finish: []int{10, 60}, Mode: []int{0, 0}, Watches: make([][]Watch, 2)}
+	r := &rower{g: newGenerator(p), p: p, s: s}
+	r.g.load(s)
+	r.order = r.g.list()
+	r.inOrder()
+	r.ties()
+	r.g.reset()
+	r.g.save(&r.prefix)
+	moved, ok := r.delayed(0, 0, 5)
+	if !ok || len(moved) > 0 || r.g.start[0] != 5 || r.g.start[1] != 50 {
+		t.Errorf("delayed by 5: %v, moved %v, starts %v", ok, moved, r.g.start)
+	}
+}
