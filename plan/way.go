@@ -17,6 +17,14 @@ type Way struct {
 	Amount int // in the unit of its kind: minutes, or how many more; 0 where it has none
 	Finish hours.Minute
 	InHand int // minutes before the window's close
+	Tried  []WayTrial
+}
+
+// WayTrial is one amount of a way that was tried, in the order of the amounts.
+type WayTrial struct {
+	Text    string // as Way.Text, with this amount
+	Amount  int
+	Verdict Verdict // on likely hours, in the time of a trial
 }
 
 // Ways are the single changes that turn a job that does not fit into one that does.

@@ -250,7 +250,7 @@ func (a *asked) find(explain bool) error {
 		return nil
 	}
 	if res.Best == nil {
-		a.out.NoPlan = "the search found none, not even a late one"
+		a.out.NoPlan = "the search found none"
 		return nil
 	}
 	return a.keep(solve.Compact(a.carry, res.Best), explain)
@@ -300,7 +300,7 @@ func (a *asked) keep(s *solve.Schedule, explain bool) error {
 	p := solve.Plan(a.carry, s)
 	late := s.Score.Late > 0
 	if late && a.leftBehind(s) {
-		a.out.NoPlan = "the search found none in which what goes along is ready before the trip leaves, not even a late one"
+		a.out.NoPlan = "the search found none in which what goes along is ready before the trip leaves"
 		return nil
 	}
 	if late && a.carry == a.p && s.Score.Finish > a.p.Close {

@@ -230,9 +230,9 @@ func (a *asked) chainText(off network.Off, c *network.Conflict) *plan.Proof {
 		limit = fmt.Sprintf("the window at %s closes %s", a.work.Window.Place.Name, a.clockAt(by, last.Step.Place))
 	}
 	p.Lines = append(p.Lines, plan.ProofLine{Text: limit, Pos: a.byPos(last), Needed: true})
-	p.Summary = fmt.Sprintf("the chain that ends in %s is too long, even with unlimited people", stepName(last.Step))
+	p.Summary = fmt.Sprintf("the work up to the end of %s takes too long one thing after another, however many people there are", stepName(last.Step))
 	if p.Over > 0 {
-		p.Summary += fmt.Sprintf(": %s over", span(p.Over))
+		p.Summary += fmt.Sprintf(": at least %s over", span(p.Over))
 	}
 	return p
 }

@@ -108,7 +108,7 @@ func TestProofs(t *testing.T) {
 		says        string
 	}{
 		// 5 h from 8:00 end at 14:00; 4 more end at 9:00 on the next day, 16 h after 17:00
-		{"a chain", "  a: {at: quay, hours: 5 h}\n  b: {at: quay, hours: 4 h, after: a}", plan.ByChain, 16 * 60, `the chain that ends in "b" is too long`},
+		{"a chain", "  a: {at: quay, hours: 5 h}\n  b: {at: quay, hours: 4 h, after: a}", plan.ByChain, 16 * 60, `the work up to the end of "b" takes too long`},
 		// 3 h end at 11:00, 7 h of standing at 18:00
 		{"standing time", "  a: {at: quay, hours: 3 h}\n  b: {at: quay, standing: 7 h, after: a}", plan.ByChain, 60, `"b" (standing): 7 h standing`},
 		// 5 h + 4 h of Ann's in 8 h

@@ -34,7 +34,9 @@ func Governing(p *problem.Problem, s *Schedule, rows []plan.Row) []plan.Cause {
 				kept = true
 			}
 		}
-		if !kept {
+		if !kept && len(rows[i].SetBy) > 0 { // held by what comes after it in the list, and so is told already
+			out = append(out, rows[i].SetBy[0])
+		} else if !kept {
 			out = append(out, plan.Cause{Kind: plan.ByStart, Step: i, Other: -1, Text: fmt.Sprint("start of ", p.Acts[i].Label())})
 		}
 		i = next

@@ -209,7 +209,7 @@ func (r *rower) limits(i int) []limit {
 		}
 	}
 	if a.From > 0 {
-		kind, text, pos := plan.ByNotBefore, "not before", a.Pos()
+		kind, text, pos := plan.ByNotBefore, "its `not before` in the job file", a.Pos()
 		if a.Step != nil && a.Step.Site && a.From == p.Open {
 			kind, text, pos = plan.ByStart, "the window opens", p.Work.Window.Pos
 		}

@@ -115,11 +115,18 @@ func (s *seeker) turn(d *dial) (w *plan.Way, whole bool) {
 		return nil, true
 	}
 	hi := -1
+	var tried []plan.WayTrial
+	try := func(k int, why bool) trial {
+		t := s.try(d, d.steps[k], why)
+		verdict := map[trial]plan.Verdict{yes: plan.Fits, no: plan.CannotFit, open: plan.Unsettled}[t]
+		tried = append(tried, plan.WayTrial{Text: d.says(d.steps[k]), Amount: d.steps[k], Verdict: verdict})
+		return t
+	}
 	for _, k := range d.probes() {
 		if s.spent() {
 			return nil, false
 		}
-		if s.try(d, d.steps[k], d.relaxes && s.asked < mostAsked) == yes {
+		if try(k, d.relaxes && s.asked < mostAsked) == yes {
 			hi = k
 			break
 		}
@@ -133,13 +140,18 @@ func (s *seeker) turn(d *dial) (w *plan.Way, whole bool) {
 			break
 		}
 		mid := (lo + hi) / 2
-		if s.try(d, d.steps[mid], false) == yes {
+		if try(mid, false) == yes {
 			hi = mid
 		} else {
 			lo = mid
 		}
 	}
-	return s.way(d, d.steps[hi]), true
+	w = s.way(d, d.steps[hi])
+	if w != nil {
+		slices.SortStableFunc(tried, func(x, y plan.WayTrial) int { return x.Amount - y.Amount })
+		w.Tried = tried
+	}
+	return w, true
 }
 
 // readable leaves out the amounts that are too great to be read: a deadline after the window's close, say.

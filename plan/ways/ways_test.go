@@ -197,6 +197,14 @@ func TestWaysHold(t *testing.T) {
 			if got := ask(rt, data, x.Sets); got == nil || got.Verdict != plan.Fits || got.InHand != x.InHand || got.Finish != x.Finish {
 				rt.Fatalf("%s, %d in hand: %+v\n%s", x.Text, x.InHand, got, data)
 			}
+			for k, tr := range x.Tried { // what was tried below it did not fit; the amounts rise, and each says what it was
+				if k > 0 && tr.Amount <= x.Tried[k-1].Amount || tr.Text == "" || tr.Amount < x.Amount && tr.Verdict == plan.Fits {
+					rt.Fatalf("%s: tried %+v\n%s", x.Text, x.Tried, data)
+				}
+			}
+			if !slices.Contains(x.Tried, plan.WayTrial{Text: x.Text, Amount: x.Amount, Verdict: plan.Fits}) {
+				rt.Fatalf("%s is not among what was tried: %+v\n%s", x.Text, x.Tried, data)
+			}
 			if less := lesser(a, x); less != nil && ask(rt, data, less).Verdict == plan.Fits {
 				rt.Fatalf("%s: one step less fits as well\n%s", x.Text, data)
 			}

@@ -128,7 +128,7 @@ func (p *page) deadlines(a *plan.Answer) {
 		}
 	}
 	if a.HandBest && a.Plan != nil {
-		p.para("  ", "With this finish no plan has more in hand at the tightest deadline but the window's: shown.")
+		p.para("  ", "Proved: no plan with this finish has more time in hand at the tightest of the other deadlines.")
 	}
 }
 
@@ -161,6 +161,9 @@ func (p *page) proof(a *plan.Answer, low bool) {
 	if pr.Summary != "" {
 		p.para("  ", pr.Summary)
 	}
+	if late := worstLate(a); pr.Over > 0 && late > pr.Over {
+		p.para("  ", fmt.Sprintf("The plan found is %s late, the proof shows %s at the least: it keeps only what it needs.", quantity.Hours(late), quantity.Hours(pr.Over)))
+	}
 	for _, l := range pr.Lines {
 		s := l.Text
 		if n := quantity.Hours(l.Minutes); l.Minutes != 0 && !strings.Contains(s, n) {
@@ -175,6 +178,17 @@ func (p *page) proof(a *plan.Answer, low bool) {
 	if pr.Over > 0 && !strings.Contains(pr.Summary, quantity.Hours(pr.Over)) {
 		p.para("  ", "Together "+quantity.Hours(pr.Over)+" more than there is.")
 	}
+}
+
+// worstLate gives by how many minutes a late plan misses the deadline that it misses most; 0 where there is none.
+func worstLate(a *plan.Answer) int {
+	late := 0
+	for _, d := range a.Deadlines {
+		if a.Plan != nil && a.Late {
+			late = max(late, -d.InHand)
+		}
+	}
+	return late
 }
 
 func even(low bool) string {
