@@ -94,6 +94,13 @@ func TestWeatherForCoats(t *testing.T) {
 		})
 	}
 	windy := in(38, 44, func(w *site.Weather) { w.Wind = 10.1 })
+	// touch dry takes 4.18 h, 250.8 min, at 14 C: what is put on up to 09:49 is by 13:59.8, up to 09:50 not before 14:00.8
+	for to, rule := range map[string]string{"09:49": "", "09:50": "R25"} {
+		f := newFix(t)
+		f.weather(windy)
+		f.coated("paint", f.deck, "04-06 08:50-"+to).Working = map[string]int{"09:49": 59, "09:50": 60}[to]
+		f.broken(rule, "may not be put on")
+	}
 	for until, rule := range map[string]string{"applied": "", "touch dry": "R25", "hard dry": "R25"} {
 		f := newFix(t)
 		f.weather(windy)
