@@ -42,7 +42,9 @@ func (k *pack) weldList() {
 	p := k.p
 	p.begin("Weld list", "weld list", true)
 	p.big("Weld list")
-	p.para(joined(", ", prefixed("drawing ", k.job.Drawing), prefixed("execution ", k.job.Execution), prefixed("steel ", k.job.Steel))+".", body, false)
+	if of := joined(", ", prefixed("drawing ", k.job.Drawing), prefixed("execution ", k.job.Execution), prefixed("steel ", k.job.Steel)); of != "" {
+		p.para(of+".", body, false)
+	}
 	done := map[*tasks.Task]bool{}
 	for _, s := range steps {
 		if done[s.Task] {

@@ -356,3 +356,16 @@ func TestTablesRunOverPages(t *testing.T) {
 		t.Errorf("%d rows on %d pages, want 60 on at least 3", rows, heads)
 	}
 }
+
+// A weld list of a job without drawing, execution class and steel says nothing in their place.
+func TestWeldListWithoutDrawing(t *testing.T) {
+	r := fixture.Report()
+	r.Job.Drawing, r.Job.Execution, r.Job.Steel = "", "", ""
+	for _, p := range packed(t, r, Options{}).Pages {
+		for _, it := range p.Items {
+			if strings.TrimSpace(it.Text) == "." {
+				t.Errorf("page %q has a full stop by itself", p.Name)
+			}
+		}
+	}
+}
